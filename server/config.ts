@@ -1,0 +1,57 @@
+import { fileURLToPath } from 'node:url'
+import path from 'node:path'
+import { z } from 'zod'
+
+export const projectRoot = fileURLToPath(new URL('..', import.meta.url))
+
+const environment = z.object({
+  NODE_ENV: z.enum(['production', 'development', 'test']).default('production'),
+  PORT: z.coerce.number('PORT must be a number.').int().min(0).max(65535).default(4280),
+  HOST: z.string().min(1).default('127.0.0.1'),
+  DATABASE_URL: z.string().regex(/^(mariadb|mysql):\/\//, 'DATABASE_URL must begin with mariadb:// or mysql://.').optional(),
+  DATA_DIR: z.string().min(1).default('.data'),
+  SECRETS_DIR: z.string().min(1).optional(),
+  PUBLIC_URL: z.url('PUBLIC_URL must be a whole address, such as https://press.example.').optional(),
+  BCRYPT_COST: z.coerce.number().int().min(4).max(12, 'BCRYPT_COST must be between 4 and 12.').default(11),
+  TRUST_PROXY: z.coerce.number('TRUST_PROXY is the number of proxies in front.').int().min(0).max(8).default(0),
+  LOG_LEVEL: z.enum(['silent', 'fatal', 'error', 'warn', 'info', 'debug']).default('warn'),
+})
+
+export interface Config {
+  environment: 'production' | 'development' | 'test'
+  port: number
+  host: string
+  /** An outside MariaDB; without it the embedded one is used. */
+  databaseUrl: string | undefined
+  dataDirectory: string
+  /** Outside the database, and shared by all app servers when there are several. */
+  secretsDirectory: string
+  /** The address that people use, when a proxy stands in front. */
+  publicUrl: string | undefined
+  bcryptCost: number
+  trustProxy: number
+  logLevel: string
+}
+
+/** Empty variables count as unset: `DATABASE_URL= npm start` means the embedded database. */
+export function readConfig(variables: NodeJS.ProcessEnv): Config {
+  const given = Object.fromEntries(Object.entries(variables).filter(([, value]) => value !== ''))
+  const parsed = environment.safeParse(given)
+  if (!parsed.success) {
+    throw new Error(parsed.error.issues.map((issue) => `${issue.path.join('.')}: ${issue.message}`).join('\n'))
+  }
+  const values = parsed.data
+  const dataDirectory = path.resolve(projectRoot, values.DATA_DIR)
+  return {
+    environment: values.NODE_ENV,
+    port: values.PORT,
+    host: values.HOST,
+    databaseUrl: values.DATABASE_URL,
+    dataDirectory,
+    secretsDirectory: values.SECRETS_DIR === undefined ? path.join(dataDirectory, 'secrets') : path.resolve(projectRoot, values.SECRETS_DIR),
+    publicUrl: values.PUBLIC_URL?.replace(/\/+$/, ''),
+    bcryptCost: values.BCRYPT_COST,
+    trustProxy: values.TRUST_PROXY,
+    logLevel: values.LOG_LEVEL,
+  }
+}

@@ -1,0 +1,7 @@
+import { people } from './001-people'
+import { ledgers } from './002-ledgers'
+import { instrumentsAndProtocols } from './003-instruments-and-protocols'
+import type { Migration } from './migration'
+
+/** In the order they run. */
+export const migrations: Migration[] = [people, ledgers, instrumentsAndProtocols]
