@@ -1,0 +1,366 @@
+import { arrowHead, circlePath, hatch, pathThrough } from './drawing'
+import type { Drawing, DrawingItem, InkName, Point, TextItem } from './drawing'
+import { layOutNotes } from './line-notes'
+import type { PlacedNote } from './line-notes'
+import { axisTicks, multiples, tidy } from './ticks'
+import type { AxisTicks } from './ticks'
+
+/** One line of load across the chart. `percent` is of rated load; `load` is shown where the chart labels its stages. */
+export interface LineStage {
+  percent: number
+  label: string
+  load?: string
+}
+
+/**
+ * One reading. `x` is deflection in the chart's display unit, `y` load in percent of rated load; `ux` and `uy` are
+ * their uncertainties in the same. `mark: 'stop'` says that the step arriving here is beyond its limit.
+ */
+export interface LinePoint {
+  x: number
+  y: number
+  ux: number
+  uy: number
+  mark?: 'stop' | 'wait'
+}
+
+/** What the next reading should be: from–to in deflection, at load `y` (percent). */
+export interface LinePrediction {
+  y: number
+  from: number
+  to: number
+  /** The figures, for example "1.25 to 1.44 mm". */
+  text: string
+  /** The words above them, for example "Next: expect". */
+  caption?: string
+  /** Chalk while it is the next thing to read, scribe once it has been read. */
+  tone?: 'chalk' | 'scribe'
+}
+
+export interface LineNote {
+  at: { x: number; y: number }
+  tone: 'scribe' | 'chalk' | 'stop'
+  /** The first line is the statement, the others are its reasons. */
+  lines: string[]
+  mark?: 'wait' | 'stop'
+}
+
+export interface LineChartSpec {
+  width: number
+  height: number
+  stages: LineStage[]
+  points: LinePoint[]
+  /** Deflection = intercept + slope × percent. */
+  fit: { slope: number; intercept: number } | null
+  /** Expected deflection at 100 %, low and high. */
+  band: { low: number; high: number } | null
+  prediction: LinePrediction | null
+  /** At most three are drawn, the prediction's own included. */
+  notes: LineNote[]
+  /** Set or release reading on the axis, in deflection. */
+  setPoint?: { x: number; ux: number }
+  /** Readings on the way down or of a repeat climb, drawn as a dotted line. */
+  comparison?: { x: number; y: number }[]
+  xLabel: string
+  xUnit: string
+  /** Deflection the axis has to reach; rounded up to a labelled step. */
+  xMax: number
+  /** Percent at the top of the shared scale. */
+  yMax: number
+  title?: string
+  aside?: string
+  /** `beside` shares the ladder's scale and leaves the stages to it; `alone` labels its own. */
+  setting?: 'beside' | 'alone'
+}
+
+/** Where the scale of ladder and line starts and ends inside a panel of a given height (px from its top). */
+export function loadScale(height: number, yMax: number): { zero: number; top: number; at: (percent: number) => number } {
+  const roomy = height >= 560
+  const top = roomy ? 80 : Math.max(56, height * 0.14)
+  const zero = height - (roomy ? 84 : 72)
+  return { zero, top, at: (percent) => zero - ((zero - top) * percent) / yMax }
+}
+
+/** Pixel frame of the plot. */
+export interface LineFrame {
+  left: number
+  right: number
+  zero: number
+  top: number
+  /** Where lines that run on past the last stage are cut. */
+  ceiling: number
+  axis: AxisTicks
+  x: (deflection: number) => number
+  y: (percent: number) => number
+}
+
+/** The frame in px of a chart; the axis takes in every point, the band at the top and the prediction. */
+export function lineFrame(spec: LineChartSpec): LineFrame {
+  const alone = spec.setting === 'alone'
+  const narrow = spec.width < 360
+  const scale = alone ? { zero: spec.height - 62, top: 66 } : loadScale(spec.height, spec.yMax)
+  const left = alone ? Math.min(205, spec.width * 0.42) : narrow ? 35 : 40
+  const right = spec.width - (alone ? 32 : narrow ? 35 : 40)
+  const axis = axisTicks(spec.xMax, right - left < 200 ? 3 : 4)
+  return {
+    left,
+    right,
+    zero: scale.zero,
+    top: scale.top,
+    ceiling: scale.top - (alone ? 14 : 20),
+    axis,
+    x: (deflection) => left + ((right - left) * deflection) / axis.max,
+    y: (percent) => scale.zero - ((scale.zero - scale.top) * percent) / spec.yMax,
+  }
+}
+
+export function textItem(
+  x: number,
+  y: number,
+  text: string,
+  ink: InkName,
+  style: Partial<Omit<TextItem, 'kind' | 'x' | 'y' | 'text' | 'ink'>> = {},
+): TextItem {
+  return { kind: 'text', x, y, text, ink, size: 16, weight: 400, condensed: false, anchor: 'start', halo: null, ...style }
+}
+
+function strokeItem(d: string, stroke: InkName, width: number, more: { dash?: string; opacity?: number } = {}): DrawingItem {
+  return { kind: 'path', d, stroke, width, fill: null, ...more }
+}
+
+function fillItem(d: string, fill: InkName): DrawingItem {
+  return { kind: 'path', d, stroke: null, width: 0, fill }
+}
+
+/** Deflection a straight line has at a load; both the fit and the edges of the band are such lines. */
+function cutAtFrame(frame: LineFrame, intercept: number, slope: number): [Point, Point] {
+  const yTop = ((frame.zero - frame.ceiling) / (frame.zero - frame.y(1))) * 1
+  const end = { x: frame.x(intercept + slope * yTop), y: frame.ceiling }
+  const start = { x: frame.x(Math.max(0, intercept)), y: frame.y(intercept < 0 && slope > 0 ? -intercept / slope : 0) }
+  const limit = frame.right + 30
+  if (end.x <= limit) return [start, end]
+  const share = (limit - start.x) / (end.x - start.x)
+  return [start, { x: limit, y: start.y + (end.y - start.y) * share }]
+}
+
+function axes(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
+  const items: DrawingItem[] = []
+  const alone = spec.setting === 'alone'
+  const small = alone ? 14 : 16
+  items.push(strokeItem(`M${frame.left} ${frame.ceiling - 4}V${frame.zero}`, 'scribe', 1.6))
+  items.push(strokeItem(`M${frame.left} ${frame.zero}H${frame.right}`, 'scribe', 1.6))
+  const major = new Set(frame.axis.labels)
+  for (const value of multiples(frame.axis.minorStep, 0, frame.axis.max)) {
+    const tall = major.has(value)
+    const x = Math.round(frame.x(value) * 2) / 2
+    items.push(strokeItem(`M${x} ${frame.zero}v${tall ? 9 : 5}`, 'scribe', tall ? 1.4 : 1, tall ? {} : { opacity: 0.8 }))
+  }
+  for (const value of frame.axis.labels) {
+    items.push(
+      textItem(frame.x(value), frame.zero + (alone ? 26 : 26), value.toFixed(frame.axis.decimals), 'faint-scribe', {
+        size: small,
+        anchor: 'middle',
+      }),
+    )
+  }
+  const words = `${spec.xLabel}, ${spec.xUnit}`
+  items.push(
+    alone
+      ? textItem(frame.right, frame.zero + 46, words, 'faint-scribe', { size: 14, condensed: true, anchor: 'end' })
+      : textItem(frame.left, frame.zero + 54, words, 'faint-scribe', { condensed: true }),
+  )
+  return items
+}
+
+function stageGuides(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
+  const items: DrawingItem[] = []
+  for (const stage of spec.stages) {
+    const y = Math.round(frame.y(stage.percent)) + 0.5
+    const from = spec.setting === 'alone' ? Math.max(frame.left - 18, 0) : frame.left + 3
+    if (stage.percent > 0) items.push(strokeItem(`M${from} ${y}H${frame.right}`, 'ghost', 1.6, { dash: '2 5', opacity: 0.8 }))
+    if (spec.setting !== 'alone') continue
+    items.push(textItem(47, y + 5, stage.label, 'scribe', { size: 16, weight: 600 }))
+    if (stage.load !== undefined)
+      items.push(textItem(104, y + 5, stage.load, 'faint-scribe', { size: 14, condensed: true }))
+  }
+  return items
+}
+
+/** Edges of the expected band (px): the low one, stiffer, lies left. */
+export function bandEdges(spec: LineChartSpec, frame: LineFrame): { low: [Point, Point]; high: [Point, Point] } | null {
+  if (spec.band === null) return null
+  return {
+    low: cutAtFrame(frame, 0, spec.band.low / 100),
+    high: cutAtFrame(frame, 0, spec.band.high / 100),
+  }
+}
+
+function band(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
+  const edges = bandEdges(spec, frame)
+  if (edges === null) return []
+  const [origin, lowEnd] = edges.low
+  const highEnd = edges.high[1]
+  return [
+    strokeItem(hatch([origin, lowEnd, highEnd], 10), 'ghost', 1, { opacity: 0.75 }),
+    strokeItem(pathThrough(edges.low), 'faint-scribe', 1),
+    strokeItem(pathThrough(edges.high), 'faint-scribe', 1),
+  ]
+}
+
+/** The line through the readings, and beyond them the fit, dashed. A step that calls for a stop is drawn in red. */
+function line(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
+  const items: DrawingItem[] = []
+  if (spec.comparison !== undefined && spec.comparison.length > 1) {
+    const path = pathThrough(spec.comparison.map((point) => ({ x: frame.x(point.x), y: frame.y(point.y) })))
+    items.push(strokeItem(path, 'faint-scribe', 1.4, { dash: '3 4' }))
+  }
+  const trusted = spec.points.filter((point) => point.mark !== 'stop')
+  const last = trusted[trusted.length - 1]
+  if (spec.fit !== null && last !== undefined) {
+    const [, end] = cutAtFrame(frame, spec.fit.intercept, spec.fit.slope)
+    const start = { x: frame.x(spec.fit.intercept + spec.fit.slope * last.y), y: frame.y(last.y) }
+    if (end.y < start.y) items.push(strokeItem(pathThrough([start, end]), 'scribe', 1.8, { dash: '9 5' }))
+  }
+  spec.points.forEach((point, index) => {
+    const before = spec.points[index - 1]
+    if (before === undefined) return
+    const path = pathThrough([
+      { x: frame.x(before.x), y: frame.y(before.y) },
+      { x: frame.x(point.x), y: frame.y(point.y) },
+    ])
+    items.push(strokeItem(path, point.mark === 'stop' ? 'stop-line' : 'scribe', point.mark === 'stop' ? 2.2 : 1.8))
+  })
+  return items
+}
+
+/** Uncertainty bars to scale, never less than 3 px to each side, with the point on them. */
+function readings(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
+  const items: DrawingItem[] = []
+  for (const point of spec.points) {
+    const x = frame.x(point.x)
+    const y = frame.y(point.y)
+    if (point.x === 0 && point.y === 0) {
+      items.push(fillItem(circlePath({ x, y }, 4), 'scribe'))
+      continue
+    }
+    const dx = Math.max(3, frame.x(point.ux) - frame.left)
+    const dy = Math.max(3, frame.zero - frame.y(point.uy))
+    items.push(
+      strokeItem(`M${x - 6.5} ${y - dy}h13M${x - 6.5} ${y + dy}h13M${x} ${y - dy}V${y + dy}`, 'scribe', 1.6),
+      strokeItem(`M${x - dx} ${y}H${x + dx}${dx > 5 ? `M${x - dx} ${y - 3}v6M${x + dx} ${y - 3}v6` : ''}`, 'scribe', 1.6),
+      fillItem(circlePath({ x, y }, 3), 'scribe'),
+    )
+  }
+  const set = spec.setPoint
+  if (set !== undefined) {
+    const x = frame.x(set.x)
+    const dx = Math.max(3, frame.x(set.ux) - frame.left)
+    items.push(strokeItem(`M${x - dx} ${frame.zero}H${x + dx}`, 'scribe', 1.6))
+    items.push({ kind: 'path', d: circlePath({ x, y: frame.zero }, 4), stroke: 'scribe', width: 1.6, fill: 'dye' })
+  }
+  return items
+}
+
+/** An octagon with a bar, in the middle of the step that calls for a stop. */
+function stopMarks(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
+  return spec.points.flatMap((point, index) => {
+    const before = spec.points[index - 1]
+    if (point.mark !== 'stop' || before === undefined) return []
+    const x = (frame.x(point.x) + frame.x(before.x)) / 2
+    const y = (frame.y(point.y) + frame.y(before.y)) / 2
+    const corners = Array.from({ length: 8 }, (_, corner) => {
+      const angle = ((corner + 0.5) * Math.PI) / 4
+      return { x: x + 9 * Math.cos(angle), y: y + 9 * Math.sin(angle) }
+    })
+    return [
+      { kind: 'path', d: pathThrough(corners, true), stroke: 'stop-line', width: 1.6, fill: 'stop' },
+      fillItem(`M${x - 4.5} ${y - 1.6}h9v3.2h-9Z`, 'on-stop'),
+    ] satisfies DrawingItem[]
+  })
+}
+
+function prediction(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
+  const next = spec.prediction
+  if (next === null) return []
+  const ink: InkName = next.tone === 'scribe' ? 'scribe' : 'chalk'
+  const y = frame.y(next.y)
+  const from = frame.x(next.from)
+  const to = frame.x(next.to)
+  const items: DrawingItem[] = [strokeItem(`M${from} ${y - 10}v20M${to} ${y - 10}v20M${from} ${y}H${to}`, ink, 2)]
+  if (ink === 'chalk')
+    items.push({ kind: 'path', d: circlePath({ x: (from + to) / 2, y }, 4.6), stroke: 'chalk', width: 2, fill: 'dye' })
+  return items
+}
+
+const LEADER: Record<LineNote['tone'], { words: InkName; line: InkName; rest: InkName }> = {
+  scribe: { words: 'scribe', line: 'scribe', rest: 'faint-scribe' },
+  chalk: { words: 'chalk', line: 'chalk', rest: 'chalk' },
+  stop: { words: 'stop-text', line: 'stop-line', rest: 'scribe' },
+}
+
+function noteItems(note: PlacedNote): DrawingItem[] {
+  const ink = LEADER[note.tone]
+  const items: DrawingItem[] = []
+  const [, elbow] = note.leader
+  const tip = note.leader[note.leader.length - 1]
+  items.push(strokeItem(pathThrough(note.leader), ink.line, 1.2))
+  if (elbow !== undefined && tip !== undefined) {
+    const from = note.leader[note.leader.length - 2] ?? elbow
+    items.push(fillItem(arrowHead(from, tip), ink.line))
+  }
+  for (const row of note.rows) {
+    items.push(
+      textItem(row.x, row.y, row.text, row.strong ? ink.words : ink.rest, {
+        size: row.size,
+        weight: row.weight,
+        condensed: true,
+        anchor: note.anchor,
+        halo: 'dye',
+      }),
+    )
+  }
+  if (note.markAt !== null) items.push(...noteMark(note.markAt, note.mark))
+  return items
+}
+
+function noteMark(at: Point, mark: 'wait' | 'stop'): DrawingItem[] {
+  if (mark === 'wait') return [fillItem(`M${at.x} ${at.y - 6.5}h4.4v13h-4.4ZM${at.x + 8} ${at.y - 6.5}h4.4v13h-4.4Z`, 'scribe')]
+  const centre = { x: at.x + 7, y: at.y }
+  return [
+    { kind: 'path', d: circlePath(centre, 7), stroke: 'stop-line', width: 1.6, fill: 'stop' },
+    fillItem(`M${centre.x - 3.6} ${centre.y - 1.4}h7.2v2.8h-7.2Z`, 'on-stop'),
+  ]
+}
+
+/**
+ * Lays out the chart of deflection against load as a list of shapes in px, the same for screen and spreadsheet.
+ * Deflections in the display unit, loads in percent of rated load. Refuses nothing: what has no place is left out,
+ * and throws a RangeError only for an `xMax` or `yMax` that is not positive.
+ */
+export function lineDrawing(spec: LineChartSpec): Drawing {
+  if (!(spec.yMax > 0)) throw new RangeError('The load scale needs a positive end.')
+  const frame = lineFrame(spec)
+  const alone = spec.setting === 'alone'
+  const items: DrawingItem[] = []
+  if (spec.title !== undefined)
+    items.push(
+      textItem(alone ? 24 : frame.left, alone ? 30 : 36, spec.title, 'scribe', { size: alone ? 18 : 20, weight: 600 }),
+    )
+  if (spec.aside !== undefined)
+    items.push(
+      textItem(spec.width - (alone ? 24 : 33), alone ? 30 : 36, spec.aside, 'faint-scribe', {
+        size: alone ? 14 : 16,
+        condensed: true,
+        anchor: 'end',
+      }),
+    )
+  items.push(...stageGuides(spec, frame), ...band(spec, frame), ...axes(spec, frame))
+  items.push(...line(spec, frame), ...prediction(spec, frame), ...readings(spec, frame), ...stopMarks(spec, frame))
+  for (const note of layOutNotes(spec, frame)) items.push(...noteItems(note))
+  return { width: spec.width, height: spec.height, items }
+}
+
+/** Top of the shared scale for given stages: the highest one, 100 % at the least. */
+export function topOfScale(stages: readonly { percent: number }[]): number {
+  return tidy(Math.max(100, ...stages.map((stage) => stage.percent)))
+}
