@@ -1,0 +1,58 @@
+import { useEffect, useRef, type FormHTMLAttributes, type ReactNode } from 'react'
+import { classNames } from '../lib/class-names'
+import { PutRight } from './glyphs'
+
+type FormErrorProps = {
+  /** What is so and what to do. Nothing is drawn while it is empty. */
+  message: ReactNode
+  /** Counts sent attempts, so that the same sentence takes focus again. */
+  attempt?: number
+}
+
+/** What stopped a form as a whole; takes focus when it appears. */
+export function FormError({ message, attempt = 0 }: FormErrorProps) {
+  const box = useRef<HTMLDivElement>(null)
+  const shown = Boolean(message)
+  useEffect(() => {
+    if (shown) box.current?.focus()
+  }, [shown, attempt])
+  if (!shown) return null
+  return (
+    <div
+      ref={box}
+      role="alert"
+      tabIndex={-1}
+      className="flex items-start gap-3 border-2 border-stop-ink bg-sheet px-4 py-3 font-medium text-stop-ink"
+    >
+      <span className="mt-1">
+        <PutRight />
+      </span>
+      <div className="min-w-0">{message}</div>
+    </div>
+  )
+}
+
+/** A form with our own messages; the browser's bubbles stay away. */
+export function Form({ className, ...form }: FormHTMLAttributes<HTMLFormElement>) {
+  return <form noValidate className={classNames('grid gap-4', className)} {...form} />
+}
+
+type FormPartProps = { title: ReactNode; note?: ReactNode; children: ReactNode }
+
+/** A part of a long form: what it is about at the left, its fields at the right. */
+export function FormPart({ title, note, children }: FormPartProps) {
+  return (
+    <section className="grid gap-x-8 gap-y-4 border-t-2 border-ink py-6 desktop:grid-cols-[16rem_1fr]">
+      <div>
+        <h2 className="text-20">{title}</h2>
+        {note !== undefined && <p className="mt-1 text-graphite">{note}</p>}
+      </div>
+      <div className="grid content-start gap-4 tablet:grid-cols-2">{children}</div>
+    </section>
+  )
+}
+
+/** The foot of a form: its one next action first, ways out after it. */
+export function FormActions({ children }: { children: ReactNode }) {
+  return <div className="flex flex-wrap items-center gap-4 pt-2 max-tablet:flex-col max-tablet:items-stretch">{children}</div>
+}

@@ -1,0 +1,58 @@
+import { isRouteErrorResponse, useRouteError } from 'react-router-dom'
+import { Disconnected, ProblemError, UnreadableAnswer, sayWhatFailed } from '../lib/problem'
+import { paths } from '../paths'
+import { Button, ButtonLink } from './button'
+import { PlainScreen } from './plain-screen'
+
+const again = (
+  <Button kind="next" onClick={() => window.location.reload()}>
+    Load this page again
+  </Button>
+)
+const today = <ButtonLink to={paths.today.href()}>Go to Today</ButtonLink>
+
+/** What an address that leads nowhere says. */
+export function NotFound() {
+  return (
+    <PlainScreen title="Nothing is kept at this address" actions={<ButtonLink kind="next" to={paths.today.href()}>Go to Today</ButtonLink>}>
+      <p>It may be mistyped, or belong to a shop you are not in. Open it from its list.</p>
+    </PlainScreen>
+  )
+}
+
+/** The screen in place of one that failed: what is so, then what to do. */
+export function RouteError() {
+  const error = useRouteError()
+  const status = isRouteErrorResponse(error) || error instanceof ProblemError ? error.status : undefined
+  if (status === 404) return <NotFound />
+  if (status === 403) {
+    return (
+      <PlainScreen mark="beyond" title="Your role doesn't open this" actions={today}>
+        <p>{error instanceof ProblemError ? error.detail : 'Ask the owner of the shop.'}</p>
+      </PlainScreen>
+    )
+  }
+  if (error instanceof Disconnected) {
+    return (
+      <PlainScreen mark="not-connected" title="Not connected to the server" actions={again}>
+        <p>Nothing old is shown in its place. Look at the network of this device, then load the page again.</p>
+        <p className="mt-2">Readings that were entered on this device are still kept on it.</p>
+      </PlainScreen>
+    )
+  }
+  if (error instanceof UnreadableAnswer) {
+    return (
+      <PlainScreen title="This page is older than the server" actions={again}>
+        <p>Load it again to bring it up to date.</p>
+      </PlainScreen>
+    )
+  }
+  return (
+    <PlainScreen mark="wait" title="This screen could not be drawn" actions={<>{again}{today}</>}>
+      <p>{error instanceof ProblemError ? error.detail : sayWhatFailed(error)}</p>
+      {error instanceof Error && !(error instanceof ProblemError) && (
+        <p className="mt-3 border-t border-hairline pt-3 font-mono text-14 break-words text-graphite">{error.message}</p>
+      )}
+    </PlainScreen>
+  )
+}

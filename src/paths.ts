@@ -1,0 +1,56 @@
+/**
+ * Every address of the product: the router's pattern beside the function that writes it. Lists name their
+ * shop in the query, so that two tabs can show two shops; a thing opened by its id brings its shop along.
+ */
+
+type ListQuery = { shop?: string } & Record<string, string | undefined>
+
+/** `path?a=b`, leaving out what is undefined or empty. */
+export function withQuery(path: string, query: Record<string, string | undefined> = {}): string {
+  const search = new URLSearchParams()
+  for (const [name, value] of Object.entries(query)) {
+    if (value !== undefined && value !== '') search.set(name, value)
+  }
+  const text = search.toString()
+  return text === '' ? path : `${path}?${text}`
+}
+
+const list = (path: string) => ({ pattern: path, href: (query: ListQuery = {}) => withQuery(path, query) })
+const one = <Name extends string>(base: string, parameter: Name, tail = '') => ({
+  pattern: `${base}/:${parameter}${tail}` as const,
+  href: (id: string) => `${base}/${encodeURIComponent(id)}${tail}`,
+})
+
+export const paths = {
+  today: list('/'),
+
+  presses: list('/presses'),
+  newPress: list('/presses/new'),
+  press: one('/presses', 'pressId'),
+  editPress: one('/presses', 'pressId', '/edit'),
+
+  instruments: list('/instruments'),
+  newInstrument: list('/instruments/new'),
+  instrument: one('/instruments', 'instrumentId'),
+
+  protocols: list('/protocols'),
+  newProtocol: list('/protocols/new'),
+  protocol: one('/protocols', 'protocolId'),
+
+  proofTests: list('/proof-tests'),
+  planProofTest: list('/proof-tests/new'),
+  proofTest: one('/proof-tests', 'proofTestId'),
+  runProofTest: one('/proof-tests', 'proofTestId', '/run'),
+  attendProofTest: one('/proof-tests', 'proofTestId', '/attend'),
+
+  people: list('/people'),
+  settings: list('/settings'),
+  account: list('/account'),
+  more: list('/more'),
+
+  signIn: {
+    pattern: '/sign-in',
+    href: (query: { next?: string } = {}) => withQuery('/sign-in', query),
+  },
+  openShop: { pattern: '/open-shop', href: () => '/open-shop' },
+} as const
