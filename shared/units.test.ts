@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import {
   convert,
   decimalsOf,
+  decimalsOfStep,
   decimalTextSchema,
   forceUnitSchema,
   formatForce,
@@ -9,6 +10,7 @@ import {
   formatQuantity,
   groupDigits,
   parseDecimal,
+  roundDownTo,
   toSI,
   toUnit,
   typedForceSchema,
@@ -121,6 +123,23 @@ describe('words and digits', () => {
     expect(decimalsOf({ text: '0.05' })).toBe(2);
     expect(decimalsOf({ text: '50' })).toBe(0);
     expect(() => decimalsOf({ text: 'x' })).toThrow(RangeError);
+  });
+});
+
+describe('steps that an instrument can show', () => {
+  it('finds the decimals a step needs in another unit', () => {
+    expect(decimalsOfStep(toSI({ text: '50', unit: 'psi' }), 'psi')).toBe(0);
+    expect(decimalsOfStep(toSI({ text: '0.5', unit: 'bar' }), 'bar')).toBe(1);
+    expect(decimalsOfStep(toSI({ text: '0.02', unit: 'mm' }), 'mm')).toBe(2);
+    expect(decimalsOfStep(toSI({ text: '1', unit: 'psi' }), 'bar')).toBe(6);
+  });
+
+  it('rounds down to a step, and leaves a multiple where it is', () => {
+    expect(roundDownTo(5949.9, 50)).toBe(5900);
+    expect(roundDownTo(0.3, 0.1)).toBeCloseTo(0.3, 15);
+    expect(roundDownTo(0.04, 0.1)).toBe(0);
+    expect(roundDownTo(-0.04, 0.1)).toBe(-0.1);
+    expect(() => roundDownTo(1, 0)).toThrow(RangeError);
   });
 });
 

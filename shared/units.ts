@@ -247,6 +247,31 @@ export function decimalsOf(increment: { text: string }): number {
   return parsed.decimals;
 }
 
+/**
+ * Decimals that show every multiple of an SI step in the unit without rounding, six at most:
+ * a step of 50 psi needs none, one of half a bar needs one.
+ */
+export function decimalsOfStep(step: number, unit: Unit): number {
+  const value = toUnit(step, unit);
+  for (let decimals = 0; decimals < 6; decimals += 1) {
+    const scaled = value * 10 ** decimals;
+    if (Math.round(scaled) > 0 && Math.abs(scaled - Math.round(scaled)) < 1e-6 * scaled) return decimals;
+  }
+  return 6;
+}
+
+/**
+ * The largest multiple of `step` that is not above `value`, both in one unit. A value that is a
+ * multiple but for rounding in the last digits is taken as that multiple.
+ * @throws RangeError when the step is not above zero.
+ */
+export function roundDownTo(value: number, step: number): number {
+  if (!(step > 0)) throw new RangeError('The step to round to must be above zero.');
+  const count = value / step;
+  const whole = Math.floor(count + 1e-9 * Math.max(1, Math.abs(count)));
+  return whole === 0 ? 0 : whole * step;
+}
+
 const THREE_TONS =
   'Say which ton: short ton (2,000 lbf), long ton (2,240 lbf) or metric ton-force (1,000 kgf).';
 

@@ -1,3 +1,4 @@
+import { toSI } from '../units';
 import type { ForceUnit } from '../units';
 
 /** A ram as the arithmetic sees it; SI throughout. */
@@ -75,12 +76,11 @@ export type RamCrossCheck = {
 
 const LEAST_RATIO = 0.97;
 const MOST_RATIO = 1.03;
-/** Newtons in one of each ton, smallest first. */
-const TONS: readonly { unit: ForceUnit; newtons: number }[] = [
-  { unit: 'short-ton', newtons: 8896.443230521 },
-  { unit: 'metric-ton-force', newtons: 9806.65 },
-  { unit: 'long-ton', newtons: 9964.01641818352 },
-];
+/** Newtons in one of each ton. */
+const TONS = (['short-ton', 'metric-ton-force', 'long-ton'] as const).map((unit) => ({
+  unit,
+  newtons: toSI({ text: '1', unit }),
+}));
 
 /**
  * Whether a ram's rated capacity (N), rated pressure (Pa) and area (m²) belong together: their ratio
