@@ -34,5 +34,8 @@ export type AddPersonRequest = z.infer<typeof addPersonRequestSchema>
 /** PATCH /api/people/:userId?shop= — another role, or `ended: true`. Answers the person. */
 export const changePersonRequestSchema = z
   .strictObject({ role: roleSchema.optional(), ended: z.literal(true).optional() })
-  .refine((change) => (change.role === undefined) !== (change.ended === undefined), 'Change the role, or end the membership: one of the two.')
+  .refine(
+    (change) => (change.role === undefined) !== (change.ended === undefined),
+    'Change the role, or end the membership: one of the two.',
+  )
 export type ChangePersonRequest = z.infer<typeof changePersonRequestSchema>

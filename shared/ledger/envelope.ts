@@ -1,21 +1,21 @@
-import { z } from 'zod';
+import { z } from 'zod'
 
 /** An id made by the client: UUID version 7 (RFC 9562), lower case. */
-export const idSchema = z.uuid({ message: 'This id is not a UUID.' });
+export const idSchema = z.uuid({ message: 'This id is not a UUID.' })
 
-const isoInstant = z.iso.datetime({ message: 'A moment is written like 2026-09-15T12:05:00.000Z.' });
+const isoInstant = z.iso.datetime({ message: 'A moment is written like 2026-09-15T12:05:00.000Z.' })
 
 /** A reason given for going on although a numbered rule speaks against it. */
 export const overrideSchema = z.object({
   rule: z.string().regex(/^[RP]\d+$/),
   reason: z.string().trim().min(3, 'Say why in a few words.').max(500),
-});
+})
 
 export const attachmentSchema = z.object({
   sha256: z.string().regex(/^[0-9a-f]{64}$/),
   type: z.string().max(100),
   size: z.number().int().nonnegative(),
-});
+})
 
 /**
  * What a device makes for one thing that happened. `deviceSeq` counts this device's entries in this
@@ -37,7 +37,7 @@ export const entryDraftSchema = z.object({
   monotonicMs: z.number().int().nonnegative(),
   attachments: z.array(attachmentSchema).max(20),
   overrides: z.array(overrideSchema).max(20),
-});
+})
 
 /** A draft as the server keeps it: numbered, dated, judged and chained to the entry before it. */
 export const ledgerEntrySchema = entryDraftSchema.extend({
@@ -46,9 +46,9 @@ export const ledgerEntrySchema = entryDraftSchema.extend({
   irregular: z.array(z.string()),
   prevHash: z.string().regex(/^[0-9a-f]{64}$/),
   hash: z.string().regex(/^[0-9a-f]{64}$/),
-});
+})
 
-export type Override = z.infer<typeof overrideSchema>;
-export type EntryDraft = z.infer<typeof entryDraftSchema>;
-export type LedgerEntry = z.infer<typeof ledgerEntrySchema>;
-export type LedgerSubject = 'proof-test' | 'press';
+export type Override = z.infer<typeof overrideSchema>
+export type EntryDraft = z.infer<typeof entryDraftSchema>
+export type LedgerEntry = z.infer<typeof ledgerEntrySchema>
+export type LedgerSubject = 'proof-test' | 'press'

@@ -1,37 +1,37 @@
-import { ed25519 } from '@noble/curves/ed25519.js';
-import { bytesToHex, hexToBytes, utf8ToBytes } from '@noble/hashes/utils.js';
-import { canonicalText } from './canonical';
+import { ed25519 } from '@noble/curves/ed25519.js'
+import { bytesToHex, hexToBytes, utf8ToBytes } from '@noble/hashes/utils.js'
+import { canonicalText } from './canonical'
 
 /** A signature of the shop's server over the head of a ledger, made when a person signed. */
 export interface Seal {
-  kid: string;
-  ledgerId: string;
-  seq: number;
-  headHash: string;
-  sealedAt: string;
-  signature: string;
+  kid: string
+  ledgerId: string
+  seq: number
+  headHash: string
+  sealedAt: string
+  signature: string
 }
 
 function sealBytes(seal: Omit<Seal, 'signature'>): Uint8Array {
-  const { kid, ledgerId, seq, headHash, sealedAt } = seal;
-  return utf8ToBytes(canonicalText({ kid, ledgerId, seq, headHash, sealedAt }));
+  const { kid, ledgerId, seq, headHash, sealedAt } = seal
+  return utf8ToBytes(canonicalText({ kid, ledgerId, seq, headHash, sealedAt }))
 }
 
 /** Seals a ledger's head with Ed25519 (RFC 8032). `secretKey` is 32 bytes in hexadecimal. */
 export function makeSeal(seal: Omit<Seal, 'signature'>, secretKey: string): Seal {
-  return { ...seal, signature: bytesToHex(ed25519.sign(sealBytes(seal), hexToBytes(secretKey))) };
+  return { ...seal, signature: bytesToHex(ed25519.sign(sealBytes(seal), hexToBytes(secretKey))) }
 }
 
 /** True when the seal was made with the key whose public half (32 bytes, hexadecimal) is given. */
 export function checkSeal(seal: Seal, publicKey: string): boolean {
   try {
-    return ed25519.verify(hexToBytes(seal.signature), sealBytes(seal), hexToBytes(publicKey));
+    return ed25519.verify(hexToBytes(seal.signature), sealBytes(seal), hexToBytes(publicKey))
   } catch {
-    return false;
+    return false
   }
 }
 
 /** The public half of a sealing key, in hexadecimal. */
 export function publicKeyOf(secretKey: string): string {
-  return bytesToHex(ed25519.getPublicKey(hexToBytes(secretKey)));
+  return bytesToHex(ed25519.getPublicKey(hexToBytes(secretKey)))
 }

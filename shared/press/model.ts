@@ -1,27 +1,31 @@
-import { z } from 'zod';
-import { idSchema } from '../ledger/envelope';
-import {
-  typedAreaSchema, typedForceSchema, typedLengthSchema, typedMassSchema, typedPressureSchema,
-} from '../units';
+import { z } from 'zod'
+import { idSchema } from '../ledger/envelope'
+import { typedAreaSchema, typedForceSchema, typedLengthSchema, typedMassSchema, typedPressureSchema } from '../units'
 
-const name = (what: string) => z.string().trim().min(1, `Give the ${what} a name.`).max(80, 'Keep it under 80 characters.');
+const name = (what: string) => z.string().trim().min(1, `Give the ${what} a name.`).max(80, 'Keep it under 80 characters.')
 
-export const FRAME_KINDS = ['h-frame', 'c-frame', 'four-post', 'bench'] as const;
+export const FRAME_KINDS = ['h-frame', 'c-frame', 'four-post', 'bench'] as const
 export const MEMBER_KINDS = [
-  'head-beam', 'bed-beam', 'upright', 'ram-seat', 'pin', 'tooling-adaptor', 'stiffener', 'base', 'other',
-] as const;
-export const JOINT_KINDS = ['weld', 'pin', 'bolt', 'thread', 'bearing'] as const;
-export const MAKE_UPS = ['open', 'tacked', 'finished'] as const;
-export const EXAMINATION_METHODS = ['visual', 'dye penetrant', 'magnetic particle', 'measured'] as const;
-export const TRAIN_PART_KINDS = [
-  'hose', 'coupler', 'pump', 'valve', 'relief', 'frame', 'tooling', 'stack', 'other',
-] as const;
-export const RAM_POSITIONS = ['central', 'far left', 'far right'] as const;
+  'head-beam',
+  'bed-beam',
+  'upright',
+  'ram-seat',
+  'pin',
+  'tooling-adaptor',
+  'stiffener',
+  'base',
+  'other',
+] as const
+export const JOINT_KINDS = ['weld', 'pin', 'bolt', 'thread', 'bearing'] as const
+export const MAKE_UPS = ['open', 'tacked', 'finished'] as const
+export const EXAMINATION_METHODS = ['visual', 'dye penetrant', 'magnetic particle', 'measured'] as const
+export const TRAIN_PART_KINDS = ['hose', 'coupler', 'pump', 'valve', 'relief', 'frame', 'tooling', 'stack', 'other'] as const
+export const RAM_POSITIONS = ['central', 'far left', 'far right'] as const
 
-export type FrameKind = (typeof FRAME_KINDS)[number];
-export type MakeUp = (typeof MAKE_UPS)[number];
-export type ExaminationMethod = (typeof EXAMINATION_METHODS)[number];
-export type RamPosition = (typeof RAM_POSITIONS)[number];
+export type FrameKind = (typeof FRAME_KINDS)[number]
+export type MakeUp = (typeof MAKE_UPS)[number]
+export type ExaminationMethod = (typeof EXAMINATION_METHODS)[number]
+export type RamPosition = (typeof RAM_POSITIONS)[number]
 
 /** A hydraulic cylinder or jack. The area comes from the maker's effective area, else from the bore. */
 export const ramSchema = z
@@ -43,7 +47,7 @@ export const ramSchema = z
   .refine((ram) => ram.bore !== null || ram.effectiveArea !== null, {
     path: ['bore'],
     message: 'Give the bore, or the effective area from the maker.',
-  });
+  })
 
 /** A part the force or its pressure passes through, with the rating marked on it or in its papers. */
 export const trainPartSchema = z
@@ -57,9 +61,9 @@ export const trainPartSchema = z
   .refine((part) => part.ratedForce !== null || part.ratedPressure !== null, {
     path: ['ratedPressure'],
     message: 'Give its rating. A part without a rating cannot be in the train.',
-  });
+  })
 
-export const memberSchema = z.object({ id: idSchema, kind: z.enum(MEMBER_KINDS), name: name('member') });
+export const memberSchema = z.object({ id: idSchema, kind: z.enum(MEMBER_KINDS), name: name('member') })
 
 /** Where two members are held together. `place` names a spot of the elevation; null is listed beside it. */
 export const jointSchema = z.object({
@@ -74,7 +78,7 @@ export const jointSchema = z.object({
   filler: z.string().trim().max(80),
   madeOn: z.iso.date('Write the day like 2026-09-14.').nullable(),
   place: z.string().max(40).nullable(),
-});
+})
 
 export const dimensionsSchema = z.object({
   height: typedLengthSchema.nullable(),
@@ -82,7 +86,7 @@ export const dimensionsSchema = z.object({
   throat: typedLengthSchema.nullable(),
   holePitch: typedLengthSchema.nullable(),
   holes: z.number().int().min(0).max(40),
-});
+})
 
 export const pressDescriptionSchema = z.object({
   name: name('press'),
@@ -93,11 +97,11 @@ export const pressDescriptionSchema = z.object({
   members: z.array(memberSchema).max(60),
   rams: z.array(ramSchema).min(1, 'A press needs at least one ram.').max(6),
   train: z.array(trainPartSchema).max(40),
-});
+})
 
 /** What limits of any one press somebody may have written down: everything but the joints' own history. */
-export type Ram = z.infer<typeof ramSchema>;
-export type TrainPart = z.infer<typeof trainPartSchema>;
-export type Member = z.infer<typeof memberSchema>;
-export type Joint = z.infer<typeof jointSchema>;
-export type PressDescription = z.infer<typeof pressDescriptionSchema>;
+export type Ram = z.infer<typeof ramSchema>
+export type TrainPart = z.infer<typeof trainPartSchema>
+export type Member = z.infer<typeof memberSchema>
+export type Joint = z.infer<typeof jointSchema>
+export type PressDescription = z.infer<typeof pressDescriptionSchema>

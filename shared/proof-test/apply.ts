@@ -1,109 +1,136 @@
-import type { LedgerEntry } from '../ledger/envelope';
-import { FIRST_PREV_HASH } from '../ledger/chain';
-import { neighboursOf } from '../press/joints';
-import type { Opened, Position, ProofTestDraft, ProofTestKind, ProofTestPayload, Reading } from './entries';
-import type {
-  AttemptState, ClimbState, JointState, LegState, Place, ProofTestState, Row, StageState, StageRow,
-} from './state';
-import { upcast } from './upcast';
+import type { LedgerEntry } from '../ledger/envelope'
+import { FIRST_PREV_HASH } from '../ledger/chain'
+import { neighboursOf } from '../press/joints'
+import type { Opened, Position, ProofTestDraft, ProofTestKind, ProofTestPayload, Reading } from './entries'
+import type { AttemptState, ClimbState, JointState, LegState, Place, ProofTestState, Row, StageState, StageRow } from './state'
+import { upcast } from './upcast'
 
 /** The state before the first entry. */
 export function emptyProofTest(id: string): ProofTestState {
   return {
-    id, opened: null, openedAt: null, joints: [], loadPathConfirmed: null, setUp: null, legs: [], position: null,
-    loaded: null, paused: null, stopped: null, observations: [], corrections: [], reasons: [], irregular: [],
-    conclusion: null, signed: null, countersigned: null, declined: [], lateFacts: 0, lastMark: null,
-    entryCount: 0, headSeq: 0, headHash: FIRST_PREV_HASH, unknownKinds: 0,
-  };
+    id,
+    opened: null,
+    openedAt: null,
+    joints: [],
+    loadPathConfirmed: null,
+    setUp: null,
+    legs: [],
+    position: null,
+    loaded: null,
+    paused: null,
+    stopped: null,
+    observations: [],
+    corrections: [],
+    reasons: [],
+    irregular: [],
+    conclusion: null,
+    signed: null,
+    countersigned: null,
+    declined: [],
+    lateFacts: 0,
+    lastMark: null,
+    entryCount: 0,
+    headSeq: 0,
+    headHash: FIRST_PREV_HASH,
+    unknownKinds: 0,
+  }
 }
 
 function climbFor(opened: Opened, climb: number): ClimbState {
-  const { stages, repeatHoldSeconds } = opened.protocol.content;
+  const { stages, repeatHoldSeconds } = opened.protocol.content
   return {
-    datum: [], released: null, set: [],
+    datum: [],
+    released: null,
+    set: [],
     stages: stages.map((stage): StageState => ({
       percent: stage.percent,
       holdSeconds: climb === 0 ? stage.holdSeconds : repeatHoldSeconds,
       attempts: [],
     })),
-  };
+  }
 }
 
 function replaceAt<T>(list: readonly T[], index: number, item: T): T[] {
-  const copy = list.slice();
-  copy[index] = item;
-  return copy;
+  const copy = list.slice()
+  copy[index] = item
+  return copy
 }
 
 function withLeg(state: ProofTestState, index: number, change: (leg: LegState) => LegState): ProofTestState {
-  const leg = state.legs[index];
-  return leg ? { ...state, legs: replaceAt(state.legs, index, change(leg)) } : state;
+  const leg = state.legs[index]
+  return leg ? { ...state, legs: replaceAt(state.legs, index, change(leg)) } : state
 }
 
 function withClimb(state: ProofTestState, leg: number, climb: number, change: (climb: ClimbState) => ClimbState): ProofTestState {
   return withLeg(state, leg, (before) => {
-    const opened = state.opened;
-    const current = before.climbs[climb] ?? (opened && climb === before.climbs.length ? climbFor(opened, climb) : undefined);
-    return current ? { ...before, climbs: replaceAt(before.climbs, climb, change(current)) } : before;
-  });
+    const opened = state.opened
+    const current = before.climbs[climb] ?? (opened && climb === before.climbs.length ? climbFor(opened, climb) : undefined)
+    return current ? { ...before, climbs: replaceAt(before.climbs, climb, change(current)) } : before
+  })
 }
 
 function withAttempt(state: ProofTestState, at: Position, change: (attempt: AttemptState) => AttemptState): ProofTestState {
   return withClimb(state, at.leg, at.climb, (climb) => {
-    const stage = climb.stages[at.stage];
-    const attempt = stage?.attempts[at.attempt];
-    if (!stage || !attempt) return climb;
-    const attempts = replaceAt(stage.attempts, at.attempt, change(attempt));
-    return { ...climb, stages: replaceAt(climb.stages, at.stage, { ...stage, attempts }) };
-  });
+    const stage = climb.stages[at.stage]
+    const attempt = stage?.attempts[at.attempt]
+    if (!stage || !attempt) return climb
+    const attempts = replaceAt(stage.attempts, at.attempt, change(attempt))
+    return { ...climb, stages: replaceAt(climb.stages, at.stage, { ...stage, attempts }) }
+  })
 }
 
 function rowOf(entry: LedgerEntry, payload: { mark: Row['mark']; readings: Reading[] }): Row {
   return {
-    entryId: entry.id, seq: entry.seq, mark: payload.mark, enteredAt: entry.observedAt, by: entry.authorId,
-    typed: payload.readings, readings: payload.readings, irregular: entry.irregular,
-  };
+    entryId: entry.id,
+    seq: entry.seq,
+    mark: payload.mark,
+    enteredAt: entry.observedAt,
+    by: entry.authorId,
+    typed: payload.readings,
+    readings: payload.readings,
+    irregular: entry.irregular,
+  }
 }
 
 function withJoint(state: ProofTestState, jointId: string, change: (joint: JointState) => JointState): ProofTestState {
-  const index = state.joints.findIndex((joint) => joint.joint.id === jointId);
-  const joint = state.joints[index];
-  return joint ? { ...state, joints: replaceAt(state.joints, index, change(joint)) } : state;
+  const index = state.joints.findIndex((joint) => joint.joint.id === jointId)
+  const joint = state.joints[index]
+  return joint ? { ...state, joints: replaceAt(state.joints, index, change(joint)) } : state
 }
 
 function stageBegun(state: ProofTestState, at: Position, entry: LedgerEntry): ProofTestState {
   const begun = withClimb(state, at.leg, at.climb, (climb) => {
-    const stage = climb.stages[at.stage];
-    if (!stage || at.attempt !== stage.attempts.length) return climb;
-    const attempt: AttemptState = { begunAt: entry.observedAt, rows: [], topUps: 0, independent: null, decided: null };
-    return { ...climb, stages: replaceAt(climb.stages, at.stage, { ...stage, attempts: [...stage.attempts, attempt] }) };
-  });
-  return { ...begun, position: at, loaded: state.loaded ?? { since: entry.observedAt, by: 'stage' } };
+    const stage = climb.stages[at.stage]
+    if (!stage || at.attempt !== stage.attempts.length) return climb
+    const attempt: AttemptState = { begunAt: entry.observedAt, rows: [], topUps: 0, independent: null, decided: null }
+    return { ...climb, stages: replaceAt(climb.stages, at.stage, { ...stage, attempts: [...stage.attempts, attempt] }) }
+  })
+  return { ...begun, position: at, loaded: state.loaded ?? { since: entry.observedAt, by: 'stage' } }
 }
 
 function addStageRow(state: ProofTestState, at: Position, row: StageRow): ProofTestState {
-  return withAttempt(
-    { ...state, loaded: state.loaded ?? { since: row.enteredAt, by: 'stage' } },
-    at,
-    (attempt) => ({ ...attempt, rows: [...attempt.rows, row], topUps: attempt.topUps + (row.toppedUp ? 1 : 0) }),
-  );
+  return withAttempt({ ...state, loaded: state.loaded ?? { since: row.enteredAt, by: 'stage' } }, at, (attempt) => ({
+    ...attempt,
+    rows: [...attempt.rows, row],
+    topUps: attempt.topUps + (row.toppedUp ? 1 : 0),
+  }))
 }
 
 function released(state: ProofTestState, entry: LedgerEntry): ProofTestState {
-  const mark = { at: entry.observedAt, bootId: entry.bootId, monotonicMs: entry.monotonicMs };
-  const unloaded: ProofTestState = { ...state, loaded: null, paused: null };
-  const place = state.position;
-  if (!place) return unloaded;
+  const mark = { at: entry.observedAt, bootId: entry.bootId, monotonicMs: entry.monotonicMs }
+  const unloaded: ProofTestState = { ...state, loaded: null, paused: null }
+  const place = state.position
+  if (!place) return unloaded
   if (state.loaded?.by === 'seating') {
-    return withLeg(unloaded, place.leg, (leg) => ({ ...leg, seatingReleasedAt: entry.observedAt }));
+    return withLeg(unloaded, place.leg, (leg) => ({ ...leg, seatingReleasedAt: entry.observedAt }))
   }
-  return withClimb(unloaded, place.leg, place.climb, (climb) => ({ ...climb, released: { at: entry.observedAt, mark } }));
+  return withClimb(unloaded, place.leg, place.climb, (climb) => ({ ...climb, released: { at: entry.observedAt, mark } }))
 }
 
 function correctRow<R extends Row>(row: R, entryId: string, reading: Reading): R {
-  if (row.entryId !== entryId) return row;
-  const readings = row.readings.map((old) => (old.sourceId === reading.sourceId ? reading : old));
-  return { ...row, readings };
+  if (row.entryId !== entryId) return row
+  const readings = row.readings.map((old) => (old.sourceId === reading.sourceId ? reading : old))
+  return { ...row, readings }
 }
 
 /** Every row of a test, wherever it stands. */
@@ -115,15 +142,15 @@ export function allRows(state: ProofTestState): Row[] {
       ...climb.stages.flatMap((stage) => stage.attempts.flatMap((attempt) => attempt.rows)),
       ...climb.set,
     ]),
-  ]);
+  ])
 }
 
 function corrected(state: ProofTestState, payload: ProofTestPayload<'corrected'>, entry: LedgerEntry): ProofTestState {
-  const row = allRows(state).find((candidate) => candidate.entryId === payload.entryId);
-  const from = row?.readings.find((reading) => reading.sourceId === payload.sourceId);
-  if (!row || !from) return state;
-  const to: Reading = { sourceId: payload.sourceId, text: payload.text, unit: payload.unit };
-  const fix = <R extends Row>(candidate: R): R => correctRow(candidate, payload.entryId, to);
+  const row = allRows(state).find((candidate) => candidate.entryId === payload.entryId)
+  const from = row?.readings.find((reading) => reading.sourceId === payload.sourceId)
+  if (!row || !from) return state
+  const to: Reading = { sourceId: payload.sourceId, text: payload.text, unit: payload.unit }
+  const fix = <R extends Row>(candidate: R): R => correctRow(candidate, payload.entryId, to)
   return {
     ...state,
     legs: state.legs.map((leg) => ({
@@ -139,18 +166,30 @@ function corrected(state: ProofTestState, payload: ProofTestPayload<'corrected'>
         })),
       })),
     })),
-    corrections: [...state.corrections, {
-      entryId: entry.id, seq: entry.seq, correctsEntryId: row.entryId, correctsSeq: row.seq, sourceId: payload.sourceId,
-      from, to, why: payload.why, by: entry.authorId, at: entry.observedAt,
-      readAgainByBoth: payload.readAgainByBoth, underLoad: state.loaded !== null,
-    }],
-  };
+    corrections: [
+      ...state.corrections,
+      {
+        entryId: entry.id,
+        seq: entry.seq,
+        correctsEntryId: row.entryId,
+        correctsSeq: row.seq,
+        sourceId: payload.sourceId,
+        from,
+        to,
+        why: payload.why,
+        by: entry.authorId,
+        at: entry.observedAt,
+        readAgainByBoth: payload.readAgainByBoth,
+        underLoad: state.loaded !== null,
+      },
+    ],
+  }
 }
 
 function percentReached(state: ProofTestState): number | null {
-  const place = state.position;
-  if (!place || place.stage === null) return null;
-  return state.opened?.protocol.content.stages[place.stage]?.percent ?? null;
+  const place = state.position
+  if (!place || place.stage === null) return null
+  return state.opened?.protocol.content.stages[place.stage]?.percent ?? null
 }
 
 function opened(state: ProofTestState, payload: Opened, entry: LedgerEntry): ProofTestState {
@@ -159,61 +198,84 @@ function opened(state: ProofTestState, payload: Opened, entry: LedgerEntry): Pro
     opened: payload,
     openedAt: entry.observedAt,
     joints: payload.joints.map((joint) => ({
-      joint, makeUp: joint.makeUp, workedAt: null, before: null, after: null, fellBackBecause: null,
+      joint,
+      makeUp: joint.makeUp,
+      workedAt: null,
+      before: null,
+      after: null,
+      fellBackBecause: null,
     })),
     legs: payload.legs.map(() => ({ begunAt: null, seated: null, seatingReleasedAt: null, climbs: [] })),
-  };
+  }
 }
 
 function jointWorked(state: ProofTestState, payload: ProofTestPayload<'joint-worked'>): ProofTestState {
-  const worked = state.joints.find((joint) => joint.joint.id === payload.jointId);
-  if (!worked) return state;
-  const touched = new Set(neighboursOf(state.joints.map((joint) => joint.joint), payload.jointId).map((joint) => joint.id));
+  const worked = state.joints.find((joint) => joint.joint.id === payload.jointId)
+  if (!worked) return state
+  const touched = new Set(
+    neighboursOf(
+      state.joints.map((joint) => joint.joint),
+      payload.jointId,
+    ).map((joint) => joint.id),
+  )
   return {
     ...state,
     joints: state.joints.map((joint) => {
-      if (joint === worked) return { ...joint, makeUp: payload.makeUp, workedAt: payload.workedAt, before: null, after: null, fellBackBecause: null };
-      if (!touched.has(joint.joint.id)) return joint;
-      return { ...joint, before: null, after: null, fellBackBecause: joint.before ? `joint ${worked.joint.number} was worked on` : joint.fellBackBecause };
+      if (joint === worked)
+        return { ...joint, makeUp: payload.makeUp, workedAt: payload.workedAt, before: null, after: null, fellBackBecause: null }
+      if (!touched.has(joint.joint.id)) return joint
+      return {
+        ...joint,
+        before: null,
+        after: null,
+        fellBackBecause: joint.before ? `joint ${worked.joint.number} was worked on` : joint.fellBackBecause,
+      }
     }),
-  };
+  }
 }
 
-type Handlers = { [K in ProofTestKind]: (state: ProofTestState, payload: ProofTestPayload<K>, entry: LedgerEntry) => ProofTestState };
+type Handlers = { [K in ProofTestKind]: (state: ProofTestState, payload: ProofTestPayload<K>, entry: LedgerEntry) => ProofTestState }
 
 const handlers: Handlers = {
   opened,
   'joint-worked': jointWorked,
   'joint-examined': (state, payload, entry) =>
     withJoint(state, payload.jointId, (joint) => {
-      const { method, result, remark } = payload;
-      const examination = { entryId: entry.id, at: entry.observedAt, by: entry.authorId, method, result, remark };
+      const { method, result, remark } = payload
+      const examination = { entryId: entry.id, at: entry.observedAt, by: entry.authorId, method, result, remark }
       return payload.occasion === 'before load'
         ? { ...joint, before: examination, fellBackBecause: null }
-        : { ...joint, after: examination };
+        : { ...joint, after: examination }
     }),
   'load-path-confirmed': (state, payload, entry) => ({
-    ...state, loadPathConfirmed: { by: entry.authorId, as: payload.by, at: entry.observedAt },
+    ...state,
+    loadPathConfirmed: { by: entry.authorId, as: payload.by, at: entry.observedAt },
   }),
   'set-up-confirmed': (state, payload, entry) => ({
     ...state,
-    setUp: { items: payload.items, reliefSet: payload.reliefSet, strokePercent: payload.strokePercent, note: payload.note, at: entry.observedAt },
+    setUp: {
+      items: payload.items,
+      reliefSet: payload.reliefSet,
+      strokePercent: payload.strokePercent,
+      note: payload.note,
+      at: entry.observedAt,
+    },
   }),
   'leg-begun': (state, payload, entry) => {
-    if (!state.legs[payload.leg]) return state;
-    const begun = withClimb(state, payload.leg, 0, (climb) => climb);
+    if (!state.legs[payload.leg]) return state
+    const begun = withClimb(state, payload.leg, 0, (climb) => climb)
     return {
       ...withLeg(begun, payload.leg, (leg) => ({ ...leg, begunAt: leg.begunAt ?? entry.observedAt })),
       position: { leg: payload.leg, climb: 0, stage: null, attempt: null },
-    };
+    }
   },
   seated: (state, payload, entry) => ({
     ...withLeg(state, payload.leg, (leg) => ({ ...leg, seated: rowOf(entry, payload), seatingReleasedAt: null })),
     loaded: state.loaded ?? { since: entry.observedAt, by: 'seating' },
   }),
   'datum-read': (state, payload, entry) => {
-    const next = withClimb(state, payload.leg, payload.climb, (climb) => ({ ...climb, datum: [...climb.datum, rowOf(entry, payload)] }));
-    return { ...next, position: { leg: payload.leg, climb: payload.climb, stage: null, attempt: null } };
+    const next = withClimb(state, payload.leg, payload.climb, (climb) => ({ ...climb, datum: [...climb.datum, rowOf(entry, payload)] }))
+    return { ...next, position: { leg: payload.leg, climb: payload.climb, stage: null, attempt: null } }
   },
   'stage-begun': (state, payload, entry) => stageBegun(state, payload.at, entry),
   'row-read': (state, payload, entry) =>
@@ -227,43 +289,76 @@ const handlers: Handlers = {
     })),
   observed: (state, payload, entry) => ({
     ...state,
-    observations: [...state.observations, {
-      seq: entry.seq, at: entry.observedAt, by: entry.authorId, what: payload.what, note: payload.note, position: payload.at,
-    }],
+    observations: [
+      ...state.observations,
+      {
+        seq: entry.seq,
+        at: entry.observedAt,
+        by: entry.authorId,
+        what: payload.what,
+        note: payload.note,
+        position: payload.at,
+      },
+    ],
   }),
   paused: (state, payload, entry) => ({
     ...state,
-    paused: { at: entry.observedAt, why: payload.why, mark: { at: entry.observedAt, bootId: entry.bootId, monotonicMs: entry.monotonicMs } },
+    paused: {
+      at: entry.observedAt,
+      why: payload.why,
+      mark: { at: entry.observedAt, bootId: entry.bootId, monotonicMs: entry.monotonicMs },
+    },
   }),
   resumed: (state) => ({ ...state, paused: null }),
-  stopped: (state, payload, entry) => (state.stopped ? state : {
-    ...state,
-    stopped: { seq: entry.seq, at: entry.observedAt, by: entry.authorId, cause: payload.cause, why: payload.why, atPercent: percentReached(state) },
-  }),
+  stopped: (state, payload, entry) =>
+    state.stopped
+      ? state
+      : {
+          ...state,
+          stopped: {
+            seq: entry.seq,
+            at: entry.observedAt,
+            by: entry.authorId,
+            cause: payload.cause,
+            why: payload.why,
+            atPercent: percentReached(state),
+          },
+        },
   released: (state, _payload, entry) => released(state, entry),
   'set-read': (state, payload, entry) =>
     withClimb(state, payload.leg, payload.climb, (climb) => ({ ...climb, set: [...climb.set, rowOf(entry, payload)] })),
   decided: (state, payload, entry) => {
     const next = withAttempt(state, payload.at, (attempt) => ({
       ...attempt,
-      decided: { entryId: entry.id, decision: payload.decision, criteria: payload.criteria, at: entry.observedAt, by: entry.authorId, reasons: entry.overrides },
-    }));
-    if (payload.decision !== 'stop' || next.stopped) return next;
-    const criterion = payload.criteria.find((candidate) => candidate.stops && candidate.verdict === 'beyond');
+      decided: {
+        entryId: entry.id,
+        decision: payload.decision,
+        criteria: payload.criteria,
+        at: entry.observedAt,
+        by: entry.authorId,
+        reasons: entry.overrides,
+      },
+    }))
+    if (payload.decision !== 'stop' || next.stopped) return next
+    const criterion = payload.criteria.find((candidate) => candidate.stops && candidate.verdict === 'beyond')
     return {
       ...next,
       stopped: {
-        seq: entry.seq, at: entry.observedAt, by: entry.authorId, cause: 'criterion',
+        seq: entry.seq,
+        at: entry.observedAt,
+        by: entry.authorId,
+        cause: 'criterion',
         why: criterion ? `${criterion.label}: ${criterion.reading}, limit ${criterion.limit}` : 'A limit could not be shown to be kept.',
         atPercent: percentReached(state),
       },
-    };
+    }
   },
   corrected,
   concluded: (state, payload, entry) => ({
     ...state,
     conclusion: { ...payload, at: entry.observedAt, by: entry.authorId },
-    signed: null, countersigned: null,
+    signed: null,
+    countersigned: null,
   }),
   signed: (state, payload, entry) => ({ ...state, signed: { ...payload, seq: entry.seq } }),
   countersigned: (state, payload, entry) => ({ ...state, countersigned: { ...payload, seq: entry.seq } }),
@@ -273,10 +368,15 @@ const handlers: Handlers = {
     declined: [...state.declined, { why: payload.why, by: payload.personId, printedName: payload.printedName, at: entry.observedAt }],
   }),
   reviewed: (state) => state,
-};
+}
 
-function dispatch<K extends ProofTestKind>(state: ProofTestState, kind: K, payload: ProofTestPayload<K>, entry: LedgerEntry): ProofTestState {
-  return handlers[kind](state, payload, entry);
+function dispatch<K extends ProofTestKind>(
+  state: ProofTestState,
+  kind: K,
+  payload: ProofTestPayload<K>,
+  entry: LedgerEntry,
+): ProofTestState {
+  return handlers[kind](state, payload, entry)
 }
 
 /**
@@ -285,36 +385,46 @@ function dispatch<K extends ProofTestKind>(state: ProofTestState, kind: K, paylo
  * `unknownKinds`, so that the screen can say that an update is needed.
  */
 export function applyProofTest(before: ProofTestState, stored: LedgerEntry): ProofTestState {
-  const entry = upcast(stored);
+  const entry = upcast(stored)
   const state: ProofTestState = {
     ...before,
     entryCount: before.entryCount + 1,
     headSeq: entry.seq,
     headHash: entry.hash,
     lastMark: { at: entry.observedAt, bootId: entry.bootId, monotonicMs: entry.monotonicMs },
-    irregular: entry.irregular.length > 0 ? [...before.irregular, { seq: entry.seq, kind: entry.kind, rules: entry.irregular }] : before.irregular,
+    irregular:
+      entry.irregular.length > 0 ? [...before.irregular, { seq: entry.seq, kind: entry.kind, rules: entry.irregular }] : before.irregular,
     lateFacts: before.countersigned ? before.lateFacts + 1 : before.lateFacts,
-    reasons: entry.overrides.length > 0
-      ? [...before.reasons, ...entry.overrides.map((override) => ({
-          seq: entry.seq, kind: entry.kind, rule: override.rule, reason: override.reason, by: entry.authorId, at: entry.observedAt,
-        }))]
-      : before.reasons,
-  };
-  if (!Object.hasOwn(handlers, entry.kind)) return { ...state, unknownKinds: state.unknownKinds + 1 };
-  const draft = { kind: entry.kind, payload: entry.payload } as ProofTestDraft;
-  return dispatch(state, draft.kind, draft.payload, entry);
+    reasons:
+      entry.overrides.length > 0
+        ? [
+            ...before.reasons,
+            ...entry.overrides.map((override) => ({
+              seq: entry.seq,
+              kind: entry.kind,
+              rule: override.rule,
+              reason: override.reason,
+              by: entry.authorId,
+              at: entry.observedAt,
+            })),
+          ]
+        : before.reasons,
+  }
+  if (!Object.hasOwn(handlers, entry.kind)) return { ...state, unknownKinds: state.unknownKinds + 1 }
+  const draft = { kind: entry.kind, payload: entry.payload } as ProofTestDraft
+  return dispatch(state, draft.kind, draft.payload, entry)
 }
 
 /** Folds a list of entries, oldest first. */
 export function foldProofTest(id: string, entries: readonly LedgerEntry[]): ProofTestState {
-  return entries.reduce(applyProofTest, emptyProofTest(id));
+  return entries.reduce(applyProofTest, emptyProofTest(id))
 }
 
 /** The attempt that is under way, or was last. */
 export function currentAttempt(state: ProofTestState): { place: Position; stage: StageState; attempt: AttemptState } | null {
-  const place: Place | null = state.position;
-  if (!place || place.stage === null || place.attempt === null) return null;
-  const stage = state.legs[place.leg]?.climbs[place.climb]?.stages[place.stage];
-  const attempt = stage?.attempts[place.attempt];
-  return stage && attempt ? { place: place as Position, stage, attempt } : null;
+  const place: Place | null = state.position
+  if (!place || place.stage === null || place.attempt === null) return null
+  const stage = state.legs[place.leg]?.climbs[place.climb]?.stages[place.stage]
+  const attempt = stage?.attempts[place.attempt]
+  return stage && attempt ? { place: place as Position, stage, attempt } : null
 }

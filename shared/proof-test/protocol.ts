@@ -1,17 +1,17 @@
-import { z } from 'zod';
-import { RAM_POSITIONS } from '../press/model';
-import { typedLengthSchema } from '../units';
+import { z } from 'zod'
+import { RAM_POSITIONS } from '../press/model'
+import { typedLengthSchema } from '../units'
 
-const percent = (most: number) => z.number().min(0, 'Not below zero.').max(most, `At most ${most} %.`);
-const seconds = z.number().int().min(1, 'At least one second.').max(3600, 'At most an hour.');
+const percent = (most: number) => z.number().min(0, 'Not below zero.').max(most, `At most ${most} %.`)
+const seconds = z.number().int().min(1, 'At least one second.').max(3600, 'At most an hour.')
 
 export const protocolLegSchema = z.object({
   label: z.string().trim().min(1, 'Name this leg.').max(60),
   ramPosition: z.enum(RAM_POSITIONS),
   bed: z.enum(['where it is used most', 'lowest', 'highest']),
-});
+})
 
-export const protocolStageSchema = z.object({ percent: percent(150), holdSeconds: seconds });
+export const protocolStageSchema = z.object({ percent: percent(150), holdSeconds: seconds })
 
 export const protocolLimitsSchema = z.object({
   stageLowerPercent: percent(10),
@@ -21,7 +21,7 @@ export const protocolLimitsSchema = z.object({
   softeningPercent: percent(50),
   setPercent: percent(50),
   mostSet: typedLengthSchema.nullable(),
-});
+})
 
 /**
  * The written plan of a proof test. Defaults are common practice, from memory, no source: each is a field.
@@ -48,38 +48,57 @@ export const protocolContentSchema = z
   })
   .superRefine((content, context) => {
     content.stages.forEach((stage, index) => {
-      const before = content.stages[index - 1];
+      const before = content.stages[index - 1]
       if (before && stage.percent <= before.percent) {
-        context.addIssue({ code: 'custom', path: ['stages', index, 'percent'], message: 'Each stage is higher than the one before it.' });
+        context.addIssue({ code: 'custom', path: ['stages', index, 'percent'], message: 'Each stage is higher than the one before it.' })
       }
-    });
-    const highest = content.stages.at(-1)?.percent ?? 0;
+    })
+    const highest = content.stages.at(-1)?.percent ?? 0
     if (highest < 100) {
-      context.addIssue({ code: 'custom', path: ['stages', content.stages.length - 1, 'percent'], message: 'The last stage reaches at least 100 %.' });
+      context.addIssue({
+        code: 'custom',
+        path: ['stages', content.stages.length - 1, 'percent'],
+        message: 'The last stage reaches at least 100 %.',
+      })
     }
     if (highest > 100 && content.aboveRatingRule === '') {
-      context.addIssue({ code: 'custom', path: ['aboveRatingRule'], message: 'Name the rule that asks for a load above rating.' });
+      context.addIssue({ code: 'custom', path: ['aboveRatingRule'], message: 'Name the rule that asks for a load above rating.' })
     }
-  });
+  })
 
-export type ProtocolContent = z.infer<typeof protocolContentSchema>;
-export type ProtocolLeg = z.infer<typeof protocolLegSchema>;
+export type ProtocolContent = z.infer<typeof protocolContentSchema>
+export type ProtocolLeg = z.infer<typeof protocolLegSchema>
 
 const commonLimits = {
-  stageLowerPercent: 2, stageUpperPercent: 5, pressureLossPercent: 5, creepPercent: 2,
-  softeningPercent: 15, setPercent: 5, mostSet: null,
-} as const;
+  stageLowerPercent: 2,
+  stageUpperPercent: 5,
+  pressureLossPercent: 5,
+  creepPercent: 2,
+  softeningPercent: 15,
+  setPercent: 5,
+  mostSet: null,
+} as const
 
 const common = {
-  seatingPercent: 5, datumWatchSeconds: 120, recoverySeconds: 120, repeatHoldSeconds: 60, limits: commonLimits,
-  predictionAllowancePercent: 5, frictionPercent: 5, decisionRule: 'simple', marginDivisor: 1,
-  examinationMonths: 6, aboveRatingRule: '',
-} as const;
+  seatingPercent: 5,
+  datumWatchSeconds: 120,
+  recoverySeconds: 120,
+  repeatHoldSeconds: 60,
+  limits: commonLimits,
+  predictionAllowancePercent: 5,
+  frictionPercent: 5,
+  decisionRule: 'simple',
+  marginDivisor: 1,
+  examinationMonths: 6,
+  aboveRatingRule: '',
+} as const
 
 const quarters = [
-  { percent: 25, holdSeconds: 60 }, { percent: 50, holdSeconds: 60 },
-  { percent: 75, holdSeconds: 120 }, { percent: 100, holdSeconds: 300 },
-];
+  { percent: 25, holdSeconds: 60 },
+  { percent: 50, holdSeconds: 60 },
+  { percent: 75, holdSeconds: 120 },
+  { percent: 100, holdSeconds: 300 },
+]
 
 /**
  * The protocols every shop starts with. Holds and limits: common practice, from memory, no source.
@@ -112,4 +131,4 @@ export const SHIPPED_PROTOCOLS: readonly { name: string; content: ProtocolConten
       limits: { ...commonLimits, mostSet: { text: '3.18', unit: 'mm' } },
     },
   },
-];
+]

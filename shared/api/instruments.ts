@@ -1,0 +1,43 @@
+import { z } from 'zod'
+import { calibrationSchema, instrumentDetailsSchema } from '../instruments/model'
+import { idSchema, timeSchema } from './common'
+
+export const INSTRUMENT_SORTS = ['code', '-code', 'due', '-due'] as const
+
+/** GET /api/instruments?shop=&search=&kind=&sort=&cursor=&limit= */
+export const instrumentListQuerySchema = z.object({
+  shop: idSchema,
+  search: z.string().trim().max(80).optional(),
+  kind: z.enum(['gauge', 'load-cell', 'indicator']).optional(),
+  sort: z.enum(INSTRUMENT_SORTS).default('code'),
+  cursor: z.string().max(400).optional(),
+  limit: z.coerce.number().int().min(1).max(100).default(25),
+})
+
+export const calibrationRowSchema = z.object({ id: idSchema, calibration: calibrationSchema, createdAt: timeSchema, createdBy: z.string() })
+
+/** An instrument with the calibration in force (the latest by its day), null when it never had one. */
+export const instrumentRowSchema = z.object({
+  id: idSchema,
+  details: instrumentDetailsSchema,
+  calibration: calibrationSchema.nullable(),
+  retired: z.boolean(),
+})
+
+export const instrumentListSchema = z.object({
+  instruments: z.array(instrumentRowSchema),
+  older: z.string().nullable(),
+  newer: z.string().nullable(),
+})
+export const instrumentResponseSchema = z.object({
+  shopId: idSchema,
+  instrument: instrumentRowSchema,
+  calibrations: z.array(calibrationRowSchema),
+})
+
+/** POST /api/instruments?shop= and PUT /api/instruments/:id; POST /api/instruments/:id/calibrations takes a Calibration. */
+export const instrumentRequestSchema = instrumentDetailsSchema
+export const calibrationRequestSchema = calibrationSchema
+
+export type InstrumentListQuery = z.infer<typeof instrumentListQuerySchema>
+export type InstrumentRow = z.infer<typeof instrumentRowSchema>

@@ -1,0 +1,196 @@
+import { gaugeErrorLimit } from '../hydraulics/gauge'
+import { ramForce, type RamInput } from '../hydraulics/ram'
+import { readableTarget, targetPressure } from '../hydraulics/target'
+import { forceUncertainty, loadCellUncertainty, type BudgetLine } from '../hydraulics/uncertainty'
+import type { FrozenInstrument, GaugeDetails, LoadCellDetails } from '../instruments/model'
+import { lowestLimit, ramInput } from '../press/ratings'
+import { decimalsOf, parseDecimal, toSI, toUnit, type Unit } from '../units'
+import type { Opened, Reading } from './entries'
+
+/** A force with its uncertainty (N). `uIndependent` is the reading's own part, which steps don't share. */
+export interface ForceFigure {
+  force: number
+  U: number
+  u: number
+  uIndependent: number
+  /** Pa; null where a load cell reads force itself. */
+  pressure: number | null
+  /** The force after the seal-friction allowance: "delivered at least". */
+  deliveredAtLeast: number
+  budget: BudgetLine[]
+}
+
+/** A target for one stage, in the unit of the gauge that reads it. */
+export interface StageTarget {
+  percent: number
+  force: number
+  exactText: string
+  /** What to pump to: rounded down to what can be read. */
+  text: string
+  unit: Unit
+  readable: number
+  readableForce: number
+  /** The span of readings that reaches the stage, in SI and as text. */
+  window: { from: number; to: number; fromText: string; toText: string }
+  belowTolerance: boolean
+  sentence: string | null
+}
+
+export function instrumentOf(opened: Opened, id: string): FrozenInstrument | undefined {
+  return opened.instruments.find((instrument) => instrument.id === id)
+}
+
+interface Circuit {
+  gauge: GaugeDetails
+  instrument: FrozenInstrument
+  rams: RamInput[]
+}
+
+function circuits(opened: Opened): Circuit[] {
+  const rams = opened.press.rams.map(ramInput)
+  const gauges = opened.forceInstrumentIds.flatMap((id) => {
+    const instrument = instrumentOf(opened, id)
+    return instrument && instrument.details.kind === 'gauge' ? [{ instrument, gauge: instrument.details }] : []
+  })
+  if (gauges.length <= 1) return gauges.map((one) => ({ ...one, rams }))
+  return gauges.map((one, index) => ({ ...one, rams: rams.slice(index, index + 1) }))
+}
+
+function loadCell(opened: Opened): { instrument: FrozenInstrument; cell: LoadCellDetails } | null {
+  for (const id of opened.forceInstrumentIds) {
+    const instrument = instrumentOf(opened, id)
+    if (instrument && instrument.details.kind === 'load-cell') return { instrument, cell: instrument.details }
+  }
+  return null
+}
+
+function valueOf(readings: readonly Reading[], id: string): number | null {
+  const reading = readings.find((candidate) => candidate.sourceId === id)
+  if (!reading || !parseDecimal(reading.text, { signed: true }).ok) return null
+  return toSI(reading)
+}
+
+/** The force a row of readings stands for, or null while a gauge of the row is missing. */
+export function forceOf(opened: Opened, readings: readonly Reading[]): ForceFigure | null {
+  const friction = 1 - opened.protocol.content.frictionPercent / 100
+  const cell = loadCell(opened)
+  if (cell) {
+    const force = valueOf(readings, cell.instrument.id)
+    if (force === null) return null
+    const result = loadCellUncertainty({
+      force,
+      errorLimit: (cell.cell.errorPercentOfSpan / 100) * toSI(cell.cell.fullScale),
+      certificate: certificateOf(cell.instrument),
+      readableIncrement: toSI(cell.cell.increment),
+    })
+    return { ...result, pressure: null, deliveredAtLeast: force }
+  }
+  const figures: ForceFigure[] = []
+  for (const circuit of circuits(opened)) {
+    const pressure = valueOf(readings, circuit.instrument.id)
+    if (pressure === null) return null
+    const fullScale = toSI(circuit.gauge.fullScale)
+    const result = forceUncertainty({
+      rams: circuit.rams,
+      pressure,
+      errorLimit: gaugeErrorLimit({ accuracy: circuit.gauge.accuracy, spanMin: 0, spanMax: fullScale, reading: pressure }),
+      certificate: certificateOf(circuit.instrument),
+      readableIncrement: toSI(circuit.gauge.increment),
+    })
+    figures.push({ ...result, pressure, deliveredAtLeast: result.force * friction })
+  }
+  return figures.length > 0 ? figures.reduce(addForces) : null
+}
+
+function addForces(a: ForceFigure, b: ForceFigure): ForceFigure {
+  const u = Math.hypot(a.u, b.u)
+  return {
+    force: a.force + b.force,
+    u,
+    U: 2 * u,
+    uIndependent: Math.hypot(a.uIndependent, b.uIndependent),
+    pressure: Math.max(a.pressure ?? 0, b.pressure ?? 0),
+    deliveredAtLeast: a.deliveredAtLeast + b.deliveredAtLeast,
+    budget: [...a.budget, ...b.budget],
+  }
+}
+
+function certificateOf(instrument: FrozenInstrument): { U: number; k: number } | undefined {
+  const uncertainty = instrument.calibration?.uncertainty
+  return uncertainty ? { U: toSI(uncertainty.value), k: uncertainty.k } : undefined
+}
+
+/** The instrument that the lead pumps to: the load cell, else the first gauge. */
+export function leadInstrument(opened: Opened): FrozenInstrument | null {
+  const cell = loadCell(opened)
+  if (cell) return cell.instrument
+  return circuits(opened)[0]?.instrument ?? null
+}
+
+/** The force that a percentage of the rated load stands for (N). */
+export function stageForce(opened: Opened, percent: number): number {
+  return (percent / 100) * toSI(opened.press.ratedLoad)
+}
+
+/**
+ * What to read on the lead's instrument for a percentage of the rated load: exact, rounded down to what
+ * can be read, and the window of the stage's tolerance, whose top ends at the lowest rating in the train.
+ */
+export function stageTarget(opened: Opened, percent: number): StageTarget | null {
+  const { limits } = opened.protocol.content
+  const lower = limits.stageLowerPercent / 100
+  const upper = limits.stageUpperPercent / 100
+  const force = stageForce(opened, percent)
+  const cap = lowestLimit(opened.press)?.force ?? Number.POSITIVE_INFINITY
+  const instrument = leadInstrument(opened)
+  if (!instrument || instrument.details.kind === 'indicator') return null
+  const { increment } = instrument.details
+  const unit = increment.unit
+  const step = toSI(increment)
+  const decimals = decimalsOf(increment)
+  const text = (si: number): string => toUnit(si, unit).toFixed(decimals)
+  const down = (si: number): number => Math.floor(si / step + 1e-9) * step
+  const up = (si: number): number => Math.ceil(si / step - 1e-9) * step
+  if (instrument.details.kind === 'load-cell') {
+    const from = up(force * (1 - lower))
+    const to = down(Math.min(force * (1 + upper), cap))
+    const readable = down(force)
+    return {
+      percent,
+      force,
+      exactText: text(force),
+      text: text(readable),
+      unit,
+      readable,
+      readableForce: readable,
+      window: { from, to, fromText: text(from), toText: text(to) },
+      belowTolerance: readable < force * (1 - lower),
+      sentence: null,
+    }
+  }
+  const rams = circuits(opened)[0]?.rams ?? []
+  const share = circuits(opened).length > 1 ? 1 / circuits(opened).length : 1
+  const pressureFor = (total: number): number => targetPressure({ force: total * share, rams })
+  const target = readableTarget({
+    force: force * share,
+    rams,
+    increment: step,
+    lowerTolerance: lower,
+    upperTolerance: upper,
+    capPressure: pressureFor(cap),
+  })
+  const from = up(pressureFor(force * (1 - lower)))
+  const to = down(pressureFor(Math.min(force * (1 + upper), cap)))
+  return {
+    percent,
+    force,
+    exactText: text(target.exact),
+    text: text(target.readable),
+    unit,
+    readable: target.readable,
+    readableForce: ramForce(rams.map((ram) => ({ ram, pressure: target.readable, rodPressure: 0 }))) / share,
+    window: { from, to, fromText: text(from), toText: text(to) },
+    belowTolerance: target.belowTolerance,
+    sentence: target.sentence,
+  }
+}
