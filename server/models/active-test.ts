@@ -11,9 +11,9 @@ export class ActiveTest extends Model<InferAttributes<ActiveTest>, InferCreation
 export function initActiveTest(sequelize: Sequelize): void {
   ActiveTest.init(
     {
-      pressId: { ...idColumn, primaryKey: true },
-      shopId: idColumn,
-      proofTestId: idColumn,
+      pressId: { ...idColumn(), primaryKey: true },
+      shopId: idColumn(),
+      proofTestId: idColumn(),
     },
     { sequelize, tableName: 'active_tests' },
   )

@@ -19,17 +19,17 @@ export class Calibration extends Model<InferAttributes<Calibration>, InferCreati
 export function initCalibration(sequelize: Sequelize): void {
   Calibration.init(
     {
-      id: { ...idColumn, primaryKey: true },
-      shopId: idColumn,
-      instrumentId: idColumn,
-      calibratedOn: dayColumn,
-      dueOn: dayColumn,
-      certificate: textColumn,
-      comparedWith: textColumn,
-      result: textColumn,
-      details: jsonColumn,
-      createdBy: idColumn,
-      createdAt: timeColumn,
+      id: { ...idColumn(), primaryKey: true },
+      shopId: idColumn(),
+      instrumentId: idColumn(),
+      calibratedOn: dayColumn(),
+      dueOn: dayColumn(),
+      certificate: textColumn(),
+      comparedWith: textColumn(),
+      result: textColumn(),
+      details: jsonColumn(),
+      createdBy: idColumn(),
+      createdAt: timeColumn(),
     },
     { sequelize, tableName: 'calibrations' },
   )

@@ -16,14 +16,14 @@ export class Instrument extends Model<InferAttributes<Instrument>, InferCreation
 export function initInstrument(sequelize: Sequelize): void {
   Instrument.init(
     {
-      id: { ...idColumn, primaryKey: true },
-      shopId: idColumn,
-      code: textColumn,
-      kind: textColumn,
-      description: textColumn,
-      details: jsonColumn,
-      retiredAt: optionalTimeColumn,
-      createdAt: timeColumn,
+      id: { ...idColumn(), primaryKey: true },
+      shopId: idColumn(),
+      code: textColumn(),
+      kind: textColumn(),
+      description: textColumn(),
+      details: jsonColumn(),
+      retiredAt: optionalTimeColumn(),
+      createdAt: timeColumn(),
     },
     { sequelize, tableName: 'instruments' },
   )

@@ -14,12 +14,12 @@ export class Ledger extends Model<InferAttributes<Ledger>, InferCreationAttribut
 export function initLedger(sequelize: Sequelize): void {
   Ledger.init(
     {
-      id: { ...idColumn, primaryKey: true },
-      shopId: idColumn,
-      subject: textColumn,
-      headSeq: countColumn,
-      headHash: hashColumn,
-      createdAt: timeColumn,
+      id: { ...idColumn(), primaryKey: true },
+      shopId: idColumn(),
+      subject: textColumn(),
+      headSeq: countColumn(),
+      headHash: hashColumn(),
+      createdAt: timeColumn(),
     },
     { sequelize, tableName: 'ledgers' },
   )

@@ -14,11 +14,11 @@ export class Membership extends Model<InferAttributes<Membership>, InferCreation
 export function initMembership(sequelize: Sequelize): void {
   Membership.init(
     {
-      shopId: { ...idColumn, primaryKey: true },
-      userId: { ...idColumn, primaryKey: true },
-      role: textColumn,
-      createdAt: timeColumn,
-      endedAt: optionalTimeColumn,
+      shopId: { ...idColumn(), primaryKey: true },
+      userId: { ...idColumn(), primaryKey: true },
+      role: textColumn(),
+      createdAt: timeColumn(),
+      endedAt: optionalTimeColumn(),
     },
     { sequelize, tableName: 'memberships' },
   )

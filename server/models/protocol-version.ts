@@ -14,12 +14,12 @@ export class ProtocolVersion extends Model<InferAttributes<ProtocolVersion>, Inf
 export function initProtocolVersion(sequelize: Sequelize): void {
   ProtocolVersion.init(
     {
-      shopId: idColumn,
-      protocolId: { ...idColumn, primaryKey: true },
-      version: { ...countColumn, primaryKey: true },
-      content: jsonColumn,
-      createdBy: idColumn,
-      createdAt: timeColumn,
+      shopId: idColumn(),
+      protocolId: { ...idColumn(), primaryKey: true },
+      version: { ...countColumn(), primaryKey: true },
+      content: jsonColumn(),
+      createdBy: idColumn(),
+      createdAt: timeColumn(),
     },
     { sequelize, tableName: 'protocol_versions' },
   )

@@ -14,12 +14,12 @@ export class Protocol extends Model<InferAttributes<Protocol>, InferCreationAttr
 export function initProtocol(sequelize: Sequelize): void {
   Protocol.init(
     {
-      id: { ...idColumn, primaryKey: true },
-      shopId: idColumn,
-      name: textColumn,
-      currentVersion: countColumn,
-      archivedAt: optionalTimeColumn,
-      createdAt: timeColumn,
+      id: { ...idColumn(), primaryKey: true },
+      shopId: idColumn(),
+      name: textColumn(),
+      currentVersion: countColumn(),
+      archivedAt: optionalTimeColumn(),
+      createdAt: timeColumn(),
     },
     { sequelize, tableName: 'protocols' },
   )

@@ -17,15 +17,15 @@ export class Seal extends Model<InferAttributes<Seal>, InferCreationAttributes<S
 export function initSeal(sequelize: Sequelize): void {
   Seal.init(
     {
-      id: { ...idColumn, primaryKey: true },
-      shopId: idColumn,
-      ledgerId: idColumn,
-      seq: countColumn,
-      headHash: hashColumn,
-      kid: textColumn,
-      signature: textColumn,
-      entryId: idColumn,
-      sealedAt: timeColumn,
+      id: { ...idColumn(), primaryKey: true },
+      shopId: idColumn(),
+      ledgerId: idColumn(),
+      seq: countColumn(),
+      headHash: hashColumn(),
+      kid: textColumn(),
+      signature: textColumn(),
+      entryId: idColumn(),
+      sealedAt: timeColumn(),
     },
     { sequelize, tableName: 'seals' },
   )

@@ -15,13 +15,13 @@ export class Session extends Model<InferAttributes<Session>, InferCreationAttrib
 export function initSession(sequelize: Sequelize): void {
   Session.init(
     {
-      id: { ...idColumn, primaryKey: true },
-      userId: idColumn,
-      userAgent: textColumn,
-      createdAt: timeColumn,
-      lastSeenAt: timeColumn,
-      expiresAt: timeColumn,
-      endedAt: optionalTimeColumn,
+      id: { ...idColumn(), primaryKey: true },
+      userId: idColumn(),
+      userAgent: textColumn(),
+      createdAt: timeColumn(),
+      lastSeenAt: timeColumn(),
+      expiresAt: timeColumn(),
+      endedAt: optionalTimeColumn(),
     },
     { sequelize, tableName: 'sessions' },
   )

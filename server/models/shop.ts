@@ -16,14 +16,14 @@ export class Shop extends Model<InferAttributes<Shop>, InferCreationAttributes<S
 export function initShop(sequelize: Sequelize): void {
   Shop.init(
     {
-      id: { ...idColumn, primaryKey: true },
-      name: textColumn,
-      forceUnit: textColumn,
-      pressureUnit: textColumn,
-      lengthUnit: textColumn,
-      buildPauseDays: countColumn,
-      walkDownHours: countColumn,
-      createdAt: timeColumn,
+      id: { ...idColumn(), primaryKey: true },
+      name: textColumn(),
+      forceUnit: textColumn(),
+      pressureUnit: textColumn(),
+      lengthUnit: textColumn(),
+      buildPauseDays: countColumn(),
+      walkDownHours: countColumn(),
+      createdAt: timeColumn(),
     },
     { sequelize, tableName: 'shops' },
   )

@@ -13,11 +13,11 @@ export class User extends Model<InferAttributes<User>, InferCreationAttributes<U
 export function initUser(sequelize: Sequelize): void {
   User.init(
     {
-      id: { ...idColumn, primaryKey: true },
-      email: textColumn,
-      name: textColumn,
-      passwordHash: textColumn,
-      createdAt: timeColumn,
+      id: { ...idColumn(), primaryKey: true },
+      email: textColumn(),
+      name: textColumn(),
+      passwordHash: textColumn(),
+      createdAt: timeColumn(),
     },
     { sequelize, tableName: 'users' },
   )

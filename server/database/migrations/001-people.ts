@@ -54,7 +54,8 @@ export const people = tables(
       attempted_at DATETIME(3) NOT NULL,
       PRIMARY KEY (id),
       KEY sign_in_attempts_account (account_key, attempted_at),
-      KEY sign_in_attempts_address (address, attempted_at)
+      KEY sign_in_attempts_address (address, attempted_at),
+      KEY sign_in_attempts_time (attempted_at)
     ) ${tableOptions}`,
   ],
   ['shops', 'users', 'memberships', 'sessions', 'sign_in_attempts'],

@@ -1,0 +1,72 @@
+import express from 'express'
+import type { Express } from 'express'
+import helmet from 'helmet'
+import type { Config } from './config'
+import type { AppContext } from './context'
+import { problemHandler, unknownEndpoint } from './middleware/problem-handler'
+import { sameOrigin } from './middleware/same-origin'
+import { healthRoutes } from './routes/health'
+import { peopleRoutes } from './routes/people'
+import { sessionRoutes } from './routes/session'
+import { shopRoutes } from './routes/shops'
+
+/** A batch of entries fits; a file doesn't belong in JSON. */
+const longestBody = '2mb'
+
+function securityHeaders(config: Config) {
+  const isHttps = config.publicUrl?.startsWith('https:') ?? false
+  return helmet({
+    // In development Vite puts a script of its own into the page.
+    contentSecurityPolicy:
+      config.environment === 'development'
+        ? false
+        : {
+            useDefaults: false,
+            directives: {
+              defaultSrc: ["'self'"],
+              baseUri: ["'self'"],
+              formAction: ["'self'"],
+              frameAncestors: ["'none'"],
+              objectSrc: ["'none'"],
+              scriptSrc: ["'self'"],
+              scriptSrcAttr: ["'none'"],
+              styleSrc: ["'self'"],
+              // Charts and drawings place their parts by style attributes.
+              styleSrcAttr: ["'unsafe-inline'"],
+              imgSrc: ["'self'", 'data:', 'blob:'],
+              fontSrc: ["'self'", 'data:'],
+              ...(isHttps ? { upgradeInsecureRequests: [] } : {}),
+            },
+          },
+    strictTransportSecurity: isHttps,
+  })
+}
+
+function api(context: AppContext) {
+  const router = express.Router()
+  router.use((_request, response, next) => {
+    response.set('Cache-Control', 'no-store')
+    next()
+  })
+  router.use(sameOrigin(context.config))
+  router.use(express.json({ limit: longestBody }))
+  router.use(healthRoutes(context))
+  router.use(sessionRoutes(context))
+  router.use(shopRoutes(context))
+  router.use(peopleRoutes(context))
+  router.use(unknownEndpoint)
+  return router
+}
+
+/** The whole server but its socket; `client` adds the pages. */
+export function createApp(context: AppContext, client?: (app: Express) => void): Express {
+  const app = express()
+  app.disable('x-powered-by')
+  app.set('trust proxy', context.config.trustProxy)
+  app.use(securityHeaders(context.config))
+  app.use('/api', api(context))
+  client?.(app)
+  app.use(unknownEndpoint)
+  app.use(problemHandler(context.logger))
+  return app
+}
