@@ -1,120 +1,17 @@
 import { arrowHead, circlePath, hatch, pathThrough } from './drawing'
 import type { Drawing, DrawingItem, InkName, Point, TextItem } from './drawing'
+import { bandEdges, cutAtFrame, lineFrame } from './line-frame'
+import type { LineFrame } from './line-frame'
 import { layOutNotes } from './line-notes'
 import type { PlacedNote } from './line-notes'
-import { axisTicks, multiples, tidy } from './ticks'
-import type { AxisTicks } from './ticks'
+import type { LineChartSpec, LineNote } from './line-spec'
+import { multiples } from './ticks'
 
-/** One line of load across the chart. `percent` is of rated load; `load` is shown where the chart labels its stages. */
-export interface LineStage {
-  percent: number
-  label: string
-  load?: string
-}
+export { loadScale, topOfScale } from './line-frame'
+export type { LoadScale } from './line-frame'
+export type { LineChartSpec, LineNote, LinePoint, LinePrediction, LineStage } from './line-spec'
 
-/**
- * One reading. `x` is deflection in the chart's display unit, `y` load in percent of rated load; `ux` and `uy` are
- * their uncertainties in the same. `mark: 'stop'` says that the step arriving here is beyond its limit.
- */
-export interface LinePoint {
-  x: number
-  y: number
-  ux: number
-  uy: number
-  mark?: 'stop' | 'wait'
-}
-
-/** What the next reading should be: from–to in deflection, at load `y` (percent). */
-export interface LinePrediction {
-  y: number
-  from: number
-  to: number
-  /** The figures, for example "1.25 to 1.44 mm". */
-  text: string
-  /** The words above them, for example "Next: expect". */
-  caption?: string
-  /** Chalk while it is the next thing to read, scribe once it has been read. */
-  tone?: 'chalk' | 'scribe'
-}
-
-export interface LineNote {
-  at: { x: number; y: number }
-  tone: 'scribe' | 'chalk' | 'stop'
-  /** The first line is the statement, the others are its reasons. */
-  lines: string[]
-  mark?: 'wait' | 'stop'
-}
-
-export interface LineChartSpec {
-  width: number
-  height: number
-  stages: LineStage[]
-  points: LinePoint[]
-  /** Deflection = intercept + slope × percent. */
-  fit: { slope: number; intercept: number } | null
-  /** Expected deflection at 100 %, low and high. */
-  band: { low: number; high: number } | null
-  prediction: LinePrediction | null
-  /** At most three are drawn, the prediction's own included. */
-  notes: LineNote[]
-  /** Set or release reading on the axis, in deflection. */
-  setPoint?: { x: number; ux: number }
-  /** Readings on the way down or of a repeat climb, drawn as a dotted line. */
-  comparison?: { x: number; y: number }[]
-  xLabel: string
-  xUnit: string
-  /** Deflection the axis has to reach; rounded up to a labelled step. */
-  xMax: number
-  /** Percent at the top of the shared scale. */
-  yMax: number
-  title?: string
-  aside?: string
-  /** `beside` shares the ladder's scale and leaves the stages to it; `alone` labels its own. */
-  setting?: 'beside' | 'alone'
-}
-
-/** Where the scale of ladder and line starts and ends inside a panel of a given height (px from its top). */
-export function loadScale(height: number, yMax: number): { zero: number; top: number; at: (percent: number) => number } {
-  const roomy = height >= 560
-  const top = roomy ? 80 : Math.max(56, height * 0.14)
-  const zero = height - (roomy ? 84 : 72)
-  return { zero, top, at: (percent) => zero - ((zero - top) * percent) / yMax }
-}
-
-/** Pixel frame of the plot. */
-export interface LineFrame {
-  left: number
-  right: number
-  zero: number
-  top: number
-  /** Where lines that run on past the last stage are cut. */
-  ceiling: number
-  axis: AxisTicks
-  x: (deflection: number) => number
-  y: (percent: number) => number
-}
-
-/** The frame in px of a chart; the axis takes in every point, the band at the top and the prediction. */
-export function lineFrame(spec: LineChartSpec): LineFrame {
-  const alone = spec.setting === 'alone'
-  const narrow = spec.width < 360
-  const scale = alone ? { zero: spec.height - 62, top: 66 } : loadScale(spec.height, spec.yMax)
-  const left = alone ? Math.min(205, spec.width * 0.42) : narrow ? 35 : 40
-  const right = spec.width - (alone ? 32 : narrow ? 35 : 40)
-  const axis = axisTicks(spec.xMax, right - left < 200 ? 3 : 4)
-  return {
-    left,
-    right,
-    zero: scale.zero,
-    top: scale.top,
-    ceiling: scale.top - (alone ? 14 : 20),
-    axis,
-    x: (deflection) => left + ((right - left) * deflection) / axis.max,
-    y: (percent) => scale.zero - ((scale.zero - scale.top) * percent) / spec.yMax,
-  }
-}
-
-export function textItem(
+function textItem(
   x: number,
   y: number,
   text: string,
@@ -130,17 +27,6 @@ function strokeItem(d: string, stroke: InkName, width: number, more: { dash?: st
 
 function fillItem(d: string, fill: InkName): DrawingItem {
   return { kind: 'path', d, stroke: null, width: 0, fill }
-}
-
-/** Deflection a straight line has at a load; both the fit and the edges of the band are such lines. */
-function cutAtFrame(frame: LineFrame, intercept: number, slope: number): [Point, Point] {
-  const yTop = ((frame.zero - frame.ceiling) / (frame.zero - frame.y(1))) * 1
-  const end = { x: frame.x(intercept + slope * yTop), y: frame.ceiling }
-  const start = { x: frame.x(Math.max(0, intercept)), y: frame.y(intercept < 0 && slope > 0 ? -intercept / slope : 0) }
-  const limit = frame.right + 30
-  if (end.x <= limit) return [start, end]
-  const share = (limit - start.x) / (end.x - start.x)
-  return [start, { x: limit, y: start.y + (end.y - start.y) * share }]
 }
 
 function axes(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
@@ -186,22 +72,14 @@ function stageGuides(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
   return items
 }
 
-/** Edges of the expected band (px): the low one, stiffer, lies left. */
-export function bandEdges(spec: LineChartSpec, frame: LineFrame): { low: [Point, Point]; high: [Point, Point] } | null {
-  if (spec.band === null) return null
-  return {
-    low: cutAtFrame(frame, 0, spec.band.low / 100),
-    high: cutAtFrame(frame, 0, spec.band.high / 100),
-  }
-}
-
 function band(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
   const edges = bandEdges(spec, frame)
   if (edges === null) return []
   const [origin, lowEnd] = edges.low
   const highEnd = edges.high[1]
+  const corner = highEnd.y > lowEnd.y ? [{ x: highEnd.x, y: lowEnd.y }] : []
   return [
-    strokeItem(hatch([origin, lowEnd, highEnd], 10), 'ghost', 1, { opacity: 0.75 }),
+    strokeItem(hatch([origin, lowEnd, ...corner, highEnd], 10), 'ghost', 1, { opacity: 0.75 }),
     strokeItem(pathThrough(edges.low), 'faint-scribe', 1),
     strokeItem(pathThrough(edges.high), 'faint-scribe', 1),
   ]
@@ -358,9 +236,4 @@ export function lineDrawing(spec: LineChartSpec): Drawing {
   items.push(...line(spec, frame), ...prediction(spec, frame), ...readings(spec, frame), ...stopMarks(spec, frame))
   for (const note of layOutNotes(spec, frame)) items.push(...noteItems(note))
   return { width: spec.width, height: spec.height, items }
-}
-
-/** Top of the shared scale for given stages: the highest one, 100 % at the least. */
-export function topOfScale(stages: readonly { percent: number }[]): number {
-  return tidy(Math.max(100, ...stages.map((stage) => stage.percent)))
 }

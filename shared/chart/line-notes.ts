@@ -1,7 +1,8 @@
 import { estimateTextWidth } from './drawing'
 import type { Point } from './drawing'
-import { bandEdges } from './line-geometry'
-import type { LineChartSpec, LineFrame, LineNote } from './line-geometry'
+import { bandEdges } from './line-frame'
+import type { LineFrame } from './line-frame'
+import type { LineChartSpec, LineNote } from './line-spec'
 
 interface Row {
   x: number

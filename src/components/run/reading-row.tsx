@@ -1,0 +1,171 @@
+import { useEffect, useId, useRef } from 'react'
+import type { KeyboardEvent, ReactElement } from 'react'
+
+export interface ReadingField {
+  id: string
+  label: string
+  unit: string
+  /** Exactly what was typed. */
+  text: string
+  /** A sentence that says what is wrong and what to do. */
+  error?: string
+}
+
+interface ReadingRowProps {
+  /** The moment the row belongs to, as it is to be shown; null before it was marked. */
+  mark: string | null
+  onMark: () => void
+  fields: ReadingField[]
+  focusedId: string | null
+  onFocus: (id: string) => void
+  onChange: (id: string, text: string) => void
+  /** Enter in a field: commits it; `last` when no field comes after. Focus then moves on by itself. */
+  onCommit?: (id: string, last: boolean) => void
+  /** Shows under "Mark" before the moment was marked. */
+  markNote?: string
+  /** True for a finger: the system's keyboard stays away and the program's own keys are used. */
+  ownKeys?: boolean
+}
+
+/** True where the main pointer is a finger. */
+export function hasCoarsePointer(): boolean {
+  return typeof window !== 'undefined' && typeof window.matchMedia === 'function' && window.matchMedia('(pointer: coarse)').matches
+}
+
+/** A centre punch: what marks a place, or a moment. */
+function PunchMark(): ReactElement {
+  return (
+    <svg aria-hidden viewBox="0 0 16 24" width={16} height={24} className="shrink-0">
+      <path d="M0 1H16L9 10V23H7V10Z" fill="currentColor" />
+    </svg>
+  )
+}
+
+function MarkPlate({ mark, onMark, note }: { mark: string | null; onMark: () => void; note: string | undefined }): ReactElement {
+  if (mark === null) {
+    return (
+      <button
+        type="button"
+        onClick={onMark}
+        className="flex h-16 items-center gap-3 rounded-field border-2 border-on-chalk bg-chalk px-[10px] text-left text-on-chalk"
+      >
+        <PunchMark />
+        <span>
+          <span className="block text-20 font-semibold leading-[22px]">Mark</span>
+          {note !== undefined && <span className="block font-condensed text-16 leading-[18px]">{note}</span>}
+        </span>
+      </button>
+    )
+  }
+  return (
+    <div className="flex h-16 items-center gap-3 rounded-field bg-ink px-[10px] text-sheet" data-marked>
+      <PunchMark />
+      <span>
+        <span className="block text-16 leading-[20px]">Marked</span>
+        <span className="block text-20 font-semibold leading-[23px]">{mark}</span>
+      </span>
+    </div>
+  )
+}
+
+interface FieldProps {
+  field: ReadingField
+  focused: boolean
+  ownKeys: boolean
+  describedBy: string
+  bind: (element: HTMLInputElement | null) => void
+  onFocus: () => void
+  onChange: (text: string) => void
+  onEnter: () => void
+}
+
+function Field(props: FieldProps): ReactElement {
+  const { field, focused } = props
+  const id = useId()
+  const edge =
+    field.error !== undefined ? 'border-2 border-stop-ink' : focused ? 'border-2 border-ink' : 'border border-rule'
+  return (
+    <div className="min-w-0">
+      <label htmlFor={id} className="mb-[5px] block truncate text-16 leading-[24px]">
+        <span className="font-medium text-ink">{field.label}</span>
+        <span className="ml-2 text-graphite">{field.unit}</span>
+      </label>
+      <input
+        ref={props.bind}
+        id={id}
+        type="text"
+        inputMode={props.ownKeys ? 'none' : 'decimal'}
+        autoComplete="off"
+        enterKeyHint="next"
+        spellCheck={false}
+        value={field.text}
+        aria-invalid={field.error !== undefined}
+        aria-describedby={field.error === undefined ? undefined : props.describedBy}
+        onFocus={props.onFocus}
+        onChange={(event) => props.onChange(event.target.value)}
+        onKeyDown={(event: KeyboardEvent) => {
+          if (event.key !== 'Enter' || event.nativeEvent.isComposing) return
+          event.preventDefault()
+          props.onEnter()
+        }}
+        className={`block h-16 w-full rounded-field bg-field px-[10px] text-34 font-medium text-ink caret-ink ${edge} ${focused ? 'focus-ring' : ''}`}
+      />
+    </div>
+  )
+}
+
+/** Mark, then one row of readings as they are read. Nothing is filled in beforehand; all stays open until the row is entered. */
+export function ReadingRow(props: ReadingRowProps): ReactElement {
+  const { fields, focusedId, ownKeys = hasCoarsePointer() } = props
+  const inputs = useRef(new Map<string, HTMLInputElement>())
+  const errorId = useId()
+  useEffect(() => {
+    if (focusedId === null) return
+    const wanted = inputs.current.get(focusedId)
+    if (wanted !== undefined && wanted !== document.activeElement) wanted.focus()
+  }, [focusedId])
+  const wrong = fields.filter((field) => field.error !== undefined)
+  const enter = (index: number): void => {
+    const field = fields[index]
+    if (field === undefined) return
+    const next = fields[index + 1]
+    props.onCommit?.(field.id, next === undefined)
+    if (next !== undefined) inputs.current.get(next.id)?.focus()
+  }
+  const columns = `repeat(${Math.min(fields.length, 4)}, minmax(0, 1fr))`
+  return (
+    <div>
+      <div className="flex flex-wrap gap-2 tablet:flex-nowrap">
+        <div className="w-full shrink-0 tablet:w-[132px]">
+          <p className="mb-[5px] hidden text-16 font-medium leading-[24px] tablet:block">This row</p>
+          <MarkPlate mark={props.mark} onMark={props.onMark} note={props.markNote} />
+        </div>
+        <div className="grid min-w-0 flex-1 gap-2" style={{ gridTemplateColumns: columns }}>
+          {fields.map((field, index) => (
+            <Field
+              key={field.id}
+              field={field}
+              focused={field.id === focusedId}
+              ownKeys={ownKeys}
+              describedBy={`${errorId}-${field.id}`}
+              bind={(element) => {
+                if (element === null) inputs.current.delete(field.id)
+                else inputs.current.set(field.id, element)
+              }}
+              onFocus={() => props.onFocus(field.id)}
+              onChange={(text) => props.onChange(field.id, text)}
+              onEnter={() => enter(index)}
+            />
+          ))}
+        </div>
+      </div>
+      <div aria-live="polite">
+        {wrong.map((field) => (
+          <p key={field.id} id={`${errorId}-${field.id}`} className="mt-2 text-16 font-medium text-stop-ink">
+            {field.label}: {field.error}
+          </p>
+        ))}
+      </div>
+    </div>
+  )
+}
