@@ -105,7 +105,7 @@ function stageBegun(state: ProofTestState, at: Position, entry: LedgerEntry): Pr
     const attempt: AttemptState = { begunAt: entry.observedAt, rows: [], topUps: 0, independent: null, decided: null }
     return { ...climb, stages: replaceAt(climb.stages, at.stage, { ...stage, attempts: [...stage.attempts, attempt] }) }
   })
-  return { ...begun, position: at, loaded: state.loaded ?? { since: entry.observedAt, by: 'stage' } }
+  return { ...withClimb(begun, at.leg, at.climb, (climb) => ({ ...climb, released: null })), position: at, loaded: state.loaded ?? { since: entry.observedAt, by: 'stage' } }
 }
 
 function addStageRow(state: ProofTestState, at: Position, row: StageRow): ProofTestState {
@@ -356,7 +356,7 @@ const handlers: Handlers = {
   corrected,
   concluded: (state, payload, entry) => ({
     ...state,
-    conclusion: { ...payload, at: entry.observedAt, by: entry.authorId },
+    conclusion: { ...payload, seq: entry.seq, at: entry.observedAt, by: entry.authorId },
     signed: null,
     countersigned: null,
   }),
@@ -365,7 +365,7 @@ const handlers: Handlers = {
   declined: (state, payload, entry) => ({
     ...state,
     signed: null,
-    declined: [...state.declined, { why: payload.why, by: payload.personId, printedName: payload.printedName, at: entry.observedAt }],
+    declined: [...state.declined, { seq: entry.seq, why: payload.why, by: payload.personId, printedName: payload.printedName, at: entry.observedAt }],
   }),
   reviewed: (state) => state,
 }

@@ -41,8 +41,8 @@ function uncertaintyOf(
     const increment = toSI(details.increment)
     return [{ sensitivity, increment, errorLimit: details.errorLimit ? toSI(details.errorLimit) : increment }]
   })
-  const reading = deflectionUncertainty({ terms })
-  const withDatum = deflectionUncertainty({ terms: [...terms, ...terms] })
+  const reading = deflectionUncertainty({ increment: 0, terms })
+  const withDatum = deflectionUncertainty({ increment: 0, terms: [...terms, ...terms] })
   return { u: withDatum.u, U: withDatum.U, uReading: reading.u, increment: Math.max(...terms.map((term) => term.increment), 0) }
 }
 

@@ -1,13 +1,13 @@
 import { judge, type Verdict } from '../statistics/decision-rule'
-import { creep, pressureLoss } from '../statistics/hold'
+import { creep, creepLimit, creepUncertainty, pressureLoss, pressureLossUncertainty } from '../statistics/hold'
 import { fitLine, predictAt, type LineFit } from '../statistics/line'
-import { setLimit } from '../statistics/permanent-set'
+import { setIsResolved, setLimit } from '../statistics/permanent-set'
 import { stepStiffness, type StiffnessStep } from '../statistics/softening'
 import { lowestLimit } from '../press/ratings'
 import { decimalsOf, formatForce, formatQuantity, formatValue, toSI, toUnit } from '../units'
 import { deflectionsOf, NET, type DeflectionFigure } from './deflection'
 import type { Opened, Position } from './entries'
-import { forceOf, instrumentOf, stageTarget, type ForceFigure, type StageTarget } from './force'
+import { forceOf, instrumentOf, leadInstrument, stageTarget, type ForceFigure, type StageTarget } from './force'
 import type { AttemptState, ClimbState, ProofTestState, Row, StageRow } from './state'
 
 export type CriterionVerdict = Verdict | 'wait' | 'not-read'
@@ -120,9 +120,15 @@ function pointOf(figures: RowFigures | null, id: string): Point | null {
   }
 }
 
+/** Whether a line can be laid through the points at all: two or more, at different forces. */
+function spread(points: readonly Point[]): boolean {
+  const forces = points.map((point) => point.force)
+  return points.length >= 2 && Math.max(...forces) - Math.min(...forces) > 1
+}
+
 /** The prediction for a force, from the datum and the stages before (DOMAIN 3.5). Null below two points. */
 export function predict(opened: Opened, points: readonly Point[], force: number): Prediction | null {
-  if (points.length < 2) return null
+  if (!spread(points)) return null
   const fit = fitLine(points.map((point) => ({ x: point.force, y: point.deflection })))
   const deflection = fit.intercept + fit.slope * force
   const reading = (point: Point): number => Math.hypot(point.uDeflection, fit.slope * point.uForce)
@@ -135,8 +141,8 @@ export function predict(opened: Opened, points: readonly Point[], force: number)
   const last = points.at(-1)
   const own = 2 * Math.sqrt(variance + (last ? reading(last) ** 2 : 0))
   const allowance = (opened.protocol.content.predictionAllowancePercent / 100) * Math.abs(deflection)
-  const spread = Math.hypot(own, allowance)
-  const halfWidth = fit.dof >= 3 ? Math.max(spread, predictAt(fit, force).halfWidthPrediction) : spread
+  const width = Math.hypot(own, allowance)
+  const halfWidth = fit.dof >= 3 ? Math.max(width, predictAt(fit, force).halfWidthPrediction) : width
   return { force, deflection, halfWidth, from: deflection - halfWidth, to: deflection + halfWidth }
 }
 
@@ -231,6 +237,11 @@ function softeningCriterion(
   ]
 }
 
+function lossIncrement(opened: Opened): number {
+  const details = leadInstrument(opened)?.details
+  return details && details.kind !== 'indicator' ? toSI(details.increment) : 0
+}
+
 function heldCriteria(
   opened: Opened,
   rows: readonly RowFigures[],
@@ -270,23 +281,26 @@ function heldCriteria(
       },
     ]
   }
-  const loss = pressureLoss(readings)
-  const base = readings[0]?.pressure ?? 1
-  const uLoss = start.force ? (2 * Math.SQRT2 * start.force.uIndependent) / Math.max(start.force.force, 1) : 0
-  const lossVerdict = base > 0 ? judge({ value: loss, U: uLoss, limit: { max: lossLimit }, rule: decisionRule }) : 'not-read'
+  const increment = lossIncrement(opened)
+  const readable = (readings[0]?.pressure ?? 0) > 0
+  const loss = readable ? pressureLoss(readings) : null
+  const uLoss = readable ? pressureLossUncertainty(readings, increment) : null
+  const lossVerdict = loss !== null && uLoss !== null ? judge({ value: loss, U: uLoss, limit: { max: lossLimit }, rule: decisionRule }) : 'not-read'
   const creeps = start.deflections.flatMap((first): Criterion[] => {
     const last = end.deflections.find((figure) => figure.id === first.id)
     if (!last || !start.force || !end.force) return []
     const leads = first.id === start.lead?.id
+    const secant = start.force.force / first.deflection
+    const own = leads ? stiffness : Number.isFinite(secant) && secant > 0 ? secant : Number.POSITIVE_INFINITY
     const value = creep({
       deflectionStart: first.deflection,
       deflectionEnd: last.deflection,
       forceStart: start.force.force,
       forceEnd: end.force.force,
-      stiffness: leads ? stiffness : first.deflection === 0 ? Number.POSITIVE_INFINITY : start.force.force / first.deflection,
+      stiffness: own,
     })
-    const limit = Math.max((limits.creepPercent / 100) * Math.abs(first.deflection), 2 * first.increment)
-    const U = 2 * Math.SQRT2 * first.uReading
+    const limit = creepLimit({ fraction: limits.creepPercent / 100, stageDeflection: Math.abs(first.deflection), increment: first.increment })
+    const U = creepUncertainty({ uDeflection: first.uReading, uForce: start.force.uIndependent, stiffness: own })
     return [
       {
         id: leads ? 'creep' : `creep-${first.id}`,
@@ -303,7 +317,7 @@ function heldCriteria(
       },
     ]
   })
-  return [{ ...lossBase, verdict: lossVerdict, value: loss, U: uLoss, reading: percentText(loss, 1) }, ...creeps]
+  return [{ ...lossBase, verdict: lossVerdict, value: loss, U: uLoss, reading: loss === null ? '—' : percentText(loss, 1) }, ...creeps]
 }
 
 function suggest(
@@ -400,7 +414,7 @@ export function evaluateClimb(state: ProofTestState, legIndex: number, climbInde
     })
   })
   const leadPoints = series.get(leadId) ?? []
-  const fit = leadPoints.length >= 3 ? fitLine(leadPoints.map((point) => ({ x: point.force, y: point.deflection }))) : null
+  const fit = leadPoints.length >= 3 && spread(leadPoints) ? fitLine(leadPoints.map((point) => ({ x: point.force, y: point.deflection }))) : null
   return {
     leg: legIndex,
     climb: climbIndex,
@@ -433,7 +447,7 @@ function evaluateSet(
     const shop = setLimit({ fraction: limits.setPercent / 100, fullDeflection, increment: figure.increment })
     const most = limits.mostSet ? Math.min(shop, toSI(limits.mostSet)) : shop
     const value = Math.abs(figure.deflection)
-    const seen = value > figure.U
+    const seen = setIsResolved({ set: value, U: figure.U })
     if (leads && seen) visible = true
     const again = climbIndex > 0
     const verdict = again ? (seen ? 'beyond' : 'within') : judge({ value, U: figure.U, limit: { max: most }, rule: decisionRule })

@@ -1,7 +1,6 @@
-import { clearanceLoad } from '../hydraulics/clearance'
-import { targetPressure } from '../hydraulics/target'
+import { clearanceLoad, clearancePressure } from '../hydraulics/clearance'
 import { ramInput } from '../press/ratings'
-import { storedEnergy } from '../structure/stored-energy'
+import { storedEnergy, type StoredEnergy } from '../structure/stored-energy'
 import { decimalsOf, FORCE_DECIMALS, toSI, toUnit, type ForceUnit, type PressureUnit } from '../units'
 import { evaluateClimb, type ClimbEvaluation, type Criterion, type StageEvaluation } from './evaluate-climb'
 import type { Opened } from './entries'
@@ -27,8 +26,8 @@ export interface TestEvaluation {
   /** Sentences that say what stands against the conclusion "accepted"; empty when nothing does. */
   against: string[]
   clearance: ClearanceFigures | null
-  /** Energy stored at full load in joules: at least this much (DOMAIN 3.11). */
-  energy: number | null
+  /** Energy stored at full load: at least this much (DOMAIN 3.11). */
+  energy: StoredEnergy | null
 }
 
 /** All climbs of a leg, evaluated in order. */
@@ -133,7 +132,7 @@ function clearanceFigures(state: ProofTestState, stages: readonly StageEvaluatio
     const step = toSI(increment)
     const share = opened.forceInstrumentIds.length > 1 ? 1 / opened.forceInstrumentIds.length : 1
     const rams = opened.press.rams.map(ramInput).slice(0, share < 1 ? 1 : undefined)
-    const pressure = Math.floor(targetPressure({ force: load * share, rams }) / step + 1e-9) * step
+    const { pressure } = clearancePressure({ load: load * share, rams, increment: step })
     gaugePressure = { text: toUnit(pressure, increment.unit).toFixed(decimalsOf(increment)), unit: increment.unit }
   }
   return { lowestForce: lowest.force, U: lowest.U, load, text, unit, gaugePressure }
@@ -188,7 +187,7 @@ export function evaluateTest(state: ProofTestState): TestEvaluation {
   ]
   const full = stages.filter((stage) => stage.percent >= 100).at(-1)
   const energy =
-    full?.start?.lead && full.start.force
+    full?.start?.lead && full.start.force && full.start.force.force >= 0
       ? storedEnergy({
           force: full.start.force.force,
           opening: Math.abs(full.start.lead.deflection),

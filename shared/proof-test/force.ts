@@ -1,7 +1,7 @@
 import { gaugeErrorLimit } from '../hydraulics/gauge'
-import { ramForce, type RamInput } from '../hydraulics/ram'
+import { deliveredAtLeast, ramForce, type RamInput } from '../hydraulics/ram'
 import { readableTarget, targetPressure } from '../hydraulics/target'
-import { forceUncertainty, loadCellUncertainty, type BudgetLine } from '../hydraulics/uncertainty'
+import { addForces, forceUncertainty, loadCellUncertainty, type BudgetLine, type ForceUncertainty } from '../hydraulics/uncertainty'
 import type { FrozenInstrument, GaugeDetails, LoadCellDetails } from '../instruments/model'
 import { lowestLimit, ramInput } from '../press/ratings'
 import { decimalsOf, parseDecimal, toSI, toUnit, type Unit } from '../units'
@@ -72,47 +72,38 @@ function valueOf(readings: readonly Reading[], id: string): number | null {
 
 /** The force a row of readings stands for, or null while a gauge of the row is missing. */
 export function forceOf(opened: Opened, readings: readonly Reading[]): ForceFigure | null {
-  const friction = 1 - opened.protocol.content.frictionPercent / 100
   const cell = loadCell(opened)
   if (cell) {
     const force = valueOf(readings, cell.instrument.id)
     if (force === null) return null
     const result = loadCellUncertainty({
-      force,
+      reading: force,
       errorLimit: (cell.cell.errorPercentOfSpan / 100) * toSI(cell.cell.fullScale),
       certificate: certificateOf(cell.instrument),
-      readableIncrement: toSI(cell.cell.increment),
+      increment: toSI(cell.cell.increment),
     })
     return { ...result, pressure: null, deliveredAtLeast: force }
   }
-  const figures: ForceFigure[] = []
+  const manifolds: ForceUncertainty[] = []
+  let pressure = 0
   for (const circuit of circuits(opened)) {
-    const pressure = valueOf(readings, circuit.instrument.id)
-    if (pressure === null) return null
-    const fullScale = toSI(circuit.gauge.fullScale)
-    const result = forceUncertainty({
-      rams: circuit.rams,
-      pressure,
-      errorLimit: gaugeErrorLimit({ accuracy: circuit.gauge.accuracy, spanMin: 0, spanMax: fullScale, reading: pressure }),
-      certificate: certificateOf(circuit.instrument),
-      readableIncrement: toSI(circuit.gauge.increment),
-    })
-    figures.push({ ...result, pressure, deliveredAtLeast: result.force * friction })
+    const read = valueOf(readings, circuit.instrument.id)
+    if (read === null) return null
+    pressure = Math.max(pressure, read)
+    manifolds.push(
+      forceUncertainty({
+        rams: circuit.rams,
+        pressure: read,
+        errorLimit: gaugeErrorLimit({ accuracy: circuit.gauge.accuracy, spanMin: 0, spanMax: toSI(circuit.gauge.fullScale), reading: read }),
+        certificate: certificateOf(circuit.instrument),
+        readableIncrement: toSI(circuit.gauge.increment),
+      }),
+    )
   }
-  return figures.length > 0 ? figures.reduce(addForces) : null
-}
-
-function addForces(a: ForceFigure, b: ForceFigure): ForceFigure {
-  const u = Math.hypot(a.u, b.u)
-  return {
-    force: a.force + b.force,
-    u,
-    U: 2 * u,
-    uIndependent: Math.hypot(a.uIndependent, b.uIndependent),
-    pressure: Math.max(a.pressure ?? 0, b.pressure ?? 0),
-    deliveredAtLeast: a.deliveredAtLeast + b.deliveredAtLeast,
-    budget: [...a.budget, ...b.budget],
-  }
+  const [only] = manifolds
+  if (!only) return null
+  const total = manifolds.length === 1 ? only : addForces(manifolds)
+  return { ...total, pressure, deliveredAtLeast: deliveredAtLeast(total.force, opened.protocol.content.frictionPercent / 100) }
 }
 
 function certificateOf(instrument: FrozenInstrument): { U: number; k: number } | undefined {

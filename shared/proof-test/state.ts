@@ -155,6 +155,7 @@ export interface ProofTestState {
   reasons: Reason[]
   irregular: Irregular[]
   conclusion: {
+    seq: number
     conclusion: Conclusion
     why: string
     at: string
@@ -164,7 +165,7 @@ export interface ProofTestState {
   } | null
   signed: (Signature & { seq: number }) | null
   countersigned: (Signature & { seq: number }) | null
-  declined: { why: string; by: string; at: string; printedName: string }[]
+  declined: { seq: number; why: string; by: string; at: string; printedName: string }[]
   /** Facts that arrived after the countersignature. */
   lateFacts: number
   /** Moments of the last entry of every device, for clocks and holds. */

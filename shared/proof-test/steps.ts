@@ -79,6 +79,15 @@ function afterClimb(state: ProofTestState, opened: Opened, leg: number, climb: n
   return { name: 'conclude' }
 }
 
+/** A climb went up to its last stage and was sent on from there; released before that, it starts again from the first stage. */
+export function climbComplete(climb: ClimbState): boolean {
+  return climb.stages.at(-1)?.attempts.at(-1)?.decided?.decision === 'go-on'
+}
+
+function nextAttempt(state: ProofTestState, at: Omit<Position, 'attempt'>): Position {
+  return { ...at, attempt: state.legs[at.leg]?.climbs[at.climb]?.stages[at.stage]?.attempts.length ?? 0 }
+}
+
 function inStage(state: ProofTestState, opened: Opened): Step | null {
   const current = currentAttempt(state)
   if (!current) return null
@@ -92,7 +101,7 @@ function inStage(state: ProofTestState, opened: Opened): Step | null {
     const next = place.stage + 1
     const nextStage = opened.protocol.content.stages[next]
     if (!nextStage) return { name: 'release', leg: place.leg, climb: place.climb }
-    return { name: 'begin-stage', at: { ...place, stage: next, attempt: 0 }, percent: nextStage.percent }
+    return { name: 'begin-stage', at: nextAttempt(state, { ...place, stage: next }), percent: nextStage.percent }
   }
   switch (evaluated.suggestion) {
     case 'stop':
@@ -111,7 +120,7 @@ export function nextStep(state: ProofTestState): Step {
   const { opened, position } = state
   if (state.countersigned) return { name: 'sealed' }
   if (state.signed) return { name: 'countersign' }
-  if (state.conclusion) return { name: state.declined.length > 0 ? 'conclude' : 'sign' }
+  if (state.conclusion) return { name: (state.declined.at(-1)?.seq ?? 0) > state.conclusion.seq ? 'conclude' : 'sign' }
   if (state.stopped) return state.loaded ? { name: 'stopped-release' } : { name: 'conclude' }
   if (!opened) return { name: 'walk-down', joint: null, remaining: 0 }
   if (!position) return beforeLoad(state) ?? { name: 'begin-leg', leg: 0 }
@@ -120,7 +129,10 @@ export function nextStep(state: ProofTestState): Step {
   if (!leg || !climb) return { name: 'begin-leg', leg: position.leg }
   const at = { leg: position.leg, climb: position.climb }
   if (climb.set.length > 0) return afterClimb(state, opened, position.leg, position.climb)
-  if (climb.released && !state.loaded) return { name: 'recovery', ...at, repeat: position.climb > 0 }
+  if (climb.released && !state.loaded) {
+    if (climbComplete(climb)) return { name: 'recovery', ...at, repeat: position.climb > 0 }
+    return { name: 'begin-stage', at: nextAttempt(state, { ...at, stage: 0 }), percent: opened.protocol.content.stages[0]?.percent ?? 0 }
+  }
   if (position.stage !== null) return inStage(state, opened) ?? { name: 'release', ...at }
   if (position.climb === 0) {
     if (!leg.seated && state.joints.some((joint) => !jointReady(joint))) return beforeLoad(state) ?? { name: 'seating', leg: position.leg }
@@ -132,5 +144,5 @@ export function nextStep(state: ProofTestState): Step {
   if (standing === 'none' || !first) return { name: 'datum', ...at }
   if (standing !== 'steady') return { name: 'datum-watch', ...at, first, drifted: standing === 'drifted' }
   const stage = opened.protocol.content.stages[0]
-  return { name: 'begin-stage', at: { ...at, stage: 0, attempt: 0 }, percent: stage?.percent ?? 0 }
+  return { name: 'begin-stage', at: nextAttempt(state, { ...at, stage: 0 }), percent: stage?.percent ?? 0 }
 }
