@@ -60,7 +60,7 @@ const config: Config = {
     fontWeight: { normal: '400', medium: '500', semibold: '600', bold: '700' },
     borderRadius: { none: '0', field: '2px', key: '3px', full: '9999px' },
     boxShadow: { none: 'none' },
-    screens: { tablet: '640px', desktop: '1024px', wide: '1280px' },
+    screens: { tablet: '720px', desktop: '1024px', wide: '1280px' },
   },
 }
 

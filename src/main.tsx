@@ -1,1 +1,23 @@
 import './index.css'
+import { QueryClientProvider } from '@tanstack/react-query'
+import { StrictMode } from 'react'
+import { createRoot } from 'react-dom/client'
+import { RouterProvider } from 'react-router-dom'
+import { sessionEnded } from './features/people/api/get-session'
+import { createQueryClient } from './lib/query-client'
+import { applyTheme, readTheme } from './lib/theme'
+import { createRouter } from './router'
+
+applyTheme(readTheme())
+
+const root = document.getElementById('root')
+if (root === null) throw new Error('The page has no element to draw into.')
+
+const client = createQueryClient(sessionEnded)
+createRoot(root).render(
+  <StrictMode>
+    <QueryClientProvider client={client}>
+      <RouterProvider router={createRouter(client)} />
+    </QueryClientProvider>
+  </StrictMode>,
+)

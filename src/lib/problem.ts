@@ -1,14 +1,6 @@
-import { z } from 'zod'
+import { problemSchema, type ProblemBody } from '#shared/api/problem'
 
-/** What the server sends when it refuses (RFC 9457); members that aren't ours are let through unread. */
-const problemSchema = z.object({
-  code: z.string(),
-  detail: z.string(),
-  fields: z.record(z.string(), z.string()).optional(),
-  rules: z.array(z.string()).optional(),
-})
-
-type Problem = z.infer<typeof problemSchema>
+type Refusal = Pick<ProblemBody, 'code' | 'detail' | 'fields' | 'rules'>
 
 /** The server answered, and its answer is no. `detail` is a sentence meant for the person. */
 export class ProblemError extends Error {
@@ -21,7 +13,7 @@ export class ProblemError extends Error {
   /** Numbers of the rules that refuse, such as `R7`. */
   readonly rules: readonly string[]
 
-  constructor(status: number, problem: Problem) {
+  constructor(status: number, problem: Refusal) {
     super(problem.detail)
     this.status = status
     this.code = problem.code

@@ -15,4 +15,4 @@ export function useMedia(query: string): boolean {
 }
 
 /** Narrower than a tablet held upright: lists become rows of two lines. */
-export const usePhone = (): boolean => useMedia('(max-width: 639.98px)')
+export const usePhone = (): boolean => useMedia('(max-width: 719.98px)')

@@ -1,0 +1,66 @@
+import type { ReactNode } from 'react'
+import { useQueryClient } from '@tanstack/react-query'
+import { useLocation, useNavigate } from 'react-router-dom'
+import { PhoneNavigation, PhoneTitleBar } from '../../../components/navigation/phone-navigation'
+import { ShopMenu, type MenuEntry } from '../../../components/navigation/shop-menu'
+import { TopNavigation } from '../../../components/navigation/top-navigation'
+import { useHere } from '../../../lib/here'
+import { paths } from '../../../paths'
+import { useSignOut } from '../api/sign-out'
+
+/** What belongs to the person and the shop: the menu on wide screens, part of "More" on the phone. */
+export function usePersonEntries(): readonly MenuEntry[] {
+  const { shop, shops } = useHere()
+  const signOut = useSignOut()
+  const client = useQueryClient()
+  const navigate = useNavigate()
+  const otherShops = shops.filter((one) => one.id !== shop.id)
+  return [
+    { label: 'Your account', to: paths.account.href() },
+    { label: 'Shop settings', to: paths.settings.href() },
+    ...otherShops.map((one) => ({ label: `Go to ${one.name}`, note: `there you are ${one.role}`, to: paths.today.href({ shop: one.id }) })),
+    {
+      label: signOut.isError ? 'Still signed in: try again' : 'Sign out',
+      note: signOut.isError ? 'The server was not reached.' : undefined,
+      act: () =>
+        signOut.mutate(undefined, {
+          onSuccess: () => {
+            client.clear()
+            void navigate(paths.signIn.href())
+          },
+        }),
+    },
+  ]
+}
+
+type SignedInFrameProps = {
+  /** On the phone's title bar, at the right of Today: the day. */
+  day: string
+  children: ReactNode
+}
+
+/** Navigation round every signed-in screen but the run and the witness's view. */
+export function SignedInFrame({ day, children }: SignedInFrameProps) {
+  const { user, shop } = useHere()
+  const entries = usePersonEntries()
+  const { pathname } = useLocation()
+  const onToday = pathname === paths.today.pattern
+  return (
+    <div className="flex min-h-dvh flex-col">
+      <a
+        href="#content"
+        className="ground-steel sr-only z-40 border-2 border-ink px-4 py-3 font-semibold focus:not-sr-only focus:absolute focus:top-2 focus:left-2"
+      >
+        Go to the content
+      </a>
+      <TopNavigation>
+        <ShopMenu shop={shop.name} person={user.name} role={shop.role} entries={entries} />
+      </TopNavigation>
+      <PhoneTitleBar title={onToday ? 'Today' : shop.name}>{onToday ? day : shop.role}</PhoneTitleBar>
+      <main id="content" tabIndex={-1} className="flex min-w-0 grow flex-col">
+        {children}
+      </main>
+      <PhoneNavigation />
+    </div>
+  )
+}

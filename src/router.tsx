@@ -1,0 +1,39 @@
+import type { QueryClient } from '@tanstack/react-query'
+import { createBrowserRouter, type RouteObject } from 'react-router-dom'
+import { NotFound, RouteError } from './components/route-error'
+import { SkeletonPage } from './components/skeleton'
+import { paths } from './paths'
+import { requireSession, SignedIn, SignedInBare } from './routes/signed-in'
+
+/** Each screen is a chunk of its own, fetched when it is opened. */
+const signedInScreens: RouteObject[] = [
+  { path: paths.today.pattern, lazy: () => import('./routes/today') },
+  { path: paths.people.pattern, lazy: () => import('./routes/people') },
+  { path: paths.settings.pattern, lazy: () => import('./routes/settings') },
+  { path: paths.account.pattern, lazy: () => import('./routes/account') },
+  { path: paths.more.pattern, lazy: () => import('./routes/more') },
+]
+
+/** Screens under load bring their own title block instead of the navigation. */
+const bareScreens: RouteObject[] = []
+
+export function createRouter(client: QueryClient) {
+  const loader = requireSession(client)
+  return createBrowserRouter([
+    {
+      ErrorBoundary: RouteError,
+      HydrateFallback: SkeletonPage,
+      children: [
+        { path: paths.signIn.pattern, lazy: () => import('./routes/sign-in') },
+        { path: paths.openShop.pattern, lazy: () => import('./routes/open-shop') },
+        { loader, Component: SignedInBare, children: [{ ErrorBoundary: RouteError, children: bareScreens }] },
+        {
+          loader,
+          Component: SignedIn,
+          // A screen that fails keeps the navigation round it.
+          children: [{ ErrorBoundary: RouteError, children: [...signedInScreens, { path: '*', Component: NotFound }] }],
+        },
+      ],
+    },
+  ])
+}

@@ -1,0 +1,34 @@
+import { useNavigate, useSearchParams } from 'react-router-dom'
+import { SignInForm } from '../features/people/components/sign-in-form'
+import { TitleBlock } from '../features/people/components/title-block'
+import { FootLink } from '../features/people/components/foot-link'
+import { ownPath } from '../lib/own-path'
+import { useTitle } from '../lib/use-title'
+import { paths } from '../paths'
+
+export function Component() {
+  useTitle('Sign in')
+  const navigate = useNavigate()
+  const [search] = useSearchParams()
+  return (
+    <TitleBlock
+      title={
+        <>
+          First load
+          <br />
+          by quarters
+        </>
+      }
+      lead={
+        <>
+          Load it in four steps. Read it at each one.
+          <br />
+          Stop when it stops behaving like a spring.
+        </>
+      }
+      foot={<FootLink to={paths.openShop.href()}>Open a shop</FootLink>}
+    >
+      <SignInForm onSignedIn={() => void navigate(ownPath(search.get('next')) ?? paths.today.href(), { replace: true })} />
+    </TitleBlock>
+  )
+}
