@@ -27,19 +27,20 @@ export interface Client {
   userAgent: string
 }
 
+function seconds(time: Date): number {
+  return Math.floor(time.getTime() / 1000)
+}
+
 export function tokenFor(context: AppContext, session: SignedIn): string {
-  return jwt.sign({ sid: session.sessionId }, context.sessionSecret, {
-    algorithm,
-    subject: session.userId,
-    expiresIn: Math.max(1, Math.floor((session.expiresAt.getTime() - context.now().getTime()) / 1000)),
-  })
+  const times = { iat: seconds(context.now()), exp: seconds(session.expiresAt) }
+  return jwt.sign({ sid: session.sessionId, ...times }, context.sessionSecret, { algorithm, subject: session.userId })
 }
 
 function sessionIdIn(context: AppContext, token: string): string | undefined {
   try {
     const payload = jwt.verify(token, context.sessionSecret, {
       algorithms: [algorithm],
-      clockTimestamp: Math.floor(context.now().getTime() / 1000),
+      clockTimestamp: seconds(context.now()),
     })
     if (typeof payload === 'string') return undefined
     const sid: unknown = payload['sid']
