@@ -14,7 +14,10 @@ const LEFT_RIGHT = (place: string, label: string): Spot[] => [
 const spots = {
   head: LEFT_RIGHT('head', 'head at upright'),
   headStiffener: LEFT_RIGHT('head-stiffener', 'head stiffener'),
-  ramSeat: [{ place: 'ram-seat', label: 'ram seat' }],
+  ramSeat: [
+    { place: 'ram-seat', label: 'ram seat' },
+    { place: 'ram', label: 'ram in its seat' },
+  ],
   adaptor: [{ place: 'adaptor', label: 'adaptor on the rod' }],
   bedPin: LEFT_RIGHT('bed-pin', 'bed pin'),
   bed: LEFT_RIGHT('bed', 'bed at upright'),
