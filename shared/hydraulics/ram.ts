@@ -53,7 +53,7 @@ export function ramForce(rams: readonly RamUnderPressure[]): number {
 }
 
 /**
- * The range of force delivered when seals take a share of the theoretical force, N: fixed and
+ * The least force delivered when seals take a share of the theoretical force, N: fixed and
  * one-sided, 0 to 5 % unless a measured share is given. It doesn't lower a clearance, because the
  * press is later used by the same ram and gauge. Common practice, from memory, no source.
  */
