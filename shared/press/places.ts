@@ -1,74 +1,68 @@
 import type { FrameKind } from './model'
 
-/** A spot of the front elevation that a joint's leader or a measuring point's triangle can stand at. */
+/** A spot of an elevation that a joint's leader or a measuring point's triangle can stand at. */
 export interface Spot {
   place: string
   label: string
 }
 
-const LEFT_RIGHT = (place: string, label: string): Spot[] => [
+const sides = (place: string, label: string): Spot[] => [
   { place: `${place}-left`, label: `${label}, left` },
   { place: `${place}-right`, label: `${label}, right` },
 ]
 
-const spots = {
-  head: LEFT_RIGHT('head', 'head at upright'),
-  headStiffener: LEFT_RIGHT('head-stiffener', 'head stiffener'),
-  ramSeat: [
-    { place: 'ram-seat', label: 'ram seat' },
-    { place: 'ram', label: 'ram in its seat' },
-  ],
-  adaptor: [{ place: 'adaptor', label: 'adaptor on the rod' }],
-  bedPin: LEFT_RIGHT('bed-pin', 'bed pin'),
-  bed: LEFT_RIGHT('bed', 'bed at upright'),
-  bedStiffener: LEFT_RIGHT('bed-stiffener', 'bed stiffener'),
-  foot: LEFT_RIGHT('foot', 'foot'),
-} satisfies Record<string, Spot[]>
+const RAM: Spot[] = [
+  { place: 'ram-seat', label: 'Ram seat at the head' },
+  { place: 'ram-adaptor', label: 'Adaptor on the ram rod' },
+]
+const HEAD = sides('head', 'Head beam to upright')
+const FOOT = sides('foot', 'Foot of the upright')
 
-/** The spots that a drawing of each kind of frame has, from the head down. */
-export const JOINT_PLACES: Record<FrameKind, readonly Spot[]> = {
+/** Spots of each elevation that a joint can be pinned to, in the order they are walked. */
+export const jointPlaces: Record<FrameKind, readonly Spot[]> = {
   'h-frame': [
-    ...spots.head,
-    ...spots.headStiffener,
-    ...spots.ramSeat,
-    ...spots.adaptor,
-    ...spots.bedPin,
-    ...spots.bed,
-    ...spots.bedStiffener,
-    ...spots.foot,
-  ],
-  'four-post': [...spots.head, ...spots.headStiffener, ...spots.ramSeat, ...spots.adaptor, ...spots.bed, ...spots.bedStiffener, ...spots.foot],
-  'c-frame': [
-    { place: 'head-back', label: 'head at column' },
-    ...spots.ramSeat,
-    ...spots.adaptor,
-    { place: 'bed-back', label: 'bed at column' },
-    { place: 'throat-stiffener', label: 'throat stiffener' },
-    { place: 'bed-stiffener', label: 'bed stiffener' },
-    ...spots.foot,
-  ],
-  bench: [...spots.head, ...spots.ramSeat, ...spots.adaptor, ...spots.bed, ...spots.foot],
-}
-
-/** Where measuring points of a proof test stand, by the letter the drawing shows. */
-export const POINT_PLACES: Record<FrameKind, readonly (Spot & { letter: string })[]> = {
-  'h-frame': [
-    { place: 'bed-middle', letter: 'M', label: 'bed middle' },
-    { place: 'bed-pin-left', letter: 'L', label: 'left pin' },
-    { place: 'bed-pin-right', letter: 'R', label: 'right pin' },
-  ],
-  'four-post': [
-    { place: 'bed-middle', letter: 'M', label: 'bed middle' },
-    { place: 'bed-left', letter: 'L', label: 'bed at left post' },
-    { place: 'bed-right', letter: 'R', label: 'bed at right post' },
-  ],
-  'c-frame': [
-    { place: 'throat', letter: 'T', label: 'opening at the ram' },
-    { place: 'bed-back', letter: 'B', label: 'bed at column' },
+    ...HEAD,
+    ...RAM,
+    ...sides('bed-pin', 'Bed pin'),
+    ...sides('bed-stiffener', 'Bed stiffener'),
+    ...sides('upright', 'Along the upright'),
+    ...FOOT,
   ],
   bench: [
-    { place: 'bed-middle', letter: 'M', label: 'bed middle' },
-    { place: 'bed-left', letter: 'L', label: 'bed at left upright' },
-    { place: 'bed-right', letter: 'R', label: 'bed at right upright' },
+    ...HEAD,
+    ...RAM,
+    ...sides('bed', 'Upright to bed'),
+    ...sides('bed-stiffener', 'Bed stiffener'),
+    ...sides('upright', 'Along the upright'),
+  ],
+  'four-post': [
+    ...sides('column-top', 'Nut above the head, front column'),
+    ...sides('head', 'Nut under the head, front column'),
+    ...sides('column-back', 'Nut above the head, back column'),
+    ...RAM,
+    ...sides('bed', 'Column to bed'),
+    ...sides('bed-stiffener', 'Bed stiffener'),
+    ...FOOT,
+  ],
+  'c-frame': [
+    { place: 'throat-top', label: 'Upper arm to column' },
+    { place: 'throat-bottom', label: 'Bed to column' },
+    ...RAM,
+    { place: 'head-left', label: 'Nose of the upper arm' },
+    { place: 'bed-left', label: 'Nose of the bed' },
+    { place: 'bed-stiffener-left', label: 'Bed stiffener' },
+    { place: 'column-back', label: 'Back of the column' },
+    { place: 'head-right', label: 'Top of the column' },
+    ...sides('foot', 'Foot'),
   ],
 }
+
+/** Spots that a measuring point can be pinned to. */
+export const measuringPlaces: readonly Spot[] = [
+  { place: 'bed-middle', label: 'Middle of the bed' },
+  { place: 'bed-pin-left', label: 'Left pin' },
+  { place: 'bed-pin-right', label: 'Right pin' },
+  { place: 'head-middle', label: 'Middle of the head beam' },
+  { place: 'head-left', label: 'Head beam, left' },
+  { place: 'head-right', label: 'Head beam, right' },
+]

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { loadPathOf } from './load-path'
 import { FRAME_KINDS, jointSchema, memberSchema } from './model'
-import { JOINT_PLACES } from './places'
+import { jointPlaces } from './places'
 import { startingFrame } from './starting-joints'
 
 function counter(): () => string {
@@ -37,7 +37,7 @@ describe.each(FRAME_KINDS)('the list a %s starts from', (kind) => {
   })
 
   it('places joints only where the drawing has a spot, each spot once', () => {
-    const spots = JOINT_PLACES[kind].map((spot) => spot.place)
+    const spots = jointPlaces[kind].map((spot) => spot.place)
     const used = joints.flatMap((joint) => (joint.place === null ? [] : [joint.place]))
     expect(used.filter((place) => !spots.includes(place))).toEqual([])
     expect(new Set(used).size).toBe(used.length)

@@ -14,8 +14,8 @@ const RAM_PARTS: readonly Part[] = [
   ['adaptor', 'tooling-adaptor', 'Adaptor'],
 ]
 const RAM_JOINTS: readonly Hold[] = [
-  ['Ram in its seat', 'bolt', 'ram', 'seat', 'ram'],
-  ['Adaptor on ram rod', 'thread', 'adaptor', 'ram', 'adaptor'],
+  ['Ram in its seat', 'bolt', 'ram', 'seat', null],
+  ['Adaptor on ram rod', 'thread', 'adaptor', 'ram', 'ram-adaptor'],
 ]
 const BED_STIFFENER_PARTS: readonly Part[] = [
   ['bed-stiffener-left', 'stiffener', 'Left bed stiffener'],
@@ -76,8 +76,8 @@ const FRAMES: Record<FrameKind, { parts: readonly Part[]; holds: readonly Hold[]
     ],
     holds: [
       ...atUprights('Head plate to front', 'bolt', 'head', 'head', 'post'),
-      ['Head plate to back left post', 'bolt', 'head', 'upright-back-left', null],
-      ['Head plate to back right post', 'bolt', 'head', 'upright-back-right', null],
+      ['Head plate to back left post', 'bolt', 'head', 'upright-back-left', 'column-back-left'],
+      ['Head plate to back right post', 'bolt', 'head', 'upright-back-right', 'column-back-right'],
       ['Ram seat to head plate', 'weld', 'seat', 'head', 'ram-seat'],
       ...RAM_JOINTS,
       ...atUprights('Bed plate to front', 'bolt', 'bed', 'bed', 'post'),
@@ -96,12 +96,12 @@ const FRAMES: Record<FrameKind, { parts: readonly Part[]; holds: readonly Hold[]
       ['foot', 'base', 'Foot'],
     ],
     holds: [
-      ['Head arm to column', 'weld', 'head', 'column', 'head-back'],
+      ['Head arm to column', 'weld', 'head', 'column', 'throat-top'],
       ['Ram seat to head arm', 'weld', 'seat', 'head', 'ram-seat'],
       ...RAM_JOINTS,
-      ['Bed arm to column', 'weld', 'bed', 'column', 'bed-back'],
-      ['Throat stiffener', 'weld', 'throat-stiffener', 'column', 'throat-stiffener'],
-      ['Bed stiffener', 'weld', 'bed-stiffener', 'bed', 'bed-stiffener'],
+      ['Bed arm to column', 'weld', 'bed', 'column', 'throat-bottom'],
+      ['Throat stiffener', 'weld', 'throat-stiffener', 'column', 'column-back'],
+      ['Bed stiffener', 'weld', 'bed-stiffener', 'bed', 'bed-stiffener-left'],
       ['Column to its foot', 'weld', 'column', 'foot', 'foot-left'],
     ],
   },
