@@ -6,7 +6,9 @@ import type { AppContext } from './context'
 import { problemHandler, unknownEndpoint } from './middleware/problem-handler'
 import { sameOrigin } from './middleware/same-origin'
 import { healthRoutes } from './routes/health'
+import { instrumentRoutes } from './routes/instruments'
 import { peopleRoutes } from './routes/people'
+import { protocolRoutes } from './routes/protocols'
 import { sessionRoutes } from './routes/session'
 import { shopRoutes } from './routes/shops'
 
@@ -54,6 +56,8 @@ function api(context: AppContext) {
   router.use(sessionRoutes(context))
   router.use(shopRoutes(context))
   router.use(peopleRoutes(context))
+  router.use(instrumentRoutes(context))
+  router.use(protocolRoutes(context))
   router.use(unknownEndpoint)
   return router
 }

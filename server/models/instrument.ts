@@ -1,6 +1,6 @@
 import { Model } from 'sequelize'
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize'
-import { idColumn, jsonColumn, optionalTimeColumn, textColumn, timeColumn } from './columns'
+import { idColumn, jsonColumn, optionalDayColumn, optionalTimeColumn, textColumn, timeColumn } from './columns'
 
 export class Instrument extends Model<InferAttributes<Instrument>, InferCreationAttributes<Instrument>> {
   declare id: string
@@ -9,6 +9,8 @@ export class Instrument extends Model<InferAttributes<Instrument>, InferCreation
   declare kind: 'gauge' | 'load-cell' | 'indicator'
   declare description: string
   declare details: unknown
+  /** When the calibration in force falls due; null when it never had one. */
+  declare dueOn: CreationOptional<string | null>
   declare retiredAt: CreationOptional<Date | null>
   declare createdAt: Date
 }
@@ -22,6 +24,7 @@ export function initInstrument(sequelize: Sequelize): void {
       kind: textColumn(),
       description: textColumn(),
       details: jsonColumn(),
+      dueOn: optionalDayColumn(),
       retiredAt: optionalTimeColumn(),
       createdAt: timeColumn(),
     },

@@ -1,14 +1,33 @@
 import type { Request } from 'express'
+import type { Transaction } from 'sequelize'
 import type { AppContext, Work } from '../context'
 import { inTransaction } from '../context'
 import { personOf } from '../middleware/authenticate'
-import { membershipOf } from '../services/membership'
+import { notFound } from '../problem'
+import { actorIn, membershipOf } from '../services/membership'
 
 /** One transaction in a shop that the person belongs to; 404 when not. */
 export function workIn<T>(context: AppContext, request: Request, shopId: string, act: (work: Work) => Promise<T>): Promise<T> {
   const { userId } = personOf(request)
   return inTransaction(context, async (transaction) => {
     const actor = await membershipOf({ transaction, userId, shopId })
+    return act({ transaction, actor, now: context.now() })
+  })
+}
+
+/** The same for what is named by its id alone: `shopOf` looks up whose it is. An unknown id and another shop's answer alike. */
+export function workOn<T>(
+  context: AppContext,
+  request: Request,
+  what: string,
+  shopOf: (transaction: Transaction) => Promise<string | undefined>,
+  act: (work: Work) => Promise<T>,
+): Promise<T> {
+  const { userId } = personOf(request)
+  return inTransaction(context, async (transaction) => {
+    const shopId = await shopOf(transaction)
+    const actor = shopId === undefined ? undefined : await actorIn({ transaction, userId, shopId })
+    if (actor === undefined || actor.role === null) throw notFound(what)
     return act({ transaction, actor, now: context.now() })
   })
 }

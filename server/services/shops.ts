@@ -8,6 +8,7 @@ import { Membership, Shop, User } from '../models'
 import { invalid, notFound } from '../problem'
 import { authorize } from './membership'
 import { hashPassword } from './passwords'
+import { addShippedProtocols } from './protocols'
 import { checkPassword, startSession } from './sessions'
 import type { Client, SignedIn } from './sessions'
 
@@ -49,6 +50,7 @@ export async function openShop(context: AppContext, request: OpenShopRequest, cl
         { transaction },
       )
       await Membership.create({ shopId: shop.id, userId: user.id, role: 'owner', createdAt: now, endedAt: null }, { transaction })
+      await addShippedProtocols({ transaction, now, shopId: shop.id, userId: user.id })
       return startSession({ transaction, now }, user, client.userAgent)
     })
   } catch (error) {

@@ -4,11 +4,13 @@ import { idSchema, timeSchema } from './common'
 
 export const INSTRUMENT_SORTS = ['code', '-code', 'due', '-due'] as const
 
-/** GET /api/instruments?shop=&search=&kind=&sort=&cursor=&limit= */
+/** GET /api/instruments?shop=&search=&kind=&retired=&sort=&cursor=&limit= */
 export const instrumentListQuerySchema = z.object({
   shop: idSchema,
   search: z.string().trim().max(80).optional(),
   kind: z.enum(['gauge', 'load-cell', 'indicator']).optional(),
+  /** Retired ones stay on record, and out of the way. */
+  retired: z.enum(['no', 'yes']).default('no'),
   sort: z.enum(INSTRUMENT_SORTS).default('code'),
   cursor: z.string().max(400).optional(),
   limit: z.coerce.number().int().min(1).max(100).default(25),
@@ -35,9 +37,15 @@ export const instrumentResponseSchema = z.object({
   calibrations: z.array(calibrationRowSchema),
 })
 
-/** POST /api/instruments?shop= and PUT /api/instruments/:id; POST /api/instruments/:id/calibrations takes a Calibration. */
+/**
+ * POST /api/instruments?shop= and PUT /api/instruments/:id; POST /api/instruments/:id/calibrations takes a Calibration.
+ * POST /api/instruments/:id/retirement takes it out of use, DELETE brings it back. Each answers an `instrumentResponseSchema`.
+ */
 export const instrumentRequestSchema = instrumentDetailsSchema
 export const calibrationRequestSchema = calibrationSchema
 
 export type InstrumentListQuery = z.infer<typeof instrumentListQuerySchema>
+export type CalibrationRow = z.infer<typeof calibrationRowSchema>
+export type InstrumentList = z.infer<typeof instrumentListSchema>
+export type InstrumentResponse = z.infer<typeof instrumentResponseSchema>
 export type InstrumentRow = z.infer<typeof instrumentRowSchema>

@@ -2,11 +2,11 @@ import { z } from 'zod'
 import { RAM_POSITIONS } from '../press/model'
 import { typedLengthSchema } from '../units'
 
-const percent = (most: number) => z.number().min(0, 'Not below zero.').max(most, `At most ${most} %.`)
-const seconds = z.number().int().min(1, 'At least one second.').max(3600, 'At most an hour.')
+const percent = (most: number) => z.number('Enter a percentage.').min(0, 'Not below zero.').max(most, `At most ${most} %.`)
+const seconds = z.number('Enter whole seconds.').int('Enter whole seconds.').min(1, 'At least one second.').max(3600, 'At most an hour.')
 
 export const protocolLegSchema = z.object({
-  label: z.string().trim().min(1, 'Name this leg.').max(60),
+  label: z.string().trim().min(1, 'Name this leg.').max(60, 'Keep it to 60 characters.'),
   ramPosition: z.enum(RAM_POSITIONS),
   bed: z.enum(['where it is used most', 'lowest', 'highest']),
 })
@@ -30,9 +30,9 @@ export const protocolLimitsSchema = z.object({
  */
 export const protocolContentSchema = z
   .object({
-    purpose: z.string().trim().max(400),
-    legs: z.array(protocolLegSchema).min(1, 'A protocol has at least one leg.').max(6),
-    stages: z.array(protocolStageSchema).min(2, 'A protocol has at least two stages.').max(10),
+    purpose: z.string().trim().max(400, 'Keep it to 400 characters.'),
+    legs: z.array(protocolLegSchema).min(1, 'A protocol has at least one leg.').max(6, 'Six legs at most.'),
+    stages: z.array(protocolStageSchema).min(2, 'A protocol has at least two stages.').max(10, 'Ten stages at most.'),
     seatingPercent: percent(20),
     datumWatchSeconds: seconds,
     recoverySeconds: seconds,
@@ -42,9 +42,9 @@ export const protocolContentSchema = z
     predictionAllowancePercent: percent(20),
     frictionPercent: percent(10),
     decisionRule: z.enum(['simple', 'guard-band']),
-    marginDivisor: z.number().min(1, 'The margin is never below 1.').max(3),
-    examinationMonths: z.number().int().min(1).max(24),
-    aboveRatingRule: z.string().trim().max(200),
+    marginDivisor: z.number('Enter the margin.').min(1, 'The margin is never below 1.').max(3, 'A margin of 3 at most.'),
+    examinationMonths: z.number('Enter whole months.').int('Enter whole months.').min(1, 'One month at least.').max(24, '24 months at most.'),
+    aboveRatingRule: z.string().trim().max(200, 'Keep it to 200 characters.'),
   })
   .superRefine((content, context) => {
     content.stages.forEach((stage, index) => {
