@@ -63,28 +63,26 @@ const clearance: Clearance = {
 
 function ledger(joints: Joint[], ...drafts: PressDraft[]) {
   const registered: PressDraft = { kind: 'registered', payload: { description, joints, lastWorkedOn: null } }
-  const entries = [registered, ...drafts].map(
-    (draft, index): LedgerEntry => ({
-      id: nextId(),
-      ledgerId: PRESS,
-      v: 1,
-      ...draft,
-      authorId: AUTHOR,
-      deviceId: nextId(),
-      deviceSeq: index + 1,
-      basedOnSeq: index,
-      observedAt: '2026-09-15T10:00:00.000Z',
-      bootId: nextId(),
-      monotonicMs: index,
-      attachments: [],
-      overrides: [],
-      seq: index + 1,
-      receivedAt: '2026-09-15T10:00:00.000Z',
-      irregular: [],
-      prevHash: '0'.repeat(64),
-      hash: '1'.repeat(64),
-    }),
-  )
+  const entries = [registered, ...drafts].map((draft, index): LedgerEntry => ({
+    id: nextId(),
+    ledgerId: PRESS,
+    v: 1,
+    ...draft,
+    authorId: AUTHOR,
+    deviceId: nextId(),
+    deviceSeq: index + 1,
+    basedOnSeq: index,
+    observedAt: '2026-09-15T10:00:00.000Z',
+    bootId: nextId(),
+    monotonicMs: index,
+    attachments: [],
+    overrides: [],
+    seq: index + 1,
+    receivedAt: '2026-09-15T10:00:00.000Z',
+    irregular: [],
+    prevHash: '0'.repeat(64),
+    hash: '1'.repeat(64),
+  }))
   return foldPress(PRESS, entries)
 }
 

@@ -70,7 +70,11 @@ function awaitsSignature(state: PressState): boolean {
  */
 export function mayItBeUsed(state: PressState, today: string): MayItBeUsed {
   if (state.unknownKinds > 0) {
-    return { answer: 'do not use', why: 'Something happened to this press that this page is too old to read.', missing: ['Load this page again.'] }
+    return {
+      answer: 'do not use',
+      why: 'Something happened to this press that this page is too old to read.',
+      missing: ['Load this page again.'],
+    }
   }
   if (state.underTest) {
     const { number } = state.underTest

@@ -47,6 +47,12 @@ describe.each(FRAME_KINDS)('the list a %s starts from', (kind) => {
 it('an H-frame starts with the joints that people forget', () => {
   const names = startingFrame('h-frame', counter()).joints.map((joint) => joint.name)
   expect(names).toEqual(
-    expect.arrayContaining(['Ram seat to head beam', 'Adaptor on ram rod', 'Left bed pin', 'Right bed stiffener', 'Left upright to its foot']),
+    expect.arrayContaining([
+      'Ram seat to head beam',
+      'Adaptor on ram rod',
+      'Left bed pin',
+      'Right bed stiffener',
+      'Left upright to its foot',
+    ]),
   )
 })

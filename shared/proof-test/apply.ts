@@ -105,7 +105,11 @@ function stageBegun(state: ProofTestState, at: Position, entry: LedgerEntry): Pr
     const attempt: AttemptState = { begunAt: entry.observedAt, rows: [], topUps: 0, independent: null, decided: null }
     return { ...climb, stages: replaceAt(climb.stages, at.stage, { ...stage, attempts: [...stage.attempts, attempt] }) }
   })
-  return { ...withClimb(begun, at.leg, at.climb, (climb) => ({ ...climb, released: null })), position: at, loaded: state.loaded ?? { since: entry.observedAt, by: 'stage' } }
+  return {
+    ...withClimb(begun, at.leg, at.climb, (climb) => ({ ...climb, released: null })),
+    position: at,
+    loaded: state.loaded ?? { since: entry.observedAt, by: 'stage' },
+  }
 }
 
 function addStageRow(state: ProofTestState, at: Position, row: StageRow): ProofTestState {
@@ -365,7 +369,10 @@ const handlers: Handlers = {
   declined: (state, payload, entry) => ({
     ...state,
     signed: null,
-    declined: [...state.declined, { seq: entry.seq, why: payload.why, by: payload.personId, printedName: payload.printedName, at: entry.observedAt }],
+    declined: [
+      ...state.declined,
+      { seq: entry.seq, why: payload.why, by: payload.personId, printedName: payload.printedName, at: entry.observedAt },
+    ],
   }),
   reviewed: (state) => state,
 }

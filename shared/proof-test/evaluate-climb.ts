@@ -285,7 +285,8 @@ function heldCriteria(
   const readable = (readings[0]?.pressure ?? 0) > 0
   const loss = readable ? pressureLoss(readings) : null
   const uLoss = readable ? pressureLossUncertainty(readings, increment) : null
-  const lossVerdict = loss !== null && uLoss !== null ? judge({ value: loss, U: uLoss, limit: { max: lossLimit }, rule: decisionRule }) : 'not-read'
+  const lossVerdict =
+    loss !== null && uLoss !== null ? judge({ value: loss, U: uLoss, limit: { max: lossLimit }, rule: decisionRule }) : 'not-read'
   const creeps = start.deflections.flatMap((first): Criterion[] => {
     const last = end.deflections.find((figure) => figure.id === first.id)
     if (!last || !start.force || !end.force) return []
@@ -299,7 +300,11 @@ function heldCriteria(
       forceEnd: end.force.force,
       stiffness: own,
     })
-    const limit = creepLimit({ fraction: limits.creepPercent / 100, stageDeflection: Math.abs(first.deflection), increment: first.increment })
+    const limit = creepLimit({
+      fraction: limits.creepPercent / 100,
+      stageDeflection: Math.abs(first.deflection),
+      increment: first.increment,
+    })
     const U = creepUncertainty({ uDeflection: first.uReading, uForce: start.force.uIndependent, stiffness: own })
     return [
       {
@@ -329,10 +334,12 @@ function suggest(
   if (rows.length === 0) return 'not-read'
   if (topUpTooMany) return 'stop'
   if (criteria.some((criterion) => criterion.stops && criterion.verdict === 'beyond')) return 'stop'
-  const undecided = criteria.some((criterion) => criterion.leads && criterion.verdict === 'undecided')
-  if (undecided) return rows.some((row) => row.occasion === 'again') ? 'stop' : 'wait'
-  if (criteria.some((criterion) => criterion.verdict === 'wait')) return 'wait'
-  return held ? 'go-on' : 'hold'
+  const again = rows.some((row) => row.occasion === 'again')
+  if (criteria.some((criterion) => criterion.leads && criterion.verdict === 'undecided')) return again ? 'stop' : 'wait'
+  const outside = criteria.some((criterion) => criterion.verdict === 'wait')
+  if (outside && !again) return 'wait'
+  if (!held) return 'hold'
+  return outside ? 'wait' : 'go-on'
 }
 
 /** Everything that one climb's readings say, stage by stage, from the core alone. */
@@ -414,7 +421,8 @@ export function evaluateClimb(state: ProofTestState, legIndex: number, climbInde
     })
   })
   const leadPoints = series.get(leadId) ?? []
-  const fit = leadPoints.length >= 3 && spread(leadPoints) ? fitLine(leadPoints.map((point) => ({ x: point.force, y: point.deflection }))) : null
+  const fit =
+    leadPoints.length >= 3 && spread(leadPoints) ? fitLine(leadPoints.map((point) => ({ x: point.force, y: point.deflection }))) : null
   return {
     leg: legIndex,
     climb: climbIndex,

@@ -109,7 +109,8 @@ const CLEARANCE_DECIMALS: Record<ForceUnit, number> = { N: 0, kN: 1, lbf: 0, 'sh
 
 function clearanceFigures(state: ProofTestState, stages: readonly StageEvaluation[]): ClearanceFigures | null {
   const opened = state.opened
-  if (!opened) return null
+  // An instrument used out of calibration, for a reason, prints that reason and gives no clearance (DOMAIN 3.2).
+  if (!opened || opened.instrumentOverride !== null) return null
   const full = stages.filter((stage) => stage.percent >= 100 && stage.end !== null)
   const rows = full.flatMap((stage) => stage.rows).flatMap((row) => row.force ?? [])
   const [first, ...rest] = rows

@@ -94,7 +94,12 @@ export function forceOf(opened: Opened, readings: readonly Reading[]): ForceFigu
       forceUncertainty({
         rams: circuit.rams,
         pressure: read,
-        errorLimit: gaugeErrorLimit({ accuracy: circuit.gauge.accuracy, spanMin: 0, spanMax: toSI(circuit.gauge.fullScale), reading: read }),
+        errorLimit: gaugeErrorLimit({
+          accuracy: circuit.gauge.accuracy,
+          spanMin: 0,
+          spanMax: toSI(circuit.gauge.fullScale),
+          reading: read,
+        }),
         certificate: certificateOf(circuit.instrument),
         readableIncrement: toSI(circuit.gauge.increment),
       }),

@@ -43,7 +43,11 @@ export const protocolContentSchema = z
     frictionPercent: percent(10),
     decisionRule: z.enum(['simple', 'guard-band']),
     marginDivisor: z.number('Enter the margin.').min(1, 'The margin is never below 1.').max(3, 'A margin of 3 at most.'),
-    examinationMonths: z.number('Enter whole months.').int('Enter whole months.').min(1, 'One month at least.').max(24, '24 months at most.'),
+    examinationMonths: z
+      .number('Enter whole months.')
+      .int('Enter whole months.')
+      .min(1, 'One month at least.')
+      .max(24, '24 months at most.'),
     aboveRatingRule: z.string().trim().max(200, 'Keep it to 200 characters.'),
   })
   .superRefine((content, context) => {

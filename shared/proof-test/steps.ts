@@ -109,7 +109,9 @@ function inStage(state: ProofTestState, opened: Opened): Step | null {
     case 'wait':
       return { name: 'wait', ...at, stage: evaluated }
     case 'go-on':
-      return full && place.climb === 0 && !attempt.independent ? { name: 'independent', ...at, stage: evaluated } : { name: 'decide', ...at, stage: evaluated }
+      return full && place.climb === 0 && !attempt.independent
+        ? { name: 'independent', ...at, stage: evaluated }
+        : { name: 'decide', ...at, stage: evaluated }
     default:
       return { name: 'hold', ...at, stage: evaluated }
   }
