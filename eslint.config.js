@@ -18,7 +18,7 @@ const impure = [
 const platform = ['window', 'document', 'navigator', 'localStorage', 'indexedDB', 'fetch', 'process', 'performance', 'crypto', 'setTimeout', 'setInterval', 'Buffer']
 
 export default tseslint.config(
-  { ignores: ['dist/**', '.data/**', '.artefacts/**', 'node_modules/**'] },
+  { ignores: ['fixtures/architecture/**', 'dist/**', '.data/**', '.artefacts/**', 'node_modules/**'] },
   ...tseslint.configs.recommended,
   {
     files: ['**/*.{ts,tsx}'],

@@ -1,0 +1,3 @@
+import type { ESLint } from 'eslint'
+
+export const arrows: ESLint.Plugin

@@ -1,0 +1,83 @@
+import { spawnSync } from 'node:child_process'
+import { mkdirSync, readFileSync, rmSync } from 'node:fs'
+import { z } from 'zod'
+
+interface Outcome {
+  name: string
+  passed: number
+  failed: number
+  /** Words of the tool that did the part, where it has some. */
+  detail: string
+  seconds: number
+}
+
+const report = '.artefacts/vitest.json'
+const reportSchema = z.object({
+  success: z.boolean(),
+  numPassedTests: z.int(),
+  numFailedTests: z.int(),
+  numPendingTests: z.int(),
+  numTodoTests: z.int(),
+  testResults: z.array(z.object({ name: z.string(), status: z.string(), message: z.string() })),
+})
+
+function say(line: string): void {
+  process.stdout.write(`${line}\n`)
+}
+
+function run(command: string[]): { ok: boolean; seconds: number } {
+  const [program = '', ...args] = command
+  const begun = performance.now()
+  const { status } = spawnSync(program, args, { stdio: 'inherit' })
+  return { ok: status === 0, seconds: (performance.now() - begun) / 1000 }
+}
+
+/** A part that is right or wrong as a whole. */
+function check(name: string, command: string[]): Outcome {
+  say(`\n── ${name}`)
+  const { ok, seconds } = run(command)
+  return { name, passed: ok ? 1 : 0, failed: ok ? 0 : 1, detail: ok ? 'in order' : 'failed, see above', seconds }
+}
+
+/** Vitest's own account, read back from its report. A test that was skipped has not passed, and counts as failed. */
+function tests(command: string[]): Outcome {
+  say('\n── tests')
+  rmSync(report, { force: true })
+  const { ok, seconds } = run(command)
+  const name = 'tests'
+  let parsed: z.infer<typeof reportSchema>
+  try {
+    parsed = reportSchema.parse(JSON.parse(readFileSync(report, 'utf8')))
+  } catch {
+    return { name, passed: 0, failed: 1, detail: 'vitest left no report, see above', seconds }
+  }
+  const { numPassedTests: passed, numFailedTests, numPendingTests: skipped, numTodoTests: left } = parsed
+  const files = parsed.testResults.length
+  const brokenFiles = parsed.testResults.filter((file) => file.status === 'failed').length
+  let failed = numFailedTests + skipped + left
+  // A file that could not be loaded, or an error outside of any test, has no test to count.
+  if (failed === 0 && (!ok || !parsed.success || brokenFiles > 0 || passed === 0)) failed = Math.max(1, brokenFiles)
+  const detail = `vitest: ${files} files, ${passed} passed, ${numFailedTests} failed, ${skipped + left} skipped`
+  return { name, passed, failed, detail, seconds }
+}
+
+function main(): number {
+  mkdirSync('.artefacts', { recursive: true })
+  const node = process.execPath
+  const outcomes = [
+    check('types', [node, 'node_modules/typescript/bin/tsc', '--noEmit']),
+    check('lint', [node, 'node_modules/eslint/bin/eslint.js', '.']),
+    check('build', [node, 'server/bootstrap/prepare.mjs', 'build', '--force']),
+    tests([node, 'node_modules/vitest/vitest.mjs', 'run', '--reporter=default', '--reporter=json', `--outputFile.json=${report}`]),
+  ]
+  say('')
+  for (const { name, failed, detail, seconds } of outcomes) {
+    say(`${failed === 0 ? 'ok    ' : 'FAILED'} ${name.padEnd(6)} ${seconds.toFixed(1).padStart(6)} s  ${detail}`)
+  }
+  const passed = outcomes.reduce((sum, outcome) => sum + outcome.passed, 0)
+  const failed = outcomes.reduce((sum, outcome) => sum + outcome.failed, 0)
+  say(`\n${passed} passed, ${failed} failed`)
+  return failed === 0 ? 0 : 1
+}
+
+process.exitCode = main()
