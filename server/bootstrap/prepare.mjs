@@ -109,7 +109,7 @@ function filesUnder(place) {
   if (!existsSync(full)) return []
   return readdirSync(full, { recursive: true, withFileTypes: true })
     .filter((entry) => entry.isFile() && !entry.name.includes('.test.'))
-    .map((entry) => path.relative(root, path.join(entry.parentPath ?? entry.path, entry.name)))
+    .map((entry) => path.relative(root, path.join(entry.parentPath, entry.name)))
 }
 
 function sourceHash() {

@@ -1,20 +1,22 @@
 import { format } from 'node:util'
 import { afterEach, beforeEach, expect, vi } from 'vitest'
+import type { MockInstance } from 'vitest'
 
 // A warning that nobody reads hides the one that matters: whatever a test makes the console say, fails it.
 const said: string[] = []
+let spies: MockInstance[] = []
 const levels = ['debug', 'info', 'log', 'warn', 'error'] as const
 
 beforeEach(() => {
   said.length = 0
-  for (const level of levels) {
+  spies = levels.map((level) =>
     vi.spyOn(console, level).mockImplementation((...args: unknown[]) => {
       said.push(`${level}: ${format(...args)}`)
-    })
-  }
+    }),
+  )
 })
 
 afterEach(() => {
-  for (const level of levels) vi.mocked(console[level]).mockRestore()
+  for (const spy of spies) spy.mockRestore()
   expect(said, 'the console stays quiet').toEqual([])
 })
