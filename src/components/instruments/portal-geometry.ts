@@ -1,0 +1,186 @@
+import type { Anchor, Elevation, Lane } from './balloon-layout'
+import type { FrameKind } from './joint-places'
+
+/** What is drawn of a press; lengths in metres, null where nobody has measured. */
+export interface PressDimensions {
+  height: number | null
+  /** Between the centre lines of the uprights. */
+  width: number | null
+  /** From the ram's centre line to the column of a C-frame. */
+  throat?: number | null
+  holes?: number
+  holePitch?: number | null
+  /** The hole the bed is pinned in, counted from the top. */
+  bedHole?: number | null
+}
+
+export interface Box {
+  width: number
+  height: number
+}
+
+/** Everything that stands between two uprights, in px: the same geometry draws H-frames, four-posts and bench presses. */
+export interface Portal {
+  kind: FrameKind
+  box: Box
+  cx: number
+  /** Upright centre lines, and half an upright's width. */
+  left: number
+  right: number
+  post: number
+  top: number
+  floor: number
+  headTop: number
+  headBottom: number
+  headHalf: number
+  bedTop: number
+  bedBottom: number
+  bedHalf: number
+  pin: number
+  holes: number[]
+  dimensionX: number
+  lanes: Record<Lane, number>
+  /** px per metre across; parts are drawn in proportion to the opening. */
+  span: number
+}
+
+const TYPICAL: Record<FrameKind, { height: number; width: number }> = {
+  'h-frame': { height: 1.6, width: 0.71 },
+  'four-post': { height: 1.8, width: 0.9 },
+  bench: { height: 0.7, width: 0.42 },
+  'c-frame': { height: 1.2, width: 0.3 },
+}
+
+const BALLOON = 21
+
+function holesBetween(first: number, last: number, count: number, pitch: number): number[] {
+  if (count < 1) return []
+  const step = count === 1 ? 0 : Math.min(pitch, (last - first) / (count - 1))
+  const middle = (first + last) / 2
+  return Array.from({ length: count }, (_, index) => Math.round(middle + (index - (count - 1) / 2) * step) + 0.5)
+}
+
+/** Lays out a portal frame inside a box (px), to scale as far as the box allows. */
+export function portalOf(kind: FrameKind, dimensions: PressDimensions, box: Box): Portal {
+  const small = box.width < 440
+  const dimensionX = small ? 14 : 36
+  const laneLeft = dimensionX + (small ? 34 : 40)
+  const laneRight = box.width - (small ? 30 : 56)
+  const cx = Math.round((laneLeft + laneRight) / 2)
+  const half = (laneRight - laneLeft) / 2 - BALLOON - (small ? 8 : 33)
+  const typical = TYPICAL[kind]
+  const height = dimensions.height ?? typical.height
+  const width = dimensions.width ?? typical.width
+  const floor = Math.round(box.height - 24)
+  const room = floor - 30
+  const scale = Math.min(room / height, (2 * half) / (width * 1.22))
+  // A frame much slimmer or squatter than its box is drawn wider or taller than it is: the figures tell the truth.
+  const tall = Math.round(Math.max(height * scale, room * 0.72))
+  const span = Math.max(width * scale, half * 1.1)
+  const left = Math.round(cx - span / 2)
+  const right = Math.round(cx + span / 2)
+  const post = Math.max(kind === 'four-post' ? 8 : 9, span * (kind === 'four-post' ? 0.05 : 0.063))
+  const top = floor - tall
+  const headTop = top + 5
+  const headBottom = Math.round(headTop + Math.min(64, Math.max(34, tall * 0.1)))
+  const bedDepth = Math.round(Math.min(66, Math.max(34, tall * 0.105)))
+  const count = kind === 'h-frame' ? (dimensions.holes ?? 7) : 0
+  const pitch = (dimensions.holePitch ?? height * 0.094) * (tall / height)
+  const holes = holesBetween(headBottom + tall * 0.14, floor - tall * 0.17, count, pitch)
+  const bedHole = dimensions.bedHole ?? Math.ceil(count * 0.68)
+  const low = kind === 'bench' ? floor - 8 - bedDepth / 2 : floor - tall * 0.24
+  const pinned = holes[Math.min(Math.max(bedHole, 1), Math.max(count, 1)) - 1]
+  const pin = pinned ?? Math.round(low) + 0.5
+  const inner = (left + post + cx - span * 0.09) / 2
+  return {
+    kind,
+    box,
+    cx,
+    left,
+    right,
+    post,
+    top,
+    floor,
+    headTop,
+    headBottom,
+    headHalf: Math.round(span * 0.584),
+    bedTop: Math.round(pin - bedDepth / 2 - 1),
+    bedBottom: Math.round(pin + bedDepth / 2 - 1),
+    bedHalf: Math.round(span * 0.612),
+    pin,
+    holes: holes.filter((hole) => hole !== pinned),
+    dimensionX,
+    lanes: {
+      'outer-left': laneLeft,
+      'outer-right': laneRight,
+      'inner-left': Math.round(inner),
+      'inner-right': Math.round(2 * cx - inner),
+    },
+    span,
+  }
+}
+
+/** Heights of ram, adaptor and stack between head and bed (px). */
+export interface RamHeights {
+  seat: number
+  flange: number
+  cylinder: number
+  nut: number
+  rod: number
+  adaptor: number
+  stack: number
+}
+
+/** Shares of the daylight between head and bed; every part keeps at least a few px. */
+export function ramHeights(portal: Pick<Portal, 'headBottom' | 'bedTop'>): RamHeights {
+  const daylight = portal.bedTop - portal.headBottom
+  const at = (share: number): number => Math.round(portal.headBottom + daylight * share)
+  return {
+    seat: at(0.036),
+    flange: at(0.064),
+    cylinder: at(0.35),
+    nut: at(0.366),
+    rod: at(0.58),
+    adaptor: at(0.646),
+    stack: at(0.96),
+  }
+}
+
+/** Where joints and measuring points of a portal frame are. */
+export function portalElevation(portal: Portal): Elevation {
+  const { cx, left, right, post, headBottom, bedTop, bedBottom, pin, floor, span, top, headTop } = portal
+  const ram = ramHeights(portal)
+  const both = (name: string, lane: 'outer' | 'inner', dx: number, y: number, balloonY: number): Record<string, Anchor> => ({
+    [`${name}-left`]: { tip: { x: cx - dx, y }, lane: `${lane}-left`, y: balloonY },
+    [`${name}-right`]: { tip: { x: cx + dx, y }, lane: `${lane}-right`, y: balloonY },
+  })
+  const postX = (right - left) / 2
+  const middle = (headBottom + bedTop) / 2
+  const under = bedBottom + 67
+  return {
+    lanes: portal.lanes,
+    from: Math.max(24, top - 4),
+    to: floor - 26,
+    anchors: {
+      ...both('head', 'outer', postX + post * 0.55, headBottom - 1, headBottom - 28),
+      ...both('column-top', 'outer', postX + post, headTop - 3, headTop - 2),
+      ...both('bed-pin', 'outer', postX + 6.5, pin - 3, pin - 30),
+      ...both('bed', 'outer', postX + post * 0.6, bedTop + 6, bedTop - 18),
+      ...both('bed-stiffener', 'inner', span * 0.155, bedBottom - 12, under < floor - 60 ? under : bedTop - 54),
+      ...both('upright', 'outer', postX + post, middle, middle),
+      ...both('foot', 'outer', postX + post + 8, floor - 9, floor - 58),
+      'ram-seat': { tip: { x: cx - span * 0.115, y: ram.seat - 1 }, lane: 'inner-left', y: ram.seat + 38 },
+      'ram-adaptor': { tip: { x: cx + span * 0.045, y: ram.rod + 4 }, lane: 'inner-right', y: ram.rod - 45 },
+    },
+    points: {
+      'bed-middle': { at: { x: cx, y: bedBottom + 9 }, letter: 'right' },
+      'bed-pin-left': { at: { x: left, y: bedBottom + 9 }, letter: 'left' },
+      'bed-pin-right': { at: { x: right, y: bedBottom + 9 }, letter: 'right' },
+      'bed-left': { at: { x: left, y: bedBottom + 9 }, letter: 'left' },
+      'bed-right': { at: { x: right, y: bedBottom + 9 }, letter: 'right' },
+      'head-middle': { at: { x: cx + span * 0.3, y: headBottom + 9 }, letter: 'right' },
+      'head-left': { at: { x: left + post + 16, y: headBottom + 9 }, letter: 'right' },
+      'head-right': { at: { x: right - post - 16, y: headBottom + 9 }, letter: 'left' },
+    },
+  }
+}
