@@ -8,9 +8,12 @@ import { sameOrigin } from './middleware/same-origin'
 import { healthRoutes } from './routes/health'
 import { instrumentRoutes } from './routes/instruments'
 import { peopleRoutes } from './routes/people'
+import { pressReadRoutes } from './routes/presses-read'
+import { proofTestReadRoutes } from './routes/proof-tests-read'
 import { protocolRoutes } from './routes/protocols'
 import { sessionRoutes } from './routes/session'
 import { shopRoutes } from './routes/shops'
+import { todayReadRoutes } from './routes/today-read'
 
 /** A batch of entries fits; a file doesn't belong in JSON. */
 const longestBody = '2mb'
@@ -58,6 +61,9 @@ function api(context: AppContext) {
   router.use(peopleRoutes(context))
   router.use(instrumentRoutes(context))
   router.use(protocolRoutes(context))
+  router.use(pressReadRoutes(context))
+  router.use(proofTestReadRoutes(context))
+  router.use(todayReadRoutes(context))
   router.use(unknownEndpoint)
   return router
 }

@@ -8,7 +8,7 @@ import { ledgerEntrySchema } from '../ledger/envelope'
 export const TEST_SORTS = ['opened', '-opened', 'number', '-number', 'press', '-press'] as const
 export const TEST_STATUSES = ['under way', 'stopped', 'concluded', 'to countersign', 'signed', 'declined'] as const
 
-/** GET /api/proof-tests?shop=&search=&press=&result=&status=&lead=&from=&to=&sort=&cursor=&limit= */
+/** GET /api/proof-tests?shop=&search=&press=&result=&status=&lead=&from=&to=&zone=&sort=&cursor=&limit= */
 export const testListQuerySchema = z.object({
   shop: idSchema,
   search: z.string().trim().max(80).optional(),
@@ -18,6 +18,8 @@ export const testListQuerySchema = z.object({
   lead: idSchema.optional(),
   from: z.iso.date().optional(),
   to: z.iso.date().optional(),
+  /** What the reader's clock is behind UTC, in minutes: `from` and `to` are days where the reader is. */
+  zone: z.coerce.number().int().min(-840).max(840).default(0),
   sort: z.enum(TEST_SORTS).default('-opened'),
   cursor: z.string().max(400).optional(),
   limit: z.coerce.number().int().min(1).max(100).default(25),

@@ -1,0 +1,200 @@
+import { Op } from 'sequelize'
+import { SOON_DAYS, WEEKS_AHEAD } from '#shared/api/today'
+import type { Due, Need } from '#shared/api/today'
+import { calibrationState } from '#shared/instruments/model'
+import type { Calibration } from '#shared/instruments/model'
+import { can } from '#shared/policy'
+import { foldPress } from '#shared/press/apply'
+import { mayItBeUsed } from '#shared/press/may-it-be-used'
+import type { PressState } from '#shared/press/state'
+import { foldProofTest } from '#shared/proof-test/apply'
+import { summariseClimb } from '#shared/proof-test/climb-summary'
+import type { ClimbSummary } from '#shared/proof-test/climb-summary'
+import type { Work } from '../context'
+import { Instrument, Press, ProofTest } from '../models'
+import { calibrationsInForce } from './calibrations'
+import { authorize } from './membership'
+import type { PressRecord } from './press-register'
+import type { TestRecord } from './proof-test-register'
+import { readLedgers } from './stored-ledger'
+
+const MOST_PRESSES = 60
+const MOST_TESTS = 60
+const DAY = 86_400_000
+
+export interface TestUnderWay {
+  test: TestRecord
+  whatFor: string
+  pumpHandId: string | null
+  climb: ClimbSummary
+}
+
+export interface PressToday {
+  press: PressRecord
+  why: string | null
+  test: { proofTestId: string; number: string; status: string } | null
+}
+
+export interface Today {
+  day: string
+  underWay: TestUnderWay[]
+  needs: Need[]
+  presses: PressToday[]
+  due: Due[]
+}
+
+interface InstrumentToday {
+  instrumentId: string
+  code: string
+  instrumentKind: 'gauge' | 'load-cell' | 'indicator'
+  calibration: Calibration | null
+}
+
+function addDays(day: string, count: number): string {
+  return new Date(Date.parse(`${day}T00:00:00Z`) + count * DAY).toISOString().slice(0, 10)
+}
+
+/** Tests that somebody still has to do something about, the latest first. */
+function openTests({ transaction, actor }: Work): Promise<TestRecord[]> {
+  return ProofTest.findAll({
+    where: { shopId: actor.shopId, status: { [Op.in]: ['under way', 'stopped', 'concluded', 'to countersign', 'declined'] } },
+    order: [
+      ['openedAt', 'DESC'],
+      ['id', 'DESC'],
+    ],
+    limit: MOST_TESTS,
+    raw: true,
+    transaction,
+  })
+}
+
+async function instrumentsInUse({ transaction, actor }: Work): Promise<InstrumentToday[]> {
+  const { shopId } = actor
+  const instruments = await Instrument.findAll({
+    where: { shopId, retiredAt: null },
+    attributes: ['id', 'code', 'kind'],
+    order: [['code', 'ASC']],
+    raw: true,
+    transaction,
+  })
+  const ids = instruments.map((instrument) => instrument.id)
+  const inForce = await calibrationsInForce(shopId, ids, transaction)
+  return instruments.map(({ id, code, kind }) => ({ instrumentId: id, code, instrumentKind: kind, calibration: inForce.get(id) ?? null }))
+}
+
+async function foldUnderWay(work: Work, tests: TestRecord[], presses: readonly PressRecord[]): Promise<TestUnderWay[]> {
+  const ledgers = await readLedgers(
+    work.actor.shopId,
+    tests.map((test) => test.id),
+    work.transaction,
+  )
+  return tests.map((test) => {
+    const state = foldProofTest(test.id, ledgers.get(test.id) ?? [])
+    return {
+      test,
+      whatFor: presses.find((press) => press.id === test.pressId)?.whatFor ?? '',
+      pumpHandId: state.opened?.people.pumpHand.id ?? null,
+      climb: summariseClimb(state),
+    }
+  })
+}
+
+/** Presses whose ledger is asked for the reason: those that were in use and may be no longer. */
+async function foldShut(work: Work, presses: readonly PressRecord[]): Promise<Map<string, PressState>> {
+  const shut = presses.filter((press) => press.status === 'withdrawn' || press.status === 'suspended').map((press) => press.id)
+  const ledgers = await readLedgers(work.actor.shopId, shut, work.transaction)
+  return new Map([...ledgers].map(([id, entries]) => [id, foldPress(id, entries)]))
+}
+
+const since = (state: PressState): string | null => (state.clearance.is === 'withdrawn' ? state.clearance.at : (state.history.at(-1)?.at ?? null))
+
+function pressNeeds(presses: readonly PressToday[], states: ReadonlyMap<string, PressState>, day: string): Need[] {
+  return presses.flatMap(({ press, why, test }): Need[] => {
+    const named = { pressId: press.id, pressName: press.name }
+    const state = states.get(press.id)
+    if (test === null && state !== undefined && why !== null) return [{ kind: 'press-shut', ...named, why, since: since(state) }]
+    if (press.status !== 'cleared' || press.clearedUntil === null) return []
+    if (press.clearedUntil < day) return [{ kind: 'press-overdue', ...named, until: press.clearedUntil }]
+    return press.clearedUntil <= addDays(day, SOON_DAYS) ? [{ kind: 'press-due', ...named, until: press.clearedUntil }] : []
+  })
+}
+
+/** What waits for this person's own hand in a test, whatever else the person is in the shop. */
+function testNeeds(tests: readonly TestRecord[], userId: string): Need[] {
+  return tests.flatMap((test): Need[] => {
+    const { id: proofTestId, number, pressName, protocolName } = test
+    const named = { proofTestId, number, pressName, protocolName, since: (test.concludedAt ?? test.openedAt).toISOString() }
+    if (test.status === 'to countersign' && test.witnessId === userId) return [{ kind: 'countersign', ...named }]
+    if (test.leadId !== userId) return []
+    if (test.status === 'concluded') return [{ kind: 'sign', ...named }]
+    if (test.status === 'declined') return [{ kind: 'declined', ...named }]
+    return test.status === 'stopped' ? [{ kind: 'conclude', ...named }] : []
+  })
+}
+
+function instrumentNeeds(instruments: readonly InstrumentToday[], day: string): Need[] {
+  return instruments.flatMap(({ calibration, ...named }): Need[] => {
+    const is = calibrationState(calibration, day)
+    if (is !== 'in-date') return [{ kind: 'instrument-out', ...named, is, dueOn: calibration?.dueOn ?? null }]
+    const dueOn = calibration?.dueOn
+    return dueOn !== undefined && dueOn <= addDays(day, SOON_DAYS) ? [{ kind: 'instrument-due', ...named, dueOn }] : []
+  })
+}
+
+const order: Record<Need['kind'], number> = {
+  'press-shut': 0,
+  'press-overdue': 1,
+  conclude: 2,
+  declined: 3,
+  sign: 4,
+  countersign: 5,
+  'instrument-out': 6,
+  'instrument-due': 7,
+  'press-due': 7,
+}
+const dateOf = (need: Need): string => ('dueOn' in need ? (need.dueOn ?? '') : 'until' in need ? need.until : (need.since ?? ''))
+
+function dueDates(presses: readonly PressRecord[], instruments: readonly InstrumentToday[], day: string): Due[] {
+  const end = addDays(day, WEEKS_AHEAD * 7)
+  const clearances = presses.flatMap((press): Due[] =>
+    press.status === 'cleared' && press.clearedUntil !== null
+      ? [{ kind: 'clearance', on: press.clearedUntil, pressId: press.id, pressName: press.name }]
+      : [],
+  )
+  const calibrations = instruments.flatMap(({ calibration, ...named }): Due[] =>
+    calibration === null ? [] : [{ kind: 'calibration', on: calibration.dueOn, ...named }],
+  )
+  return [...clearances, ...calibrations].filter(({ on }) => on >= day && on <= end).sort((a, b) => a.on.localeCompare(b.on))
+}
+
+/** What is under way, what waits for this person, which press may be used, and what falls due. */
+export async function readToday(work: Work, asked: string | undefined): Promise<Today> {
+  const { transaction, actor, now } = work
+  authorize(actor, 'press:read', { shopId: actor.shopId })
+  const day = asked ?? now.toISOString().slice(0, 10)
+  const records: PressRecord[] = await Press.findAll({
+    where: { shopId: actor.shopId },
+    order: [['name', 'ASC'], ['id', 'ASC']],
+    limit: MOST_PRESSES,
+    raw: true,
+    transaction,
+  })
+  const tests = await openTests(work)
+  const instruments = await instrumentsInUse(work)
+  const states = await foldShut(work, records)
+  const presses = records.map((press): PressToday => {
+    const test = tests.find((one) => one.pressId === press.id && press.status !== 'cleared' && one.status !== 'stopped')
+    const state = states.get(press.id)
+    const answer = state && mayItBeUsed(state, day)
+    return {
+      press,
+      why: answer?.answer === 'do not use' ? answer.why : null,
+      test: test === undefined ? null : { proofTestId: test.id, number: test.number, status: test.status },
+    }
+  })
+  const leads = can(actor, 'proof-test:open', { shopId: actor.shopId })
+  const needs = [...testNeeds(tests, actor.userId), ...(leads ? [...pressNeeds(presses, states, day), ...instrumentNeeds(instruments, day)] : [])]
+  needs.sort((a, b) => order[a.kind] - order[b.kind] || dateOf(a).localeCompare(dateOf(b)))
+  const underWay = tests.filter((test) => test.status === 'under way' || test.status === 'stopped')
+  return { day, underWay: await foldUnderWay(work, underWay, records), needs, presses, due: dueDates(records, instruments, day) }
+}
