@@ -82,6 +82,12 @@ function crosses(box: Box, a: Point, b: Point): boolean {
   return true
 }
 
+/** True when two straight strokes cross each other. */
+function cross([a, b]: [Point, Point], [c, d]: [Point, Point]): boolean {
+  const side = (p: Point, q: Point, r: Point): number => (q.x - p.x) * (r.y - p.y) - (q.y - p.y) * (r.x - p.x)
+  return side(a, b, c) > 0 !== side(a, b, d) > 0 && side(c, d, a) > 0 !== side(c, d, b) > 0
+}
+
 /** Strokes that words must not lie on: edges of the band, the fit, the steps. */
 function strokes(spec: LineChartSpec, frame: LineFrame): [Point, Point][] {
   const list: [Point, Point][] = []
@@ -160,6 +166,8 @@ function costOf(candidate: Omit<Candidate, 'cost'>, at: Point, obstacles: Obstac
   cost += obstacles.taken.filter((other) => overlap(wide, other)).length * 4000
   cost += obstacles.leaders.filter(([a, b]) => crosses(wide, a, b)).length * 1500
   cost += obstacles.taken.filter((other) => crosses(other, ...slanted)).length * 1500
+  cost += obstacles.strokes.filter((stroke) => cross(slanted, stroke)).length * 70
+  cost += obstacles.leaders.filter((leader) => cross(slanted, leader)).length * 900
   if (crosses(box, elbow, tip)) cost += 900
   if (overlap(wide, { left: at.x - 12, right: at.x + 12, top: at.y - 12, bottom: at.y + 12 })) cost += 1500
   return cost

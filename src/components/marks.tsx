@@ -57,6 +57,7 @@ const SOUND: Record<Tone, string> = {
 
 const OCTAGON = '7.03,0 16.97,0 24,7.03 24,16.97 16.97,24 7.03,24 0,16.97 0,7.03'
 
+/** On a red plate the octagon is an outline, and finer the larger it is. */
 function Octagon({ tone, weight }: { tone: Tone; weight: number }): ReactElement {
   const hollow = tone === 'plate'
   const edge = tone === 'dye' ? 'var(--stop-line)' : hollow ? LINE.plate : 'var(--stop)'
@@ -71,7 +72,7 @@ function Octagon({ tone, weight }: { tone: Tone; weight: number }): ReactElement
         stroke={edge}
         strokeWidth={weight / scale}
       />
-      <rect x={6.4} y={10} width={11.2} height={4} fill="var(--on-stop, #fff)" />
+      <rect x={6.2} y={hollow ? 10.2 : 10} width={11.6} height={hollow ? 3.6 : 4} fill="var(--on-stop, #fff)" />
     </>
   )
 }
@@ -113,7 +114,7 @@ function shape(name: MarkName, tone: Tone, weight: number): ReactElement {
       return <path d="M4.2 3.2h4.9v17.6H4.2zM14.9 3.2h4.9v17.6h-4.9z" fill={line} />
     case 'stop':
     case 'beyond':
-      return <Octagon tone={tone} weight={tone === 'plate' ? 1.6 : weight} />
+      return <Octagon tone={tone} weight={tone === 'plate' && weight >= 1.7 ? 1.6 : weight} />
     case 'undecided':
       return (
         <g>
@@ -167,7 +168,7 @@ export function pictureRole(label: string | undefined): SVGProps<SVGSVGElement> 
 
 /** One of the shapes that says a decision, a verdict or a state, beside its word. */
 export function Mark({ name, size = 24, tone = 'steel', label, className }: MarkProps): ReactElement {
-  const weight = size >= 60 ? 1.5 : size >= 36 ? 1.7 : 2
+  const weight = size >= 60 ? 0.95 : size >= 36 ? 1.7 : 2
   return (
     <svg
       viewBox="0 0 24 24"

@@ -1,9 +1,29 @@
 import type { ReactNode } from 'react'
 import { classNames } from '../lib/class-names'
 
-function Numbers({ count }: { count: number }) {
+type Tone = 'dye' | 'sheet'
+
+/** Between zones lies a rule; on paper the border comes in sooner, because a record has nothing to spare it for. */
+const LINES: Record<Tone, { across: string; down: string; outer: string; inner: string; type: string }> = {
+  dye: {
+    across: 'divide-ghost desktop:flex',
+    down: 'divide-ghost desktop:flex',
+    outer: 'border-ghost desktop:border',
+    inner: 'border-scribe text-scribe desktop:border-2',
+    type: 'ground-dye text-faint-scribe',
+  },
+  sheet: {
+    across: 'divide-rule tablet:flex',
+    down: 'divide-rule tablet:flex',
+    outer: 'border-rule tablet:border',
+    inner: 'border-ink text-ink border-2',
+    type: 'ground-sheet text-ink',
+  },
+}
+
+function Numbers({ count, tone }: { count: number; tone: Tone }) {
   return (
-    <div aria-hidden="true" className="hidden h-6 divide-x divide-ghost px-6 desktop:flex">
+    <div aria-hidden="true" className={classNames('hidden h-6 divide-x px-6 text-14', LINES[tone].across)}>
       {Array.from({ length: count }, (_, index) => (
         <span key={index} className="flex grow basis-0 items-center justify-center">
           {index + 1}
@@ -13,9 +33,9 @@ function Numbers({ count }: { count: number }) {
   )
 }
 
-function Letters({ count }: { count: number }) {
+function Letters({ count, tone }: { count: number; tone: Tone }) {
   return (
-    <div aria-hidden="true" className="hidden w-6 flex-col divide-y divide-ghost desktop:flex">
+    <div aria-hidden="true" className={classNames('hidden w-6 shrink-0 flex-col divide-y text-14', LINES[tone].down)}>
       {Array.from({ length: count }, (_, index) => (
         <span key={index} className="flex grow basis-0 items-center justify-center">
           {String.fromCharCode(65 + index)}
@@ -25,20 +45,21 @@ function Letters({ count }: { count: number }) {
   )
 }
 
-type ZonedSheetProps = { columns: number; rows: number; children: ReactNode; className?: string }
+type ZonedSheetProps = { columns?: number; rows?: number; tone?: Tone; children: ReactNode; className?: string }
 
-/** A drawing sheet on dye: border zones numbered along and lettered down, where there is room for a border. */
-export function ZonedSheet({ columns, rows, children, className }: ZonedSheetProps) {
+/** A drawing sheet: border zones numbered along and lettered down, where there is room for a border. */
+export function ZonedSheet({ columns = 8, rows = 8, tone = 'dye', children, className }: ZonedSheetProps) {
+  const lines = LINES[tone]
   return (
-    <div className={classNames('ground-dye flex flex-col font-condensed text-faint-scribe', className)}>
-      <div className="flex grow flex-col border-ghost desktop:border">
-        <Numbers count={columns} />
+    <div className={classNames('flex flex-col font-condensed', lines.type, className)}>
+      <div className={classNames('flex grow flex-col', lines.outer)}>
+        <Numbers count={columns} tone={tone} />
         <div className="flex grow">
-          <Letters count={rows} />
-          <div className="flex min-w-0 grow flex-col border-scribe font-sans text-scribe desktop:border-2">{children}</div>
-          <Letters count={rows} />
+          <Letters count={rows} tone={tone} />
+          <div className={classNames('flex min-w-0 grow flex-col font-sans', lines.inner)}>{children}</div>
+          <Letters count={rows} tone={tone} />
         </div>
-        <Numbers count={columns} />
+        <Numbers count={columns} tone={tone} />
       </div>
     </div>
   )

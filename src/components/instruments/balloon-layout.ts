@@ -13,7 +13,8 @@ export interface Anchor {
 export interface Elevation {
   lanes: Record<Lane, number>
   anchors: Record<string, Anchor>
-  points: Record<string, { at: Point; letter: 'left' | 'right' }>
+  /** `clear` is how far from the triangle's middle its letter stands. */
+  points: Record<string, { at: Point; letter: 'left' | 'right'; clear?: number }>
   /** First and last px from the top that a balloon's centre may have. */
   from: number
   to: number

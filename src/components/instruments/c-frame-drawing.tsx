@@ -58,8 +58,8 @@ export function cFrameOf(dimensions: PressDimensions, box: Box): CFrame {
     top,
     floor,
     headBottom: Math.round(top + tall * 0.2),
-    bedTop: Math.round(floor - tall * 0.3),
-    bedBottom: Math.round(floor - tall * 0.12),
+    bedTop: Math.round(floor - tall * 0.34),
+    bedBottom: Math.round(floor - tall * 0.16),
     span: Math.min((axis - nose) * 3.4, wide * 0.9),
   }
 }
@@ -82,7 +82,7 @@ export function cFrameElevation(frame: CFrame): Elevation {
       'ram-seat': { tip: { x: axis - span * 0.12, y: ram.seat - 1 }, lane: 'outer-left', y: ram.seat + 34 },
       'ram-adaptor': { tip: { x: axis - span * 0.06, y: ram.rod + 5 }, lane: 'outer-left', y: ram.rod + 26 },
       'bed-left': { tip: { x: nose + 2, y: bedTop + 16 }, lane: 'outer-left', y: bedTop + 6 },
-      'bed-stiffener-left': { tip: { x: nose + 24, y: bedBottom - 10 }, lane: 'outer-left', y: bedBottom + 24 },
+      'bed-stiffener-left': { tip: { x: nose + 19, y: bedBottom - 14 }, lane: 'outer-left', y: bedBottom + 24 },
       'foot-left': { tip: { x: nose + 20, y: floor - 9 }, lane: 'outer-left', y: floor - 30 },
       'foot-right': { tip: { x: back - 6, y: floor - 9 }, lane: 'outer-right', y: floor - 40 },
     },
@@ -111,6 +111,7 @@ export function CFrameDrawing({ frame, dimensions }: { frame: CFrame; dimensions
       <Ground from={Math.max(4, nose - 44)} to={Math.min(box.width - 4, back + 44)} y={floor} />
       <Outline>
         <path d={outline} fill="var(--dye)" />
+        <rect x={nose + 16} y={bedTop + 5} width={4} height={bedBottom - bedTop - 10} strokeWidth={1.2} />
         <rect x={nose + 6} y={floor - 10} width={back - nose + 10} height={10} fill="var(--dye)" />
       </Outline>
       <Hair
@@ -124,7 +125,7 @@ export function CFrameDrawing({ frame, dimensions }: { frame: CFrame; dimensions
       <CentreLine d={`M${axis} ${top - 24}V${floor + 12}`} strong />
       <CentreLine d={`M${(column + back) / 2} ${top - 14}V${floor + 12}`} />
       {height !== null && <Upright x={frame.dimensionX} top={top} bottom={floor} reach={nose - 8} text={height} />}
-      {throat !== null && <Across y={bedBottom + 62} left={axis} right={column} text={throat} />}
+      {throat !== null && <Across y={Math.round((bedBottom + floor) / 2) + 6} left={axis} right={column} text={throat} />}
     </g>
   )
 }

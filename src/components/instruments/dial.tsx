@@ -84,7 +84,7 @@ function Face({ at, fullScale, steps, limit }: FaceProps): ReactElement {
 
 function Labels({ at, fullScale, step }: { at: (value: number) => number; fullScale: number; step: number }): ReactElement {
   const inner = multiples(step, step, fullScale - step / 2)
-  const decimals = step % 1 === 0 ? 0 : step % 0.5 === 0 ? 1 : 2
+  const decimals = decimalsOf(step)
   const ends: [number, Point][] = [
     [0, { x: 69, y: 201 }],
     [fullScale, { x: 226, y: 201 }],
@@ -92,7 +92,10 @@ function Labels({ at, fullScale, step }: { at: (value: number) => number; fullSc
   return (
     <g fontSize={17} fontWeight={500} fontFamily={CONDENSED} fill="var(--scribe)" textAnchor="middle">
       {inner.map((value) => {
-        const point = onFace(at(value), inner.length > 3 ? 57 : 59)
+        // Long figures move in, so that their outer end stays clear of the ticks.
+        const half = groupDigits(value, decimals).length * 4.3
+        const lean = (at(value) * Math.PI) / 180
+        const point = onFace(at(value), 72 - half * Math.abs(Math.sin(lean)) - 6 * Math.abs(Math.cos(lean)))
         return (
           <text key={value} x={point.x} y={point.y + 6}>
             {groupDigits(value, decimals)}

@@ -81,7 +81,7 @@ function MeasuringPoint({ letter, spot }: { letter: string; spot: Elevation['poi
         strokeWidth={1.5}
       />
       <text
-        x={left ? x - 20 : x + 13}
+        x={left ? x - (spot.clear ?? 13) : x + (spot.clear ?? 13)}
         y={y + 7}
         fontSize={16}
         fontWeight={500}

@@ -88,6 +88,9 @@ function Rung({ stage, y, room, right, shut }: RungProps): ReactElement {
   const figures = room.above >= 76 ? 30 : room.above >= 56 ? 24 : 18
   const words = room.below >= 50 ? 16 : 14
   const first = y + (words === 16 ? 21 : 16)
+  // With room for one line only, what is going on now matters more than the load, which the bench shows.
+  const roomy = room.below >= 72
+  const noteFirst = !roomy && room.below >= 38 && (live || stage.state === 'stopped')
   const loadInk = stage.state === 'to-come' ? 'var(--faint-scribe)' : 'var(--scribe)'
   return (
     <g>
@@ -109,13 +112,20 @@ function Rung({ stage, y, room, right, shut }: RungProps): ReactElement {
         size={figures === 30 ? 24 : 18}
         tone="dye"
       />
-      {room.below >= 38 && (
+      {room.below >= 38 && !noteFirst && (
         <text x={WORDS} y={first} fontSize={words} fontWeight={500} fill={loadInk} fontFamily={CONDENSED}>
           {stage.load}
         </text>
       )}
-      {room.below >= 72 && (
-        <text x={WORDS} y={first + 20} fontSize={16} fontWeight={ink.noteWeight} fill={ink.note} fontFamily={CONDENSED}>
+      {(roomy || noteFirst) && (
+        <text
+          x={WORDS}
+          y={noteFirst ? first : first + 20}
+          fontSize={16}
+          fontWeight={ink.noteWeight}
+          fill={ink.note}
+          fontFamily={CONDENSED}
+        >
           {stage.note}
         </text>
       )}

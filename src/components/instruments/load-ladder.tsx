@@ -52,7 +52,7 @@ export function LoadLadder({ scale, words = true, height, ...ladder }: LoadLadde
       {scale === 'vertical' ? (
         <LadderUpright {...ladder} stages={stages} height={height ?? 644} />
       ) : (
-        <LadderStrip {...ladder} stages={stages} height={height ?? (words ? 132 : 96)} words={words} />
+        <LadderStrip {...ladder} stages={stages} height={height ?? (words ? 146 : 96)} words={words} />
       )}
       <ol aria-label="Stages of load" className="sr-only">
         {stages.map((stage) => (

@@ -127,17 +127,31 @@ function Feet({ portal }: PartProps): ReactElement {
   )
 }
 
+/** What a bench press stands on. */
+function Pads({ portal }: PartProps): ReactElement {
+  const { cx, bedHalf, bedBottom, floor, span } = portal
+  const wide = Math.round(span * 0.1)
+  return (
+    <Outline>
+      {[cx - bedHalf, cx + bedHalf - wide].map((x) => (
+        <rect key={x} x={x} y={bedBottom} width={wide} height={floor - bedBottom} fill="var(--dye)" />
+      ))}
+    </Outline>
+  )
+}
+
 /** Two uprights, a head and a bed: H-frame, four-post or bench press, each with its own feet and fixings. */
 export function PortalDrawing({ portal, dimensions }: PartProps & { dimensions: PressDimensions }): ReactElement {
   const { cx, left, right, top, floor, headBottom, bedTop, bedBottom, bedHalf, kind, box, dimensionX } = portal
   const height = millimetres(dimensions.height)
   const width = millimetres(dimensions.width)
-  const acrossY = kind === 'bench' ? (headBottom + bedTop) / 2 + 12 : Math.min(bedBottom + 129, (bedBottom + floor) / 2 + 20)
+  // On a bench press the daylight is taken up by the ram, so the figure goes above the head.
+  const acrossY = kind === 'bench' ? top - 18 : Math.min(bedBottom + 129, (bedBottom + floor) / 2 + 20)
   return (
     <g>
       <Ground from={Math.max(4, cx - bedHalf - 54)} to={Math.min(box.width - 4, cx + bedHalf + 54)} y={floor} />
       <Uprights portal={portal} />
-      {kind !== 'bench' && <Feet portal={portal} />}
+      {kind === 'bench' ? <Pads portal={portal} /> : <Feet portal={portal} />}
       <Beams portal={portal} />
       {kind === 'four-post' && <Nuts portal={portal} />}
       <RamStack cx={cx} span={portal.span} top={headBottom} bottom={bedTop} heights={ramHeights(portal)} />

@@ -72,7 +72,7 @@ export function portalOf(kind: FrameKind, dimensions: PressDimensions, box: Box)
   const height = dimensions.height ?? typical.height
   const width = dimensions.width ?? typical.width
   const floor = Math.round(box.height - 24)
-  const room = floor - 30
+  const room = floor - (kind === 'bench' ? 56 : 30)
   const scale = Math.min(room / height, (2 * half) / (width * 1.22))
   // A frame much slimmer or squatter than its box is drawn wider or taller than it is: the figures tell the truth.
   const tall = Math.round(Math.max(height * scale, room * 0.72))
@@ -88,7 +88,7 @@ export function portalOf(kind: FrameKind, dimensions: PressDimensions, box: Box)
   const pitch = (dimensions.holePitch ?? height * 0.094) * (tall / height)
   const holes = holesBetween(headBottom + tall * 0.14, floor - tall * 0.17, count, pitch)
   const bedHole = dimensions.bedHole ?? Math.ceil(count * 0.68)
-  const low = kind === 'bench' ? floor - 8 - bedDepth / 2 : floor - tall * 0.24
+  const low = kind === 'bench' ? floor - 18 - bedDepth / 2 : floor - tall * 0.24
   const pinned = holes[Math.min(Math.max(bedHole, 1), Math.max(count, 1)) - 1]
   const pin = pinned ?? Math.round(low) + 0.5
   const inner = (left + post + cx - span * 0.09) / 2
@@ -157,6 +157,8 @@ export function portalElevation(portal: Portal): Elevation {
   const postX = (right - left) / 2
   const middle = (headBottom + bedTop) / 2
   const under = bedBottom + 67
+  // Under a four-post's bed the nuts come first.
+  const below = bedBottom + (portal.kind === 'four-post' ? 21 : 9)
   return {
     lanes: portal.lanes,
     from: Math.max(24, top - 4),
@@ -174,10 +176,10 @@ export function portalElevation(portal: Portal): Elevation {
     },
     points: {
       'bed-middle': { at: { x: cx, y: bedBottom + 9 }, letter: 'right' },
-      'bed-pin-left': { at: { x: left, y: bedBottom + 9 }, letter: 'left' },
-      'bed-pin-right': { at: { x: right, y: bedBottom + 9 }, letter: 'right' },
-      'bed-left': { at: { x: left, y: bedBottom + 9 }, letter: 'left' },
-      'bed-right': { at: { x: right, y: bedBottom + 9 }, letter: 'right' },
+      'bed-pin-left': { at: { x: left, y: below }, letter: 'left', clear: post + 5 },
+      'bed-pin-right': { at: { x: right, y: below }, letter: 'right', clear: post + 5 },
+      'bed-left': { at: { x: left, y: below }, letter: 'left', clear: post + 5 },
+      'bed-right': { at: { x: right, y: below }, letter: 'right', clear: post + 5 },
       'head-middle': { at: { x: cx + span * 0.3, y: headBottom + 9 }, letter: 'right' },
       'head-left': { at: { x: left + post + 16, y: headBottom + 9 }, letter: 'right' },
       'head-right': { at: { x: right - post - 16, y: headBottom + 9 }, letter: 'left' },

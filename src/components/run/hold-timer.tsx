@@ -72,7 +72,7 @@ function Scale({ total, elapsed, width, words }: ScaleProps): ReactElement {
       {words &&
         labels.map((value, index) => {
           const anchor = index === 0 ? 'start' : index === labels.length - 1 ? 'end' : 'middle'
-          const crowded = index === labels.length - 2 && at(total) - at(value) < 74
+          const crowded = index === labels.length - 2 && at(total) - at(value) < 58
           return crowded ? null : (
             <text
               key={value}

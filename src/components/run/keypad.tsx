@@ -57,7 +57,7 @@ function EnterTall({ label, note, last }: { label: string; note: string | undefi
       <span className="block text-26 font-semibold leading-[34px]">{label}</span>
       {note !== undefined && (
         <>
-          <span className="mt-2 block max-w-[80px] text-16 font-medium leading-[21px]">{note}</span>
+          <span className="mt-2 block max-w-[84px] text-balance text-16 font-medium leading-[21px]">{note}</span>
           <svg aria-hidden viewBox="0 0 56 24" width={56} height={24} className="mt-4">
             <path d="M0 12H40" stroke="currentColor" strokeWidth={3} />
             <path d="M36 0 56 12 36 24Z" fill="currentColor" />
@@ -116,22 +116,18 @@ export function Keypad(props: KeypadProps): ReactElement {
     )
   }
   return (
-    <div role="group" aria-label="Keys" className="grid h-full min-h-[348px] grid-cols-[minmax(0,4fr)_minmax(0,1fr)] gap-[6px]">
-      <div className="grid grid-cols-4 grid-rows-3 gap-[6px]">
-        {[...'123'].map(key)}
-        {back}
-        {[...'456'].map(key)}
-        {key(decimal)}
-        {[...'789'].map(key)}
-        {key('0')}
-      </div>
-      <div className="flex flex-col gap-[6px]">
-        {signed && <div className="grid min-h-[72px] shrink-0 basis-[30%]">{key('-')}</div>}
-        {enter(
-          'flex min-h-0 flex-1 flex-col items-center justify-center',
-          <EnterTall label={props.enterLabel} note={props.enterNote} last={props.enterLast} />,
-        )}
-      </div>
+    <div role="group" aria-label="Keys" className="grid h-full min-h-[348px] grid-cols-5 grid-rows-3 gap-[6px]">
+      {[...'123'].map(key)}
+      {back}
+      {signed && key('-')}
+      {enter(
+        `col-start-5 flex min-h-0 flex-col items-center justify-center ${signed ? 'row-span-2 row-start-2' : 'row-span-3 row-start-1'}`,
+        <EnterTall label={props.enterLabel} note={props.enterNote} last={props.enterLast} />,
+      )}
+      {[...'456'].map(key)}
+      {key(decimal)}
+      {[...'789'].map(key)}
+      {key('0')}
     </div>
   )
 }

@@ -32,7 +32,7 @@ export function LiveFigure({ question, hint, found, load }: LiveFigureProps): Re
           ) : (
             <>
               <span className="mt-1 flex items-center gap-3">
-                <span className="text-76 font-semibold tracking-[-0.01em]">{load.figure}</span>
+                <span className="text-54 font-semibold tracking-[-0.01em] tablet:text-76">{load.figure}</span>
                 <span className="text-22 font-medium leading-[24px]">
                   {words.map((word) => (
                     <span key={word} className="block">

@@ -26,11 +26,11 @@ export function QuietPlate({ title, note, onPress }: PlateProps): ReactElement {
     <button
       type="button"
       onClick={onPress}
-      className="flex min-h-[76px] w-full touch-manipulation flex-col items-center justify-center rounded-key border-2 border-faint-scribe bg-transparent px-1 text-center text-scribe tablet:min-h-28"
+      className="flex h-full min-h-[76px] w-full touch-manipulation flex-col items-center justify-center rounded-key border-2 border-faint-scribe bg-transparent px-1 text-center text-scribe tablet:min-h-28"
     >
-      <span className="text-20 font-medium tablet:text-22">{title}</span>
+      <span className="text-20 font-medium leading-[24px] tablet:text-22 tablet:leading-[28px]">{title}</span>
       {note !== undefined && (
-        <span className="max-w-[132px] text-16 leading-[20px] text-faint-scribe">{note}</span>
+        <span className="max-w-[132px] text-balance text-16 leading-[20px] text-faint-scribe">{note}</span>
       )}
     </button>
   )

@@ -1,5 +1,5 @@
 import { useEffect, useId, useRef } from 'react'
-import type { KeyboardEvent, ReactElement } from 'react'
+import type { CSSProperties, KeyboardEvent, ReactElement } from 'react'
 
 export interface ReadingField {
   id: string
@@ -108,7 +108,7 @@ function Field(props: FieldProps): ReactElement {
           event.preventDefault()
           props.onEnter()
         }}
-        className={`block h-16 w-full rounded-field bg-field px-[10px] text-34 font-medium text-ink caret-ink ${edge} ${focused ? 'focus-ring' : ''}`}
+        className={`block h-16 w-full rounded-field bg-field px-[10px] font-medium ${field.text.length > 5 ? 'text-22' : 'text-34'} text-ink caret-ink ${edge} ${focused ? 'focus-ring' : ''}`}
       />
     </div>
   )
@@ -132,7 +132,7 @@ export function ReadingRow(props: ReadingRowProps): ReactElement {
     props.onCommit?.(field.id, next === undefined)
     if (next !== undefined) inputs.current.get(next.id)?.focus()
   }
-  const columns = `repeat(${Math.min(fields.length, 4)}, minmax(0, 1fr))`
+  const columns = { '--columns': Math.min(fields.length, 4) } as CSSProperties
   return (
     <div>
       <div className="flex flex-wrap gap-2 tablet:flex-nowrap">
@@ -140,7 +140,10 @@ export function ReadingRow(props: ReadingRowProps): ReactElement {
           <p className="mb-[5px] hidden text-16 font-medium leading-[24px] tablet:block">This row</p>
           <MarkPlate mark={props.mark} onMark={props.onMark} note={props.markNote} />
         </div>
-        <div className="grid min-w-0 flex-1 gap-2" style={{ gridTemplateColumns: columns }}>
+        <div
+          className="grid min-w-0 flex-1 grid-cols-2 gap-2 tablet:grid-cols-[repeat(var(--columns),minmax(0,1fr))]"
+          style={columns}
+        >
           {fields.map((field, index) => (
             <Field
               key={field.id}

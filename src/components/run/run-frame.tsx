@@ -39,7 +39,10 @@ interface RunFrameProps {
   over?: ReactNode
   /** The next action; in the bench's foot on a tablet lying down, beside Stop on one held upright. */
   action?: ReactNode
-  /** Note and Pause, or what is stored in the frame. */
+  /** Plates beside the next action. On a phone Pause keeps the bar and Note goes under the bench. */
+  pause?: ReactNode
+  note?: ReactNode
+  /** Words in place of the two plates, for example the energy that is stored in the frame. */
   aside?: ReactNode
   stopped: { at: string } | null
   onStop: () => void
@@ -53,7 +56,7 @@ function Landscape(props: RunFrameProps): ReactElement {
         <Fit className="min-h-0 flex-1" initial={{ width: 223, height: 644 }}>
           {(size) => props.ladder(size, 'landscape')}
         </Fit>
-        <div className="shrink-0 p-4 pt-0">
+        <div className="shrink-0 p-4 pr-[15px] pt-0">
           <StopPlate stopped={props.stopped} onStop={props.onStop} connected={props.connected} />
         </div>
       </div>
@@ -66,8 +69,20 @@ function Landscape(props: RunFrameProps): ReactElement {
         <Fit className="min-h-0 flex-1" initial={{ width: 339, height: 644 }}>
           {(size) => props.line(size, 'landscape')}
         </Fit>
-        {props.aside !== undefined && <div className="grid shrink-0 grid-cols-2 gap-3 p-4 pt-0">{props.aside}</div>}
+        <div className="h-32 shrink-0 px-4 pb-4">
+          {props.aside ?? <Plates {...props} />}
+        </div>
       </div>
+    </div>
+  )
+}
+
+/** Note and Pause side by side, or the one there is. */
+function Plates({ note, pause }: Pick<RunFrameProps, 'note' | 'pause'>): ReactElement {
+  return (
+    <div className="grid h-full auto-cols-fr grid-flow-col gap-3">
+      {note}
+      {pause}
     </div>
   )
 }
@@ -91,12 +106,13 @@ function Portrait(props: RunFrameProps): ReactElement {
 }
 
 function Bar(props: RunFrameProps): ReactElement {
-  const both = props.action !== undefined && props.aside !== undefined
+  const plates = props.aside ?? (props.note !== undefined || props.pause !== undefined ? <Plates {...props} /> : undefined)
+  const both = props.action !== undefined && plates !== undefined
   return (
     <div className={`ground-dye grid h-36 shrink-0 items-center gap-3 px-4 ${both ? 'grid-cols-[192px_minmax(0,1fr)_minmax(200px,0.54fr)]' : 'grid-cols-[192px_minmax(0,1fr)]'}`}>
       <StopPlate stopped={props.stopped} onStop={props.onStop} connected={props.connected} />
       {props.action !== undefined && <div>{props.action}</div>}
-      {props.aside !== undefined && <div className="grid auto-cols-fr grid-flow-col gap-3">{props.aside}</div>}
+      {plates !== undefined && <div className="h-28">{plates}</div>}
     </div>
   )
 }
@@ -113,6 +129,12 @@ function Phone(props: RunFrameProps): ReactElement {
       <main className="ground-steel min-h-0 flex-1 overflow-y-auto">
         <div className="px-4 py-3">{props.bench}</div>
         {props.action !== undefined && <div className="px-4 pb-4">{props.action}</div>}
+        {(props.note !== undefined || props.aside !== undefined) && (
+          <div className="ground-dye grid gap-3 px-4 pt-4">
+            {props.aside}
+            {props.note}
+          </div>
+        )}
         <div className="ground-dye">
           <Fit className="h-[420px]" initial={{ width: 390, height: 420 }}>
             {(size) => props.line(size, 'phone')}
@@ -121,7 +143,7 @@ function Phone(props: RunFrameProps): ReactElement {
       </main>
       <div className="ground-dye grid shrink-0 grid-cols-[205fr_143fr] gap-[10px] px-4 py-[10px]">
         <StopPlate size="phone" stopped={props.stopped} onStop={props.onStop} connected={props.connected} />
-        {props.aside !== undefined && <div className="grid auto-cols-fr grid-flow-col gap-[10px]">{props.aside}</div>}
+        {props.pause}
       </div>
     </>
   )

@@ -8,8 +8,8 @@ export interface TitleCell {
   /** Faint words after the value. */
   note?: string
   strong?: boolean
-  /** Left out first where there is no room. */
-  spare?: boolean
+  /** The smallest screen that has room for it; a phone unless said otherwise. */
+  from?: 'phone' | 'tablet' | 'desktop'
 }
 
 /** How far every entry of this test has come. */
@@ -18,6 +18,8 @@ export interface KeptState {
   server: boolean
   sealed: boolean
 }
+
+const FROM = { phone: 'flex', tablet: 'hidden tablet:flex', desktop: 'hidden desktop:flex' }
 
 interface RunTitleBlockProps {
   cells: TitleCell[]
@@ -28,7 +30,7 @@ interface RunTitleBlockProps {
 
 function Lamp({ on, word, title }: { on: boolean; word: string; title: string }): ReactElement {
   return (
-    <span className="flex items-center gap-[9px]" title={title}>
+    <span className="flex items-center gap-[7px] desktop:gap-[9px]" title={title}>
       <svg aria-hidden viewBox="0 0 14 14" width={14} height={14}>
         <circle cx={7} cy={7} r={5.4} fill={on ? 'var(--scribe)' : 'none'} stroke="var(--scribe)" strokeWidth={1.6} />
       </svg>
@@ -49,7 +51,7 @@ export function RunTitleBlock({ cells, kept, waiting = 0 }: RunTitleBlockProps):
         {cells.map((cell) => (
           <div
             key={`${cell.label ?? ''}${cell.value}`}
-            className={`min-w-0 items-center gap-2 whitespace-nowrap border-r border-ghost px-3 text-16 last:border-r-0 tablet:px-4 tablet:last:border-r ${cell.spare === true ? 'hidden desktop:flex' : 'flex'}`}
+            className={`min-w-0 items-center gap-2 whitespace-nowrap border-r border-ghost px-3 text-16 last:border-r-0 tablet:last:border-r desktop:px-4 ${cell.label === undefined ? 'shrink-0' : ''} ${FROM[cell.from ?? 'phone']}`}
           >
             <dt className={cell.label === undefined ? 'sr-only' : 'text-faint-scribe'}>{cell.label ?? 'Test'}</dt>
             <dd className="truncate">
@@ -60,7 +62,7 @@ export function RunTitleBlock({ cells, kept, waiting = 0 }: RunTitleBlockProps):
         ))}
       </dl>
       {kept !== undefined && (
-        <p className="hidden shrink-0 items-center gap-[9px] whitespace-nowrap px-4 text-16 tablet:flex">
+        <p className="hidden shrink-0 items-center gap-[7px] whitespace-nowrap px-3 text-16 tablet:flex desktop:gap-[9px] desktop:px-4">
           <Lamp on={kept.tablet} word="tablet" title="Kept on this tablet" />
           <Lamp on={kept.server} word={waiting > 0 ? `server, ${waiting} to send` : 'server'} title="Kept on the server" />
           <Lamp on={kept.sealed} word="sealed" title="Under a seal" />

@@ -21,7 +21,7 @@ export function VerdictBanner({ decision, title, instruction, caution, headingRe
   return (
     <section
       aria-labelledby={id}
-      className={`flex items-center gap-4 px-4 py-5 tablet:min-h-[152px] tablet:gap-6 tablet:px-6 ${stop ? 'bg-stop text-on-stop' : 'ground-dye'}`}
+      className={`flex items-center gap-4 px-4 py-4 tablet:min-h-[152px] tablet:py-3 tablet:gap-6 tablet:px-6 ${stop ? 'bg-stop text-on-stop' : 'ground-dye'}`}
     >
       <span className="hidden tablet:block">
         <Mark name={decision} tone={stop ? 'plate' : 'dye'} size={104} />
@@ -30,7 +30,7 @@ export function VerdictBanner({ decision, title, instruction, caution, headingRe
         <Mark name={decision} tone={stop ? 'plate' : 'dye'} size={56} />
       </span>
       <div className="min-w-0">
-        <h2 id={id} ref={headingRef} tabIndex={-1} className="text-34 font-bold tablet:text-54 tablet:leading-[56px]">
+        <h2 id={id} ref={headingRef} tabIndex={-1} className="text-34 font-bold tablet:text-54 tablet:leading-[54px]">
           {title}
         </h2>
         <p className="text-20 font-semibold tablet:text-26 tablet:leading-[34px]">{setPercent(instruction)}</p>

@@ -19,6 +19,7 @@ interface VerdictScaleProps {
   /** An earlier value, for comparison. */
   before?: { value: number; label: string }
   width?: number
+  ground?: 'steel' | 'sheet'
 }
 
 const FOOT = 92
@@ -86,7 +87,7 @@ function Ruler({ at, ticks, limit, unit }: { at: (value: number) => number; tick
 
 /** The value with its uncertainty beside its limit, on one number line: all of it, or none of it, past the limit. */
 export function VerdictScale(props: VerdictScaleProps): ReactElement {
-  const { value, uncertainty, limit, verdict, before, width = 568, unit } = props
+  const { value, uncertainty, limit, verdict, before, width = 568, unit, ground = 'steel' } = props
   const reach = Math.max(limit.value * 1.25, value + uncertainty, before?.value ?? 0, limit.value > 0 ? 0 : 1)
   const ticks = axisTicks(reach, width < 420 ? 4 : 6)
   const at = (x: number): number => 1 + ((width - 2) * Math.min(Math.max(x, 0), ticks.max)) / ticks.max
@@ -97,7 +98,9 @@ export function VerdictScale(props: VerdictScaleProps): ReactElement {
   const half = estimateTextWidth(text, 22, 600, false) / 2
   const textX = Math.min(Math.max(here, half), width - half)
   // The value's own words stand higher than the limit's, so that the two may come close.
-  const limitLeft = edge - estimateTextWidth(limitText, 18, 600, false) - 12 > 0
+  const limitWidth = estimateTextWidth(limitText, 18, 600, false) + 14
+  const clear = (left: number, right: number): boolean => left >= 0 && right <= width && (to + 4 < left || from - 4 > right)
+  const side = clear(edge - limitWidth, edge) ? 'left' : clear(edge, edge + limitWidth) ? 'right' : 'over'
   const beyond = [
     { x: edge, y: FOOT - 26 },
     { x: width - 1, y: FOOT - 26 },
@@ -114,16 +117,16 @@ export function VerdictScale(props: VerdictScaleProps): ReactElement {
       className="block max-w-full overflow-visible"
     >
       <path d={hatch(beyond, 7)} fill="none" stroke="var(--stop-ink)" strokeWidth={1} opacity={0.75} />
-      <path d={`M${edge} 48V${FOOT + 12}`} stroke="var(--ink)" strokeWidth={3} />
+      <path d={`M${edge} ${side === 'over' ? 6 : 48}V${FOOT + 12}`} stroke="var(--ink)" strokeWidth={3} />
       <Ruler at={at} ticks={ticks} limit={limit.value} unit={unit} />
       <text
-        x={limitLeft ? edge - 11 : edge + 11}
-        y={62}
+        x={side === 'left' || (side === 'over' && edge > width / 2) ? edge - 11 : edge + 11}
+        y={side === 'over' ? 18 : 62}
         fontSize={18}
         fontWeight={600}
-        textAnchor={limitLeft ? 'end' : 'start'}
+        textAnchor={side === 'left' || (side === 'over' && edge > width / 2) ? 'end' : 'start'}
         fill="var(--ink)"
-        stroke="var(--steel)"
+        stroke={`var(--${ground})`}
         strokeWidth={5}
         paintOrder="stroke"
       >
@@ -149,7 +152,7 @@ export function VerdictScale(props: VerdictScaleProps): ReactElement {
         fontWeight={600}
         textAnchor="middle"
         fill={ink}
-        stroke="var(--steel)"
+        stroke={`var(--${ground})`}
         strokeWidth={5}
         paintOrder="stroke"
       >
