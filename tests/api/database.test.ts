@@ -1,0 +1,137 @@
+import { randomUUID } from 'node:crypto'
+import { QueryTypes } from 'sequelize'
+import { describe, expect, inject, it } from 'vitest'
+import { inTransaction } from '#server/context'
+import { connect } from '#server/database/connection'
+import { migrateDown, migrateUp } from '#server/database/migrator'
+import { migrations } from '#server/database/migrations/index'
+import { LedgerEntry, Ledger, Instrument } from '#server/models/index'
+import { openShop } from '../factories/people'
+import { testServer } from '../support/api-server'
+import { schemaFor } from '../support/schema'
+
+const zeros = '0'.repeat(64)
+
+describe('migrations', () => {
+  it('go up, down one by one and all the way, and up again to the same tables', async () => {
+    const database = connect(await schemaFor(inject('databaseUrl'), `migrations_${process.env['VITEST_POOL_ID'] ?? '1'}`), { poolSize: 2 })
+    const tables = async () => {
+      const rows = await database.query<{ text: string }>(
+        `SELECT CONCAT_WS(' ', table_name, column_name, column_type, is_nullable, collation_name) AS text
+           FROM information_schema.columns WHERE table_schema = DATABASE() ORDER BY table_name, ordinal_position`,
+        { type: QueryTypes.SELECT },
+      )
+      return rows.map((row) => row.text).filter((text) => !text.startsWith('migrations '))
+    }
+    try {
+      await migrateDown(database, 'all')
+      expect(await tables()).toEqual([])
+      const names = migrations.map((migration) => migration.name)
+      expect(await migrateUp(database)).toEqual(names)
+      const first = await tables()
+      expect(await migrateUp(database)).toEqual([])
+      expect(await migrateDown(database, 'one')).toEqual(names.slice(-1))
+      expect(await migrateUp(database)).toEqual(names.slice(-1))
+      expect(await migrateDown(database, 'all')).toEqual([...names].reverse())
+      expect(await tables()).toEqual([])
+      await migrateUp(database)
+      expect(await tables()).toEqual(first)
+    } finally {
+      await database.close()
+    }
+  })
+
+  it('run once when two servers start together', async () => {
+    const url = await schemaFor(inject('databaseUrl'), `together_${process.env['VITEST_POOL_ID'] ?? '1'}`)
+    const servers = [connect(url, { poolSize: 2 }), connect(url, { poolSize: 2 })]
+    try {
+      const ran = await Promise.all(servers.map((server) => migrateUp(server)))
+      expect(ran.flat().sort()).toEqual(migrations.map((migration) => migration.name).sort())
+    } finally {
+      await Promise.all(servers.map((server) => server.close()))
+    }
+  })
+})
+
+describe('the models', () => {
+  it('name columns that their tables have', async () => {
+    const { database } = testServer().context
+    const models = Object.values(database.models).filter((model) => model.getTableName() !== 'migrations')
+    expect(models.length).toBeGreaterThanOrEqual(14)
+    for (const model of models) {
+      const described = Object.keys(await database.getQueryInterface().describeTable(model.getTableName()))
+      const named = Object.values(model.getAttributes()).map((attribute) => attribute.field)
+      expect(named.sort(), model.name).toEqual(described.sort())
+    }
+  })
+})
+
+describe('what the database gives back', () => {
+  it('is what went in: decimals as text, counts as numbers, times in UTC to the millisecond', async () => {
+    const [row] = await testServer().context.database.query<{ decimal: string; count: number; time: Date }>(
+      "SELECT CAST('12345678901234567.890123456789' AS DECIMAL(40,12)) AS `decimal`, COUNT(*) AS `count`, CAST('2031-05-06 07:08:09.123' AS DATETIME(3)) AS time",
+      { type: QueryTypes.SELECT },
+    )
+    expect(row).toEqual({ decimal: '12345678901234567.890123456789', count: 1, time: new Date('2031-05-06T07:08:09.123Z') })
+  })
+
+  it('keeps JSON as it was', async () => {
+    const { shopId } = await openShop()
+    const details = { range: { text: '10000', unit: 'psi' }, note: '"quoted" – ü' }
+    const id = randomUUID()
+    await Instrument.create({ id, shopId, code: 'G-02', kind: 'gauge', description: 'Bench gauge', details, retiredAt: null, createdAt: new Date() })
+    expect((await Instrument.findByPk(id))?.details).toEqual(details)
+  })
+})
+
+describe('transactions', () => {
+  it('see what others have committed meanwhile, once they have waited for the row', async () => {
+    const { context } = testServer()
+    const { shopId } = await openShop()
+    const id = randomUUID()
+    await Ledger.create({ id, shopId, subject: 'press', headSeq: 0, headHash: zeros, createdAt: new Date() })
+    const raise = () =>
+      inTransaction(context, async (transaction) => {
+        const ledger = await Ledger.findByPk(id, { transaction, lock: transaction.LOCK.UPDATE, rejectOnEmpty: true })
+        await ledger.update({ headSeq: ledger.headSeq + 1 }, { transaction })
+      })
+    await Promise.all(Array.from({ length: 12 }, raise))
+    expect((await Ledger.findByPk(id))?.headSeq).toBe(12)
+  })
+
+  it('leave nothing behind when they fail', async () => {
+    const { context } = testServer()
+    const { shopId } = await openShop()
+    const id = randomUUID()
+    const failing = inTransaction(context, async (transaction) => {
+      await Ledger.create({ id, shopId, subject: 'press', headSeq: 0, headHash: zeros, createdAt: new Date() }, { transaction })
+      throw new Error('changed my mind')
+    })
+    await expect(failing).rejects.toThrow('changed my mind')
+    expect(await Ledger.findByPk(id)).toBeNull()
+  })
+})
+
+describe('a row of one shop', () => {
+  it('cannot hang on a row of another', async () => {
+    const [mine, other] = [await openShop(), await openShop()]
+    const ledgerId = randomUUID()
+    await Ledger.create({ id: ledgerId, shopId: other.shopId, subject: 'press', headSeq: 0, headHash: zeros, createdAt: new Date() })
+    const entry = (shopId: string) => ({
+      ledgerId,
+      seq: 1,
+      shopId,
+      id: randomUUID(),
+      kind: 'registered',
+      canonical: '{}',
+      prevHash: zeros,
+      hash: zeros,
+      authorId: mine.userId,
+      observedAt: new Date(),
+      receivedAt: new Date(),
+      irregular: false,
+    })
+    await expect(LedgerEntry.create(entry(mine.shopId))).rejects.toThrow(/foreign key/i)
+    await LedgerEntry.create(entry(other.shopId))
+  })
+})
