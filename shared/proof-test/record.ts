@@ -1,5 +1,6 @@
 import { canonicalText } from '../ledger/canonical'
 import type { LedgerEntry } from '../ledger/envelope'
+import type { StoredEnergy } from '../structure/stored-energy'
 import { formatForce, formatNumber, formatQuantity, groupDigits, toUnit, unitLabel } from '../units'
 import { foldProofTest } from './apply'
 import type { Opened } from './entries'
@@ -172,11 +173,10 @@ export function capital(text: string): string {
   return text.charAt(0).toUpperCase() + text.slice(1)
 }
 
-/** Stored energy in words: "About 290 J at full load, as 30 kg dropped 1 m"; two figures, for it is "at least". */
-export function energyText(joules: number): string {
-  const kilograms = joules / 9.80665
+/** Stored energy in words: "At least 93 J at full load, as 9.5 kg dropped 1 m"; two figures, for it is "at least". */
+export function energyText(energy: StoredEnergy): string {
   const two = (value: number): string => groupDigits(String(Number(value.toPrecision(2))))
-  return `At least ${two(joules)} J at full load, as ${two(kilograms)} kg dropped 1 m`
+  return `At least ${two(energy.total)} J at full load, as ${two(energy.massDroppedOneMetre)} kg dropped 1 m`
 }
 
 /** The clearance's arithmetic on one line: "Lowest 11.79, less U 0.08 short tons, rounded down". */
