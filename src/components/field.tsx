@@ -5,7 +5,7 @@ import { PutRight } from './glyphs'
 /** What every field has around it. */
 export type FieldWords = {
   label: ReactNode
-  /** A sentence on what to put in, shown before anything is wrong. */
+  /** A sentence on what to put in, always there. */
   hint?: ReactNode
   /** What is so and what to do, when the field can't be taken as it is. */
   message?: string
@@ -19,7 +19,7 @@ export function inputBox(wrong: boolean, className?: string): string {
   return classNames(
     'block w-full min-w-0 rounded-field border-2 bg-field px-3 text-18 text-ink desktop:text-16',
     'min-h-14 desktop:min-h-12',
-    'read-only:bg-sheet disabled:border-dashed disabled:bg-transparent disabled:text-graphite',
+    '[&[readonly]]:bg-sheet disabled:border-dashed disabled:bg-transparent disabled:text-graphite',
     wrong ? 'border-stop-ink' : 'border-rule hover:border-ink focus:border-ink',
     className,
   )
@@ -51,7 +51,7 @@ export function describedBy(id: string, words: Pick<FieldWords, 'hint' | 'messag
   return ids.length > 0 ? ids.join(' ') : undefined
 }
 
-/** Label, input, echo and message, always in this order, so that the eye finds them. */
+/** Label, input, echo, hint and message, always in this order: inputs side by side stay on one line. */
 export function FieldFrame({ id, label, hint, message, optional, aside, echo, className, children }: FrameProps) {
   return (
     <div className={className}>
@@ -62,13 +62,13 @@ export function FieldFrame({ id, label, hint, message, optional, aside, echo, cl
         </label>
         {aside}
       </div>
+      {children}
+      {echo}
       {hint !== undefined && (
-        <p id={`${id}-hint`} className="mb-1 text-16 text-graphite">
+        <p id={`${id}-hint`} className="mt-1 text-graphite">
           {hint}
         </p>
       )}
-      {children}
-      {echo}
       {message && <FieldMessage id={`${id}-message`}>{message}</FieldMessage>}
     </div>
   )

@@ -1,15 +1,16 @@
 import { useEffect, useId, useRef, useState, type ReactNode } from 'react'
 import { classNames } from '../lib/class-names'
+import { longDate } from '../lib/dates'
 import { ChevronDown } from './glyphs'
 import type { Choice } from './select-field'
 
-/** Ruled cells in one row that narrow a list; two to a row on the phone, the search over both. */
+/** Ruled cells in one row that narrow a list; two to a row on the phone, the search over both. The last row fills. */
 export function FilterBar({ label, children }: { label: string; children: ReactNode }) {
   return (
     <div
       role="search"
       aria-label={label}
-      className="mb-5 grid grid-cols-2 gap-px rounded-field border border-rule bg-rule tablet:auto-cols-fr tablet:grid-flow-col tablet:grid-cols-none"
+      className="mb-5 flex flex-wrap pt-px pl-px desktop:flex-nowrap"
     >
       {children}
     </div>
@@ -22,9 +23,10 @@ function Cell({ id, label, active, wide = false, children }: CellProps) {
   return (
     <div
       className={classNames(
-        'group relative h-14 min-w-0 has-focus-visible:z-10 has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-[var(--focus)]',
+        'group relative -mt-px -ml-px h-14 min-w-0 grow border border-rule has-focus-visible:z-10 has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-[var(--focus)]',
         active ? 'bg-field' : 'bg-sheet hover:bg-field',
-        wide && 'max-tablet:col-span-2 desktop:min-w-72',
+        wide ? 'basis-full tablet:basis-1/3 desktop:grow-[1.6]' : 'basis-[40%] tablet:basis-1/4',
+        'first:rounded-l-field last:rounded-r-field desktop:basis-0',
       )}
     >
       <label htmlFor={id} className="pointer-events-none absolute top-1.5 left-3.5 font-condensed text-14 font-medium text-graphite">
@@ -115,22 +117,39 @@ export function FilterSelect({ label, value, onChange, choices, all }: FilterSel
   )
 }
 
-type FilterDateProps = { label: string; value: string; onChange: (date: string) => void; min?: string; max?: string }
+type FilterDateProps = {
+  label: string
+  value: string
+  onChange: (date: string) => void
+  /** What it says while it doesn't narrow: "Any day", "Today". */
+  any: string
+  min?: string
+  max?: string
+}
 
-/** A day from which, or up to which, the list runs. */
-export function FilterDate({ label, value, onChange, min, max }: FilterDateProps) {
+/** A day from which, or up to which, the list runs. It reads as we write dates; the browser's own control opens on it. */
+export function FilterDate({ label, value, onChange, any, min, max }: FilterDateProps) {
   const id = useId()
+  const input = useRef<HTMLInputElement>(null)
   return (
     <Cell id={id} label={label} active={value !== ''}>
       <input
+        ref={input}
         id={id}
         type="date"
         value={value}
         min={min}
         max={max}
         onChange={(event) => onChange(event.target.value)}
-        className={classNames(inside, value === '' ? 'text-graphite' : 'font-semibold')}
+        onClick={() => input.current?.showPicker?.()}
+        className={classNames(inside, 'peer opacity-0 focus:opacity-100', value !== '' && 'font-semibold')}
       />
+      <span aria-hidden="true" className="pointer-events-none absolute inset-0 flex items-center justify-between px-3.5 pt-5 peer-focus:hidden">
+        <span className={classNames('truncate', value !== '' && 'font-semibold')}>{value === '' ? any : longDate(value)}</span>
+      </span>
+      <span className="pointer-events-none absolute right-3 bottom-3 peer-focus:hidden">
+        <ChevronDown />
+      </span>
     </Cell>
   )
 }

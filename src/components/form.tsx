@@ -22,7 +22,7 @@ export function FormError({ message, attempt = 0 }: FormErrorProps) {
       ref={box}
       role="alert"
       tabIndex={-1}
-      className="flex items-start gap-3 border-2 border-stop-ink bg-sheet px-4 py-3 font-medium text-stop-ink"
+      className="mb-2 flex items-start gap-3 border-2 border-stop-ink bg-sheet px-4 py-3 font-medium text-stop-ink"
     >
       <span className="mt-1">
         <PutRight />

@@ -15,6 +15,10 @@ type RadioRowProps = FieldWords &
     stacked?: boolean
   }
 
+/** The chosen cell carries an edge of ink: at its left where cells lie under each other, at its foot side by side. */
+const downEdge = 'has-checked:before:inset-y-0 has-checked:before:left-0 has-checked:before:w-1'
+const acrossEdge = 'tablet:has-checked:before:inset-x-0 tablet:has-checked:before:top-auto tablet:has-checked:before:h-[3px] tablet:has-checked:before:w-auto'
+
 /** A few answers to one question, as native radios in ruled cells. Takes what `register` returns. */
 export function RadioRow({ label, hint, message, optional, className, choices, value, stacked = false, ...radio }: RadioRowProps) {
   const id = useId()
@@ -43,7 +47,8 @@ export function RadioRow({ label, hint, message, optional, className, choices, v
             className={classNames(
               'relative flex min-h-14 items-center gap-3 px-3 py-1 desktop:min-h-12',
               'has-checked:font-semibold has-focus-visible:z-10 has-focus-visible:outline-3 has-focus-visible:outline-offset-2 has-focus-visible:outline-[var(--focus)]',
-              'has-checked:bg-sheet has-checked:before:absolute has-checked:before:inset-x-0 has-checked:before:bottom-0 has-checked:before:h-[3px] has-checked:before:bg-ink',
+              'has-checked:bg-sheet has-checked:before:absolute has-checked:before:bg-ink',
+              stacked ? downEdge : `${downEdge} ${acrossEdge}`,
               choice.disabled && 'text-graphite',
               index > 0 && (stacked ? 'border-t border-rule' : 'border-rule max-tablet:border-t tablet:border-l'),
             )}

@@ -17,13 +17,15 @@ export type RuledRowProps = {
   /** At the right end: how much, until when. */
   aside?: ReactNode
   asideNote?: ReactNode
+  /** Leaves the right end out on the phone, where the words take the whole row. */
+  asideFrom?: 'tablet'
   /** Makes the whole row lead somewhere. */
   to?: string
   className?: string
 }
 
 /** Two lines of one thing: what it is over what about it. */
-export function RuledRow({ mark, title, note, aside, asideNote, to, className }: RuledRowProps) {
+export function RuledRow({ mark, title, note, aside, asideNote, asideFrom, to, className }: RuledRowProps) {
   const line = (
     <>
       {mark !== undefined && <span className="flex w-8 shrink-0 items-center justify-start">{mark}</span>}
@@ -32,7 +34,7 @@ export function RuledRow({ mark, title, note, aside, asideNote, to, className }:
         {note !== undefined && <span className="block text-graphite">{note}</span>}
       </span>
       {(aside !== undefined || asideNote !== undefined) && (
-        <span className="max-w-[58%] shrink-0 text-right">
+        <span className={classNames('max-w-[58%] shrink-0 text-right', asideFrom && 'max-tablet:hidden')}>
           <span className="block font-semibold">{aside}</span>
           {asideNote !== undefined && <span className="block text-graphite">{asideNote}</span>}
         </span>

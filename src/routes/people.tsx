@@ -20,7 +20,7 @@ export function Component() {
   return (
     <Page
       title="People"
-      note={people.data && `${members.length} of ${shop.name}`}
+      note={people.data && `${members.length} at ${shop.name}`}
       actions={
         can('people:add') && !adding ? (
           <Button kind="next" onClick={() => setAdding(true)}>
@@ -29,20 +29,18 @@ export function Component() {
         ) : undefined
       }
     >
-      <div className="grid gap-8 desktop:grid-cols-[minmax(0,1fr)_minmax(0,30rem)]">
+      <div className="grid grid-cols-1 gap-8">
         {adding && (
-          <Section title="A person to add" className="desktop:order-2">
+          <Section title="A person to add" className="border-t-2 border-ink pt-4">
             <AddPersonForm key={shop.id} shopId={shop.id} onAdded={() => setAdding(false)} onLeave={() => setAdding(false)} />
           </Section>
         )}
-        <div className={adding ? 'grid content-start gap-8' : 'grid gap-8 desktop:col-span-2'}>
-          {people.data === undefined ? <SkeletonRows /> : <PeopleList people={members} {...list} />}
-          {former.length > 0 && (
-            <Section title="No longer here" note="Their names stay on their records">
-              <PeopleList people={former} {...list} />
-            </Section>
-          )}
-        </div>
+        {people.data === undefined ? <SkeletonRows /> : <PeopleList people={members} {...list} />}
+        {former.length > 0 && (
+          <Section title="No longer here" note="Their names stay on their records">
+            <PeopleList people={former} {...list} />
+          </Section>
+        )}
       </div>
     </Page>
   )

@@ -48,7 +48,7 @@ export function ShopMenu({ shop, person, role, entries }: ShopMenuProps) {
         aria-expanded={open}
         aria-controls={id}
         onClick={() => setOpen(!open)}
-        className="flex min-w-0 items-center gap-3 border-l border-ghost px-[18px] text-left -outline-offset-4! hover:bg-dye"
+        className="flex min-w-0 items-center gap-2 border-l border-ghost px-3 text-left -outline-offset-4! hover:bg-dye desktop:gap-3 desktop:px-[18px]"
       >
         <span className="min-w-0">
           <span className="block truncate text-14/[17px]">{shop}</span>

@@ -12,7 +12,7 @@ function Cell({ destination, current }: { destination: Destination; current: boo
       <Link
         to={destination.to}
         aria-current={current ? 'page' : undefined}
-        className={classNames('group relative flex items-center px-3 -outline-offset-4! hover:bg-dye desktop:px-[18px]', current ? 'font-semibold' : 'text-scribe')}
+        className={classNames('group relative flex items-center px-2.5 -outline-offset-4! hover:bg-dye desktop:px-[18px]', current ? 'font-semibold' : 'text-scribe')}
       >
         {/* Both weights take the wider one's room, so that nothing moves when the cell becomes current. */}
         <span className="relative flex h-full flex-col justify-center">

@@ -22,8 +22,11 @@ export function AddPersonForm({ shopId, onAdded, onLeave }: AddPersonFormProps) 
   const { errors, submitCount } = form.formState
   const showProblem = useProblemFields(form)
   return (
-    <Form onSubmit={form.handleSubmit((request) => add.mutate(request, { onSuccess: onAdded, onError: showProblem }))}>
-      <FormError message={errors.root?.message} attempt={submitCount} />
+    <Form className="gap-x-8 desktop:grid-cols-2" onSubmit={form.handleSubmit((request) => add.mutate(request, { onSuccess: onAdded, onError: showProblem }))}>
+      <div className="empty:hidden desktop:col-span-2">
+        <FormError message={errors.root?.message} attempt={submitCount} />
+      </div>
+      <div className="grid content-start gap-4">
       <TextField label="Name, as it prints on records" autoComplete="off" autoFocus message={errors.name?.message} {...form.register('name')} />
       <TextField
         label="E-mail"
@@ -35,19 +38,20 @@ export function AddPersonForm({ shopId, onAdded, onLeave }: AddPersonFormProps) 
         message={errors.email?.message}
         {...form.register('email')}
       />
-      <RadioRow
-        label="Role"
-        stacked
-        choices={roleChoices.map((choice) => ({ ...choice, note: roleNotes[choice.value] }))}
-        message={errors.role?.message}
-        {...form.register('role')}
-      />
       <PasswordField
         label="First password"
         hint="Hand it over in person, to be changed after signing in. Whoever has an account already keeps their own."
         autoComplete="new-password"
         message={errors.password?.message}
         {...form.register('password')}
+      />
+      </div>
+      <RadioRow
+        label="Role"
+        stacked
+        choices={roleChoices.map((choice) => ({ ...choice, note: roleNotes[choice.value] }))}
+        message={errors.role?.message}
+        {...form.register('role')}
       />
       <FormActions>
         <Button type="submit" kind="next" busy={add.isPending && 'Adding'}>

@@ -28,7 +28,6 @@ function ChangePerson({ person, shopId, onDone }: ChangeProps) {
       />
       <div className="flex flex-wrap gap-3">
         <Button
-          kind="next"
           disabled={role === person.role}
           busy={change.isPending && 'Changing it'}
           onClick={() => change.mutate({ userId: person.userId, change: { role } }, { onSuccess: onDone })}
@@ -54,30 +53,27 @@ export function PeopleList({ people, shopId, mayChange, selfId }: PeopleListProp
     <ul className="border-t border-hairline">
       {people.map((person) => (
         <li key={person.userId} className="border-b border-hairline">
-          <div className="flex min-h-16 items-center gap-x-4 py-2 desktop:min-h-14">
-            <div className="min-w-0 grow">
-              <p className="font-semibold">
-                {person.name}
-                {person.userId === selfId && <span className="font-normal text-graphite"> you</span>}
-              </p>
-              <p className="truncate text-graphite">{person.email ?? roleNotes[person.role]}</p>
+          <div className="grid min-h-16 grid-cols-[minmax(0,1fr)_auto] items-center gap-x-6 gap-y-1 py-2 tablet:grid-cols-[minmax(0,1fr)_6rem_10rem_6rem] desktop:min-h-14 desktop:grid-cols-[minmax(0,4fr)_minmax(0,5fr)_8rem_11rem_6rem]">
+            <p className="font-semibold">
+              {person.name}
+              {person.userId === selfId && <span className="font-normal text-graphite"> you</span>}
+              <span className="block truncate font-normal text-graphite desktop:hidden">{person.email}</span>
+            </p>
+            <p className="truncate text-graphite max-desktop:hidden">{person.email ?? roleNotes[person.role]}</p>
+            <p className="font-semibold max-tablet:text-right">{person.endedAt === null ? person.role : `was ${person.role}`}</p>
+            <p className="text-graphite">{person.endedAt === null ? `since ${shortDate(person.addedAt)}` : `left ${shortDate(person.endedAt)}`}</p>
+            <div className="flex justify-end">
+              {mayChange && person.endedAt === null && (
+                <Button
+                  size="line"
+                  aria-expanded={open === person.userId}
+                  aria-label={`Change ${person.name}`}
+                  onClick={() => setOpen(open === person.userId ? null : person.userId)}
+                >
+                  Change
+                </Button>
+              )}
             </div>
-            <div className="w-28 shrink-0 max-tablet:text-right">
-              <p className="font-semibold">{person.endedAt === null ? person.role : 'left'}</p>
-              <p className="text-graphite">
-                {person.endedAt === null ? `since ${shortDate(person.addedAt)}` : shortDate(person.endedAt)}
-              </p>
-            </div>
-            {mayChange && person.endedAt === null && (
-              <Button
-                size="line"
-                aria-expanded={open === person.userId}
-                aria-label={`Change ${person.name}`}
-                onClick={() => setOpen(open === person.userId ? null : person.userId)}
-              >
-                Change
-              </Button>
-            )}
           </div>
           {open === person.userId && <ChangePerson person={person} shopId={shopId} onDone={() => setOpen(null)} />}
         </li>

@@ -1,5 +1,4 @@
 import type { ReactNode } from 'react'
-import { ButtonLink } from '../../../components/button'
 import { Mark, type MarkName } from '../../../components/marks'
 import { NothingHere } from '../../../components/nothing-here'
 import { RuledList, RuledRow } from '../../../components/ruled-list'
@@ -86,7 +85,8 @@ function Needs({ needs }: { needs: readonly Need[] | undefined }) {
               mark={<Mark name={need.mark} size={28} />}
               title={need.title}
               note={need.note}
-              aside={<span className={classNames('max-tablet:hidden', dueLook[need.urgency])}>{need.due}</span>}
+              aside={<span className={dueLook[need.urgency]}>{need.due}</span>}
+              asideFrom="tablet"
             />
           ))}
         </RuledList>
@@ -95,7 +95,7 @@ function Needs({ needs }: { needs: readonly Need[] | undefined }) {
   )
 }
 
-function Presses({ presses, enterPress }: { presses: readonly PressUse[] | undefined; enterPress: NextStep | undefined }) {
+function Presses({ presses, mayEnter }: { presses: readonly PressUse[] | undefined; mayEnter: boolean }) {
   return (
     <Part title="Which press may be used">
       {presses === undefined ? (
@@ -103,8 +103,7 @@ function Presses({ presses, enterPress }: { presses: readonly PressUse[] | undef
       ) : presses.length === 0 ? (
         <NothingHere
           what="No press is entered yet."
-          next={enterPress ? 'Enter its frame, joints and train first.' : 'A lead or the owner enters it.'}
-          action={enterPress && <ButtonLink to={enterPress.to}>{enterPress.label}</ButtonLink>}
+          next={mayEnter ? 'Enter its frame, joints and train first.' : 'A lead or the owner enters it.'}
         />
       ) : (
         <RuledList>
@@ -131,10 +130,10 @@ export function TodayView({ underWay, plan, needs, presses, enterPress, calendar
   return (
     <div className="flex grow flex-col">
       <h1 className="sr-only">Today</h1>
-      <UnderWayPlate tests={underWay} plan={plan} />
+      <UnderWayPlate tests={underWay} next={presses?.length === 0 ? enterPress : plan} firstPress={presses?.length === 0} />
       <div className="ground-steel grid grow content-start gap-x-10 gap-y-6 px-4 py-4 tablet:px-6 desktop:grid-cols-[minmax(0,712fr)_minmax(0,480fr)]">
         <Needs needs={needs} />
-        <Presses presses={presses} enterPress={enterPress} />
+        <Presses presses={presses} mayEnter={enterPress !== undefined} />
       </div>
       <Calendar calendar={calendar} />
     </div>
