@@ -1,22 +1,24 @@
 import { Op } from 'sequelize'
+import type { Sequelize, Transaction } from 'sequelize'
 import { SOON_DAYS, WEEKS_AHEAD } from '#shared/api/today'
 import type { Due, Need } from '#shared/api/today'
 import { calibrationState } from '#shared/instruments/model'
 import type { Calibration } from '#shared/instruments/model'
 import { can } from '#shared/policy'
-import { foldPress } from '#shared/press/apply'
 import { mayItBeUsed } from '#shared/press/may-it-be-used'
 import type { PressState } from '#shared/press/state'
-import { foldProofTest } from '#shared/proof-test/apply'
+import { emptyProofTest } from '#shared/proof-test/apply'
 import { summariseClimb } from '#shared/proof-test/climb-summary'
 import type { ClimbSummary } from '#shared/proof-test/climb-summary'
 import type { Work } from '../context'
+import { pressState, proofTestState } from '../ledger/folds'
+import { readHead } from '../ledger/read'
+import type { LedgerHead } from '../ledger/read'
 import { Instrument, Press, ProofTest } from '../models'
 import { calibrationsInForce } from './calibrations'
 import { authorize } from './membership'
 import type { PressRecord } from './press-register'
 import type { TestRecord } from './proof-test-register'
-import { readLedgers } from './stored-ledger'
 
 const MOST_PRESSES = 60
 const MOST_TESTS = 60
@@ -42,6 +44,8 @@ export interface Today {
   presses: PressToday[]
   due: Due[]
 }
+
+type Fold<S> = (database: Sequelize, transaction: Transaction, head: LedgerHead) => Promise<S>
 
 interface InstrumentToday {
   instrumentId: string
@@ -82,14 +86,23 @@ async function instrumentsInUse({ transaction, actor }: Work): Promise<Instrumen
   return instruments.map(({ id, code, kind }) => ({ instrumentId: id, code, instrumentKind: kind, calibration: inForce.get(id) ?? null }))
 }
 
-async function foldUnderWay(work: Work, tests: TestRecord[], presses: readonly PressRecord[]): Promise<TestUnderWay[]> {
-  const ledgers = await readLedgers(
-    work.actor.shopId,
-    tests.map((test) => test.id),
-    work.transaction,
-  )
-  return tests.map((test) => {
-    const state = foldProofTest(test.id, ledgers.get(test.id) ?? [])
+/** The folded ledgers behind rows of this shop, by id. */
+async function foldEach<S>({ transaction }: Work, rows: readonly { id: string }[], fold: Fold<S>): Promise<Map<string, S>> {
+  const states = new Map<string, S>()
+  const database = Press.sequelize
+  if (database === undefined) throw new Error('The models are not bound to a connection.')
+  for (const { id } of rows) {
+    const head = await readHead(database, transaction, id)
+    if (head !== null) states.set(id, await fold(database, transaction, head))
+  }
+  return states
+}
+
+async function testsUnderWay(work: Work, tests: readonly TestRecord[], presses: readonly PressRecord[]): Promise<TestUnderWay[]> {
+  const underWay = tests.filter((test) => test.status === 'under way' || test.status === 'stopped')
+  const states = await foldEach(work, underWay, proofTestState)
+  return underWay.map((test) => {
+    const state = states.get(test.id) ?? emptyProofTest(test.id)
     return {
       test,
       whatFor: presses.find((press) => press.id === test.pressId)?.whatFor ?? '',
@@ -100,10 +113,9 @@ async function foldUnderWay(work: Work, tests: TestRecord[], presses: readonly P
 }
 
 /** Presses whose ledger is asked for the reason: those that were in use and may be no longer. */
-async function foldShut(work: Work, presses: readonly PressRecord[]): Promise<Map<string, PressState>> {
-  const shut = presses.filter((press) => press.status === 'withdrawn' || press.status === 'suspended').map((press) => press.id)
-  const ledgers = await readLedgers(work.actor.shopId, shut, work.transaction)
-  return new Map([...ledgers].map(([id, entries]) => [id, foldPress(id, entries)]))
+function foldShut(work: Work, presses: readonly PressRecord[]): Promise<Map<string, PressState>> {
+  const shut = presses.filter((press) => press.status === 'withdrawn' || press.status === 'suspended')
+  return foldEach(work, shut, pressState)
 }
 
 const since = (state: PressState): string | null => (state.clearance.is === 'withdrawn' ? state.clearance.at : (state.history.at(-1)?.at ?? null))
@@ -195,6 +207,5 @@ export async function readToday(work: Work, asked: string | undefined): Promise<
   const leads = can(actor, 'proof-test:open', { shopId: actor.shopId })
   const needs = [...testNeeds(tests, actor.userId), ...(leads ? [...pressNeeds(presses, states, day), ...instrumentNeeds(instruments, day)] : [])]
   needs.sort((a, b) => order[a.kind] - order[b.kind] || dateOf(a).localeCompare(dateOf(b)))
-  const underWay = tests.filter((test) => test.status === 'under way' || test.status === 'stopped')
-  return { day, underWay: await foldUnderWay(work, underWay, records), needs, presses, due: dueDates(records, instruments, day) }
+  return { day, underWay: await testsUnderWay(work, tests, records), needs, presses, due: dueDates(records, instruments, day) }
 }
