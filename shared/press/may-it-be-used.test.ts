@@ -107,6 +107,14 @@ describe('may the press be used', () => {
     expect(mayItBeUsed(ledger(finished, given, opened), '2026-10-01')).toEqual({ answer: 'under test', why: 'PT-0043 is under way.' })
   })
 
+  it('not when its test was stopped, with what stopped it as the reason', () => {
+    const stopped: PressDraft = { kind: 'test-stopped', payload: { ...TEST, why: 'The left pin moved.', jointIds: [] } }
+    expect(mayItBeUsed(ledger(finished, given, opened, stopped), '2026-10-01')).toMatchObject({
+      answer: 'do not use',
+      why: 'PT-0043 was stopped. The left pin moved.',
+    })
+  })
+
   it('not when a test is accepted and its countersignature is missing', () => {
     const concluded: PressDraft = { kind: 'test-concluded', payload: { ...TEST, conclusion: 'accepted', jointIds: [] } }
     expect(mayItBeUsed(ledger(finished, opened, concluded), '2026-10-01')).toMatchObject({

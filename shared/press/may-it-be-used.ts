@@ -77,7 +77,11 @@ export function mayItBeUsed(state: PressState, today: string): MayItBeUsed {
     }
   }
   if (state.underTest) {
-    const { number } = state.underTest
+    const { number, stopped } = state.underTest
+    if (stopped) {
+      const why = state.clearance.is === 'withdrawn' ? state.clearance.why : `${number} was stopped.`
+      return { answer: 'do not use', why, missing: [`The conclusion of ${number}.`, ...missingOf(state), PROOF_TEST] }
+    }
     return awaitsSignature(state)
       ? { answer: 'do not use', why: `${number} is concluded, and a signature is missing.`, missing: [`The signatures of ${number}.`] }
       : { answer: 'under test', why: `${number} is under way.` }
