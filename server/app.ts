@@ -6,6 +6,7 @@ import type { AppContext } from './context'
 import { problemHandler, unknownEndpoint } from './middleware/problem-handler'
 import { sameOrigin } from './middleware/same-origin'
 import { healthRoutes } from './routes/health'
+import { ledgerRoutes } from './routes/ledgers'
 import { instrumentRoutes } from './routes/instruments'
 import { peopleRoutes } from './routes/people'
 import { pressReadRoutes } from './routes/presses-read'
@@ -64,6 +65,7 @@ function api(context: AppContext) {
   router.use(pressReadRoutes(context))
   router.use(proofTestReadRoutes(context))
   router.use(todayReadRoutes(context))
+  router.use(ledgerRoutes(context))
   router.use(unknownEndpoint)
   return router
 }

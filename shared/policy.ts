@@ -18,7 +18,8 @@ export interface Actor {
 /** The people named when the test was opened. */
 export interface Assignment {
   leadId: string
-  pumpHandId: string
+  /** null when the pump hand has no account. */
+  pumpHandId: string | null
   witnessId: string
 }
 

@@ -129,18 +129,16 @@ const handlers: Handlers = {
   },
   'test-opened': (state, payload) => ({
     ...state,
-    underTest: payload,
+    underTest: { ...payload, stopped: false },
     clearance:
       state.clearance.is === 'withdrawn'
         ? state.clearance
         : { is: 'suspended', clearance: lastClearance(state), why: `${payload.number} is under way.`, proofTestId: payload.proofTestId },
   }),
-  'test-stopped': (state, payload, entry) =>
-    withdraw(
-      fallBack(state, payload.jointIds, `${payload.number} was stopped`),
-      `${payload.number} was stopped. ${payload.why}`,
-      entry.observedAt,
-    ),
+  'test-stopped': (state, payload, entry) => ({
+    ...withdraw(fallBack(state, payload.jointIds, `${payload.number} was stopped`), `${payload.number} was stopped. ${payload.why}`, entry.observedAt),
+    underTest: state.underTest && { ...state.underTest, stopped: true },
+  }),
   'test-concluded': (state, payload, entry) => {
     const ended: PressState = { ...state, underTest: payload.conclusion === 'accepted' ? state.underTest : null }
     if (payload.conclusion === 'accepted') return ended
@@ -159,6 +157,7 @@ const handlers: Handlers = {
       proofTestId: payload.proofTestId,
     },
   }),
+  'test-ended': (state, payload, entry) => withdraw({ ...state, underTest: null }, `${payload.number}: ${payload.why}`, entry.observedAt),
   'clearance-given': (state, payload) => ({ ...state, underTest: null, clearance: { is: 'cleared', clearance: payload } }),
   withdrawn: (state, payload, entry) => withdraw(state, payload.why, entry.observedAt),
 }
@@ -191,6 +190,7 @@ const tell: Tellers = {
     proofTestId: payload.proofTestId,
   }),
   'test-late-fact': (payload) => ({ text: `${payload.number}: ${payload.why}`, mark: 'stop', proofTestId: payload.proofTestId }),
+  'test-ended': (payload) => ({ text: `${payload.number}: ${payload.why}`, mark: 'stop', proofTestId: payload.proofTestId }),
   'clearance-given': (payload) => ({
     text: `Cleared up to ${payload.load.text} ${unitLabel(payload.load.unit, { plural: true })}`,
     mark: 'within',

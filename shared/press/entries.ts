@@ -63,6 +63,7 @@ export const PRESS_PAYLOADS = {
   'test-stopped': z.object({ ...testRef.shape, why: z.string(), jointIds: z.array(idSchema) }),
   'test-concluded': z.object({ ...testRef.shape, conclusion: z.enum(['accepted', 'rejected', 'abandoned']), jointIds: z.array(idSchema) }),
   'test-late-fact': z.object({ ...testRef.shape, why: z.string() }),
+  'test-ended': z.object({ ...testRef.shape, why: z.string() }),
   'clearance-given': clearanceSchema,
   withdrawn: z.object({ why }),
 } as const

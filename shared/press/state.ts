@@ -42,7 +42,7 @@ export interface PressState {
   description: PressDescription | null
   joints: PressJoint[]
   clearance: ClearanceState
-  underTest: { proofTestId: string; number: string } | null
+  underTest: { proofTestId: string; number: string; stopped: boolean } | null
   lastWorkedOn: string | null
   history: PressEvent[]
   headSeq: number

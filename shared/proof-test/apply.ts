@@ -29,6 +29,7 @@ export function emptyProofTest(id: string): ProofTestState {
     declined: [],
     lateFacts: 0,
     lastMark: null,
+    devices: {},
     entryCount: 0,
     headSeq: 0,
     headHash: FIRST_PREV_HASH,
@@ -395,6 +396,7 @@ export function applyProofTest(before: ProofTestState, stored: LedgerEntry): Pro
   const entry = upcast(stored)
   const state: ProofTestState = {
     ...before,
+    devices: before.devices[entry.deviceId] === entry.deviceSeq ? before.devices : { ...before.devices, [entry.deviceId]: entry.deviceSeq },
     entryCount: before.entryCount + 1,
     headSeq: entry.seq,
     headHash: entry.hash,

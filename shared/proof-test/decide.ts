@@ -57,6 +57,8 @@ const WHOLE_RULES: readonly ProofTestRule[] = [
     ['concluded'],
     ({ payload }, state) => {
       if (payload.conclusion !== 'accepted') return null
+      if (state.conclusion && state.conclusion.conclusion !== 'accepted')
+        return `This test was concluded as ${state.conclusion.conclusion}. That stands; plan a new test that repeats it.`
       return evaluateTest(state).against[0] ?? null
     },
   ),

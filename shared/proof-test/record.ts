@@ -46,9 +46,9 @@ export interface ClearedLoad {
   staticLoads: number
 }
 
-/** How often full load was put on and held to the end, all legs and climbs together. */
+/** How many climbs were held at full load to the end, all legs together. */
 export function staticLoadsOf(evaluation: TestEvaluation): number {
-  return evaluation.climbs.flatMap((climb) => climb.stages).filter((stage) => stage.percent >= 100 && stage.end !== null).length
+  return evaluation.climbs.filter((climb) => climb.stages.some((stage) => stage.percent >= 100 && stage.end !== null)).length
 }
 
 const NUMBER_WORDS = ['no', 'one', 'two', 'three', 'four', 'five', 'six', 'seven', 'eight', 'nine']
@@ -115,7 +115,7 @@ export function headlineOf(state: ProofTestState, evaluation: TestEvaluation): s
     case 'to countersign':
       return `Concluded ${state.conclusion?.conclusion ?? ''}. To countersign`
     case 'accepted':
-      return cleared ? `Accepted. Cleared up to ${cleared.load}` : 'Accepted. Cleared to no load'
+      return cleared ? `Accepted. Cleared up to ${cleared.load}` : 'Accepted. No load is cleared'
     case 'rejected':
       return state.stopped?.atPercent ? `Rejected. Stopped at ${state.stopped.atPercent}\u202f%` : 'Rejected. Do not use'
     case 'abandoned':

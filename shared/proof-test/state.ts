@@ -170,6 +170,8 @@ export interface ProofTestState {
   lateFacts: number
   /** Moments of the last entry of every device, for clocks and holds. */
   lastMark: Mark | null
+  /** The last number of every device's own count, by device. */
+  devices: Readonly<Record<string, number>>
   entryCount: number
   headSeq: number
   headHash: string

@@ -1,0 +1,63 @@
+import type { Sequelize, Transaction } from 'sequelize'
+import { QueryTypes } from 'sequelize'
+import type { LedgerEntry } from '#shared/ledger/envelope'
+import type { Seal } from '#shared/ledger/seal'
+
+interface StoredRow {
+  canonical: string
+  hash: string
+}
+
+/** An entry as it was stored, with its hash: nothing is read from the columns beside the hashed text. */
+function entryOf(row: StoredRow): LedgerEntry {
+  return { ...(JSON.parse(row.canonical) as Omit<LedgerEntry, 'hash'>), hash: row.hash }
+}
+
+export interface LedgerHead {
+  id: string
+  shopId: string
+  subject: 'proof-test' | 'press'
+  headSeq: number
+  headHash: string
+}
+
+const HEAD = 'SELECT id, shop_id AS shopId, subject, head_seq AS headSeq, head_hash AS headHash FROM ledgers WHERE id = ?'
+
+export async function readHead(database: Sequelize, transaction: Transaction, ledgerId: string): Promise<LedgerHead | null> {
+  const [head] = await database.query<LedgerHead>(HEAD, { replacements: [ledgerId], type: QueryTypes.SELECT, transaction })
+  return head ?? null
+}
+
+/** The head, locked until the transaction ends: the first statement of every append. */
+export async function lockHead(database: Sequelize, transaction: Transaction, ledgerId: string): Promise<LedgerHead | null> {
+  const [head] = await database.query<LedgerHead>(`${HEAD} FOR UPDATE`, { replacements: [ledgerId], type: QueryTypes.SELECT, transaction })
+  return head ?? null
+}
+
+/** Entries of a ledger after a number, in order. */
+export async function readEntries(database: Sequelize, transaction: Transaction, ledgerId: string, after = 0): Promise<LedgerEntry[]> {
+  const rows = await database.query<StoredRow>('SELECT canonical, hash FROM ledger_entries WHERE ledger_id = ? AND seq > ? ORDER BY seq', {
+    replacements: [ledgerId, after],
+    type: QueryTypes.SELECT,
+    transaction,
+  })
+  return rows.map(entryOf)
+}
+
+/** The entry with an id, whichever ledger it stands in. */
+export async function readEntry(database: Sequelize, transaction: Transaction, id: string): Promise<LedgerEntry | null> {
+  const [row] = await database.query<StoredRow>('SELECT canonical, hash FROM ledger_entries WHERE id = ?', {
+    replacements: [id],
+    type: QueryTypes.SELECT,
+    transaction,
+  })
+  return row ? entryOf(row) : null
+}
+
+export async function readSeals(database: Sequelize, transaction: Transaction, ledgerId: string): Promise<Seal[]> {
+  const rows = await database.query<Omit<Seal, 'sealedAt'> & { sealedAt: Date }>(
+    'SELECT kid, ledger_id AS ledgerId, seq, head_hash AS headHash, sealed_at AS sealedAt, signature FROM seals WHERE ledger_id = ? ORDER BY seq',
+    { replacements: [ledgerId], type: QueryTypes.SELECT, transaction },
+  )
+  return rows.map((row) => ({ ...row, sealedAt: new Date(row.sealedAt).toISOString() }))
+}

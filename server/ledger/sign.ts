@@ -1,0 +1,87 @@
+import { QueryTypes } from 'sequelize'
+import { v7 as newId } from 'uuid'
+import type { SignatureRequest } from '#shared/api/proof-tests'
+import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
+import { makeSeal } from '#shared/ledger/seal'
+import { PROOF_TEST_VERSION, type Opened } from '#shared/proof-test/entries'
+import { conflict, notFound } from '../problem'
+import { appendToTest, lockTest } from './append-proof-test'
+import { readEntry } from './read'
+import type { SealKey } from './seal-keys'
+import type { Writing } from './write'
+
+/** Entries that the server makes for a person who signs carry this device; its count is the ledger's own. */
+const SERVER_DEVICE = '00000000-0000-7000-8000-000000000001'
+
+function payloadOf(
+  request: SignatureRequest,
+  opened: Opened,
+  userId: string,
+  signedAt: string,
+): { kind: string; payload: Record<string, unknown> } {
+  const { lead, witness } = opened.people
+  const person = userId === witness.id ? witness : lead
+  const printedName = person.name
+  if (request.as === 'decline') return { kind: 'declined', payload: { personId: userId, printedName, why: request.why } }
+  const { meaning, headHash } = request
+  return {
+    kind: request.as === 'lead' ? 'signed' : 'countersigned',
+    payload: { personId: userId, printedName, meaning, signedAt, headHash, relation: person.relation },
+  }
+}
+
+/**
+ * Signs, countersigns or declines, for a person whose password was just checked: the only writer of these
+ * kinds. Refuses when the ledger has moved on since the person read it. Every signature is sealed.
+ */
+export async function signTest(
+  writing: Writing,
+  key: SealKey,
+  userId: string,
+  testId: string,
+  request: SignatureRequest,
+): Promise<LedgerEntry> {
+  const { database, transaction, now } = writing
+  const locked = await lockTest(writing, userId, testId)
+  const { head, state } = locked
+  if (!state.opened) throw notFound('This proof test')
+  const known = await readEntry(database, transaction, request.entryId)
+  if (known) {
+    if (known.ledgerId === testId && known.authorId === userId) return known
+    throw conflict('id-reused', 'This signature’s id was used already. Sign again.')
+  }
+  if (head.headHash !== request.headHash) {
+    throw conflict('stale-head', 'Something was added to this record since you read it. Read it again, then sign.')
+  }
+  const { kind, payload } = payloadOf(request, state.opened, userId, now.toISOString())
+  const draft: EntryDraft = {
+    id: request.entryId,
+    ledgerId: testId,
+    kind,
+    v: PROOF_TEST_VERSION,
+    payload,
+    authorId: userId,
+    deviceId: SERVER_DEVICE,
+    deviceSeq: head.headSeq + 1,
+    basedOnSeq: head.headSeq,
+    observedAt: now.toISOString(),
+    bootId: SERVER_DEVICE,
+    monotonicMs: Math.round(performance.now()),
+    attachments: [],
+    overrides: [],
+  }
+  const entry = await appendToTest(writing, locked, draft)
+  const seal = makeSeal(
+    { kid: key.kid, ledgerId: testId, seq: entry.seq, headHash: entry.hash, sealedAt: now.toISOString() },
+    key.secretKey,
+  )
+  await database.query(
+    'INSERT INTO seals (id, shop_id, ledger_id, seq, head_hash, kid, signature, entry_id, sealed_at) VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?)',
+    {
+      replacements: [newId(), head.shopId, testId, seal.seq, seal.headHash, seal.kid, seal.signature, entry.id, now],
+      type: QueryTypes.INSERT,
+      transaction,
+    },
+  )
+  return entry
+}
