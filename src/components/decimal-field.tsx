@@ -86,8 +86,8 @@ export function DecimalField({ label, hint, message, optional, className, value,
 }
 
 type QuantityProps<U extends Unit> = Omit<DecimalProps, 'value' | 'onChange' | 'unit'> & {
-  value: Typed<U> | { text: string; unit: U | '' }
-  onChange: (typed: { text: string; unit: U }) => void
+  value: Typed<NoInfer<U>> | { text: string; unit: NoInfer<U> | '' }
+  onChange: (typed: { text: string; unit: NoInfer<U> }) => void
   /** The units it can be given in, in the order of the list. */
   units: readonly U[]
   /** Makes the unit itself a question ("which ton?") while none is chosen. */
