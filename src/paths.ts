@@ -32,10 +32,12 @@ export const paths = {
   instruments: list('/instruments'),
   newInstrument: list('/instruments/new'),
   instrument: one('/instruments', 'instrumentId'),
+  editInstrument: one('/instruments', 'instrumentId', '/edit'),
 
   protocols: list('/protocols'),
   newProtocol: list('/protocols/new'),
   protocol: one('/protocols', 'protocolId'),
+  newProtocolVersion: one('/protocols', 'protocolId', '/new-version'),
 
   proofTests: list('/proof-tests'),
   planProofTest: list('/proof-tests/new'),

@@ -8,6 +8,10 @@ import { requireSession, SignedIn, SignedInBare } from './routes/signed-in'
 /** Each screen is a chunk of its own, fetched when it is opened. */
 const signedInScreens: RouteObject[] = [
   { path: paths.today.pattern, lazy: () => import('./routes/today') },
+  { path: paths.instruments.pattern, lazy: () => import('./routes/instruments') },
+  { path: paths.newInstrument.pattern, lazy: () => import('./routes/instrument-form') },
+  { path: paths.instrument.pattern, lazy: () => import('./routes/instrument') },
+  { path: paths.editInstrument.pattern, lazy: () => import('./routes/instrument-form') },
   { path: paths.people.pattern, lazy: () => import('./routes/people') },
   { path: paths.settings.pattern, lazy: () => import('./routes/settings') },
   { path: paths.account.pattern, lazy: () => import('./routes/account') },

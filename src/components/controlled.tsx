@@ -3,6 +3,7 @@ import type { ComponentProps } from 'react'
 import type { Unit } from '#shared/units'
 import { DecimalField, QuantityField } from './decimal-field'
 import { RadioRow } from './radio-row'
+import { SelectField } from './select-field'
 
 /** Fields that a form holds by name: what `Controller` would write each time. */
 type Held<V extends FieldValues, C, T> = { control: Control<V, C, T>; name: FieldPath<V> }
@@ -35,4 +36,10 @@ export function ControlledRadios<V extends FieldValues, C, T>({ control, name, .
   const { field } = useController({ control, name })
   const message = useMessage({ control, name })
   return <RadioRow {...rest} {...field} value={field.value ?? ''} message={message} />
+}
+
+export function ControlledSelect<V extends FieldValues, C, T>({ control, name, ...rest }: Held<V, C, T> & Omit<ComponentProps<typeof SelectField>, Given>) {
+  const { field } = useController({ control, name })
+  const message = useMessage({ control, name })
+  return <SelectField {...rest} {...field} value={field.value ?? ''} message={message} />
 }

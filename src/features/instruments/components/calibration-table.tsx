@@ -1,0 +1,57 @@
+import type { CalibrationRow } from '#shared/api/instruments'
+import { typedWords } from '#shared/instruments/words'
+import { DataTable, type Column } from '../../../components/data-table'
+import { Mark } from '../../../components/marks'
+import { NothingHere } from '../../../components/nothing-here'
+import { shortDate } from '../../../lib/dates'
+
+function Found({ result }: { result: CalibrationRow['calibration']['result'] }) {
+  const sound = result === 'in tolerance'
+  return (
+    <span className="flex items-center gap-2">
+      <Mark name={sound ? 'within' : 'beyond'} size={20} />
+      <span className={sound ? undefined : 'font-semibold text-stop-ink'}>{result}</span>
+    </span>
+  )
+}
+
+function uncertaintyWords({ calibration }: CalibrationRow): string {
+  return calibration.uncertainty === null
+    ? 'not stated'
+    : `± ${typedWords(calibration.uncertainty.value)}, k = ${calibration.uncertainty.k}`
+}
+
+const columns: readonly Column<CalibrationRow>[] = [
+  { id: 'on', header: 'Compared on', names: true, className: 'whitespace-nowrap', cell: (row) => shortDate(row.calibration.calibratedOn) },
+  { id: 'found', header: 'Found', className: 'whitespace-nowrap', cell: (row) => <Found result={row.calibration.result} /> },
+  { id: 'due', header: 'Next one due', className: 'whitespace-nowrap', cell: (row) => shortDate(row.calibration.dueOn) },
+  { id: 'certificate', header: 'Certificate', cell: (row) => row.calibration.certificate },
+  {
+    id: 'with',
+    header: 'Compared with',
+    from: 'wide',
+    cell: (row) => row.calibration.comparedWith || <span className="text-graphite">not stated</span>,
+  },
+  { id: 'uncertainty', header: 'U on the certificate', className: 'whitespace-nowrap', cell: uncertaintyWords },
+  { id: 'by', header: 'Entered by', from: 'wide', className: 'whitespace-nowrap', cell: (row) => row.createdBy },
+]
+
+/** Every calibration the instrument ever had, the latest first. */
+export function CalibrationTable({ calibrations }: { calibrations: readonly CalibrationRow[] }) {
+  return (
+    <DataTable
+      caption="Calibrations, the latest first"
+      rows={calibrations}
+      rowKey={(row) => row.id}
+      columns={columns}
+      nothing={<NothingHere what="No calibration is entered yet." next="Until there is one, this instrument blocks a new test." />}
+      phoneRow={(row) => ({
+        mark: <Mark name={row.calibration.result === 'in tolerance' ? 'within' : 'beyond'} />,
+        title: shortDate(row.calibration.calibratedOn),
+        note: `${row.calibration.certificate}, by ${row.createdBy}`,
+        aside: row.calibration.result,
+        asideNote: `until ${shortDate(row.calibration.dueOn)}`,
+      })}
+    />
+  )
+}

@@ -1,0 +1,81 @@
+import { useState } from 'react'
+import type { InstrumentResponse } from '#shared/api/instruments'
+import { instrumentWords } from '#shared/instruments/words'
+import { Button, ButtonLink } from '../../../components/button'
+import { FormError } from '../../../components/form'
+import { Page, PlateBesidePaper, Section } from '../../../components/page'
+import { sayWhatFailed } from '../../../lib/problem'
+import { paths } from '../../../paths'
+import { useAddCalibration } from '../api/add-calibration'
+import { useRetireInstrument } from '../api/retire-instrument'
+import { CalibrationForm } from './calibration-form'
+import { CalibrationState } from './calibration-state'
+import { CalibrationTable } from './calibration-table'
+import { InstrumentFace } from './instrument-face'
+import { InstrumentFacts } from './instrument-facts'
+
+function Retirement({ id, code, retired }: { id: string; code: string; retired: boolean }) {
+  const retire = useRetireInstrument(id)
+  return (
+    <Section title={retired ? 'Retired' : 'Out of use'}>
+      <FormError message={retire.error && sayWhatFailed(retire.error)} attempt={retire.failureCount} />
+      <div className="flex flex-wrap items-center justify-between gap-4 border-t border-hairline pt-3">
+        <p className="min-w-0 text-graphite">
+          {retired
+            ? `${code} can be taken into use again.`
+            : `${code} is lost, broken or sold: retire it. Records that name it stay, and its code stays taken.`}
+        </p>
+        <Button busy={retire.isPending && 'Changing it'} onClick={() => retire.mutate(!retired)}>
+          {retired ? 'Back into use' : `Retire ${code}`}
+        </Button>
+      </div>
+    </Section>
+  )
+}
+
+type InstrumentPageProps = { answer: InstrumentResponse; today: string; mayWrite: boolean; mayCalibrate: boolean }
+
+/** One instrument: may it be relied on, what it is, and every certificate it ever had. */
+export function InstrumentPage({ answer, today, mayWrite, mayCalibrate }: InstrumentPageProps) {
+  const { instrument, calibrations } = answer
+  const { id, details, retired } = instrument
+  const [entering, setEntering] = useState(false)
+  const add = useAddCalibration(id)
+  const actions = mayWrite && !retired && (
+    <>
+      <ButtonLink to={paths.editInstrument.href(id)}>Change its details</ButtonLink>
+      {mayCalibrate && !entering && (
+        <Button kind="next" onClick={() => setEntering(true)}>
+          Enter a calibration
+        </Button>
+      )}
+    </>
+  )
+  return (
+    <PlateBesidePaper plate={<InstrumentFace details={details} />}>
+      <Page title={details.code} note={instrumentWords(details)} actions={actions || undefined}>
+        <div className="grid gap-8">
+          <CalibrationState instrument={instrument} today={today} />
+          {entering && (
+            <Section title={`A calibration of ${details.code}`}>
+              <CalibrationForm
+                details={details}
+                sending={add.isPending}
+                send={async (calibration) => {
+                  await add.mutateAsync(calibration)
+                  setEntering(false)
+                }}
+                onLeave={() => setEntering(false)}
+              />
+            </Section>
+          )}
+          <InstrumentFacts details={details} />
+          <Section title="Calibrations">
+            <CalibrationTable calibrations={calibrations} />
+          </Section>
+          {mayWrite && <Retirement id={id} code={details.code} retired={retired} />}
+        </div>
+      </Page>
+    </PlateBesidePaper>
+  )
+}
