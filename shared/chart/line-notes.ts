@@ -41,6 +41,8 @@ interface Wanted {
 
 const MOST_NOTES = 3
 const MARK_WIDTH = 24
+/** A leader that drops less than this (px) is hard to tell from the stage lines. */
+const SLANT = 38
 
 type Sized = { text: string; size: number; weight: 400 | 500 | 600; strong: boolean; step: number }
 
@@ -160,7 +162,7 @@ function costOf(candidate: Omit<Candidate, 'cost'>, at: Point, obstacles: Obstac
   if (start === undefined || elbow === undefined || tip === undefined) return Number.POSITIVE_INFINITY
   const slanted: [Point, Point] = [elbow, tip]
   let cost = Math.hypot(tip.x - elbow.x, tip.y - elbow.y)
-  cost += Math.max(0, 24 - Math.abs(tip.y - elbow.y)) * 4
+  cost += Math.max(0, SLANT - Math.abs(tip.y - elbow.y)) * 4
   cost += obstacles.strokes.filter(([a, b]) => crosses(wide, a, b)).length * 400
   cost += obstacles.points.filter((point) => overlap(wide, point)).length * 1200
   cost += obstacles.taken.filter((other) => overlap(wide, other)).length * 4000
@@ -243,7 +245,8 @@ export function layOutNotes(spec: LineChartSpec, frame: LineFrame): PlacedNote[]
     const tone = next.tone ?? 'chalk'
     wanted.push({
       captioned: next.caption !== undefined,
-      at: { x: frame.x((next.from + next.to) / 2), y: frame.y(next.y) },
+      // Once it has been read, a reading lies on the dimension: the leader goes to its free end.
+      at: { x: frame.x(tone === 'scribe' ? next.from : (next.from + next.to) / 2), y: frame.y(next.y) },
       note: {
         at: { x: (next.from + next.to) / 2, y: next.y },
         tone,
@@ -253,6 +256,22 @@ export function layOutNotes(spec: LineChartSpec, frame: LineFrame): PlacedNote[]
   }
   for (const note of spec.notes)
     wanted.push({ note, captioned: false, at: { x: frame.x(note.at.x), y: frame.y(note.at.y) } })
+  const kept = wanted.slice(0, MOST_NOTES)
+  let best: { notes: PlacedNote[]; cost: number } | null = null
+  // Each note takes the best place that is left, so the order decides; three notes have six orders.
+  for (const order of permutations(kept.map((_, index) => index))) {
+    const tried = placeInOrder(kept, order, spec, frame)
+    if (best === null || tried.cost < best.cost) best = tried
+  }
+  return best?.notes ?? []
+}
+
+function placeInOrder(
+  wanted: Wanted[],
+  order: number[],
+  spec: LineChartSpec,
+  frame: LineFrame,
+): { notes: PlacedNote[]; cost: number } {
   const obstacles: Obstacles = {
     strokes: strokes(spec, frame),
     points: spec.points.map((point) => {
@@ -263,11 +282,24 @@ export function layOutNotes(spec: LineChartSpec, frame: LineFrame): PlacedNote[]
     taken: [],
     leaders: [],
   }
-  return wanted.slice(0, MOST_NOTES).map((item) => {
+  const notes = new Map<number, PlacedNote>()
+  let cost = 0
+  for (const index of order) {
+    const item = wanted[index]
+    if (item === undefined) continue
     const [note, candidate] = place(item, spec, frame, obstacles)
+    notes.set(index, note)
+    cost += candidate.cost
     obstacles.taken.push(candidate.box)
     const [, elbow, tip] = candidate.leader
     if (elbow !== undefined && tip !== undefined) obstacles.leaders.push([elbow, tip])
-    return note
-  })
+  }
+  return { notes: wanted.flatMap((_, index) => notes.get(index) ?? []), cost }
+}
+
+function permutations(items: readonly number[]): number[][] {
+  if (items.length < 2) return [[...items]]
+  return items.flatMap((item, index) =>
+    permutations([...items.slice(0, index), ...items.slice(index + 1)]).map((rest) => [item, ...rest]),
+  )
 }

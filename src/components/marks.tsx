@@ -60,7 +60,7 @@ const OCTAGON = '7.03,0 16.97,0 24,7.03 24,16.97 16.97,24 7.03,24 0,16.97 0,7.03
 /** On a red plate the octagon is an outline, and finer the larger it is. */
 function Octagon({ tone, weight }: { tone: Tone; weight: number }): ReactElement {
   const hollow = tone === 'plate'
-  const edge = tone === 'dye' ? 'var(--stop-line)' : hollow ? LINE.plate : 'var(--stop)'
+  const edge = tone === 'dye' ? 'var(--stop-line)' : hollow ? LINE.plate : 'var(--stop-ink)'
   const inset = weight / 2
   const scale = (24 - weight) / 24
   return (

@@ -159,6 +159,11 @@ export function portalElevation(portal: Portal): Elevation {
   const under = bedBottom + 67
   // Under a four-post's bed the nuts come first.
   const below = bedBottom + (portal.kind === 'four-post' ? 21 : 9)
+  // The letters stand outside the uprights; on a bench press, whose pads are there, inside.
+  const bench = portal.kind === 'bench'
+  const clear = bench ? 13 : post + 5
+  const atLeft = { at: { x: left, y: below }, letter: bench ? 'right' : 'left', clear } as const
+  const atRight = { at: { x: right, y: below }, letter: bench ? 'left' : 'right', clear } as const
   return {
     lanes: portal.lanes,
     from: Math.max(24, top - 4),
@@ -176,10 +181,10 @@ export function portalElevation(portal: Portal): Elevation {
     },
     points: {
       'bed-middle': { at: { x: cx, y: bedBottom + 9 }, letter: 'right' },
-      'bed-pin-left': { at: { x: left, y: below }, letter: 'left', clear: post + 5 },
-      'bed-pin-right': { at: { x: right, y: below }, letter: 'right', clear: post + 5 },
-      'bed-left': { at: { x: left, y: below }, letter: 'left', clear: post + 5 },
-      'bed-right': { at: { x: right, y: below }, letter: 'right', clear: post + 5 },
+      'bed-pin-left': atLeft,
+      'bed-pin-right': atRight,
+      'bed-left': atLeft,
+      'bed-right': atRight,
       'head-middle': { at: { x: cx + span * 0.3, y: headBottom + 9 }, letter: 'right' },
       'head-left': { at: { x: left + post + 16, y: headBottom + 9 }, letter: 'right' },
       'head-right': { at: { x: right - post - 16, y: headBottom + 9 }, letter: 'left' },

@@ -10,10 +10,12 @@ interface LiveFigureProps {
   found?: { mark: MarkName; text: ReactNode }
   /** The load as typed so far; null while the gauge's field can't be read. */
   load: { figure: string; unit: string; uncertainty: string; also: string } | null
+  /** With the load off there is no load to show. */
+  bare?: boolean
 }
 
 /** The question at hand, and the load that the gauge's reading makes, always with its uncertainty. */
-export function LiveFigure({ question, hint, found, load }: LiveFigureProps): ReactElement {
+export function LiveFigure({ question, hint, found, load, bare = false }: LiveFigureProps): ReactElement {
   const words = load === null ? [] : load.unit.split(' ')
   return (
     <div className="min-w-0">
@@ -26,7 +28,7 @@ export function LiveFigure({ question, hint, found, load }: LiveFigureProps): Re
             <span>{found.text}</span>
           </p>
         )}
-        <output className="block">
+        <output className={bare ? 'hidden' : 'block'}>
           {load === null ? (
             <span className="block pt-5 text-46 font-semibold text-graphite">—</span>
           ) : (

@@ -23,6 +23,8 @@ interface ReadingRowProps {
   onCommit?: (id: string, last: boolean) => void
   /** Shows under "Mark" before the moment was marked. */
   markNote?: string
+  /** Too early to mark: the plate stays there and says so in its note. */
+  markShut?: boolean
   /** True for a finger: the system's keyboard stays away and the program's own keys are used. */
   ownKeys?: boolean
 }
@@ -41,13 +43,21 @@ function PunchMark(): ReactElement {
   )
 }
 
-function MarkPlate({ mark, onMark, note }: { mark: string | null; onMark: () => void; note: string | undefined }): ReactElement {
+interface MarkPlateProps {
+  mark: string | null
+  onMark: () => void
+  note: string | undefined
+  shut: boolean
+}
+
+function MarkPlate({ mark, onMark, note, shut }: MarkPlateProps): ReactElement {
   if (mark === null) {
     return (
       <button
         type="button"
-        onClick={onMark}
-        className="flex h-16 items-center gap-3 rounded-field border-2 border-on-chalk bg-chalk px-[10px] text-left text-on-chalk"
+        aria-disabled={shut}
+        onClick={shut ? undefined : onMark}
+        className={`flex h-16 w-full items-center gap-3 rounded-field border-2 px-[10px] text-left ${shut ? 'border-dashed border-rule text-graphite' : 'border-on-chalk bg-chalk text-on-chalk'}`}
       >
         <PunchMark />
         <span>
@@ -138,7 +148,7 @@ export function ReadingRow(props: ReadingRowProps): ReactElement {
       <div className="flex flex-wrap gap-2 tablet:flex-nowrap">
         <div className="w-full shrink-0 tablet:w-[132px]">
           <p className="mb-[5px] hidden text-16 font-medium leading-[24px] tablet:block">This row</p>
-          <MarkPlate mark={props.mark} onMark={props.onMark} note={props.markNote} />
+          <MarkPlate mark={props.mark} onMark={props.onMark} note={props.markNote} shut={props.markShut ?? false} />
         </div>
         <div
           className="grid min-w-0 flex-1 grid-cols-2 gap-2 tablet:grid-cols-[repeat(var(--columns),minmax(0,1fr))]"

@@ -100,13 +100,14 @@ function Portrait(props: RunFrameProps): ReactElement {
         {props.over}
         <div className="px-4 pb-4 pt-[3px]">{props.bench}</div>
       </main>
+      {props.aside !== undefined && <div className="ground-dye shrink-0 px-4 pt-3">{props.aside}</div>}
       <Bar {...props} />
     </>
   )
 }
 
 function Bar(props: RunFrameProps): ReactElement {
-  const plates = props.aside ?? (props.note !== undefined || props.pause !== undefined ? <Plates {...props} /> : undefined)
+  const plates = props.note === undefined && props.pause === undefined ? undefined : <Plates {...props} />
   const both = props.action !== undefined && plates !== undefined
   return (
     <div className={`ground-dye grid h-36 shrink-0 items-center gap-3 px-4 ${both ? 'grid-cols-[192px_minmax(0,1fr)_minmax(200px,0.54fr)]' : 'grid-cols-[192px_minmax(0,1fr)]'}`}>
@@ -128,7 +129,7 @@ function Phone(props: RunFrameProps): ReactElement {
       </div>
       <main className="ground-steel min-h-0 flex-1 overflow-y-auto">
         <div className="px-4 py-3">{props.bench}</div>
-        {props.action !== undefined && <div className="px-4 pb-4">{props.action}</div>}
+        {props.action !== undefined && <div className="ground-steel sticky bottom-0 px-4 py-3">{props.action}</div>}
         {(props.note !== undefined || props.aside !== undefined) && (
           <div className="ground-dye grid gap-3 px-4 pt-4">
             {props.aside}

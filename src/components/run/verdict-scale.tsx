@@ -40,7 +40,7 @@ function Point({ x, verdict }: { x: number; verdict: Verdict }): ReactElement {
       const angle = ((corner + 0.5) * Math.PI) / 4
       return `${x + 11 * Math.cos(angle)},${y + 11 * Math.sin(angle)}`
     })
-    return <polygon points={corners.join(' ')} fill="var(--stop)" stroke="var(--steel)" strokeWidth={2} />
+    return <polygon points={corners.join(' ')} fill="var(--stop)" stroke="var(--stop-ink)" strokeWidth={1.6} />
   }
   if (verdict === 'undecided') {
     return (
