@@ -46,5 +46,10 @@ it('a stopped test shows where it was stopped, and no stage above as reached', (
 })
 
 it('a ledger without entries has nothing to show', () => {
-  expect(summariseClimb(emptyProofTest('01994a00-0007-7000-8000-000000000001'))).toEqual({ datumAt: null, rungs: [], levelPercent: 0, loaded: false })
+  expect(summariseClimb(emptyProofTest('01994a00-0007-7000-8000-000000000001'))).toEqual({
+    datumAt: null,
+    rungs: [],
+    levelPercent: 0,
+    loaded: false,
+  })
 })

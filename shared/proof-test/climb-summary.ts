@@ -44,9 +44,12 @@ function rungOf(stage: StageState, stoppedAt: number | null): RungSummary {
 export function summariseClimb(state: ProofTestState): ClimbSummary {
   const leg = state.legs[state.position?.leg ?? 0]
   const climb = leg?.climbs[state.position?.climb ?? 0] ?? leg?.climbs.at(-1)
-  const planned = (state.opened?.protocol.content.stages ?? []).map(
-    (stage): RungSummary => ({ percent: stage.percent, holdSeconds: stage.holdSeconds, state: 'to-come', at: null }),
-  )
+  const planned = (state.opened?.protocol.content.stages ?? []).map((stage): RungSummary => ({
+    percent: stage.percent,
+    holdSeconds: stage.holdSeconds,
+    state: 'to-come',
+    at: null,
+  }))
   const stoppedAt = state.stopped?.atPercent ?? null
   const rungs = climb ? climb.stages.map((stage) => rungOf(stage, stoppedAt)) : planned
   const read = climb?.stages.filter((stage) => (lastAttempt(stage)?.rows.length ?? 0) > 0) ?? []

@@ -1,7 +1,7 @@
 import { toSI } from '../units'
 import { currentAttempt } from './apply'
 import { elapsedBetween, LONGEST_PAUSE_SECONDS } from './clock'
-import { deflectionsOf } from './deflection'
+import { deflectionsOf, NET } from './deflection'
 import type { Opened, Position, Reading } from './entries'
 import { evaluateLeg, repeatClimbWanted } from './evaluate'
 import { evaluateClimb, predict, type StageEvaluation } from './evaluate-climb'
@@ -27,6 +27,14 @@ export function sourcesOfRow(opened: Opened): string[] {
   return [...opened.forceInstrumentIds, ...opened.points.map((point) => point.id)]
 }
 
+/** The points to type again when the leading figure is outside: those outside by themselves, else all it is made of. */
+function suspects(opened: Opened, lead: string, outside: readonly string[]): string[] {
+  if (lead !== NET || !opened.net) return [lead]
+  const parts = [opened.net.plus, ...opened.net.minus]
+  const own = parts.filter((id) => outside.includes(id))
+  return own.length > 0 ? own : parts
+}
+
 /** Readings of a row that lie far from what the line predicts, or outside its prediction: they are typed again. */
 export function surprising(state: ProofTestState, at: Position, readings: readonly Reading[]): string[] {
   const opened = state.opened
@@ -41,6 +49,7 @@ export function surprising(state: ProofTestState, at: Position, readings: readon
   const target = evaluated.stages.find((stage) => stage.at.stage === at.stage)?.target
   const instrument = opened.forceInstrumentIds[0]
   if (target && instrument && (force.force > target.force * 1.5 || force.force < target.force * 0.5)) found.push(instrument)
+  const outside: string[] = []
   for (const figure of deflectionsOf(opened, readings, datum.readings)) {
     const points = [evaluated.datum, ...before.map((stage) => stage.start)].flatMap((row) => {
       const own = row?.deflections.find((candidate) => candidate.id === figure.id)
@@ -49,13 +58,14 @@ export function surprising(state: ProofTestState, at: Position, readings: readon
         : []
     })
     const prediction = predict(opened, points, force.force)
-    if (!prediction) continue
-    const outside = figure.deflection < prediction.from || figure.deflection > prediction.to
-    const wild = Math.abs(figure.deflection) > 10 * figure.increment || Math.abs(prediction.deflection) > 10 * figure.increment
-    const ratio = prediction.deflection === 0 ? 1 : figure.deflection / prediction.deflection
-    const suspect = opened.net && figure.id === 'net' ? opened.net.plus : figure.id
-    if ((outside && figure.id === evaluated.datum?.lead?.id) || (wild && outside && (ratio >= 5 || ratio <= 0.2))) found.push(suspect)
+    if (!prediction || (figure.deflection >= prediction.from && figure.deflection <= prediction.to)) continue
+    outside.push(figure.id)
+    const far = Math.max(Math.abs(figure.deflection), Math.abs(prediction.deflection)) > 10 * figure.increment
+    const ratio = prediction.deflection === 0 ? Number.POSITIVE_INFINITY : figure.deflection / prediction.deflection
+    if (figure.id !== NET && far && (ratio >= 5 || ratio <= 0.2)) found.push(figure.id)
   }
+  const lead = evaluated.datum?.lead?.id
+  if (lead !== undefined && outside.includes(lead)) found.push(...suspects(opened, lead, outside))
   return [...new Set(found)]
 }
 

@@ -4,6 +4,7 @@ import { evaluateClimb } from '#shared/proof-test/evaluate-climb'
 import { SET_UP_ITEMS } from '#shared/proof-test/entries'
 import type { Conclusion, Opened, Position, ProofTestDraft, ProofTestKind, Reading } from '#shared/proof-test/entries'
 import type { ProtocolContent } from '#shared/proof-test/protocol'
+import { surprising } from '#shared/proof-test/rules-under-load'
 import type { ProofTestState } from '#shared/proof-test/state'
 import { LedgerBuilder, testId } from './ledger-builder'
 import { ids, names, openedPayload } from './test-press'
@@ -134,6 +135,11 @@ class TestWriter {
     return { mark: this.book.mark(ids.lead, at), readings: readings(row), typedAgain }
   }
 
+  /** Who types what the line doesn't predict is asked to type it again. */
+  private typedAgain(at: Position, row: TypedRow): string[] {
+    return surprising(this.state, at, readings(row))
+  }
+
   walkDown(occasion: 'before load' | 'after load', from: string): void {
     this.state.joints.forEach(({ joint }, index) => {
       const payload = {
@@ -195,10 +201,8 @@ class TestWriter {
   /** True when the stage was decided "go on". */
   private stage(at: Position, script: StageScript, holdSeconds: number, shift: number): boolean {
     const mark = this.moment(script.at, shift)
-    const slips = (which: 'start' | 'end') =>
-      (script.corrections ?? []).filter((slip) => slip.row === which).map((slip) => PLACES[slip.column])
     this.write({ kind: 'stage-begun', payload: { at } }, this.moment(mark, -45))
-    const start = { at, occasion: 'hold start' as const, ...this.row(mark, script.start, slips('start')) }
+    const start = { at, occasion: 'hold start' as const, ...this.row(mark, script.start, this.typedAgain(at, script.start)) }
     const startRow = this.write({ kind: 'row-read', payload: start }, this.moment(mark, 18))
     this.correct(startRow, script, 'start', this.moment(mark, 40))
     if (this.state.opened && at.climb === 0 && (this.state.opened.protocol.content.stages[at.stage]?.percent ?? 0) >= 100) {
@@ -207,7 +211,7 @@ class TestWriter {
       this.write({ kind: 'independent-read', payload }, this.moment(mark, 50), ids.witness)
     }
     const endMark = this.moment(mark, holdSeconds + 4)
-    const end = { at, occasion: 'hold end' as const, ...this.row(endMark, script.end, slips('end')) }
+    const end = { at, occasion: 'hold end' as const, ...this.row(endMark, script.end, this.typedAgain(at, script.end)) }
     const endRow = this.write({ kind: 'row-read', payload: end }, this.moment(endMark, 14))
     this.correct(endRow, script, 'end', this.moment(endMark, 30))
     const evaluated = evaluateClimb(this.state, at.leg, at.climb)?.stages.find((candidate) => candidate.at.stage === at.stage)
