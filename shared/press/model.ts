@@ -1,6 +1,14 @@
 import { z } from 'zod'
 import { idSchema } from '../ledger/envelope'
-import { typedAreaSchema, typedForceSchema, typedLengthSchema, typedMassSchema, typedPressureSchema } from '../units'
+import {
+  typedForceSchema,
+  typedLengthSchema,
+  typedMassSchema,
+  typedPositiveAreaSchema,
+  typedPositiveForceSchema,
+  typedPositiveLengthSchema,
+  typedPositivePressureSchema,
+} from '../units'
 
 const name = (what: string) => z.string().trim().min(1, `Give the ${what} a name.`).max(80, 'Keep it under 80 characters.')
 
@@ -32,14 +40,14 @@ export const ramSchema = z
   .object({
     id: idSchema,
     name: name('ram'),
-    bore: typedLengthSchema.nullable(),
+    bore: typedPositiveLengthSchema.nullable(),
     boreTolerance: typedLengthSchema.nullable(),
-    effectiveArea: typedAreaSchema.nullable(),
-    stroke: typedLengthSchema,
-    ratedCapacity: typedForceSchema,
-    ratedPressure: typedPressureSchema,
+    effectiveArea: typedPositiveAreaSchema.nullable(),
+    stroke: typedPositiveLengthSchema,
+    ratedCapacity: typedPositiveForceSchema,
+    ratedPressure: typedPositivePressureSchema,
     acting: z.enum(['single', 'double']),
-    rodDiameter: typedLengthSchema.nullable(),
+    rodDiameter: typedPositiveLengthSchema.nullable(),
     springReturn: typedForceSchema.nullable(),
     carriedMass: typedMassSchema.nullable(),
     carriedComesDown: z.boolean(),
@@ -55,8 +63,8 @@ export const trainPartSchema = z
     id: idSchema,
     kind: z.enum(TRAIN_PART_KINDS),
     name: name('part'),
-    ratedForce: typedForceSchema.nullable(),
-    ratedPressure: typedPressureSchema.nullable(),
+    ratedForce: typedPositiveForceSchema.nullable(),
+    ratedPressure: typedPositivePressureSchema.nullable(),
   })
   .refine((part) => part.ratedForce !== null || part.ratedPressure !== null, {
     path: ['ratedPressure'],
@@ -93,7 +101,7 @@ export const pressDescriptionSchema = z.object({
   whatFor: z.string().trim().max(80),
   kind: z.enum(FRAME_KINDS),
   dimensions: dimensionsSchema,
-  ratedLoad: typedForceSchema,
+  ratedLoad: typedPositiveForceSchema,
   members: z.array(memberSchema).max(60),
   rams: z.array(ramSchema).min(1, 'A press needs at least one ram.').max(6),
   train: z.array(trainPartSchema).max(40),
