@@ -1,11 +1,12 @@
 import type { ReactNode } from 'react'
 import { classNames } from '../lib/class-names'
+import type { Sort } from '../lib/sort'
 import { usePhone } from '../lib/use-media'
 import { SortGlyph } from './glyphs'
 import { Sheet } from './plate'
 import { RuledList, RuledRow, type RuledRowProps } from './ruled-list'
 
-export type Sort = { column: string; direction: 'ascending' | 'descending' }
+export type { Sort }
 
 export type Column<Row> = {
   id: string

@@ -1,4 +1,4 @@
-import { isRouteErrorResponse, useRouteError } from 'react-router-dom'
+import { isRouteErrorResponse, useLocation, useRouteError } from 'react-router-dom'
 import { Disconnected, ProblemError, UnreadableAnswer, sayWhatFailed } from '../lib/problem'
 import { paths } from '../paths'
 import { Button, ButtonLink } from './button'
@@ -23,8 +23,16 @@ export function NotFound() {
 /** The screen in place of one that failed: what is so, then what to do. */
 export function RouteError() {
   const error = useRouteError()
+  const { pathname, search } = useLocation()
   const status = isRouteErrorResponse(error) || error instanceof ProblemError ? error.status : undefined
   if (status === 404) return <NotFound />
+  if (status === 401) {
+    return (
+      <PlainScreen title="You are signed out" actions={<ButtonLink kind="next" to={paths.signIn.href({ next: pathname + search })}>Sign in again</ButtonLink>}>
+        <p>Your session has ended. Sign in again and this page opens where you left it.</p>
+      </PlainScreen>
+    )
+  }
   if (status === 403) {
     return (
       <PlainScreen mark="beyond" title="Your role doesn't open this" actions={today}>

@@ -1,0 +1,2 @@
+/** Which column a list runs by, and which way. */
+export type Sort = { column: string; direction: 'ascending' | 'descending' }
