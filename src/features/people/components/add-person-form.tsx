@@ -27,24 +27,24 @@ export function AddPersonForm({ shopId, onAdded, onLeave }: AddPersonFormProps) 
         <FormError message={errors.root?.message} attempt={submitCount} />
       </div>
       <div className="grid content-start gap-4">
-      <TextField label="Name, as it prints on records" autoComplete="off" autoFocus message={errors.name?.message} {...form.register('name')} />
-      <TextField
-        label="E-mail"
-        type="email"
-        autoComplete="off"
-        inputMode="email"
-        autoCapitalize="none"
-        spellCheck={false}
-        message={errors.email?.message}
-        {...form.register('email')}
-      />
-      <PasswordField
-        label="First password"
-        hint="Hand it over in person, to be changed after signing in. Whoever has an account already keeps their own."
-        autoComplete="new-password"
-        message={errors.password?.message}
-        {...form.register('password')}
-      />
+        <TextField label="Name, as it prints on records" autoComplete="off" autoFocus message={errors.name?.message} {...form.register('name')} />
+        <TextField
+          label="E-mail"
+          type="email"
+          autoComplete="off"
+          inputMode="email"
+          autoCapitalize="none"
+          spellCheck={false}
+          message={errors.email?.message}
+          {...form.register('email')}
+        />
+        <PasswordField
+          label="First password"
+          hint="Hand it over in person, to be changed after signing in. Whoever has an account already keeps their own."
+          autoComplete="new-password"
+          message={errors.password?.message}
+          {...form.register('password')}
+        />
       </div>
       <RadioRow
         label="Role"
