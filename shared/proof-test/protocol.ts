@@ -104,6 +104,15 @@ const quarters = [
   { percent: 100, holdSeconds: 300 },
 ]
 
+/** The plan that a new one is written on from. */
+export const FIRST_LOAD_BY_QUARTERS: ProtocolContent = {
+  ...common,
+  purpose: 'The first load of a new or repaired frame, bed where it is used most, ram central.',
+  legs: [{ label: 'Ram central', ramPosition: 'central', bed: 'where it is used most' }],
+  stages: quarters,
+  repeatClimb: 'when the set can be seen',
+}
+
 /**
  * The protocols every shop starts with. Holds and limits: common practice, from memory, no source.
  * Off-centre follows the description of ASME ASP-2010 3-4.1.1 (100 % at the ram's far left and far right,
@@ -113,13 +122,7 @@ const quarters = [
 export const SHIPPED_PROTOCOLS: readonly { name: string; content: ProtocolContent }[] = [
   {
     name: 'First load by quarters',
-    content: {
-      ...common,
-      purpose: 'The first load of a new or repaired frame, bed where it is used most, ram central.',
-      legs: [{ label: 'Ram central', ramPosition: 'central', bed: 'where it is used most' }],
-      stages: quarters,
-      repeatClimb: 'when the set can be seen',
-    },
+    content: FIRST_LOAD_BY_QUARTERS,
   },
   {
     name: 'Off-centre',

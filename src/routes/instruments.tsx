@@ -28,11 +28,7 @@ export function Component() {
     <NothingHere what="No instrument is entered yet." next="A test reads at least one gauge or load cell, and one indicator." />
   )
   return (
-    <Page
-      title="Instruments"
-      note={`of ${shop.name}, ${view.sort.column === 'due' ? 'by the day they fall due' : 'by their code'}`}
-      actions={enter || undefined}
-    >
+    <Page title="Instruments" note={view.sort.column === 'due' ? 'by the day they fall due' : 'by their code'} actions={enter || undefined}>
       <InstrumentFilters
         search={view.asked.search ?? ''}
         kind={view.asked.kind ?? ''}

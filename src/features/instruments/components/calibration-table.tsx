@@ -25,15 +25,20 @@ const columns: readonly Column<CalibrationRow>[] = [
   { id: 'on', header: 'Compared on', names: true, className: 'whitespace-nowrap', cell: (row) => shortDate(row.calibration.calibratedOn) },
   { id: 'found', header: 'Found', className: 'whitespace-nowrap', cell: (row) => <Found result={row.calibration.result} /> },
   { id: 'due', header: 'Next one due', className: 'whitespace-nowrap', cell: (row) => shortDate(row.calibration.dueOn) },
-  { id: 'certificate', header: 'Certificate', cell: (row) => row.calibration.certificate },
   {
-    id: 'with',
-    header: 'Compared with',
-    from: 'wide',
-    cell: (row) => row.calibration.comparedWith || <span className="text-graphite">not stated</span>,
+    id: 'certificate',
+    header: 'Certificate',
+    className: 'w-full',
+    cell: ({ calibration, createdBy }) => (
+      <>
+        {calibration.certificate}
+        <span className="block text-graphite">
+          {calibration.comparedWith !== '' && `${calibration.comparedWith}. `}Entered by {createdBy}
+        </span>
+      </>
+    ),
   },
-  { id: 'uncertainty', header: 'U on the certificate', className: 'whitespace-nowrap', cell: uncertaintyWords },
-  { id: 'by', header: 'Entered by', from: 'wide', className: 'whitespace-nowrap', cell: (row) => row.createdBy },
+  { id: 'uncertainty', header: 'U on it', className: 'whitespace-nowrap', cell: uncertaintyWords },
 ]
 
 /** Every calibration the instrument ever had, the latest first. */

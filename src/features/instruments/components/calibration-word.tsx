@@ -32,12 +32,13 @@ export function calibrationWord(calibration: Calibration | null, today: string):
 export function DueCell({ calibration, today }: { calibration: Calibration | null; today: string }) {
   const { mark, word, blocks, soon } = calibrationWord(calibration, today)
   const late = blocks && calibration !== null
+  const strong = soon || calibration === null
   return (
     <span className="flex items-center gap-2.5">
       <Mark name={mark} size={20} />
       <span className="min-w-0 whitespace-nowrap">
-        {calibration && <>{shortDate(calibration.dueOn)} </>}
-        <span className={classNames(late && 'font-semibold text-stop-ink', soon && 'font-semibold', !late && !soon && 'text-graphite')}>
+        {calibration && <>{shortDate(calibration.dueOn)}, </>}
+        <span className={classNames(late && 'font-semibold text-stop-ink', strong && 'font-semibold', !late && !strong && 'text-graphite')}>
           {word}
         </span>
       </span>

@@ -1,6 +1,6 @@
 import type { ReactElement } from 'react'
 import type { InstrumentDetails } from '#shared/instruments/model'
-import { accuracyWords, scaleEnd } from '#shared/instruments/words'
+import { accuracyWords, errorLimitWords, instrumentWords, scaleEnd, typedWords } from '#shared/instruments/words'
 import { multiples, dialTicks } from '#shared/chart/ticks'
 import { parseDecimal, unitLabel, type Typed, type Unit } from '#shared/units'
 import { Fit } from '../../../components/fit'
@@ -46,33 +46,61 @@ function Rule({ end, unit, width }: RuleProps): ReactElement {
   )
 }
 
-/** The instrument's own scale, drawn: a gauge by its dial, everything else by a rule. What it says stands in words beside it. */
-export function InstrumentFace({ details }: { details: InstrumentDetails }) {
+type Note = readonly [name: string, value: string]
+
+function notesOf(details: InstrumentDetails): Note[] {
+  const turn = details.kind === 'indicator' && details.revolution
+  return [
+    ['What it is', details.description === '' ? instrumentWords(details) : `${instrumentWords(details)}, ${details.description}`],
+    [details.kind === 'indicator' ? 'Range' : 'Full scale', typedWords(scaleEnd(details))],
+    ['One step', typedWords(details.increment)],
+    ...(turn ? ([['One turn', typedWords(turn)]] satisfies Note[]) : []),
+    ...(details.kind === 'gauge' ? ([['Class or grade', accuracyWords(details)]] satisfies Note[]) : []),
+    ['Limit of error', errorLimitWords(details)],
+  ]
+}
+
+function Face({ details }: { details: InstrumentDetails }) {
   const end = scaleEnd(details)
   const unit = unitLabel(end.unit, { plural: true })
-  const gauge = details.kind === 'gauge' && details.increment.unit === end.unit ? details : undefined
+  if (details.kind !== 'gauge') {
+    return (
+      <Fit initial={{ width: 340, height: 92 }} className="h-[92px] w-full">
+        {({ width }) => <Rule end={numberOf(end)} unit={unit} width={width} />}
+      </Fit>
+    )
+  }
+  const step = details.increment.unit === end.unit ? numberOf(details.increment) : undefined
   return (
-    <div className="ground-dye flex flex-col gap-3 px-4 py-5 tablet:px-6">
-      <div aria-hidden="true" className="flex justify-center">
-        {details.kind === 'gauge' ? (
-          <Dial
-            code={details.code}
-            fullScale={numberOf(end)}
-            unit={unit}
-            minor={gauge && numberOf(gauge.increment)}
-            value={null}
-            target={null}
-            window={null}
-            limitFrom={null}
-            width={330}
-          />
-        ) : (
-          <Fit initial={{ width: 340, height: 92 }} className="h-[92px] w-full">
-            {({ width }) => <Rule end={numberOf(end)} unit={unit} width={width} />}
-          </Fit>
-        )}
+    <Dial
+      code=""
+      fullScale={numberOf(end)}
+      unit={unit}
+      minor={step}
+      value={null}
+      target={null}
+      window={null}
+      limitFrom={null}
+      width={350}
+    />
+  )
+}
+
+/** The instrument's own scale, drawn: a gauge by its dial, everything else by a rule. Beneath it, what it is in words. */
+export function InstrumentFace({ details }: { details: InstrumentDetails }) {
+  return (
+    <div className="flex flex-col gap-6 px-4 py-6 tablet:px-6 tablet:max-desktop:flex-row tablet:max-desktop:items-center">
+      <div aria-hidden="true" className="flex min-w-0 justify-center tablet:max-desktop:w-1/2 tablet:max-desktop:shrink-0">
+        <Face details={details} />
       </div>
-      <p className="text-center font-condensed text-faint-scribe">{accuracyWords(details)}</p>
+      <dl className="grow border-t border-ghost">
+        {notesOf(details).map(([name, value]) => (
+          <div key={name} className="grid grid-cols-[8rem_1fr] gap-x-4 border-b border-ghost py-2">
+            <dt className="text-faint-scribe">{name}</dt>
+            <dd className="min-w-0 font-medium">{value}</dd>
+          </div>
+        ))}
+      </dl>
     </div>
   )
 }

@@ -12,7 +12,6 @@ import { CalibrationForm } from './calibration-form'
 import { CalibrationState } from './calibration-state'
 import { CalibrationTable } from './calibration-table'
 import { InstrumentFace } from './instrument-face'
-import { InstrumentFacts } from './instrument-facts'
 
 function Retirement({ id, code, retired }: { id: string; code: string; retired: boolean }) {
   const retire = useRetireInstrument(id)
@@ -54,7 +53,7 @@ export function InstrumentPage({ answer, today, mayWrite, mayCalibrate }: Instru
   return (
     <PlateBesidePaper plate={<InstrumentFace details={details} />}>
       <Page title={details.code} note={instrumentWords(details)} actions={actions || undefined}>
-        <div className="grid gap-8">
+        <div className="grid grid-cols-1 gap-8">
           <CalibrationState instrument={instrument} today={today} />
           {entering && (
             <Section title={`A calibration of ${details.code}`}>
@@ -69,7 +68,6 @@ export function InstrumentPage({ answer, today, mayWrite, mayCalibrate }: Instru
               />
             </Section>
           )}
-          <InstrumentFacts details={details} />
           <Section title="Calibrations">
             <CalibrationTable calibrations={calibrations} />
           </Section>
