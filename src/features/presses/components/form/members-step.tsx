@@ -1,0 +1,60 @@
+import { useFieldArray, useWatch } from 'react-hook-form'
+import { v7 as newId } from 'uuid'
+import { Button } from '../../../../components/button'
+import { FieldMessage, TextField } from '../../../../components/field'
+import { FormStep, WholeRow } from '../../../../components/form-steps'
+import { SelectField } from '../../../../components/select-field'
+import { memberChoices } from '../words'
+import type { PressForm } from './use-press-form'
+
+/** The parts that the force passes through, from the ram round to the bed. */
+export function MembersStep({ form, number }: { form: PressForm; number: number }) {
+  const { control, register, formState, getValues } = form
+  const members = useFieldArray({ control, name: 'description.members', keyName: 'key' })
+  const kind = useWatch({ control, name: 'description.kind' })
+  const errors = formState.errors.description?.members
+  const holds = (id: string) => getValues('joints').filter((joint) => joint.between.includes(id)).length
+  return (
+    <FormStep
+      number={number}
+      title="Members"
+      note="Every part the force passes through, from the ram round the frame to the bed."
+      aside={members.fields.length > 0 ? `${members.fields.length} members` : undefined}
+    >
+      {members.fields.length === 0 && kind === '' && (
+        <WholeRow>
+          <p>Choose the kind of frame first: its usual members stand here then.</p>
+        </WholeRow>
+      )}
+      <WholeRow>
+        <ul>
+          {members.fields.map((field, index) => (
+            <li key={field.key} className="grid grid-cols-1 items-end gap-x-4 gap-y-1 border-b border-hairline py-3 tablet:grid-cols-[1fr_13rem_auto]">
+              <TextField
+                label={`Member ${index + 1}`}
+                autoComplete="off"
+                message={errors?.[index]?.name?.message}
+                {...register(`description.members.${index}.name`)}
+              />
+              <SelectField label="Kind" choices={memberChoices} {...register(`description.members.${index}.kind`)} />
+              <Button
+                aria-label={`Take out ${field.name}`}
+                onClick={() => members.remove(index)}
+                disabled={holds(field.id) > 0}
+                note={holds(field.id) > 0 ? 'its joints first' : undefined}
+              >
+                Take out
+              </Button>
+            </li>
+          ))}
+        </ul>
+      </WholeRow>
+      <WholeRow>
+        {errors?.root?.message && <FieldMessage id="members-message">{errors.root.message}</FieldMessage>}
+        <Button size="line" onClick={() => members.append({ id: newId(), kind: 'other', name: '' })}>
+          Add a member
+        </Button>
+      </WholeRow>
+    </FormStep>
+  )
+}

@@ -1,0 +1,89 @@
+import { Button } from '../../../../components/button'
+import { Form, FormActions, FormError } from '../../../../components/form'
+import { FormSteps } from '../../../../components/form-steps'
+import { PageHeading, PlateBesidePaper, inset } from '../../../../components/page'
+import { classNames } from '../../../../lib/class-names'
+import { ProblemError } from '../../../../lib/problem'
+import { useProblemFields } from '../../../../lib/use-problem-fields'
+import { useTitle } from '../../../../lib/use-title'
+import { useRegisterPress } from '../../api/register-press'
+import type { FormUnits } from './draft'
+import { FrameStep } from './frame-step'
+import { JointsStep } from './joints-step'
+import { LivePlate } from './live-plate'
+import { MembersStep } from './members-step'
+import { RamsStep } from './rams-step'
+import { RatedLoadStep } from './rated-load-step'
+import { TrainStep } from './train-step'
+import { usePressForm } from './use-press-form'
+
+/** How many fields need another look, however deep they lie. */
+function countMessages(errors: unknown): number {
+  if (typeof errors !== 'object' || errors === null) return 0
+  if ('message' in errors && typeof errors.message === 'string') return 1
+  return Object.entries(errors).reduce((sum, [name, value]) => (name === 'ref' ? sum : sum + countMessages(value)), 0)
+}
+
+type NewPressFormProps = { shopId: string; units: FormUnits; onEntered: (pressId: string) => void }
+
+/** A press, entered whole: frame, rams, train, rated load, members and joints. */
+export function NewPressForm({ shopId, units, onEntered }: NewPressFormProps) {
+  useTitle('Enter a press')
+  const { form, restored, finish, beginAnew, chooseKind } = usePressForm(shopId, units)
+  const register = useRegisterPress(shopId)
+  const showProblem = useProblemFields(form)
+  const { errors, submitCount } = form.formState
+  const wrong = submitCount > 0 ? countMessages(errors) : 0
+  const submit = form.handleSubmit((payload) => {
+    const pressId = form.getValues('pressId')
+    register.mutate(
+      { pressId, payload },
+      {
+        onSuccess: () => {
+          finish()
+          onEntered(pressId)
+        },
+        // What was sent before got through after all, with what was typed then: it is changed on its own page.
+        onError: (error) => (error instanceof ProblemError && error.code === 'id-reused' ? onEntered(pressId) : showProblem(error)),
+      },
+    )
+  })
+  return (
+    <PlateBesidePaper plate={<LivePlate form={form} />}>
+      <div className={classNames(inset, 'pt-5 pb-10 desktop:px-8')}>
+        <div className="mb-5 flex flex-wrap items-center justify-between gap-x-6 gap-y-3">
+          <PageHeading>Enter a press</PageHeading>
+          {restored && (
+            <p className="flex flex-wrap items-center gap-3 text-graphite">
+              As you left it on this device.
+              <Button size="line" onClick={beginAnew}>
+                Begin with an empty form
+              </Button>
+            </p>
+          )}
+        </div>
+        <Form onSubmit={submit}>
+          <FormError message={errors.root?.message} attempt={submitCount} />
+          <FormSteps>
+            <FrameStep form={form} number={1} onKind={chooseKind} />
+            <RamsStep form={form} number={2} units={units} />
+            <TrainStep form={form} number={3} units={units} />
+            <RatedLoadStep form={form} number={4} />
+            <MembersStep form={form} number={5} />
+            <JointsStep form={form} number={6} />
+          </FormSteps>
+          <FormActions>
+            <Button type="submit" kind="next" busy={register.isPending && 'Entering it'}>
+              Enter this press
+            </Button>
+            <p role="status" className={wrong > 0 ? 'font-medium text-stop-ink' : 'text-graphite'}>
+              {wrong > 0
+                ? `${wrong === 1 ? 'One field needs' : `${wrong} fields need`} another look. Nothing you typed is lost.`
+                : 'What you type is kept on this device until it is entered.'}
+            </p>
+          </FormActions>
+        </Form>
+      </div>
+    </PlateBesidePaper>
+  )
+}

@@ -1,0 +1,70 @@
+import { useCallback, useEffect, useRef, useState } from 'react'
+import { useForm } from 'react-hook-form'
+import { v7 as newId } from 'uuid'
+import type { FrameKind } from '#shared/press/model'
+import { dropDraft, keepDraft, readDraft } from '../../../../lib/drafts'
+import { draftResolver } from '../../../../lib/draft-resolver'
+import { isProposal, newPress, pressFormSchema, proposal, toPayload, type FormUnits, type PressFormDraft } from './draft'
+
+/** Goes up when the form's fields change, so that an older draft isn't poured into it. */
+const VERSION = 1
+const PAUSE = 300
+
+/** The press form: its draft outlives a reload, and its ids are made once. */
+export function usePressForm(shopId: string, units: FormUnits) {
+  const name = `press.${shopId}`
+  const [kept] = useState(() => readDraft<PressFormDraft>(name, VERSION))
+  const form = useForm({
+    resolver: draftResolver(pressFormSchema, toPayload),
+    defaultValues: kept ?? newPress(newId, units),
+  })
+  const { subscribe, getValues, setValue, reset } = form
+
+  const done = useRef(false)
+  useEffect(() => {
+    let timer: ReturnType<typeof setTimeout> | undefined
+    const save = () => {
+      if (!done.current) keepDraft(name, VERSION, getValues())
+    }
+    const stop = subscribe({
+      formState: { values: true },
+      callback: () => {
+        clearTimeout(timer)
+        timer = setTimeout(save, PAUSE)
+      },
+    })
+    return () => {
+      stop()
+      if (timer !== undefined) {
+        clearTimeout(timer)
+        save()
+      }
+    }
+  }, [getValues, name, subscribe])
+
+  /** Nothing is kept from here on: the press is in the register. */
+  const finish = useCallback(() => {
+    done.current = true
+    dropDraft(name)
+  }, [name])
+  return {
+    form,
+    restored: kept !== undefined,
+    finish,
+    beginAnew() {
+      dropDraft(name)
+      reset(newPress(newId, units))
+    },
+    /** Another kind of frame proposes its own members and joints, unless somebody has changed the list already. */
+    chooseKind(before: FrameKind | '', kind: FrameKind): boolean {
+      const { description, joints } = getValues()
+      if (!isProposal(before, { members: description.members, joints })) return false
+      const proposed = proposal(kind, newId)
+      setValue('description.members', proposed.members)
+      setValue('joints', proposed.joints)
+      return true
+    },
+  }
+}
+
+export type PressForm = ReturnType<typeof usePressForm>['form']
