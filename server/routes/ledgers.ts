@@ -118,10 +118,10 @@ export function ledgerRoutes(context: AppContext): Router {
     const { userId } = personOf(request)
     const { entries } = parseBody(request, appendRequestSchema)
     const answer = await appendBatch(context, ledgerId, entries, async (writing, draft) => {
-      parsePressDraft(draft)
       const head = await readHead(writing.database, writing.transaction, ledgerId)
       if (!head) throw notFound('This press')
       const actor = await membershipOf({ transaction: writing.transaction, userId, shopId: head.shopId })
+      parsePressDraft(draft)
       return appendPress(writing, { transaction: writing.transaction, actor, now: writing.now }, draft)
     })
     response.json(answer)
@@ -158,9 +158,9 @@ export function ledgerRoutes(context: AppContext): Router {
     const clockOff = Date.parse(sentAt) - context.now().getTime()
     let missing: number | null = null
     const append: Append = async (writing, draft) => {
+      const locked = await lockTest(writing, userId, ledgerId)
       if (draft.kind === 'opened' || SIGNATURE_KINDS.has(draft.kind)) throw conflict('own-route', 'This is not entered here.')
       parseProofTestDraft(draft)
-      const locked = await lockTest(writing, userId, ledgerId)
       const expected = (locked.state.devices[draft.deviceId] ?? draft.deviceSeq - 1) + 1
       if (draft.deviceSeq > expected) missing ??= expected
       return appendToTest(writing, locked, draft, clockOff)
