@@ -2,6 +2,7 @@ import ExcelJS from 'exceljs'
 import { recordOf, type RecordSource } from './record'
 import { chartSheet } from './sheets/chart'
 import { correctionsSheet } from './sheets/corrections'
+import { criteriaSheet } from './sheets/criteria'
 import { instrumentsSheet } from './sheets/instruments'
 import { jointsSheet } from './sheets/joints'
 import { ledgerSheet } from './sheets/ledger'
@@ -32,6 +33,7 @@ export async function recordWorkbook(source: RecordSource): Promise<Buffer> {
   peopleSheet(workbook, record)
   stagesSheet(workbook, record, placesOfReadings(record))
   readingsSheet(workbook, record)
+  criteriaSheet(workbook, record)
   jointsSheet(workbook, record)
   trainSheet(workbook, record)
   instrumentsSheet(workbook, record)

@@ -21,11 +21,17 @@ export interface Column {
 }
 
 export interface SheetWords {
+  /** A3 for the widest tables. */
+  paper?: 'A4' | 'A3'
   title: string
   note: string
   /** Number and press, at the right of the title band. */
   record: string
 }
+
+/** Numbers of paper sizes in a workbook; A3 is missing among exceljs's own names for them. */
+const A4: number = 9
+const A3: number = 8
 
 const fill = (argb: string): Fill => ({ type: 'pattern', pattern: 'solid', fgColor: { argb } })
 
@@ -40,7 +46,7 @@ export function addSheet(workbook: Workbook, name: string, words: SheetWords, co
     properties: { defaultRowHeight: 15, tabColor: { argb: DYE } },
     pageSetup: {
       orientation: 'landscape',
-      paperSize: 9,
+      paperSize: words.paper === 'A3' ? A3 : A4,
       fitToPage: true,
       fitToWidth: 1,
       fitToHeight: 0,
@@ -77,10 +83,15 @@ export function header(sheet: Worksheet, row: number, columns: readonly Column[]
     cell.font = { name: FONT, size: 9, bold: true, color: { argb: INK } }
     cell.fill = fill(BAND)
     cell.border = { bottom: EDGE, top: HAIRLINE }
-    cell.alignment = { wrapText: true, vertical: 'bottom', horizontal: align ?? 'left' }
+    cell.alignment = { wrapText: true, vertical: 'bottom', horizontal: align ?? 'left', ...indent(index, align) }
   })
   const lines = Math.max(...columns.map(({ header: words, width }) => words.split('\n').reduce((sum, line) => sum + Math.max(1, Math.ceil(line.length / width)), 0)))
   sheet.getRow(row).height = 5 + 12.5 * lines
+}
+
+/** Words stand off from the number that ends right before them. */
+function indent(index: number, align: Column['align']): { indent?: number } {
+  return index > 0 && (align === undefined || align === 'left') ? { indent: 1 } : {}
 }
 
 /** A heading above a further table. */
@@ -142,7 +153,7 @@ export function putRow(sheet: Worksheet, row: number, columns: readonly Column[]
     const cell = sheet.getCell(row, index + 1)
     put(cell, contents[index] ?? null)
     cell.border = { bottom: HAIRLINE }
-    cell.alignment = { ...cell.alignment, ...(align ? { horizontal: align } : {}), ...(wrap ? { wrapText: true } : {}), vertical: 'top' }
+    cell.alignment = { ...cell.alignment, horizontal: align ?? 'left', ...indent(index, align), ...(wrap ? { wrapText: true } : {}), vertical: 'middle' }
   })
 }
 

@@ -1,3 +1,4 @@
+import { entryText, type StoredEntry } from '#shared/ledger/chain'
 import type { LedgerEntry } from '#shared/ledger/envelope'
 import { CORE_VERSION, evaluateTest, freezeEvaluation } from '#shared/proof-test/evaluate'
 import { evaluateClimb } from '#shared/proof-test/evaluate-climb'
@@ -80,8 +81,8 @@ export const repeatClimb: ClimbScript = {
   datumAt: '11:17',
   datum: ['0', '0.03', '0.01', '0.01'],
   stages: [
-    { at: '11:21', start: ['1950', '0.55', '0.12', '0.11'], end: ['1950', '0.55', '0.12', '0.11'] },
-    { at: '11:24', start: ['3900', '1.09', '0.23', '0.20'], end: ['3900', '1.09', '0.23', '0.20'] },
+    { at: '11:21', start: ['1950', '0.55', '0.12', '0.10'], end: ['1950', '0.55', '0.12', '0.10'] },
+    { at: '11:24', start: ['3900', '1.09', '0.23', '0.21'], end: ['3900', '1.09', '0.23', '0.21'] },
     { at: '11:27', start: ['5900', '1.64', '0.33', '0.31'], end: ['5900', '1.64', '0.33', '0.31'] },
     { at: '11:31', start: ['7850', '2.20', '0.44', '0.42'], end: ['7800', '2.20', '0.44', '0.42'] },
   ],
@@ -305,4 +306,13 @@ export function twoLegTest(options: RecordedTestOptions = {}): RecordedTest {
     { label: 'Ram far right', ramPosition: 'far right', bed: 'where it is used most' },
   ]
   return recordedTest({ ...options, protocol: { legs, ...options.protocol } })
+}
+
+/** Entries as the database keeps them: the canonical text that was hashed, and the hash. */
+export function storedEntries(entries: readonly LedgerEntry[]): StoredEntry[] {
+  return entries.map(({ hash, seq, receivedAt, irregular, prevHash, ...draft }) => ({
+    seq,
+    hash,
+    canonical: entryText(draft, { seq, receivedAt, irregular, prevHash }),
+  }))
 }

@@ -1,19 +1,15 @@
 import { describe, expect, test } from 'vitest'
-import { checkChain, entryText } from '#shared/ledger/chain'
+import { checkChain } from '#shared/ledger/chain'
 import { ledgerEntrySchema } from '#shared/ledger/envelope'
 import { PROOF_TEST_PAYLOADS, type ProofTestKind } from '#shared/proof-test/entries'
 import { evaluateTest } from '#shared/proof-test/evaluate'
-import { recordedTest, stoppedTest, twoLegTest } from '../factories/recorded-test'
+import { recordedTest, stoppedTest, storedEntries, twoLegTest } from '../factories/recorded-test'
 
 const all = { whole: recordedTest(), stopped: stoppedTest(), twoLeg: twoLegTest() }
 
 describe.each(Object.entries(all))('the recorded test "%s"', (_name, { entries }) => {
   test('is one unbroken chain', () => {
-    const stored = entries.map(({ hash, seq, ...rest }) => {
-      const { receivedAt, irregular, prevHash, ...draft } = rest
-      return { seq, hash, canonical: entryText(draft, { seq, receivedAt, irregular, prevHash }) }
-    })
-    expect(checkChain(stored)).toMatchObject({ whole: true, entries: entries.length })
+    expect(checkChain(storedEntries(entries))).toMatchObject({ whole: true, entries: entries.length })
   })
 
   test('holds only entries that the shared schemas take', () => {

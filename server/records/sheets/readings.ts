@@ -186,7 +186,7 @@ export function readingsSheet(workbook: Workbook, record: RecordOfTest): void {
   const layout = layOut(record)
   const rows = recordRows(record)
   const note = 'A correction stands beside what was typed first; formulas take it where there is one. Deflection is measured from the climb’s last datum, in the direction of loading.'
-  const sheet = addSheet(workbook, READINGS_SHEET, { title: 'Readings', note, record: record.title }, layout.columns)
+  const sheet = addSheet(workbook, READINGS_SHEET, { title: 'Readings', note, record: record.title, paper: 'A3' }, layout.columns)
   sheet.views = [{ state: 'frozen', xSplit: 4, ySplit: FIRST_ROW - 1, showGridLines: false }]
   const rowOf = sheetRows(rows)
   rows.forEach((row, index) => {

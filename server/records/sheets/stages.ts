@@ -2,10 +2,10 @@ import type { Workbook, Worksheet } from 'exceljs'
 import { creep, pressureLoss } from '#shared/statistics/hold'
 import type { ClimbEvaluation, Criterion, RowFigures, StageEvaluation } from '#shared/proof-test/evaluate-climb'
 import type { StageRow } from '#shared/proof-test/state'
-import { verdictWord } from '#shared/proof-test/record'
 import { FORCE_DECIMALS, toSI, toUnit, unitLabel } from '#shared/units'
 import type { RecordOfTest } from '../record'
-import { FIRST_ROW, addSheet, address, colours, decimals, header, heading, putRow, type Column, type Content } from '../sheet'
+import { FIRST_ROW, addSheet, address, colours, decimals, putRow, type Column, type Content } from '../sheet'
+import { verdictContent } from './criteria'
 import type { ReadingsPlaces } from './readings'
 import { setLimitContent } from './set-limit'
 import { factorName } from './units'
@@ -73,15 +73,6 @@ interface Drawing {
   layout: Layout
   readings: ReadingsPlaces
 }
-
-const verdictContent = (criterion: Criterion | undefined): Content =>
-  criterion === undefined
-    ? null
-    : {
-        words: verdictWord(criterion.verdict),
-        bold: criterion.verdict !== 'within',
-        colour: criterion.verdict === 'within' ? colours.sound : criterion.verdict === 'beyond' ? colours.stop : colours.graphite,
-      }
 
 const find = (criteria: readonly Criterion[], id: string): Criterion | undefined => criteria.find((criterion) => criterion.id === id)
 
@@ -302,42 +293,13 @@ function climbRows(drawing: Drawing, top: number, climb: ClimbEvaluation): numbe
   return row
 }
 
-const criterionColumns: Column[] = [
-  { header: 'Leg', width: 13 },
-  { header: 'Climb', width: 7, align: 'right' },
-  { header: 'Stage', width: 8 },
-  { header: 'Verdict', width: 8 },
-  { header: 'Criterion', width: 19 },
-  { header: '', width: 9 },
-  { header: 'Read', width: 10 },
-  { header: '', width: 10 },
-  { header: 'Limit', width: 17 },
-  { header: 'From', width: 9 },
-]
-
-/** Stage by stage what was read and what it came to, then every criterion of every stage, raw points among them. */
+/** Stage by stage what was read and what it came to. */
 export function stagesSheet(workbook: Workbook, record: RecordOfTest, readings: ReadingsPlaces): void {
   const layout = layOut(record)
   const note = 'Formulas run from the sheet Readings and the bore on the sheet Train. U and verdicts are the program’s, computed with the same readings.'
-  const sheet = addSheet(workbook, STAGES_SHEET, { title: 'Stages', note, record: record.title }, layout.columns)
+  const sheet = addSheet(workbook, STAGES_SHEET, { title: 'Stages', note, record: record.title, paper: 'A3' }, layout.columns)
   sheet.views = [{ state: 'frozen', xSplit: 3, ySplit: FIRST_ROW - 1, showGridLines: false }]
   const drawing = { sheet, record, layout, readings }
   let row = FIRST_ROW
   for (const climb of record.evaluation.climbs) row = climbRows(drawing, row, climb)
-  row += 1
-  heading(sheet, row, 'Every criterion')
-  header(sheet, row + 1, criterionColumns)
-  row += 2
-  for (const climb of record.evaluation.climbs) {
-    const listed = [
-      ...climb.stages.flatMap((stage) => stage.criteria.map((criterion) => ({ where: `${stage.percent} %`, criterion }))),
-      ...(climb.set?.criteria ?? []).map((criterion) => ({ where: 'Set', criterion })),
-    ]
-    for (const { where, criterion } of listed) {
-      const cells: Content[] = [...lead(record, climb), where, verdictContent(criterion), criterion.label, null, criterion.reading, null, criterion.limitText, criterion.source]
-      putRow(sheet, row, criterionColumns, cells)
-      row += 1
-    }
-  }
 }
-

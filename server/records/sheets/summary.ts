@@ -1,22 +1,23 @@
 import type { Workbook, Worksheet } from 'exceljs'
-import { cautionsOf, clearanceArithmetic, clearedLoad, criteriaHeading, energyText, frozenDifferences, headlineOf, inPrint, placesTested, staticLoadsText, verdictWord } from '#shared/proof-test/record'
+import { cautionsOf, clearanceArithmetic, clearedLoad, criteriaHeading, energyText, frozenDifferences, headlineOf, inPrint, placesTested, staticLoadsText } from '#shared/proof-test/record'
 import { momentText, type RecordOfTest } from '../record'
 import { FIRST_ROW, addSheet, colours, header, heading, put, putRow, type Column, type Content } from '../sheet'
+import { verdictContent } from './criteria'
 
 export const SUMMARY_SHEET = 'Summary'
 
 const columns: Column[] = [
   { header: 'What', width: 30 },
   { header: 'As recorded', width: 64, wrap: true },
-  { header: '', width: 22 },
-  { header: '', width: 22 },
+  { header: '', width: 20 },
+  { header: '', width: 32 },
 ]
 
 const criteriaColumns: Column[] = [
   { header: 'Criterion', width: 30 },
   { header: 'From', width: 64 },
-  { header: 'Read', width: 22, align: 'right' },
-  { header: 'Limit', width: 22, align: 'right' },
+  { header: 'Read', width: 20, align: 'right' },
+  { header: 'Limit', width: 32, align: 'right' },
   { header: 'Verdict', width: 18 },
 ]
 
@@ -55,13 +56,12 @@ function criteria(sheet: Worksheet, top: number, record: RecordOfTest): number {
   header(sheet, top + 1, criteriaColumns)
   let row = top + 2
   for (const criterion of record.evaluation.criteria) {
-    const colour = criterion.verdict === 'within' ? colours.sound : criterion.verdict === 'beyond' ? colours.stop : colours.graphite
     putRow(sheet, row, criteriaColumns, [
       criterion.label,
       criterion.source,
       { words: criterion.reading, bold: true },
       criterion.limitText,
-      { words: verdictWord(criterion.verdict), bold: true, colour },
+      verdictContent(criterion),
     ])
     row += 1
   }
