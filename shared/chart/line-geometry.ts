@@ -53,7 +53,7 @@ function axes(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
   items.push(
     alone
       ? textItem(frame.right, frame.zero + 46, words, 'faint-scribe', { size: 14, condensed: true, anchor: 'end' })
-      : textItem(frame.left, frame.zero + 54, words, 'faint-scribe', { condensed: true }),
+      : textItem(frame.left, frame.zero + 54, words, 'faint-scribe', { condensed: true, size: spec.width < 300 ? 14 : 16 }),
   )
   return items
 }
@@ -224,7 +224,7 @@ export function lineDrawing(spec: LineChartSpec): Drawing {
     items.push(
       textItem(alone ? 24 : frame.left, alone ? 30 : 36, spec.title, 'scribe', { size: alone ? 18 : 20, weight: 600 }),
     )
-  if (spec.aside !== undefined)
+  if (spec.aside !== undefined && spec.width >= 300)
     items.push(
       textItem(spec.width - (alone ? 24 : 33), alone ? 30 : 36, spec.aside, 'faint-scribe', {
         size: alone ? 14 : 16,

@@ -61,6 +61,9 @@ function sizes(wanted: Wanted, small: boolean): Sized[] {
 const overlap = (a: Box, b: Box): boolean =>
   a.left < b.right && b.left < a.right && a.top < b.bottom && b.top < a.bottom
 
+const holds = (box: Box, point: Point): boolean =>
+  box.left < point.x && point.x < box.right && box.top < point.y && point.y < box.bottom
+
 /** True when the straight stroke a–b passes through the box. */
 function crosses(box: Box, a: Point, b: Point): boolean {
   let enter = 0
@@ -165,6 +168,7 @@ function costOf(candidate: Omit<Candidate, 'cost'>, at: Point, obstacles: Obstac
   cost += Math.max(0, SLANT - Math.abs(tip.y - elbow.y)) * 4
   cost += obstacles.strokes.filter(([a, b]) => crosses(wide, a, b)).length * 400
   cost += obstacles.points.filter((point) => overlap(wide, point)).length * 1200
+  cost += obstacles.points.filter((point) => crosses(point, ...slanted) && !holds(point, at)).length * 300
   cost += obstacles.taken.filter((other) => overlap(wide, other)).length * 4000
   cost += obstacles.leaders.filter(([a, b]) => crosses(wide, a, b)).length * 1500
   cost += obstacles.taken.filter((other) => crosses(other, ...slanted)).length * 1500

@@ -85,7 +85,7 @@ interface RungProps {
 function Rung({ stage, y, room, right, shut }: RungProps): ReactElement {
   const ink = rungInk(stage, shut)
   const live = stage.state === 'now' || stage.state === 'waiting'
-  const figures = room.above >= 76 ? 30 : room.above >= 56 ? 24 : 18
+  const figures = room.above >= 76 ? 30 : room.above >= 52 ? 24 : 18
   const words = room.below >= 50 ? 16 : 14
   const first = y + (words === 16 ? 21 : 16)
   // With room for one line only, what is going on now matters more than the load, which the bench shows.

@@ -42,7 +42,7 @@ export function Bench({ row, dial, figure, keypad }: BenchProps): ReactElement {
         {dial}
         {figure}
       </div>
-      <div className="mt-[10px] min-h-[348px] flex-1">{keypad}</div>
+      <div className="mt-[10px] min-h-[292px] flex-1">{keypad}</div>
     </div>
   )
 }

@@ -1,5 +1,6 @@
 import type { ReactElement } from 'react'
 import { multiples } from '#shared/chart/ticks'
+import { Fit } from '../fit'
 import { setPercent } from '../typeset'
 
 interface HoldTimerProps {
@@ -72,7 +73,9 @@ function Scale({ total, elapsed, width, words }: ScaleProps): ReactElement {
       {words &&
         labels.map((value, index) => {
           const anchor = index === 0 ? 'start' : index === labels.length - 1 ? 'end' : 'middle'
-          const crowded = index === labels.length - 2 && at(total) - at(value) < 58
+          const inner = index > 0 && index < labels.length - 1
+          const close = at(steps.label) - at(0) < 44
+          const crowded = inner && (close || (index === labels.length - 2 && at(total) - at(value) < 58))
           return crowded ? null : (
             <text
               key={value}
@@ -108,13 +111,17 @@ export function HoldTimer({ total, elapsed, label, sub, size = 'tablet' }: HoldT
   return (
     <div role="timer" aria-label={`${named}, ${left} left`} className="ground-dye flex h-20 items-center px-4">
       <span className="min-w-[118px] text-54 font-semibold leading-[54px] tracking-[-0.01em]">{left}</span>
-      <span className="ml-2 min-w-0 flex-1">
+      <span className="ml-2 min-w-0 shrink-[3]">
         <span className="block truncate text-20 font-semibold leading-[24px]">{named}</span>
         <span className="block truncate font-condensed text-16 leading-[24px] text-faint-scribe">{sub}</span>
       </span>
-      <span className="ml-3 shrink-0 pt-2">
-        <Scale total={total} elapsed={elapsed} width={292} words />
-      </span>
+      <Fit className="ml-auto mt-2 h-[52px] min-w-[140px] max-w-[300px] flex-1" initial={{ width: 300, height: 52 }}>
+        {({ width }) => (
+          <div className="flex justify-end">
+            <Scale total={total} elapsed={elapsed} width={Math.min(292, width - 8)} words />
+          </div>
+        )}
+      </Fit>
     </div>
   )
 }

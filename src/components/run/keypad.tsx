@@ -116,7 +116,7 @@ export function Keypad(props: KeypadProps): ReactElement {
     )
   }
   return (
-    <div role="group" aria-label="Keys" className="grid h-full min-h-[348px] grid-cols-5 grid-rows-3 gap-[6px]">
+    <div role="group" aria-label="Keys" className="grid h-full min-h-[292px] grid-cols-5 grid-rows-3 gap-[6px]">
       {[...'123'].map(key)}
       {back}
       {signed && key('-')}

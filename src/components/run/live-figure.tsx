@@ -18,12 +18,12 @@ interface LiveFigureProps {
 export function LiveFigure({ question, hint, found, load, bare = false }: LiveFigureProps): ReactElement {
   const words = load === null ? [] : load.unit.split(' ')
   return (
-    <div className="min-w-0">
+    <div className="@container min-w-0">
       <h2 className="text-20 font-semibold leading-[24px]">{question}</h2>
-      {hint !== undefined && <p className="text-16 text-graphite">{hint}</p>}
+      {hint !== undefined && <p className="hidden text-16 text-graphite @min-[256px]:block">{hint}</p>}
       <div className="mt-2 border-t border-rule pt-2">
         {found !== undefined && (
-          <p className="flex items-center gap-2 text-18">
+          <p className="flex items-center gap-2 text-16 @min-[256px]:text-18">
             <Mark name={found.mark} size={22} />
             <span>{found.text}</span>
           </p>
@@ -34,7 +34,7 @@ export function LiveFigure({ question, hint, found, load, bare = false }: LiveFi
           ) : (
             <>
               <span className="mt-1 flex items-center gap-3">
-                <span className="text-54 font-semibold tracking-[-0.01em] tablet:text-76">{load.figure}</span>
+                <span className="text-54 font-semibold tracking-[-0.01em] @min-[256px]:text-76">{load.figure}</span>
                 <span className="text-22 font-medium leading-[24px]">
                   {words.map((word) => (
                     <span key={word} className="block">

@@ -78,6 +78,12 @@ function MarkPlate({ mark, onMark, note, shut }: MarkPlateProps): ReactElement {
   )
 }
 
+/** Long readings and narrow fields take smaller figures: none may be cut off. */
+function typeSize(text: string): string {
+  if (text.length > 5) return 'text-22'
+  return text.length > 3 ? 'text-34 min-[1000px]:max-[1140px]:text-26' : 'text-34'
+}
+
 interface FieldProps {
   field: ReadingField
   focused: boolean
@@ -118,7 +124,7 @@ function Field(props: FieldProps): ReactElement {
           event.preventDefault()
           props.onEnter()
         }}
-        className={`block h-16 w-full rounded-field bg-field px-[10px] font-medium ${field.text.length > 5 ? 'text-22' : 'text-34'} text-ink caret-ink ${edge} ${focused ? 'focus-ring' : ''}`}
+        className={`block h-16 w-full rounded-field bg-field px-[10px] font-medium ${typeSize(field.text)} text-ink caret-ink ${edge} ${focused ? 'focus-ring' : ''}`}
       />
     </div>
   )

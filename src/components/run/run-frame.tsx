@@ -51,7 +51,7 @@ interface RunFrameProps {
 
 function Landscape(props: RunFrameProps): ReactElement {
   return (
-    <div className="grid min-h-0 flex-1 grid-cols-[224px_minmax(0,1fr)_340px]">
+    <div className="grid min-h-0 flex-1 grid-cols-[224px_minmax(576px,1fr)_minmax(200px,340px)]">
       <div className="ground-dye flex min-h-0 flex-col border-r border-ghost">
         <Fit className="min-h-0 flex-1" initial={{ width: 223, height: 644 }}>
           {(size) => props.ladder(size, 'landscape')}
@@ -60,7 +60,7 @@ function Landscape(props: RunFrameProps): ReactElement {
           <StopPlate stopped={props.stopped} onStop={props.onStop} connected={props.connected} />
         </div>
       </div>
-      <main className="ground-steel flex min-h-0 flex-col overflow-y-auto">
+      <main className="ground-steel relative flex min-h-0 flex-col overflow-y-auto">
         {props.over}
         <div className="flex min-h-0 flex-1 flex-col px-4 pb-4 pt-[3px]">{props.bench}</div>
         {props.action !== undefined && <div className="shrink-0 px-4 pb-4">{props.action}</div>}
@@ -90,17 +90,17 @@ function Plates({ note, pause }: Pick<RunFrameProps, 'note' | 'pause'>): ReactEl
 function Portrait(props: RunFrameProps): ReactElement {
   return (
     <>
-      <div className="ground-dye grid min-h-[356px] flex-1 grid-cols-[224px_minmax(0,1fr)]">
+      <div className="ground-dye grid min-h-0 flex-[1_1_356px] grid-cols-[224px_minmax(0,1fr)]">
         <Fit className="border-r border-ghost" initial={{ width: 223, height: 380 }}>
           {(size) => props.ladder(size, 'portrait')}
         </Fit>
         <Fit initial={{ width: 595, height: 380 }}>{(size) => props.line(size, 'portrait')}</Fit>
       </div>
-      <main className="ground-steel max-h-[calc(100dvh-548px)] shrink-0 overflow-y-auto">
+      <main className="ground-steel relative min-h-[140px] shrink-[8] overflow-y-auto">
         {props.over}
         <div className="px-4 pb-4 pt-[3px]">{props.bench}</div>
+        {props.aside !== undefined && <div className="ground-dye px-4 py-3">{props.aside}</div>}
       </main>
-      {props.aside !== undefined && <div className="ground-dye shrink-0 px-4 pt-3">{props.aside}</div>}
       <Bar {...props} />
     </>
   )
@@ -127,7 +127,7 @@ function Phone(props: RunFrameProps): ReactElement {
         </Fit>
         {props.over}
       </div>
-      <main className="ground-steel min-h-0 flex-1 overflow-y-auto">
+      <main className="ground-steel relative min-h-0 flex-1 overflow-y-auto">
         <div className="px-4 py-3">{props.bench}</div>
         {props.action !== undefined && <div className="ground-steel sticky bottom-0 px-4 py-3">{props.action}</div>}
         {(props.note !== undefined || props.aside !== undefined) && (
@@ -150,11 +150,11 @@ function Phone(props: RunFrameProps): ReactElement {
   )
 }
 
-/** The screen of a run. Stop keeps its corner in every layout and in every state. */
+/** The screen of a run. Stop keeps its corner in every layout and in every state: it is the rest that scrolls. */
 export function RunFrame(props: RunFrameProps): ReactElement {
   const shape = useRunShape()
   return (
-    <div className="ground-dye flex h-dvh min-h-[640px] flex-col">
+    <div className="ground-dye flex h-dvh flex-col overflow-hidden">
       {props.title}
       {shape === 'landscape' && <Landscape {...props} />}
       {shape === 'portrait' && <Portrait {...props} />}
