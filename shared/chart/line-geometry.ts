@@ -53,7 +53,10 @@ function axes(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
   items.push(
     alone
       ? textItem(frame.right, frame.zero + 46, words, 'faint-scribe', { size: 14, condensed: true, anchor: 'end' })
-      : textItem(frame.left, frame.zero + 54, words, 'faint-scribe', { condensed: true, size: spec.width < 300 ? 14 : 16 }),
+      : textItem(spec.width < 300 ? 12 : frame.left, frame.zero + 54, words, 'faint-scribe', {
+          condensed: true,
+          size: spec.width < 300 ? 14 : 16,
+        }),
   )
   return items
 }
