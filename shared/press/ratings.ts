@@ -66,7 +66,7 @@ const SAME_RATING = 1.0005
 
 /** A sentence when the rated load passes the lowest rating in the train, else null. */
 export function ratedLoadRefusal(description: Pick<PressDescription, 'rams' | 'train' | 'ratedLoad'>): string | null {
-  const lowest = lowestLimit(description)
+  const lowest = description.rams.length > 0 ? lowestLimit(description) : null
   if (!lowest) return 'A press needs a ram before it can have a rated load.'
   const rated = toSI(description.ratedLoad)
   if (rated <= 0) return 'The rated load is more than zero.'
