@@ -34,7 +34,12 @@ export async function listPeople({ transaction, actor }: Work): Promise<PersonIn
   return people.sort((a, b) => hasLeft(a) - hasLeft(b) || a.user.name.localeCompare(b.user.name) || a.user.id.localeCompare(b.user.id))
 }
 
-async function accountFor({ transaction, now }: Work, person: Omit<AddPersonRequest, 'password'>, passwordHash: string): Promise<User> {
+/** The account of an address: the one that exists, else a new one with this name and password. */
+export async function accountFor(
+  { transaction, now }: Pick<Work, 'transaction' | 'now'>,
+  person: Pick<AddPersonRequest, 'email' | 'name'>,
+  passwordHash: string,
+): Promise<User> {
   const existing = await User.findOne({ where: { email: person.email }, transaction })
   if (existing !== null) return existing
   try {

@@ -23,6 +23,22 @@ async function ownerFor(context: AppContext, request: OpenShopRequest, client: C
   return { existing }
 }
 
+/** A shop with its owner and the protocols that every shop starts with, in the caller's transaction. */
+export async function foundShop(
+  { transaction, now }: Pick<Work, 'transaction' | 'now'>,
+  userId: string,
+  shop: Pick<OpenShopRequest, 'shopName' | 'forceUnit' | 'pressureUnit' | 'lengthUnit'>,
+): Promise<string> {
+  const { shopName: name, forceUnit, pressureUnit, lengthUnit } = shop
+  const { id } = await Shop.create(
+    { id: newId(), name, forceUnit, pressureUnit, lengthUnit, buildPauseDays: 30, walkDownHours: 12, createdAt: now },
+    { transaction },
+  )
+  await Membership.create({ shopId: id, userId, role: 'owner', createdAt: now, endedAt: null }, { transaction })
+  await addShippedProtocols({ transaction, now, shopId: id, userId })
+  return id
+}
+
 /** Opens a shop, with its owner, and signs the owner in. */
 export async function openShop(context: AppContext, request: OpenShopRequest, client: Client): Promise<SignedIn> {
   const owner = await ownerFor(context, request, client)
@@ -36,21 +52,7 @@ export async function openShop(context: AppContext, request: OpenShopRequest, cl
               { id: newId(), email: request.email, name: request.ownerName, passwordHash: owner.passwordHash, createdAt: now },
               { transaction },
             )
-      const shop = await Shop.create(
-        {
-          id: newId(),
-          name: request.shopName,
-          forceUnit: request.forceUnit,
-          pressureUnit: request.pressureUnit,
-          lengthUnit: request.lengthUnit,
-          buildPauseDays: 30,
-          walkDownHours: 12,
-          createdAt: now,
-        },
-        { transaction },
-      )
-      await Membership.create({ shopId: shop.id, userId: user.id, role: 'owner', createdAt: now, endedAt: null }, { transaction })
-      await addShippedProtocols({ transaction, now, shopId: shop.id, userId: user.id })
+      await foundShop({ transaction, now }, user.id, request)
       return startSession({ transaction, now }, user, client.userAgent)
     })
   } catch (error) {

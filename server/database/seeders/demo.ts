@@ -1,0 +1,94 @@
+import type { Sequelize } from 'sequelize'
+import type { AppContext } from '../../context'
+import { inRetriedTransaction } from '../../ledger/retry'
+import { loadSealKey } from '../../ledger/seal-keys'
+import { Shop } from '../../models'
+import { hashPassword } from '../../services/passwords'
+import { daysBefore, type Desk } from './desk'
+import { enterCalibrations, enterInstruments, shortenHolds, writeProtocols } from './demo-instruments'
+import { DEMO_PASSWORD, foundDemoShops, standingSignIns, type DemoSignIn } from './demo-people'
+import {
+  buildMule,
+  buildSecondShopsPress,
+  registerBadger,
+  registerFerry,
+  registerHeron,
+  registerLongMeg,
+  registerOx,
+  registerWren,
+} from './demo-presses'
+import { testBadgerFirst, testBadgerNow, testFerry, testHeron, testLongMeg, testOx, testWrenAgain, testWrenFirst } from './demo-tests'
+import type { DemoShops } from './demo-people'
+import type { PressBook } from './press-book'
+
+export type { DemoSignIn }
+
+/** The joint that the stopped test pointed to, opened up and found cracked. */
+async function rejectColumnWeld(desk: Desk, { people }: DemoShops, press: PressBook): Promise<void> {
+  const jointId = press.joint('Head arm to column').id
+  const remark = 'Crack of 40 mm at the toe, upper side. To be gouged out and welded again.'
+  const payload = { jointId, method: 'dye penetrant' as const, result: 'rejected' as const, remark, test: null }
+  await press.write({ kind: 'joint-examined', payload }, people.secondLead, daysBefore(desk, 38, '14:20'))
+}
+
+/** The shop's story, the oldest first: what a test freezes is what the registers said on its day. */
+async function tell(desk: Desk, passwordHash: string): Promise<void> {
+  const shops = await foundDemoShops(desk, passwordHash)
+  const instruments = await enterInstruments(desk, shops)
+  await enterCalibrations(desk, shops, instruments, 420, 250)
+  const ferry = await registerFerry(desk, shops)
+  const protocols = await writeProtocols(desk, shops)
+  const registers = { shops, instruments, protocols }
+  await testFerry(desk, registers, ferry)
+  await enterCalibrations(desk, shops, instruments, 250, 180)
+  const badger = await registerBadger(desk, shops)
+  await testBadgerFirst(desk, registers, badger)
+  const wren = await registerWren(desk, shops)
+  const abandoned = await testWrenFirst(desk, registers, wren)
+  const heron = await registerHeron(desk, shops)
+  await testHeron(desk, registers, heron)
+  await rejectColumnWeld(desk, shops, heron)
+  await enterCalibrations(desk, shops, instruments, 180, 0)
+  await shortenHolds(desk, shops, protocols)
+  await testWrenAgain(desk, registers, wren, abandoned.id)
+  await buildMule(desk, shops)
+  const ox = await registerOx(desk, shops)
+  await testOx(desk, registers, ox)
+  await buildSecondShopsPress(desk, shops)
+  const longMeg = await registerLongMeg(desk, shops)
+  await testLongMeg(desk, registers, longMeg)
+  await testBadgerNow(desk, registers, badger)
+}
+
+async function isEmpty(): Promise<boolean> {
+  return (await Shop.findOne({ attributes: ['id'], raw: true })) === null
+}
+
+function load(database: Sequelize, context: AppContext, passwordHash: string): Promise<void> {
+  const sealKey = loadSealKey(context.config)
+  const now = context.now()
+  return inRetriedTransaction(database, (transaction) => tell({ database, transaction, now, sealKey }, passwordHash))
+}
+
+/**
+ * Loads the demo shop when there is no shop yet, whole or not at all, and answers who can sign in to it.
+ * Every entry goes through the writer and every figure comes out of the core; dates count back from now.
+ */
+export async function loadDemoShop(context: AppContext): Promise<DemoSignIn[]> {
+  if (await isEmpty()) await load(context.database, context, await hashPassword(DEMO_PASSWORD, context.config.bcryptCost))
+  return standingSignIns(context)
+}
+
+/** The sign-ins as they are printed, with what to know about them; nothing when there are none. */
+export function signInLines(signIns: readonly DemoSignIn[]): string {
+  const [first] = signIns
+  if (!first) return ''
+  const width = Math.max(...signIns.map(({ email }) => email.length))
+  const lines = signIns.map(({ email, name, role }) => `  ${email.padEnd(width)}  ${name}, ${role}`)
+  return [
+    `Demo shop, invented. Sign in with the password “${first.password}” as`,
+    ...lines,
+    'Whoever reaches the address can do that too: change these passwords before other machines may.',
+    '',
+  ].join('\n')
+}
