@@ -12,6 +12,7 @@ import { peopleRoutes } from './routes/people'
 import { pressReadRoutes } from './routes/presses-read'
 import { proofTestReadRoutes } from './routes/proof-tests-read'
 import { protocolRoutes } from './routes/protocols'
+import { recordRoutes } from './routes/records'
 import { sessionRoutes } from './routes/session'
 import { shopRoutes } from './routes/shops'
 import { todayReadRoutes } from './routes/today-read'
@@ -65,6 +66,7 @@ function api(context: AppContext) {
   router.use(pressReadRoutes(context))
   router.use(proofTestReadRoutes(context))
   router.use(todayReadRoutes(context))
+  router.use(recordRoutes(context))
   router.use(ledgerRoutes(context))
   router.use(unknownEndpoint)
   return router
