@@ -90,13 +90,15 @@ type FilterSelectProps = {
   choices: readonly Choice[]
   /** What it says while it doesn't narrow: "All presses". */
   all: string
+  /** Takes a whole row on the phone. */
+  wide?: boolean
 }
 
 /** One of a list, or all. */
-export function FilterSelect({ label, value, onChange, choices, all }: FilterSelectProps) {
+export function FilterSelect({ label, value, onChange, choices, all, wide }: FilterSelectProps) {
   const id = useId()
   return (
-    <Cell id={id} label={label} active={value !== ''}>
+    <Cell id={id} label={label} active={value !== ''} wide={wide}>
       <select
         id={id}
         value={value}

@@ -66,11 +66,18 @@ export function Section({ title, note, children, className, level = 2 }: Section
   )
 }
 
+type PlateBesidePaperProps = {
+  plate: ReactNode
+  /** On the phone what is written comes before what is drawn. */
+  paperFirst?: boolean
+  children: ReactNode
+}
+
 /** One dye plate beside paper: the drawing at the left from the desktop on, above it on anything narrower. */
-export function PlateBesidePaper({ plate, children }: { plate: ReactNode; children: ReactNode }) {
+export function PlateBesidePaper({ plate, paperFirst = false, children }: PlateBesidePaperProps) {
   return (
     <div className="flex grow flex-col desktop:grid desktop:grid-cols-[minmax(22rem,37.5%)_minmax(0,1fr)]">
-      <div className="ground-dye">{plate}</div>
+      <div className={classNames('ground-dye', paperFirst && 'max-tablet:order-last')}>{plate}</div>
       <div className="min-w-0">{children}</div>
     </div>
   )

@@ -33,6 +33,7 @@ export function Component() {
         search={view.asked.search ?? ''}
         kind={view.asked.kind ?? ''}
         retired={view.asked.retired === 'yes'}
+        sort={view.asked.sort}
         onChange={view.change}
       />
       {list.data === undefined ? (

@@ -51,7 +51,7 @@ export function InstrumentPage({ answer, today, mayWrite, mayCalibrate }: Instru
     </>
   )
   return (
-    <PlateBesidePaper plate={<InstrumentFace details={details} />}>
+    <PlateBesidePaper paperFirst plate={<InstrumentFace details={details} />}>
       <Page title={details.code} note={instrumentWords(details)} actions={actions || undefined}>
         <div className="grid grid-cols-1 gap-8">
           <CalibrationState instrument={instrument} today={today} />

@@ -19,7 +19,7 @@ function Preview({ control }: { control: ProtocolControl }) {
   const typed = useWatch({ control, name: 'content.stages' })
   const stages = typed.flatMap(({ percent, holdSeconds }) => {
     const [at, held] = [typedNumber(percent), typedNumber(holdSeconds)]
-    return at === undefined || at <= 0 || at > 150 ? [] : [{ percent: at, holdSeconds: Math.round(held ?? 0) }]
+    return at === undefined || at <= 0 || at > 150 ? [] : [{ percent: at, holdSeconds: held === undefined ? null : Math.round(held) }]
   })
   return <StageStrip stages={stages} />
 }

@@ -89,8 +89,14 @@ export function ProtocolPage({ answer, asked, mayWrite }: ProtocolPageProps) {
           note="Each with its own datum, climbs and set"
         >
           <RuledList ordered>
-            {content.legs.map((leg) => (
-              <RuledRow key={leg.label} title={leg.label} note={`Ram ${leg.ramPosition}`} aside="bed" asideNote={leg.bed} />
+            {content.legs.map((leg, index) => (
+              <RuledRow
+                key={index}
+                mark={<span className="font-semibold">{index + 1}</span>}
+                title={leg.label}
+                aside={`ram ${leg.ramPosition}`}
+                asideNote={`bed: ${leg.bed}`}
+              />
             ))}
           </RuledList>
         </Section>

@@ -27,9 +27,9 @@ export function stoppingLimits({ limits }: ProtocolContent): ProtocolValue[] {
       both(valueSource('stageLowerPercent', stageLowerPercent), valueSource('stageUpperPercent', stageUpperPercent)),
     ],
     ['Pressure loss in a hold, at most', percent(pressureLossPercent), valueSource('pressureLossPercent', pressureLossPercent)],
-    ['Creep in a hold, at most', `${percent(creepPercent)} of the deflection, or two steps`, valueSource('creepPercent', creepPercent)],
+    ['Creep in a hold, of the deflection', `${percent(creepPercent)} or two steps`, valueSource('creepPercent', creepPercent)],
     ['Softening, at most', percent(softeningPercent), valueSource('softeningPercent', softeningPercent)],
-    ['Permanent set, at most', `${percent(setPercent)} of full deflection, or two steps`, valueSource('setPercent', setPercent)],
+    ['Permanent set, of full deflection', `${percent(setPercent)} or two steps`, valueSource('setPercent', setPercent)],
     ['Permanent set, never more than', mostSet === null ? 'no further limit' : typedWords(mostSet), mostSetSource(mostSet)],
   ]
 }

@@ -1,10 +1,10 @@
 import { secondsWords } from '#shared/proof-test/protocol-words'
-import type { ProtocolContent } from '#shared/proof-test/protocol'
 import { Fit } from '../../../components/fit'
 import { LoadLadder, type LadderStage } from '../../../components/instruments/load-ladder'
 import { usePhone } from '../../../lib/use-media'
 
-type Stages = ProtocolContent['stages']
+/** A hold is null while it is still to be typed. */
+type Stages = readonly { percent: number; holdSeconds: number | null }[]
 
 /** The ladder asks for each percentage once; while one is typed, two may be the same for a moment. */
 function rungsOf(stages: Stages): LadderStage[] {
@@ -12,8 +12,8 @@ function rungsOf(stages: Stages): LadderStage[] {
   const rungs = [...byPercent.values()].map(({ percent, holdSeconds }): LadderStage => ({
     percent,
     label: `${percent} %`,
-    load: 'hold',
-    note: secondsWords(holdSeconds),
+    load: holdSeconds === null ? '' : 'hold',
+    note: holdSeconds === null ? '' : secondsWords(holdSeconds),
     state: 'to-come',
   }))
   return [{ percent: 0, label: '0', load: 'datum', note: '', state: 'datum' }, ...rungs]
@@ -24,9 +24,19 @@ export function StageStrip({ stages }: { stages: Stages }) {
   const phone = usePhone()
   return (
     <div className="ground-dye px-2 py-4 tablet:px-4">
-      <Fit initial={{ width: 760, height: 136 }} className={phone ? 'h-[100px] w-full' : 'h-[136px] w-full'}>
-        {({ width }) => <LoadLadder scale="strip" words={!phone} stages={rungsOf(stages)} levelPercent={null} width={width} />}
+      <Fit initial={{ width: 760, height: 148 }} className={phone ? 'h-[100px] w-full' : 'h-[148px] w-full'}>
+        {({ width }) => (
+          <LoadLadder scale="strip" words={!phone} stages={rungsOf(stages)} levelPercent={null} width={width} height={phone ? 100 : 148} />
+        )}
       </Fit>
+      {phone && (
+        <p aria-hidden="true" className="px-2 text-faint-scribe">
+          held{' '}
+          {rungsOf(stages)
+            .flatMap((rung) => (rung.note === '' ? [] : [rung.note]))
+            .join(', ')}
+        </p>
+      )}
     </div>
   )
 }
