@@ -76,7 +76,7 @@ export async function foundDemoShops(desk: Desk, passwordHash: string): Promise<
 }
 
 /** Those of the demo who can still sign in with the printed password: nothing is said that no longer holds. */
-export async function standingSignIns({ config }: AppContext): Promise<DemoSignIn[]> {
+export async function standingSignIns({ config }: Pick<AppContext, 'config'>): Promise<DemoSignIn[]> {
   const users = await User.findAll({ where: { email: keys.map((key) => PEOPLE[key].email) }, attributes: ['email', 'passwordHash'], raw: true })
   const open = new Map<string, boolean>()
   for (const hash of new Set(users.map((user) => user.passwordHash))) {

@@ -1,4 +1,3 @@
-import type { Sequelize } from 'sequelize'
 import type { AppContext } from '../../context'
 import { inRetriedTransaction } from '../../ledger/retry'
 import { loadSealKey } from '../../ledger/seal-keys'
@@ -6,7 +5,7 @@ import { Shop } from '../../models'
 import { hashPassword } from '../../services/passwords'
 import { daysBefore, type Desk } from './desk'
 import { enterCalibrations, enterInstruments, shortenHolds, writeProtocols } from './demo-instruments'
-import { DEMO_PASSWORD, foundDemoShops, standingSignIns, type DemoSignIn } from './demo-people'
+import { DEMO_PASSWORD, foundDemoShops, standingSignIns, type DemoShops, type DemoSignIn } from './demo-people'
 import {
   buildMule,
   buildSecondShopsPress,
@@ -18,10 +17,10 @@ import {
   registerWren,
 } from './demo-presses'
 import { testBadgerFirst, testBadgerNow, testFerry, testHeron, testLongMeg, testOx, testWrenAgain, testWrenFirst } from './demo-tests'
-import type { DemoShops } from './demo-people'
 import type { PressBook } from './press-book'
 
 export type { DemoSignIn }
+export type DemoContext = Pick<AppContext, 'config' | 'database' | 'now'>
 
 /** The joint that the stopped test pointed to, opened up and found cracked. */
 async function rejectColumnWeld(desk: Desk, { people }: DemoShops, press: PressBook): Promise<void> {
@@ -64,18 +63,18 @@ async function isEmpty(): Promise<boolean> {
   return (await Shop.findOne({ attributes: ['id'], raw: true })) === null
 }
 
-function load(database: Sequelize, context: AppContext, passwordHash: string): Promise<void> {
-  const sealKey = loadSealKey(context.config)
-  const now = context.now()
-  return inRetriedTransaction(database, (transaction) => tell({ database, transaction, now, sealKey }, passwordHash))
+function load({ config, database, now }: DemoContext, passwordHash: string): Promise<void> {
+  const sealKey = loadSealKey(config)
+  const loadedAt = now()
+  return inRetriedTransaction(database, (transaction) => tell({ database, transaction, now: loadedAt, sealKey }, passwordHash))
 }
 
 /**
  * Loads the demo shop when there is no shop yet, whole or not at all, and answers who can sign in to it.
  * Every entry goes through the writer and every figure comes out of the core; dates count back from now.
  */
-export async function loadDemoShop(context: AppContext): Promise<DemoSignIn[]> {
-  if (await isEmpty()) await load(context.database, context, await hashPassword(DEMO_PASSWORD, context.config.bcryptCost))
+export async function loadDemoShop(context: DemoContext): Promise<DemoSignIn[]> {
+  if (await isEmpty()) await load(context, await hashPassword(DEMO_PASSWORD, context.config.bcryptCost))
   return standingSignIns(context)
 }
 
