@@ -5,7 +5,7 @@ import { PROOF_TEST_ACTS, type ProofTestDraft } from '#shared/proof-test/entries
 import { evaluateTest } from '#shared/proof-test/evaluate'
 import { instrumentOf, leadInstrument } from '#shared/proof-test/force'
 import type { ProofTestState } from '#shared/proof-test/state'
-import { appendConsequence } from './append-press'
+import { appendConsequence } from './press'
 import type { Writing } from './write'
 
 /** The day so many months later; the last of a shorter month, never the first of the next. */

@@ -95,7 +95,9 @@ async function read<Row>(
   const descending = sort.descending !== backwards
   const conditions: Condition[] = [{ sql: 'shop_id = ?', values: [shopId] }, ...(query.conditions ?? [])]
   if (cursor !== undefined) conditions.push(beyond(sort.column, cursor, descending))
-  const selected = Object.entries({ ...query.columns, id: 'id', sortValue: sort.column }).map(([name, column]) => `${column} AS \`${name}\``)
+  const selected = Object.entries({ ...query.columns, id: 'id', sortValue: sort.column }).map(
+    ([name, column]) => `${column} AS \`${name}\``,
+  )
   const direction = descending ? 'DESC' : 'ASC'
   const rows = await database.query<Row & { sortValue: SortValue; id: string }>(
     `SELECT ${selected.join(', ')} FROM ${model.tableName}

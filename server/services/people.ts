@@ -81,7 +81,11 @@ export async function changePerson({ transaction, actor, now }: Work, userId: st
     transaction,
     lock: transaction.LOCK.UPDATE,
   })
-  const membership = await Membership.findOne({ where: { shopId: actor.shopId, userId, endedAt: null }, transaction, lock: transaction.LOCK.UPDATE })
+  const membership = await Membership.findOne({
+    where: { shopId: actor.shopId, userId, endedAt: null },
+    transaction,
+    lock: transaction.LOCK.UPDATE,
+  })
   if (membership === null) throw notFound('This person')
   const remainsOwner = change.ended !== true && change.role === 'owner'
   if (!remainsOwner && owners.length === 1 && owners[0]?.userId === userId) {

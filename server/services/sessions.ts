@@ -112,7 +112,12 @@ export async function endSession(context: AppContext, sessionId: string): Promis
 }
 
 /** The other sessions end: whoever knew the old password is out. */
-export async function changePassword(context: AppContext, signedIn: SignedIn, request: ChangePasswordRequest, address: string): Promise<void> {
+export async function changePassword(
+  context: AppContext,
+  signedIn: SignedIn,
+  request: ChangePasswordRequest,
+  address: string,
+): Promise<void> {
   if (!(await verifyPassword(context, signedIn.userId, request.currentPassword, address))) {
     throw invalid({ currentPassword: 'This is not your present password.' })
   }

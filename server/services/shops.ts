@@ -15,7 +15,11 @@ import type { Client, SignedIn } from './sessions'
 const addressTaken = 'This e-mail address has an account already. Enter its password to open another shop with it.'
 
 /** Whoever has an account opens a further shop with the same password, and keeps the name. */
-async function ownerFor(context: AppContext, request: OpenShopRequest, client: Client): Promise<{ existing: User } | { passwordHash: string }> {
+async function ownerFor(
+  context: AppContext,
+  request: OpenShopRequest,
+  client: Client,
+): Promise<{ existing: User } | { passwordHash: string }> {
   const known = await User.findOne({ where: { email: request.email }, attributes: ['id'], raw: true })
   if (known === null) return { passwordHash: await hashPassword(request.password, context.config.bcryptCost) }
   const existing = await checkPassword(context, { email: request.email, password: request.password, address: client.address })

@@ -118,7 +118,8 @@ function foldShut(work: Work, presses: readonly PressRecord[]): Promise<Map<stri
   return foldEach(work, shut, pressState)
 }
 
-const since = (state: PressState): string | null => (state.clearance.is === 'withdrawn' ? state.clearance.at : (state.history.at(-1)?.at ?? null))
+const since = (state: PressState): string | null =>
+  state.clearance.is === 'withdrawn' ? state.clearance.at : (state.history.at(-1)?.at ?? null)
 
 function pressNeeds(presses: readonly PressToday[], states: ReadonlyMap<string, PressState>, day: string): Need[] {
   return presses.flatMap(({ press, why, test }): Need[] => {
@@ -186,7 +187,10 @@ export async function readToday(work: Work, asked: string | undefined): Promise<
   const day = asked ?? now.toISOString().slice(0, 10)
   const records: PressRecord[] = await Press.findAll({
     where: { shopId: actor.shopId },
-    order: [['name', 'ASC'], ['id', 'ASC']],
+    order: [
+      ['name', 'ASC'],
+      ['id', 'ASC'],
+    ],
     limit: MOST_PRESSES,
     raw: true,
     transaction,
@@ -205,7 +209,10 @@ export async function readToday(work: Work, asked: string | undefined): Promise<
     }
   })
   const leads = can(actor, 'proof-test:open', { shopId: actor.shopId })
-  const needs = [...testNeeds(tests, actor.userId), ...(leads ? [...pressNeeds(presses, states, day), ...instrumentNeeds(instruments, day)] : [])]
+  const needs = [
+    ...testNeeds(tests, actor.userId),
+    ...(leads ? [...pressNeeds(presses, states, day), ...instrumentNeeds(instruments, day)] : []),
+  ]
   needs.sort((a, b) => order[a.kind] - order[b.kind] || dateOf(a).localeCompare(dateOf(b)))
   return { day, underWay: await testsUnderWay(work, tests, records), needs, presses, due: dueDates(records, instruments, day) }
 }

@@ -4,27 +4,12 @@ import { PRESS_ACTS, PRESS_CONSEQUENCES, PRESS_VERSION, type PressDraft } from '
 import type { PressState } from '#shared/press/state'
 import { findingsOf } from '#shared/ledger/rules'
 import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
-import type { Action } from '#shared/policy'
 import { v7 as newId } from 'uuid'
-import type { Work } from '../context'
-import { conflict, forbidden, notFound } from '../problem'
-import { authorize } from '../services/membership'
+import { conflict, notFound } from '../problem'
 import { pressState, rememberFold } from './folds'
 import { projectPress } from './projections'
 import { lockHead, type LedgerHead } from './read'
 import { alreadyWritten, writeEntry, type Writing } from './write'
-
-const ACTIONS: Record<string, Action> = {
-  registered: 'press:register',
-  described: 'press:describe',
-  'joint-added': 'press:describe',
-  'joint-described': 'press:describe',
-  'joint-retired': 'press:describe',
-  'joint-worked': 'press:record',
-  'joint-examined': 'press:record',
-  changed: 'press:change-report',
-  withdrawn: 'press:withdraw',
-}
 
 async function keep(
   writing: Writing,
@@ -40,35 +25,33 @@ async function keep(
   return entry
 }
 
-/** Appends one entry that a person made to a press's ledger, in the transaction given. */
-export async function appendPress(writing: Writing, work: Work, draft: EntryDraft): Promise<LedgerEntry> {
-  const head = await lockHead(writing.database, writing.transaction, draft.ledgerId)
-  if (!head || head.subject !== 'press' || head.shopId !== work.actor.shopId) throw notFound('This press')
-  const action = ACTIONS[draft.kind]
-  if (!action) throw conflict('not-by-hand', 'This follows from a proof test and is not entered by hand.', ['P10'])
-  authorize(work.actor, action, { shopId: head.shopId })
-  if (draft.authorId !== work.actor.userId) throw forbidden()
+/** A press's ledger, locked, with its state: where every append begins. */
+export interface LockedPress {
+  head: LedgerHead
+  state: PressState
+}
+
+export async function lockPress(writing: Writing, pressId: string): Promise<LockedPress | null> {
+  const head = await lockHead(writing.database, writing.transaction, pressId)
+  if (!head || head.subject !== 'press') return null
+  return { head, state: await pressState(writing.database, writing.transaction, head) }
+}
+
+/**
+ * Appends one entry that a person made to a press that is locked. An act that the rules don't allow is
+ * refused; a fact lands, marked with the rules it goes against.
+ */
+export async function appendToPress(writing: Writing, { head, state }: LockedPress, draft: EntryDraft): Promise<LedgerEntry> {
   const known = await alreadyWritten(writing, draft)
   if (known) return known
-  const state = await pressState(writing.database, writing.transaction, head)
-  const findings = findingsOf(
-    decidePress(state, { kind: draft.kind, payload: draft.payload, overrides: draft.overrides, at: draft.observedAt }),
-  )
-  const first = findings[0]
-  if (first && (PRESS_ACTS.has(draft.kind) || PRESS_CONSEQUENCES.has(draft.kind) || !state.description)) {
-    throw conflict(
-      'refused',
-      first.says,
-      findings.map((finding) => finding.rule),
-    )
+  const { kind, payload, overrides, observedAt } = draft
+  const findings = findingsOf(decidePress(state, { kind, payload, overrides, at: observedAt }))
+  const rules = findings.map((finding) => finding.rule)
+  const [first] = findings
+  if (first && (PRESS_ACTS.has(kind) || PRESS_CONSEQUENCES.has(kind) || !state.description)) {
+    throw conflict(first.severity === 'reason' ? 'needs-reason' : 'refused', first.says, rules)
   }
-  return keep(
-    writing,
-    head,
-    state,
-    draft,
-    findings.map((finding) => finding.rule),
-  )
+  return keep(writing, head, state, draft, rules)
 }
 
 /**
@@ -76,9 +59,9 @@ export async function appendPress(writing: Writing, work: Work, draft: EntryDraf
  * test's ledger is locked before the press's, always in that order.
  */
 export async function appendConsequence(writing: Writing, pressId: string, cause: EntryDraft, consequence: PressDraft): Promise<void> {
-  const head = await lockHead(writing.database, writing.transaction, pressId)
-  if (!head || head.subject !== 'press') throw notFound('This press')
-  const state = await pressState(writing.database, writing.transaction, head)
+  const locked = await lockPress(writing, pressId)
+  if (!locked) throw notFound('This press')
+  const { head, state } = locked
   const payload: Record<string, unknown> = consequence.payload
   const decision = decidePress(state, { kind: consequence.kind, payload, overrides: [], at: cause.observedAt, consequence: true })
   const findings = findingsOf(decision)

@@ -8,13 +8,13 @@ import { forceUnitSchema, lengthUnitSchema, pressureUnitSchema } from '#shared/u
 import type { Work } from '../context'
 import { Membership, ProofTest, Shop, User } from '../models'
 import { conflict, invalid, notFound } from '../problem'
-import { authorize } from '../services/membership'
-import { instrumentsForTest } from '../services/instruments'
-import { protocolForTest } from '../services/protocols'
-import { appendToTest, lockTest } from './append-proof-test'
-import { pressState } from './folds'
-import { lockHead } from './read'
-import { createLedger, type Writing } from './write'
+import { authorize } from './membership'
+import { instrumentsForTest } from './instruments'
+import { protocolForTest } from './protocols'
+import { appendToTest, lockTest } from './test-entries'
+import { pressState } from '../ledger/folds'
+import { lockHead } from '../ledger/read'
+import { createLedger, type Writing } from '../ledger/write'
 
 const DAY = 86_400_000
 
