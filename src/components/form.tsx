@@ -1,4 +1,4 @@
-import { useEffect, useRef, type FormHTMLAttributes, type ReactNode } from 'react'
+import { useEffect, useRef, type FormEvent, type FormHTMLAttributes, type ReactNode } from 'react'
 import { classNames } from '../lib/class-names'
 import { PutRight } from './glyphs'
 
@@ -32,9 +32,26 @@ export function FormError({ message, attempt = 0 }: FormErrorProps) {
   )
 }
 
+type FormProps = Omit<FormHTMLAttributes<HTMLFormElement>, 'onSubmit'> & {
+  /** May answer a promise: until it settles, the form isn't sent again, however fast somebody presses twice. */
+  onSubmit: (event: FormEvent<HTMLFormElement>) => unknown
+}
+
 /** A form with our own messages; the browser's bubbles stay away. */
-export function Form({ className, ...form }: FormHTMLAttributes<HTMLFormElement>) {
-  return <form noValidate className={classNames('grid gap-4', className)} {...form} />
+export function Form({ className, onSubmit, ...form }: FormProps) {
+  const sending = useRef(false)
+  const submit = async (event: FormEvent<HTMLFormElement>) => {
+    // Two presses come before the first one is drawn: only a ref is quick enough.
+    event.preventDefault()
+    if (sending.current) return
+    sending.current = true
+    try {
+      await onSubmit(event)
+    } finally {
+      sending.current = false
+    }
+  }
+  return <form noValidate className={classNames('grid gap-4', className)} onSubmit={(event) => void submit(event)} {...form} />
 }
 
 type FormPartProps = { title: ReactNode; note?: ReactNode; children: ReactNode }

@@ -1,4 +1,4 @@
-import { render, screen, within } from '@testing-library/react'
+import { fireEvent, render, screen, waitFor, within } from '@testing-library/react'
 import userEvent from '@testing-library/user-event'
 import { describe, expect, it, vi } from 'vitest'
 import type { InstrumentDetails } from '#shared/instruments/model'
@@ -144,6 +144,19 @@ describe('the form of an instrument', { timeout: 20_000 }, () => {
     await user.click(screen.getByRole('button', { name: 'Keeping it' }))
     await user.type(box('Code'), '{Enter}')
     expect(send).not.toHaveBeenCalled()
+  })
+
+  it('isn’t sent twice by two presses at once', async () => {
+    let answer = () => undefined as void
+    const { send, user } = show({ send: () => new Promise<void>((resolve) => (answer = resolve)) })
+    await fillGauge(user)
+    await user.selectOptions(screen.getByRole('combobox', { name: 'Class' }), '1')
+    fireEvent.click(enter())
+    fireEvent.click(enter())
+    await waitFor(() => expect(send).toHaveBeenCalled())
+    fireEvent.click(enter())
+    answer()
+    expect(send).toHaveBeenCalledOnce()
   })
 
   it('shows what stands, and doesn’t let a gauge become something else', () => {
