@@ -25,7 +25,10 @@ const signedInScreens: RouteObject[] = [
 ]
 
 /** Screens under load bring their own title block instead of the navigation. */
-const bareScreens: RouteObject[] = []
+const bareScreens: RouteObject[] = [
+  { path: paths.runProofTest.pattern, lazy: () => import('./routes/proof-test-run') },
+  { path: paths.attendProofTest.pattern, lazy: () => import('./routes/proof-test-attend') },
+]
 
 export function createRouter(client: QueryClient) {
   const loader = requireSession(client)

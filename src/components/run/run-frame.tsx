@@ -47,6 +47,8 @@ interface RunFrameProps {
   stopped: { at: string } | null
   onStop: () => void
   connected?: boolean
+  /** On a tablet held upright the picture takes the ladder's place too, and the greater part of the height. */
+  largePicture?: boolean
 }
 
 function Landscape(props: RunFrameProps): ReactElement {
@@ -90,12 +92,18 @@ function Plates({ note, pause }: Pick<RunFrameProps, 'note' | 'pause'>): ReactEl
 function Portrait(props: RunFrameProps): ReactElement {
   return (
     <>
-      <div className="ground-dye grid min-h-0 flex-[1_1_356px] grid-cols-[224px_minmax(0,1fr)]">
-        <Fit className="border-r border-ghost" initial={{ width: 223, height: 380 }}>
-          {(size) => props.ladder(size, 'portrait')}
-        </Fit>
-        <Fit initial={{ width: 595, height: 380 }}>{(size) => props.line(size, 'portrait')}</Fit>
-      </div>
+      {props.largePicture === true ? (
+        <div className="ground-dye min-h-0 flex-[1_0_540px]">
+          <Fit initial={{ width: 820, height: 540 }}>{(size) => props.line(size, 'portrait')}</Fit>
+        </div>
+      ) : (
+        <div className="ground-dye grid min-h-0 flex-[1_1_356px] grid-cols-[224px_minmax(0,1fr)]">
+          <Fit className="border-r border-ghost" initial={{ width: 223, height: 380 }}>
+            {(size) => props.ladder(size, 'portrait')}
+          </Fit>
+          <Fit initial={{ width: 595, height: 380 }}>{(size) => props.line(size, 'portrait')}</Fit>
+        </div>
+      )}
       <main className="ground-steel relative min-h-[140px] shrink-[8] overflow-y-auto">
         {props.over}
         <div className="px-4 pb-4 pt-[3px]">{props.bench}</div>

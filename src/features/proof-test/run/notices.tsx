@@ -1,0 +1,72 @@
+import type { ReactElement, ReactNode } from 'react'
+import { Button, TextLink } from '../../../components/button'
+import { Mark, type MarkName } from '../../../components/marks'
+import { setPercent } from '../../../components/typeset'
+import { clockTime } from '../../../lib/dates'
+import { outbox } from '../../../lib/outbox'
+import { paths } from '../../../paths'
+import type { Run } from '../use-run'
+
+function Notice({ mark, children, aside }: { mark: MarkName; children: ReactNode; aside?: ReactNode }): ReactElement {
+  return (
+    <div role="status" className="flex items-center gap-3 border-b-2 border-ink bg-field px-4 py-2 text-16 text-ink">
+      <Mark name={mark} size={22} />
+      <p className="min-w-0 flex-1">{children}</p>
+      {aside}
+    </div>
+  )
+}
+
+function sendingNotice(run: Run): ReactElement | null {
+  const waiting = run.counts.tablet
+  const kept = waiting === 0 ? 'Nothing is lost: it goes on here.' : `${waiting === 1 ? 'One entry waits' : `${waiting} entries wait`} on this tablet. Nothing is lost: it goes on here.`
+  if (run.connection.signedOut) {
+    return (
+      <Notice mark="not-connected" aside={<TextLink to={paths.signIn.href()} target="_blank">Sign in again</TextLink>}>
+        Your session has ended, so nothing is sent. {kept}
+      </Notice>
+    )
+  }
+  const { sender } = run.box
+  if (sender.is === 'refused') return <Notice mark="wait">The server does not take the entries: {sender.says} It is tried again.</Notice>
+  if (!run.connection.connected) {
+    const heard = run.connection.lastHeard ? ` Last heard ${clockTime(run.connection.lastHeard, { seconds: true })}.` : ''
+    return (
+      <Notice mark="not-connected">
+        Not connected.{heard} {kept}
+      </Notice>
+    )
+  }
+  return null
+}
+
+/** What stands in the way of keeping or sending, and what was refused: over the bench, never over Stop. */
+export function Notices({ run }: { run: Run }): ReactElement {
+  const others = run.box.pending.some((entry) => entry.authorId !== run.me.id)
+  return (
+    <>
+      {run.box.fault && (
+        <div role="alert" className="flex items-center gap-3 bg-stop px-4 py-3 text-18 font-semibold text-on-stop">
+          <Mark name="stop" tone="plate" size={32} />
+          <p>{run.box.fault}</p>
+        </div>
+      )}
+      {sendingNotice(run)}
+      {others && <Notice mark="wait">Entries of another person wait on this tablet. They are sent when that person signs in here.</Notice>}
+      {run.refused.map((finding) => (
+        <Notice key={finding.rule} mark="wait" aside={<Button size="line" onClick={run.leave}>Read</Button>}>
+          {setPercent(finding.says)} Rule {finding.rule}.
+        </Notice>
+      ))}
+      {run.attention.map((refused) => (
+        <Notice
+          key={refused.entry.id}
+          mark="wait"
+          aside={<Button size="line" onClick={() => void outbox.dismiss(refused.entry.ledgerId, refused.entry.id)}>Read</Button>}
+        >
+          The server refused what was entered at {clockTime(refused.entry.observedAt)}: {refused.problem.detail}
+        </Notice>
+      ))}
+    </>
+  )
+}

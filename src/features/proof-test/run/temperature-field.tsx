@@ -1,0 +1,48 @@
+import { useId, type ReactElement } from 'react'
+import { parseDecimal, unitLabel, type LengthUnit, type TypedTemperature } from '#shared/units'
+
+/** A shop that reads inches reads degrees Fahrenheit. */
+export const temperatureUnit = (lengthUnit: LengthUnit): TypedTemperature['unit'] => (lengthUnit === 'in' ? 'F' : 'C')
+
+/** The temperature as typed, or null where the field was left empty or can't be read. */
+export function typedTemperature(text: string, lengthUnit: LengthUnit): TypedTemperature | null {
+  const trimmed = text.trim()
+  return parseDecimal(trimmed, { signed: true }).ok ? { text: trimmed, unit: temperatureUnit(lengthUnit) } : null
+}
+
+interface TemperatureFieldProps {
+  value: string
+  onChange: (text: string) => void
+  lengthUnit: LengthUnit
+}
+
+/** The air's temperature, which may be left out: steel grows by it. */
+export function TemperatureField({ value, onChange, lengthUnit }: TemperatureFieldProps): ReactElement {
+  const id = useId()
+  const parsed = parseDecimal(value, { signed: true })
+  const wrong = value.trim() !== '' && !parsed.ok ? parsed.message : null
+  return (
+    <div className="mt-3">
+      <label htmlFor={id} className="block text-16">
+        <span className="font-medium">Temperature of the air</span>
+        <span className="ml-2 text-graphite">{unitLabel(temperatureUnit(lengthUnit))}, may be left empty</span>
+      </label>
+      <input
+        id={id}
+        type="text"
+        inputMode="decimal"
+        autoComplete="off"
+        value={value}
+        aria-invalid={wrong !== null}
+        aria-describedby={wrong ? `${id}-says` : undefined}
+        onChange={(event) => onChange(event.target.value)}
+        className="mt-1 block h-14 w-28 rounded-field border border-rule bg-field px-[10px] text-26 font-medium text-ink"
+      />
+      {wrong && (
+        <p id={`${id}-says`} className="mt-1 font-medium text-stop-ink">
+          {wrong}
+        </p>
+      )}
+    </div>
+  )
+}

@@ -1,0 +1,23 @@
+import type { Opened } from '#shared/proof-test/entries'
+import type { TitleCell } from '../../../components/run/run-title-block'
+import { clockTime } from '../../../lib/dates'
+import { shortName } from '../names'
+import type { Run } from '../use-run'
+
+/** When the witness last wrote anything: what this tablet can know of who is here. */
+function heardOf(run: Run, opened: Opened): string {
+  const last = run.entries.findLast((entry) => entry.authorId === opened.people.witness.id)
+  return last ? `heard ${clockTime(last.observedAt)}` : 'not heard yet'
+}
+
+export function titleCells(run: Run, opened: Opened): TitleCell[] {
+  const { lead, witness } = opened.people
+  const leg = (run.state.position?.leg ?? 0) + 1
+  return [
+    { value: opened.press.name, note: opened.press.whatFor, strong: true },
+    { value: opened.number },
+    { label: 'Leg', value: `${leg} of ${opened.legs.length}`, from: 'desktop' },
+    { label: 'Lead', value: shortName(lead.name), from: 'tablet' },
+    { label: 'Witness', value: shortName(witness.name), note: heardOf(run, opened), from: 'tablet' },
+  ]
+}
