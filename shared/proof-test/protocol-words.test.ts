@@ -37,7 +37,7 @@ describe('the words for a protocol', () => {
       for (const [key, value] of Object.entries({ ...limits, ...times }) as [keyof typeof times, number][]) {
         expect(valueSource(key, value)).toBe(COMMON_PRACTICE)
       }
-      expect(mostSetSource(mostSet)).toBe(mostSet === null ? 'none set' : 'ASME ASP-2010 3-4.1.1, as described')
+      expect(mostSetSource(mostSet)).toBe(mostSet === null ? 'the percentage alone holds' : 'ASME ASP-2010 3-4.1.1, as described')
       expect(examinationSource(content.examinationMonths)).toMatch(/^29 CFR 1910\.244/)
     }
     expect(valueSource('softeningPercent', 12)).toBe('set by this shop')

@@ -40,7 +40,7 @@ export function valueSource(key: CommonKey, value: number): string {
 
 /** The same for the longest set that is allowed: ASP-2010 as described gives 3.18 mm (an eighth of an inch is 3.175). */
 export function mostSetSource(mostSet: ProtocolContent['limits']['mostSet']): string {
-  if (mostSet === null) return 'none set'
+  if (mostSet === null) return 'the percentage alone holds'
   return Math.abs(toSI(mostSet) - 0.00318) < 1e-9 ? SHOP_PRESS_STANDARD : OWN
 }
 
