@@ -7,11 +7,6 @@ export type ProtocolValue = readonly [name: string, value: string, source: strin
 
 const percent = (value: number) => `${value}\u202f%`
 
-export const REPEAT_WORDS: Record<ProtocolContent['repeatClimb'], string> = {
-  'when the set can be seen': 'when the set is more than can be resolved',
-  always: 'always',
-  never: 'never',
-}
 export const DECISION_WORDS: Record<ProtocolContent['decisionRule'], string> = {
   simple: 'simple acceptance',
   'guard-band': 'a guard band of U',
@@ -30,7 +25,7 @@ export function stoppingLimits({ limits }: ProtocolContent): ProtocolValue[] {
     ['Creep in a hold, of the deflection', `${percent(creepPercent)} or two steps`, valueSource('creepPercent', creepPercent)],
     ['Softening, at most', percent(softeningPercent), valueSource('softeningPercent', softeningPercent)],
     ['Permanent set, of full deflection', `${percent(setPercent)} or two steps`, valueSource('setPercent', setPercent)],
-    ['Permanent set, never more than', mostSet === null ? 'no further limit' : typedWords(mostSet), mostSetSource(mostSet)],
+    ['Permanent set, never more than', mostSet === null ? 'none' : typedWords(mostSet), mostSetSource(mostSet)],
   ]
 }
 
@@ -43,7 +38,7 @@ export function timesAndSteps(content: ProtocolContent): ProtocolValue[] {
     ['Seating load', percent(seatingPercent), valueSource('seatingPercent', seatingPercent)],
     ['Datum watched for drift', secondsWords(datumWatchSeconds), valueSource('datumWatchSeconds', datumWatchSeconds)],
     ['Recovery before the set is read', secondsWords(recoverySeconds), valueSource('recoverySeconds', recoverySeconds)],
-    ['Repeat climb', REPEAT_WORDS[repeatClimb], repeatClimb === 'when the set can be seen' ? COMMON_PRACTICE : 'set by this shop'],
+    ['Repeat climb', repeatClimb, repeatClimb === 'when the set can be seen' ? COMMON_PRACTICE : 'set by this shop'],
     ['Hold of the repeat climb', secondsWords(repeatHoldSeconds), valueSource('repeatHoldSeconds', repeatHoldSeconds)],
   ]
 }
