@@ -2,6 +2,7 @@ import { existsSync, mkdtempSync, readFileSync, rmSync, statSync } from 'node:fs
 import { tmpdir } from 'node:os'
 import path from 'node:path'
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
+import { sessionResponseSchema } from '#shared/api/session'
 import { startServer } from '../support/server-process'
 import type { ServerProcess } from '../support/server-process'
 
@@ -56,6 +57,26 @@ describe('the server with its own database', () => {
     expect(readFileSync(path.join(directory, 'mariadb.log'), 'utf8')).toMatch(/Shutdown complete\s*$/)
     const second = await start()
     expect(await statusOfSession(second, cookie)).toBe(200)
+  })
+
+  it('loads the demo shop once, and prints sign-ins that work', async () => {
+    const first = await start()
+    const password = /password “(.+)”/.exec(first.output())?.[1] ?? ''
+    const email = /\S+@\S+\.example/.exec(first.output())?.[0] ?? ''
+    const signInAt = async (server: ServerProcess) => {
+      const response = await fetch(`${server.address}/api/session`, {
+        method: 'POST',
+        headers: { 'content-type': 'application/json', origin: server.address },
+        body: JSON.stringify({ email, password }),
+      })
+      return sessionResponseSchema.parse(await response.json()).shops.map((shop) => shop.id)
+    }
+    const shops = await signInAt(first)
+    expect(shops.length).toBeGreaterThan(0)
+    await first.end()
+    const second = await start()
+    expect(second.output()).toContain(email)
+    expect(await signInAt(second)).toEqual(shops)
   })
 
   it('starts again without a hand after it was killed, and takes over the database left behind', async () => {
