@@ -1,0 +1,39 @@
+import { recordLine } from '#shared/chart/record-line'
+import { Fit } from '../../../components/fit'
+import { LineChart } from '../../../components/instruments/line-chart'
+import type { MarkName } from '../../../components/marks'
+import type { RecordView } from '../record-view'
+
+const DECISION_MARKS = { 'go-on': 'go-on', wait: 'wait', stop: 'stop' } as const
+
+/** The line of one leg on its dye plate, with what was decided at each stage beside it. */
+export function RecordChart({ record, leg }: { record: RecordView; leg: number }) {
+  const { opened, evaluation } = record
+  const climbs = evaluation.climbs.filter((climb) => climb.leg === leg)
+  const label = opened.legs[leg]?.label ?? ''
+  if (recordLine(opened, climbs, { width: 640, height: 536 }) === null) {
+    return (
+      <div className="ground-dye flex min-h-60 items-center justify-center p-6 text-faint-scribe">
+        <p>{opened.legs.length > 1 ? `${label}: no stage was read.` : 'No stage was read.'}</p>
+      </div>
+    )
+  }
+  const last = opened.protocol.content.stages.at(-1)?.percent
+  const marks = (climbs[0]?.stages ?? []).flatMap(({ percent, attempt }) => {
+    const decision = attempt.decided?.decision
+    if (decision === undefined) return []
+    const mark: MarkName = decision === 'go-on' && percent === last ? 'within' : DECISION_MARKS[decision]
+    return [{ percent, mark }]
+  })
+  return (
+    <figure className="ground-dye print:break-inside-avoid">
+      {opened.legs.length > 1 && <figcaption className="px-6 pt-3 font-medium">{label}</figcaption>}
+      <Fit initial={{ width: 640, height: 536 }} className="h-[440px] w-full tablet:h-[536px]">
+        {(size) => {
+          const spec = recordLine(opened, climbs, size)
+          return spec && <LineChart {...spec} stageMarks={[{ percent: 0, mark: 'datum' }, ...marks]} />
+        }}
+      </Fit>
+    </figure>
+  )
+}

@@ -1,0 +1,102 @@
+import type { ReactNode } from 'react'
+import type { Signature } from '#shared/proof-test/entries'
+import { Mark } from '../../../components/marks'
+import { dateAndTime, shortDate } from '../../../lib/dates'
+import type { RecordView } from '../record-view'
+
+const DAY = 24 * 3600_000
+
+function Block({ title, children }: { title: string; children: ReactNode }) {
+  return (
+    <div className="border-t border-ink px-4 py-3 first:border-t-0 tablet:border-t-0 tablet:border-l tablet:first:border-l-0 desktop:px-6">
+      <p className="text-14">{title}</p>
+      {children}
+    </div>
+  )
+}
+
+interface SignedProps {
+  title: string
+  name: string
+  relation: string
+  signature: Signature | null
+  waiting: string
+  late?: string | null
+}
+
+function Signed({ title, name, relation, signature, waiting, late = null }: SignedProps) {
+  return (
+    <Block title={title}>
+      <p className="text-22 font-semibold">{signature?.printedName ?? name}</p>
+      {relation !== '' && <p className="text-graphite">{relation}</p>}
+      {signature ? (
+        <>
+          <p className="border-b border-hairline pb-1">
+            {dateAndTime(signature.signedAt)}, signed with password
+            {late !== null && <span className="font-medium text-stop-ink">. {late}</span>}
+          </p>
+          <p className="pt-1">{signature.meaning}</p>
+        </>
+      ) : (
+        <p className="flex items-center gap-2 pt-1">
+          <Mark name="to-countersign" size={20} />
+          {waiting}
+        </p>
+      )}
+    </Block>
+  )
+}
+
+/** The first half of a hash, in groups of four, two lines: enough to compare by eye. */
+function hashLines(hash: string): string[] {
+  const groups = hash.slice(0, 32).match(/.{4}/g) ?? []
+  return [groups.slice(0, 4).join(' '), groups.slice(4).join(' ')]
+}
+
+function Seal({ record, today }: { record: RecordView; today: Date }) {
+  const { state, chain, sealed } = record
+  const seal = sealed.at(-1)
+  return (
+    <Block title={seal ? `Seal over ${seal.seq} entries` : `No seal yet; ${state.headSeq} entries`}>
+      <p className="font-mono leading-6">
+        {hashLines(seal?.headHash ?? state.headHash).map((line) => (
+          <span key={line} className="block">
+            {line}
+          </span>
+        ))}
+      </p>
+      <p className="flex items-center gap-2">
+        <Mark name={chain.whole ? 'within' : 'stop'} size={20} />
+        {chain.whole ? `Chain whole, checked ${shortDate(today)}` : `Broken at entry ${chain.brokenAt}`}
+      </p>
+      {seal && (
+        <p className="text-graphite">
+          Sealed {dateAndTime(seal.sealedAt)}, key {seal.kid}
+        </p>
+      )}
+    </Block>
+  )
+}
+
+/** Who signed, as what, when and with which meaning; and the seal over it. */
+export function SignatureBlocks({ record, today }: { record: RecordView; today: Date }) {
+  const { opened, state } = record
+  const { lead, witness } = opened.people
+  const { signed, countersigned } = state
+  const behind = signed && countersigned ? Date.parse(countersigned.signedAt) - Date.parse(signed.signedAt) : 0
+  const notYet = state.conclusion === null ? 'Not concluded yet' : 'Not signed yet'
+  return (
+    <section aria-label="Signatures" className="grid border-t-2 border-ink tablet:grid-cols-3 print:break-inside-avoid">
+      <Signed title="Lead, who ran the test" name={lead.name} relation="" signature={signed} waiting={notYet} />
+      <Signed
+        title="Witness, who was there"
+        name={witness.name}
+        relation={witness.relation}
+        signature={countersigned}
+        waiting={signed ? 'Not countersigned yet' : notYet}
+        late={behind > DAY ? `${Math.round(behind / 3600_000)} hours after the lead` : null}
+      />
+      <Seal record={record} today={today} />
+    </section>
+  )
+}

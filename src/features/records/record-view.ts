@@ -1,0 +1,86 @@
+import type { EntriesResponse } from '#shared/api/ledger'
+import { checkChain, entryText, type ChainCheck } from '#shared/ledger/chain'
+import { foldProofTest } from '#shared/proof-test/apply'
+import type { Opened, Reading } from '#shared/proof-test/entries'
+import { evaluateTest, type TestEvaluation } from '#shared/proof-test/evaluate'
+import { frozenDifferences, standingOf, type FrozenDifference, type RecordStanding } from '#shared/proof-test/record'
+import type { Correction, ProofTestState, Row } from '#shared/proof-test/state'
+import type { MarkName } from '../../components/marks'
+
+/** A record as the page shows it: everything follows from the ledger. */
+export interface RecordView {
+  id: string
+  state: ProofTestState
+  opened: Opened
+  evaluation: TestEvaluation
+  standing: RecordStanding
+  chain: ChainCheck
+  sealed: EntriesResponse['sealed']
+  differences: FrozenDifference[]
+  nameOf: (personId: string) => string
+}
+
+/** Folds and checks a ledger as the server answered it. Throws when it doesn't begin with an opening. */
+export function readRecord(answer: EntriesResponse): RecordView {
+  const state = foldProofTest(answer.ledgerId, answer.entries)
+  const { opened } = state
+  if (opened === null) throw new Error('This ledger has no opened test.')
+  const stored = answer.entries.map(({ hash, seq, receivedAt, irregular, prevHash, ...draft }) => ({
+    seq,
+    hash,
+    canonical: entryText(draft, { seq, receivedAt, irregular, prevHash }),
+  }))
+  const named: Record<string, string> = { ...answer.people }
+  for (const person of Object.values(opened.people)) if (person.id !== null) named[person.id] ??= person.name
+  return {
+    id: answer.ledgerId,
+    state,
+    opened,
+    evaluation: evaluateTest(state),
+    standing: standingOf(state),
+    chain: checkChain(stored),
+    sealed: answer.sealed,
+    differences: frozenDifferences(answer.ledgerId, answer.entries),
+    nameOf: (personId) => named[personId] ?? 'somebody unknown here',
+  }
+}
+
+/** "a", "b" … "z", "aa": how corrections are told apart on the sheet. */
+export function correctionLetter(index: number): string {
+  const rest = Math.floor(index / 26)
+  return (rest > 0 ? correctionLetter(rest - 1) : '') + String.fromCharCode(97 + (index % 26))
+}
+
+export interface ShownReading {
+  text: string
+  /** What was typed before, oldest first, with the letter of the correction that replaced it. */
+  struck: { text: string; letter: string }[]
+}
+
+/** A reading of a row as it counts, and what was struck through on the way to it. */
+export function shownReading(row: Row, sourceId: string, corrections: readonly Correction[]): ShownReading | null {
+  const counts: Reading | undefined = row.readings.find((reading) => reading.sourceId === sourceId)
+  if (!counts) return null
+  const struck = corrections.flatMap((correction, index) =>
+    correction.correctsEntryId === row.entryId && correction.sourceId === sourceId
+      ? [{ text: correction.from.text, letter: correctionLetter(index) }]
+      : [],
+  )
+  return { text: counts.text, struck }
+}
+
+const STANDING_MARKS: Record<RecordStanding, MarkName> = {
+  'not opened': 'to-come',
+  'under way': 'under-way',
+  stopped: 'stop',
+  'to sign': 'to-countersign',
+  'to countersign': 'to-countersign',
+  accepted: 'within',
+  rejected: 'stop',
+  abandoned: 'abandoned',
+}
+
+/** The shape beside a record's headline. */
+export function standingMark(standing: RecordStanding): MarkName {
+  return STANDING_MARKS[standing]
+}
