@@ -19,7 +19,16 @@ function columnsFor(today: string): Column<PressRow>[] {
       className: 'whitespace-nowrap',
       cell: (row) => <TextLink to={paths.press.href(row.id)}>{row.name}</TextLink>,
     },
-    { id: 'what', header: 'What it is', cell: (row) => [row.whatFor, frameWords[row.kind]].filter(Boolean).join(', ') },
+    {
+      id: 'what',
+      header: 'What it is',
+      cell: (row) => (
+        <>
+          {row.whatFor !== '' && `${row.whatFor}, `}
+          <span className="whitespace-nowrap">{frameWords[row.kind]}</span>
+        </>
+      ),
+    },
     {
       id: 'use',
       header: 'May it be used',

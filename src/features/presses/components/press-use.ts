@@ -12,6 +12,9 @@ const reasons: Record<Extract<RowAnswer, { answer: 'do not use' }>['why'], strin
   withdrawn: 'withdrawn',
 }
 
+/** "11.7 short tons" on one line. */
+const unbroken = (text: string): string => text.replaceAll(' ', '\u00a0')
+
 export interface PressUse {
   mark: MarkName
   use: string
@@ -25,7 +28,7 @@ export function pressUse(row: PressRow, today: string): PressUse {
     case 'cleared':
       return {
         mark: 'within',
-        use: row.clearedTo ? `Cleared up to ${typedWords(row.clearedTo)}` : 'Cleared',
+        use: row.clearedTo ? `Cleared up to ${unbroken(typedWords(row.clearedTo))}` : 'Cleared',
         note: row.clearedUntil ? `until ${shortDate(row.clearedUntil)}` : '',
       }
     case 'under test':

@@ -49,7 +49,7 @@ export function FrameStep({ form, number, onKind }: FrameStepProps) {
       <ControlledQuantity
         control={control}
         name="description.dimensions.opening"
-        label={cFrame ? 'Opening, ram face to bed' : 'Width, upright centre to centre'}
+        label={cFrame ? 'Opening, ram face to bed' : 'Between upright centres'}
         optional
         units={LENGTH_UNITS}
       />

@@ -14,7 +14,7 @@ function LoadPathLine({ draft }: { draft: PressFormDraft }) {
       <span className="mt-0.5">
         <Mark name={path.closed ? 'within' : 'undecided'} tone="dye" size={20} />
       </span>
-      <span>{path.closed ? 'The load path closes: from the ram round the frame to the bed.' : path.gap}</span>
+      <span>{path.closed ? 'Entered without a gap: from the ram round the frame to the bed.' : path.gap}</span>
     </p>
   )
 }

@@ -9,11 +9,12 @@ import type { PressForm } from './use-press-form'
 
 /** The parts that the force passes through, from the ram round to the bed. */
 export function MembersStep({ form, number }: { form: PressForm; number: number }) {
-  const { control, register, formState, getValues } = form
+  const { control, register, formState } = form
   const members = useFieldArray({ control, name: 'description.members', keyName: 'key' })
   const kind = useWatch({ control, name: 'description.kind' })
   const errors = formState.errors.description?.members
-  const holds = (id: string) => getValues('joints').filter((joint) => joint.between.includes(id)).length
+  const joints = useWatch({ control, name: 'joints' })
+  const holds = (id: string) => joints.filter((joint) => joint.between.includes(id)).length
   return (
     <FormStep
       number={number}
@@ -37,14 +38,15 @@ export function MembersStep({ form, number }: { form: PressForm; number: number 
                 {...register(`description.members.${index}.name`)}
               />
               <SelectField label="Kind" choices={memberChoices} {...register(`description.members.${index}.kind`)} />
-              <Button
-                aria-label={`Take out ${field.name}`}
-                onClick={() => members.remove(index)}
-                disabled={holds(field.id) > 0}
-                note={holds(field.id) > 0 ? 'its joints first' : undefined}
-              >
-                Take out
-              </Button>
+              {holds(field.id) > 0 ? (
+                <p className="flex min-h-14 w-28 items-center text-graphite max-tablet:min-h-6 desktop:min-h-12">
+                  {holds(field.id) === 1 ? 'in one joint' : `in ${holds(field.id)} joints`}
+                </p>
+              ) : (
+                <Button aria-label={`Take out ${field.name}`} className="tablet:w-28" onClick={() => members.remove(index)}>
+                  Take out
+                </Button>
+              )}
             </li>
           ))}
         </ul>

@@ -1,3 +1,4 @@
+import { v7 as newId } from 'uuid'
 import { Button } from '../../../../components/button'
 import { Form, FormActions, FormError } from '../../../../components/form'
 import { FormSteps } from '../../../../components/form-steps'
@@ -7,7 +8,7 @@ import { ProblemError } from '../../../../lib/problem'
 import { useProblemFields } from '../../../../lib/use-problem-fields'
 import { useTitle } from '../../../../lib/use-title'
 import { useRegisterPress } from '../../api/register-press'
-import type { FormUnits } from './draft'
+import { newPress, type FormUnits } from './draft'
 import { FrameStep } from './frame-step'
 import { JointsStep } from './joints-step'
 import { LivePlate } from './live-plate'
@@ -15,25 +16,19 @@ import { MembersStep } from './members-step'
 import { RamsStep } from './rams-step'
 import { RatedLoadStep } from './rated-load-step'
 import { TrainStep } from './train-step'
+import { sayHowMany } from './say-how-many'
 import { usePressForm } from './use-press-form'
-
-/** How many fields need another look, however deep they lie. */
-function countMessages(errors: unknown): number {
-  if (typeof errors !== 'object' || errors === null) return 0
-  if ('message' in errors && typeof errors.message === 'string') return 1
-  return Object.entries(errors).reduce((sum, [name, value]) => (name === 'ref' ? sum : sum + countMessages(value)), 0)
-}
 
 type NewPressFormProps = { shopId: string; units: FormUnits; onEntered: (pressId: string) => void }
 
 /** A press, entered whole: frame, rams, train, rated load, members and joints. */
 export function NewPressForm({ shopId, units, onEntered }: NewPressFormProps) {
   useTitle('Enter a press')
-  const { form, restored, finish, beginAnew, chooseKind } = usePressForm(shopId, units)
+  const { form, restored, finish, beginAnew, chooseKind } = usePressForm(`press.${shopId}`, () => newPress(newId, units))
   const register = useRegisterPress(shopId)
   const showProblem = useProblemFields(form)
   const { errors, submitCount } = form.formState
-  const wrong = submitCount > 0 ? countMessages(errors) : 0
+  const wrong = submitCount > 0 ? sayHowMany(errors) : null
   const submit = form.handleSubmit((payload) => {
     const pressId = form.getValues('pressId')
     register.mutate(
@@ -76,10 +71,8 @@ export function NewPressForm({ shopId, units, onEntered }: NewPressFormProps) {
             <Button type="submit" kind="next" busy={register.isPending && 'Entering it'}>
               Enter this press
             </Button>
-            <p role="status" className={wrong > 0 ? 'font-medium text-stop-ink' : 'text-graphite'}>
-              {wrong > 0
-                ? `${wrong === 1 ? 'One field needs' : `${wrong} fields need`} another look. Nothing you typed is lost.`
-                : 'What you type is kept on this device until it is entered.'}
+            <p role="status" className={wrong ? 'font-medium text-stop-ink' : 'text-graphite'}>
+              {wrong ?? 'What you type is kept on this device until it is entered.'}
             </p>
           </FormActions>
         </Form>

@@ -4,19 +4,18 @@ import { v7 as newId } from 'uuid'
 import type { FrameKind } from '#shared/press/model'
 import { dropDraft, keepDraft, readDraft } from '../../../../lib/drafts'
 import { draftResolver } from '../../../../lib/draft-resolver'
-import { isProposal, newPress, pressFormSchema, proposal, toPayload, type FormUnits, type PressFormDraft } from './draft'
+import { isProposal, pressFormSchema, proposal, toPayload, type PressFormDraft } from './draft'
 
 /** Goes up when the form's fields change, so that an older draft isn't poured into it. */
 const VERSION = 1
 const PAUSE = 300
 
-/** The press form: its draft outlives a reload, and its ids are made once. */
-export function usePressForm(shopId: string, units: FormUnits) {
-  const name = `press.${shopId}`
+/** A form over a whole press: its draft outlives a reload under `name`, and its ids are made once. */
+export function usePressForm(name: string, initial: () => PressFormDraft) {
   const [kept] = useState(() => readDraft<PressFormDraft>(name, VERSION))
   const form = useForm({
     resolver: draftResolver(pressFormSchema, toPayload),
-    defaultValues: kept ?? newPress(newId, units),
+    defaultValues: kept ?? initial(),
   })
   const { subscribe, getValues, setValue, reset } = form
 
@@ -53,7 +52,7 @@ export function usePressForm(shopId: string, units: FormUnits) {
     finish,
     beginAnew() {
       dropDraft(name)
-      reset(newPress(newId, units))
+      reset(initial())
     },
     /** Another kind of frame proposes its own members and joints, unless somebody has changed the list already. */
     chooseKind(before: FrameKind | '', kind: FrameKind): boolean {

@@ -1,0 +1,114 @@
+import type { ReactNode } from 'react'
+import type { Clearance } from '#shared/press/entries'
+import type { MayItBeUsed } from '#shared/press/state'
+import { typedWords } from '#shared/instruments/words'
+import { formatForce, groupDigits, unitLabel, type TypedForce } from '#shared/units'
+import { Mark } from '../../../../components/marks'
+import { longDate } from '../../../../lib/dates'
+
+const loads = (count: number): string => (count === 1 ? 'one static load' : `${count} static loads`)
+const list = (words: readonly string[]): string => words.join(', ')
+
+function Aside({ children }: { children: ReactNode }) {
+  return <div className="border-rule max-tablet:border-t max-tablet:pt-3 tablet:border-l tablet:pl-5">{children}</div>
+}
+
+function ClearedTo({ clearance, rated }: { clearance: Clearance; rated: TypedForce | undefined }) {
+  const { load } = clearance
+  return (
+    <>
+      <div className="grid gap-x-8 gap-y-4 tablet:grid-cols-[minmax(0,1fr)_19rem]">
+        <div className="flex items-center gap-5">
+          <Mark name="within" size={70} className="shrink-0 max-tablet:size-14" />
+          <p>
+            <span className="block text-26 font-semibold">Cleared up to</span>
+            <span className="flex items-center gap-x-4">
+              <span className="text-76 font-semibold tracking-tight tablet:text-104">{groupDigits(load.text)}</span>{' '}
+              <span className="w-min text-26/[30px] font-semibold tablet:text-34/[37px]">{unitLabel(load.unit, { plural: true })}</span>
+            </span>
+          </p>
+        </div>
+        <Aside>
+          <p>
+            <strong className="font-semibold">{formatForce(clearance.loadNewton, 'kN')}</strong>
+            {rated && `, rated ${typedWords(rated)}`}
+          </p>
+          {clearance.gaugePressure && (
+            <p className="font-semibold">
+              Gauge {clearance.gaugeCode} not past {typedWords(clearance.gaugePressure)}
+            </p>
+          )}
+          <p>
+            Bed hole {list(clearance.bedHoles)}, ram {list(clearance.ramPositions)}
+          </p>
+          <p className="text-graphite">No other bed hole was tested.</p>
+          <p className="text-22 font-semibold">Until {longDate(clearance.until)}</p>
+        </Aside>
+      </div>
+      <p className="mt-3">
+        Cleared by {clearance.clearedBy} on {longDate(clearance.clearedOn)} after {loads(clearance.staticLoads)}.
+        {clearance.notMeasured.length > 0 && <span className="text-graphite"> Not measured: {list(clearance.notMeasured)}.</span>}
+      </p>
+    </>
+  )
+}
+
+function NotToBeUsed({ title, why, missing }: { title: string; why: string; missing: readonly string[] }) {
+  return (
+    <div className="flex items-start gap-5">
+      <Mark name={title === 'Under test' ? 'under-way' : 'stop'} size={70} className="mt-1 shrink-0 max-tablet:size-14" />
+      <div className="min-w-0">
+        <p className="text-46 font-semibold tablet:text-54">{title}</p>
+        <p className="text-20 font-semibold">{why}</p>
+        {missing.length > 0 && (
+          <>
+            <p className="mt-3 font-semibold">What is missing</p>
+            <Dashes sentences={missing} />
+          </>
+        )}
+      </div>
+    </div>
+  )
+}
+
+/** Sentences one under the other, each after a dash. */
+export function Dashes({ sentences }: { sentences: readonly string[] }) {
+  return (
+    <ul>
+      {sentences.map((sentence) => (
+        <li key={sentence} className="relative pl-[18px] before:absolute before:top-[11px] before:left-0 before:h-0.5 before:w-2.5 before:bg-ink">
+          {sentence}
+        </li>
+      ))}
+    </ul>
+  )
+}
+
+/** May it be used: the load with its unit, or what stands against it. Never a bare yes. */
+export function Answer({ answer, rated }: { answer: MayItBeUsed; rated: TypedForce | undefined }) {
+  switch (answer.answer) {
+    case 'cleared':
+      return <ClearedTo clearance={answer.clearance} rated={rated} />
+    case 'under test':
+      return <NotToBeUsed title="Under test" why={answer.why} missing={['Nobody uses it before the test is concluded and countersigned.']} />
+    case 'do not use':
+      return <NotToBeUsed title="Do not use" why={answer.why} missing={answer.missing} />
+  }
+}
+
+/** What ends a clearance the moment it happens. */
+export function EndsAtOnce({ load, buildPauseDays }: { load: TypedForce; buildPauseDays: number }) {
+  return (
+    <>
+      <p className="font-semibold">It ends at once if</p>
+      <Dashes
+        sentences={[
+          'a weld, pin or member is changed or repaired',
+          `it is loaded past ${typedWords(load)}, or knocked`,
+          'a joint cracks, moves or leaks',
+          `it stands unused for ${buildPauseDays} days`,
+        ]}
+      />
+    </>
+  )
+}

@@ -1,0 +1,64 @@
+import type { ReactNode } from 'react'
+import type { PressJoint } from '#shared/press/state'
+import { jointState } from '../../../../components/instruments/drawn-press'
+import { JointBalloon } from '../../../../components/marks'
+import { classNames } from '../../../../lib/class-names'
+import { shortDate } from '../../../../lib/dates'
+
+/** What was last found out about a joint, in a few words. */
+function found(joint: PressJoint): string {
+  const { examination, makeUp, fellBackBecause } = joint
+  if (examination?.result === 'rejected') return `rejected, ${examination.method}`
+  if (makeUp !== 'finished') return makeUp
+  if (examination) return examination.method
+  return fellBackBecause === null ? 'not examined' : `examine again: ${fellBackBecause}`
+}
+
+type JointsProps = {
+  joints: readonly PressJoint[]
+  selectedId: string | null
+  onSelect: (id: string | null) => void
+  /** Under the joint that is chosen: what can be done to it. */
+  children: ReactNode
+}
+
+/** The joints in their order, each with its balloon; choosing one shows what was found and what can be done. */
+export function Joints({ joints, selectedId, onSelect, children }: JointsProps) {
+  return (
+    <ul className="border-t border-hairline">
+      {joints.map((joint) => {
+        const selected = joint.id === selectedId
+        const { examination } = joint
+        return (
+          <li key={joint.id} className={classNames('border-b border-hairline', selected && 'border-l-4 border-l-ink bg-field')}>
+            <button
+              type="button"
+              aria-expanded={selected}
+              onClick={() => onSelect(selected ? null : joint.id)}
+              className="grid min-h-14 w-full grid-cols-[2.25rem_minmax(0,1fr)] items-center gap-x-3 px-1 text-left -outline-offset-3! hover:bg-sheet tablet:grid-cols-[2.25rem_minmax(0,1.7fr)_minmax(0,1fr)_minmax(0,1fr)] desktop:min-h-[34px] desktop:grid-cols-[1.75rem_minmax(0,1fr)_5rem_6rem] desktop:gap-x-2"
+            >
+              <span className="flex justify-center">
+                <JointBalloon number={joint.number} state={jointState(joint)} size={24} />
+              </span>
+              <span className="font-medium">{joint.name}</span>
+              <span className="text-graphite max-tablet:col-start-2 desktop:font-condensed">{joint.detail || joint.kind}</span>
+              <span className="text-graphite max-tablet:col-start-2 desktop:font-condensed">{found(joint)}</span>
+            </button>
+            {selected && (
+              <div className="px-4 pt-1 pb-4 tablet:pl-12">
+                {examination && (
+                  <p className="text-graphite">
+                    {examination.result === 'accepted' ? 'Accepted' : 'Rejected'} on {shortDate(examination.at)}, {examination.method}
+                    {examination.proofTestNumber !== null && `, in ${examination.proofTestNumber}`}
+                    {examination.remark !== '' && `. ${examination.remark}`}
+                  </p>
+                )}
+                {children}
+              </div>
+            )}
+          </li>
+        )
+      })}
+    </ul>
+  )
+}
