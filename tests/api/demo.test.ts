@@ -9,6 +9,7 @@ import { migrateUp } from '#server/database/migrator'
 import { loadDemoShop, signInLines } from '#server/database/seeders/demo'
 import type { DemoSignIn } from '#server/database/seeders/demo'
 import { pressColumns, proofTestColumns } from '#server/ledger/projections'
+import { rebuildProjections } from '#server/ledger/rebuild'
 import { loadSealKey } from '#server/ledger/seal-keys'
 import { initModels, User } from '#server/models/index'
 import { signIn } from '#server/services/sessions'
@@ -220,6 +221,9 @@ describe('its ledgers', () => {
       const state = tests.get(id)?.state
       expect(state && proofTestColumns(state)).toEqual(row)
     }
+    expect(await rebuildProjections(context.database)).toBe(rows.size)
+    expect(await select('SELECT * FROM presses')).toEqual(pressRows)
+    expect(await select('SELECT * FROM proof_tests')).toEqual(testRows)
   })
 
   it('froze evaluations that today’s arithmetic gives again', () => {

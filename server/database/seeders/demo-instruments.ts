@@ -11,7 +11,7 @@ import type { DemoShops } from './demo-people'
 const dial = (code: string): InstrumentDetails => ({
   kind: 'indicator',
   code,
-  description: 'Dial indicator on a magnet stand',
+  description: 'On a magnet stand',
   style: 'dial',
   range: { text: '10', unit: 'mm' },
   increment: { text: '0.01', unit: 'mm' },
@@ -22,7 +22,7 @@ const dial = (code: string): InstrumentDetails => ({
 const digital = (code: string): InstrumentDetails => ({
   kind: 'indicator',
   code,
-  description: 'Digital indicator, data lead',
+  description: 'With a data lead',
   style: 'digital',
   range: { text: '25', unit: 'mm' },
   increment: { text: '0.005', unit: 'mm' },
@@ -34,7 +34,7 @@ const INSTRUMENTS = {
   dialGauge: {
     kind: 'gauge',
     code: 'PG-1',
-    description: 'Glycerine dial, 150 mm',
+    description: 'Glycerine-filled, 150 mm',
     style: 'dial',
     fullScale: { text: '10000', unit: 'psi' },
     increment: { text: '50', unit: 'psi' },
@@ -43,7 +43,7 @@ const INSTRUMENTS = {
   digitalGauge: {
     kind: 'gauge',
     code: 'PG-2',
-    description: 'Digital, battery',
+    description: 'Battery, five digits',
     style: 'digital',
     fullScale: { text: '10000', unit: 'psi' },
     increment: { text: '10', unit: 'psi' },
@@ -52,7 +52,7 @@ const INSTRUMENTS = {
   barGauge: {
     kind: 'gauge',
     code: 'PG-3',
-    description: 'Dial, 100 mm, from the old baler',
+    description: '100 mm, from the old baler',
     style: 'dial',
     fullScale: { text: '700', unit: 'bar' },
     increment: { text: '5', unit: 'bar' },
@@ -61,7 +61,7 @@ const INSTRUMENTS = {
   smallGauge: {
     kind: 'gauge',
     code: 'PG-4',
-    description: 'Dial, 63 mm, dropped once',
+    description: '63 mm, dropped once',
     style: 'dial',
     fullScale: { text: '6000', unit: 'psi' },
     increment: { text: '100', unit: 'psi' },
@@ -70,7 +70,7 @@ const INSTRUMENTS = {
   loadCell: {
     kind: 'load-cell',
     code: 'LC-1',
-    description: 'Hollow load cell with display',
+    description: 'Hollow, with display',
     fullScale: { text: '100', unit: 'kN' },
     increment: { text: '0.05', unit: 'kN' },
     errorPercentOfSpan: 0.3,
@@ -81,12 +81,12 @@ const INSTRUMENTS = {
   digital1: digital('DD-1'),
   digital2: digital('DD-2'),
   digital3: digital('DD-3'),
-  lateDial: { ...dial('DI-4'), description: 'Dial indicator, lever stand' },
-  badDigital: { ...digital('DD-4'), description: 'Digital indicator, display flickers' },
+  lateDial: { ...dial('DI-4'), description: 'On the lever stand' },
+  badDigital: { ...digital('DD-4'), description: 'Display flickers' },
   rule: {
     kind: 'indicator',
     code: 'SR-1',
-    description: 'Straight-edge, 1 m, and steel rule',
+    description: '1 m, with a steel rule',
     style: 'straight-edge and rule',
     range: { text: '150', unit: 'mm' },
     increment: { text: '0.5', unit: 'mm' },

@@ -159,7 +159,7 @@ export const registerBadger = finishedPress(176, 'secondLead', {
 export const registerWren = finishedPress(132, 'lead', {
   kind: 'bench',
   name: 'Wren',
-  whatFor: 'bench press for small bushings',
+  whatFor: 'bushing press',
   height: '820',
   opening: '260',
   ratedLoad: shortTons('5'),
@@ -197,7 +197,7 @@ export const registerOx = finishedPress(16, 'lead', {
 export const registerLongMeg = finishedPress(9, 'lead', {
   kind: 'h-frame',
   name: 'Long Meg',
-  whatFor: 'straightening press, ram on a slide',
+  whatFor: 'sliding-ram press',
   height: '2100',
   opening: '700',
   holes: { pitch: '150', count: 8 },
@@ -256,7 +256,7 @@ export async function buildSecondShopsPress(desk: Desk, { second, people }: Demo
   const press = built({
     kind: 'bench',
     name: 'Little Weir',
-    whatFor: 'bench press for seals',
+    whatFor: 'seal press',
     height: '760',
     opening: '240',
     ratedLoad: metricTonsForce('4'),
