@@ -86,7 +86,8 @@ export function recordLine(opened: Opened, climbs: readonly ClimbEvaluation[], s
     xMax: Math.max(widest, 1e-6),
     yMax: topOfScale(opened.protocol.content.stages),
     title: 'Deflection against load',
-    aside: opened.net?.label ?? opened.points[0]?.label ?? '',
+    // A narrow chart has room for its title only.
+    ...(size.width < 480 ? {} : { aside: opened.net?.label ?? opened.points[0]?.label ?? '' }),
     setting: 'alone',
   }
 }

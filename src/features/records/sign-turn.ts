@@ -9,7 +9,7 @@ type Ask = (action: Action, subject: { shopId: string; assignment: Assignment })
 /** The people named when the test was opened, as the policy asks for them. */
 export function assignmentOf({ opened }: RecordView): Assignment {
   const { lead, pumpHand, witness } = opened.people
-  return { leadId: lead.id ?? '', pumpHandId: pumpHand.id ?? '', witnessId: witness.id ?? '' }
+  return { leadId: lead.id ?? '', pumpHandId: pumpHand.id, witnessId: witness.id ?? '' }
 }
 
 /** Asks the shared policy; what the ledger's own rules say is the server's to enforce. */

@@ -16,16 +16,16 @@ function CriterionRow({ criterion }: { criterion: Criterion }) {
   const { verdict, label, reading, limitText } = criterion
   const away = verdict === 'within' ? '' : verdict === 'beyond' ? 'text-stop-ink' : 'text-graphite'
   return (
-    <tr className="border-b border-hairline">
-      <td className="w-8 py-1.5 align-middle">
+    <tr className="border-b border-hairline max-tablet:grid max-tablet:grid-cols-[2rem_1fr_1fr] max-tablet:py-1.5">
+      <td className="w-8 align-middle max-tablet:row-span-2 max-tablet:self-center tablet:py-1.5">
         <Mark name={MARKS[verdict]} size={20} label={verdictWord(verdict)} />
       </td>
-      <th scope="row" className="py-1.5 pr-3 text-left font-normal">
+      <th scope="row" className="pr-3 text-left font-condensed font-normal max-tablet:col-span-2 tablet:py-1.5">
         {label}
         {verdict !== 'within' && <span className={`font-medium ${away}`}>, {verdictWord(verdict)}</span>}
       </th>
-      <td className="py-1.5 pr-3 text-right font-semibold">{setPercent(reading)}</td>
-      <td className="py-1.5 text-right text-graphite">{setPercent(limitText)}</td>
+      <td className="pr-3 font-condensed font-semibold whitespace-nowrap tablet:py-1.5 tablet:text-right">{setPercent(reading)}</td>
+      <td className="text-right font-condensed text-graphite max-tablet:w-auto tablet:w-36 tablet:py-1.5">{setPercent(limitText)}</td>
     </tr>
   )
 }
@@ -38,7 +38,7 @@ export function CriteriaTable({ record }: { record: RecordView }) {
     <section>
       <h2 className="pb-2 text-20">{criteriaHeading(evaluation)}</h2>
       <table className="w-full border-collapse">
-        <thead>
+        <thead className="max-tablet:sr-only">
           <tr className="border-b border-rule text-14 text-graphite">
             <td />
             <th scope="col" className="pb-1 text-left font-medium">
@@ -57,7 +57,7 @@ export function CriteriaTable({ record }: { record: RecordView }) {
             <CriterionRow key={`${criterion.id} ${criterion.label}`} criterion={criterion} />
           ))}
           {unmeasured.length > 0 && (
-            <tr className="border-b border-hairline">
+            <tr className="border-b border-hairline max-tablet:grid max-tablet:grid-cols-[2rem_1fr]">
               <td className="w-8 py-1.5 align-middle">
                 <Mark name="not-read" size={20} label="not measured" />
               </td>

@@ -33,7 +33,7 @@ function noticesOf(record: RecordView): Notice[] {
     {
       title: 'Stopped',
       mark: 'stop',
-      lines: stopped ? [`${stopped.why} Called by ${nameOf(stopped.by)}, ${dateAndTime(stopped.at)}${stopped.atPercent === null ? '' : `, at ${stopped.atPercent}\u202f%`}.`] : [],
+      lines: stopped ? [`${stopped.why.replace(/\.$/, '')}. Called by ${nameOf(stopped.by)}, ${dateAndTime(stopped.at)}${stopped.atPercent === null ? '' : `, at ${stopped.atPercent}\u202f%`}.`] : [],
     },
     { title: 'Against “accepted”', mark: 'beyond', lines: record.standing === 'under way' ? [] : evaluation.against },
     {

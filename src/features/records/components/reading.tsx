@@ -1,3 +1,4 @@
+import { Fragment } from 'react'
 import type { ShownReading } from '../record-view'
 
 /** A reading as it counts; what was typed before stays, struck through, with the letter of its correction. */
@@ -7,9 +8,9 @@ export function Reading({ reading }: { reading: ShownReading | null }) {
   return (
     <span className="whitespace-nowrap">
       {reading.struck.map(({ text, letter }) => (
-        <del key={letter} className="mr-1 text-stop-ink decoration-2">
-          {text}
-        </del>
+        <Fragment key={letter}>
+          <del className="text-stop-ink decoration-2">{text}</del>{' '}
+        </Fragment>
       ))}
       {reading.text}
       {letters !== '' && (

@@ -72,7 +72,7 @@ export function RecordResult({ record }: { record: RecordView }) {
         {lines(record)
           .filter((line) => line !== '')
           .map((line) => (
-            <p key={line} className="text-18">
+            <p key={line} className="mt-0.5 text-18">
               {line}
             </p>
           ))}

@@ -61,13 +61,13 @@ export function RecordSheet(props: RecordSheetProps) {
           <RecordHead record={record} />
           <RecordResult record={record} />
           <RecordCourse record={record} />
-          <div className="grid gap-x-8 gap-y-5 pt-2 desktop:grid-cols-[minmax(0,56%)_minmax(0,1fr)] print:grid-cols-[minmax(0,56%)_minmax(0,1fr)]">
-            <div className="grid content-start gap-4 max-tablet:-mx-3">
+          <div className="grid gap-x-8 gap-y-5 pt-2 print:block wide:grid-cols-[minmax(0,54%)_minmax(0,1fr)]">
+            <div className="grid gap-4 max-tablet:-mx-3">
               {record.opened.legs.map((leg, index) => (
                 <RecordChart key={leg.label} record={record} leg={index} />
               ))}
             </div>
-            <div className="grid content-start gap-3">
+            <div className="grid content-start gap-x-8 gap-y-3 desktop:max-wide:grid-cols-2 print:block print:pt-4">
               <CriteriaTable record={record} />
               <RecordFacts record={record} />
             </div>

@@ -4,7 +4,7 @@ import { leadInstrument } from '#shared/proof-test/force'
 import { unitLabel } from '#shared/units'
 import { Mark } from '../../../components/marks'
 import { clockTime } from '../../../lib/dates'
-import { usePhone } from '../../../lib/use-media'
+import { useMedia } from '../../../lib/use-media'
 import type { RecordView } from '../record-view'
 import { repeatHeading, shownStages, type ShownStage } from '../stage-rows'
 import { Reading } from './reading'
@@ -29,7 +29,7 @@ function headsOf({ opened }: RecordView): Heads {
 
 function Head({ words, unit, left = false }: { words: string; unit?: string; left?: boolean }) {
   return (
-    <th scope="col" className={`pb-1 align-bottom font-medium ${left ? 'pr-3 text-left' : 'pl-3 text-right'}`}>
+    <th scope="col" className={`pb-1 align-bottom font-medium ${left ? 'pr-2 text-left wide:pr-3' : 'pl-1.5 text-right wide:pl-3'}`}>
       {words}
       {unit !== undefined && unit !== '' && <span className="block">{unit}</span>}
     </th>
@@ -37,13 +37,13 @@ function Head({ words, unit, left = false }: { words: string; unit?: string; lef
 }
 
 function Cell({ children, strong = false }: { children: ReactNode; strong?: boolean }) {
-  return <td className={`py-1.5 pl-3 text-right ${strong ? 'font-semibold' : ''}`}>{children}</td>
+  return <td className={`py-1.5 pl-1.5 text-right wide:pl-3 ${strong ? 'font-semibold' : ''}`}>{children}</td>
 }
 
 function StageLine({ stage }: { stage: ShownStage }) {
   return (
     <tr className="border-b border-hairline">
-      <th scope="row" className="py-1.5 pr-3 text-left font-semibold whitespace-nowrap">
+      <th scope="row" className="py-1.5 wide:w-28 pr-3 text-left font-semibold whitespace-nowrap">
         {stage.name}
       </th>
       <td className="py-1.5">{stage.at !== null && clockTime(stage.at)}</td>
@@ -60,7 +60,7 @@ function StageLine({ stage }: { stage: ShownStage }) {
         </Cell>
       ))}
       <Cell strong>{stage.net}</Cell>
-      <td className="py-1.5 pl-3 text-right whitespace-nowrap">
+      <td className="py-1.5 pl-1.5 text-right whitespace-nowrap wide:pl-3">
         {stage.force && stage.target !== null && (
           <>
             <span className="font-semibold">{stage.force.kN}</span> ± {stage.force.U}
@@ -68,11 +68,11 @@ function StageLine({ stage }: { stage: ShownStage }) {
         )}
       </td>
       <Cell>{stage.step}</Cell>
-      <td className="py-1.5 pl-3 text-right whitespace-nowrap">{stage.softening}</td>
+      <td className="py-1.5 pl-1.5 text-right whitespace-nowrap wide:pl-3">{stage.softening}</td>
       <Cell>{stage.creep}</Cell>
-      <td className="py-1.5 pl-6">
+      <td className="py-1.5 pl-3 wide:pl-6">
         {stage.decision && (
-          <span className="flex items-center gap-2 whitespace-nowrap">
+          <span className="flex items-center gap-1.5 whitespace-nowrap">
             <Mark name={stage.decision.mark} size={18} />
             {stage.decision.words}
           </span>
@@ -86,7 +86,7 @@ function Table({ record, climb }: { record: RecordView; climb: ClimbEvaluation }
   const { pressure, length, stiffness, net } = headsOf(record)
   return (
     <div className="overflow-x-auto print:overflow-visible">
-      <table className="w-full border-collapse">
+      <table className="w-full border-collapse max-wide:font-condensed print:text-[12px] print:leading-4">
         <thead>
           <tr className="border-b border-rule font-condensed text-14 text-graphite">
             <Head words="Stage" left />
@@ -102,7 +102,7 @@ function Table({ record, climb }: { record: RecordView; climb: ClimbEvaluation }
             <Head words="Step" unit={stiffness} />
             <Head words="Softening" />
             <Head words="Creep" unit={length} />
-            <th scope="col" className="pb-1 pl-6 text-left align-bottom font-medium">
+            <th scope="col" className="pb-1 pl-3 wide:pl-6 text-left align-bottom font-medium">
               Decision
             </th>
           </tr>
@@ -119,14 +119,14 @@ function Table({ record, climb }: { record: RecordView; climb: ClimbEvaluation }
 
 function Pair({ name, children }: { name: string; children: ReactNode }) {
   return (
-    <div className="flex justify-between gap-3">
+    <div className="flex justify-between gap-2">
       <dt className="text-graphite">{name}</dt>
-      <dd className="text-right">{children}</dd>
+      <dd className="text-right whitespace-nowrap">{children}</dd>
     </div>
   )
 }
 
-/** The same on a phone: a stage under the other, each figure beside its name. */
+/** The same where a table has no room: a block for each stage, each figure beside its name. */
 function StageBlock({ stage, heads }: { stage: ShownStage; heads: Heads }) {
   return (
     <li className="border-b border-hairline py-2">
@@ -141,7 +141,7 @@ function StageBlock({ stage, heads }: { stage: ShownStage; heads: Heads }) {
           </p>
         )}
       </div>
-      <dl className="grid grid-cols-2 gap-x-6">
+      <dl className="grid grid-cols-2 gap-x-6 tablet:grid-cols-4">
         {stage.force && stage.target !== null && (
           <div className="col-span-2 flex justify-between gap-3">
             <dt className="text-graphite">Force</dt>
@@ -180,8 +180,8 @@ function StageBlock({ stage, heads }: { stage: ShownStage; heads: Heads }) {
 }
 
 function Climb({ record, climb }: { record: RecordView; climb: ClimbEvaluation }) {
-  const phone = usePhone()
-  if (!phone) return <Table record={record} climb={climb} />
+  const narrow = useMedia('(max-width: 1023.98px)')
+  if (!narrow) return <Table record={record} climb={climb} />
   const heads = headsOf(record)
   return (
     <ol>
