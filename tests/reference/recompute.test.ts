@@ -96,10 +96,26 @@ function computedCells(workbook: Workbook, sheets: Map<string, string[][]>): Com
 /** "24.7%" as 0.247; anything else as the number it is. */
 const numberOf = (text: string): number => (text.endsWith('%') ? Number(text.slice(0, -1)) / 100 : Number(text))
 
+/** Lengths in inches, area from the maker, springs and a carried weight: the other branches of the formulas. */
+function withSpringsInInches(): RecordedTest {
+  const { opened } = recordedTest({ until: 'opened' }).state
+  const ram = opened?.press.rams[0]
+  if (!opened || !ram) throw new Error('The test was opened with a ram.')
+  const changed = {
+    ...ram,
+    effectiveArea: { text: '3.045', unit: 'in2' as const },
+    springReturn: { text: '120', unit: 'N' as const },
+    carriedMass: { text: '22.5', unit: 'lb' as const },
+    carriedComesDown: false,
+  }
+  return recordedTest({ opened: { lengthUnit: 'in', forceUnit: 'kN', press: { ...opened.press, rams: [changed] } } })
+}
+
 describe.each([
   ['countersigned', recordedTest],
   ['stopped', stoppedTest],
   ['of two legs', twoLegTest],
+  ['read in inches against springs', withSpringsInInches],
 ] as const)('the record of a test that was %s', (name, make) => {
   test('comes out the same when LibreOffice computes every cell again', { timeout: 120_000 }, async () => {
     const workbook = await workbookOf(make())
