@@ -103,7 +103,7 @@ function Field(props: FieldProps): ReactElement {
   return (
     <div className="min-w-0">
       <label htmlFor={id} className="mb-[5px] block truncate text-16 leading-[24px]">
-        <span className="font-medium text-ink">{field.label}</span>
+        <span className="font-medium text-ink">{field.label}</span>{' '}
         <span className="ml-2 text-graphite">{field.unit}</span>
       </label>
       <input

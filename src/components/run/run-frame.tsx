@@ -93,7 +93,7 @@ function Portrait(props: RunFrameProps): ReactElement {
   return (
     <>
       {props.largePicture === true ? (
-        <div className="ground-dye min-h-0 flex-[1_0_540px]">
+        <div className="ground-dye min-h-0 flex-[1_0_470px]">
           <Fit initial={{ width: 820, height: 540 }}>{(size) => props.line(size, 'portrait')}</Fit>
         </div>
       ) : (

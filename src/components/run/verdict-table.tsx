@@ -56,10 +56,10 @@ export function VerdictTable({ rows, caption }: { rows: VerdictRow[]; caption: s
           <th scope="col" className={HEAD}>
             What was read
           </th>
-          <th scope="col" className={`${HEAD} text-right`}>
+          <th scope="col" className={`${HEAD} w-px text-right`}>
             Reading
           </th>
-          <th scope="col" className={`${HEAD} text-right`}>
+          <th scope="col" className={`${HEAD} w-px text-right`}>
             Limit
           </th>
         </tr>
@@ -72,7 +72,7 @@ export function VerdictTable({ rows, caption }: { rows: VerdictRow[]; caption: s
               key={row.id}
               className="grid min-h-[56px] grid-cols-[32px_1fr_auto] items-center gap-x-2 border-t border-hairline py-2 tablet:table-row tablet:h-[38px] tablet:py-0"
             >
-              <td className="row-span-2 tablet:table-cell tablet:align-middle">
+              <td className="row-span-2 tablet:table-cell tablet:pr-[10px] tablet:align-middle">
                 <Mark name={MARK[row.verdict]} size={24} />
               </td>
               <td className={`whitespace-nowrap text-18 tablet:table-cell tablet:pr-4 ${WORD[row.verdict]}`}>

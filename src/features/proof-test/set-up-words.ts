@@ -2,6 +2,8 @@ import { lowestLimit } from '#shared/press/ratings'
 import type { Opened, SetUpItem } from '#shared/proof-test/entries'
 import { formatForce } from '#shared/units'
 
+export { CAUTIONS } from '#shared/cautions'
+
 /** What each point of the set-up says when it is ticked: the whole sentence, so that nobody ticks a word (DOMAIN 4). */
 export function setUpSentence(item: SetUpItem, opened: Opened): string {
   const lowest = lowestLimit(opened.press)
@@ -34,13 +36,3 @@ export function setUpSentence(item: SetUpItem, opened: Opened): string {
       return 'The gauge sits on the ram’s side of every valve and coupler. It was vented and reads zero.'
   }
 }
-
-/** The cautions wherever force is decided (DOMAIN 6). */
-export const CAUTIONS: readonly string[] = [
-  'These figures are an aid, not a design approval. Local law and codes come first, and a licensed engineer where they ask for one.',
-  'One static load says nothing of fatigue, cold, other bed holes, members without an indicator, or faces nobody examined. Dye penetrant finds surface cracks only.',
-  'Nobody stands in line with pins, ram or tooling.',
-  'No hand near a leak under pressure. Oil under the skin is an emergency.',
-  'Never above the lowest rating in the train.',
-  'Release first, look after.',
-]

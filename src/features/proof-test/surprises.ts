@@ -1,6 +1,6 @@
 import { creepLimit } from '#shared/statistics/hold'
 import type { Opened, Position, Reading } from '#shared/proof-test/entries'
-import { lengthText, type StageEvaluation } from '#shared/proof-test/evaluate-climb'
+import { evaluateClimb, lengthText, predict, type StageEvaluation } from '#shared/proof-test/evaluate-climb'
 import { forceOf, stageForce, stageTarget } from '#shared/proof-test/force'
 import { surprising } from '#shared/proof-test/rules-under-load'
 import type { ProofTestState } from '#shared/proof-test/state'
@@ -17,8 +17,24 @@ function whole(opened: Opened, readings: readonly Reading[]): boolean {
 
 /** The line speaks of the row as a whole: it is asked once all of it is there. */
 function notPredicted(state: ProofTestState, opened: Opened, at: Position, id: string, readings: readonly Reading[]): string | null {
-  if (!whole(opened, readings) || !surprising(state, at, readings).includes(id)) return null
-  return 'That is not what the line predicts.'
+  if (!whole(opened, readings)) return null
+  return surprising(state, at, readings).includes(id) || offItsOwnLine(state, opened, at, id, readings) ? 'That is not what the line predicts.' : null
+}
+
+/** Of several points one may be misread: a point off the line of its own readings is asked for too. */
+function offItsOwnLine(state: ProofTestState, opened: Opened, at: Position, id: string, readings: readonly Reading[]): boolean {
+  const climb = evaluateClimb(state, at.leg, at.climb)
+  const force = forceOf(opened, readings)
+  const figure = climb?.datum ? deflectionsOf(opened, readings, climb.datum.row.readings).find((one) => one.id === id) : undefined
+  if (!climb || !force || !figure) return false
+  const rows = [climb.datum, ...climb.stages.filter((stage) => stage.at.stage < at.stage).map((stage) => stage.start)]
+  const points = rows.flatMap((row) => {
+    const own = row?.deflections.find((one) => one.id === id)
+    return row?.force && own ? [{ force: row.force.force, deflection: own.deflection, uForce: row.force.uIndependent, uDeflection: own.uReading }] : []
+  })
+  const prediction = predict(opened, points, force.force)
+  if (!prediction) return false
+  return Math.abs(figure.deflection - prediction.deflection) > Math.max(prediction.halfWidth, 5 * figure.increment)
 }
 
 function pastRating(opened: Opened, readings: readonly Reading[]): string | null {

@@ -51,7 +51,7 @@ function stiffSide(criterion: Criterion): string[] {
 export function evidence(stage: StageEvaluation): string[] {
   const order = ['beyond', 'undecided', 'wait'] as const
   for (const verdict of order) {
-    const found = stage.criteria.find((criterion) => (criterion.leads || criterion.stops) && criterion.verdict === verdict)
+    const found = stage.criteria.find((criterion) => criterion.verdict === verdict && (criterion.leads || (verdict === 'beyond' && criterion.stops)))
     if (found) return sentenceOf(found)
   }
   if (stage.suggestion === 'stop') return ['It was topped up twice at full load: the press does not hold its pressure.']

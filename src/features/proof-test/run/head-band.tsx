@@ -1,5 +1,6 @@
 import { useEffect, useRef, type ReactElement, type ReactNode } from 'react'
 import type { Step } from '#shared/proof-test/steps'
+import { useRunShape } from '../../../components/run/run-frame'
 import { setPercent } from '../../../components/typeset'
 import { Into } from './slots'
 
@@ -58,21 +59,24 @@ interface HeadBandProps {
   title: string
   /** Changes when the heading is to take the focus again. */
   focusKey?: string
+  /** Lower, over a row that needs the height: the steps are then told, not shown. */
+  low?: boolean
   children?: ReactNode
 }
 
 /** The heading of a step, on dye over the bench. It takes the focus when the step comes. */
-export function HeadBand({ step, title, focusKey, children }: HeadBandProps): ReactElement {
+export function HeadBand({ step, title, focusKey, low = false, children }: HeadBandProps): ReactElement {
   const heading = useRef<HTMLHeadingElement>(null)
+  const compact = useRunShape() === 'portrait' || low
   useEffect(() => heading.current?.focus({ preventScroll: true }), [focusKey])
   return (
     <Into slot="over">
-      <div className="ground-dye shrink-0 px-4 py-3">
-        <h1 ref={heading} tabIndex={-1} className="text-26 tablet:text-34">
+      <div className={`ground-dye shrink-0 px-4 ${compact ? 'py-[9px]' : 'py-3'}`}>
+        <h1 ref={heading} tabIndex={-1} className={compact ? 'text-26' : 'text-26 tablet:text-34'}>
           {setPercent(title)}
         </h1>
         {children !== undefined && <p className="text-18 text-faint-scribe">{children}</p>}
-        <StepTrail step={step} />
+        <StepTrail step={step} shown={!compact} />
       </div>
     </Into>
   )

@@ -81,7 +81,8 @@ function CoveredKeypad({ run, opened, step, onDone }: IndependentProps & { onDon
             onKey={row.key}
             onBackspace={row.backspace}
             onEnter={row.enter}
-            enterLabel={row.last ? 'Enter my reading' : 'Enter'}
+            enterLabel={shape === 'phone' && row.last ? 'Enter my reading' : 'Enter'}
+            enterNote={shape === 'phone' ? undefined : row.last ? 'my reading' : `then ${row.nextSource?.label.toLowerCase() ?? ''}`}
             size={shape === 'phone' ? 'phone' : 'tablet'}
           />
         </div>
@@ -108,8 +109,8 @@ export function IndependentParts(props: IndependentProps): ReactElement {
   if (cover) {
     return (
       <>
-        <HeadBand step={step} title={`${name}: read the gauge yourself`} focusKey="covered">
-          The lead’s figure stays covered until yours is in.
+        <HeadBand low step={step} title="Read the gauge yourself" focusKey="covered">
+          {name}: the lead’s figure stays covered until yours is in.
         </HeadBand>
         <CoveredKeypad {...props} onDone={done} />
       </>

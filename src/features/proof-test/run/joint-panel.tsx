@@ -52,7 +52,9 @@ export function JointPanel({ run, joint, occasion, onDone }: JointPanelProps): R
           <h2 id={`joint-${id}`} className="text-22 tablet:text-26">
             Joint {number}: {name}
           </h2>
-          <p className="text-graphite">{[capital(kind), detail, jointSays(joint, occasion)].filter((part) => part !== '').join(', ')}</p>
+          <p className="text-graphite">
+            {[capital(kind), detail].filter((part) => part !== '').join(', ')}. {jointSays(joint, occasion)}.
+          </p>
         </div>
       </div>
       <RadioRow

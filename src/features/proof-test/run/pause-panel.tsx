@@ -16,7 +16,7 @@ export function PausePanel({ run }: { run: Run }): ReactElement {
   const release = (): void => run.record({ kind: 'released', payload: { gaugeZero: true, ramClear: true } })
   return (
     <>
-      <TimerBand step={run.step} total={LONGEST_PAUSE_SECONDS} elapsed={elapsed} label="Paused under load" sub="left, then release" overText="The pause is over: release" />
+      <TimerBand step={run.step} total={LONGEST_PAUSE_SECONDS} elapsed={elapsed} label="Paused" sub="left, then release" overText="Over: release" />
       <BenchScroll>
         <h1 tabIndex={-1} className="text-22 tablet:text-26">
           {over ? 'Open the release valve slowly.' : 'Paused. The press stays loaded.'}

@@ -1,7 +1,7 @@
 import { useEffect, useRef, type ReactElement, type ReactNode } from 'react'
 import { forceOf, stageTarget } from '#shared/proof-test/force'
 import { forceTexts } from '#shared/proof-test/evaluate-climb'
-import type { Opened } from '#shared/proof-test/entries'
+import type { Opened, Reading } from '#shared/proof-test/entries'
 import { formatForce, groupDigits, unitLabel } from '#shared/units'
 import { Dial } from '../../../components/instruments/dial'
 import { Bench } from '../../../components/run/bench'
@@ -34,12 +34,14 @@ interface RowBenchProps {
   bare?: boolean
   /** The target is a guide only: no window is kept. */
   anywhere?: boolean
-  /** Something else one may say before the moment is marked. */
-  extra?: ReactNode
+  /** The row that the load stands at: shown until the next one is marked. */
+  standing?: readonly Reading[]
+  /** Takes the keys' place while marking has to wait. */
+  waiting?: ReactNode
 }
 
-function loadOf(opened: Opened, row: RowInHand) {
-  const figure = forceOf(opened, row.readings)
+function loadOf(opened: Opened, readings: readonly Reading[]) {
+  const figure = forceOf(opened, readings)
   if (!figure) return null
   const { own, ownU, kN, kNU } = forceTexts(opened, figure)
   const unit = unitLabel(opened.forceUnit, { plural: true })
@@ -47,10 +49,10 @@ function loadOf(opened: Opened, row: RowInHand) {
   return { figure: groupDigits(own), unit, uncertainty: ownU, also }
 }
 
-function foundOf(opened: Opened, percent: number | null, row: RowInHand, sources: readonly RowSource[]) {
+function foundOf(opened: Opened, percent: number | null, readings: readonly Reading[], sources: readonly RowSource[]) {
   const target = percent === null ? null : stageTarget(opened, percent)
   const force = sources.find((source) => source.kind === 'force')
-  const value = force ? valueOf(row.readings, force.id) : null
+  const value = force ? valueOf(readings, force.id) : null
   if (!target || !force || value === null) return undefined
   const { window } = target
   const span = `${groupDigits(window.fromText)} to ${groupDigits(window.toText)}`
@@ -73,8 +75,9 @@ export function RowBench(props: RowBenchProps): ReactElement {
   const shape = useRunShape()
   const heading = useRef<HTMLHeadingElement>(null)
   useEffect(() => heading.current?.focus(), [])
-  const dial = dialOf(run.state, opened, percent, row.readings)
   const { draft } = row
+  const shown = draft.mark === null && props.standing ? props.standing : row.readings
+  const dial = dialOf(run.state, opened, percent, shown)
   const asked = question(row, props)
   const enterShut = draft.mark === null || run.box.fault !== null
   const mark = (): void => {
@@ -90,7 +93,7 @@ export function RowBench(props: RowBenchProps): ReactElement {
           <ReadingRow
             mark={draft.mark ? clockTime(draft.mark.at, { seconds: true }) : null}
             onMark={mark}
-            markNote={props.shut === undefined ? 'this moment' : 'not yet'}
+            markNote={props.shut === undefined ? 'now' : 'not yet'}
             markShut={props.shut !== undefined}
             fields={sources.map((source) => ({
               id: source.id,
@@ -110,27 +113,30 @@ export function RowBench(props: RowBenchProps): ReactElement {
           <div>
             <LiveFigure
               question={asked.title}
-              hint={asked.hint}
-              found={anywhere ? undefined : foundOf(opened, percent, row, sources)}
-              load={loadOf(opened, row)}
+              hint={Object.keys(draft.errors).length > 0 ? undefined : asked.hint}
+              found={anywhere ? undefined : foundOf(opened, percent, shown, sources)}
+              load={loadOf(opened, shown)}
               bare={bare}
             />
-            {draft.mark === null && props.extra}
             {temperature && <TemperatureField value={draft.temperature} onChange={row.temperature} lengthUnit={opened.lengthUnit} />}
           </div>
         }
         keypad={
-          <Keypad
-            onKey={row.key}
-            onBackspace={row.backspace}
-            onEnter={row.enter}
-            enterShut={enterShut}
-            enterLabel={row.last ? 'Enter row' : 'Enter'}
-            enterNote={row.nextSource ? `then ${row.nextSource.label.toLowerCase()}` : undefined}
-            enterLast={row.last ? undefined : 'last key: Enter row'}
-            signed={row.focusedSource?.kind === 'point'}
-            size={shape === 'phone' ? 'phone' : 'tablet'}
-          />
+          props.shut !== undefined && props.waiting !== undefined ? (
+            props.waiting
+          ) : (
+            <Keypad
+              onKey={row.key}
+              onBackspace={row.backspace}
+              onEnter={row.enter}
+              enterShut={enterShut}
+              enterLabel={row.last ? 'Enter row' : 'Enter'}
+              enterNote={draft.mark === null ? 'after the mark' : row.nextSource ? `then ${row.nextSource.label.toLowerCase()}` : undefined}
+              enterLast={row.last || draft.mark === null ? undefined : 'last key: Enter row'}
+              signed={row.focusedSource?.kind === 'point'}
+              size={shape === 'phone' ? 'phone' : 'tablet'}
+            />
+          )
         }
       />
     </Into>

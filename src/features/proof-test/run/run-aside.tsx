@@ -1,6 +1,8 @@
 import type { ReactElement } from 'react'
+import { nameJoints } from '#shared/press/joints'
+import { jointReady } from '#shared/proof-test/steps'
 import { storedEnergy } from '#shared/structure/stored-energy'
-import { QuietPlate } from '../../../components/run/plates'
+import { QuietPlate, ShutPlate } from '../../../components/run/plates'
 import type { Run } from '../use-run'
 import { Into } from './slots'
 
@@ -45,6 +47,7 @@ export function RunAside({ run, onPanel, energy }: RunAsideProps): ReactElement 
     )
   }
   const pause = (): void => run.record({ kind: 'paused', payload: { why: '' } })
+  const shut = run.step.name === 'walk-down' ? run.state.joints.filter((joint) => !jointReady(joint)).map((joint) => joint.joint.number) : []
   const mayPause = run.state.loaded !== null && run.state.paused === null && run.state.stopped === null
   return (
     <>
@@ -52,10 +55,12 @@ export function RunAside({ run, onPanel, energy }: RunAsideProps): ReactElement 
         <QuietPlate title="Note" note={mayPause ? 'noise, leak, readings so far' : 'noise, leak, movement'} onPress={() => onPanel('note')} />
       </Into>
       <Into slot="pause">
-        {mayPause ? (
+        {shut.length > 0 ? (
+          <ShutPlate title="Seating load" note={`shut: ${nameJoints(shut)}`} />
+        ) : mayPause ? (
           <QuietPlate title="Pause" note="release in 5:00 at most" onPress={pause} />
         ) : (
-          <QuietPlate title="Readings" note="so far, and corrections" onPress={() => onPanel('readings')} />
+          <QuietPlate title="Rows" note="so far, and corrections" onPress={() => onPanel('readings')} />
         )}
       </Into>
     </>

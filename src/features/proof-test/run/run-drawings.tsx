@@ -28,7 +28,7 @@ export function RunLadder({ run, opened, size, shape, covered }: DrawingProps & 
     <LoadLadder
       scale={shape === 'phone' ? 'strip' : 'vertical'}
       words={false}
-      stages={ladderStages(run.state, opened, run.step)}
+      stages={ladderStages(run.state, opened, run.step).map((stage) => (covered ? { ...stage, load: '' } : stage))}
       levelPercent={covered ? null : levelPercent(run.state, opened, run.evaluation)}
       {...size}
     />

@@ -1,6 +1,6 @@
 import { useEffect, useState, type ReactElement } from 'react'
 import type { Opened } from '#shared/proof-test/entries'
-import { RunFrame } from '../../../components/run/run-frame'
+import { RunFrame, useRunShape } from '../../../components/run/run-frame'
 import { RunTitleBlock } from '../../../components/run/run-title-block'
 import { clockTime } from '../../../lib/dates'
 import { useTitle } from '../../../lib/use-title'
@@ -47,6 +47,7 @@ function stepKey({ step, state }: Run): string {
 /** The run: title block, ladder, bench, line, and Stop in its corner whatever the step. */
 export function RunScreen({ run, opened }: Props): ReactElement {
   useTitle(`${opened.number}, ${opened.press.name}`)
+  const shape = useRunShape()
   const [panel, setPanel] = useState<Panel>('none')
   const [cover] = useCover(run.testId)
   const covered = cover && run.state.loaded !== null && run.state.stopped === null
@@ -62,14 +63,14 @@ export function RunScreen({ run, opened }: Props): ReactElement {
     run.record({ kind: 'stopped', payload: { cause: 'called', why: `Called by ${run.me.name}` } })
   }
   const walking = run.step.name === 'walk-down' || run.step.name === 'after-walk-down'
-  const energy = run.step.name === 'stopped-release' || run.step.name === 'independent' || run.step.name === 'release'
+  const energy = !covered && (run.step.name === 'stopped-release' || run.step.name === 'independent' || run.step.name === 'release')
   return (
     <SlotFrame
       frame={({ over: overSlot, ...slots }) => (
         <RunFrame
           title={
             <RunTitleBlock
-              cells={titleCells(run, opened)}
+              cells={titleCells(run, opened, shape === 'landscape')}
               kept={{ tablet: run.box.fault === null, server: run.counts.tablet === 0, sealed: run.counts.sealed }}
               waiting={run.counts.tablet}
             />

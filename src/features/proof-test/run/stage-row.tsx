@@ -1,5 +1,5 @@
 import type { ReactElement, ReactNode } from 'react'
-import type { Opened, Position } from '#shared/proof-test/entries'
+import type { Opened, Position, Reading } from '#shared/proof-test/entries'
 import { evaluateClimb } from '#shared/proof-test/evaluate-climb'
 import { rowSources, type Surprise } from '../row-model'
 import { atHoldEnd, atTarget } from '../surprises'
@@ -46,7 +46,8 @@ interface StageRowBenchProps {
   row: RowInHand
   before: { title: string; hint: string }
   shut?: string
-  extra?: ReactNode
+  waiting?: ReactNode
+  standing?: readonly Reading[]
 }
 
 export function StageRowBench({ run, opened, step, ...rest }: StageRowBenchProps): ReactElement {

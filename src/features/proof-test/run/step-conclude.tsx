@@ -1,7 +1,7 @@
 import { useMemo, useState, type ReactElement } from 'react'
 import { CONCLUSIONS, type Conclusion } from '#shared/proof-test/entries'
 import { CORE_VERSION, evaluateTest, freezeEvaluation, type TestEvaluation } from '#shared/proof-test/evaluate'
-import { unitLabel } from '#shared/units'
+import { groupDigits, unitLabel } from '#shared/units'
 import type { Opened } from '#shared/proof-test/entries'
 import { TextArea } from '../../../components/field'
 import { Mark } from '../../../components/marks'
@@ -46,7 +46,7 @@ function Against({ evaluation }: { evaluation: TestEvaluation }): ReactElement {
 function Would({ opened, evaluation }: { opened: Opened; evaluation: TestEvaluation }): ReactElement | null {
   const { clearance } = evaluation
   if (!clearance || evaluation.against.length > 0) return null
-  const pressure = clearance.gaugePressure ? `, ${clearance.gaugePressure.text} ${clearance.gaugePressure.unit} on this gauge` : ''
+  const pressure = clearance.gaugePressure ? `, ${groupDigits(clearance.gaugePressure.text)} ${clearance.gaugePressure.unit} on this gauge` : ''
   const unmeasured = opened.notMeasured.length > 0 ? ` Not measured: ${opened.notMeasured.join(', ')}.` : ''
   return (
     <p className="mt-2 text-18">

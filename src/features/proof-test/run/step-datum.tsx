@@ -31,7 +31,7 @@ export function DatumStep(props: StepProps<'datum'>): ReactElement {
   const { sources, row } = useDatumRow(props, null)
   return (
     <>
-      <HeadBand step={step} title={step.climb > 0 ? 'Datum of the repeat climb' : 'Datum'}>
+      <HeadBand low step={step} title={step.climb > 0 ? 'Datum of the repeat climb' : 'Datum'}>
         Load off, ram clear of the stack. Everything is measured from this row.
       </HeadBand>
       <RowBench
@@ -63,9 +63,9 @@ export function DatumWatchStep(props: StepProps<'datum-watch'>): ReactElement {
         step={step}
         total={total}
         elapsed={elapsed}
-        label={step.drifted ? 'It drifted: watch again' : 'Datum watched'}
+        label={step.drifted ? 'Drifted: again' : 'Datum watched'}
         sub="left, for drift"
-        overText="Over: read the row again"
+        overText="Over: read again"
       />
       <RowBench
         run={run}

@@ -26,7 +26,7 @@ export function RecoveryStep({ run, opened, step }: StepProps<'recovery'>): Reac
   const datum = here?.datum.at(-1)?.readings.map((reading) => reading.text).join(', ')
   return (
     <>
-      <TimerBand step={step} total={total} elapsed={elapsed} label={step.repeat ? 'Recovery, repeat climb' : 'Recovery'} sub="left, from the release" overText="Over: read what is left" />
+      <TimerBand step={step} total={total} elapsed={elapsed} label="Recovery" sub="left, from the release" overText="Over: read the set" />
       <RowBench
         run={run}
         opened={opened}

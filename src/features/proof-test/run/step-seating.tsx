@@ -23,7 +23,7 @@ export function SeatingStep({ run, opened, step }: StepProps<'seating'>): ReactE
   const pumpTo = target ? `${groupDigits(target.text)} ${target.unit}` : `${percent} %`
   return (
     <>
-      <HeadBand step={step} title="Seating load">
+      <HeadBand low step={step} title="Seating load">
         {percent} % of the rated load, once on and once off, to take up slack.
       </HeadBand>
       <RowBench

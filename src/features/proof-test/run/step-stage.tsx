@@ -3,12 +3,14 @@ import type { StageRow } from '#shared/proof-test/state'
 import { stageForce, stageTarget } from '#shared/proof-test/force'
 import { groupDigits } from '#shared/units'
 import { clockFigure } from '../../../components/run/hold-timer'
+import { VerdictTable } from '../../../components/run/verdict-table'
 import { ActionPlate } from '../../../components/run/plates'
 import { Button } from '../../../components/button'
 import { readyAlarm } from '../../../lib/alarm'
 import { useDraft } from '../drafts'
 import { predictionFor, rangeText } from '../line-model'
 import { duration, roundLoad } from '../names'
+import { verdictRows } from '../verdict-model'
 import { useWaitFrom } from '../use-elapsed'
 import { Cautions } from './cautions'
 import { BenchScroll, HeadBand } from './head-band'
@@ -74,9 +76,9 @@ export function ReadRowStep(props: StepProps<'read-row'>): ReactElement {
   return (
     <>
       {row.draft.mark ? (
-        <TimerBand step={step} total={total} elapsed={elapsed} label={`Hold ${step.percent} %`} sub="left, from the mark" overText="Over: enter this row first" />
+        <TimerBand step={step} total={total} elapsed={elapsed} label={`Hold ${step.percent} %`} sub="left, from the mark" overText="Over: enter this row" />
       ) : (
-        <HeadBand step={step} title={`${step.percent} %: mark, then read`}>
+        <HeadBand low step={step} title={`${step.percent} %: mark, then read`}>
           The mark starts the hold.
         </HeadBand>
       )}
@@ -109,16 +111,20 @@ export function HoldStep(props: StepProps<'hold'>): ReactElement {
     : { title: over ? 'The hold is over: mark, then read.' : 'Hold. Watch the gauge, do not pump.', hint: `At the mark: ${held ?? ''}.` }
   return (
     <>
-      <TimerBand step={step} total={step.stage.holdSeconds} elapsed={elapsed} label={`Hold ${step.percent} %`} sub="left, from the mark" overText="The hold is over: read the row" />
+      <TimerBand step={step} total={step.stage.holdSeconds} elapsed={elapsed} label={`Hold ${step.percent} %`} sub="left, from the mark" overText="Over: read the row" />
       <StageRowBench
         {...props}
         row={row}
+        standing={start?.readings}
         shut={shut}
         before={words}
-        extra={
-          <Button size="line" className="mt-3 min-h-14" onClick={() => change({ topUp: !topUp })}>
-            {topUp ? 'Not topped up' : 'The pressure was topped up'}
-          </Button>
+        waiting={
+          <div>
+            <VerdictTable caption={`What was read at ${step.percent} % so far`} rows={verdictRows(step.stage.criteria)} />
+            <Button size="line" className="mt-3 min-h-14 desktop:min-h-14" onClick={() => change({ topUp: true })}>
+              The pressure was topped up
+            </Button>
+          </div>
         }
       />
     </>

@@ -1,4 +1,4 @@
-import { useEffect, useRef, type ReactElement } from 'react'
+import { useEffect, useRef, type ReactElement, type ReactNode } from 'react'
 import { snapshotsOf } from '#shared/proof-test/decide'
 import type { StageEvaluation } from '#shared/proof-test/evaluate-climb'
 import { elapsedBetween } from '#shared/proof-test/clock'
@@ -36,7 +36,7 @@ function RowAgain(props: StepProps<'wait' | 'decide'> & { occasion: StageOccasio
   const title = { again: 'Mark, then read the row again.', 'hold end': 'Mark, then read the end of the hold.', 'hold start': 'Pumped on: mark, then read the row.', 'top-up': 'Topped up: mark, then read.' }[occasion]
   return (
     <>
-      <HeadBand step={step} title={`${step.percent} %: ${occasion === 'hold start' ? 'read after pumping on' : occasion === 'again' ? 'read again' : 'end of the hold'}`}>
+      <HeadBand low step={step} title={`${step.percent} %: ${occasion === 'hold start' ? 'read after pumping on' : occasion === 'again' ? 'read again' : 'end of the hold'}`}>
         Every value is read afresh.
       </HeadBand>
       <StageRowBench {...props} row={row} before={{ title, hint: 'Stop pumping, wait ten seconds, then mark.' }} />
@@ -44,7 +44,18 @@ function RowAgain(props: StepProps<'wait' | 'decide'> & { occasion: StageOccasio
   )
 }
 
-function Verdict({ run, stage, decision, title, instruction, caution }: { run: Run; stage: StageEvaluation; decision: 'go-on' | 'wait' | 'stop'; title: string; instruction: string; caution?: string }): ReactElement {
+interface VerdictProps {
+  run: Run
+  stage: StageEvaluation
+  decision: 'go-on' | 'wait' | 'stop'
+  title: string
+  instruction: string
+  caution?: string
+  /** What else one may do, under the evidence. */
+  children?: ReactNode
+}
+
+function Verdict({ run, stage, decision, title, instruction, caution, children }: VerdictProps): ReactElement {
   const heading = useRef<HTMLHeadingElement>(null)
   useEffect(() => heading.current?.focus({ preventScroll: true }), [decision])
   const independent = stage.attempt.independent ? independentCriterion(run.state) : null
@@ -56,7 +67,9 @@ function Verdict({ run, stage, decision, title, instruction, caution }: { run: R
           {[title, instruction, ...evidence(stage)].join('. ')}
         </p>
       </Into>
-      <Evidence stage={stage} before={stageBefore(run.evaluation?.stages ?? [], stage)} more={independent ? verdictRows([independent]) : []} />
+      <Evidence stage={stage} before={stageBefore(run.evaluation?.stages ?? [], stage)} more={independent ? verdictRows([independent]) : []}>
+        {children !== undefined && <div className="mt-3 flex flex-wrap gap-3">{children}</div>}
+      </Evidence>
     </>
   )
 }
@@ -86,7 +99,13 @@ export function WaitStep(props: StepProps<'wait'>): ReactElement {
   }
   return (
     <>
-      <Verdict run={run} stage={stage} decision="wait" title="Wait" instruction={again ? 'Go on only with a reason, or stop.' : 'Read the row again.'} caution="Keep the pressure, stay behind the shield." />
+      <Verdict run={run} stage={stage} decision="wait" title="Wait" instruction={again ? 'Go on only with a reason, or stop.' : 'Read the row again.'} caution="Keep the pressure, stay behind the shield.">
+        {(mayGoOn || low || needsEnd) && (
+          <Button className="min-h-14 desktop:min-h-14" onClick={readAgain}>
+            Read the row again
+          </Button>
+        )}
+      </Verdict>
       <Into slot="action">
         {mayGoOn ? (
           <ActionPlate title={next === null ? 'Full load was held: go on with a reason' : `Go on to ${next} % with a reason`} note="the reason prints in the record" onPress={() => run.record(goOn)} />
@@ -96,11 +115,6 @@ export function WaitStep(props: StepProps<'wait'>): ReactElement {
           <ActionPlate title="Pumped on: read a new row" note="the hold starts again from its mark" onPress={() => setMode('hold start')} />
         ) : (
           <ActionPlate title="Wait: read the row again" note={needsEnd ? 'the hold is still running' : 'mark, then every value afresh'} onPress={readAgain} />
-        )}
-        {(mayGoOn || low || needsEnd) && (
-          <Button wide className="mt-3 min-h-14" onClick={readAgain}>
-            Read the row again
-          </Button>
         )}
       </Into>
     </>
@@ -127,27 +141,26 @@ export function DecideStep(props: StepProps<'decide'>): ReactElement {
         title={differ ? 'Wait' : 'Go on'}
         instruction={differ ? 'Lead and witness read the gauge differently. Both read again.' : held}
         caution={next === null ? undefined : `Next: ${next} %. Look and listen first.`}
-      />
+      >
+        <Button className="min-h-14 desktop:min-h-14" onClick={() => setMode('again')}>
+          Read the row again
+        </Button>
+        {differ ? (
+          <Button className="min-h-14 desktop:min-h-14" onClick={goOn}>
+            Go on all the same
+          </Button>
+        ) : (
+          <Button className="min-h-14 desktop:min-h-14" onClick={() => run.record(decided(stage, 'wait'))}>
+            {stage.attempt.decided?.decision === 'wait' ? 'Waiting, as decided' : 'Wait'}
+          </Button>
+        )}
+      </Verdict>
       <Into slot="action">
         {differ ? (
           <ActionPlate title="The witness reads again" note="after the lead has read the row again" onPress={() => setMode('witness')} />
         ) : (
           <ActionPlate title={next === null ? 'Full load was held' : `Go on to ${next} %`} note={next === null ? 'next, release the press' : 'every limit checked is kept'} onPress={goOn} focusHint />
         )}
-        <div className="mt-3 grid grid-cols-2 gap-3">
-          <Button className="min-h-14" onClick={() => setMode('again')}>
-            Read the row again
-          </Button>
-          {differ ? (
-            <Button className="min-h-14" onClick={goOn}>
-              Go on all the same
-            </Button>
-          ) : (
-            <Button className="min-h-14" onClick={() => run.record(decided(stage, 'wait'))}>
-              {stage.attempt.decided?.decision === 'wait' ? 'Waiting, as decided' : 'Wait'}
-            </Button>
-          )}
-        </div>
       </Into>
     </>
   )

@@ -1,8 +1,7 @@
 import type { ReactElement } from 'react'
-import { nameJoints } from '#shared/press/joints'
 import type { JointState } from '#shared/proof-test/state'
-import { JointBalloon } from '../../../components/marks'
-import { ActionPlate, ShutPlate } from '../../../components/run/plates'
+import { JointBalloon, Mark } from '../../../components/marks'
+import { ActionPlate } from '../../../components/run/plates'
 import { useDraft } from '../drafts'
 import { examinationOf, jointMark, jointSays, madeUpWord, needsWork, toExamineAfter, workSentence, type Occasion } from '../joint-words'
 import type { Run } from '../use-run'
@@ -59,7 +58,6 @@ function JointList({ joints, occasion, chosen, onChoose }: JointListProps): Reac
 
 function Work({ run, joint, occasion }: { run: Run; joint: JointState; occasion: Occasion }): ReactElement {
   const { title, body } = workSentence(joint, run.state.joints)
-  const waiting = run.state.joints.filter((one) => !examinationOf(one, occasion))
   const finish = (): void =>
     run.record({
       kind: 'joint-worked',
@@ -72,15 +70,17 @@ function Work({ run, joint, occasion }: { run: Run; joint: JointState; occasion:
         <div className="min-w-0">
           <h2 className="text-22 tablet:text-26">{title}</h2>
           <p className="mt-1 text-18">{body}</p>
+          {joint.joint.kind === 'weld' && (
+            <p className="mt-2 flex items-center gap-3 text-18">
+              <Mark name="not-read" size={22} />
+              <span className="font-semibold">Cooled, and 12 hours since welding</span>
+              <span className="text-graphite">to come</span>
+            </p>
+          )}
         </div>
       </div>
       <Into slot="action">
-        <div className="grid gap-3 tablet:grid-cols-[minmax(0,1fr)_200px]">
-          <ActionPlate title={`Joint ${joint.joint.number} is ${madeUpWord(joint)}`} note={`then examine ${toExamineAfter(run.state.joints, joint)}`} onPress={finish} focusHint />
-          <div className="ground-dye hidden tablet:block">
-            <ShutPlate title="Seating load" note={`shut: ${nameJoints(waiting.map((one) => one.joint.number))}`} />
-          </div>
-        </div>
+        <ActionPlate title={`Joint ${joint.joint.number} is ${madeUpWord(joint)}`} note={`then examine ${toExamineAfter(run.state.joints, joint)}`} onPress={finish} focusHint />
       </Into>
     </>
   )

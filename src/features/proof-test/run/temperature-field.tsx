@@ -22,10 +22,10 @@ export function TemperatureField({ value, onChange, lengthUnit }: TemperatureFie
   const parsed = parseDecimal(value, { signed: true })
   const wrong = value.trim() !== '' && !parsed.ok ? parsed.message : null
   return (
-    <div className="mt-3">
-      <label htmlFor={id} className="block text-16">
-        <span className="font-medium">Temperature of the air</span>
-        <span className="ml-2 text-graphite">{unitLabel(temperatureUnit(lengthUnit))}, may be left empty</span>
+    <div className="mt-3 flex flex-wrap items-center gap-x-4">
+      <label htmlFor={id} className="min-w-0 flex-1 text-16 leading-[20px]">
+        <span className="block font-medium">Air, {unitLabel(temperatureUnit(lengthUnit))}</span>
+        <span className="block text-graphite">may be left empty</span>
       </label>
       <input
         id={id}
@@ -36,10 +36,10 @@ export function TemperatureField({ value, onChange, lengthUnit }: TemperatureFie
         aria-invalid={wrong !== null}
         aria-describedby={wrong ? `${id}-says` : undefined}
         onChange={(event) => onChange(event.target.value)}
-        className="mt-1 block h-14 w-28 rounded-field border border-rule bg-field px-[10px] text-26 font-medium text-ink"
+        className="block h-14 w-28 rounded-field border border-rule bg-field px-[10px] text-26 font-medium text-ink"
       />
       {wrong && (
-        <p id={`${id}-says`} className="mt-1 font-medium text-stop-ink">
+        <p id={`${id}-says`} className="mt-1 w-full font-medium text-stop-ink">
           {wrong}
         </p>
       )}

@@ -10,14 +10,15 @@ function heardOf(run: Run, opened: Opened): string {
   return last ? `heard ${clockTime(last.observedAt)}` : 'not heard yet'
 }
 
-export function titleCells(run: Run, opened: Opened): TitleCell[] {
+export function titleCells(run: Run, opened: Opened, wide: boolean): TitleCell[] {
   const { lead, witness } = opened.people
+  const several = opened.legs.length > 1
   const leg = (run.state.position?.leg ?? 0) + 1
   return [
-    { value: opened.press.name, note: opened.press.whatFor, strong: true },
+    { value: opened.press.name, note: wide ? opened.press.whatFor : undefined, strong: true },
     { value: opened.number },
-    { label: 'Leg', value: `${leg} of ${opened.legs.length}`, from: 'desktop' },
+    ...(several ? [{ label: 'Leg', value: `${leg} of ${opened.legs.length}`, from: 'desktop' as const }] : []),
     { label: 'Lead', value: shortName(lead.name), from: 'tablet' },
-    { label: 'Witness', value: shortName(witness.name), note: heardOf(run, opened), from: 'tablet' },
+    { label: 'Witness', value: shortName(witness.name), note: several || !wide ? undefined : heardOf(run, opened), from: 'tablet' },
   ]
 }

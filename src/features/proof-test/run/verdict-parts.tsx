@@ -10,10 +10,10 @@ import { BenchScroll } from './head-band'
 /** The softening of the step on a number line beside its limit, with the step before for comparison. */
 function SofteningScale({ stage, before }: { stage: StageEvaluation; before: StageEvaluation | null }): ReactElement | null {
   const criterion = stage.criteria.find((one) => one.id === 'softening')
-  if (!criterion || criterion.value === null || criterion.U === null || criterion.limit === null || criterion.verdict === 'not-read') return null
+  if (!criterion || criterion.value === null || criterion.U === null || criterion.limit === null || criterion.verdict === 'not-read' || criterion.value < 0) return null
   const { value, U, limit, verdict, label } = criterion
   const earlier = before?.criteria.find((one) => one.id === 'softening')
-  const beforeAt = earlier && earlier.value !== null ? { value: earlier.value * 100, label: `${earlier.label.replace(/^Softening, /, '').replace(' %', '')}: ${earlier.reading}` } : undefined
+  const beforeAt = earlier && earlier.value !== null && earlier.value >= 0 ? { value: earlier.value * 100, label: `${earlier.label.replace(/^Softening, /, '').replace(' %', '')}: ${earlier.reading}` } : undefined
   return (
     <Fit className="mt-2 h-[126px]" initial={{ width: 568, height: 126 }}>
       {({ width }) => (
@@ -22,7 +22,7 @@ function SofteningScale({ stage, before }: { stage: StageEvaluation; before: Sta
           unit="%"
           value={value * 100}
           uncertainty={U * 100}
-          text={`${Math.round(value * 100)} % ± ${Math.round(U * 100)}`.replace('-', '−')}
+          text={`${Math.round(value * 100)} % ± ${Math.round(U * 100)}`}
           limit={{ value: limit * 100, label: `limit ${Math.round(limit * 100)} %` }}
           verdict={verdict}
           before={beforeAt}
