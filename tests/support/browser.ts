@@ -1,3 +1,5 @@
+import { mkdirSync } from 'node:fs'
+import path from 'node:path'
 import { chromium } from 'playwright-core'
 import type { Browser, BrowserContext, BrowserContextOptions, Page } from 'playwright-core'
 
@@ -5,6 +7,8 @@ interface E2e {
   address: string
   browser: Browser
 }
+
+const PICTURES = '.artefacts/e2e'
 
 let open: E2e | undefined
 const contexts: BrowserContext[] = []
@@ -60,6 +64,14 @@ export async function newDevice(options: BrowserContextOptions = {}): Promise<Br
 
 export async function newPage(options: BrowserContextOptions = {}): Promise<Page> {
   return (await newDevice(options)).newPage()
+}
+
+/** A picture of every page that stands open, for whoever looks into a failure. */
+export async function photograph(name: string): Promise<void> {
+  mkdirSync(PICTURES, { recursive: true })
+  const pages = contexts.flatMap((context) => context.pages())
+  const file = name.replace(/[^a-z0-9]+/gi, '-').slice(0, 60)
+  await Promise.all(pages.map((page, index) => page.screenshot({ path: path.join(PICTURES, `${file}-${index + 1}.png`) })))
 }
 
 /** Closes what a test opened; whatever a page said on the console fails the test. */

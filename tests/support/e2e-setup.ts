@@ -2,7 +2,7 @@ import { mkdtempSync, rmSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import path from 'node:path'
 import { afterAll, afterEach, beforeAll, inject } from 'vitest'
-import { closeBrowser, closePages, openE2e } from './browser'
+import { closeBrowser, closePages, openE2e, photograph } from './browser'
 import { schemaFor } from './schema'
 import { startServer } from './server-process'
 import type { ServerProcess } from './server-process'
@@ -17,7 +17,10 @@ beforeAll(async () => {
   await openE2e(server.address)
 })
 
-afterEach(closePages)
+afterEach(async ({ task }) => {
+  if (task.result?.state === 'fail') await photograph(task.name)
+  await closePages()
+})
 
 afterAll(async () => {
   await closeBrowser()

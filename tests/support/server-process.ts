@@ -24,7 +24,16 @@ function ended(child: ChildProcess): Promise<number | null> {
 export async function startServer(environment: Record<string, string>): Promise<ServerProcess> {
   const child = spawn(process.execPath, ['--import', 'tsx', 'server/index.ts'], {
     cwd: projectRoot,
-    env: { ...process.env, NODE_ENV: 'production', BCRYPT_COST: '4', DATABASE_URL: '', PUBLIC_URL: '', HOST: '127.0.0.1', PORT: '0', ...environment },
+    env: {
+      ...process.env,
+      NODE_ENV: 'production',
+      BCRYPT_COST: '4',
+      DATABASE_URL: '',
+      PUBLIC_URL: '',
+      HOST: '127.0.0.1',
+      PORT: '0',
+      ...environment,
+    },
     stdio: ['ignore', 'pipe', 'pipe'],
   })
   let printed = ''
