@@ -2,12 +2,14 @@ import { useParams } from 'react-router-dom'
 import { SkeletonPage } from '../components/skeleton'
 import { useRecord } from '../features/records/api/get-ledger'
 import { RecordSheet } from '../features/records/components/record-sheet'
-import { signTurn } from '../features/records/sign-turn'
-import { useAdoptShop, useCan } from '../lib/here'
+import { ShutRecord } from '../features/records/components/shut-record'
+import { isShutToWitness, partOf, signTurn } from '../features/records/sign-turn'
+import { useAdoptShop, useCan, useUser } from '../lib/here'
 
 export function Component() {
   const { proofTestId = '' } = useParams()
   const can = useCan()
+  const user = useUser()
   const { record, error } = useRecord(proofTestId)
   const shopId = record?.opened.shop.id
   useAdoptShop(shopId)
@@ -15,5 +17,14 @@ export function Component() {
     if (error) throw error
     return <SkeletonPage />
   }
-  return <RecordSheet record={record} turn={signTurn(record, can)} mayExport={can('record:export', { shopId })} today={new Date()} />
+  if (isShutToWitness(record, user.id)) return <ShutRecord record={record} />
+  return (
+    <RecordSheet
+      record={record}
+      turn={signTurn(record, can)}
+      mayExport={can('record:export', { shopId })}
+      part={partOf(record, user.id)}
+      today={new Date()}
+    />
+  )
 }

@@ -26,3 +26,17 @@ export function signTurn(record: RecordView, can: Ask): SignTurn {
   }
   return { is: 'nobody' }
 }
+
+/** The part that a reader has in a test by its opening. */
+export function partOf(record: RecordView, userId: string): 'lead' | 'witness' | 'other' {
+  const { lead, witness } = record.opened.people
+  return userId === lead.id ? 'lead' : userId === witness.id ? 'witness' : 'other'
+}
+
+/**
+ * While a test is under way its witness reads the gauge without target, force or the lead's figures (DOMAIN 4):
+ * the record stays shut to them until nothing is left to read.
+ */
+export function isShutToWitness(record: RecordView, userId: string): boolean {
+  return record.standing === 'under way' && partOf(record, userId) === 'witness'
+}

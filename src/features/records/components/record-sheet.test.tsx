@@ -10,8 +10,9 @@ import { ids } from '../../../../tests/factories/test-press'
 import { createQueryClient } from '../../../lib/query-client'
 import { useRecord } from '../api/get-ledger'
 import { readRecord } from '../record-view'
-import { signTurn } from '../sign-turn'
+import { isShutToWitness, partOf, signTurn } from '../sign-turn'
 import { RecordSheet } from './record-sheet'
+import { ShutRecord } from './shut-record'
 
 function answerOf(recorded: RecordedTest): EntriesResponse {
   const last = recorded.entries.at(-1)
@@ -34,7 +35,9 @@ function Shown({ id, reader }: { id: string; reader: Reader }) {
   const { record } = useRecord(id)
   if (!record) return null
   const turn = signTurn(record, (action, subject) => can({ ...reader, shopId: ids.shop }, action, subject))
-  return <RecordSheet record={record} turn={turn} mayExport={reader.role !== 'crew'} today={new Date('2026-09-21T08:00:00Z')} />
+  if (isShutToWitness(record, reader.userId)) return <ShutRecord record={record} />
+  const part = partOf(record, reader.userId)
+  return <RecordSheet record={record} turn={turn} mayExport={reader.role !== 'crew'} part={part} today={new Date('2026-09-21T08:00:00Z')} />
 }
 
 /** Answers of the server in turn for the ledger; posts are kept and answered by `onPost`. */
@@ -160,6 +163,21 @@ describe('a record that needs a second look', () => {
     await show({ ...recorded, entries })
     expect(document.body).toHaveTextContent('A click at the left pin.')
     expect(document.body).toHaveTextContent('observed: against R12. It happened, so it stands.')
+  })
+})
+
+describe('the record of a test under way', () => {
+  test('is shut to its witness, who reads the gauge without the lead’s figures', async () => {
+    await show(recordedTest({ until: 'decided' }), witness)
+    expect(screen.getByRole('link', { name: 'Attend the test' })).toHaveAttribute('href', `/proof-tests/${ids.test}/attend`)
+    expect(document.body).not.toHaveTextContent(/\d psi|short ton|kN/)
+    expect(screen.queryByRole('link', { name: 'Download spreadsheet' })).toBeNull()
+  })
+
+  test('is open to the lead, with the way back to the run', async () => {
+    await show(recordedTest({ until: 'decided' }))
+    expect(screen.getByRole('region', { name: 'Result' })).toHaveTextContent('Under way. Nothing is concluded')
+    expect(screen.getByRole('link', { name: 'Open the run' })).toHaveAttribute('href', `/proof-tests/${ids.test}/run`)
   })
 })
 

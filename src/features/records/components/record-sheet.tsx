@@ -20,10 +20,12 @@ interface RecordSheetProps {
   record: RecordView
   turn: SignTurn
   mayExport: boolean
+  /** The part that the reader has in this test. */
+  part: 'lead' | 'witness' | 'other'
   today: Date
 }
 
-function Actions({ record, turn, mayExport }: RecordSheetProps) {
+function Actions({ record, turn, mayExport, part }: RecordSheetProps) {
   const file = `/api/proof-tests/${encodeURIComponent(record.id)}/record.xlsx`
   return (
     <nav aria-label="This record" className="flex flex-wrap items-center justify-between gap-3 py-3 print:hidden">
@@ -34,7 +36,7 @@ function Actions({ record, turn, mayExport }: RecordSheetProps) {
             Download spreadsheet
           </ButtonAnchor>
         )}
-        {(record.standing === 'under way' || record.standing === 'stopped') && (
+        {(record.standing === 'under way' || record.standing === 'stopped') && part === 'lead' && (
           <ButtonLink to={paths.runProofTest.href(record.id)} size="line">
             Open the run
           </ButtonLink>
