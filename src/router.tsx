@@ -21,6 +21,7 @@ const signedInScreens: RouteObject[] = [
   { path: paths.press.pattern, lazy: () => import('./routes/press') },
   { path: paths.editPress.pattern, lazy: () => import('./routes/press-edit') },
   { path: paths.proofTest.pattern, lazy: () => import('./routes/proof-test-record') },
+  { path: paths.planProofTest.pattern, lazy: () => import('./routes/plan-proof-test') },
   { path: paths.proofTests.pattern, lazy: () => import('./routes/proof-tests') },
   { path: paths.people.pattern, lazy: () => import('./routes/people') },
   { path: paths.settings.pattern, lazy: () => import('./routes/settings') },

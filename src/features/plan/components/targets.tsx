@@ -1,0 +1,96 @@
+import type { Opened } from '#shared/proof-test/entries'
+import { formatForce, groupDigits, unitLabel } from '#shared/units'
+import { Mark } from '../../../components/marks'
+import { Sheet } from '../../../components/plate'
+import { setPercent } from '../../../components/typeset'
+import { plannedStages, type PlannedStage } from '../preview'
+
+function holdWords(seconds: number): string {
+  return seconds % 60 === 0 && seconds >= 60 ? `${seconds / 60} min` : `${seconds} s`
+}
+
+const head = 'border-b border-hairline pt-4 pr-4 pb-1 text-left align-bottom font-condensed text-14 font-medium text-graphite last:pr-0'
+const cell = 'h-12 pr-4 last:pr-0'
+
+function StageRow({ stage, opened }: { stage: PlannedStage; opened: Opened }) {
+  const { target, holdSeconds, U } = stage
+  return (
+    <tr className="border-b border-hairline last:border-b-0">
+      <th scope="row" className={`${cell} text-left font-semibold whitespace-nowrap`}>
+        {target.percent}
+        {'\u202f'}%
+      </th>
+      <td className={cell}>
+        <span className="whitespace-nowrap">{formatForce(target.force, opened.forceUnit)}</span>
+        {opened.forceUnit !== 'kN' && <span className="block text-14 whitespace-nowrap text-graphite">{formatForce(target.force, 'kN')}</span>}
+      </td>
+      <td className={`${cell} whitespace-nowrap`}>{groupDigits(target.exactText)}</td>
+      <td className={`${cell} text-18 font-semibold whitespace-nowrap`}>{groupDigits(target.text)}</td>
+      <td className={`${cell} whitespace-nowrap`}>
+        {groupDigits(target.window.fromText)} to {groupDigits(target.window.toText)}
+      </td>
+      <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{U === null ? '—' : `± ${formatForce(U, opened.forceUnit)}`}</td>
+      <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{holdWords(holdSeconds)}</td>
+    </tr>
+  )
+}
+
+/** What to pump to at each stage: exact, rounded down to what can be read, and the readings that count as reached. */
+export function Targets({ opened }: { opened: Opened }) {
+  const stages = plannedStages(opened)
+  const [first] = stages
+  if (first === undefined) return null
+  const unit = unitLabel(first.target.unit, { plural: true })
+  const warnings = [...new Set(stages.flatMap((stage) => stage.warnings))]
+  return (
+    <>
+      <Sheet className="overflow-x-auto">
+        <table className="w-full border-collapse">
+          <caption className="sr-only">What to pump to at each stage</caption>
+          <thead>
+            <tr>
+              <th scope="col" className={head}>
+                Stage
+              </th>
+              <th scope="col" className={head}>
+                Load
+              </th>
+              <th scope="col" className={head}>
+                Exact, {unit}
+              </th>
+              <th scope="col" className={head}>
+                Pump to, {unit}
+              </th>
+              <th scope="col" className={head}>
+                Counts as reached
+              </th>
+              <th scope="col" className={`${head} max-tablet:hidden`}>
+                Known to
+              </th>
+              <th scope="col" className={`${head} max-tablet:hidden`}>
+                Held
+              </th>
+            </tr>
+          </thead>
+          <tbody>
+            {stages.map((stage) => (
+              <StageRow key={stage.target.percent} stage={stage} opened={opened} />
+            ))}
+          </tbody>
+        </table>
+      </Sheet>
+      {warnings.length > 0 && (
+        <ul className="mt-3 grid gap-1">
+          {warnings.map((warning) => (
+            <li key={warning} className="flex items-start gap-3">
+              <span className="mt-0.5">
+                <Mark name="undecided" size={20} />
+              </span>
+              {setPercent(warning)}
+            </li>
+          ))}
+        </ul>
+      )}
+    </>
+  )
+}

@@ -1,0 +1,127 @@
+import { gaugeCanTell, gaugeSuitability } from '#shared/hydraulics/gauge'
+import { typedWords } from '#shared/instruments/words'
+import type { FrozenInstrument } from '#shared/instruments/model'
+import { decideByRules, findingsOf, type Finding } from '#shared/ledger/rules'
+import { missingOf } from '#shared/press/may-it-be-used'
+import { loadPathOf } from '#shared/press/load-path'
+import type { PressState } from '#shared/press/state'
+import { emptyProofTest } from '#shared/proof-test/apply'
+import type { Mark, Opened } from '#shared/proof-test/entries'
+import { forceOf, leadInstrument, stageTarget, type StageTarget } from '#shared/proof-test/force'
+import { OPENING_RULES } from '#shared/proof-test/rules-before-load'
+import { toSI } from '#shared/units'
+import type { PlanRegisters } from './api/get-plan-registers'
+import { netOf, SOMEBODY_ELSE, type PlanDraft } from './draft'
+
+export interface Chosen {
+  draft: PlanDraft
+  registers: PlanRegisters
+  press: PressState
+  shop: { id: string; name: string; forceUnit: Opened['forceUnit']; pressureUnit: Opened['pressureUnit']; lengthUnit: Opened['lengthUnit']; walkDownHours: number }
+  lead: { id: string; name: string }
+}
+
+const UNNUMBERED = 'PT-0000'
+
+/** What opening this plan would freeze, as far as it is chosen; null while press, protocol or what reads the force is missing. */
+export function previewOpened({ draft, registers, press, shop, lead }: Chosen): Opened | null {
+  const protocol = registers.protocols.find((one) => one.id === draft.protocolId)
+  const forceInstrumentIds = draft.forceInstrumentIds.filter((id) => id !== '')
+  if (!press.description || !protocol || forceInstrumentIds.length === 0) return null
+  const points = draft.points.filter((point) => point.instrumentId !== '')
+  const ids = [...new Set([...forceInstrumentIds, ...points.map((point) => point.instrumentId)])]
+  const instruments = ids.flatMap((id): FrozenInstrument[] => {
+    const row = registers.instruments.find((one) => one.id === id)
+    return row ? [{ id, details: row.details, calibration: row.calibration }] : []
+  })
+  const nameOf = (id: string) => registers.people.find((person) => person.userId === id)?.name ?? ''
+  const stranger = draft.pumpHand.id === SOMEBODY_ELSE
+  return {
+    number: UNNUMBERED,
+    shop: { id: shop.id, name: shop.name },
+    pressId: press.id,
+    pressHeadSeq: Math.max(1, press.headSeq),
+    press: press.description,
+    joints: press.joints.filter((joint) => !joint.retired),
+    stoodStillDays: null,
+    instruments,
+    forceInstrumentIds,
+    points: points.map(({ reads, memberId, ...point }) => ({ ...point, risesWithLoad: reads === 'rises', memberId: memberId || null })),
+    net: netOf(draft),
+    protocol: { id: protocol.id, name: protocol.name, version: protocol.version, content: protocol.content },
+    legs: draft.legs,
+    people: {
+      lead: { ...lead, relation: '' },
+      pumpHand: { id: stranger ? null : draft.pumpHand.id, name: stranger ? draft.pumpHand.name : nameOf(draft.pumpHand.id), relation: '' },
+      witness: { id: draft.witness.id, name: nameOf(draft.witness.id), relation: draft.witness.relation },
+    },
+    forceUnit: shop.forceUnit,
+    pressureUnit: shop.pressureUnit,
+    lengthUnit: shop.lengthUnit,
+    notMeasured: [],
+    repeats: null,
+    walkDownHours: shop.walkDownHours,
+    instrumentOverride: draft.instrumentOverride.trim() || null,
+  }
+}
+
+/** The numbered rules that the server would refuse this plan by, asked here before it is sent. */
+export function wouldRefuse(testId: string, opened: Opened, mark: Mark): Finding[] {
+  const question = {
+    state: emptyProofTest(testId),
+    kind: 'opened',
+    payload: opened,
+    overrides: [],
+    authorId: opened.people.lead.id ?? '',
+    mark,
+  }
+  return findingsOf(decideByRules(OPENING_RULES, question, []))
+}
+
+/** What stands between this press and its first load, though a test may be opened with it: the walk-down asks for each. */
+export function beforeLoad(press: PressState): string[] {
+  const joints = press.joints.filter((joint) => !joint.retired)
+  const path = loadPathOf(press.description?.members ?? [], joints)
+  // Opening is refused by a gap already.
+  return missingOf(press).filter((sentence) => path.closed || sentence !== path.gap)
+}
+
+export interface PlannedStage {
+  target: StageTarget
+  holdSeconds: number
+  U: number | null
+  warnings: string[]
+}
+
+function warningsOf(opened: Opened, target: StageTarget, U: number | null): string[] {
+  const lead = leadInstrument(opened)
+  const sentences = target.sentence === null ? [] : [target.sentence]
+  if (lead?.details.kind === 'gauge') {
+    const { verdict, sentence } = gaugeSuitability({ fullScale: toSI(lead.details.fullScale), target: target.readable })
+    if (verdict === 'high-on-scale' || verdict === 'low-on-scale') sentences.push(`${target.percent} %: ${sentence}`)
+  }
+  const { stageLowerPercent, stageUpperPercent } = opened.protocol.content.limits
+  const distance = (target.force * (stageLowerPercent + stageUpperPercent)) / 100
+  if (U !== null && !gaugeCanTell({ U, distance })) {
+    sentences.push(`${target.percent} %: this gauge cannot tell whether the stage is reached. Its uncertainty is over half of the tolerance. Fit a finer one.`)
+  }
+  return sentences
+}
+
+/** Every stage with what to pump to, how surely it is known, and what to know about it. */
+export function plannedStages(opened: Opened): PlannedStage[] {
+  return opened.protocol.content.stages.flatMap(({ percent, holdSeconds }) => {
+    const target = stageTarget(opened, percent)
+    const lead = leadInstrument(opened)
+    if (!target || !lead || lead.details.kind === 'indicator') return []
+    const readings = opened.forceInstrumentIds.map((sourceId) => ({ sourceId, text: target.text, unit: lead.details.increment.unit }))
+    const U = forceOf(opened, readings)?.U ?? null
+    return [{ target, holdSeconds, U, warnings: warningsOf(opened, target, U) }]
+  })
+}
+
+/** "G-02, glycerine gauge, 15 000 psi". */
+export function instrumentLabel({ details }: FrozenInstrument): string {
+  const end = details.kind === 'indicator' ? details.range : details.fullScale
+  return [details.code, details.description, `${typedWords(end)} by ${typedWords(details.increment)}`].filter(Boolean).join(', ')
+}

@@ -1,0 +1,59 @@
+import { useEffect, useRef, useState } from 'react'
+import { useForm } from 'react-hook-form'
+import { v7 as newId } from 'uuid'
+import { openTestRequestSchema } from '#shared/api/proof-tests'
+import { dropDraft, keepDraft, readDraft } from '../../lib/drafts'
+import { draftResolver } from '../../lib/draft-resolver'
+import { bootId, deviceId, monotonicMs } from '../../lib/entry'
+import { newPlan, toRequest, type PlanDraft, type Stamp } from './draft'
+
+/** Goes up when the form's fields change, so that an older draft isn't poured into it. */
+const VERSION = 1
+const PAUSE = 300
+
+const stamp = (): Stamp => ({ deviceId: deviceId(), bootId, monotonicMs: monotonicMs(), observedAt: new Date().toISOString() })
+
+/** The plan's form: its draft outlives a reload. A press named by the address begins a plan for that press. */
+export function usePlanForm(shopId: string, askedPress: string, nameOf: (userId: string) => string) {
+  const name = `plan.${shopId}`
+  const [initial] = useState(() => {
+    const kept = readDraft<PlanDraft>(name, VERSION)
+    return kept && (askedPress === '' || kept.pressId === askedPress) ? kept : newPlan(newId, askedPress)
+  })
+  const form = useForm({
+    resolver: draftResolver(openTestRequestSchema, (draft: PlanDraft) => toRequest(draft, stamp(), nameOf)),
+    defaultValues: initial,
+  })
+  const { subscribe, getValues } = form
+  const done = useRef(false)
+  useEffect(() => {
+    let timer: ReturnType<typeof setTimeout> | undefined
+    const save = () => {
+      if (!done.current) keepDraft(name, VERSION, getValues())
+    }
+    const stop = subscribe({
+      formState: { values: true },
+      callback: () => {
+        clearTimeout(timer)
+        timer = setTimeout(save, PAUSE)
+      },
+    })
+    return () => {
+      stop()
+      if (timer !== undefined) {
+        clearTimeout(timer)
+        save()
+      }
+    }
+  }, [getValues, name, subscribe])
+  return {
+    form,
+    /** Nothing is kept from here on: the test is open. */
+    finish() {
+      done.current = true
+      dropDraft(name)
+    },
+  }
+}
+
+export type PlanForm = ReturnType<typeof usePlanForm>['form']
