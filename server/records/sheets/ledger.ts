@@ -51,5 +51,6 @@ export function ledgerSheet(workbook: Workbook, record: RecordOfTest): void {
     cellParts(record.stored[index]?.canonical ?? '').forEach((part, at) => put(sheet.getCell(row, columns.length + at), part))
   })
   // A text of thousands of signs on paper helps nobody: the hashes print, the texts stay in the file.
-  sheet.pageSetup.printArea = `A1:H${FIRST_ROW + record.entries.length - 1}`
+  // exceljs writes the dollar before the column only.
+  sheet.pageSetup.printArea = `A$1:H$${FIRST_ROW + record.entries.length - 1}`
 }
