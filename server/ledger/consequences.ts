@@ -4,18 +4,10 @@ import type { PressDraft } from '#shared/press/entries'
 import { PROOF_TEST_ACTS, type ProofTestDraft } from '#shared/proof-test/entries'
 import { evaluateTest } from '#shared/proof-test/evaluate'
 import { instrumentOf, leadInstrument } from '#shared/proof-test/force'
+import { monthsAfter } from '#shared/proof-test/record'
 import type { ProofTestState } from '#shared/proof-test/state'
 import { appendConsequence } from './press'
 import type { Writing } from './write'
-
-/** The day so many months later; the last of a shorter month, never the first of the next. */
-export function monthsLater(day: string, months: number): string {
-  const from = new Date(`${day}T00:00:00Z`)
-  const to = new Date(Date.UTC(from.getUTCFullYear(), from.getUTCMonth() + months + 1, 0))
-  const last = to.getUTCDate()
-  to.setUTCDate(Math.min(from.getUTCDate(), last))
-  return to.toISOString().slice(0, 10)
-}
 
 function clearanceOf(state: ProofTestState, clearedOn: string): PressDraft[] {
   const { opened } = state
@@ -42,7 +34,7 @@ function clearanceOf(state: ProofTestState, clearedOn: string): PressDraft[] {
         bedHoles: [...new Set(opened.legs.map((leg) => leg.bedHole))],
         ramPositions: [...new Set(opened.legs.map((leg) => leg.ramPosition))],
         tooling: opened.press.train.filter((part) => part.kind === 'tooling').map((part) => part.name),
-        until: monthsLater(clearedOn, opened.protocol.content.examinationMonths),
+        until: monthsAfter(clearedOn, opened.protocol.content.examinationMonths),
         clearedOn,
         clearedBy: opened.people.lead.name,
         ...test,

@@ -88,6 +88,6 @@ export class RunScreen {
   async witnessReads(name: string, gauge: string): Promise<void> {
     await this.press(`${name} has the tablet`)
     await this.page.getByLabel(new RegExp(`^Gauge as ${name} reads it`)).fill(gauge)
-    await this.press(/^Enter\s*my reading/)
+    await this.press(/^Enter,? my reading/)
   }
 }
