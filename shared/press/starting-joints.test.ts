@@ -36,11 +36,9 @@ describe.each(FRAME_KINDS)('the list a %s starts from', (kind) => {
     expect(joints.every((joint) => joint.makeUp === 'open')).toBe(true)
   })
 
-  it('places joints only where the drawing has a spot, each spot once', () => {
+  it('places every joint where the drawing has a spot', () => {
     const spots = jointPlaces[kind].map((spot) => spot.place)
-    const used = joints.flatMap((joint) => (joint.place === null ? [] : [joint.place]))
-    expect(used.filter((place) => !spots.includes(place))).toEqual([])
-    expect(new Set(used).size).toBe(used.length)
+    expect(joints.filter((joint) => joint.place === null || !spots.includes(joint.place))).toEqual([])
   })
 })
 

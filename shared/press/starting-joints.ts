@@ -14,7 +14,7 @@ const RAM_PARTS: readonly Part[] = [
   ['adaptor', 'tooling-adaptor', 'Adaptor'],
 ]
 const RAM_JOINTS: readonly Hold[] = [
-  ['Ram in its seat', 'bolt', 'ram', 'seat', null],
+  ['Ram in its seat', 'bolt', 'ram', 'seat', 'ram-seat'],
   ['Adaptor on ram rod', 'thread', 'adaptor', 'ram', 'ram-adaptor'],
 ]
 const BED_STIFFENER_PARTS: readonly Part[] = [
@@ -81,8 +81,8 @@ const FRAMES: Record<FrameKind, { parts: readonly Part[]; holds: readonly Hold[]
       ['Ram seat to head plate', 'weld', 'seat', 'head', 'ram-seat'],
       ...RAM_JOINTS,
       ...atUprights('Bed plate to front', 'bolt', 'bed', 'bed', 'post'),
-      ['Bed plate to back left post', 'bolt', 'bed', 'upright-back-left', null],
-      ['Bed plate to back right post', 'bolt', 'bed', 'upright-back-right', null],
+      ['Bed plate to back left post', 'bolt', 'bed', 'upright-back-left', 'bed-left'],
+      ['Bed plate to back right post', 'bolt', 'bed', 'upright-back-right', 'bed-right'],
     ],
   },
   'c-frame': {
