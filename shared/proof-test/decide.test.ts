@@ -189,6 +189,8 @@ describe('walk-down and set-up', () => {
   it('R13: a warm weld is not accepted', () => {
     const { state } = before('joint-examined')
     expect(ask(state, examined(state, 1, { cold: false })).rules).toEqual(['R13'])
+    // After load nobody has welded: the question is not asked again.
+    expect(ask(state, examined(state, 1, { cold: false, occasion: 'after load' })).outcome).toBe('allowed')
   })
 
   const loading = () => before('seated')

@@ -104,7 +104,7 @@ export const BEFORE_LOAD_RULES: readonly ProofTestRule[] = [
     ['joint-examined'],
     ({ payload }, state, _opened, { mark }) => {
       const joint = state.joints.find((candidate) => candidate.joint.id === payload.jointId)
-      if (!joint || joint.joint.kind !== 'weld' || payload.result === 'rejected') return null
+      if (!joint || joint.joint.kind !== 'weld' || payload.result === 'rejected' || payload.occasion === 'after load') return null
       const hours = joint.workedAt ? (Date.parse(mark.at) - Date.parse(joint.workedAt)) / HOUR : HOURS_AFTER_WELDING
       if (hours >= HOURS_AFTER_WELDING) return null
       return `Joint ${joint.joint.number} was welded ${Math.max(0, hours).toFixed(1)} hours ago. Cracks can open for 12 hours: wait, or write down why it is examined now.`
@@ -117,7 +117,8 @@ export const BEFORE_LOAD_RULES: readonly ProofTestRule[] = [
     ['joint-examined'],
     ({ payload }, state) => {
       const joint = state.joints.find((candidate) => candidate.joint.id === payload.jointId)
-      if (!joint || joint.joint.kind !== 'weld' || payload.result === 'rejected' || payload.cold) return null
+      if (!joint || joint.joint.kind !== 'weld' || payload.result === 'rejected' || payload.cold || payload.occasion === 'after load')
+        return null
       return `Joint ${joint.joint.number} is accepted only when it is cold enough to lay a bare hand on. Let it cool, then say so.`
     },
     { interlock: true },
