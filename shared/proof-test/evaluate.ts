@@ -54,6 +54,19 @@ function worst(criteria: readonly Criterion[], id: string, label: string): Crite
   return [{ ...rest.reduce((top, candidate) => (rank(candidate) > rank(top) ? candidate : top), first), label }]
 }
 
+/** How near every stage came to its target, as one line: "98.9 to 99.8 %" of what was asked. */
+function stagesReached(opened: Opened, all: readonly Criterion[]): Criterion[] {
+  const reached = all.filter((criterion) => criterion.id === 'stage-reached' && criterion.value !== null)
+  const [first] = worst(all, 'stage-reached', 'Stages reached')
+  if (!first || reached.length === 0) return []
+  const shares = reached.map((criterion) => (criterion.value ?? 0) * 100)
+  const [low, high] = [Math.min(...shares).toFixed(1), Math.max(...shares).toFixed(1)]
+  const { stageLowerPercent, stageUpperPercent } = opened.protocol.content.limits
+  const verdict = reached.some((criterion) => criterion.verdict === 'wait') ? 'wait' : 'within'
+  const reading = low === high ? `${low} %` : `${low} to ${high} %`
+  return [{ ...first, verdict, reading, limitText: `${100 - stageLowerPercent} to ${100 + stageUpperPercent} %` }]
+}
+
 function everyStage(climbs: readonly ClimbEvaluation[]): StageEvaluation[] {
   return climbs.flatMap((climb) => climb.stages)
 }
@@ -175,7 +188,7 @@ export function evaluateTest(state: ProofTestState): TestEvaluation {
     stages.filter((stage) => stage.at.climb === 0),
   )
   const criteria = [
-    ...worst(all, 'stage-reached', 'Stages reached'),
+    ...stagesReached(opened, all),
     ...worst(all, 'rating', 'Lowest rating in the train'),
     ...worst(all, 'prediction', 'Deflection as the line predicted'),
     ...worst(all, 'softening', 'Softening, worst step'),
