@@ -19,8 +19,8 @@ interface ReadingRowProps {
   focusedId: string | null
   onFocus: (id: string) => void
   onChange: (id: string, text: string) => void
-  /** Enter in a field: commits it; `last` when no field comes after. Focus then moves on by itself. */
-  onCommit?: (id: string, last: boolean) => void
+  /** Enter in a field: commits it; `last` when no field comes after. Focus then moves on by itself, unless this says false. */
+  onCommit?: (id: string, last: boolean) => boolean | void
   /** Shows under "Mark" before the moment was marked. */
   markNote?: string
   /** Too early to mark: the plate stays there and says so in its note. */
@@ -145,8 +145,8 @@ export function ReadingRow(props: ReadingRowProps): ReactElement {
     const field = fields[index]
     if (field === undefined) return
     const next = fields[index + 1]
-    props.onCommit?.(field.id, next === undefined)
-    if (next !== undefined) inputs.current.get(next.id)?.focus()
+    const taken = props.onCommit?.(field.id, next === undefined)
+    if (next !== undefined && taken !== false) inputs.current.get(next.id)?.focus()
   }
   const columns = { '--columns': Math.min(fields.length, 4) } as CSSProperties
   return (

@@ -47,12 +47,12 @@ export function useRow({ draftKey, sources, surprise, onEnter }: RowOptions) {
     set(next)
     if (next.mark) onEnter({ mark: next.mark, readings: readingsOf(sources, next), typedAgain: next.typedAgain }, next.temperature)
   }
-  /** Enter in a field: takes it, and goes on to the next one that is open; after the last, the row is entered. */
-  const commit = (id: string): void => {
+  /** Enter in a field: takes it and goes on to the next; after the last, the row is entered. False when it was not taken. */
+  const commit = (id: string): boolean => {
     const committed = commitField(latest.current, sources, id, surprise)
     if (!committed.ok) {
       set(committed.draft)
-      return
+      return false
     }
     const index = sources.findIndex((source) => source.id === id)
     const after = sources[index + 1]
@@ -62,6 +62,7 @@ export function useRow({ draftKey, sources, surprise, onEnter }: RowOptions) {
       if (open) set({ ...committed.draft, focused: open.id })
       else enterRow(committed.draft)
     }
+    return true
   }
   const { focused } = draft
   const position = sources.findIndex((source) => source.id === focused)

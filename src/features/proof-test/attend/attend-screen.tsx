@@ -29,7 +29,7 @@ function PausePart({ run }: { run: Run }): ReactElement {
   return (
     <div className="flex min-h-[76px] flex-col items-center justify-center rounded-key border-2 border-dashed border-faint-scribe text-center text-scribe">
       <span className="text-20 font-medium">{run.state.paused ? 'Paused' : 'Pause'}</span>
-      <span className="text-16 text-faint-scribe">{run.state.paused ? 'until the lead goes on' : 'once under load'}</span>
+      <span className="text-16 text-faint-scribe">{run.state.paused ? 'until the lead goes on' : run.state.loaded ? 'the load comes off' : 'once under load'}</span>
     </div>
   )
 }

@@ -3,6 +3,7 @@ import { nameJoints } from '#shared/press/joints'
 import { jointReady } from '#shared/proof-test/steps'
 import { storedEnergy } from '#shared/structure/stored-energy'
 import { QuietPlate, ShutPlate } from '../../../components/run/plates'
+import { useRunShape } from '../../../components/run/run-frame'
 import type { Run } from '../use-run'
 import { Into } from './slots'
 
@@ -39,6 +40,7 @@ interface RunAsideProps {
 
 /** Note and Pause, or what is stored in the frame. */
 export function RunAside({ run, onPanel, energy }: RunAsideProps): ReactElement {
+  const shape = useRunShape()
   if (energy && energyOf(run)) {
     return (
       <Into slot="aside">
@@ -51,9 +53,11 @@ export function RunAside({ run, onPanel, energy }: RunAsideProps): ReactElement 
   const mayPause = run.state.loaded !== null && run.state.paused === null && run.state.stopped === null
   return (
     <>
-      <Into slot="note">
-        <QuietPlate title="Note" note={mayPause ? 'noise, leak, readings so far' : 'noise, leak, movement'} onPress={() => onPanel('note')} />
-      </Into>
+      {!(shape === 'portrait' && shut.length > 0) && (
+        <Into slot="note">
+          <QuietPlate title="Note" note={mayPause ? 'noise, leak, readings so far' : 'noise, leak, movement'} onPress={() => onPanel('note')} />
+        </Into>
+      )}
       <Into slot="pause">
         {shut.length > 0 ? (
           <ShutPlate title="Seating load" note={`shut: ${nameJoints(shut)}`} />

@@ -3,7 +3,7 @@ import type { StageRow } from '#shared/proof-test/state'
 import { stageForce, stageTarget } from '#shared/proof-test/force'
 import { groupDigits } from '#shared/units'
 import { clockFigure } from '../../../components/run/hold-timer'
-import { VerdictTable } from '../../../components/run/verdict-table'
+import { SoFar } from './so-far'
 import { ActionPlate } from '../../../components/run/plates'
 import { Button } from '../../../components/button'
 import { readyAlarm } from '../../../lib/alarm'
@@ -120,7 +120,7 @@ export function HoldStep(props: StepProps<'hold'>): ReactElement {
         before={words}
         waiting={
           <div>
-            <VerdictTable caption={`What was read at ${step.percent} % so far`} rows={verdictRows(step.stage.criteria)} />
+            <SoFar rows={verdictRows(step.stage.criteria)} percent={step.percent} />
             <Button size="line" className="mt-3 min-h-14 desktop:min-h-14" onClick={() => change({ topUp: true })}>
               The pressure was topped up
             </Button>

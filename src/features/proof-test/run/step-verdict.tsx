@@ -131,7 +131,7 @@ export function DecideStep(props: StepProps<'decide'>): ReactElement {
   const next = nextPercent(opened, step.percent)
   const differ = stage.attempt.independent !== null && independentCriterion(run.state)?.verdict === 'beyond'
   const goOn = (): void => run.record(decided(stage, 'go-on'))
-  const held = `${step.percent} % was held inside every limit that was checked.`
+  const held = `${step.percent} % was held within every limit checked.`
   return (
     <>
       <Verdict

@@ -25,7 +25,7 @@ function SofteningScale({ stage, before }: { stage: StageEvaluation; before: Sta
           text={`${Math.round(value * 100)} % ± ${Math.round(U * 100)}`}
           limit={{ value: limit * 100, label: `limit ${Math.round(limit * 100)} %` }}
           verdict={verdict}
-          before={beforeAt}
+          before={width < 420 ? undefined : beforeAt}
           width={width}
         />
       )}
