@@ -1,4 +1,5 @@
 import type { ReactElement } from 'react'
+import { setPercent } from '../typeset'
 
 interface PlateProps {
   title: string
@@ -14,7 +15,7 @@ export function ActionPlate({ title, note, onPress, focusHint = false }: PlatePr
       onClick={onPress}
       className={`flex min-h-14 w-full touch-manipulation flex-col items-center justify-center rounded-key border-2 border-on-chalk bg-chalk px-4 py-2 text-center text-on-chalk tablet:min-h-28 ${focusHint ? 'focus-ring' : ''}`}
     >
-      <span className="text-20 font-semibold tablet:text-26 tablet:leading-[32px]">{title}</span>
+      <span className="text-20 font-semibold tablet:text-26 tablet:leading-[32px]">{setPercent(title)}</span>
       {note !== undefined && <span className="text-16 font-medium tablet:text-18 tablet:leading-[24px]">{note}</span>}
     </button>
   )
@@ -28,7 +29,7 @@ export function QuietPlate({ title, note, onPress }: PlateProps): ReactElement {
       onClick={onPress}
       className="flex h-full min-h-[76px] w-full touch-manipulation flex-col items-center justify-center rounded-key border-2 border-faint-scribe bg-transparent px-1 text-center text-scribe tablet:min-h-28"
     >
-      <span className="text-20 font-medium leading-[24px] tablet:text-22 tablet:leading-[28px]">{title}</span>
+      <span className="text-20 font-medium leading-[24px] tablet:text-22 tablet:leading-[28px]">{setPercent(title)}</span>
       {note !== undefined && (
         <span className="max-w-[132px] text-balance text-16 leading-[20px] text-faint-scribe">{note}</span>
       )}
@@ -40,7 +41,7 @@ export function QuietPlate({ title, note, onPress }: PlateProps): ReactElement {
 export function ShutPlate({ title, note }: { title: string; note: string }): ReactElement {
   return (
     <div className="flex min-h-[76px] w-full flex-col items-center justify-center rounded-key border-2 border-dashed border-faint-scribe px-2 text-center text-scribe tablet:min-h-28">
-      <span className="text-20 leading-[24px]">{title}</span>
+      <span className="text-20 leading-[24px]">{setPercent(title)}</span>
       <span className="text-16 leading-[21px] text-faint-scribe">{note}</span>
     </div>
   )

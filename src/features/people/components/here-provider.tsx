@@ -34,6 +34,11 @@ export function HereProvider({ children, staysWhenSignedOut = false }: HereProvi
   }, [adopt, shopId])
 
   const user = session.data?.user
+  const userId = user?.id
+  useEffect(() => {
+    // What an earlier page kept and could not send goes out from whichever screen comes next.
+    if (userId !== undefined && 'indexedDB' in window) void import('../../../lib/outbox').then(({ outbox }) => outbox.sendAs(userId))
+  }, [userId])
   const here = useMemo<Here | null>(
     () => (user && shops && shop ? { user, shops, shop, adopt } : null),
     [user, shops, shop, adopt],

@@ -30,6 +30,7 @@ export function StoppedReleaseStep({ run }: StepProps<'stopped-release'>): React
   return (
     <>
       <Into slot="over">
+        <h1 className="sr-only">Stopped under load</h1>
         <VerdictBanner
           decision="stop"
           title="Stop"

@@ -1,14 +1,12 @@
 import { useEffect, useRef, type ReactElement, type ReactNode } from 'react'
 import { snapshotsOf } from '#shared/proof-test/decide'
 import type { StageEvaluation } from '#shared/proof-test/evaluate-climb'
-import { elapsedBetween } from '#shared/proof-test/clock'
 import { Button } from '../../../components/button'
 import { ActionPlate } from '../../../components/run/plates'
 import { VerdictBanner } from '../../../components/run/verdict-banner'
 import { useDraft } from '../drafts'
 import { evidence, independentCriterion, nextPercent, verdictRows } from '../verdict-model'
-import { markNow, type Draft, type Run } from '../use-run'
-import { useElapsed } from '../use-elapsed'
+import type { Draft, Run } from '../use-run'
 import { HeadBand } from './head-band'
 import { IndependentParts } from './independent'
 import { Into } from './slots'
@@ -62,6 +60,7 @@ function Verdict({ run, stage, decision, title, instruction, caution, children }
   return (
     <>
       <Into slot="over">
+        <h1 className="sr-only">Stage at {stage.percent} %</h1>
         <VerdictBanner decision={decision} title={title} instruction={instruction} caution={caution} headingRef={heading} />
         <p aria-live="assertive" className="sr-only">
           {[title, instruction, ...evidence(stage)].join('. ')}
@@ -74,22 +73,14 @@ function Verdict({ run, stage, decision, title, instruction, caution, children }
   )
 }
 
-function useHoldOver(stage: StageEvaluation): boolean {
-  const start = stage.attempt.rows.filter((row) => row.occasion === 'hold start').at(-1)
-  const elapsed = useElapsed(start?.mark ?? null)
-  return start !== undefined && elapsed !== null && elapsedBetween(start.mark, markNow()).seconds >= stage.holdSeconds
-}
-
 /** Something lies outside: read again, then go on only with a reason; where the rules allow no reason, release. */
 export function WaitStep(props: StepProps<'wait'>): ReactElement {
   const { run, opened, step } = props
   const { stage } = step
   const [mode, setMode] = useMode(run, stage)
-  const holdOver = useHoldOver(stage)
   if (mode !== 'none' && mode !== 'witness') return <RowAgain {...props} occasion={mode} />
   const again = stage.attempt.rows.some((row) => row.occasion === 'again')
   const low = stage.criteria.some((one) => one.id === 'stage-reached' && one.verdict === 'wait' && (one.value ?? 1) < 1)
-  const needsEnd = again && stage.end === null
   const next = nextPercent(opened, step.percent)
   const goOn = decided(stage, 'go-on')
   const mayGoOn = run.decide(goOn).outcome !== 'refused'
@@ -100,7 +91,7 @@ export function WaitStep(props: StepProps<'wait'>): ReactElement {
   return (
     <>
       <Verdict run={run} stage={stage} decision="wait" title="Wait" instruction={again ? 'Go on only with a reason, or stop.' : 'Read the row again.'} caution="Keep the pressure, stay behind the shield.">
-        {(mayGoOn || low || needsEnd) && (
+        {(mayGoOn || low) && (
           <Button className="min-h-14 desktop:min-h-14" onClick={readAgain}>
             Read the row again
           </Button>
@@ -109,12 +100,10 @@ export function WaitStep(props: StepProps<'wait'>): ReactElement {
       <Into slot="action">
         {mayGoOn ? (
           <ActionPlate title={next === null ? 'Full load was held: go on with a reason' : `Go on to ${next} % with a reason`} note="the reason prints in the record" onPress={() => run.record(goOn)} />
-        ) : needsEnd && holdOver ? (
-          <ActionPlate title="Read the end of the hold" note="the hold is over" onPress={() => setMode('hold end')} />
         ) : low ? (
           <ActionPlate title="Pumped on: read a new row" note="the hold starts again from its mark" onPress={() => setMode('hold start')} />
         ) : (
-          <ActionPlate title="Wait: read the row again" note={needsEnd ? 'the hold is still running' : 'mark, then every value afresh'} onPress={readAgain} />
+          <ActionPlate title="Wait: read the row again" note="mark, then every value afresh" onPress={readAgain} />
         )}
       </Into>
     </>
@@ -131,7 +120,7 @@ export function DecideStep(props: StepProps<'decide'>): ReactElement {
   const next = nextPercent(opened, step.percent)
   const differ = stage.attempt.independent !== null && independentCriterion(run.state)?.verdict === 'beyond'
   const goOn = (): void => run.record(decided(stage, 'go-on'))
-  const held = `${step.percent} % was held within every limit checked.`
+  const held = `${step.percent} %: within every limit checked.`
   return (
     <>
       <Verdict
