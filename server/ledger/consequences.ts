@@ -31,6 +31,7 @@ function clearanceOf(state: ProofTestState, clearedOn: string): PressDraft[] {
         loadNewton: figures.load,
         gaugePressure: figures.gaugePressure,
         gaugeCode: gauge ? (instrumentOf(opened, gauge.id)?.details.code ?? '') : '',
+        instrumentIds: opened.instruments.map((instrument) => instrument.id),
         bedHoles: [...new Set(opened.legs.map((leg) => leg.bedHole))],
         ramPositions: [...new Set(opened.legs.map((leg) => leg.ramPosition))],
         tooling: opened.press.train.filter((part) => part.kind === 'tooling').map((part) => part.name),

@@ -1,6 +1,7 @@
 import { applyPress } from '#shared/press/apply'
 import { decidePress } from '#shared/press/decide'
-import { PRESS_ACTS, PRESS_CONSEQUENCES, PRESS_VERSION, type PressDraft } from '#shared/press/entries'
+import { QueryTypes } from 'sequelize'
+import { PRESS_ACTS, PRESS_CONSEQUENCES, PRESS_VERSION, type PressDraft, type PressPayload } from '#shared/press/entries'
 import type { PressState } from '#shared/press/state'
 import { findingsOf } from '#shared/ledger/rules'
 import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
@@ -52,6 +53,46 @@ export async function appendToPress(writing: Writing, { head, state }: LockedPre
     throw conflict(first.severity === 'reason' ? 'needs-reason' : 'refused', first.says, rules)
   }
   return keep(writing, head, state, draft, rules)
+}
+
+/** Entries that the server makes by itself carry this device. */
+export const SERVER_DEVICE = '00000000-0000-7000-8000-000000000001'
+
+/** Suspends the clearance of every press of the shop that rests on an instrument found out of tolerance (DOMAIN 3.2). */
+export async function recallInstrument(
+  writing: Writing,
+  shopId: string,
+  authorId: string,
+  recalled: PressPayload<'instrument-recalled'>,
+): Promise<void> {
+  const { database, transaction, now } = writing
+  const presses = await database.query<{ id: string }>("SELECT id FROM presses WHERE shop_id = ? AND status = 'cleared' ORDER BY id", {
+    replacements: [shopId],
+    type: QueryTypes.SELECT,
+    transaction,
+  })
+  for (const { id } of presses) {
+    const locked = await lockPress(writing, id)
+    const clearance = locked?.state.clearance
+    if (!locked || clearance?.is !== 'cleared' || !clearance.clearance.instrumentIds.includes(recalled.instrumentId)) continue
+    const cause = {
+      id: newId(),
+      ledgerId: id,
+      kind: 'instrument-recalled',
+      v: PRESS_VERSION,
+      payload: recalled,
+      authorId,
+      deviceId: SERVER_DEVICE,
+      deviceSeq: locked.head.headSeq + 1,
+      basedOnSeq: locked.head.headSeq,
+      observedAt: now.toISOString(),
+      bootId: SERVER_DEVICE,
+      monotonicMs: Math.round(performance.now()),
+      attachments: [],
+      overrides: [],
+    }
+    await keep(writing, locked.head, locked.state, cause, [])
+  }
 }
 
 /**

@@ -64,7 +64,7 @@ export function instrumentRoutes(context: AppContext): Router {
   router.post('/instruments/:instrumentId/calibrations', async (request, response) => {
     const answer = await on(request, async (work, id) => {
       const instrument = await lockInstrument(work, id)
-      await addCalibration(work, instrument, parseBody(request, calibrationSchemaFor[instrument.kind]))
+      await addCalibration(context.database, work, instrument, parseBody(request, calibrationSchemaFor[instrument.kind]))
     })
     response.status(201).json(answer)
   })

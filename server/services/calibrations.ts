@@ -1,8 +1,9 @@
-import type { Transaction } from 'sequelize'
+import type { Sequelize, Transaction } from 'sequelize'
 import { v7 as newId } from 'uuid'
 import { calibrationSchema } from '#shared/instruments/model'
 import type { Calibration as CalibrationBody } from '#shared/instruments/model'
 import type { Work } from '../context'
+import { recallInstrument } from '../ledger/press'
 import { Calibration, User } from '../models'
 import type { Instrument } from '../models'
 import { conflict, invalid } from '../problem'
@@ -66,8 +67,12 @@ export async function calibrationsOf(instrument: Pick<Instrument, 'id' | 'shopId
   }))
 }
 
-/** Takes the instrument under its row lock, so that two calibrations at once leave the later one in force. */
+/**
+ * Takes the instrument under its row lock, so that two calibrations at once leave the later one in force.
+ * One that found it out of tolerance suspends, in the same transaction, every clearance that rests on it.
+ */
 export async function addCalibration(
+  database: Sequelize,
   { transaction, actor, now }: Work,
   instrument: Instrument,
   calibration: CalibrationBody,
@@ -94,5 +99,12 @@ export async function addCalibration(
     { transaction },
   )
   const inForce = await calibrationsInForce(instrument.shopId, [instrument.id], transaction)
+  if (inForce.get(instrument.id)?.result === 'out of tolerance') {
+    await recallInstrument({ database, transaction, now }, instrument.shopId, actor.userId, {
+      instrumentId: instrument.id,
+      code: instrument.code,
+      calibratedOn,
+    })
+  }
   await instrument.update({ dueOn: inForce.get(instrument.id)?.dueOn ?? null }, { transaction })
 }

@@ -6,12 +6,10 @@ import { makeSeal } from '#shared/ledger/seal'
 import { PROOF_TEST_VERSION, type Opened } from '#shared/proof-test/entries'
 import { conflict, notFound } from '../problem'
 import { appendToTest, lockTest } from './test-entries'
+import { SERVER_DEVICE } from '../ledger/press'
 import { readEntry } from '../ledger/read'
 import type { SealKey } from '../ledger/seal-keys'
 import type { Writing } from '../ledger/write'
-
-/** Entries that the server makes for a person who signs carry this device; its count is the ledger's own. */
-const SERVER_DEVICE = '00000000-0000-7000-8000-000000000001'
 
 function payloadOf(
   request: SignatureRequest,

@@ -136,7 +136,11 @@ const handlers: Handlers = {
         : { is: 'suspended', clearance: lastClearance(state), why: `${payload.number} is under way.`, proofTestId: payload.proofTestId },
   }),
   'test-stopped': (state, payload, entry) => ({
-    ...withdraw(fallBack(state, payload.jointIds, `${payload.number} was stopped`), `${payload.number} was stopped. ${payload.why}`, entry.observedAt),
+    ...withdraw(
+      fallBack(state, payload.jointIds, `${payload.number} was stopped`),
+      `${payload.number} was stopped. ${payload.why}`,
+      entry.observedAt,
+    ),
     underTest: state.underTest && { ...state.underTest, stopped: true },
   }),
   'test-concluded': (state, payload, entry) => {
@@ -158,6 +162,12 @@ const handlers: Handlers = {
     },
   }),
   'test-ended': (state, payload, entry) => withdraw({ ...state, underTest: null }, `${payload.number}: ${payload.why}`, entry.observedAt),
+  'instrument-recalled': (state, payload) => {
+    const { clearance } = state
+    if (clearance.is !== 'cleared' || !clearance.clearance.instrumentIds.includes(payload.instrumentId)) return state
+    const why = `${payload.code} was found out of tolerance on ${payload.calibratedOn}, and the clearance rests on it.`
+    return { ...state, clearance: { is: 'suspended', clearance: clearance.clearance, why, proofTestId: clearance.clearance.proofTestId } }
+  },
   'clearance-given': (state, payload) => ({ ...state, underTest: null, clearance: { is: 'cleared', clearance: payload } }),
   withdrawn: (state, payload, entry) => withdraw(state, payload.why, entry.observedAt),
 }
@@ -191,6 +201,7 @@ const tell: Tellers = {
   }),
   'test-late-fact': (payload) => ({ text: `${payload.number}: ${payload.why}`, mark: 'stop', proofTestId: payload.proofTestId }),
   'test-ended': (payload) => ({ text: `${payload.number}: ${payload.why}`, mark: 'stop', proofTestId: payload.proofTestId }),
+  'instrument-recalled': (payload) => ({ text: `${payload.code} was found out of tolerance`, mark: 'stop', proofTestId: null }),
   'clearance-given': (payload) => ({
     text: `Cleared up to ${payload.load.text} ${unitLabel(payload.load.unit, { plural: true })}`,
     mark: 'within',

@@ -58,6 +58,7 @@ const clearance: PressDraft = {
     loadNewton: 104_088,
     gaugePressure: { text: '7650', unit: 'psi' },
     gaugeCode: 'G-02',
+    instrumentIds: [testId(5, 2)],
     bedHoles: ['4'],
     ramPositions: ['central'],
     tooling: [],
@@ -184,6 +185,16 @@ describe('what entries do to a press', () => {
     expect(numbers(knock)).toHaveLength(joints.length)
     const painted = applyPress(cleared, entry(cleared, { kind: 'changed', payload: { change: 'painted', jointIds: [], why: 'Grey.' } }))
     expect(numbers(painted)).toEqual([])
+  })
+
+  it('an instrument found out of tolerance suspends a clearance that rests on it, and no other', () => {
+    const recall = (instrumentId: string): PressDraft => ({
+      kind: 'instrument-recalled',
+      payload: { instrumentId, code: 'G-02', calibratedOn: '2026-10-01' },
+    })
+    const suspended = applyPress(cleared, entry(cleared, recall(testId(5, 2))))
+    expect(suspended.clearance).toMatchObject({ is: 'suspended', why: expect.stringContaining('G-02 was found out of tolerance') })
+    expect(applyPress(cleared, entry(cleared, recall(testId(5, 3)))).clearance.is).toBe('cleared')
   })
 
   it('a kind from the future is counted, not guessed', () => {

@@ -25,6 +25,8 @@ export const clearanceSchema = z.object({
   loadNewton: z.number().positive(),
   gaugePressure: typedPressureSchema.nullable(),
   gaugeCode: z.string(),
+  /** Every instrument the test rested on: one found out of tolerance suspends the clearance. */
+  instrumentIds: z.array(idSchema),
   bedHoles: z.array(z.string()),
   ramPositions: z.array(z.string()),
   tooling: z.array(z.string()),
@@ -64,6 +66,7 @@ export const PRESS_PAYLOADS = {
   'test-concluded': z.object({ ...testRef.shape, conclusion: z.enum(['accepted', 'rejected', 'abandoned']), jointIds: z.array(idSchema) }),
   'test-late-fact': z.object({ ...testRef.shape, why: z.string() }),
   'test-ended': z.object({ ...testRef.shape, why: z.string() }),
+  'instrument-recalled': z.object({ instrumentId: idSchema, code: z.string(), calibratedOn: day }),
   'clearance-given': clearanceSchema,
   withdrawn: z.object({ why }),
 } as const

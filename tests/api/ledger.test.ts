@@ -257,6 +257,30 @@ describe('a whole test over HTTP', () => {
   })
 })
 
+describe('a gauge found out of tolerance', () => {
+  it('suspends the clearance that rests on it, in the same transaction', async () => {
+    const run = await ApiRun.open()
+    await run.driveTo('sign')
+    await run.sign('lead').expect(201)
+    await run.refresh()
+    await run.sign('witness').expect(201)
+    const gaugeId = run.state.opened?.forceInstrumentIds[0] ?? ''
+    expect((await pressOf(run)).clearance.is).toBe('cleared')
+    const today = new Date().toISOString().slice(0, 10)
+    const found = {
+      calibratedOn: today,
+      dueOn: '2099-01-01',
+      certificate: 'C-9',
+      comparedWith: '',
+      result: 'out of tolerance',
+      uncertainty: null,
+    }
+    await run.staff.lead.client.post(`/api/instruments/${gaugeId}/calibrations`, found).expect(201)
+    expect((await pressOf(run)).clearance).toMatchObject({ is: 'suspended', why: expect.stringContaining('out of tolerance') })
+    expect(await projection('presses', run.pressId)).toMatchObject({ status: 'suspended' })
+  })
+})
+
 describe('the lists', () => {
   it('show what a rebuild from the ledgers would show', async () => {
     const run = await ApiRun.open()

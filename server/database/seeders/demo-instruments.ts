@@ -159,7 +159,7 @@ export async function enterCalibrations(desk: Desk, { main, people }: DemoShops,
       result,
       uncertainty,
     })
-    await addCalibration(work, await lockInstrument(work, ids[instrument]), calibration)
+    await addCalibration(desk.database, work, await lockInstrument(work, ids[instrument]), calibration)
   }
 }
 

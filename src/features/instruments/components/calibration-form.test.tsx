@@ -84,6 +84,6 @@ describe('the form of a calibration', { timeout: 20_000 }, () => {
     const { user } = show()
     expect(screen.queryByText(/Every clearance that rests on this instrument/)).toBeNull()
     await user.click(screen.getByRole('radio', { name: 'Out of tolerance' }))
-    expect(screen.getByText(/Every clearance that rests on this instrument is in doubt/)).toBeVisible()
+    expect(screen.getByText(/Every clearance that rests on this instrument is suspended at once/)).toBeVisible()
   })
 })

@@ -73,7 +73,7 @@ export function CalibrationForm({ details, send, sending, onLeave }: Calibration
         />
         {watch('result') === 'out of tolerance' && (
           <p className="border-2 border-stop-ink px-4 py-3 font-medium text-stop-ink tablet:col-span-2">
-            Every clearance that rests on this instrument is in doubt. Withdraw it on the press’s page and test again with one in date.
+            Every clearance that rests on this instrument is suspended at once. Test those presses again with one in date.
           </p>
         )}
         <ControlledQuantity

@@ -8,7 +8,7 @@ function sayWhatFollows({ calibration, retired }: InstrumentRow, blocks: boolean
   if (retired) return 'It can’t be chosen for a test. Its records stay.'
   if (calibration === null) return 'It blocks a new test. Have it compared with a better one and enter the certificate.'
   if (calibration.result === 'out of tolerance') {
-    return 'It blocks a new test, and every clearance that rests on it is in doubt. Withdraw it on the press’s page.'
+    return 'It blocks a new test, and suspended every clearance that rests on it.'
   }
   if (blocks) return 'It blocks a new test. Send it away, or take another one.'
   return soon ? 'It still may read a test. Send it away before the next one.' : 'It may read a test until that day.'
