@@ -54,6 +54,12 @@ describe('what a form sends', () => {
     expect(got[1]?.[0]?.id).not.toBe(got[0]?.[0]?.id)
   })
 
+  it('is sent once however often it is tapped before the answer is there', async () => {
+    const { got, post } = server(0)
+    await Promise.all([sendOnce('withdraw', [parts('Hose changed')], post), sendOnce('withdraw', [parts('Hose changed')], post)])
+    expect(got).toHaveLength(1)
+  })
+
   it('is another entry once the first was answered', async () => {
     const { got, post } = server(0)
     await sendOnce('withdraw', [parts('Hose changed')], post)

@@ -39,16 +39,25 @@ function refusalIn(entries: readonly EntryDraft[], answer: AppendResponse): Prob
   return first && new ProblemError(first.problem.status, first.problem)
 }
 
+const underWay = new Map<string, Promise<AppendResponse>>()
+
 /**
  * Sends entries that a form made, for ledgers that need the server at hand. What was sent and not answered is
  * kept under `slot`: the same thing sent again, even after a reload, is the same entries, so that the ledger
- * gets them once. Throws the refusal, when there is one.
+ * gets them once. A second tap while the first is under way waits for the same answer. Throws the refusal, when
+ * there is one.
  */
-export async function sendOnce(
-  slot: string,
-  parts: readonly EntryParts[],
-  post: (request: AppendRequest) => Promise<AppendResponse>,
-): Promise<AppendResponse> {
+export function sendOnce(slot: string, parts: readonly EntryParts[], post: Post): Promise<AppendResponse> {
+  const already = underWay.get(slot)
+  if (already) return already
+  const sending = send(slot, parts, post).finally(() => underWay.delete(slot))
+  underWay.set(slot, sending)
+  return sending
+}
+
+type Post = (request: AppendRequest) => Promise<AppendResponse>
+
+async function send(slot: string, parts: readonly EntryParts[], post: Post): Promise<AppendResponse> {
   const unanswered = read(slot)
   const entries = parts.map((part, index) => {
     const before = unanswered[index]

@@ -96,7 +96,7 @@ export function underWayWords(one: UnderWayData, userId: string, now: Date): Und
 
 const reasons = { overdue: 'overdue', 'being built': 'being built', 'not tested': 'never tested', suspended: 'suspended', withdrawn: 'withdrawn' } as const
 
-function useOf({ press, test }: TodayPress, today: string): Pick<PressUse, 'mark' | 'use' | 'note'> {
+function usability({ press, test }: TodayPress, today: string): Pick<PressUse, 'mark' | 'use' | 'note'> {
   if (test && test.status !== 'under way') {
     const missing = test.status === 'concluded' ? 'signature missing' : 'countersignature missing'
     return { mark: 'stop', use: 'do not use', note: missing }
@@ -118,7 +118,7 @@ function useOf({ press, test }: TodayPress, today: string): Pick<PressUse, 'mark
 
 export function pressWords(one: TodayPress, today: string): PressUse {
   const { press } = one
-  return { id: press.id, name: press.name, kind: press.whatFor, to: paths.press.href(press.id), ...useOf(one, today) }
+  return { id: press.id, name: press.name, kind: press.whatFor, to: paths.press.href(press.id), ...usability(one, today) }
 }
 
 const plural = { gauge: 'Gauges', 'load-cell': 'Load cells', indicator: 'Indicators' } as const

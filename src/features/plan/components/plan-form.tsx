@@ -1,4 +1,4 @@
-import { useEffect, useMemo } from 'react'
+import { useDeferredValue, useEffect, useMemo } from 'react'
 import { useWatch } from 'react-hook-form'
 import { v7 as newId } from 'uuid'
 import { Button } from '../../../components/button'
@@ -11,6 +11,7 @@ import { classNames } from '../../../lib/class-names'
 import { calendarDate } from '../../../lib/dates'
 import { bootId, monotonicMs } from '../../../lib/entry'
 import { useShop, useUser } from '../../../lib/here'
+import { useOneAtATime } from '../../../lib/use-one-at-a-time'
 import { useProblemFields } from '../../../lib/use-problem-fields'
 import { useTitle } from '../../../lib/use-title'
 import { usePlannedPress } from '../api/get-planned-press'
@@ -39,7 +40,9 @@ export function PlanForm({ registers, askedPress, onOpened }: PlanFormProps) {
   const { form, finish } = usePlanForm(shop.id, askedPress, nameOf)
   const open = useOpenTest(shop.id)
   const showProblem = useProblemFields(form)
-  const draft = useWatch({ control: form.control }) as PlanDraft
+  const taps = useOneAtATime()
+  // The fields answer first; targets, findings and the drawing follow when there is time.
+  const draft = useDeferredValue(useWatch({ control: form.control }) as PlanDraft)
   const planned = usePlannedPress(shop.id, draft.pressId)
   const press = planned.data?.state.id === draft.pressId ? planned.data.state : undefined
   const description = press?.description ?? null
@@ -54,15 +57,19 @@ export function PlanForm({ registers, askedPress, onOpened }: PlanFormProps) {
   const findings = opened ? wouldRefuse(draft.id, opened, { at: new Date().toISOString(), bootId, monotonicMs: monotonicMs() }) : []
   const taken = press?.underTest?.number ?? null
   const { errors, submitCount } = form.formState
-  const submit = form.handleSubmit((request) =>
+  const submit = form.handleSubmit((request) => {
+    if (!taps.begin()) return
     open.mutate(request, {
       onSuccess: ({ id }) => {
         finish()
         onOpened(id)
       },
-      onError: showProblem,
-    }),
-  )
+      onError: (error) => {
+        taps.end()
+        showProblem(error)
+      },
+    })
+  })
   const choosePress = () => {
     setValue('points', [])
     setValue('repeatsId', '')

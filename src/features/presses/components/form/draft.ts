@@ -1,4 +1,4 @@
-import { z } from 'zod'
+import type { z } from 'zod'
 import { PRESS_PAYLOADS } from '#shared/press/entries'
 import type { FrameKind, Joint, Member, PressDescription, Ram, TrainPart } from '#shared/press/model'
 import { ratedLoadRefusal } from '#shared/press/ratings'

@@ -7,6 +7,7 @@ import { Form, FormActions, FormError } from '../../../../components/form'
 import { FormStep, FormSteps, WholeRow } from '../../../../components/form-steps'
 import { PageHeading, PlateBesidePaper, inset } from '../../../../components/page'
 import { classNames } from '../../../../lib/class-names'
+import { useOneAtATime } from '../../../../lib/use-one-at-a-time'
 import { useProblemFields } from '../../../../lib/use-problem-fields'
 import { useTitle } from '../../../../lib/use-title'
 import { useAppendToPress } from '../../api/append-to-press'
@@ -35,6 +36,7 @@ export function EditPressForm({ state, description, units, onDone }: EditPressFo
   const [said, setSaid] = useState<string | undefined>()
   const append = useAppendToPress(state.id, state.headSeq, 'edit')
   const showProblem = useProblemFields(form)
+  const taps = useOneAtATime()
   const { errors, submitCount } = form.formState
   const wrong = submitCount > 0 ? sayHowMany(errors) : null
   const submit = form.handleSubmit(({ description: next, joints }) => {
@@ -42,12 +44,16 @@ export function EditPressForm({ state, description, units, onDone }: EditPressFo
     if (edits.length === 0) return setSaid('Nothing is different from what is written down.')
     if (why.trim().length < LEAST) return setSaid('Say why in a few words.')
     setSaid(undefined)
+    if (!taps.begin()) return
     append.mutate(edits, {
       onSuccess: () => {
         finish()
         onDone()
       },
-      onError: showProblem,
+      onError: (error) => {
+        taps.end()
+        showProblem(error)
+      },
     })
   })
   return (

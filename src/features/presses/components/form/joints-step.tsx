@@ -9,7 +9,7 @@ import { FormStep, WholeRow } from '../../../../components/form-steps'
 import { JointBalloon } from '../../../../components/marks'
 import { SelectField } from '../../../../components/select-field'
 import { jointChoices, makeUpChoices } from '../words'
-import { newJoint } from './draft'
+import { newJoint, type JointDraft } from './draft'
 import type { PressForm } from './use-press-form'
 
 /** What of a joint is asked once: how it is made, what it holds together, where it is drawn. */
@@ -55,8 +55,9 @@ type JointRowProps = { form: PressForm; index: number; onRemove: () => void; wro
 
 function JointRow({ form, index, onRemove, wrong }: JointRowProps) {
   const { control, register, formState } = form
-  const joint = useWatch({ control, name: `joints.${index}` })
-  const [asked, setAsked] = useState(joint?.name === '')
+  // Only what is drawn here: a letter typed into one joint's name draws no other row again.
+  const joint = useWatch({ control, name: `joints.${index}`, compute: (one: JointDraft | undefined) => one && { number: one.number, makeUp: one.makeUp } })
+  const [asked, setAsked] = useState(() => form.getValues(`joints.${index}.name`) === '')
   const errors = formState.errors.joints?.[index]
   if (!joint) return null
   const open = asked || wrong
@@ -92,14 +93,14 @@ function JointRow({ form, index, onRemove, wrong }: JointRowProps) {
 export function JointsStep({ form, number }: { form: PressForm; number: number }) {
   const { control, formState, getValues, register } = form
   const joints = useFieldArray({ control, name: 'joints', keyName: 'key' })
-  const makeUps = useWatch({ control, name: 'joints' }).map((joint) => joint.makeUp)
-  const unfinished = makeUps.filter((makeUp) => makeUp !== 'finished').length
+  const finished = useWatch({ control, name: 'joints', compute: (all: JointDraft[]) => all.filter((joint) => joint.makeUp === 'finished').length })
+  const count = joints.fields.length
   return (
     <FormStep
       number={number}
       title="Joints"
       note="A tack counts as no weld. Say of each what is so now: nothing loads before all of them are finished and examined."
-      aside={makeUps.length > 0 ? `${makeUps.length - unfinished} of ${makeUps.length} finished` : undefined}
+      aside={count > 0 ? `${finished} of ${count} finished` : undefined}
     >
       <WholeRow>
         <ul>

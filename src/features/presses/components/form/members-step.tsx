@@ -5,6 +5,7 @@ import { FieldMessage, TextField } from '../../../../components/field'
 import { FormStep, WholeRow } from '../../../../components/form-steps'
 import { SelectField } from '../../../../components/select-field'
 import { memberChoices } from '../words'
+import type { JointDraft } from './draft'
 import type { PressForm } from './use-press-form'
 
 /** The parts that the force passes through, from the ram round to the bed. */
@@ -13,8 +14,8 @@ export function MembersStep({ form, number }: { form: PressForm; number: number 
   const members = useFieldArray({ control, name: 'description.members', keyName: 'key' })
   const kind = useWatch({ control, name: 'description.kind' })
   const errors = formState.errors.description?.members
-  const joints = useWatch({ control, name: 'joints' })
-  const holds = (id: string) => joints.filter((joint) => joint.between.includes(id)).length
+  const held = useWatch({ control, name: 'joints', compute: (joints: JointDraft[]) => joints.map((joint) => joint.between) })
+  const holds = (id: string) => held.filter((between) => between.includes(id)).length
   return (
     <FormStep
       number={number}

@@ -5,6 +5,7 @@ import { FormSteps } from '../../../../components/form-steps'
 import { PageHeading, PlateBesidePaper, inset } from '../../../../components/page'
 import { classNames } from '../../../../lib/class-names'
 import { ProblemError } from '../../../../lib/problem'
+import { useOneAtATime } from '../../../../lib/use-one-at-a-time'
 import { useProblemFields } from '../../../../lib/use-problem-fields'
 import { useTitle } from '../../../../lib/use-title'
 import { useRegisterPress } from '../../api/register-press'
@@ -27,9 +28,11 @@ export function NewPressForm({ shopId, units, onEntered }: NewPressFormProps) {
   const { form, restored, finish, beginAnew, chooseKind } = usePressForm(`press.${shopId}`, () => newPress(newId, units))
   const register = useRegisterPress(shopId)
   const showProblem = useProblemFields(form)
+  const taps = useOneAtATime()
   const { errors, submitCount } = form.formState
   const wrong = submitCount > 0 ? sayHowMany(errors) : null
   const submit = form.handleSubmit((payload) => {
+    if (!taps.begin()) return
     const pressId = form.getValues('pressId')
     register.mutate(
       { pressId, payload },
@@ -39,7 +42,11 @@ export function NewPressForm({ shopId, units, onEntered }: NewPressFormProps) {
           onEntered(pressId)
         },
         // What was sent before got through after all, with what was typed then: it is changed on its own page.
-        onError: (error) => (error instanceof ProblemError && error.code === 'id-reused' ? onEntered(pressId) : showProblem(error)),
+        onError: (error) => {
+          taps.end()
+          if (error instanceof ProblemError && error.code === 'id-reused') onEntered(pressId)
+          else showProblem(error)
+        },
       },
     )
   })

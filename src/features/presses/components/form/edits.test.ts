@@ -1,0 +1,83 @@
+import { describe, expect, it } from 'vitest'
+import { foldPress } from '#shared/press/apply'
+import type { PressDraft } from '#shared/press/entries'
+import { openedPayload } from '../../../../../tests/factories/test-press'
+import { pressFormSchema, toPayload } from './draft'
+import { draftOfPress, editsOf } from './edits'
+
+const { press: description, joints } = openedPayload()
+const ID = '01990000-0000-7000-8000-000000000001'
+const units = { length: 'mm', pressure: 'psi' } as const
+
+const registered = {
+  id: ID,
+  ledgerId: ID,
+  kind: 'registered',
+  v: 1,
+  payload: { description, joints, lastWorkedOn: null },
+  authorId: ID,
+  deviceId: ID,
+  deviceSeq: 1,
+  basedOnSeq: 0,
+  observedAt: '2026-09-01T08:00:00.000Z',
+  bootId: ID,
+  monotonicMs: 0,
+  attachments: [],
+  overrides: [],
+  seq: 1,
+  receivedAt: '2026-09-01T08:00:00.000Z',
+  irregular: [],
+  prevHash: '0'.repeat(64),
+  hash: '1'.repeat(64),
+}
+const state = foldPress(ID, [registered])
+
+/** What the form, filled with the press and then changed, would have written down. */
+function edit(change: (draft: ReturnType<typeof draftOfPress>) => void): PressDraft[] {
+  const draft = draftOfPress(state, description, units)
+  change(draft)
+  const now = pressFormSchema.parse(toPayload(draft))
+  return editsOf(state, now, 'It was measured again.')
+}
+
+describe('changing what is written down about a press', () => {
+  it('writes nothing when nothing was changed', () => {
+    expect(edit(() => undefined)).toEqual([])
+  })
+
+  it('writes the description when a measure, a rating or a member is another', () => {
+    const edits = edit((draft) => {
+      draft.description.rams = draft.description.rams.map((ram) => ({ ...ram, bore: { text: '50.8', unit: 'mm' } }))
+    })
+    expect(edits).toMatchObject([{ kind: 'described', payload: { description: { rams: [{ bore: { text: '50.8' } }] }, why: 'It was measured again.' } }])
+  })
+
+  it('writes one entry for each joint that was added, changed or taken out, in an order that never leaves a member unknown', () => {
+    const edits = edit((draft) => {
+      draft.description.members.push({ id: '01990000-0000-7000-8000-0000000000aa', kind: 'stiffener', name: 'Gusset' })
+      const [first, second] = draft.joints
+      if (!first || !second) throw new Error('The press has joints.')
+      draft.joints = draft.joints.slice(1)
+      second.detail = 'fillet 10 mm'
+      draft.joints.push({ ...second, id: '01990000-0000-7000-8000-0000000000bb', number: 9, between: [second.between[0], '01990000-0000-7000-8000-0000000000aa'] })
+    })
+    expect(edits.map((one) => one.kind)).toEqual(['joint-retired', 'described', 'joint-described', 'joint-added'])
+    expect(edits[0]).toMatchObject({ payload: { jointId: joints[0]?.id } })
+    expect(edits[2]).toMatchObject({ payload: { joint: { id: joints[1]?.id, detail: 'fillet 10 mm' } } })
+  })
+
+  it('refuses a rated load above the lowest rating, at its field', () => {
+    const draft = draftOfPress(state, description, units)
+    draft.description.ratedLoad = { text: '16', unit: 'short-ton' }
+    const parsed = pressFormSchema.safeParse(toPayload(draft))
+    expect(parsed.error?.issues).toMatchObject([{ path: ['description', 'ratedLoad', 'text'], message: expect.stringContaining('Rate the press no higher') }])
+  })
+
+  it('refuses two joints of one number', () => {
+    const draft = draftOfPress(state, description, units)
+    const [first, second] = draft.joints
+    if (!first || !second) throw new Error('The press has joints.')
+    second.number = first.number
+    expect(pressFormSchema.safeParse(toPayload(draft)).error?.issues).toMatchObject([{ path: ['joints', 1, 'number'] }])
+  })
+})
