@@ -137,6 +137,11 @@ describe('a test under way', () => {
     expect(short).toBe('Press 1, at 50\u202f% for 1 min')
   })
 
+  it('names the press once, whether or not its test keeps what it is for', () => {
+    const { press: title, short } = underWayWords({ ...one, test: { ...one.test, pressName: 'Press 1, forming press' } }, id(9), NOW)
+    expect([title, short]).toEqual(['Press 1, forming press', 'Press 1, at 50\u202f% for 1 min'])
+  })
+
   it('leads the lead to the run, the witness to the view of a witness, and others to the record', () => {
     expect(underWayWords(one, id(7), NOW).action.to).toMatch(/\/run$/)
     expect(underWayWords(one, id(8), NOW).action.to).toMatch(/\/attend$/)

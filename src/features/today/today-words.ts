@@ -64,13 +64,21 @@ function ladder({ test, climb }: UnderWayData): LadderStage[] {
   return [datum, ...rungs]
 }
 
+/** "Press 1": a test keeps the press's name with what it is for, as they were when it opened. */
+function nameOnly({ test, whatFor }: UnderWayData): string {
+  const tail = `, ${whatFor}`
+  return whatFor !== '' && test.pressName.endsWith(tail) ? test.pressName.slice(0, -tail.length) : test.pressName
+}
+
 /** What the title says on one line, for the phone. */
-function inShort({ test, climb }: UnderWayData, now: Date): string {
+function inShort(one: UnderWayData, now: Date): string {
+  const { climb } = one
+  const name = nameOnly(one)
   const live = climb.rungs.find((rung) => rung.state === 'now' || rung.state === 'waiting' || rung.state === 'stopped')
-  if (live === undefined) return climb.loaded ? `${test.pressName}, under load` : `${test.pressName}, not loaded`
-  if (live.state === 'stopped') return `${test.pressName}, stopped at ${live.percent}\u202f%`
+  if (live === undefined) return climb.loaded ? `${name}, under load` : `${name}, not loaded`
+  if (live.state === 'stopped') return `${name}, stopped at ${live.percent}\u202f%`
   const since = minutesSince(live.at, now)
-  return `${test.pressName}, at ${live.percent}\u202f%${since === '' ? '' : ` for ${since}`}`
+  return `${name}, at ${live.percent}\u202f%${since === '' ? '' : ` for ${since}`}`
 }
 
 /** A test under way, as its plate shows it to this person: the lead goes on, the witness attends, others look. */
@@ -84,7 +92,7 @@ export function underWayWords(one: UnderWayData, userId: string, now: Date): Und
         : { label: 'Watch the test', to: paths.proofTest.href(test.id) }
   return {
     id: test.id,
-    press: [test.pressName, whatFor].filter(Boolean).join(', '),
+    press: [nameOnly(one), whatFor].filter(Boolean).join(', '),
     short: inShort(one, now),
     test: `${test.protocolName}, ${test.number}`,
     people: `${test.leadName} leads, ${test.witnessName} witnesses`,

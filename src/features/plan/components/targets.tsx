@@ -9,11 +9,12 @@ function holdWords(seconds: number): string {
   return seconds % 60 === 0 && seconds >= 60 ? `${seconds / 60} min` : `${seconds} s`
 }
 
-const head = 'border-b border-hairline pt-4 pr-4 pb-1 text-left align-bottom font-condensed text-14 font-medium text-graphite last:pr-0'
-const cell = 'h-12 pr-4 last:pr-0'
+const head = 'border-b border-hairline pt-4 pr-2 pb-1 tablet:pr-4 text-left align-bottom font-condensed text-14 font-medium text-graphite last:pr-0'
+const cell = 'h-12 pr-2 last:pr-0 tablet:pr-4'
 
 function StageRow({ stage, opened }: { stage: PlannedStage; opened: Opened }) {
   const { target, holdSeconds, U } = stage
+  const window = `${groupDigits(target.window.fromText)} to ${groupDigits(target.window.toText)}`
   return (
     <tr className="border-b border-hairline last:border-b-0">
       <th scope="row" className={`${cell} text-left font-semibold whitespace-nowrap`}>
@@ -25,10 +26,11 @@ function StageRow({ stage, opened }: { stage: PlannedStage; opened: Opened }) {
         {opened.forceUnit !== 'kN' && <span className="block text-14 whitespace-nowrap text-graphite">{formatForce(target.force, 'kN')}</span>}
       </td>
       <td className={`${cell} whitespace-nowrap`}>{groupDigits(target.exactText)}</td>
-      <td className={`${cell} text-18 font-semibold whitespace-nowrap`}>{groupDigits(target.text)}</td>
       <td className={`${cell} whitespace-nowrap`}>
-        {groupDigits(target.window.fromText)} to {groupDigits(target.window.toText)}
+        <span className="text-18 font-semibold">{groupDigits(target.text)}</span>
+        <span className="block text-14 text-graphite tablet:hidden">{window}</span>
       </td>
+      <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{window}</td>
       <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{U === null ? '—' : `± ${formatForce(U, opened.forceUnit)}`}</td>
       <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{holdWords(holdSeconds)}</td>
     </tr>
@@ -44,7 +46,7 @@ export function Targets({ opened }: { opened: Opened }) {
   const warnings = [...new Set(stages.flatMap((stage) => stage.warnings))]
   return (
     <>
-      <Sheet className="overflow-x-auto">
+      <Sheet>
         <table className="w-full border-collapse">
           <caption className="sr-only">What to pump to at each stage</caption>
           <thead>
@@ -61,7 +63,7 @@ export function Targets({ opened }: { opened: Opened }) {
               <th scope="col" className={head}>
                 Pump to, {unit}
               </th>
-              <th scope="col" className={head}>
+              <th scope="col" className={`${head} max-tablet:hidden`}>
                 Counts as reached
               </th>
               <th scope="col" className={`${head} max-tablet:hidden`}>

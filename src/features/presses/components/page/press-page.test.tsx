@@ -20,6 +20,7 @@ const clearance = (until: string): Clearance => ({
   loadNewton: 104_088,
   gaugePressure: { text: '7650', unit: 'psi' },
   gaugeCode: 'G-02',
+  instrumentIds: [],
   bedHoles: ['4'],
   ramPositions: ['central'],
   tooling: [],
