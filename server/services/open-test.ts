@@ -5,6 +5,7 @@ import type { EntryDraft } from '#shared/ledger/envelope'
 import { openedSchema, PROOF_TEST_VERSION, type Opened } from '#shared/proof-test/entries'
 import type { PressState } from '#shared/press/state'
 import { forceUnitSchema, lengthUnitSchema, pressureUnitSchema } from '#shared/units'
+import { withAboveRating } from '#shared/proof-test/protocol'
 import type { Work } from '../context'
 import { Membership, ProofTest, Shop, User } from '../models'
 import { conflict, invalid, notFound } from '../problem'
@@ -38,6 +39,15 @@ async function nextNumber({ transaction, actor }: Work): Promise<string> {
   await Shop.findByPk(actor.shopId, { attributes: ['id'], transaction, lock: transaction.LOCK.UPDATE })
   const last = (await ProofTest.max('numberIndex', { where: { shopId: actor.shopId }, transaction })) as number | null
   return `PT-${String((last ?? 0) + 1).padStart(4, '0')}`
+}
+
+/** The protocol with the load above rating that the lead entered for this test, where it asks for one. */
+async function protocolOf(work: Work, { protocolId, aboveRating }: OpenTestRequest): Promise<Opened['protocol']> {
+  const protocol = await protocolForTest(work, protocolId)
+  if (protocol.content.aboveRating && !aboveRating) {
+    throw invalid({ 'aboveRating.percent': 'This protocol goes above the rated load. Enter how far, and the rule that asks for it.' })
+  }
+  return { ...protocol, content: withAboveRating(protocol.content, aboveRating ?? null) }
 }
 
 async function repeated({ transaction, actor }: Work, request: OpenTestRequest): Promise<Opened['repeats']> {
@@ -92,7 +102,7 @@ async function composeOpened(work: Work, request: OpenTestRequest, press: PressS
     forceInstrumentIds: request.forceInstrumentIds,
     points: request.points,
     net: request.net,
-    protocol: await protocolForTest(work, request.protocolId),
+    protocol: await protocolOf(work, request),
     legs: request.legs,
     people: {
       lead: { id: actor.userId, name: lead.name, relation: actor.role === 'owner' ? 'owner of the shop' : 'lead of the shop' },

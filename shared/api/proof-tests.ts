@@ -71,6 +71,13 @@ export const openTestRequestSchema = z.object({
   legs: z.array(legSetupSchema).min(1).max(6),
   pumpHand: z.object({ id: idSchema.nullable(), name: z.string().trim().min(1, 'Name who works the pump.').max(80) }),
   witness: z.object({ id: idSchema, relation: z.string().trim().min(2, 'Say how the witness stands to the shop.').max(80) }),
+  /** Asked where the protocol goes above the rated load: how far, and by which rule. */
+  aboveRating: z
+    .object({
+      percent: z.number('Enter a percentage.').gt(100, 'Above the rated load means more than 100 %.').max(150, 'At most 150 %.'),
+      rule: z.string().trim().min(3, 'Name the rule that asks for it.').max(200, 'Keep it to 200 characters.'),
+    })
+    .nullish(),
   repeatsId: idSchema.nullable(),
   instrumentOverride: z.string().trim().min(3, 'Say why in a few words.').max(500).nullable(),
 })

@@ -43,11 +43,14 @@ function climbFor(opened: Opened, climb: number): ClimbState {
     datum: [],
     released: null,
     set: [],
-    stages: stages.map((stage): StageState => ({
-      percent: stage.percent,
-      holdSeconds: climb === 0 ? stage.holdSeconds : repeatHoldSeconds,
-      attempts: [],
-    })),
+    // A stage above rating belongs to the second climb alone, from the datum after full load, with its whole hold.
+    stages: stages
+      .filter((stage) => climb > 0 || stage.percent <= 100)
+      .map((stage): StageState => ({
+        percent: stage.percent,
+        holdSeconds: climb === 0 || stage.percent > 100 ? stage.holdSeconds : repeatHoldSeconds,
+        attempts: [],
+      })),
   }
 }
 

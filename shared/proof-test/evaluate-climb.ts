@@ -177,7 +177,8 @@ function evaluateSet(
     const value = Math.abs(figure.deflection)
     const seen = setIsResolved({ set: value, U: figure.U })
     if (leads && seen) visible = true
-    const again = climbIndex > 0
+    // After a proof climb the frame is judged by the limits again; after a repeat of the same load nothing may be left.
+    const again = climbIndex > 0 && !climb.stages.some((stage) => stage.percent > 100)
     const verdict = again ? (seen ? 'beyond' : 'within') : judge({ value, U: figure.U, limit: { max: most }, rule: decisionRule })
     return {
       id: leads ? 'set' : `set-${figure.id}`,

@@ -5,6 +5,7 @@ import { decimalsOf, FORCE_DECIMALS, toSI, toUnit, type ForceUnit, type Pressure
 import { evaluateClimb, type ClimbEvaluation, type Criterion, type StageEvaluation } from './evaluate-climb'
 import type { Opened } from './entries'
 import { leadInstrument, stageForce } from './force'
+import { witnessReads } from './protocol'
 import type { ProofTestState } from './state'
 
 /** Version of the arithmetic; a record shows the figures of the version it was concluded with. */
@@ -185,7 +186,7 @@ export function evaluateTest(state: ProofTestState): TestEvaluation {
   const sets = climbs.flatMap((climb) => climb.set?.criteria ?? [])
   const independent = independentReadings(
     state,
-    stages.filter((stage) => stage.at.climb === 0),
+    stages.filter((stage) => witnessReads(stage.percent, stage.at.climb)),
   )
   const criteria = [
     ...stagesReached(opened, all),
@@ -225,9 +226,9 @@ function standsAgainst(
     const label = opened.legs[index]?.label ?? `Leg ${index + 1}`
     const wanted = repeatClimbWanted(opened, climbs) ? 2 : 1
     for (let climb = 0; climb < wanted; climb += 1) {
-      const what = climb === 0 ? label : `${label}, repeat climb`
+      const what = climb === 0 ? label : `${label}, second climb`
       const evaluated = climbs[climb]
-      const open = opened.protocol.content.stages.find((_stage, stageIndex) => {
+      const open = state.legs[index]?.climbs[climb]?.stages.find((_stage, stageIndex) => {
         const stage = evaluated?.stages.find((candidate) => candidate.at.stage === stageIndex)
         return stage?.attempt.decided?.decision !== 'go-on' || stage.suggestion === 'stop'
       })

@@ -48,6 +48,8 @@ export const protocolContentSchema = z
       .int('Enter whole months.')
       .min(1, 'One month at least.')
       .max(24, '24 months at most.'),
+    /** A last stage above the rated load, taken in a second climb. The percentage has no default: the lead enters it with its rule. */
+    aboveRating: z.object({ holdSeconds: seconds }).optional(),
     aboveRatingRule: z.string().trim().max(200, 'Keep it to 200 characters.'),
   })
   .superRefine((content, context) => {
@@ -69,6 +71,19 @@ export const protocolContentSchema = z
       context.addIssue({ code: 'custom', path: ['aboveRatingRule'], message: 'Name the rule that asks for a load above rating.' })
     }
   })
+
+/** Whether the witness reads the gauge at this stage: at full load, and again at a load above rating. */
+export function witnessReads(percent: number, climb: number): boolean {
+  return percent > 100 || (percent >= 100 && climb === 0)
+}
+
+/** The protocol with the percentage above rating that the lead entered for one test, and the rule it comes from. */
+export function withAboveRating(content: ProtocolContent, above: { percent: number; rule: string } | null): ProtocolContent {
+  const { aboveRating, ...rest } = content
+  if (!aboveRating || !above) return rest
+  const stages = [...content.stages, { percent: above.percent, holdSeconds: aboveRating.holdSeconds }]
+  return { ...rest, stages, repeatClimb: 'always', aboveRatingRule: above.rule }
+}
 
 export type ProtocolContent = z.infer<typeof protocolContentSchema>
 export type ProtocolLeg = z.infer<typeof protocolLegSchema>
@@ -117,7 +132,8 @@ export const FIRST_LOAD_BY_QUARTERS: ProtocolContent = {
  * The protocols every shop starts with. Holds and limits: common practice, from memory, no source.
  * Off-centre follows the description of ASME ASP-2010 3-4.1.1 (100 % at the ram's far left and far right,
  * held one minute, at most 3.18 mm permanent increase of the opening). Proof above rating follows 3-4.1.3
- * but has no percentage of its own: a shop writes one with the rule it comes from.
+ * (lowest and highest bed position, datum after a load of up to 100 %, held ten minutes): its percentage has
+ * no default, the lead enters it for each test with the rule it comes from.
  */
 export const SHIPPED_PROTOCOLS: readonly { name: string; content: ProtocolContent }[] = [
   {
@@ -136,6 +152,21 @@ export const SHIPPED_PROTOCOLS: readonly { name: string; content: ProtocolConten
       stages: [...quarters.slice(0, 3), { percent: 100, holdSeconds: 60 }],
       repeatClimb: 'when the set can be seen',
       limits: { ...commonLimits, mostSet: { text: '3.18', unit: 'mm' } },
+    },
+  },
+  {
+    name: 'Proof above rating',
+    content: {
+      ...common,
+      purpose: 'A load above the rating, where a rule asks for it: up to 100 % first, then from a new datum to the proof load.',
+      legs: [
+        { label: 'Bed lowest', ramPosition: 'central', bed: 'lowest' },
+        { label: 'Bed highest', ramPosition: 'central', bed: 'highest' },
+      ],
+      stages: quarters,
+      repeatClimb: 'always',
+      limits: { ...commonLimits, mostSet: { text: '3.18', unit: 'mm' } },
+      aboveRating: { holdSeconds: 600 },
     },
   },
 ]

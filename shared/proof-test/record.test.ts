@@ -1,6 +1,18 @@
 import { describe, expect, test } from 'vitest'
 import { recordedTest, stoppedTest, twoLegTest } from '../../tests/factories/recorded-test'
-import { cautionsOf, clearanceArithmetic, clearedLoad, criteriaHeading, frozenDifferences, headlineOf, joinWords, monthsAfter, placesTested, standingOf, staticLoadsOf } from './record'
+import {
+  cautionsOf,
+  clearanceArithmetic,
+  clearedLoad,
+  criteriaHeading,
+  frozenDifferences,
+  headlineOf,
+  joinWords,
+  monthsAfter,
+  placesTested,
+  standingOf,
+  staticLoadsOf,
+} from './record'
 import { evaluateTest } from './evaluate'
 import type { ProofTestKind } from './entries'
 
@@ -47,7 +59,9 @@ test('the cleared load names gauge, place, end and the number of static loads', 
   const { opened } = twoLegTest().state
   expect(opened && placesTested(opened)).toBe('Bed hole 4, ram far left and far right')
   expect(staticLoadsOf(evaluateTest(twoLegTest().state))).toBe(4)
-  expect(state.opened && clearanceArithmetic(state.opened, evaluateTest(state))).toBe(`Lowest 11.79, less U 0.08${NO_BREAK}short tons, rounded down`)
+  expect(state.opened && clearanceArithmetic(state.opened, evaluateTest(state))).toBe(
+    `Lowest 11.79, less U 0.08${NO_BREAK}short tons, rounded down`,
+  )
 })
 
 test('the criteria are headed by the worst of them', () => {
@@ -65,7 +79,9 @@ test('months after a day end on the last day of a shorter month', () => {
 test('cautions name what nobody measured, and say how many static loads there were', () => {
   const { state } = recordedTest()
   const words = cautionsOf(state, evaluateTest(state)).join(' ')
-  expect(words).toContain('Two static loads say nothing of fatigue, cold, other bed holes, head beam, left upright and right upright (not measured)')
+  expect(words).toContain(
+    'Two static loads say nothing of fatigue, cold, other bed holes, head beam, left upright and right upright (not measured)',
+  )
   expect(words).toContain('oil under the skin is an emergency')
   const stopped = stoppedTest().state
   expect(cautionsOf(stopped, evaluateTest(stopped)).join(' ')).toContain('No load was held at full load.')
@@ -74,7 +90,9 @@ test('cautions name what nobody measured, and say how many static loads there we
 test('a frozen evaluation that today’s arithmetic repeats does not differ; one that was made otherwise does', () => {
   const { id, entries } = recordedTest({ observed: 'A click.' })
   expect(frozenDifferences(id, entries)).toEqual([])
-  const other = entries.map((entry) => (entry.kind === 'concluded' ? { ...entry, payload: { ...entry.payload, evaluation: { criteria: [] } } } : entry))
+  const other = entries.map((entry) =>
+    entry.kind === 'concluded' ? { ...entry, payload: { ...entry.payload, evaluation: { criteria: [] } } } : entry,
+  )
   expect(frozenDifferences(id, other).map(({ what }) => what)).toContain('Permanent set')
   expect(frozenDifferences(id, entries.slice(0, 10))).toEqual([])
 })

@@ -6,6 +6,7 @@ import type { Opened, Position, Reading } from './entries'
 import { evaluateLeg, repeatClimbWanted } from './evaluate'
 import { evaluateClimb, predict, type StageEvaluation } from './evaluate-climb'
 import { forceOf } from './force'
+import { witnessReads } from './protocol'
 import { ROWS, rule, UNDER_LOAD, type ProofTestRule } from './rule'
 import { climbComplete, datumStanding, nextStep } from './steps'
 import type { ProofTestState, StageRow } from './state'
@@ -147,7 +148,7 @@ export const UNDER_LOAD_RULES: readonly ProofTestRule[] = [
     'R26',
     'Stages are taken in order; none is skipped, and each waits for the decision on the one before.',
     ['stage-begun'],
-    ({ payload: { at } }, state, opened) => {
+    ({ payload: { at } }, state) => {
       const climb = state.legs[at.leg]?.climbs[at.climb]
       const stage = climb?.stages[at.stage]
       if (!climb || !stage || state.position?.leg !== at.leg || state.position.climb !== at.climb)
@@ -160,7 +161,7 @@ export const UNDER_LOAD_RULES: readonly ProofTestRule[] = [
       if (same) return null
       const expected = state.position.stage === null ? 0 : state.position.stage + 1
       if (at.stage !== expected)
-        return `The stage at ${opened.protocol.content.stages[expected]?.percent ?? 0} % comes next. None is skipped, and none is lowered.`
+        return `The stage at ${climb.stages[expected]?.percent ?? 0} % comes next. None is skipped, and none is lowered.`
       const before = expected > 0 ? climb.stages[expected - 1]?.attempts.at(-1) : undefined
       return expected === 0 || before?.decided?.decision === 'go-on' ? null : stepSays(state)
     },
@@ -243,7 +244,7 @@ export const UNDER_LOAD_RULES: readonly ProofTestRule[] = [
   }),
   rule('R35', 'At full load the witness reads the gauge, or it is written down why not.', ['decided'], ({ payload }, state) => {
     const current = currentAttempt(state)
-    if (payload.decision !== 'go-on' || !current || current.stage.percent < 100 || current.place.climb > 0) return null
+    if (payload.decision !== 'go-on' || !current || !witnessReads(current.stage.percent, current.place.climb)) return null
     return current.attempt.independent
       ? null
       : 'The witness has not read the gauge. Hand over the tablet, or write down why it was not taken.'

@@ -5,6 +5,7 @@ import { evaluateClimb, type StageEvaluation } from './evaluate-climb'
 import { evaluateLeg, repeatClimbWanted } from './evaluate'
 import { instrumentOf } from './force'
 import { currentAttempt } from './apply'
+import { witnessReads } from './protocol'
 import type { ClimbState, JointState, ProofTestState, Row } from './state'
 
 /** What a test asks for next. Every screen of a run is one of these; the order is DOMAIN 4's. */
@@ -88,7 +89,7 @@ function nextAttempt(state: ProofTestState, at: Omit<Position, 'attempt'>): Posi
   return { ...at, attempt: state.legs[at.leg]?.climbs[at.climb]?.stages[at.stage]?.attempts.length ?? 0 }
 }
 
-function inStage(state: ProofTestState, opened: Opened): Step | null {
+function inStage(state: ProofTestState): Step | null {
   const current = currentAttempt(state)
   if (!current) return null
   const { place, stage, attempt } = current
@@ -96,10 +97,9 @@ function inStage(state: ProofTestState, opened: Opened): Step | null {
   if (attempt.rows.length === 0) return { name: 'read-row', ...at }
   const evaluated = evaluateClimb(state, place.leg, place.climb)?.stages.find((candidate) => candidate.at.stage === place.stage)
   if (!evaluated) return { name: 'read-row', ...at }
-  const full = stage.percent >= 100
   if (attempt.decided?.decision === 'go-on') {
     const next = place.stage + 1
-    const nextStage = opened.protocol.content.stages[next]
+    const nextStage = state.legs[place.leg]?.climbs[place.climb]?.stages[next]
     if (!nextStage) return { name: 'release', leg: place.leg, climb: place.climb }
     return { name: 'begin-stage', at: nextAttempt(state, { ...place, stage: next }), percent: nextStage.percent }
   }
@@ -109,7 +109,7 @@ function inStage(state: ProofTestState, opened: Opened): Step | null {
     case 'wait':
       return { name: 'wait', ...at, stage: evaluated }
     case 'go-on':
-      return full && place.climb === 0 && !attempt.independent
+      return witnessReads(stage.percent, place.climb) && !attempt.independent
         ? { name: 'independent', ...at, stage: evaluated }
         : { name: 'decide', ...at, stage: evaluated }
     default:
@@ -135,7 +135,7 @@ export function nextStep(state: ProofTestState): Step {
     if (climbComplete(climb)) return { name: 'recovery', ...at, repeat: position.climb > 0 }
     return { name: 'begin-stage', at: nextAttempt(state, { ...at, stage: 0 }), percent: opened.protocol.content.stages[0]?.percent ?? 0 }
   }
-  if (position.stage !== null) return inStage(state, opened) ?? { name: 'release', ...at }
+  if (position.stage !== null) return inStage(state) ?? { name: 'release', ...at }
   if (position.climb === 0) {
     if (!leg.seated && state.joints.some((joint) => !jointReady(joint))) return beforeLoad(state) ?? { name: 'seating', leg: position.leg }
     if (!leg.seated) return { name: 'seating', leg: position.leg }

@@ -2,6 +2,7 @@ import { QueryTypes } from 'sequelize'
 import { v7 as newId } from 'uuid'
 import { describe, expect, it } from 'vitest'
 import { entriesResponseSchema } from '#shared/api/ledger'
+import type { OpenTestRequest } from '#shared/api/proof-tests'
 import { problemSchema } from '#shared/api/problem'
 import { checkChain, type StoredEntry } from '#shared/ledger/chain'
 import { checkSeal } from '#shared/ledger/seal'
@@ -254,6 +255,51 @@ describe('a whole test over HTTP', () => {
     await run.sign('lead').expect(409)
     await run.driveTo('sign')
     await run.sign('lead').expect(201)
+  })
+})
+
+describe('the other protocols', () => {
+  it('off-centre: two legs, each with its own datum, climb and set', async () => {
+    const run = await ApiRun.open({ protocol: 'Off-centre' })
+    await run.driveTo('sign')
+    expect(run.state.conclusion?.conclusion).toBe('accepted')
+    expect(run.state.legs.map((leg) => leg.climbs.map((climb) => [climb.stages.length, climb.set.length]))).toEqual([[[4, 1]], [[4, 1]]])
+    await run.sign('lead').expect(201)
+    await run.refresh()
+    await run.sign('witness').expect(201)
+    const { clearance } = await pressOf(run)
+    expect(clearance).toMatchObject({
+      is: 'cleared',
+      clearance: { ramPositions: ['far left', 'far right'], bedHoles: ['4', '5'], staticLoads: 2 },
+    })
+  })
+
+  it('above rating: asks how far and by which rule, and goes there in a second climb from a new datum', async () => {
+    const without = await ApiRun.open({ protocol: 'Proof above rating' }).catch((error: Error) => error.message)
+    expect(without).toContain('422')
+    expect(without).toContain('aboveRating.percent')
+    const above = { percent: 110, rule: 'Customer’s order, clause 4' }
+    const run = await ApiRun.open({ protocol: 'Proof above rating', change: (request) => ({ ...request, aboveRating: above }) })
+    await run.driveTo('sign')
+    expect(run.state.conclusion?.conclusion).toBe('accepted')
+    const first = ['25/60', '50/60', '75/120', '100/300']
+    const second = ['25/60', '50/60', '75/60', '100/60', '110/600']
+    expect(
+      run.state.legs.map((leg) => leg.climbs.map((climb) => climb.stages.map((stage) => `${stage.percent}/${stage.holdSeconds}`))),
+    ).toEqual([
+      [first, second],
+      [first, second],
+    ])
+    expect(run.state.opened?.protocol.content.aboveRatingRule).toBe(above.rule)
+    expect(await projection('proof_tests', run.id)).toMatchObject({ reached_percent: 110 })
+    // Never above the rating, however far the proof went.
+    expect(evaluateTest(run.state).clearance?.load).toBeLessThanOrEqual(12 * 8896.443230521)
+  })
+
+  it('above rating: never past a component’s rating', async () => {
+    const far = { percent: 150, rule: 'Customer’s order, clause 4' }
+    const change = (request: OpenTestRequest) => ({ ...request, aboveRating: far })
+    expect(await ApiRun.open({ protocol: 'Proof above rating', change }).catch((error: Error) => error.message)).toContain('R6')
   })
 })
 

@@ -122,6 +122,7 @@ describe('the protocols of a shop', () => {
     expect((await list(owner)).map((one) => [one.name, one.archived])).toEqual([
       ['First load by quarters', false],
       ['Off-centre', false],
+      ['Proof above rating', false],
       ['A first by name', true],
     ])
     expect(problemOf(await owner.client.post(`${path}/versions`, byQuarters()).expect(409)).code).toBe('archived')
@@ -146,7 +147,7 @@ describe('who may do what with protocols', () => {
       ]
       expect(answers.map((answer) => answer.status)).toEqual([403, 403, 403, 403])
     }
-    expect((await list(shop.crew)).map((one) => one.version)).toEqual([1, 1, 1])
+    expect((await list(shop.crew)).map((one) => one.version)).toEqual([1, 1, 1, 1])
   })
 
   it('shows nobody another shop’s, nor tells it from one that does not exist', async () => {

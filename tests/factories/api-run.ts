@@ -106,19 +106,22 @@ export class ApiRun {
   }
 
   static async open(
-    given: { staff?: Staff; pressId?: string; change?: (request: OpenTestRequest) => OpenTestRequest } = {},
+    given: { staff?: Staff; pressId?: string; protocol?: string; change?: (request: OpenTestRequest) => OpenTestRequest } = {},
   ): Promise<ApiRun> {
     const staff = given.staff ?? (await openStaffedShop())
     const run = new ApiRun(staff, newId(), given.pressId ?? (await enterPress(staff.lead)))
-    const request = await run.request()
-    const response = await staff.lead.client.post(`/api/proof-tests?shop=${staff.lead.shopId}`, given.change ? given.change(request) : request)
+    const request = await run.request(given.protocol)
+    const response = await staff.lead.client.post(
+      `/api/proof-tests?shop=${staff.lead.shopId}`,
+      given.change ? given.change(request) : request,
+    )
     if (response.status !== 201) throw new Error(`${response.status} ${JSON.stringify(response.body)}`)
     run.number = openTestResponseSchema.parse(response.body).number
     await run.refresh()
     return run
   }
 
-  async request(): Promise<OpenTestRequest> {
+  async request(name = 'First load by quarters'): Promise<OpenTestRequest> {
     const { lead } = this.staff
     const unique = newId().slice(-8)
     const read = await enterInstrument(
@@ -136,7 +139,7 @@ export class ApiRun {
       indicators.push((await enterInstrument(lead, details, [inDate()])).instrument)
     }
     const protocols = protocolListSchema.parse((await lead.client.get(`/api/protocols?shop=${lead.shopId}`).expect(200)).body).protocols
-    const protocol = protocols.find((one) => one.name === 'First load by quarters')
+    const protocol = protocols.find((one) => one.name === name)
     if (!protocol) throw new Error('A shop has the shipped protocols.')
     const points = openedPayload().points.map((point, index) => ({ ...point, instrumentId: indicators[index]?.id ?? '' }))
     return {
@@ -151,7 +154,7 @@ export class ApiRun {
       forceInstrumentIds: [read.instrument.id],
       points,
       net: openedPayload().net,
-      legs: [{ label: 'Ram central', ramPosition: 'central', bedHole: '4' }],
+      legs: protocol.content.legs.map(({ label, ramPosition }, index) => ({ label, ramPosition, bedHole: String(4 + index) })),
       pumpHand: { id: null, name: 'Pim Noor' },
       witness: { id: this.staff.witness.userId, relation: 'works next door' },
       repeatsId: null,
@@ -237,7 +240,7 @@ export class ApiRun {
       case 'read-row':
         return [[lead, { kind: 'row-read', payload: { at: step.at, occasion: 'hold start', ...row(step.percent, 20) } }]]
       case 'hold':
-        return [[lead, { kind: 'row-read', payload: { at: step.at, occasion: 'hold end', ...row(step.percent, 301) } }]]
+        return [[lead, { kind: 'row-read', payload: { at: step.at, occasion: 'hold end', ...row(step.percent, 601) } }]]
       case 'independent':
         return [
           [
@@ -274,7 +277,7 @@ export class ApiRun {
 
   /** Drives the test until it asks for `until`; every entry on the way must be kept without a mark. */
   async driveTo(until: Step['name'], frame: Frame = spring): Promise<Step> {
-    for (let turns = 0; turns < 80; turns += 1) {
+    for (let turns = 0; turns < 200; turns += 1) {
       const step = nextStep(this.state)
       if (step.name === until) return step
       const drafts = this.draftsFor(step, frame)

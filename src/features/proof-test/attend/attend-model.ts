@@ -1,12 +1,13 @@
 import { currentAttempt } from '#shared/proof-test/apply'
 import type { Opened } from '#shared/proof-test/entries'
+import { witnessReads } from '#shared/proof-test/protocol'
 import type { Run } from '../use-run'
 
 /** Until the witness's own reading is in at full load, nothing is shown that it could be copied from. */
 export function keptFromWitness(run: Run): boolean {
   const current = currentAttempt(run.state)
   if (run.me.part !== 'witness' || !run.state.loaded || run.state.stopped || !current) return false
-  return current.stage.percent >= 100 && current.place.climb === 0 && current.attempt.independent === null
+  return witnessReads(current.stage.percent, current.place.climb) && current.attempt.independent === null
 }
 
 /** Where the run is, in one line: "Stage 4 of 4, in hold". */
