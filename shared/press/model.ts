@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { idSchema } from '../ledger/envelope'
+import { jointStrengthSchema, memberStrengthSchema } from '../structure/member-data'
 import {
   typedForceSchema,
   typedLengthSchema,
@@ -71,7 +72,13 @@ export const trainPartSchema = z
     message: 'Give its rating. A part without a rating cannot be in the train.',
   })
 
-export const memberSchema = z.object({ id: idSchema, kind: z.enum(MEMBER_KINDS), name: name('member') })
+/** `strength` is for the load path check; descriptions written before there was one lack it. */
+export const memberSchema = z.object({
+  id: idSchema,
+  kind: z.enum(MEMBER_KINDS),
+  name: name('member'),
+  strength: memberStrengthSchema.nullable().optional(),
+})
 
 /** Where two members are held together. `place` names a spot of the elevation; null is listed beside it. */
 export const jointSchema = z.object({
@@ -86,6 +93,7 @@ export const jointSchema = z.object({
   filler: z.string().trim().max(80),
   madeOn: z.iso.date('Write the day like 2026-09-14.').nullable(),
   place: z.string().max(40).nullable(),
+  strength: jointStrengthSchema.nullable().optional(),
 })
 
 export const dimensionsSchema = z.object({
