@@ -90,9 +90,9 @@ function lessHole(section: SectionProperties, hole: Hole | null): { sectionModul
   const left = section.secondMoment - (metal * diameter ** 3) / 12
   if (!(diameter < 2 * section.c && left > 0)) throw new RangeError('The hole is larger than the beam. Measure it again.')
   const shearArea = section.shearArea === null ? null : section.shearArea - diameter * metal
-  if (shearArea !== null && !(shearArea > 0)) throw new RangeError('The hole takes away all that carries shear. Measure the hole, and the metal it goes through, again.')
+  if (shearArea !== null && !(shearArea > 0))
+    throw new RangeError('The hole takes away all that carries shear. Measure the hole, and the metal it goes through, again.')
   return { sectionModulus: left / section.c, shearArea }
-}
 }
 
 /**
