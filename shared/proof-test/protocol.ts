@@ -67,8 +67,18 @@ export const protocolContentSchema = z
         message: 'The last stage reaches at least 100 %.',
       })
     }
-    if (highest > 100 && content.aboveRatingRule === '') {
+    if (highest <= 100) return
+    if (content.aboveRatingRule === '') {
       context.addIssue({ code: 'custom', path: ['aboveRatingRule'], message: 'Name the rule that asks for a load above rating.' })
+    }
+    if (content.aboveRating) {
+      const message = 'A stage lies above rating already. Take it out, or do not ask for the percentage when a test is planned.'
+      context.addIssue({ code: 'custom', path: ['aboveRating', 'holdSeconds'], message })
+    }
+    // Only a second climb goes above the rated load: without one, that stage would be passed over without a word.
+    if (content.repeatClimb !== 'always') {
+      const message = 'A load above rating is put on in the second climb. Choose “Always”.'
+      context.addIssue({ code: 'custom', path: ['repeatClimb'], message })
     }
   })
 

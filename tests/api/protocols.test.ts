@@ -105,6 +105,7 @@ describe('the protocols of a shop', () => {
     ]
     expect(problemOf(await post(byQuarters({ stages: above }))).fields).toEqual({
       'content.aboveRatingRule': 'Name the rule that asks for a load above rating.',
+      'content.repeatClimb': 'A load above rating is put on in the second climb. Choose “Always”.',
     })
     const limits = { ...byQuarters().content.limits, softeningPercent: 80, mostSet: { text: '1', unit: 'kN' } }
     const wrong = problemOf(await post({ name: 'Wrong limits', content: { ...byQuarters().content, limits } })).fields

@@ -22,14 +22,25 @@ function linesOf(record: RecordOfTest): Line[] {
   const { content } = opened.protocol
   const { limits } = content
   const most: Line[] = limits.mostSet
-    ? [['Most set, whatever the deflection', { number: toSI(limits.mostSet), format: '0.00000' }, `m; written as ${limits.mostSet.text} ${unitLabel(limits.mostSet.unit)}`, 'most_set']]
+    ? [
+        [
+          'Most set, whatever the deflection',
+          { number: toSI(limits.mostSet), format: '0.00000' },
+          `m; written as ${limits.mostSet.text} ${unitLabel(limits.mostSet.unit)}`,
+          'most_set',
+        ],
+      ]
     : []
   return [
     ['Protocol', { words: opened.protocol.name, bold: true }, `version ${opened.protocol.version}, frozen when the test was opened`],
     ['Purpose', content.purpose, ''],
     ...opened.legs.map((leg, index): Line => [`Leg ${index + 1}`, leg.label, `ram ${leg.ramPosition}, bed hole ${leg.bedHole}`]),
-    ...content.stages.map((stage): Line => [`Stage at ${stage.percent} %`, plain(stage.holdSeconds), 's hold in the first climb']),
-    ['Hold in a repeat climb', plain(content.repeatHoldSeconds), 's at every stage'],
+    ...content.stages.map((stage): Line => [
+      `Stage at ${stage.percent} %`,
+      plain(stage.holdSeconds),
+      stage.percent > 100 ? 's hold, in the second climb only' : 's hold in the first climb',
+    ]),
+    ['Hold in a repeat climb', plain(content.repeatHoldSeconds), 's at every stage up to rated load'],
     ['Repeat climb', content.repeatClimb, ''],
     ['Seating', percent(content.seatingPercent), 'of the rated load, on and off once'],
     ['Datum watched for', plain(content.datumWatchSeconds), 's'],
@@ -64,6 +75,9 @@ export function protocolSheet(workbook: Workbook, record: RecordOfTest): void {
   const { setUp } = record.state
   if (setUp) {
     const relief = setUp.reliefSet ? `relief set to ${setUp.reliefSet.text} ${setUp.reliefSet.unit}` : 'no relief setting noted'
-    put(sheet.getCell(next, 1), `Set-up confirmed ${setUp.at}: ${setUp.items.length} items; ${relief}; stroke at ${setUp.strokePercent} %.${setUp.note ? ` ${setUp.note}` : ''}`)
+    put(
+      sheet.getCell(next, 1),
+      `Set-up confirmed ${setUp.at}: ${setUp.items.length} items; ${relief}; stroke at ${setUp.strokePercent} %.${setUp.note ? ` ${setUp.note}` : ''}`,
+    )
   }
 }

@@ -1,5 +1,6 @@
 import type { PressDescription, RamPosition } from '#shared/press/model'
 import type { ProtocolContent } from '#shared/proof-test/protocol'
+import { typedNumber } from '../../lib/draft-resolver'
 
 export interface PointDraft {
   id: string
@@ -29,6 +30,8 @@ export interface PlanDraft {
   legs: LegDraft[]
   pumpHand: { id: string; name: string }
   witness: { id: string; relation: string }
+  /** Asked where the protocol goes above the rated load. */
+  aboveRating: { percent: string; rule: string }
   repeatsId: string
   instrumentOverride: string
 }
@@ -48,6 +51,7 @@ export function newPlan(nextId: () => string, pressId: string): PlanDraft {
     legs: [],
     pumpHand: { id: '', name: '' },
     witness: { id: '', relation: '' },
+    aboveRating: { percent: '', rule: '' },
     repeatsId: '',
     instrumentOverride: '',
   }
@@ -62,8 +66,16 @@ const PORTAL: readonly Spot[] = [
 ]
 const SPOTS: Record<PressDescription['kind'], readonly Spot[]> = {
   'h-frame': PORTAL,
-  'four-post': [PORTAL[0] ?? ['M', 'Bed middle', 'bed-middle'], ['L', 'Bed at left post', 'bed-pin-left'], ['R', 'Bed at right post', 'bed-pin-right']],
-  bench: [PORTAL[0] ?? ['M', 'Bed middle', 'bed-middle'], ['L', 'Bed at left rod', 'bed-pin-left'], ['R', 'Bed at right rod', 'bed-pin-right']],
+  'four-post': [
+    PORTAL[0] ?? ['M', 'Bed middle', 'bed-middle'],
+    ['L', 'Bed at left post', 'bed-pin-left'],
+    ['R', 'Bed at right post', 'bed-pin-right'],
+  ],
+  bench: [
+    PORTAL[0] ?? ['M', 'Bed middle', 'bed-middle'],
+    ['L', 'Bed at left rod', 'bed-pin-left'],
+    ['R', 'Bed at right rod', 'bed-pin-right'],
+  ],
   'c-frame': [
     ['H', 'Upper arm at the ram', 'head-middle'],
     ['M', 'Bed middle', 'bed-middle'],
@@ -105,9 +117,15 @@ export function netOf({ points, combine }: Pick<PlanDraft, 'points' | 'combine'>
 
 export type Stamp = { deviceId: string; bootId: string; monotonicMs: number; observedAt: string }
 
+/** What a plan asks of the registers to say what it stands for. */
+export interface PlanLookup {
+  nameOf: (userId: string) => string
+  contentOf: (protocolId: string) => ProtocolContent | undefined
+}
+
 /** The request that the plan stands for, unchecked. */
-export function toRequest(draft: PlanDraft, stamp: Stamp, nameOf: (userId: string) => string) {
-  const { combine: _combine, points, pumpHand, ...rest } = draft
+export function toRequest(draft: PlanDraft, stamp: Stamp, { nameOf, contentOf }: PlanLookup) {
+  const { combine: _combine, points, pumpHand, aboveRating, ...rest } = draft
   const stranger = pumpHand.id === SOMEBODY_ELSE
   return {
     ...rest,
@@ -116,6 +134,8 @@ export function toRequest(draft: PlanDraft, stamp: Stamp, nameOf: (userId: strin
     net: netOf(draft),
     // Whoever has an account is named by it; a name is only typed for somebody who has none.
     pumpHand: stranger ? { id: null, name: pumpHand.name } : { id: pumpHand.id, name: nameOf(pumpHand.id) },
+    // Kept in the draft while another protocol is tried, and sent only where it is asked for.
+    aboveRating: contentOf(draft.protocolId)?.aboveRating ? { ...aboveRating, percent: typedNumber(aboveRating.percent) } : null,
     repeatsId: draft.repeatsId || null,
     instrumentOverride: draft.instrumentOverride.trim() || null,
   }

@@ -4,13 +4,15 @@ import { foldPress } from '#shared/press/apply'
 import type { PressState } from '#shared/press/state'
 import type { PlanRegisters } from './api/get-plan-registers'
 import { ids, names, openedPayload } from '../../../tests/factories/test-press'
-import { legsOf, netOf, newPlan, toRequest, usualPoints, type PlanDraft } from './draft'
+import { SHIPPED_PROTOCOLS } from '#shared/proof-test/protocol'
+import { legsOf, netOf, newPlan, toRequest, usualPoints, type PlanDraft, type PlanLookup } from './draft'
 import { beforeLoad, plannedStages, previewOpened, wouldRefuse, type Chosen } from './preview'
 
 const example = openedPayload()
 const mark = { at: '2026-09-14T15:20:00.000Z', bootId: ids.test, monotonicMs: 0 }
 const stamp = { deviceId: ids.test, bootId: ids.test, monotonicMs: 0, observedAt: mark.at }
 const nameOf = (userId: string) => names[userId] ?? ''
+const lookup: PlanLookup = { nameOf, contentOf: () => example.protocol.content }
 
 const press: PressState = foldPress(ids.press, [
   {
@@ -63,7 +65,14 @@ function plan(change: Partial<PlanDraft> = {}): PlanDraft {
   }
 }
 
-const shop = { id: ids.shop, name: 'Hollin Bridge', forceUnit: 'short-ton', pressureUnit: 'psi', lengthUnit: 'mm', walkDownHours: 12 } as const
+const shop = {
+  id: ids.shop,
+  name: 'Hollin Bridge',
+  forceUnit: 'short-ton',
+  pressureUnit: 'psi',
+  lengthUnit: 'mm',
+  walkDownHours: 12,
+} as const
 const chosen = (change: Partial<PlanDraft> = {}, given: Partial<Chosen> = {}): Chosen => ({
   draft: plan(change),
   registers,
@@ -81,14 +90,14 @@ function findings(change: Partial<PlanDraft> = {}, given: Partial<Chosen> = {}):
 
 describe('what a plan asks for', () => {
   it('is a request that the server takes', () => {
-    const request = openTestRequestSchema.parse(toRequest(plan(), stamp, nameOf))
+    const request = openTestRequestSchema.parse(toRequest(plan(), stamp, lookup))
     expect(request.pumpHand).toEqual({ id: ids.pumpHand, name: 'Pell Navarre' })
     expect(request.net).toMatchObject({ label: 'bed middle less mean of left pin and right pin', plus: request.points[0]?.id })
     expect(request.repeatsId).toBeNull()
   })
 
   it('names a pump hand without an account', () => {
-    const request = openTestRequestSchema.parse(toRequest(plan({ pumpHand: { id: 'somebody else', name: 'Ola Berg' } }), stamp, nameOf))
+    const request = openTestRequestSchema.parse(toRequest(plan({ pumpHand: { id: 'somebody else', name: 'Ola Berg' } }), stamp, lookup))
     expect(request.pumpHand).toEqual({ id: null, name: 'Ola Berg' })
   })
 
@@ -102,13 +111,59 @@ describe('what a plan asks for', () => {
   })
 })
 
+describe('a protocol that goes above rating', () => {
+  const shipped = SHIPPED_PROTOCOLS.find((one) => one.content.aboveRating)
+  if (!shipped) throw new Error('A protocol that goes above rating is shipped.')
+  const { content } = shipped
+  const given = { registers: { ...registers, protocols: [{ ...example.protocol, content, archived: false }] } }
+  const legs = legsOf(content, []).map((leg, index) => ({ ...leg, bedHole: String(4 + index) }))
+  const above = (percent: string, rule = 'Customer’s order, clause 4') => ({ legs, aboveRating: { percent, rule } })
+  const asked = (change: Partial<PlanDraft>) =>
+    openTestRequestSchema.safeParse(toRequest(plan(change), stamp, { nameOf, contentOf: () => content }))
+  const wrong = (change: Partial<PlanDraft>) => asked(change).error?.issues.map((issue) => [issue.path.join('.'), issue.message])
+
+  it('asks for the percentage and its rule, and fills in neither', () => {
+    expect(newPlan(nextId, ids.press).aboveRating).toEqual({ percent: '', rule: '' })
+    expect(wrong(above('', ''))).toEqual([
+      ['aboveRating.percent', 'Enter a percentage.'],
+      ['aboveRating.rule', 'Name the rule that asks for it.'],
+    ])
+    expect(wrong(above('100'))).toEqual([['aboveRating.percent', 'Above the rated load means more than 100 %.']])
+  })
+
+  it('takes a comma', () => {
+    expect(asked(above('112,5')).data?.aboveRating).toEqual({ percent: 112.5, rule: 'Customer’s order, clause 4' })
+  })
+
+  it('sends nothing of it with a protocol that does not ask', () => {
+    expect(openTestRequestSchema.parse(toRequest(plan(above('110')), stamp, lookup)).aboveRating).toBeNull()
+  })
+
+  it('says what to pump to above rating', () => {
+    const opened = previewOpened(chosen(above('110'), given))
+    const last = opened && plannedStages(opened).at(-1)
+    // 110 % of 24 000 lbf over 3.0434 in²: 8 675 psi, in steps of 50.
+    expect(last).toMatchObject({ holdSeconds: 600, target: { percent: 110, exactText: '8674', text: '8650' } })
+    const unknown = previewOpened(chosen(above('90'), given))
+    expect(unknown && plannedStages(unknown).map((stage) => stage.target.percent)).toEqual([25, 50, 75, 100])
+  })
+
+  it('is kept shut by a rating in the train that it would pass', () => {
+    expect(findings(above('150'), given)).toContain('R6')
+    expect(findings(above('110'), given)).toEqual([])
+  })
+})
+
 describe('what would keep a test shut', () => {
   it('is nothing when everything is in order', () => {
     expect(findings()).toEqual([])
   })
 
   it('is an instrument out of date, unless a reason is written down', () => {
-    const late = registers.instruments.map((one) => ({ ...one, calibration: one.calibration && { ...one.calibration, dueOn: '2026-09-13' } }))
+    const late = registers.instruments.map((one) => ({
+      ...one,
+      calibration: one.calibration && { ...one.calibration, dueOn: '2026-09-13' },
+    }))
     const given = { registers: { ...registers, instruments: late } }
     expect(findings({}, given)).toEqual(['R8'])
     expect(findings({ instrumentOverride: 'Compared with G-09 this morning.' }, given)).toEqual([])
@@ -127,7 +182,10 @@ describe('what would keep a test shut', () => {
   })
 
   it('is a gap in the load path', () => {
-    const gap: PressState = { ...press, joints: press.joints.filter((joint) => !joint.name.includes('left pin') && !joint.name.includes('Left pin')) }
+    const gap: PressState = {
+      ...press,
+      joints: press.joints.filter((joint) => !joint.name.includes('left pin') && !joint.name.includes('Left pin')),
+    }
     expect(findings({}, { press: gap })).toEqual(['R9'])
   })
 

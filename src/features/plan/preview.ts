@@ -9,19 +9,37 @@ import { emptyProofTest } from '#shared/proof-test/apply'
 import type { Mark, Opened } from '#shared/proof-test/entries'
 import { forceOf, leadInstrument, stageTarget, type StageTarget } from '#shared/proof-test/force'
 import { OPENING_RULES } from '#shared/proof-test/rules-before-load'
+import { openTestRequestSchema } from '#shared/api/proof-tests'
+import { withAboveRating } from '#shared/proof-test/protocol'
 import { toSI } from '#shared/units'
 import type { PlanRegisters } from './api/get-plan-registers'
+import { typedNumber } from '../../lib/draft-resolver'
 import { netOf, SOMEBODY_ELSE, type PlanDraft } from './draft'
 
 export interface Chosen {
   draft: PlanDraft
   registers: PlanRegisters
   press: PressState
-  shop: { id: string; name: string; forceUnit: Opened['forceUnit']; pressureUnit: Opened['pressureUnit']; lengthUnit: Opened['lengthUnit']; walkDownHours: number }
+  shop: {
+    id: string
+    name: string
+    forceUnit: Opened['forceUnit']
+    pressureUnit: Opened['pressureUnit']
+    lengthUnit: Opened['lengthUnit']
+    walkDownHours: number
+  }
   lead: { id: string; name: string }
 }
 
 const UNNUMBERED = 'PT-0000'
+
+const percentAbove = openTestRequestSchema.shape.aboveRating.unwrap().unwrap().shape.percent
+
+/** The load above rating as far as it is typed: its rule isn't needed to say what it would come to. */
+function aboveOf({ aboveRating }: PlanDraft): { percent: number; rule: string } | null {
+  const percent = percentAbove.safeParse(typedNumber(aboveRating.percent))
+  return percent.success ? { percent: percent.data, rule: aboveRating.rule.trim() } : null
+}
 
 /** What opening this plan would freeze, as far as it is chosen; null while press, protocol or what reads the force is missing. */
 export function previewOpened({ draft, registers, press, shop, lead }: Chosen): Opened | null {
@@ -48,7 +66,12 @@ export function previewOpened({ draft, registers, press, shop, lead }: Chosen): 
     forceInstrumentIds,
     points: points.map(({ reads, memberId, ...point }) => ({ ...point, risesWithLoad: reads === 'rises', memberId: memberId || null })),
     net: netOf(draft),
-    protocol: { id: protocol.id, name: protocol.name, version: protocol.version, content: protocol.content },
+    protocol: {
+      id: protocol.id,
+      name: protocol.name,
+      version: protocol.version,
+      content: withAboveRating(protocol.content, aboveOf(draft)),
+    },
     legs: draft.legs,
     people: {
       lead: { ...lead, relation: '' },
@@ -103,7 +126,9 @@ function warningsOf(opened: Opened, target: StageTarget, U: number | null): stri
   const { stageLowerPercent, stageUpperPercent } = opened.protocol.content.limits
   const distance = (target.force * (stageLowerPercent + stageUpperPercent)) / 100
   if (U !== null && !gaugeCanTell({ U, distance })) {
-    sentences.push(`${target.percent} %: this gauge cannot tell whether the stage is reached. Its uncertainty is over half of the tolerance. Fit a finer one.`)
+    sentences.push(
+      `${target.percent} %: this gauge cannot tell whether the stage is reached. Its uncertainty is over half of the tolerance. Fit a finer one.`,
+    )
   }
   return sentences
 }

@@ -5,23 +5,23 @@ import { openTestRequestSchema } from '#shared/api/proof-tests'
 import { dropDraft, keepDraft, readDraft } from '../../lib/drafts'
 import { draftResolver } from '../../lib/draft-resolver'
 import { bootId, deviceId, monotonicMs } from '../../lib/entry'
-import { newPlan, toRequest, type PlanDraft, type Stamp } from './draft'
+import { newPlan, toRequest, type PlanDraft, type PlanLookup, type Stamp } from './draft'
 
 /** Goes up when the form's fields change, so that an older draft isn't poured into it. */
-const VERSION = 1
+const VERSION = 2
 const PAUSE = 300
 
 const stamp = (): Stamp => ({ deviceId: deviceId(), bootId, monotonicMs: monotonicMs(), observedAt: new Date().toISOString() })
 
 /** The plan's form: its draft outlives a reload. A press named by the address begins a plan for that press. */
-export function usePlanForm(shopId: string, askedPress: string, nameOf: (userId: string) => string) {
+export function usePlanForm(shopId: string, askedPress: string, lookup: PlanLookup) {
   const name = `plan.${shopId}`
   const [initial] = useState(() => {
     const kept = readDraft<PlanDraft>(name, VERSION)
     return kept && (askedPress === '' || kept.pressId === askedPress) ? kept : newPlan(newId, askedPress)
   })
   const form = useForm({
-    resolver: draftResolver(openTestRequestSchema, (draft: PlanDraft) => toRequest(draft, stamp(), nameOf)),
+    resolver: draftResolver(openTestRequestSchema, (draft: PlanDraft) => toRequest(draft, stamp(), lookup)),
     defaultValues: initial,
   })
   const { subscribe, getValues } = form

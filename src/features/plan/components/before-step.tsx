@@ -42,7 +42,10 @@ type BeforeStepProps = {
 /** What keeps the test shut, what keeps the load off, and what is said wherever force is decided. */
 export function BeforeStep({ form, number, opened, today, findings, joints, taken }: BeforeStepProps) {
   const late = opened?.instruments.filter((instrument) => calibrationState(instrument.calibration, today) !== 'in-date') ?? []
-  const blocks = [...(taken ? [`${taken} is under way on this press. Conclude it before another is opened.`] : []), ...findings.map((finding) => finding.says)]
+  const blocks = [
+    ...(taken ? [`${taken} is under way on this press. Conclude it before another is opened.`] : []),
+    ...findings.map((finding) => finding.says),
+  ]
   return (
     <FormStep number={number} title="Before it opens">
       <Sentences title="Put this right first" mark="stop" sentences={blocks} />

@@ -9,7 +9,12 @@ import { instrumentLabel } from '../preview'
 import type { PlanForm } from '../use-plan-form'
 import { Targets } from './targets'
 
-const STATES = { 'in-date': '', 'out-of-date': ', out of date', 'out-of-tolerance': ', out of tolerance', never: ', never calibrated' } as const
+const STATES = {
+  'in-date': '',
+  'out-of-date': ', out of date',
+  'out-of-tolerance': ', out of tolerance',
+  never: ', never calibrated',
+} as const
 
 /** Instruments of some kinds as a list, each with what stands against it. */
 export function instrumentChoices(registers: PlanRegisters, today: string, kinds: readonly string[]): Choice[] {
@@ -30,7 +35,11 @@ export function ForceStep({ form, number, registers, today, rams, opened }: Forc
   const choices = instrumentChoices(registers, today, ['gauge', 'load-cell'])
   const { errors } = formState
   return (
-    <FormStep number={number} title="What reads the force" note="A gauge on the ram’s side of every valve and coupler, or a load cell under the ram.">
+    <FormStep
+      number={number}
+      title="What reads the force"
+      note="A gauge on the ram’s side of every valve and coupler, or a load cell under the ram."
+    >
       {chosen.map((_id, index) => (
         <WholeRow key={index}>
           <SelectField
@@ -49,7 +58,9 @@ export function ForceStep({ form, number, registers, today, rams, opened }: Forc
           </Button>
         </WholeRow>
       )}
-      <WholeRow>{opened ? <Targets opened={opened} /> : <p className="text-graphite">Press, protocol and instrument say what to pump to.</p>}</WholeRow>
+      <WholeRow>
+        {opened ? <Targets opened={opened} /> : <p className="text-graphite">Press, protocol and instrument say what to pump to.</p>}
+      </WholeRow>
     </FormStep>
   )
 }

@@ -15,7 +15,9 @@ export function PeopleStep({ form, number, registers, shopId, lead }: PeopleStep
   const pumpHand = useWatch({ control, name: 'pumpHand.id' })
   const { errors } = formState
   const others = registers.people.filter((person) => person.userId !== lead.id && person.userId !== pumpHand)
-  const witnesses = others.filter((person) => can({ userId: person.userId, shopId, role: person.role }, 'proof-test:be-witness', { shopId }))
+  const witnesses = others.filter((person) =>
+    can({ userId: person.userId, shopId, role: person.role }, 'proof-test:be-witness', { shopId }),
+  )
   return (
     <FormStep number={number} title="People" note="Named here, printed on the record. Anyone of the three can stop the test at any time.">
       <TextField label="Lead" value={`${lead.name}, you`} readOnly />
@@ -24,14 +26,22 @@ export function PeopleStep({ form, number, registers, shopId, lead }: PeopleStep
           label="Pump hand"
           nothing="Choose who works the pump"
           choices={[
-            ...registers.people.map((person) => ({ value: person.userId, label: person.userId === lead.id ? `${person.name}, you` : person.name })),
+            ...registers.people.map((person) => ({
+              value: person.userId,
+              label: person.userId === lead.id ? `${person.name}, you` : person.name,
+            })),
             { value: SOMEBODY_ELSE, label: 'Somebody without an account' },
           ]}
           message={errors.pumpHand?.id && 'Choose who works the pump.'}
           {...register('pumpHand.id')}
         />
         {pumpHand === SOMEBODY_ELSE && (
-          <TextField label="Name of the pump hand" autoComplete="off" message={errors.pumpHand?.name?.message} {...register('pumpHand.name')} />
+          <TextField
+            label="Name of the pump hand"
+            autoComplete="off"
+            message={errors.pumpHand?.name?.message}
+            {...register('pumpHand.name')}
+          />
         )}
       </div>
       <SelectField

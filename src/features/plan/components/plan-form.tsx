@@ -36,8 +36,10 @@ export function PlanForm({ registers, askedPress, onOpened }: PlanFormProps) {
   const user = useUser()
   const lead = { id: user.id, name: user.name }
   const today = calendarDate(new Date())
-  const nameOf = (userId: string) => registers.people.find((person) => person.userId === userId)?.name ?? ''
-  const { form, finish } = usePlanForm(shop.id, askedPress, nameOf)
+  const { form, finish } = usePlanForm(shop.id, askedPress, {
+    nameOf: (userId) => registers.people.find((person) => person.userId === userId)?.name ?? '',
+    contentOf: (protocolId) => registers.protocols.find((protocol) => protocol.id === protocolId)?.content,
+  })
   const open = useOpenTest(shop.id)
   const showProblem = useProblemFields(form)
   const taps = useOneAtATime()
@@ -53,7 +55,10 @@ export function PlanForm({ registers, askedPress, onOpened }: PlanFormProps) {
     if (description !== null && getValues('points').length === 0) setValue('points', usualPoints(description, newId))
   }, [description, getValues, setValue])
 
-  const opened = useMemo(() => (press ? previewOpened({ draft, registers, press, shop, lead: { id: user.id, name: user.name } }) : null), [draft, press, registers, shop, user.id, user.name])
+  const opened = useMemo(
+    () => (press ? previewOpened({ draft, registers, press, shop, lead: { id: user.id, name: user.name } }) : null),
+    [draft, press, registers, shop, user.id, user.name],
+  )
   const findings = opened ? wouldRefuse(draft.id, opened, { at: new Date().toISOString(), bootId, monotonicMs: monotonicMs() }) : []
   const taken = press?.underTest?.number ?? null
   const { errors, submitCount } = form.formState
@@ -109,14 +114,24 @@ export function PlanForm({ registers, askedPress, onOpened }: PlanFormProps) {
             <ForceStep form={form} number={3} registers={registers} today={today} rams={description?.rams.length ?? 1} opened={opened} />
             <PointsStep form={form} number={4} press={description} indicators={instrumentChoices(registers, today, ['indicator'])} />
             <PeopleStep form={form} number={5} registers={registers} shopId={shop.id} lead={lead} />
-            <BeforeStep form={form} number={6} opened={opened} today={today} findings={findings} joints={press ? beforeLoad(press) : []} taken={taken} />
+            <BeforeStep
+              form={form}
+              number={6}
+              opened={opened}
+              today={today}
+              findings={findings}
+              joints={press ? beforeLoad(press) : []}
+              taken={taken}
+            />
           </FormSteps>
           <FormActions>
             <Button type="submit" kind="next" busy={open.isPending && 'Opening it'} note="the press's clearance is suspended with it">
               Open this test
             </Button>
             <p role="status" className="text-graphite">
-              {Object.keys(errors).length > 0 ? 'Some fields above need another look. Nothing you typed is lost.' : 'What you type is kept on this device until the test opens.'}
+              {Object.keys(errors).length > 0
+                ? 'Some fields above need another look. Nothing you typed is lost.'
+                : 'What you type is kept on this device until the test opens.'}
             </p>
           </FormActions>
         </Form>

@@ -111,7 +111,11 @@ export function PointsStep({ form, number, press, indicators }: PointsStepProps)
             label="The figure that limits go by"
             stacked
             choices={[
-              { value: 'yes', label: net.label.charAt(0).toUpperCase() + net.label.slice(1), note: 'so that slack at the ends is not taken for bending' },
+              {
+                value: 'yes',
+                label: net.label.charAt(0).toUpperCase() + net.label.slice(1),
+                note: 'so that slack at the ends is not taken for bending',
+              },
               { value: 'no', label: 'Each point by itself' },
             ]}
           />

@@ -5,6 +5,7 @@ import { SelectField } from '../../../components/select-field'
 import type { PlannedPress } from '../api/get-planned-press'
 import type { PlanRegisters } from '../api/get-plan-registers'
 import type { PlanForm } from '../use-plan-form'
+import { AboveRating } from './above-rating'
 
 type PressStepProps = {
   form: PlanForm
@@ -52,6 +53,7 @@ export function PressStep({ form, number, registers, planned, today, onPress, on
           onProtocol(event.target.value)
         }}
       />
+      <AboveRating form={form} registers={registers} />
       {repeatable.length > 0 && (
         <SelectField
           label="Repeats an earlier test"

@@ -1,15 +1,13 @@
 import type { Opened } from '#shared/proof-test/entries'
+import { secondsWords } from '#shared/proof-test/protocol-words'
 import { formatForce, groupDigits, unitLabel } from '#shared/units'
 import { Mark } from '../../../components/marks'
 import { Sheet } from '../../../components/plate'
 import { setPercent } from '../../../components/typeset'
 import { plannedStages, type PlannedStage } from '../preview'
 
-function holdWords(seconds: number): string {
-  return seconds % 60 === 0 && seconds >= 60 ? `${seconds / 60} min` : `${seconds} s`
-}
-
-const head = 'border-b border-hairline pt-4 pr-2 pb-1 tablet:pr-4 text-left align-bottom font-condensed text-14 font-medium text-graphite last:pr-0'
+const head =
+  'border-b border-hairline pt-4 pr-2 pb-1 tablet:pr-4 text-left align-bottom font-condensed text-14 font-medium text-graphite last:pr-0'
 const cell = 'h-12 pr-2 last:pr-0 tablet:pr-4'
 
 function StageRow({ stage, opened }: { stage: PlannedStage; opened: Opened }) {
@@ -19,11 +17,13 @@ function StageRow({ stage, opened }: { stage: PlannedStage; opened: Opened }) {
     <tr className="border-b border-hairline last:border-b-0">
       <th scope="row" className={`${cell} text-left font-semibold whitespace-nowrap`}>
         {target.percent}
-        {'\u202f'}%
+        {'\u202f'}%{target.percent > 100 && <span className="block text-14 font-normal text-graphite">second climb</span>}
       </th>
       <td className={cell}>
         <span className="whitespace-nowrap">{formatForce(target.force, opened.forceUnit)}</span>
-        {opened.forceUnit !== 'kN' && <span className="block text-14 whitespace-nowrap text-graphite">{formatForce(target.force, 'kN')}</span>}
+        {opened.forceUnit !== 'kN' && (
+          <span className="block text-14 whitespace-nowrap text-graphite">{formatForce(target.force, 'kN')}</span>
+        )}
       </td>
       <td className={`${cell} whitespace-nowrap`}>{groupDigits(target.exactText)}</td>
       <td className={`${cell} whitespace-nowrap`}>
@@ -32,7 +32,7 @@ function StageRow({ stage, opened }: { stage: PlannedStage; opened: Opened }) {
       </td>
       <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{window}</td>
       <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{U === null ? '—' : `± ${formatForce(U, opened.forceUnit)}`}</td>
-      <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{holdWords(holdSeconds)}</td>
+      <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{secondsWords(holdSeconds)}</td>
     </tr>
   )
 }

@@ -17,8 +17,10 @@ type Limits = Omit<ProtocolContent['limits'], 'mostSet'>
 /** What stands in the form. */
 export type ProtocolDraft = {
   name: string
-  content: AsTyped<Omit<ProtocolContent, 'limits' | 'legs'>> & {
+  content: AsTyped<Omit<ProtocolContent, 'limits' | 'legs' | 'aboveRating'>> & {
     legs: ProtocolLeg[]
+    /** The hold stays while the stage is switched off, to be there when it is switched on again. */
+    aboveRating: { asked: boolean; holdSeconds: string }
     limits: AsTyped<Limits> & { mostSet: Typed<LengthUnit> }
   }
 }
@@ -28,7 +30,7 @@ const asText = <T extends object>(values: T) =>
 
 /** A protocol as it stands, to be written on from. */
 export function draftOf(name: string, content: ProtocolContent, lengthUnit: LengthUnit): ProtocolDraft {
-  const { limits, legs, stages, ...rest } = content
+  const { limits, legs, stages, aboveRating, ...rest } = content
   const { mostSet, ...percents } = limits
   return {
     name,
@@ -36,6 +38,7 @@ export function draftOf(name: string, content: ProtocolContent, lengthUnit: Leng
       ...asText(rest),
       legs: legs.map((leg) => ({ ...leg })),
       stages: stages.map((stage) => asText(stage)),
+      aboveRating: { asked: aboveRating !== undefined, holdSeconds: aboveRating ? String(aboveRating.holdSeconds) : '' },
       limits: { ...asText(percents), mostSet: mostSet ?? { text: '', unit: lengthUnit } },
     },
   }
@@ -46,12 +49,14 @@ export const isAboveRating = (stages: readonly { percent: string }[]) => stages.
 
 /** The draft as the schema wants it: numbers where it holds numbers. */
 export function toProtocolRequest({ name, content }: ProtocolDraft): Record<keyof ProtocolRequest, unknown> {
-  const { limits, stages } = content
+  const { aboveRating, ...kept } = content
+  const { limits, stages } = kept
   const { mostSet, ...percents } = limits
   return {
     name,
     content: {
-      ...content,
+      ...kept,
+      ...(aboveRating.asked && { aboveRating: numbersOf({ holdSeconds: aboveRating.holdSeconds }) }),
       stages: stages.map((stage) => numbersOf(stage)),
       ...numbersOf({
         seatingPercent: content.seatingPercent,

@@ -2,17 +2,20 @@ import { render, screen } from '@testing-library/react'
 import userEvent from '@testing-library/user-event'
 import { describe, expect, it, vi } from 'vitest'
 import type { ProtocolRequest } from '#shared/api/protocols'
-import { FIRST_LOAD_BY_QUARTERS, SHIPPED_PROTOCOLS } from '#shared/proof-test/protocol'
+import { FIRST_LOAD_BY_QUARTERS, SHIPPED_PROTOCOLS, type ProtocolContent } from '#shared/proof-test/protocol'
 import { ProblemError } from '../../../lib/problem'
 import { draftOf, toProtocolRequest } from './protocol-draft'
 import { ProtocolForm } from './protocol-form'
 
-function show(send: (request: ProtocolRequest) => Promise<unknown> = () => Promise.resolve()) {
+function show(
+  send: (request: ProtocolRequest) => Promise<unknown> = () => Promise.resolve(),
+  content: ProtocolContent = FIRST_LOAD_BY_QUARTERS,
+) {
   const sent = vi.fn(send)
   render(
     <ProtocolForm
       name="First load by quarters"
-      content={FIRST_LOAD_BY_QUARTERS}
+      content={content}
       lengthUnit="mm"
       version={2}
       send={sent}
@@ -82,7 +85,41 @@ describe('the form of a protocol', { timeout: 20_000 }, () => {
     expect(await screen.findByText('Name the rule that asks for a load above rating.')).toBeVisible()
     await user.type(box(/^The rule that asks/), 'ASME ASP-2010 3-4.1.3')
     await user.click(keep())
+    // A second climb is where a load above rating is put on: without one the stage would be passed over.
+    expect(await screen.findByText('A load above rating is put on in the second climb. Choose “Always”.')).toBeVisible()
+    await user.click(screen.getByRole('radio', { name: 'Always' }))
+    await user.click(keep())
     expect(sent.mock.calls[0]?.[0].content).toMatchObject({ aboveRatingRule: 'ASME ASP-2010 3-4.1.3', stages: { length: 5 } })
+  })
+
+  it('takes a last stage above rating whose percentage is asked when a test is planned', async () => {
+    const { sent, user } = show()
+    expect(screen.queryByRole('textbox', { name: 'Held above rating, seconds' })).toBeNull()
+    await user.click(screen.getByRole('checkbox', { name: /^A last stage above rating/ }))
+    await user.click(keep())
+    expect(await screen.findByText('Enter whole seconds.')).toBeVisible()
+    await user.type(box('Held above rating, seconds'), '600')
+    await user.click(keep())
+    expect(sent.mock.calls[0]?.[0].content).toEqual({ ...FIRST_LOAD_BY_QUARTERS, aboveRating: { holdSeconds: 600 } })
+  })
+
+  it('leaves out the stage above rating when it is switched off again', async () => {
+    const shipped = SHIPPED_PROTOCOLS.find(({ content }) => content.aboveRating)
+    const { sent, user } = show(undefined, shipped?.content)
+    expect(box('Held above rating, seconds')).toHaveValue('600')
+    await user.click(screen.getByRole('checkbox', { name: /^A last stage above rating/ }))
+    await user.click(keep())
+    expect(sent.mock.calls[0]?.[0].content).not.toHaveProperty('aboveRating')
+  })
+
+  it('does not take a stage above rating and one to be asked for', async () => {
+    const { sent, user } = show(undefined, { ...FIRST_LOAD_BY_QUARTERS, aboveRating: { holdSeconds: 600 } })
+    await user.click(screen.getByRole('button', { name: 'Add a stage' }))
+    await user.type(box('Stage 5, % of rated load'), '125')
+    await user.type(screen.getAllByRole('textbox', { name: 'Held, seconds' }).at(-1) ?? box('Name'), '600')
+    await user.click(keep())
+    expect(await screen.findByText(/^A stage lies above rating already/)).toBeVisible()
+    expect(sent).not.toHaveBeenCalled()
   })
 
   it('adds a leg with its place of ram and bed', async () => {

@@ -3,6 +3,7 @@ import { protocolRequestSchema, type ProtocolRequest } from '#shared/api/protoco
 import type { ProtocolContent } from '#shared/proof-test/protocol'
 import { LENGTH_UNITS, type LengthUnit } from '#shared/units'
 import { Button } from '../../../components/button'
+import { CheckRow } from '../../../components/check-row'
 import { ControlledDecimal, ControlledQuantity, ControlledRadios } from '../../../components/controlled'
 import { TextArea, TextField } from '../../../components/field'
 import { Form, FormActions, FormError, FormPart } from '../../../components/form'
@@ -24,15 +25,33 @@ function Preview({ control }: { control: ProtocolControl }) {
   return <StageStrip stages={stages} />
 }
 
-function AboveRating({
-  control,
-  register,
-  message,
-}: {
-  control: ProtocolControl
-  register: ReturnType<typeof useForm<ProtocolDraft>>['register']
-  message: string | undefined
-}) {
+type Register = ReturnType<typeof useForm<ProtocolDraft>>['register']
+
+/** A last stage whose percentage is no part of the protocol: whoever plans a test enters it with its rule. */
+function AskedAboveRating({ control, register }: { control: ProtocolControl; register: Register }) {
+  const asked = useWatch({ control, name: 'content.aboveRating.asked' })
+  return (
+    <>
+      <CheckRow
+        className="tablet:col-span-2"
+        label="A last stage above rating"
+        note="The percentage and its rule are asked when a test is planned. It is put on in a second climb, from a new datum."
+        {...register('content.aboveRating.asked')}
+      />
+      {asked && (
+        <ControlledDecimal
+          control={control}
+          name="content.aboveRating.holdSeconds"
+          label="Held above rating, seconds"
+          unit="s"
+          hint="ASME ASP-2010 3-4.1.3, as described: ten minutes."
+        />
+      )}
+    </>
+  )
+}
+
+function AboveRatingRule({ control, register, message }: { control: ProtocolControl; register: Register; message: string | undefined }) {
   const stages = useWatch({ control, name: 'content.stages' })
   if (!isAboveRating(stages)) return null
   return (
@@ -191,7 +210,8 @@ export function ProtocolForm({ name, content, lengthUnit, version, send, sending
           <Preview control={control} />
         </div>
         <StageRows control={control} />
-        <AboveRating control={control} register={register} message={errors.content?.aboveRatingRule?.message} />
+        <AskedAboveRating control={control} register={register} />
+        <AboveRatingRule control={control} register={register} message={errors.content?.aboveRatingRule?.message} />
       </FormPart>
       <FormPart title="Legs" note="Positions of the press, in the order they are tested. Each has its own datum, climbs and set.">
         <LegRows form={form} />

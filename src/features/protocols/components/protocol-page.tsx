@@ -5,9 +5,10 @@ import { Page, Section } from '../../../components/page'
 import { RuledList, RuledRow } from '../../../components/ruled-list'
 import { dateAndTime } from '../../../lib/dates'
 import { sayWhatFailed } from '../../../lib/problem'
+import { capital } from '../../../lib/words'
 import { paths, withQuery } from '../../../paths'
 import { useArchiveProtocol } from '../api/archive-protocol'
-import { judging, stoppingLimits, timesAndSteps } from './protocol-values'
+import { judging, lastStageWords, stoppingLimits, timesAndSteps } from './protocol-values'
 import { StageStrip } from './stage-strip'
 import { ValueList } from './value-list'
 
@@ -83,6 +84,7 @@ export function ProtocolPage({ answer, asked, mayWrite }: ProtocolPageProps) {
         <div>
           {content.purpose !== '' && <p className="mb-4 text-18">{content.purpose}</p>}
           <StageStrip stages={content.stages} />
+          {content.aboveRating && <p className="mt-3">{capital(lastStageWords(content.aboveRating))}.</p>}
         </div>
         <Section
           title={content.legs.length === 1 ? 'One leg' : `${content.legs.length} legs, in this order`}

@@ -6,7 +6,10 @@ import { DataTable, type Column } from '../../../components/data-table'
 import { paths } from '../../../paths'
 import { StageTicks } from './stage-strip'
 
-const stageWords = ({ content }: ProtocolRow) => `${content.stages.map((stage) => stage.percent).join(', ')}\u202f%`
+const stageWords = ({ content }: ProtocolRow) => {
+  const stages = `${content.stages.map((stage) => stage.percent).join(', ')}\u202f%`
+  return content.aboveRating ? `${stages}, then above` : stages
+}
 const legWords = ({ content }: ProtocolRow) => content.legs.map((leg) => leg.label.toLowerCase()).join(', then ')
 const fullHold = ({ content }: ProtocolRow) => secondsWords(content.stages.at(-1)?.holdSeconds ?? 0)
 

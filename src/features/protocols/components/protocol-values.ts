@@ -7,6 +7,11 @@ export type ProtocolValue = readonly [name: string, value: string, source: strin
 
 const percent = (value: number) => `${value}\u202f%`
 
+/** The stage whose percentage is no part of the protocol. */
+export function lastStageWords({ holdSeconds }: { holdSeconds: number }): string {
+  return `a last stage above rating, held ${secondsWords(holdSeconds)}, percentage asked when a test is planned`
+}
+
 export const DECISION_WORDS: Record<ProtocolContent['decisionRule'], string> = {
   simple: 'simple acceptance',
   'guard-band': 'a guard band of U',

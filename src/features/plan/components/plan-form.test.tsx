@@ -1,0 +1,143 @@
+import { QueryClientProvider } from '@tanstack/react-query'
+import { fireEvent, render, screen, waitFor } from '@testing-library/react'
+import { MemoryRouter } from 'react-router-dom'
+import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
+import type { OpenTestRequest } from '#shared/api/proof-tests'
+import { SHIPPED_PROTOCOLS } from '#shared/proof-test/protocol'
+import { ids, names, openedPayload } from '../../../../tests/factories/test-press'
+import { HereContext, type Here } from '../../../lib/here'
+import { createQueryClient } from '../../../lib/query-client'
+import type { PlanRegisters } from '../api/get-plan-registers'
+import { PlanForm } from './plan-form'
+
+const example = openedPayload()
+const AT = '2026-09-15T10:00:00.000Z'
+const ABOVE = '01990000-0000-7000-8000-0000000000aa'
+
+const shop: Here['shop'] = {
+  id: ids.shop,
+  name: 'Hollin Bridge',
+  role: 'lead',
+  forceUnit: 'short-ton',
+  pressureUnit: 'psi',
+  lengthUnit: 'mm',
+  buildPauseDays: 30,
+  walkDownHours: 12,
+}
+const here: Here = { user: { id: ids.lead, name: 'Marit Sandoval', email: '' }, shops: [shop], shop, adopt: () => undefined }
+
+function registers(): PlanRegisters {
+  const shipped = SHIPPED_PROTOCOLS.find(({ content }) => content.aboveRating)
+  if (!shipped) throw new Error('A protocol that goes above rating is shipped.')
+  return {
+    presses: [],
+    protocols: [
+      { ...example.protocol, archived: false },
+      { id: ABOVE, name: shipped.name, version: 1, archived: false, content: shipped.content },
+    ],
+    instruments: example.instruments.map((instrument) => ({ ...instrument, retired: false })),
+    people: Object.entries(names).map(([userId, name]) => ({ userId, name, role: 'lead' as const, addedAt: AT, endedAt: null })),
+  }
+}
+
+const ledger = {
+  ledgerId: ids.press,
+  entries: [
+    {
+      id: ids.press,
+      ledgerId: ids.press,
+      kind: 'registered',
+      v: 1,
+      payload: { description: example.press, joints: example.joints, lastWorkedOn: null },
+      authorId: ids.lead,
+      deviceId: ids.test,
+      deviceSeq: 1,
+      basedOnSeq: 0,
+      observedAt: AT,
+      bootId: ids.test,
+      monotonicMs: 0,
+      attachments: [],
+      overrides: [],
+      seq: 1,
+      receivedAt: AT,
+      irregular: [],
+      prevHash: '0'.repeat(64),
+      hash: '1'.repeat(64),
+    },
+  ],
+  headSeq: 1,
+  headHash: '1'.repeat(64),
+  people: {},
+  sealed: [],
+}
+
+let opened: OpenTestRequest[] = []
+
+const json = (body: unknown, status = 200) =>
+  Promise.resolve(new Response(JSON.stringify(body), { status, headers: { 'content-type': 'application/json' } }))
+
+function answer(url: string, init?: { method?: string; body?: string }) {
+  if (init?.method === 'POST') {
+    opened.push(JSON.parse(init.body ?? '') as OpenTestRequest)
+    const fields = { 'aboveRating.percent': 'The order asks for 110 %.' }
+    return json({ type: 'about:blank', title: '', status: 422, code: 'invalid', detail: 'Some fields need another look.', fields }, 422)
+  }
+  return url.includes('/entries') ? json(ledger) : json({ proofTests: [], older: null, newer: null })
+}
+
+function show() {
+  render(
+    <MemoryRouter>
+      <QueryClientProvider client={createQueryClient(() => undefined)}>
+        <HereContext value={here}>
+          <PlanForm registers={registers()} askedPress={ids.press} onOpened={() => undefined} />
+        </HereContext>
+      </QueryClientProvider>
+    </MemoryRouter>,
+  )
+}
+
+/** By the field's name: on a form as long as this, labels and roles take jsdom seconds to work out. */
+function field(name: string): HTMLInputElement | HTMLSelectElement {
+  const found = document.querySelector<HTMLInputElement | HTMLSelectElement>(`[name="${name}"]`)
+  if (!found) throw new Error(`There is no field ${name}.`)
+  return found
+}
+const enter = (name: string, value: string) => fireEvent.change(field(name), { target: { value } })
+const asked = () => document.querySelector('[name^="aboveRating"]') !== null
+
+describe('the plan of a test above rating', { timeout: 20_000 }, () => {
+  beforeEach(() => {
+    localStorage.clear()
+    opened = []
+    vi.stubGlobal('fetch', vi.fn(answer))
+  })
+  afterEach(() => vi.unstubAllGlobals())
+
+  it('asks how far and by which rule where the protocol does, shows the target, and keeps the sentence of the server', async () => {
+    show()
+    await waitFor(() => field('points.0.instrumentId'))
+    enter('protocolId', ids.protocol)
+    expect(asked()).toBe(false)
+    enter('protocolId', ABOVE)
+    expect(field('aboveRating.percent').value).toBe('')
+    enter('forceInstrumentIds.0', ids.gauge)
+    for (const [index, id] of ids.indicators.entries()) enter(`points.${index}.instrumentId`, id)
+    for (const index of [0, 1]) enter(`legs.${index}.bedHole`, String(index + 4))
+    enter('pumpHand.id', ids.pumpHand)
+    enter('witness.id', ids.witness)
+    enter('witness.relation', 'works next door')
+    fireEvent.click(screen.getByText('Open this test'))
+    expect(await screen.findByText('Enter a percentage.')).toBeVisible()
+    expect(screen.getByText('Name the rule that asks for it.')).toBeVisible()
+    expect(opened).toEqual([])
+
+    enter('aboveRating.percent', '112,5')
+    enter('aboveRating.rule', 'Customer’s order, clause 4')
+    expect(await screen.findByText('second climb')).toBeVisible()
+    fireEvent.click(screen.getByText('Open this test'))
+    expect(await screen.findByText('The order asks for 110 %.')).toBeVisible()
+    expect(opened[0]?.aboveRating).toEqual({ percent: 112.5, rule: 'Customer’s order, clause 4' })
+    expect(field('aboveRating.percent').value).toBe('112,5')
+  })
+})
