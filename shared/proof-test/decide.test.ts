@@ -144,6 +144,11 @@ describe('opening', () => {
       one.details.kind === 'gauge' ? { ...one, details: { ...one.details, fullScale: { text: '6000', unit: 'psi' as const } } } : one,
     )
     expect(open({ opened: { instruments } }).rules).toEqual(['R7'])
+    // One ram and two gauges: it is not known which reads what.
+    const [gauge] = payload.instruments
+    const second = gauge ? { ...gauge, id: ids.test } : gauge
+    const two = { instruments: [...payload.instruments, ...(second ? [second] : [])], forceInstrumentIds: [ids.gauge, ids.test] }
+    expect(open({ opened: two }).rules).toEqual(['R7'])
   })
 
   it('R8: an instrument out of date needs a reason', () => {

@@ -145,9 +145,7 @@ function clearanceFigures(state: ProofTestState, stages: readonly StageEvaluatio
   if (instrument?.details.kind === 'gauge') {
     const { increment } = instrument.details
     const step = toSI(increment)
-    const share = opened.forceInstrumentIds.length > 1 ? 1 / opened.forceInstrumentIds.length : 1
-    const rams = opened.press.rams.map(ramInput).slice(0, share < 1 ? 1 : undefined)
-    const { pressure } = clearancePressure({ load: load * share, rams, increment: step })
+    const { pressure } = clearancePressure({ load, rams: opened.press.rams.map(ramInput), increment: step })
     gaugePressure = { text: toUnit(pressure, increment.unit).toFixed(decimalsOf(increment)), unit: increment.unit }
   }
   return { lowestForce: lowest.force, U: lowest.U, load, text, unit, gaugePressure }

@@ -164,11 +164,11 @@ export function stageTarget(opened: Opened, percent: number): StageTarget | null
       sentence: null,
     }
   }
-  const rams = circuits(opened)[0]?.rams ?? []
-  const share = circuits(opened).length > 1 ? 1 / circuits(opened).length : 1
-  const pressureFor = (total: number): number => targetPressure({ force: total * share, rams })
+  // Rams on one manifold share the pressure; isolated ones are pumped to the same, each on its own gauge.
+  const rams = opened.press.rams.map(ramInput)
+  const pressureFor = (total: number): number => targetPressure({ force: total, rams })
   const target = readableTarget({
-    force: force * share,
+    force,
     rams,
     increment: step,
     lowerTolerance: lower,
@@ -184,7 +184,7 @@ export function stageTarget(opened: Opened, percent: number): StageTarget | null
     text: text(target.readable),
     unit,
     readable: target.readable,
-    readableForce: ramForce(rams.map((ram) => ({ ram, pressure: target.readable, rodPressure: 0 }))) / share,
+    readableForce: ramForce(rams.map((ram) => ({ ram, pressure: target.readable, rodPressure: 0 }))),
     window: { from, to, fromText: text(from), toText: text(to) },
     belowTolerance: target.belowTolerance,
     sentence: target.sentence,

@@ -54,6 +54,9 @@ export const OPENING_RULES: readonly ProofTestRule[] = [
   opening('R7', 'Every target lies on the scale of the gauge that reads it.', (opened) => {
     const details = leadInstrument(opened)?.details
     if (!details || details.kind === 'indicator') return 'Choose a gauge or a load cell that reads the force.'
+    const gauges = opened.forceInstrumentIds.length
+    if (gauges > 1 && details.kind === 'gauge' && gauges !== opened.press.rams.length)
+      return 'Rams on one manifold are read by one gauge; isolated rams by one gauge each. Choose as many gauges as there are rams, or one.'
     const fullScale = toSI(details.fullScale)
     for (const { percent } of opened.protocol.content.stages) {
       const target = stageTarget(opened, percent)

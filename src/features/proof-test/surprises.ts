@@ -3,6 +3,7 @@ import type { Opened, Position, Reading } from '#shared/proof-test/entries'
 import { evaluateClimb, lengthText, predict, type StageEvaluation } from '#shared/proof-test/evaluate-climb'
 import { forceOf, stageForce, stageTarget } from '#shared/proof-test/force'
 import { surprising } from '#shared/proof-test/rules-under-load'
+import { turnMiscount } from '#shared/proof-test/turns'
 import type { ProofTestState } from '#shared/proof-test/state'
 import { lowestLimit } from '#shared/press/ratings'
 import { formatForce, groupDigits, toSI } from '#shared/units'
@@ -18,23 +19,28 @@ function whole(opened: Opened, readings: readonly Reading[]): boolean {
 /** The line speaks of the row as a whole: it is asked once all of it is there. */
 function notPredicted(state: ProofTestState, opened: Opened, at: Position, id: string, readings: readonly Reading[]): string | null {
   if (!whole(opened, readings)) return null
-  return surprising(state, at, readings).includes(id) || offItsOwnLine(state, opened, at, id, readings) ? 'That is not what the line predicts.' : null
+  const own = ownLine(state, opened, at, id, readings)
+  const off = own !== null && Math.abs(own.deflection - own.prediction.deflection) > Math.max(own.prediction.halfWidth, 5 * own.increment)
+  if (!off && !surprising(state, at, readings).includes(id)) return null
+  const turn = own ? turnMiscount(opened, id, own.deflection, own.prediction) : null
+  return turn ?? 'That is not what the line predicts.'
 }
 
-/** Of several points one may be misread: a point off the line of its own readings is asked for too. */
-function offItsOwnLine(state: ProofTestState, opened: Opened, at: Position, id: string, readings: readonly Reading[]): boolean {
+/** Of several points one may be misread: what the line of its own readings predicts for a point, beside what was read. */
+function ownLine(state: ProofTestState, opened: Opened, at: Position, id: string, readings: readonly Reading[]) {
   const climb = evaluateClimb(state, at.leg, at.climb)
   const force = forceOf(opened, readings)
   const figure = climb?.datum ? deflectionsOf(opened, readings, climb.datum.row.readings).find((one) => one.id === id) : undefined
-  if (!climb || !force || !figure) return false
+  if (!climb || !force || !figure) return null
   const rows = [climb.datum, ...climb.stages.filter((stage) => stage.at.stage < at.stage).map((stage) => stage.start)]
   const points = rows.flatMap((row) => {
     const own = row?.deflections.find((one) => one.id === id)
-    return row?.force && own ? [{ force: row.force.force, deflection: own.deflection, uForce: row.force.uIndependent, uDeflection: own.uReading }] : []
+    return row?.force && own
+      ? [{ force: row.force.force, deflection: own.deflection, uForce: row.force.uIndependent, uDeflection: own.uReading }]
+      : []
   })
   const prediction = predict(opened, points, force.force)
-  if (!prediction) return false
-  return Math.abs(figure.deflection - prediction.deflection) > Math.max(prediction.halfWidth, 5 * figure.increment)
+  return prediction && { prediction, deflection: figure.deflection, increment: figure.increment }
 }
 
 function pastRating(opened: Opened, readings: readonly Reading[]): string | null {
@@ -70,12 +76,18 @@ export function atHoldEnd(state: ProofTestState, opened: Opened, stage: StageEva
       const now = valueOf(readings, source.id)
       if (before === null || now === null || before <= 0) return null
       if (now > before) return 'That is more than at the start of the hold.'
-      return (before - now) / before > limits.pressureLossPercent / 100 ? `That is a loss of more than ${limits.pressureLossPercent} % in the hold.` : null
+      return (before - now) / before > limits.pressureLossPercent / 100
+        ? `That is a loss of more than ${limits.pressureLossPercent} % in the hold.`
+        : null
     }
     const figure = deflectionsOf(opened, readings, datum).find((candidate) => candidate.id === source.id)
     const first = start.deflections.find((candidate) => candidate.id === source.id)
     if (!figure || !first) return null
-    const limit = creepLimit({ fraction: limits.creepPercent / 100, stageDeflection: Math.abs(first.deflection), increment: first.increment })
+    const limit = creepLimit({
+      fraction: limits.creepPercent / 100,
+      stageDeflection: Math.abs(first.deflection),
+      increment: first.increment,
+    })
     if (Math.abs(figure.deflection - first.deflection) > limit) return `That moved by more than ${lengthText(opened, limit)} in the hold.`
     return notPredicted(state, opened, stage.at, source.id, readings)
   }
