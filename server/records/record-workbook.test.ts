@@ -82,6 +82,7 @@ describe('the workbook of a countersigned test', () => {
       'Stages',
       'Readings',
       'Criteria',
+      'Uncertainty',
       'Joints',
       'Train',
       'Instruments',

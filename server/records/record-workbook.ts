@@ -3,6 +3,7 @@ import { recordOf, type RecordSource } from './record'
 import { chartSheet } from './sheets/chart'
 import { correctionsSheet } from './sheets/corrections'
 import { criteriaSheet } from './sheets/criteria'
+import { uncertaintySheet } from './sheets/uncertainty'
 import { instrumentsSheet } from './sheets/instruments'
 import { jointsSheet } from './sheets/joints'
 import { ledgerSheet } from './sheets/ledger'
@@ -34,6 +35,7 @@ export async function recordWorkbook(source: RecordSource): Promise<Buffer> {
   stagesSheet(workbook, record, placesOfReadings(record))
   readingsSheet(workbook, record)
   criteriaSheet(workbook, record)
+  uncertaintySheet(workbook, record)
   jointsSheet(workbook, record)
   trainSheet(workbook, record)
   instrumentsSheet(workbook, record)

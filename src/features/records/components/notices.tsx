@@ -14,16 +14,26 @@ function noticesOf(record: RecordView): Notice[] {
   const { state, evaluation, chain, differences, nameOf } = record
   const { stopped } = state
   const notices: Notice[] = [
-    { title: 'The ledger is not whole', mark: 'stop', lines: chain.whole ? [] : [`${chain.why} What stands here cannot be relied on: keep a copy and ask whoever looks after the server.`] },
+    {
+      title: 'The ledger is not whole',
+      mark: 'stop',
+      lines: chain.whole ? [] : [`${chain.why} What stands here cannot be relied on: keep a copy and ask whoever looks after the server.`],
+    },
     {
       title: 'Entries of a kind this page does not know',
       mark: 'wait',
-      lines: state.unknownKinds > 0 ? [`${state.unknownKinds} in all. Load the page again to update it before you rely on this record.`] : [],
+      lines:
+        state.unknownKinds > 0 ? [`${state.unknownKinds} in all. Load the page again to update it before you rely on this record.`] : [],
     },
     {
       title: 'After the seal',
       mark: 'stop',
-      lines: state.lateFacts > 0 ? [`${state.lateFacts} ${state.lateFacts === 1 ? 'entry' : 'entries'} arrived after the countersignature. The clearance is suspended until somebody has looked.`] : [],
+      lines:
+        state.lateFacts > 0
+          ? [
+              `${state.lateFacts} ${state.lateFacts === 1 ? 'entry' : 'entries'} arrived after the countersignature. The clearance is suspended until somebody has looked.`,
+            ]
+          : [],
     },
     {
       title: 'Today’s arithmetic differs from what was frozen at the conclusion',
@@ -33,13 +43,19 @@ function noticesOf(record: RecordView): Notice[] {
     {
       title: 'Stopped',
       mark: 'stop',
-      lines: stopped ? [`${stopped.why.replace(/\.$/, '')}. Called by ${nameOf(stopped.by)}, ${dateAndTime(stopped.at)}${stopped.atPercent === null ? '' : `, at ${stopped.atPercent}\u202f%`}.`] : [],
+      lines: stopped
+        ? [
+            `${stopped.why.replace(/\.$/, '')}. Called by ${nameOf(stopped.by)}, ${dateAndTime(stopped.at)}${stopped.atPercent === null ? '' : `, at ${stopped.atPercent}\u202f%`}.`,
+          ]
+        : [],
     },
     { title: 'Against “accepted”', mark: 'beyond', lines: record.standing === 'under way' ? [] : evaluation.against },
     {
       title: 'Irregular entries',
       mark: 'undecided',
-      lines: state.irregular.map(({ seq, kind, rules }) => `Entry ${seq}, ${kind.replaceAll('-', ' ')}: against ${rules.join(', ')}. It happened, so it stands.`),
+      lines: state.irregular.map(
+        ({ seq, kind, rules }) => `Entry ${seq}, ${kind.replaceAll('-', ' ')}: against ${rules.join(', ')}. It happened, so it stands.`,
+      ),
     },
     {
       title: 'Reasons given',

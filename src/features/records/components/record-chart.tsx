@@ -7,7 +7,8 @@ import type { RecordView } from '../record-view'
 const DECISION_MARKS = { 'go-on': 'go-on', wait: 'wait', stop: 'stop' } as const
 
 /** A sheet of paper isn't measured anew: the drawing is fitted into its plate, and the marks stand in the table. */
-const ON_PAPER = 'print:h-[536px] print:min-h-0 print:[&_svg[aria-hidden]]:hidden print:[&_svg[role=img]]:h-[536px] print:[&_svg[role=img]]:w-full'
+const ON_PAPER =
+  'print:h-[536px] print:min-h-0 print:[&_svg[aria-hidden]]:hidden print:[&_svg[role=img]]:h-[536px] print:[&_svg[role=img]]:w-full'
 
 /** The line of one leg on its dye plate, with what was decided at each stage beside it. */
 export function RecordChart({ record, leg }: { record: RecordView; leg: number }) {
@@ -31,7 +32,10 @@ export function RecordChart({ record, leg }: { record: RecordView; leg: number }
   return (
     <figure className="ground-dye flex flex-col print:break-inside-avoid">
       {opened.legs.length > 1 && <figcaption className="px-6 pt-3 font-medium">{label}</figcaption>}
-      <Fit initial={{ width: 640, height: 536 }} className={`w-full ${ON_PAPER} ${opened.legs.length > 1 ? 'h-[440px]' : 'h-[440px] tablet:h-[536px] wide:h-auto wide:min-h-[536px] wide:grow'}`}>
+      <Fit
+        initial={{ width: 640, height: 536 }}
+        className={`w-full ${ON_PAPER} ${opened.legs.length > 1 ? 'h-[440px]' : 'h-[440px] tablet:h-[536px] wide:h-auto wide:min-h-[536px] wide:grow'}`}
+      >
         {(size) => {
           const spec = recordLine(opened, climbs, size)
           return spec && <LineChart {...spec} stageMarks={[{ percent: 0, mark: 'datum' }, ...marks]} />

@@ -1,4 +1,6 @@
+import { fullestForce } from '#shared/proof-test/budget'
 import { clearanceArithmetic, energyText, inPrint } from '#shared/proof-test/record'
+import { formatForce } from '#shared/units'
 import { forceInstrumentText, indicatorsText, ramText } from '../fact-words'
 import type { RecordView } from '../record-view'
 
@@ -7,6 +9,7 @@ type Fact = readonly [name: string, value: string]
 function factsOf(record: RecordView): Fact[] {
   const { opened, evaluation, state } = record
   const { pumpHand } = opened.people
+  const fullest = fullestForce(evaluation)
   const arithmetic = clearanceArithmetic(opened, evaluation)
   const confirmed = state.loadPathConfirmed
   const rule = opened.protocol.content.decisionRule === 'simple' ? 'Simple acceptance' : 'Guard band of U'
@@ -18,7 +21,18 @@ function factsOf(record: RecordView): Fact[] {
   const indicators = indicatorsText(opened)
   return [
     ...(arithmetic ? [['Load', arithmetic] as const] : []),
-    ['Load path', confirmed ? `${state.joints.length} joints, none missing: ${record.nameOf(confirmed.by)}` : 'Not confirmed whole by the witness'],
+    ...(fullest && fullest.force.pressure !== null
+      ? [
+          [
+            'Delivered',
+            `At least ${formatForce(fullest.force.deliveredAtLeast, opened.forceUnit)} at ${fullest.percent} %, after ${opened.protocol.content.frictionPercent} % for seal friction`,
+          ] as const,
+        ]
+      : []),
+    [
+      'Load path',
+      confirmed ? `${state.joints.length} joints, none missing: ${record.nameOf(confirmed.by)}` : 'Not confirmed whole by the witness',
+    ],
     ['Pump hand', pumpHand.relation ? `${pumpHand.name}, ${pumpHand.relation}` : pumpHand.name],
     ...rams,
     ...read,

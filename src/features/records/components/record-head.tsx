@@ -52,7 +52,9 @@ function lines(record: RecordView): string[] {
       ]
     }
     case 'to countersign':
-      return [`Signed by ${state.signed?.printedName ?? ''}. Waits for ${opened.people.witness.name} to countersign; until then it clears nothing.`]
+      return [
+        `Signed by ${state.signed?.printedName ?? ''}. Waits for ${opened.people.witness.name} to countersign; until then it clears nothing.`,
+      ]
     default:
       return [`Rated ${inPrint(opened.press.ratedLoad)}. What follows is as far as the ledger has come.`]
   }
@@ -85,8 +87,14 @@ export function RecordResult({ record }: { record: RecordView }) {
 export function RecordCourse({ record }: { record: RecordView }) {
   const { opened, state } = record
   const legs = opened.legs.length === 1 ? 'One leg' : `${opened.legs.length} legs`
-  const walked = state.joints.map((joint) => joint.before?.at ?? '').sort().at(-1)
-  const released = state.legs.flatMap((leg) => leg.climbs.flatMap((climb) => climb.released?.at ?? [])).sort().at(-1)
+  const walked = state.joints
+    .map((joint) => joint.before?.at ?? '')
+    .sort()
+    .at(-1)
+  const released = state.legs
+    .flatMap((leg) => leg.climbs.flatMap((climb) => climb.released?.at ?? []))
+    .sort()
+    .at(-1)
   const parts = [
     state.openedAt && `Opened ${longDate(state.openedAt)}`,
     walked && `walk-down closed ${clockTime(walked)}`,

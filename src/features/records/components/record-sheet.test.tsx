@@ -79,7 +79,9 @@ describe('the record of a countersigned test', () => {
     expect(await show(recordedTest())).toHaveTextContent('PT-0043 Press 2, straightening press')
     const result = screen.getByRole('region', { name: 'Result' })
     expect(result).toHaveTextContent('Accepted. Cleared up to 11.7 short tons')
-    expect(result).toHaveTextContent('104.1 kN, rated 12 short tons. Gauge G-02 not past 7 650 psi. Bed hole 4, ram central. Until 15 March 2027.')
+    expect(result).toHaveTextContent(
+      '104.1 kN, rated 12 short tons. Gauge G-02 not past 7 650 psi. Bed hole 4, ram central. Until 15 March 2027.',
+    )
     expect(result).toHaveTextContent('Cleared by Marit Sandoval on 15 September 2026 after two static loads. No other bed hole was tested.')
   })
 
@@ -207,16 +209,28 @@ describe('signing', () => {
     await userEvent.click(within(form).getByRole('button', { name: 'Sign as lead' }))
     expect(await screen.findByText(/^Waits for Tomas Achterberg, who was there, to countersign\.$/)).toBeInTheDocument()
     expect(posted).toMatchObject([
-      { as: 'lead', password: 'three short tons', headHash: concluded.state.headHash, meaning: 'I ran this test and these are its readings.' },
+      {
+        as: 'lead',
+        password: 'three short tons',
+        headHash: concluded.state.headHash,
+        meaning: 'I ran this test and these are its readings.',
+      },
     ])
   })
 
   test('a record that has grown meanwhile is shown anew, and says so', async () => {
     const signed = recordedTest({ until: 'concluded', observed: 'Late note of the lead.' })
-    await open(recordedTest({ until: 'concluded' }), lead, problem(409, 'stale-head', 'Something was added to this record since you read it.'), signed)
+    await open(
+      recordedTest({ until: 'concluded' }),
+      lead,
+      problem(409, 'stale-head', 'Something was added to this record since you read it.'),
+      signed,
+    )
     await userEvent.type(screen.getByLabelText('Your password'), 'three short tons')
     await userEvent.click(screen.getByRole('button', { name: 'Sign as lead' }))
-    expect(await screen.findByRole('alert')).toHaveTextContent('Something was entered since you read this record. It is shown above now: read it again, then sign.')
+    expect(await screen.findByRole('alert')).toHaveTextContent(
+      'Something was entered since you read this record. It is shown above now: read it again, then sign.',
+    )
     await waitFor(() => expect(document.body).toHaveTextContent('Late note of the lead.'))
     expect(screen.getByLabelText('Your password')).toHaveValue('three short tons')
   })

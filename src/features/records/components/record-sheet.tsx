@@ -9,6 +9,7 @@ import type { SignTurn } from '../sign-turn'
 import { Corrections } from './corrections'
 import { CriteriaTable } from './criteria-table'
 import { Cautions, Notices } from './notices'
+import { ForceBudget } from './force-budget'
 import { RecordChart } from './record-chart'
 import { RecordFacts } from './record-facts'
 import { RecordCourse, RecordHead, RecordResult } from './record-head'
@@ -75,6 +76,7 @@ export function RecordSheet(props: RecordSheetProps) {
             </div>
           </div>
           <StagesAsRead record={record} />
+          <ForceBudget record={record} />
           <Corrections record={record} />
           <Notices record={record} />
           <Cautions record={record} />

@@ -72,8 +72,18 @@ function DeclineForm({ record }: { record: RecordView }) {
   return (
     <Form onSubmit={submit} aria-label="Decline">
       <FormError message={errors.root?.message} attempt={submitCount} />
-      <TextArea label="Why you decline" hint="Prints on the record; it goes back to the lead." message={errors.why?.message} {...form.register('why')} />
-      <PasswordField label="Your password" autoComplete="current-password" message={errors.password?.message} {...form.register('password')} />
+      <TextArea
+        label="Why you decline"
+        hint="Prints on the record; it goes back to the lead."
+        message={errors.why?.message}
+        {...form.register('why')}
+      />
+      <PasswordField
+        label="Your password"
+        autoComplete="current-password"
+        message={errors.password?.message}
+        {...form.register('password')}
+      />
       <FormActions>
         <Button type="submit" busy={decline.isPending && 'Sending'}>
           Decline with this reason
@@ -108,7 +118,10 @@ export function SignPanel({ record, turn }: { record: RecordView; turn: SignTurn
   }
   if (turn.is === 'lead') {
     return (
-      <Panel title="Sign this record" note={`You concluded it ${state.conclusion?.conclusion ?? ''}. Read what stands above as it will print; then only ${opened.people.witness.name} can act.`}>
+      <Panel
+        title="Sign this record"
+        note={`You concluded it ${state.conclusion?.conclusion ?? ''}. Read what stands above as it will print; then only ${opened.people.witness.name} can act.`}
+      >
         <div className="max-w-xl">
           <SignForm record={record} as="lead" />
         </div>
@@ -116,7 +129,10 @@ export function SignPanel({ record, turn }: { record: RecordView; turn: SignTurn
     )
   }
   return (
-    <Panel title="Countersign, or decline" note={`${state.signed?.printedName ?? ''} signed it as lead. You are named as the witness, ${opened.people.witness.relation}.`}>
+    <Panel
+      title="Countersign, or decline"
+      note={`${state.signed?.printedName ?? ''} signed it as lead. You are named as the witness, ${opened.people.witness.relation}.`}
+    >
       <div className="grid gap-x-12 gap-y-8 desktop:grid-cols-2">
         <SignForm record={record} as="witness" />
         <DeclineForm record={record} />
