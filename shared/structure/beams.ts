@@ -118,7 +118,7 @@ export function checkBeam(beam: BeamStrength, force: number, factors: StrengthFa
         source: `${held ? 'M = P·L/4' : 'M = P·L, held at one end'}, elementary beam theory; ${factors.ofYield} ${of}; common practice, no source`,
       },
       shearArea === null
-        ? { check: 'shear', notChecked: 'No shear area was entered with this custom section.' }
+        ? { check: 'shear', notChecked: 'The area that carries shear is not known for this section.' }
         : {
             check: 'shear',
             demand: shear,

@@ -30,6 +30,8 @@ interface Piece {
   shearArea: number
   shearStiffnessArea: number
   thickness: number
+  /** Least width, m, at any level of it; null for a round one, which is no wider than a point at its top. */
+  leastWidth: number | null
   round?: boolean
   cautions?: string[]
 }
@@ -68,6 +70,7 @@ function tube(height: number, width: number, wall: number, typedRadius: TypedLen
     shearArea: peakShearArea(secondMoment, 2 * wall, above.first),
     shearStiffnessArea: 2 * wall * height,
     thickness: wall,
+    leastWidth: Math.min(2 * wall, width - 2 * radius),
   }
 }
 
@@ -102,6 +105,7 @@ function channel(section: Extract<MemberSection, { shape: 'channel' }>): Piece {
     shearArea: peakShearArea(2 * half.second, web, half.first),
     shearStiffnessArea: height * web,
     thickness: Math.max(web, flange),
+    leastWidth: web,
     cautions:
       section.sideBySide > 1
         ? []
@@ -128,14 +132,17 @@ function angle(section: Extract<MemberSection, { shape: 'angle' }>): Piece {
     { x: 0, y: height },
   ])
   const { level, secondMoment } = aboutNeutralAxis(moments)
-  // The leg above the neutral axis, its toe taken as square: a little more Q, a little less shear area.
-  const above = (thickness * (height - level) ** 2) / 2
+  // The upright leg above the neutral axis or, where that runs in the other leg, above the corner: there it is narrow.
+  // Its toe is taken as square: a little more Q, a little less shear area.
+  const from = Math.max(level, thickness)
+  const above = thickness * (height - from) * ((height + from) / 2 - level)
   return {
     moments,
     height,
-    shearArea: level > thickness ? peakShearArea(secondMoment, thickness, above) : (2 / 3) * height * thickness,
+    shearArea: peakShearArea(secondMoment, thickness, above),
     shearStiffnessArea: (5 / 6) * height * thickness,
     thickness,
+    leastWidth: thickness,
     cautions: ['An angle also bends sideways and twists: only bending about the axis along its other leg is checked.'],
   }
 }
@@ -148,6 +155,7 @@ function solidRectangle(width: number, height: number): Piece {
     shearArea: (2 / 3) * area,
     shearStiffnessArea: (5 / 6) * area,
     thickness: Math.min(width, height),
+    leastWidth: width,
   }
 }
 
@@ -163,6 +171,7 @@ function round(diameter: number, bore: number): Piece {
     shearArea: peakShearArea(own, diameter - bore, above),
     shearStiffnessArea: bore > 0 ? area / 2 : 0.9 * area,
     thickness: bore > 0 ? (diameter - bore) / 2 : diameter,
+    leastWidth: null,
     round: bore > 0,
   }
 }
@@ -190,60 +199,88 @@ function pieceOf(section: Exclude<MemberSection, { shape: 'custom' }>): Piece {
   }
 }
 
-/** A plate's moments where it sits on the piece, and the area of it that carries shear: only beside. */
-function plateOn(plate: SectionPlate, top: number, bottom: number): { moments: Moments; top: number; bottom: number; upright: number } {
+/** What is `width` wide from one level to another, m. */
+interface Block {
+  width: number
+  from: number
+  to: number
+}
+
+/** Where a plate sits on what spans `from` to `to`: flat above or below it, or beside it, centred on its height. */
+function plateOn(plate: SectionPlate, { from, to }: Pick<Block, 'from' | 'to'>): Block {
   const width = toSI(plate.width)
   const thickness = toSI(plate.thickness)
   if (plate.place === 'beside') {
-    const middle = (top + bottom) / 2
-    const from = middle - width / 2
-    return { moments: outlineMoments(rectangle(thickness, width, from)), top: from + width, bottom: from, upright: width * thickness }
+    const middle = (from + to) / 2
+    return { width: thickness, from: middle - width / 2, to: middle + width / 2 }
   }
-  const from = plate.place === 'on top' ? top : bottom - thickness
-  return { moments: outlineMoments(rectangle(width, thickness, from)), top: from + thickness, bottom: from, upright: 0 }
+  return plate.place === 'on top' ? { width, from: to, to: to + thickness } : { width, from: from - thickness, to: from }
 }
+
+/** The least total width at any level of a section built of blocks. */
+function leastWidthOf(blocks: readonly Block[]): number {
+  const levels = [...new Set(blocks.flatMap(({ from, to }) => [from, to]))].sort((a, b) => a - b)
+  const widths = levels.slice(1).map((to, index) => {
+    const middle = ((levels[index] ?? to) + to) / 2
+    return blocks.reduce((sum, block) => (block.from <= middle && middle <= block.to ? sum + block.width : sum), 0)
+  })
+  return Math.min(...widths)
+}
+
+/**
+ * A shear area that I·b/Q is nowhere below, whatever the section is built of: Q is half the sum of |y|·dA, which is
+ * at most half of √(A·I) (Cauchy and Schwarz), so I·b/Q is at least 2·b·√(I/A) with the least width b.
+ */
+const leastShearArea = (area: number, secondMoment: number, leastWidth: number) => 2 * leastWidth * Math.sqrt(secondMoment / area)
 
 function builtUp(section: Exclude<MemberSection, { shape: 'custom' }>): SectionProperties {
   const piece = pieceOf(section)
   const n = section.sideBySide
-  let moments = withMoments(NO_MOMENTS, piece.moments, n)
-  let [top, bottom] = [piece.height, 0]
-  let upright = 0
   // Plates beside stand against the bare piece; those on top and underneath lie on whatever is there already.
-  const inOrder = [...section.plates.filter(({ place }) => place === 'beside'), ...section.plates.filter(({ place }) => place !== 'beside')]
-  for (const plate of inOrder) {
-    const [flatTop, flatBottom] = plate.place === 'beside' ? [piece.height, 0] : [top, bottom]
-    const added = plateOn(plate, flatTop, flatBottom)
-    moments = withMoments(moments, added.moments)
-    top = Math.max(top, added.top)
-    bottom = Math.min(bottom, added.bottom)
-    upright += added.upright
-  }
+  const beside = section.plates.filter(({ place }) => place === 'beside').map((plate) => plateOn(plate, { from: 0, to: piece.height }))
+  const blocks = [...beside]
+  const reach = () => ({
+    from: Math.min(0, ...blocks.map(({ from }) => from)),
+    to: Math.max(piece.height, ...blocks.map(({ to }) => to)),
+  })
+  for (const plate of section.plates) if (plate.place !== 'beside') blocks.push(plateOn(plate, reach()))
+  const moments = blocks.reduce(
+    (sum, { width, from, to }) => withMoments(sum, outlineMoments(rectangle(width, to - from, from))),
+    withMoments(NO_MOMENTS, piece.moments, n),
+  )
   const { level, secondMoment } = aboutNeutralAxis(moments)
-  const c = Math.max(top - level, level - bottom)
+  const { from, to } = reach()
+  const c = Math.max(to - level, level - from)
+  const plated = blocks.length > 0
+  const cautions = [...(piece.cautions ?? [])]
+  if (plated)
+    cautions.push('Plates count only where they run on past the load and are welded to carry their share: those welds are not checked.')
   return {
     area: moments.area,
     secondMoment,
     sectionModulus: secondMoment / c,
-    shearArea: n * piece.shearArea + (2 / 3) * upright,
-    shearStiffnessArea: n * piece.shearStiffnessArea + (5 / 6) * upright,
+    shearArea: plated ? platedShearArea(piece, n, blocks, moments.area, secondMoment) : n * piece.shearArea,
+    shearStiffnessArea:
+      n * piece.shearStiffnessArea + beside.reduce((sum, block) => sum + (5 / 6) * block.width * (block.to - block.from), 0),
     c,
     thickness: Math.max(piece.thickness, ...section.plates.map((plate) => Math.min(toSI(plate.thickness), toSI(plate.width)))),
-    round: piece.round === true && section.plates.length === 0,
-    cautions: [
-      ...(piece.cautions ?? []),
-      ...(section.plates.length > 0
-        ? ['Plates count only where they run on past the load and are welded to carry their share: those welds are not checked.']
-        : []),
-    ],
+    round: piece.round === true && !plated,
+    cautions,
   }
+}
+
+/** Null where a plate touches a round piece in a line: all the shear between them goes through that weld. */
+function platedShearArea(piece: Piece, n: number, plates: readonly Block[], area: number, secondMoment: number): number | null {
+  if (piece.leastWidth === null || piece.leastWidth <= 0) return null
+  return leastShearArea(area, secondMoment, leastWidthOf([{ width: n * piece.leastWidth, from: 0, to: piece.height }, ...plates]))
 }
 
 /**
  * Properties of a cross-section from its dimensions, SI: doubled by multiplying, reinforced by the parallel-axis
  * theorem. Corners nobody measured are taken as sharp on rolled shapes, which counts too little steel, and as
  * twice the wall on tube. Shear stiffness takes the webs of tube and channel, half of a round tube, 5/6 of a
- * rectangle and 9/10 of a round bar (common practice, no source).
+ * rectangle and 9/10 of a round bar (common practice, no source). The shear area of a reinforced section is one that
+ * I·b/Q can't be below.
  * Source: Green's theorem, I·b/Q for shear (elementary mechanics); checked against the AISC Shapes Database.
  * @throws RangeError with a sentence when the dimensions can't be those of one section.
  */

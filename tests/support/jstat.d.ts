@@ -1,0 +1,20 @@
+/** The part of jstat that the reference tests use; the package brings no types. */
+declare module 'jstat' {
+  export const jStat: {
+    studentt: {
+      cdf: (x: number, dof: number) => number
+      inv: (p: number, dof: number) => number
+    }
+    models: {
+      ols: (
+        endogenous: number[],
+        exogenous: number[][],
+      ) => {
+        coef: number[]
+        R2: number
+        SSE: number
+        t: { se: number[]; sigmaHat: number }
+      }
+    }
+  }
+}
