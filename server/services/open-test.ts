@@ -120,6 +120,7 @@ async function composeOpened(work: Work, request: OpenTestRequest, press: PressS
     repeats: await repeated(work, request),
     walkDownHours: shop.walkDownHours,
     instrumentOverride: request.instrumentOverride,
+    engineer: request.engineer ?? null,
   }
 }
 

@@ -1,6 +1,6 @@
 import { z } from 'zod'
 import { idSchema as envelopeId } from '../ledger/envelope'
-import { legSetupSchema, measuringPointSchema, netSchema, CONCLUSIONS } from '../proof-test/entries'
+import { engineerSchema, legSetupSchema, measuringPointSchema, netSchema, CONCLUSIONS } from '../proof-test/entries'
 import { FORCE_UNITS } from '../units'
 import { idSchema, timeSchema } from './common'
 import { ledgerEntrySchema } from '../ledger/envelope'
@@ -78,6 +78,8 @@ export const openTestRequestSchema = z.object({
       rule: z.string().trim().min(3, 'Name the rule that asks for it.').max(200, 'Keep it to 200 characters.'),
     })
     .nullish(),
+  /** Asked where the load path check comes out over 100 %: the document that stands against it. */
+  engineer: engineerSchema.nullish(),
   repeatsId: idSchema.nullable(),
   instrumentOverride: z.string().trim().min(3, 'Say why in a few words.').max(500).nullable(),
 })

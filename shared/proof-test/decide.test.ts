@@ -114,6 +114,18 @@ describe('people and signatures', () => {
   })
 })
 
+/** A round bar of 40 mm across 640 mm: it yields far below 12 short tons. */
+const weakBeam = {
+  role: 'beam' as const,
+  section: { shape: 'round bar' as const, diameter: { text: '40', unit: 'mm' as const }, sideBySide: 1, plates: [] },
+  material: { grade: 'S355JR' as const },
+  support: 'both ends' as const,
+  span: { text: '640', unit: 'mm' as const },
+  ramOffset: null,
+  hole: null,
+  loadShare: null,
+}
+
 describe('opening', () => {
   const open = (changes: Parameters<typeof openedPayload>[0] = {}) =>
     ask(emptyProofTest(ids.test), { kind: 'opened', payload: openedPayload(changes) })
@@ -163,6 +175,16 @@ describe('opening', () => {
     const gap = open({ opened: { joints: payload.joints.filter((joint) => joint.number > 3) } })
     expect(gap.rules).toEqual(['R9'])
     expect(gap.says).toContain('hangs on no joint')
+  })
+
+  it('R52: a load path check over 100 % waits for an engineer’s document', () => {
+    const weak = {
+      ...payload.press,
+      members: payload.press.members.map((member) => (member.kind === 'bed-beam' ? { ...member, strength: weakBeam } : member)),
+    }
+    expect(open({ opened: { press: weak } }).rules).toEqual(['R52'])
+    const engineer = { name: 'P. Lindqvist', document: 'Calculation 26-118', on: '2026-09-01' }
+    expect(open({ opened: { press: weak, engineer } }).outcome).toBe('allowed')
   })
 
   it('R10: every point has an indicator of its own', () => {

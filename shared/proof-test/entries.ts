@@ -31,6 +31,12 @@ export const legSetupSchema = z.object({
   bedHole: z.string().trim().min(1, 'Name the bed hole.').max(20),
 })
 
+export const engineerSchema = z.object({
+  name: z.string().trim().min(2, 'Name the engineer.').max(80, 'Keep it to 80 characters.'),
+  document: z.string().trim().min(3, 'Say which document, with its number.').max(120, 'Keep it to 120 characters.'),
+  on: z.iso.date('Write the day like 2026-09-14.'),
+})
+
 export const openedSchema = z.object({
   number: z.string().regex(/^PT-\d{4,}$/),
   shop: z.object({ id: idSchema, name: z.string() }),
@@ -53,6 +59,8 @@ export const openedSchema = z.object({
   repeats: z.object({ id: idSchema, number: z.string() }).nullable(),
   walkDownHours: z.number().positive(),
   instrumentOverride: why.nullable(),
+  /** The document of a named engineer that stands against a load path check over 100 %. */
+  engineer: engineerSchema.nullish(),
 })
 
 /** Where in the test a load entry belongs; counted from 0. */

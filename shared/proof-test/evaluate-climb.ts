@@ -15,6 +15,7 @@ import {
 } from './criteria'
 import { NET } from './deflection'
 import type { Opened, Position } from './entries'
+import { predictFromBand } from './expected'
 import { figuresOf, lengthText, pointOf, predict, spread, type Criterion, type Point, type Prediction, type RowFigures } from './figures'
 import { stageTarget, type ForceFigure, type StageTarget } from './force'
 import type { AttemptState, ClimbState, ProofTestState, Row, StageRow } from './state'
@@ -97,11 +98,10 @@ export function evaluateClimb(state: ProofTestState, legIndex: number, climbInde
     const target = stageTarget(opened, stage.percent)
     percents.push(stage.percent)
     const leadPoints = series.get(leadId) ?? []
-    const prediction = start?.force
-      ? predict(opened, leadPoints, start.force.force)
-      : target
-        ? predict(opened, leadPoints, target.readableForce)
-        : null
+    const at = start?.force?.force ?? target?.readableForce
+    const uReading = leadPoints[0]?.uDeflection ?? 0
+    // Before there is a line, the estimate from the members' sections says where the first reading should lie.
+    const prediction = at === undefined ? null : (predict(opened, leadPoints, at) ?? predictFromBand(opened, legIndex, at, uReading))
     const criteria: Criterion[] = []
     let step: StiffnessStep | null = null
     if (start) {

@@ -4,6 +4,7 @@ import { loadPathOf } from '../press/load-path'
 import { lowestLimit, ratedLoadRefusal } from '../press/ratings'
 import { parseDecimal, toSI } from '../units'
 import { SET_UP_ITEMS, type Opened } from './entries'
+import { checkOf } from './expected'
 import { leadInstrument, stageTarget } from './force'
 import { LOADING, rule, type ProofTestQuestion, type ProofTestRule } from './rule'
 import type { JointState } from './state'
@@ -75,6 +76,13 @@ export const OPENING_RULES: readonly ProofTestRule[] = [
   opening('R9', 'The load path is closed: members and joints lead from the ram round the frame to the bed.', (opened) => {
     const path = loadPathOf(opened.press.members, opened.joints)
     return path.closed ? null : `The load path does not close. ${path.gap}`
+  }),
+  opening('R52', 'A load path check over 100 % waits for a named engineer’s document.', (opened) => {
+    const beyond = checkOf(opened).results.filter((result) => result.verdict === 'beyond')
+    const [first] = beyond
+    if (!first || opened.engineer) return null
+    const much = first.utilisation === null ? 'carries nothing' : `comes to ${Math.round(first.utilisation * 100)} % of what it may carry`
+    return `By the estimate ${first.name} ${much} (${first.check}). Lower the rated load, strengthen it, or name the engineer’s document that says otherwise.`
   }),
   opening('R10', 'Every point has an indicator of its own, and every leg of the protocol its bed hole.', (opened) => {
     const ids = new Set(opened.points.map((point) => point.instrumentId))

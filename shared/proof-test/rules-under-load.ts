@@ -5,6 +5,7 @@ import { deflectionsOf, NET } from './deflection'
 import type { Opened, Position, Reading } from './entries'
 import { evaluateLeg, repeatClimbWanted } from './evaluate'
 import { evaluateClimb, predict, type StageEvaluation } from './evaluate-climb'
+import { predictFromBand } from './expected'
 import { forceOf } from './force'
 import { witnessReads } from './protocol'
 import { ROWS, rule, UNDER_LOAD, type ProofTestRule } from './rule'
@@ -58,7 +59,9 @@ export function surprising(state: ProofTestState, at: Position, readings: readon
         ? [{ force: row.force.force, deflection: own.deflection, uForce: row.force.uIndependent, uDeflection: own.uReading }]
         : []
     })
-    const prediction = predict(opened, points, force.force)
+    const leads = figure.id === evaluated.datum?.lead?.id
+    const prediction =
+      predict(opened, points, force.force) ?? (leads ? predictFromBand(opened, at.leg, force.force, figure.uReading) : null)
     if (!prediction || (figure.deflection >= prediction.from && figure.deflection <= prediction.to)) continue
     outside.push(figure.id)
     const far = Math.max(Math.abs(figure.deflection), Math.abs(prediction.deflection)) > 10 * figure.increment
