@@ -1,10 +1,9 @@
 import { readFile } from 'node:fs/promises'
 import ExcelJS from 'exceljs'
-import type { Page } from 'playwright-core'
 import { describe, expect, it } from 'vitest'
-import { shopWithOpenTest, type E2eShop } from '../factories/e2e-shop'
+import { shopWithOpenTest } from '../factories/e2e-shop'
 import { newPage } from '../support/browser'
-import { RunScreen, signIn, type Row } from '../support/run-screen'
+import { leadAtTheRun, RunScreen, signIn, ZERO, type Row } from '../support/run-screen'
 
 /*
  * The press of these tests, computed here by hand and by nothing of the program: 50 mm bore, so
@@ -33,39 +32,7 @@ function row(psi: number, stiffness = 60): Row {
   const pin = net / 4
   return [String(psi), (net + pin).toFixed(2), pin.toFixed(2), pin.toFixed(2)]
 }
-const zero: Row = ['0', '0.00', '0.00', '0.00']
 const netOf = ([, middle, left, right]: Row): number => Number(middle) - (Number(left) + Number(right)) / 2
-
-const tablet = { viewport: { width: 1180, height: 820 } }
-
-async function leadAtTheRun(shop: E2eShop): Promise<{ page: Page; run: RunScreen }> {
-  const page = await newPage(tablet)
-  await signIn(page, shop.lead)
-  const run = new RunScreen(page, shop.testId)
-  await run.open()
-  return { page, run }
-}
-
-/** Walk-down to datum, without the refusals that the first test looks at. */
-async function toTheClimb(run: RunScreen): Promise<void> {
-  await run.press('Joint 7 is welded out')
-  await walkDown(run, true)
-  await run.press(/^Told to me by/)
-  await run.reason('His phone is in the car.')
-  await run.setUp()
-  await run.press('The bed is pinned in hole 4')
-  await run.row(['350'])
-  await run.release()
-  await run.row(zero)
-  await run.row(zero)
-}
-
-async function walkDown(run: RunScreen, before: boolean): Promise<void> {
-  for (let number = 1; number <= 8; number += 1) {
-    await run.accept(number, { weld: number <= 3 || number === 7, before })
-    if (number === 7 && before) await run.reason('Thin plate, preheated and cold.')
-  }
-}
 
 /** One stage: pump, row at the mark, row at the end of the hold. */
 async function stage(run: RunScreen, readings: Row): Promise<void> {
@@ -89,14 +56,14 @@ describe('the first load, by quarters', () => {
     await witnessPage.goto(`/proof-tests/${shop.testId}/attend`)
 
     await run.press('Joint 7 is welded out')
-    await walkDown(run, true)
+    await run.walkDown(true)
     await witnessPage.getByRole('button', { name: 'No joint is missing' }).click()
     await run.setUp()
     await run.press('The bed is pinned in hole 4')
     await run.row(['350'])
     await run.release()
-    await run.row(zero)
-    await run.row(zero)
+    await run.row(ZERO)
+    await run.row(ZERO)
 
     expect(TARGETS).toEqual([1950, 3900, 5900, 7850])
     for (const [index, psi] of TARGETS.entries()) {
@@ -122,8 +89,8 @@ describe('the first load, by quarters', () => {
       } else await run.press(/^Go on to/)
     }
     await run.release()
-    await run.row(zero)
-    await walkDown(run, false)
+    await run.row(ZERO)
+    await run.walkDown(false)
     await run.heading('Conclusion').waitFor()
     await page.getByText('Within every limit checked').first().waitFor()
     await page.getByRole('radio', { name: 'Accepted' }).check({ force: true })
@@ -182,7 +149,7 @@ describe('the first load, by quarters', () => {
   it('stops where the 75 % reading bends away, and the press ends withdrawn', async () => {
     const shop = await shopWithOpenTest()
     const { page, run } = await leadAtTheRun(shop)
-    await toTheClimb(run)
+    await run.toTheClimb()
     for (const psi of [1950, 3900]) {
       await stage(run, row(psi))
       await run.press(/^Go on to/)
@@ -226,7 +193,7 @@ describe('the first load, by quarters', () => {
   it('loses nothing when the network dies and the page reloads between two rows', async () => {
     const shop = await shopWithOpenTest()
     const { page, run } = await leadAtTheRun(shop)
-    await toTheClimb(run)
+    await run.toTheClimb()
     await run.press(/^All behind the shield: pumping to/)
     const kinds = async (): Promise<string[]> => {
       const response = await page.request.get(`/api/proof-tests/${shop.testId}/entries`)

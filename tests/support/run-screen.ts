@@ -1,5 +1,6 @@
 import type { Page } from 'playwright-core'
-import type { Person } from '../factories/e2e-shop'
+import type { E2eShop, Person } from '../factories/e2e-shop'
+import { newPage } from './browser'
 
 /** Gauge (psi), middle, left pin, right pin (mm), as somebody types them. */
 export type Row = readonly [gauge: string, middle: string, left: string, right: string]
@@ -90,4 +91,36 @@ export class RunScreen {
     await this.page.getByLabel(new RegExp(`^Gauge as ${name} reads it`)).fill(gauge)
     await this.press(/^Enter,? my reading/)
   }
+
+  async walkDown(before: boolean): Promise<void> {
+    for (let number = 1; number <= 8; number += 1) {
+      await this.accept(number, { weld: number <= 3 || number === 7, before })
+      if (number === 7 && before) await this.reason('Thin plate, preheated and cold.')
+    }
+  }
+
+  /** From the first joint to the datum that stood still, the shortest way. */
+  async toTheClimb(): Promise<void> {
+    await this.press('Joint 7 is welded out')
+    await this.walkDown(true)
+    await this.press(/^Told to me by/)
+    await this.reason('His phone is in the car.')
+    await this.setUp()
+    await this.press('The bed is pinned in hole 4')
+    await this.row(['350'])
+    await this.release()
+    await this.row(ZERO)
+    await this.row(ZERO)
+  }
+}
+
+export const ZERO: Row = ['0', '0.00', '0.00', '0.00']
+
+/** The lead, signed in on a tablet held sideways, at the run of the shop's test. */
+export async function leadAtTheRun(shop: E2eShop): Promise<{ page: Page; run: RunScreen }> {
+  const page = await newPage({ viewport: { width: 1180, height: 820 } })
+  await signIn(page, shop.lead)
+  const run = new RunScreen(page, shop.testId)
+  await run.open()
+  return { page, run }
 }
