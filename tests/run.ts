@@ -1,6 +1,7 @@
 import { spawnSync } from 'node:child_process'
 import { mkdirSync, readFileSync, rmSync } from 'node:fs'
 import { z } from 'zod'
+import { outsideValuesTable } from './support/outside-values-report'
 
 interface Outcome {
   name: string
@@ -12,6 +13,8 @@ interface Outcome {
 }
 
 const report = '.artefacts/vitest.json'
+/** Where the reference tests leave what they compared; `tests/support/outside-values.ts` writes it. */
+const outsideValues = '.artefacts/outside-values'
 const reportSchema = z.object({
   success: z.boolean(),
   numPassedTests: z.int(),
@@ -43,6 +46,7 @@ function check(name: string, command: string[]): Outcome {
 function tests(command: string[]): Outcome {
   say('\n── tests')
   rmSync(report, { force: true })
+  rmSync(outsideValues, { force: true, recursive: true })
   const { ok, seconds } = run(command)
   const name = 'tests'
   let parsed: z.infer<typeof reportSchema>
@@ -61,6 +65,15 @@ function tests(command: string[]): Outcome {
   return { name, passed, failed, detail, seconds }
 }
 
+/** Values from outside that were compared, with the worst difference of each source; a run that compared none is not in order. */
+function outsideValuesCompared(): Outcome {
+  say('\n── values from outside, with the worst difference relative to each source’s own value')
+  const { lines, values, sources } = outsideValuesTable(outsideValues)
+  for (const line of lines) say(line)
+  const detail = values > 0 ? `${values} compared, from ${sources} sources` : 'none compared: the reference tests left nothing'
+  return { name: 'values', passed: values > 0 ? 1 : 0, failed: values > 0 ? 0 : 1, detail, seconds: 0 }
+}
+
 function main(): number {
   mkdirSync('.artefacts', { recursive: true })
   const node = process.execPath
@@ -69,6 +82,7 @@ function main(): number {
     check('lint', [node, 'node_modules/eslint/bin/eslint.js', '.']),
     check('build', [node, 'server/bootstrap/prepare.mjs', 'build', '--force']),
     tests([node, 'node_modules/vitest/vitest.mjs', 'run', '--reporter=default', '--reporter=json', `--outputFile.json=${report}`]),
+    outsideValuesCompared(),
   ]
   say('')
   for (const { name, failed, detail, seconds } of outcomes) {

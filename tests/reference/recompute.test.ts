@@ -7,6 +7,7 @@ import ExcelJS, { type CellFormulaValue, type Workbook } from 'exceljs'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { recordWorkbook } from '#server/records/record-workbook'
 import { recordedTest, stoppedTest, storedEntries, twoLegTest, type RecordedTest } from '../factories/recorded-test'
+import { comparedWith } from '../support/outside-values'
 
 /**
  * The workbook of a record, recomputed by another program. LibreOffice trusts the results that a file brings along
@@ -124,6 +125,7 @@ describe.each([
     const differing = cells.filter(({ cached, again }) => {
       if (typeof cached === 'string') return again !== cached
       const value = numberOf(again)
+      comparedWith('LibreOffice Calc, cells recomputed', cached, value)
       return !(Math.abs(value - cached) <= 1e-9 * Math.max(1, Math.abs(cached)))
     })
     expect(differing).toEqual([])

@@ -8,7 +8,7 @@ const comparedSchema = z.array(z.object({ source: z.string(), values: z.int().po
  * A table of the values from outside that the reference tests compared, from what each of them left in `folder`:
  * source, how many values, and the worst relative difference. A difference without end is stored as null.
  */
-export function outsideValuesTable(folder: string): { lines: string[]; values: number } {
+export function outsideValuesTable(folder: string): { lines: string[]; values: number; sources: number } {
   const files = existsSync(folder) ? readdirSync(folder).filter((file) => file.endsWith('.json')) : []
   const rows = new Map<string, { values: number; worst: number }>()
   for (const file of files) {
@@ -28,5 +28,6 @@ export function outsideValuesTable(folder: string): { lines: string[]; values: n
       line(`${sorted.length} sources`, String(total), ''),
     ],
     values: total,
+    sources: sorted.length,
   }
 }
