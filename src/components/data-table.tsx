@@ -31,6 +31,8 @@ type DataTableProps<Row> = {
   phoneRow: (row: Row) => RuledRowProps
   sort?: Sort
   onSort?: (sort: Sort) => void
+  /** Columns closer together, for a table of many. */
+  tight?: boolean
   /** In place of rows when there are none. */
   nothing: ReactNode
 }
@@ -42,7 +44,9 @@ function nextSort(column: string, sort: Sort | undefined): Sort {
   return { column, direction: ascending ? 'ascending' : 'descending' }
 }
 
-function HeaderCell<Row>({ column, sort, onSort }: { column: Column<Row>; sort: Sort | undefined; onSort: ((sort: Sort) => void) | undefined }) {
+type HeaderCellProps<Row> = { column: Column<Row>; sort: Sort | undefined; onSort: ((sort: Sort) => void) | undefined; tight: boolean }
+
+function HeaderCell<Row>({ column, sort, onSort, tight }: HeaderCellProps<Row>) {
   const direction = sort?.column === column.id ? sort.direction : 'none'
   const sorts = column.sortable === true && onSort !== undefined
   return (
@@ -50,7 +54,8 @@ function HeaderCell<Row>({ column, sort, onSort }: { column: Column<Row>; sort: 
       scope="col"
       aria-sort={sorts ? direction : undefined}
       className={classNames(
-        'border-b border-hairline pt-4 pr-3 pb-1 align-bottom font-condensed text-14 font-medium text-graphite last:pr-0',
+        'border-b border-hairline pt-4 pb-1 align-bottom font-condensed text-14 font-medium text-graphite last:pr-0',
+        tight ? 'pr-2' : 'pr-3',
         column.align === 'right' ? 'text-right' : 'text-left',
         column.from && hidden[column.from],
         column.className,
@@ -79,7 +84,7 @@ function HeaderCell<Row>({ column, sort, onSort }: { column: Column<Row>; sort: 
  * A list of one kind of thing: a real table from the tablet on, rows of two lines on the phone. It never
  * scrolls sideways; what doesn't fit says `from` which width on it is shown.
  */
-export function DataTable<Row>({ caption, rows, rowKey, columns, phoneRow, sort, onSort, nothing }: DataTableProps<Row>) {
+export function DataTable<Row>({ caption, rows, rowKey, columns, phoneRow, sort, onSort, tight = false, nothing }: DataTableProps<Row>) {
   const phone = usePhone()
   if (rows.length === 0) return <Sheet className="py-4">{nothing}</Sheet>
   if (phone) {
@@ -98,7 +103,7 @@ export function DataTable<Row>({ caption, rows, rowKey, columns, phoneRow, sort,
         <thead>
           <tr>
             {columns.map((column) => (
-              <HeaderCell key={column.id} column={column} sort={sort} onSort={onSort} />
+              <HeaderCell key={column.id} column={column} sort={sort} onSort={onSort} tight={tight} />
             ))}
           </tr>
         </thead>
@@ -107,7 +112,8 @@ export function DataTable<Row>({ caption, rows, rowKey, columns, phoneRow, sort,
             <tr key={rowKey(row)} className="group border-b border-hairline last:border-b-0 hover:bg-field">
               {columns.map((column) => {
                 const classes = classNames(
-                  'h-14 py-1 pr-3 last:pr-0 desktop:h-10',
+                  'h-14 py-1 last:pr-0 desktop:h-10',
+                  tight ? 'pr-2' : 'pr-3',
                   column.align === 'right' && 'text-right',
                   column.from && hidden[column.from],
                   column.className,

@@ -51,8 +51,8 @@ export function ShopMenu({ shop, person, role, entries }: ShopMenuProps) {
         className="flex min-w-0 items-center gap-2 border-l border-ghost px-3 text-left -outline-offset-4! hover:bg-dye desktop:gap-3 desktop:px-[18px]"
       >
         <span className="min-w-0">
-          <span className="block truncate text-14/[17px]">{shop}</span>
-          <span className="block truncate text-14/[17px] text-faint-scribe">
+          <span className="line-clamp-2 text-14/[17px]">{shop}</span>
+          <span className="line-clamp-1 text-14/[17px] wrap-anywhere text-faint-scribe">
             {person}, {role}
           </span>
         </span>

@@ -12,7 +12,10 @@ function Cell({ destination, current }: { destination: Destination; current: boo
       <Link
         to={destination.to}
         aria-current={current ? 'page' : undefined}
-        className={classNames('group relative flex items-center px-2.5 -outline-offset-4! hover:bg-dye desktop:px-[18px]', current ? 'font-semibold' : 'text-scribe')}
+        className={classNames(
+          'group relative flex items-center px-2.5 -outline-offset-4! hover:bg-dye desktop:px-[18px]',
+          current ? 'font-semibold' : 'text-scribe',
+        )}
       >
         {/* Both weights take the wider one's room, so that nothing moves when the cell becomes current. */}
         <span className="relative flex h-full flex-col justify-center">
@@ -33,7 +36,10 @@ export function TopNavigation({ children }: { children: ReactNode }) {
   return (
     <header className="ground-deep-dye relative z-20 hidden tablet:block print:hidden">
       <div className="flex h-[60px]">
-        <Link to={paths.today.href()} className="flex items-center gap-2.5 border-r border-ghost pr-4 pl-4 -outline-offset-4! desktop:pr-[22px] desktop:pl-[21px]">
+        <Link
+          to={paths.today.href()}
+          className="flex items-center gap-2.5 border-r border-ghost pr-4 pl-4 -outline-offset-4! desktop:pr-[22px] desktop:pl-[21px]"
+        >
           <ProductMark size={40} />
           <span className="hidden text-20 font-semibold desktop:block">Quarterload</span>
           <span className="sr-only desktop:hidden">Quarterload</span>

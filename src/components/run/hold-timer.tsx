@@ -57,8 +57,7 @@ function Scale({ total, elapsed, width, words }: ScaleProps): ReactElement {
   const foot = 28
   const labels = multiples(steps.label, 0, total)
   if (labels[labels.length - 1] !== total) labels.push(total)
-  const rays = (values: number[], tall: number): string =>
-    values.map((value) => `M${at(value).toFixed(1)} ${foot}v${-tall}`).join('')
+  const rays = (values: number[], tall: number): string => values.map((value) => `M${at(value).toFixed(1)} ${foot}v${-tall}`).join('')
   const done = at(Math.floor(elapsed))
   return (
     <svg aria-hidden width={width} height={words ? 52 : 30} className="block overflow-visible">
@@ -77,14 +76,7 @@ function Scale({ total, elapsed, width, words }: ScaleProps): ReactElement {
           const close = at(steps.label) - at(0) < 44
           const crowded = inner && (close || (index === labels.length - 2 && at(total) - at(value) < 58))
           return crowded ? null : (
-            <text
-              key={value}
-              x={at(value)}
-              y={foot + 20}
-              fontSize={16}
-              textAnchor={anchor}
-              fill="var(--faint-scribe)"
-            >
+            <text key={value} x={at(value)} y={foot + 20} fontSize={16} textAnchor={anchor} fill="var(--faint-scribe)">
               {clockFigure(value)}
             </text>
           )

@@ -21,19 +21,21 @@ export function ActionPlate({ title, note, onPress, focusHint = false }: PlatePr
   )
 }
 
-/** Something one may do at any time beside the next action: Note, Pause. */
+/** Something one may do at any time beside the next action: Note, Pause. Where it has the whole width, in one line. */
 export function QuietPlate({ title, note, onPress }: PlateProps): ReactElement {
   return (
-    <button
-      type="button"
-      onClick={onPress}
-      className="flex h-full min-h-[76px] w-full touch-manipulation flex-col items-center justify-center rounded-key border-2 border-faint-scribe bg-transparent px-1 text-center text-scribe tablet:min-h-28"
-    >
-      <span className="text-20 font-medium leading-[24px] tablet:text-22 tablet:leading-[28px]">{setPercent(title)}</span>
-      {note !== undefined && (
-        <span className="max-w-[132px] text-balance text-16 leading-[20px] text-faint-scribe">{note}</span>
-      )}
-    </button>
+    <div className="@container h-full">
+      <button
+        type="button"
+        onClick={onPress}
+        className="flex h-full min-h-[76px] w-full touch-manipulation flex-col items-center justify-center rounded-key border-2 border-faint-scribe bg-transparent px-1 text-center text-scribe tablet:min-h-28 @min-[330px]:min-h-14 @min-[330px]:flex-row @min-[330px]:gap-3"
+      >
+        <span className="text-20 font-medium leading-[24px] tablet:text-22 tablet:leading-[28px]">{setPercent(title)}</span>
+        {note !== undefined && (
+          <span className="max-w-[132px] text-balance text-16 leading-[20px] text-faint-scribe @min-[330px]:max-w-none">{note}</span>
+        )}
+      </button>
+    </div>
   )
 }
 

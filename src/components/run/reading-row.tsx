@@ -98,13 +98,11 @@ interface FieldProps {
 function Field(props: FieldProps): ReactElement {
   const { field, focused } = props
   const id = useId()
-  const edge =
-    field.error !== undefined ? 'border-2 border-stop-ink' : focused ? 'border-2 border-ink' : 'border border-rule'
+  const edge = field.error !== undefined ? 'border-2 border-stop-ink' : focused ? 'border-2 border-ink' : 'border border-rule'
   return (
     <div className="min-w-0">
       <label htmlFor={id} className="mb-[5px] block truncate text-16 leading-[24px]">
-        <span className="font-medium text-ink">{field.label}</span>{' '}
-        <span className="ml-2 text-graphite">{field.unit}</span>
+        <span className="font-medium text-ink">{field.label}</span> <span className="ml-2 text-graphite">{field.unit}</span>
       </label>
       <input
         ref={props.bind}
@@ -156,10 +154,7 @@ export function ReadingRow(props: ReadingRowProps): ReactElement {
           <p className="mb-[5px] hidden text-16 font-medium leading-[24px] tablet:block">This row</p>
           <MarkPlate mark={props.mark} onMark={props.onMark} note={props.markNote} shut={props.markShut ?? false} />
         </div>
-        <div
-          className="grid min-w-0 flex-1 grid-cols-2 gap-2 tablet:grid-cols-[repeat(var(--columns),minmax(0,1fr))]"
-          style={columns}
-        >
+        <div className="grid min-w-0 flex-1 grid-cols-2 gap-2 tablet:grid-cols-[repeat(var(--columns),minmax(0,1fr))]" style={columns}>
           {fields.map((field, index) => (
             <Field
               key={field.id}

@@ -71,9 +71,7 @@ function Landscape(props: RunFrameProps): ReactElement {
         <Fit className="min-h-0 flex-1" initial={{ width: 339, height: 644 }}>
           {(size) => props.line(size, 'landscape')}
         </Fit>
-        <div className="h-32 shrink-0 px-4 pb-4">
-          {props.aside ?? <Plates {...props} />}
-        </div>
+        <div className="h-32 shrink-0 px-4 pb-4">{props.aside ?? <Plates {...props} />}</div>
       </div>
     </div>
   )
@@ -118,7 +116,9 @@ function Bar(props: RunFrameProps): ReactElement {
   const plates = props.note === undefined && props.pause === undefined ? undefined : <Plates {...props} />
   const both = props.action !== undefined && plates !== undefined
   return (
-    <div className={`ground-dye grid h-36 shrink-0 items-center gap-3 px-4 ${both ? 'grid-cols-[192px_minmax(0,1fr)_minmax(200px,0.54fr)]' : 'grid-cols-[192px_minmax(0,1fr)]'}`}>
+    <div
+      className={`ground-dye grid h-36 shrink-0 items-center gap-3 px-4 ${both ? 'grid-cols-[192px_minmax(0,1fr)_minmax(200px,0.54fr)]' : 'grid-cols-[192px_minmax(0,1fr)]'}`}
+    >
       <StopPlate stopped={props.stopped} onStop={props.onStop} connected={props.connected} />
       {props.action !== undefined && <div>{props.action}</div>}
       {plates !== undefined && <div className="h-28">{plates}</div>}
@@ -136,14 +136,17 @@ function Phone(props: RunFrameProps): ReactElement {
         {props.over}
       </div>
       <main className="ground-steel relative min-h-0 flex-1 overflow-y-auto">
-        <div className="px-4 py-3">{props.bench}</div>
-        {props.action !== undefined && <div className="ground-steel sticky bottom-0 px-4 py-3">{props.action}</div>}
-        {(props.note !== undefined || props.aside !== undefined) && (
-          <div className="ground-dye grid gap-3 px-4 pt-4">
-            {props.aside}
-            {props.note}
-          </div>
-        )}
+        {/* At least as high as what is left of the screen: the bar below cuts no plate through. */}
+        <div className="flex min-h-full flex-col">
+          <div className="px-4 py-3">{props.bench}</div>
+          {(props.note !== undefined || props.aside !== undefined) && (
+            <div className="ground-dye mt-auto grid gap-3 px-4 py-3">
+              {props.aside}
+              {props.note}
+            </div>
+          )}
+          {props.action !== undefined && <div className="ground-steel sticky bottom-0 px-4 py-3">{props.action}</div>}
+        </div>
         <div className="ground-dye">
           <Fit className="h-[420px]" initial={{ width: 390, height: 420 }}>
             {(size) => props.line(size, 'phone')}

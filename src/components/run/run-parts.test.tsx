@@ -68,12 +68,11 @@ describe('verdicts', () => {
       />,
     )
     const row = screen.getByRole('row', { name: /Softening/ })
-    expect(within(row).getAllByRole('cell').map((cell) => cell.textContent)).toEqual([
-      '',
-      'Beyond',
-      '21\u202f% ± 5',
-      '≤ 15\u202f%',
-    ])
+    expect(
+      within(row)
+        .getAllByRole('cell')
+        .map((cell) => cell.textContent),
+    ).toEqual(['', 'Beyond', '21\u202f% ± 5', '≤ 15\u202f%'])
     expect(screen.getByRole('row', { name: /Creep/ })).toHaveTextContent('Not read')
   })
 

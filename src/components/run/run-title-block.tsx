@@ -2,7 +2,7 @@ import type { ReactElement } from 'react'
 import { ProductMark } from '../marks'
 
 export interface TitleCell {
-  /** Stands faint before the value: "Lead", "Witness". */
+  /** Stands faint before the value: "Lead", "Witness". Only said, not shown, where there is no room for it. */
   label?: string
   value: string
   /** Faint words after the value. */
@@ -51,10 +51,11 @@ export function RunTitleBlock({ cells, kept, waiting = 0 }: RunTitleBlockProps):
         {cells.map((cell) => (
           <div
             key={`${cell.label ?? ''}${cell.value}`}
-            className={`min-w-0 items-center gap-2 whitespace-nowrap border-r border-ghost px-3 text-16 last:border-r-0 tablet:last:border-r desktop:px-4 ${cell.label === undefined ? 'shrink-0' : ''} ${FROM[cell.from ?? 'phone']}`}
+            className={`min-w-0 items-center gap-2 border-r border-ghost px-3 text-16/5 last:border-r-0 tablet:last:border-r desktop:px-4 ${FROM[cell.from ?? 'phone']}`}
           >
-            <dt className={cell.label === undefined ? 'sr-only' : 'text-faint-scribe'}>{cell.label ?? 'Test'}</dt>
-            <dd className="truncate">
+            <dt className={cell.label === undefined ? 'sr-only' : 'text-faint-scribe max-[799px]:sr-only'}>{cell.label ?? 'Test'}</dt>
+            {/* A name that is longer than its cell takes a second line: none is cut. */}
+            <dd className="line-clamp-2">
               <span className={cell.strong === true ? 'font-semibold' : ''}>{cell.value}</span>
               {cell.note !== undefined && <span className="ml-2 text-faint-scribe">{cell.note}</span>}
             </dd>

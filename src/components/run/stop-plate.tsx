@@ -38,11 +38,7 @@ export function StopPlate({ stopped, onStop, connected = true, size = 'tablet' }
     )
   }
   return (
-    <button
-      type="button"
-      onClick={onStop}
-      className={`${box} touch-manipulation gap-[14px] border-2 border-scribe bg-stop text-on-stop`}
-    >
+    <button type="button" onClick={onStop} className={`${box} touch-manipulation gap-[14px] border-2 border-scribe bg-stop text-on-stop`}>
       <Mark name="stop" tone="plate" size={tablet ? 46 : 34} />
       <span className={`font-bold ${tablet ? 'text-34' : 'text-26'}`}>Stop</span>
     </button>

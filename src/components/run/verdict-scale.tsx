@@ -53,7 +53,17 @@ function Point({ x, verdict }: { x: number; verdict: Verdict }): ReactElement {
   return <circle cx={x} cy={y} r={7} fill={INK[verdict]} stroke="var(--steel)" strokeWidth={2} />
 }
 
-function Ruler({ at, ticks, limit, unit }: { at: (value: number) => number; ticks: ReturnType<typeof axisTicks>; limit: number; unit: string }): ReactElement {
+function Ruler({
+  at,
+  ticks,
+  limit,
+  unit,
+}: {
+  at: (value: number) => number
+  ticks: ReturnType<typeof axisTicks>
+  limit: number
+  unit: string
+}): ReactElement {
   const minors = multiples(ticks.minorStep, 0, ticks.max)
   const last = ticks.labels.length - 1
   const tail = unit === '%' ? '\u202f%' : ` ${unit}`

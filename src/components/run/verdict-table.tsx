@@ -75,13 +75,8 @@ export function VerdictTable({ rows, caption }: { rows: VerdictRow[]; caption: s
               <td className="row-span-2 tablet:table-cell tablet:pr-[10px] tablet:align-middle">
                 <Mark name={MARK[row.verdict]} size={24} />
               </td>
-              <td className={`whitespace-nowrap text-18 tablet:table-cell tablet:pr-4 ${WORD[row.verdict]}`}>
-                {verdictWord[row.verdict]}
-              </td>
-              <th
-                scope="row"
-                className="col-start-2 row-start-2 text-left text-16 font-normal text-ink tablet:table-cell tablet:text-18"
-              >
+              <td className={`whitespace-nowrap text-18 tablet:table-cell tablet:pr-4 ${WORD[row.verdict]}`}>{verdictWord[row.verdict]}</td>
+              <th scope="row" className="col-start-2 row-start-2 text-left text-16 font-normal text-ink tablet:table-cell tablet:text-18">
                 {setPercent(row.what)}
               </th>
               <td

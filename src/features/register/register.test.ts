@@ -49,7 +49,11 @@ it('a test that goes on is opened where the person has a part in it, every other
 })
 
 describe('what the address asks of the register', () => {
-  const view = (params: Record<string, string>) => ({ value: (name: string) => params[name] ?? '', sortName: '-opened' as const, cursor: undefined })
+  const view = (params: Record<string, string>) => ({
+    value: (name: string) => params[name] ?? '',
+    sortName: '-opened' as const,
+    cursor: undefined,
+  })
 
   it('is everything, newest first, when it says nothing', () => {
     const { asked, note, narrowed } = testsAsked(id(9), view({}))

@@ -22,12 +22,21 @@ export function AddPersonForm({ shopId, onAdded, onLeave }: AddPersonFormProps) 
   const { errors, submitCount } = form.formState
   const showProblem = useProblemFields(form)
   return (
-    <Form className="gap-x-8 desktop:grid-cols-2" onSubmit={form.handleSubmit((request) => add.mutate(request, { onSuccess: onAdded, onError: showProblem }))}>
+    <Form
+      className="gap-x-8 desktop:grid-cols-2"
+      onSubmit={form.handleSubmit((request) => add.mutate(request, { onSuccess: onAdded, onError: showProblem }))}
+    >
       <div className="empty:hidden desktop:col-span-2">
         <FormError message={errors.root?.message} attempt={submitCount} />
       </div>
       <div className="grid content-start gap-4">
-        <TextField label="Name, as it prints on records" autoComplete="off" autoFocus message={errors.name?.message} {...form.register('name')} />
+        <TextField
+          label="Name, as it prints on records"
+          autoComplete="off"
+          autoFocus
+          message={errors.name?.message}
+          {...form.register('name')}
+        />
         <TextField
           label="E-mail"
           type="email"

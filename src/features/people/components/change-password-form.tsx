@@ -19,8 +19,19 @@ export function ChangePasswordForm() {
       onSubmit={form.handleSubmit((request) => change.mutate(request, { onSuccess: () => form.reset(), onError: showProblem }))}
     >
       <FormError message={errors.root?.message} attempt={submitCount} />
-      <PasswordField label="Password now" autoComplete="current-password" message={errors.currentPassword?.message} {...form.register('currentPassword')} />
-      <PasswordField label="New password" hint="At least 10 characters." autoComplete="new-password" message={errors.newPassword?.message} {...form.register('newPassword')} />
+      <PasswordField
+        label="Password now"
+        autoComplete="current-password"
+        message={errors.currentPassword?.message}
+        {...form.register('currentPassword')}
+      />
+      <PasswordField
+        label="New password"
+        hint="At least 10 characters."
+        autoComplete="new-password"
+        message={errors.newPassword?.message}
+        {...form.register('newPassword')}
+      />
       <FormActions>
         <Button type="submit" kind="next" busy={change.isPending && 'Changing it'}>
           Change the password

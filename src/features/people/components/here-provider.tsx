@@ -39,10 +39,7 @@ export function HereProvider({ children, staysWhenSignedOut = false }: HereProvi
     // What an earlier page kept and could not send goes out from whichever screen comes next.
     if (userId !== undefined && 'indexedDB' in window) void import('../../../lib/outbox').then(({ outbox }) => outbox.sendAs(userId))
   }, [userId])
-  const here = useMemo<Here | null>(
-    () => (user && shops && shop ? { user, shops, shop, adopt } : null),
-    [user, shops, shop, adopt],
-  )
+  const here = useMemo<Here | null>(() => (user && shops && shop ? { user, shops, shop, adopt } : null), [user, shops, shop, adopt])
 
   if (isSignedOut(session.error) && !(staysWhenSignedOut && here)) {
     return <Navigate replace to={paths.signIn.href({ next: location.pathname + location.search })} />

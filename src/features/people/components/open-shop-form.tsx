@@ -24,7 +24,12 @@ export function OpenShopForm({ onOpened }: { onOpened: () => void }) {
     <Form onSubmit={form.handleSubmit((request) => openShop.mutate(request, { onSuccess: onOpened, onError: showProblem }))}>
       <FormError message={errors.root?.message} attempt={submitCount} />
       <TextField label="Name of the shop" autoComplete="organization" message={errors.shopName?.message} {...form.register('shopName')} />
-      <TextField label="Your name, as it prints on records" autoComplete="name" message={errors.ownerName?.message} {...form.register('ownerName')} />
+      <TextField
+        label="Your name, as it prints on records"
+        autoComplete="name"
+        message={errors.ownerName?.message}
+        {...form.register('ownerName')}
+      />
       <div className="grid gap-4 tablet:grid-cols-2">
         <TextField
           label="E-mail"
@@ -39,11 +44,32 @@ export function OpenShopForm({ onOpened }: { onOpened: () => void }) {
         <PasswordField label="Password" autoComplete="new-password" message={errors.password?.message} {...form.register('password')} />
       </div>
       <div className="grid gap-4 tablet:grid-cols-3">
-        <SelectField label="Force in" choices={unitChoices(FORCE_UNITS)} message={errors.forceUnit?.message} {...form.register('forceUnit')} />
-        <SelectField label="Pressure in" choices={unitChoices(PRESSURE_UNITS)} message={errors.pressureUnit?.message} {...form.register('pressureUnit')} />
-        <SelectField label="Length in" choices={unitChoices(LENGTH_UNITS)} message={errors.lengthUnit?.message} {...form.register('lengthUnit')} />
+        <SelectField
+          label="Force in"
+          choices={unitChoices(FORCE_UNITS)}
+          message={errors.forceUnit?.message}
+          {...form.register('forceUnit')}
+        />
+        <SelectField
+          label="Pressure in"
+          choices={unitChoices(PRESSURE_UNITS)}
+          message={errors.pressureUnit?.message}
+          {...form.register('pressureUnit')}
+        />
+        <SelectField
+          label="Length in"
+          choices={unitChoices(LENGTH_UNITS)}
+          message={errors.lengthUnit?.message}
+          {...form.register('lengthUnit')}
+        />
       </div>
-      <Button type="submit" kind="next" wide className="mt-1 min-h-16 text-20 desktop:min-h-16 desktop:text-20" busy={openShop.isPending && 'Opening the shop'}>
+      <Button
+        type="submit"
+        kind="next"
+        wide
+        className="mt-1 min-h-16 text-20 desktop:min-h-16 desktop:text-20"
+        busy={openShop.isPending && 'Opening the shop'}
+      >
         Open the shop
       </Button>
     </Form>

@@ -57,11 +57,13 @@ export function PeopleList({ people, shopId, mayChange, selfId }: PeopleListProp
             <p className="font-semibold">
               {person.name}
               {person.userId === selfId && <span className="font-normal text-graphite"> you</span>}
-              <span className="block truncate font-normal text-graphite desktop:hidden">{person.email}</span>
+              <span className="block font-normal wrap-anywhere text-graphite desktop:hidden">{person.email}</span>
             </p>
-            <p className="truncate text-graphite max-desktop:hidden">{person.email ?? roleNotes[person.role]}</p>
+            <p className="text-graphite wrap-anywhere max-desktop:hidden">{person.email ?? roleNotes[person.role]}</p>
             <p className="font-semibold max-tablet:text-right">{person.endedAt === null ? person.role : `was ${person.role}`}</p>
-            <p className="text-graphite">{person.endedAt === null ? `since ${shortDate(person.addedAt)}` : `left ${shortDate(person.endedAt)}`}</p>
+            <p className="text-graphite">
+              {person.endedAt === null ? `since ${shortDate(person.addedAt)}` : `left ${shortDate(person.endedAt)}`}
+            </p>
             <div className="flex justify-end">
               {mayChange && person.endedAt === null && (
                 <Button

@@ -35,7 +35,12 @@ function Upright({ left }: { left: number }) {
     <g>
       <path d={`M${left} 170V442M${left + 34} 170V442M${left} 505V691M${left + 34} 505V691`} />
       <path d={`M${left} 110v-5.5h34v5.5`} />
-      <path d={`M${left + 5} 170V442M${left + 29} 170V442M${left + 5} 505V691M${left + 29} 505V691`} stroke="var(--faint-scribe)" strokeWidth="1" opacity=".7" />
+      <path
+        d={`M${left + 5} 170V442M${left + 29} 170V442M${left + 5} 505V691M${left + 29} 505V691`}
+        stroke="var(--faint-scribe)"
+        strokeWidth="1"
+        opacity=".7"
+      />
       <path d={`M${outer} 629L${outer + out * 33} 691`} />
       <path d={`M${inner - out * 40} 691H${outer + out * 45}v9H${inner - out * 40}Z`} fill="var(--dye)" />
       <path d={`M${centre} 87V715`} stroke="var(--faint-scribe)" strokeWidth="1" strokeDasharray="14 4 3 4" opacity=".6" />
@@ -83,7 +88,12 @@ function Dimensions() {
   return (
     <g stroke="var(--faint-scribe)" strokeWidth="1" fill="var(--faint-scribe)">
       <path d="M65 104.5H174M65 700H110M70 105V277M70 318V700M201 644H318M347 644H465" fill="none" opacity=".8" />
-      <path stroke="none" d={[arrow([70, 200], [70, 105]), arrow([70, 200], [70, 700]), arrow([300, 644], [201, 644]), arrow([300, 644], [465, 644])].join('')} />
+      <path
+        stroke="none"
+        d={[arrow([70, 200], [70, 105]), arrow([70, 200], [70, 700]), arrow([300, 644], [201, 644]), arrow([300, 644], [465, 644])].join(
+          '',
+        )}
+      />
       <g stroke="none" fontSize="17" textAnchor="middle" fontFamily={CONDENSED}>
         <text x="333" y="650">
           710
@@ -107,7 +117,16 @@ function MeasuringPoints() {
       {points.map((point) => (
         <g key={point.name}>
           <path d={`M${point.x} 507l8.5 13.5h-17Z`} fill="var(--dye)" />
-          <text x={point.textX} y="522" fontSize="16" textAnchor="middle" fill="var(--scribe)" stroke="none" fontFamily={CONDENSED} fontWeight="500">
+          <text
+            x={point.textX}
+            y="522"
+            fontSize="16"
+            textAnchor="middle"
+            fill="var(--scribe)"
+            stroke="none"
+            fontFamily={CONDENSED}
+            fontWeight="500"
+          >
             {point.name}
           </text>
         </g>
@@ -119,7 +138,12 @@ function MeasuringPoints() {
 /** A shop press on two uprights with its eight numbered joints: what the product is about, in one drawing. */
 export function PressDrawing({ className }: { className?: string }) {
   return (
-    <svg viewBox="44 60 540 680" className={className} role="img" aria-label="Front elevation of a shop press with eight numbered joints; six are accepted, two are finished and not examined.">
+    <svg
+      viewBox="44 60 540 680"
+      className={className}
+      role="img"
+      aria-label="Front elevation of a shop press with eight numbered joints; six are accepted, two are finished and not examined."
+    >
       <defs>
         <pattern id="sign-in-hatch" width="7" height="7" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
           <path d="M0 0V7" stroke="var(--faint-scribe)" strokeWidth="1.4" opacity=".75" />
@@ -127,7 +151,11 @@ export function PressDrawing({ className }: { className?: string }) {
       </defs>
       <g fill="none" stroke="var(--scribe)" strokeWidth="1.6">
         <path d="M113 700H553" strokeWidth="1.2" stroke="var(--faint-scribe)" />
-        <path d={Array.from({ length: 36 }, (_, index) => `M${124 + index * 12} 700l-8 9`).join('')} stroke="var(--ghost)" strokeWidth="1" />
+        <path
+          d={Array.from({ length: 36 }, (_, index) => `M${124 + index * 12} 700l-8 9`).join('')}
+          stroke="var(--ghost)"
+          strokeWidth="1"
+        />
         {uprights.map((left) => (
           <Upright key={left} left={left} />
         ))}
@@ -166,14 +194,26 @@ export function QuartersDrawing({ className }: { className?: string }) {
         <path d="M657 115V690" stroke="var(--faint-scribe)" strokeWidth="1" strokeDasharray="14 4 3 4" opacity=".6" />
         <path d="M640 130V660M674 130V660" />
         <path d="M626 150h14M626 275h14M626 400h14M626 525h14M626 650h14" />
-        <path d={Array.from({ length: 21 }, (_, index) => 150 + index * 25).filter((y) => (y - 150) % 125 !== 0).map((y) => `M633 ${y}h7`).join('')} strokeWidth="1" />
+        <path
+          d={Array.from({ length: 21 }, (_, index) => 150 + index * 25)
+            .filter((y) => (y - 150) % 125 !== 0)
+            .map((y) => `M633 ${y}h7`)
+            .join('')}
+          strokeWidth="1"
+        />
         <path d="M647 538H667V660H647Z" fill="var(--thin-dye)" />
         <path d="M642 525H672V532L666 539H648L642 532Z" fill="var(--scribe)" stroke="none" />
         {rungs.map(({ y, percent }) => {
           const now = y === 525
           const toCome = y < 525
           return (
-            <path key={percent} d={`M674 ${y}H810`} stroke={now ? 'var(--chalk)' : 'var(--scribe)'} strokeWidth={now ? 3 : 1.6} strokeDasharray={toCome ? '7 5' : undefined} />
+            <path
+              key={percent}
+              d={`M674 ${y}H810`}
+              stroke={now ? 'var(--chalk)' : 'var(--scribe)'}
+              strokeWidth={now ? 3 : 1.6}
+              strokeDasharray={toCome ? '7 5' : undefined}
+            />
           )
         })}
       </g>

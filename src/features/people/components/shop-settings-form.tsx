@@ -32,9 +32,24 @@ export function ShopSettingsForm({ shop, mayChange }: { shop: Shop; mayChange: b
         <TextField className="tablet:col-span-2" label="Name of the shop" message={errors.name?.message} {...form.register('name')} />
       </FormPart>
       <FormPart title="Units" note="What screens show first. What was typed keeps its own unit.">
-        <SelectField label="Force in" choices={unitChoices(FORCE_UNITS)} message={errors.forceUnit?.message} {...form.register('forceUnit')} />
-        <SelectField label="Pressure in" choices={unitChoices(PRESSURE_UNITS)} message={errors.pressureUnit?.message} {...form.register('pressureUnit')} />
-        <SelectField label="Length in" choices={unitChoices(LENGTH_UNITS)} message={errors.lengthUnit?.message} {...form.register('lengthUnit')} />
+        <SelectField
+          label="Force in"
+          choices={unitChoices(FORCE_UNITS)}
+          message={errors.forceUnit?.message}
+          {...form.register('forceUnit')}
+        />
+        <SelectField
+          label="Pressure in"
+          choices={unitChoices(PRESSURE_UNITS)}
+          message={errors.pressureUnit?.message}
+          {...form.register('pressureUnit')}
+        />
+        <SelectField
+          label="Length in"
+          choices={unitChoices(LENGTH_UNITS)}
+          message={errors.lengthUnit?.message}
+          {...form.register('lengthUnit')}
+        />
       </FormPart>
       <FormPart title="Walk-down" note="How long an examination counts, and when a build is walked down as if new.">
         <TextField

@@ -28,7 +28,13 @@ export function SignInForm({ onSignedIn }: { onSignedIn: () => void }) {
         {...form.register('email')}
       />
       <PasswordField label="Password" autoComplete="current-password" message={errors.password?.message} {...form.register('password')} />
-      <Button type="submit" kind="next" wide className="mt-1 min-h-16 text-20 desktop:min-h-16 desktop:text-20" busy={signIn.isPending && 'Signing in'}>
+      <Button
+        type="submit"
+        kind="next"
+        wide
+        className="mt-1 min-h-16 text-20 desktop:min-h-16 desktop:text-20"
+        busy={signIn.isPending && 'Signing in'}
+      >
         Sign in
       </Button>
     </Form>

@@ -27,7 +27,9 @@ export function TitleBlock({ title, lead, children, foot, wide = false }: TitleB
           )}
         >
           <div className="hidden items-center justify-center py-4 pr-6 tablet:flex desktop:col-start-1 desktop:row-span-2 desktop:row-start-1 desktop:p-4">
-            <PressDrawing className={classNames('h-72 max-w-full desktop:h-[min(680px,calc(100dvh-134px))]', wide && 'tablet:max-desktop:h-40')} />
+            <PressDrawing
+              className={classNames('h-72 max-w-full desktop:h-[min(680px,calc(100dvh-134px))]', wide && 'tablet:max-desktop:h-40')}
+            />
           </div>
           <div className="hidden items-center pr-6 desktop:col-start-2 desktop:row-span-2 desktop:row-start-1 desktop:flex">
             {!wide && <QuartersDrawing className="h-[min(590px,calc(100dvh-210px))]" />}

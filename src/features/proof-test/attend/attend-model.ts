@@ -49,11 +49,16 @@ export function whereItIs(run: Run, opened: Opened): string {
 /** What is so and what the witness does, in the words of the step. */
 export function whatToDo(run: Run): { title: string; body: string } {
   const { step, state } = run
-  if (state.stopped && state.loaded) return { title: 'Stop', body: 'The release valve is opened slowly, now. Stay behind the shield until the gauge reads zero.' }
-  if (state.stopped && step.name === 'conclude') return { title: 'Stopped', body: `${state.stopped.why}. The load is off; the lead concludes the test.` }
+  if (state.stopped && state.loaded)
+    return { title: 'Stop', body: 'The release valve is opened slowly, now. Stay behind the shield until the gauge reads zero.' }
+  if (state.stopped && step.name === 'conclude')
+    return { title: 'Stopped', body: `${state.stopped.why}. The load is off; the lead concludes the test.` }
   switch (step.name) {
     case 'walk-down':
-      return { title: 'Walk the load path together.', body: 'Follow the force from the ram round the frame to the bed. Every place where two parts hold together must be on the list.' }
+      return {
+        title: 'Walk the load path together.',
+        body: 'Follow the force from the ram round the frame to the bed. Every place where two parts hold together must be on the list.',
+      }
     case 'after-walk-down':
       return { title: 'Look again, together.', body: 'The load is off. Every joint is examined once more.' }
     case 'wait':
@@ -62,7 +67,10 @@ export function whatToDo(run: Run): { title: string; body: string } {
       return { title: 'The stage is held.', body: 'Every limit that was checked is kept. The lead decides: go on, wait or stop.' }
     case 'hold':
     case 'read-row':
-      return { title: 'Look and listen.', body: 'If anything cracks, moves or leaks: Stop. Stay behind the shield, out of line with pins, ram and tooling.' }
+      return {
+        title: 'Look and listen.',
+        body: 'If anything cracks, moves or leaks: Stop. Stay behind the shield, out of line with pins, ram and tooling.',
+      }
     case 'sign':
       return { title: 'The lead signs next.', body: 'Then you countersign the record, or decline with a reason.' }
     case 'countersign':
@@ -70,6 +78,9 @@ export function whatToDo(run: Run): { title: string; body: string } {
     case 'sealed':
       return { title: 'Sealed', body: 'Both have signed. Nothing is added to this record any more.' }
     default:
-      return { title: 'Stay behind the shield.', body: 'Nobody stands in line with pins, ram or tooling. If anything is not as agreed: Stop.' }
+      return {
+        title: 'Stay behind the shield.',
+        body: 'Nobody stands in line with pins, ram or tooling. If anything is not as agreed: Stop.',
+      }
   }
 }

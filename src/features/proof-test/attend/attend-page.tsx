@@ -11,7 +11,10 @@ export function AttendPage({ testId }: { testId: string }): ReactElement {
     <WithRun testId={testId}>
       {(run, opened) =>
         run.me.part === null ? (
-          <PlainScreen title="You have no part in this test" actions={<ButtonLink to={paths.proofTest.href(testId)}>Read its record</ButtonLink>}>
+          <PlainScreen
+            title="You have no part in this test"
+            actions={<ButtonLink to={paths.proofTest.href(testId)}>Read its record</ButtonLink>}
+          >
             <p>
               {opened.people.lead.name} leads it, {opened.people.witness.name} is its witness.
             </p>

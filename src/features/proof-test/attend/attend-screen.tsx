@@ -25,11 +25,20 @@ function PausePart({ run }: { run: Run }): ReactElement {
     )
   }
   const may = run.state.loaded !== null && run.state.paused === null && run.state.stopped === null
-  if (may) return <QuietPlate title="Pause" note="release in 5:00 at most" onPress={() => run.record({ kind: 'paused', payload: { why: `Called by ${run.me.name}` } })} />
+  if (may)
+    return (
+      <QuietPlate
+        title="Pause"
+        note="release in 5:00 at most"
+        onPress={() => run.record({ kind: 'paused', payload: { why: `Called by ${run.me.name}` } })}
+      />
+    )
   return (
     <div className="flex min-h-[76px] flex-col items-center justify-center rounded-key border-2 border-dashed border-faint-scribe text-center text-scribe">
       <span className="text-20 font-medium">{run.state.paused ? 'Paused' : 'Pause'}</span>
-      <span className="text-16 text-faint-scribe">{run.state.paused ? 'until the lead goes on' : run.state.loaded ? 'the load comes off' : 'once under load'}</span>
+      <span className="text-16 text-faint-scribe">
+        {run.state.paused ? 'until the lead goes on' : run.state.loaded ? 'the load comes off' : 'once under load'}
+      </span>
     </div>
   )
 }
@@ -76,7 +85,13 @@ export function AttendScreen({ run, opened }: { run: Run; opened: Opened }): Rea
         />
       )}
     >
-      {!connected ? <Unconnected run={run} opened={opened} /> : run.asking ? <ReasonPanel run={run} asking={run.asking} /> : <AttendView run={run} opened={opened} />}
+      {!connected ? (
+        <Unconnected run={run} opened={opened} />
+      ) : run.asking ? (
+        <ReasonPanel run={run} asking={run.asking} />
+      ) : (
+        <AttendView run={run} opened={opened} />
+      )}
     </SlotFrame>
   )
 }

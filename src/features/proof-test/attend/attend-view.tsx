@@ -31,11 +31,20 @@ interface Props {
 function HoldLeft({ run }: { run: Run }): ReactElement | null {
   const current = currentAttempt(run.state)
   const start = current?.attempt.rows.filter((row: StageRow) => row.occasion === 'hold start').at(-1)
-  const running = run.state.loaded !== null && run.state.stopped === null && start !== undefined && current?.attempt.decided?.decision !== 'go-on'
+  const running =
+    run.state.loaded !== null && run.state.stopped === null && start !== undefined && current?.attempt.decided?.decision !== 'go-on'
   const elapsed = useElapsed(running ? start.mark : null)
   if (!running || elapsed === null || !current) return null
   const total = current.stage.holdSeconds
-  return <HoldTimer size="phone" total={total} elapsed={Math.min(elapsed, total)} label={`Hold ${current.stage.percent} %`} sub={elapsed >= total ? 'the hold is over' : `hold left, of ${Math.floor(total / 60)}:${String(total % 60).padStart(2, '0')}`} />
+  return (
+    <HoldTimer
+      size="phone"
+      total={total}
+      elapsed={Math.min(elapsed, total)}
+      label={`Hold ${current.stage.percent} %`}
+      sub={elapsed >= total ? 'the hold is over' : `hold left, of ${Math.floor(total / 60)}:${String(total % 60).padStart(2, '0')}`}
+    />
+  )
 }
 
 /** Where the run is: the strip of the ladder and what is left of the hold. */
@@ -47,7 +56,15 @@ function Where({ run, opened, hidden }: Props & { hidden: boolean }): ReactEleme
           {whereItIs(run, opened)}
         </p>
         <Fit className="h-24 border-b border-ghost" initial={{ width: 390, height: 96 }}>
-          {(size) => <LoadLadder scale="strip" words={false} stages={ladderStages(run.state, opened, run.step)} levelPercent={hidden ? null : levelPercent(run.state, opened, run.evaluation)} {...size} />}
+          {(size) => (
+            <LoadLadder
+              scale="strip"
+              words={false}
+              stages={ladderStages(run.state, opened, run.step)}
+              levelPercent={hidden ? null : levelPercent(run.state, opened, run.evaluation)}
+              {...size}
+            />
+          )}
         </Fit>
         <HoldLeft run={run} />
       </div>
@@ -69,10 +86,10 @@ function Rows({ run, opened }: Props): ReactElement | null {
               <span className="font-medium">{setPercent(capital(name))}</span>
               <span className="text-graphite">{clockTime(row.mark.at, { seconds: true })}</span>
             </p>
-            <dl className="mt-1 grid grid-cols-4 gap-2">
+            <dl className="mt-1 grid grid-cols-[repeat(auto-fill,minmax(7rem,1fr))] gap-x-2 gap-y-1">
               {row.readings.map((reading) => (
                 <div key={reading.sourceId} className="min-w-0">
-                  <dt className="truncate font-condensed text-16 text-graphite">{label(reading.sourceId)}</dt>
+                  <dt className="font-condensed text-16 text-graphite">{label(reading.sourceId)}</dt>
                   <dd className="text-18 font-semibold">
                     {reading.text} <span className="text-16 font-normal text-graphite">{unitLabel(reading.unit)}</span>
                   </dd>
@@ -123,7 +140,10 @@ export function AttendView({ run, opened }: Props): ReactElement {
     )
   }
   const says = hidden
-    ? { title: 'Full load. Your reading comes next.', body: 'Until it is in, the lead’s figures and the verdict stay hidden here. Look and listen: if anything cracks, moves or leaks, Stop.' }
+    ? {
+        title: 'Full load. Your reading comes next.',
+        body: 'Until it is in, the lead’s figures and the verdict stay hidden here. Look and listen: if anything cracks, moves or leaks, Stop.',
+      }
     : whatToDo(run)
   const confirm = step.name === 'walk-down' && step.remaining === 0 && state.loadPathConfirmed === null
   const mark = step.name in MARK ? MARK[step.name as keyof typeof MARK] : null
@@ -145,7 +165,9 @@ export function AttendView({ run, opened }: Props): ReactElement {
             </div>
           </div>
         )}
-        {(step.name === 'walk-down' || step.name === 'after-walk-down') && <Joints run={run} occasion={step.name === 'walk-down' ? 'before load' : 'after load'} />}
+        {(step.name === 'walk-down' || step.name === 'after-walk-down') && (
+          <Joints run={run} occasion={step.name === 'walk-down' ? 'before load' : 'after load'} />
+        )}
         {!hidden && step.name !== 'walk-down' && <Rows run={run} opened={opened} />}
       </Into>
       {record && (

@@ -26,7 +26,13 @@ export function OwnReadingStep({ run, opened, at }: { run: Run; opened: Opened; 
       <p className="mb-2 text-16 text-graphite">The lead’s figure stays hidden until yours is in.</p>
       <OwnReading row={row} sources={sources} name={run.me.name} />
       <div className="mt-2">
-        <Keypad onKey={row.key} onBackspace={row.backspace} onEnter={row.enter} enterLabel={row.last ? 'Enter my reading' : 'Enter'} size="phone" />
+        <Keypad
+          onKey={row.key}
+          onBackspace={row.backspace}
+          onEnter={row.enter}
+          enterLabel={row.last ? 'Enter my reading' : 'Enter'}
+          size="phone"
+        />
       </div>
     </Into>
   )

@@ -10,7 +10,12 @@ import { Into } from '../run/slots'
 import type { Run } from '../use-run'
 import { whereItIs } from './attend-model'
 
-const WORDS: Record<string, string> = { stopped: 'Your stop', paused: 'Your pause', 'independent-read': 'Your reading', 'load-path-confirmed': 'Your confirmation' }
+const WORDS: Record<string, string> = {
+  stopped: 'Your stop',
+  paused: 'Your pause',
+  'independent-read': 'Your reading',
+  'load-path-confirmed': 'Your confirmation',
+}
 
 /** Nothing stale is shown: the voice has to do until the phone is back. */
 export function Unconnected({ run, opened }: { run: Run; opened: Opened }): ReactElement {
@@ -38,7 +43,9 @@ export function Unconnected({ run, opened }: { run: Run; opened: Opened }): Reac
           <div className="flex items-center gap-4 border-b border-ghost pb-4">
             <Mark name="not-connected" tone="dye" size={36} />
             <div>
-              <p className="text-20 font-semibold">{run.connection.lastHeard ? `Last heard ${clockTime(run.connection.lastHeard, { seconds: true })}` : 'Not heard yet'}</p>
+              <p className="text-20 font-semibold">
+                {run.connection.lastHeard ? `Last heard ${clockTime(run.connection.lastHeard, { seconds: true })}` : 'Not heard yet'}
+              </p>
               <p className="text-16 text-faint-scribe">{whereItIs(run, opened)}, then</p>
             </div>
           </div>
@@ -48,7 +55,9 @@ export function Unconnected({ run, opened }: { run: Run; opened: Opened }): Reac
       <Into slot="bench">
         {mine.length > 0 && (
           <>
-            <h2 className="text-20">{mine.length === 1 ? `${WORDS[mine[0]?.kind ?? ''] ?? 'Your entry'} waits here` : `${mine.length} of your entries wait here`}</h2>
+            <h2 className="text-20">
+              {mine.length === 1 ? `${WORDS[mine[0]?.kind ?? ''] ?? 'Your entry'} waits here` : `${mine.length} of your entries wait here`}
+            </h2>
             <ul className="mt-2 border-t border-hairline">
               {mine.map((entry) => (
                 <li key={entry.id} className="flex items-center gap-3 border-b border-hairline py-3 text-18">
@@ -61,7 +70,9 @@ export function Unconnected({ run, opened }: { run: Run; opened: Opened }): Reac
           </>
         )}
         <p className="mt-2 text-16 text-graphite">
-          {mine.length > 0 ? 'It is sent when the phone is back. The lead does not see it before.' : 'This phone goes on by itself when the link is back.'}
+          {mine.length > 0
+            ? 'It is sent when the phone is back. The lead does not see it before.'
+            : 'This phone goes on by itself when the link is back.'}
         </p>
       </Into>
       <Into slot="action">

@@ -10,6 +10,7 @@ function heardOf(run: Run, opened: Opened): string {
   return last ? `heard ${clockTime(last.observedAt)}` : 'not heard yet'
 }
 
+/** On a tablet held upright there is room for the names, and for nothing that can be read elsewhere. */
 export function titleCells(run: Run, opened: Opened, wide: boolean): TitleCell[] {
   const { lead, witness } = opened.people
   const several = opened.legs.length > 1

@@ -39,9 +39,9 @@ function columnsFor(userId: string): Column<TestRow>[] {
       cell: (test) => <TextLink to={whereOf(test, userId)}>{test.number}</TextLink>,
     },
     { id: 'opened', header: 'Opened', sortable: true, className: nowrap, cell: (test) => shortDate(test.openedAt) },
-    { id: 'press', header: 'Press', sortable: true, className: nowrap, cell: (test) => test.pressName },
+    { id: 'press', header: 'Press', sortable: true, cell: (test) => test.pressName },
     { id: 'load', header: 'Rated load', from: 'desktop', className: nowrap, cell: (test) => <Load load={test.ratedLoad} /> },
-    { id: 'protocol', header: 'Protocol', from: 'wide', className: nowrap, cell: (test) => test.protocolName },
+    { id: 'protocol', header: 'Protocol', from: 'wide', cell: (test) => test.protocolName },
     {
       id: 'reached',
       header: 'Reached, of rated',
@@ -63,7 +63,7 @@ function columnsFor(userId: string): Column<TestRow>[] {
     },
     { id: 'lead', header: 'Lead', className: nowrap, cell: (test) => shortName(test.leadName) },
     { id: 'witness', header: 'Witness', from: 'desktop', className: nowrap, cell: (test) => shortName(test.witnessName) },
-    { id: 'seal', header: 'Seal', from: 'desktop', className: classNames(nowrap, 'text-graphite'), cell: sealWord },
+    { id: 'seal', header: 'Seal', from: 'wide', className: classNames(nowrap, 'text-graphite'), cell: sealWord },
   ]
 }
 
@@ -74,6 +74,7 @@ export function TestTable({ tests, userId, sort, onSort, nothing }: TestTablePro
   return (
     <DataTable
       caption="Proof tests of the shop"
+      tight
       rows={tests}
       rowKey={(test) => test.id}
       columns={columnsFor(userId)}

@@ -76,7 +76,10 @@ export function Dashes({ sentences }: { sentences: readonly string[] }) {
   return (
     <ul>
       {sentences.map((sentence) => (
-        <li key={sentence} className="relative pl-[18px] before:absolute before:top-[11px] before:left-0 before:h-0.5 before:w-2.5 before:bg-ink">
+        <li
+          key={sentence}
+          className="relative pl-[18px] before:absolute before:top-[11px] before:left-0 before:h-0.5 before:w-2.5 before:bg-ink"
+        >
           {sentence}
         </li>
       ))}
@@ -90,7 +93,9 @@ export function Answer({ answer, rated }: { answer: MayItBeUsed; rated: TypedFor
     case 'cleared':
       return <ClearedTo clearance={answer.clearance} rated={rated} />
     case 'under test':
-      return <NotToBeUsed title="Under test" why={answer.why} missing={['Nobody uses it before the test is concluded and countersigned.']} />
+      return (
+        <NotToBeUsed title="Under test" why={answer.why} missing={['Nobody uses it before the test is concluded and countersigned.']} />
+      )
     case 'do not use':
       return <NotToBeUsed title="Do not use" why={answer.why} missing={answer.missing} />
   }

@@ -25,7 +25,13 @@ export function ChangeForm({ joints, cleared, send, busy, onDone }: ChangeFormPr
   return (
     <Form onSubmit={form.handleSubmit((payload) => send([{ kind: 'changed', payload }], { onSuccess: onDone, onError }))}>
       <FormError message={errors.root?.message} attempt={submitCount} />
-      <RadioRow label="What happened" stacked choices={changeChoices} message={errors.change && 'Choose what happened.'} {...form.register('change')} />
+      <RadioRow
+        label="What happened"
+        stacked
+        choices={changeChoices}
+        message={errors.change && 'Choose what happened.'}
+        {...form.register('change')}
+      />
       <fieldset>
         <legend className="font-medium">Joints it touched</legend>
         <p className="text-graphite">Leave all empty when you are not sure: every joint is examined again then.</p>

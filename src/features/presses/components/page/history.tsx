@@ -10,11 +10,7 @@ function Dot({ event }: { event: PressEvent }) {
   const marked = event.mark === 'plain' ? null : MARKS[event.mark]
   return (
     <span className="relative z-10 flex w-[22px] shrink-0 justify-center self-start bg-steel py-0.5">
-      {marked ? (
-        <Mark name={marked} size={20} />
-      ) : (
-        <span className="my-1 size-2.5 rounded-full border-2 border-ink" />
-      )}
+      {marked ? <Mark name={marked} size={20} /> : <span className="my-1 size-2.5 rounded-full border-2 border-ink" />}
     </span>
   )
 }
@@ -48,7 +44,12 @@ export function gathered(events: readonly PressEvent[]): PressEvent[] {
   const told: (PressEvent & { count: number })[] = []
   for (const event of events) {
     const last = told.at(-1)
-    const same = event.kind === 'joint-examined' && event.mark === 'plain' && last?.kind === event.kind && last.mark === 'plain' && last.proofTestId === event.proofTestId
+    const same =
+      event.kind === 'joint-examined' &&
+      event.mark === 'plain' &&
+      last?.kind === event.kind &&
+      last.mark === 'plain' &&
+      last.proofTestId === event.proofTestId
     if (last && same) {
       last.count += 1
       last.text = `${last.count} joints examined and accepted`

@@ -38,21 +38,30 @@ function WorkForm({ joint, joints, send, busy, onDone }: ActionProps) {
   return (
     <Form
       onSubmit={form.handleSubmit(({ makeUp, how, workedAt }) =>
-        send([{ kind: 'joint-worked', payload: { jointId: joint.id, makeUp, how, workedAt: new Date(workedAt).toISOString(), test: null } }], {
-          onSuccess: onDone,
-          onError,
-        }),
+        send(
+          [{ kind: 'joint-worked', payload: { jointId: joint.id, makeUp, how, workedAt: new Date(workedAt).toISOString(), test: null } }],
+          {
+            onSuccess: onDone,
+            onError,
+          },
+        ),
       )}
     >
       <FormError message={errors.root?.message} attempt={submitCount} />
-      <RadioRow label={`Joint ${joint.number} is now`} choices={makeUpChoices} message={errors.makeUp?.message} {...form.register('makeUp')} />
+      <RadioRow
+        label={`Joint ${joint.number} is now`}
+        choices={makeUpChoices}
+        message={errors.makeUp?.message}
+        {...form.register('makeUp')}
+      />
       <div className="grid gap-4">
         <TextField label="How" optional placeholder="welded out, E7018" message={errors.how?.message} {...form.register('how')} />
         <TextField label="When the work was done" type="datetime-local" message={errors.workedAt?.message} {...form.register('workedAt')} />
       </div>
       {touched.length > 0 && (
         <p className="text-graphite">
-          It shares members with {nameJoints(touched.map(({ number }) => number))}: {touched.length === 1 ? 'it is' : 'they are'} examined again after.
+          It shares members with {nameJoints(touched.map(({ number }) => number))}: {touched.length === 1 ? 'it is' : 'they are'} examined
+          again after.
         </p>
       )}
       <FormActions>

@@ -35,14 +35,22 @@ export function Joints({ joints, selectedId, onSelect, children }: JointsProps) 
               type="button"
               aria-expanded={selected}
               onClick={() => onSelect(selected ? null : joint.id)}
-              className="grid min-h-14 w-full grid-cols-[2.25rem_minmax(0,1fr)] items-center gap-x-3 px-1 text-left -outline-offset-3! hover:bg-sheet tablet:grid-cols-[2.25rem_minmax(0,1.7fr)_minmax(0,1fr)_minmax(0,1fr)] desktop:min-h-[34px] desktop:grid-cols-[1.75rem_minmax(0,1fr)_5rem_6rem] desktop:gap-x-2"
+              className="grid min-h-14 w-full grid-cols-[2.25rem_minmax(0,1fr)] items-center gap-x-3 px-1 text-left -outline-offset-3! hover:bg-sheet tablet:grid-cols-[2.25rem_minmax(0,1.7fr)_minmax(0,1fr)_minmax(0,1fr)] desktop:min-h-[34px] desktop:grid-cols-[1.75rem_minmax(0,1.08fr)_minmax(0,0.92fr)_6rem] desktop:gap-x-2"
             >
               <span className="flex justify-center">
                 <JointBalloon number={joint.number} state={jointState(joint)} size={24} />
               </span>
               <span className="font-medium">{joint.name}</span>
               <span className="text-graphite max-tablet:col-start-2 desktop:font-condensed">{joint.detail || joint.kind}</span>
-              <span className="text-graphite max-tablet:col-start-2 desktop:font-condensed">{found(joint)}</span>
+              <span
+                className={classNames(
+                  'text-graphite max-tablet:col-start-2 desktop:font-condensed',
+                  // A reason takes a line of its own: the column is as wide as the name of a method.
+                  joint.fellBackBecause !== null && 'tablet:col-span-3 tablet:col-start-2',
+                )}
+              >
+                {found(joint)}
+              </span>
             </button>
             {selected && (
               <div className="px-4 pt-1 pb-4 tablet:pl-12">

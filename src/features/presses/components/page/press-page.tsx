@@ -87,7 +87,9 @@ export function PressPage({ state, people }: PressPageProps) {
             {answer.answer === 'cleared' ? (
               <EndsAtOnce load={answer.clearance.load} buildPauseDays={shop.buildPauseDays} />
             ) : (
-              <p className="text-graphite">Whoever loads it before that loads a frame that nobody answers for. Say so to whoever uses it.</p>
+              <p className="text-graphite">
+                Whoever loads it before that loads a frame that nobody answers for. Say so to whoever uses it.
+              </p>
             )}
           </div>
           <Actions state={state} open={open} onOpen={setOpen} />
@@ -106,7 +108,13 @@ export function PressPage({ state, people }: PressPageProps) {
       <div className="ground-dye desktop:col-start-1 desktop:row-span-2 desktop:row-start-1">
         <PressPlate
           press={description && drawnPress(description)}
-          joints={joints.map((joint) => ({ id: joint.id, number: joint.number, name: joint.name, state: jointState(joint), place: joint.place }))}
+          joints={joints.map((joint) => ({
+            id: joint.id,
+            number: joint.number,
+            name: joint.name,
+            state: jointState(joint),
+            place: joint.place,
+          }))}
           selectedId={selectedId}
           onSelect={(id) => setSelectedId(id === selectedId ? null : id)}
         >
@@ -114,13 +122,15 @@ export function PressPage({ state, people }: PressPageProps) {
         </PressPlate>
       </div>
       <div className={classNames(inset, 'pt-4 pb-8 desktop:col-start-2 desktop:px-8 desktop:pt-0')}>
-        <div className="grid gap-x-8 gap-y-6 desktop:grid-cols-[minmax(0,440fr)_minmax(0,264fr)]">
+        <div className="grid gap-x-6 gap-y-6 desktop:grid-cols-[minmax(0,500fr)_minmax(0,212fr)]">
           <Section title="Joints">
             <Joints joints={joints} selectedId={selectedId} onSelect={setSelectedId}>
               {selected && can('press:record') && !state.underTest && (
                 <JointActions key={selected.id} joint={selected} joints={joints} send={append.mutate} busy={append.isPending} />
               )}
-              {selected && state.underTest && <p>It is walked down in {state.underTest.number}: work and examinations are entered there.</p>}
+              {selected && state.underTest && (
+                <p>It is walked down in {state.underTest.number}: work and examinations are entered there.</p>
+              )}
             </Joints>
           </Section>
           <Section title="What happened">
