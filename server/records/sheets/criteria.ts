@@ -1,5 +1,6 @@
 import type { Workbook } from 'exceljs'
 import type { Criterion } from '#shared/proof-test/evaluate-climb'
+import { uncertaintyWords } from '#shared/proof-test/criterion-words'
 import { verdictWord } from '#shared/proof-test/record'
 import type { RecordOfTest } from '../record'
 import { FIRST_ROW, addSheet, colours, putRow, type Column, type Content } from '../sheet'
@@ -12,6 +13,7 @@ const columns: Column[] = [
   { header: 'Stage', width: 9 },
   { header: 'Criterion', width: 48 },
   { header: 'Read', width: 22, align: 'right' },
+  { header: 'U, k = 2', width: 18, align: 'right' },
   { header: 'Limit', width: 28, align: 'right' },
   { header: 'Verdict', width: 20 },
   { header: 'From', width: 44, wrap: true },
@@ -27,7 +29,8 @@ export function verdictContent(criterion: Criterion | undefined): Content {
 
 /** Every criterion of every stage, raw points among them. */
 export function criteriaSheet(workbook: Workbook, record: RecordOfTest): void {
-  const note = 'A raw point that is undecided holds nothing up by itself: the figure that leads decides. One that is beyond its limit stops.'
+  const note =
+    'A raw point that is undecided holds nothing up by itself: the figure that leads decides. One that is beyond its limit stops.'
   const sheet = addSheet(workbook, CRITERIA_SHEET, { title: 'Criteria', note, record: record.title }, columns)
   let row = FIRST_ROW
   for (const climb of record.evaluation.climbs) {
@@ -43,6 +46,7 @@ export function criteriaSheet(workbook: Workbook, record: RecordOfTest): void {
         { words: where, bold: true },
         criterion.label,
         criterion.reading,
+        uncertaintyWords(record.opened, criterion),
         criterion.limitText,
         verdictContent(criterion),
         criterion.source,

@@ -9,6 +9,7 @@ import type { SignTurn } from '../sign-turn'
 import { Corrections } from './corrections'
 import { CriteriaTable } from './criteria-table'
 import { Cautions, Notices } from './notices'
+import { EveryCriterion } from './every-criterion'
 import { ForceBudget } from './force-budget'
 import { RecordChart } from './record-chart'
 import { RecordFacts } from './record-facts'
@@ -77,6 +78,7 @@ export function RecordSheet(props: RecordSheetProps) {
           </div>
           <StagesAsRead record={record} />
           <ForceBudget record={record} />
+          <EveryCriterion record={record} />
           <Corrections record={record} />
           <Notices record={record} />
           <Cautions record={record} />
