@@ -82,17 +82,25 @@ export function offsetShare(beam: BeamStrength): number {
   return share
 }
 
-/** A section with a hole at mid-height taken out, as far as bending and shear go. */
-function lessHole(section: SectionProperties, hole: Hole | null): { sectionModulus: number; shearArea: number | null } {
-  if (!hole) return { sectionModulus: section.sectionModulus, shearArea: section.shearArea }
+/**
+ * Section modulus (m³) that a hole at mid-height leaves.
+ * @throws RangeError when it is larger than the section.
+ */
+export function netModulus(section: SectionProperties, hole: Hole | null): number {
+  if (!hole) return section.sectionModulus
   const diameter = toSI(hole.diameter)
-  const metal = toSI(hole.metal)
-  const left = section.secondMoment - (metal * diameter ** 3) / 12
-  if (!(diameter < 2 * section.c && left > 0)) throw new RangeError('The hole is larger than the beam. Measure it again.')
-  const shearArea = section.shearArea === null ? null : section.shearArea - diameter * metal
-  if (shearArea !== null && !(shearArea > 0))
+  const left = section.secondMoment - (toSI(hole.metal) * diameter ** 3) / 12
+  if (!(diameter < 2 * section.c && left > 0)) throw new RangeError('The hole is larger than the section. Measure it again.')
+  return left / section.c
+}
+
+/** Shear area (m²) that a hole leaves. @throws RangeError when it leaves none. */
+function netShearArea({ shearArea }: SectionProperties, hole: Hole | null): number | null {
+  if (!hole || shearArea === null) return shearArea
+  const left = shearArea - toSI(hole.diameter) * toSI(hole.metal)
+  if (!(left > 0))
     throw new RangeError('The hole takes away all that carries shear. Measure the hole, and the metal it goes through, again.')
-  return { sectionModulus: left / section.c, shearArea }
+  return left
 }
 
 /**
@@ -103,7 +111,8 @@ export function checkBeam(beam: BeamStrength, force: number, factors: StrengthFa
   return findings('bending and shear', () => {
     const section = sectionProperties(beam.section)
     const steel = strengthOf(beam.material, section.thickness, section.round)
-    const { sectionModulus, shearArea } = lessHole(section, beam.hole)
+    const sectionModulus = netModulus(section, beam.hole)
+    const shearArea = netShearArea(section, beam.hole)
     const span = toSI(beam.span)
     const held = beam.support === 'both ends'
     const moment = held ? simplySupported({ force, span, at: span / 2 }).moment : force * span

@@ -203,6 +203,15 @@ describe('a tie', () => {
     )
   })
 
+  it('bends on what the hole leaves as well', () => {
+    const found = checkTie({ ...tie, eccentricity: mm(40) }, 10_000, DEFAULT_FACTORS)
+    const modulus = (0.024 * (0.1 ** 3 - 0.033 ** 3)) / 12 / 0.05
+    expect(demandOf(found, 'tension and bending, on the net section')).toBeCloseTo(
+      10_000 / (0.0024 - 0.033 * 0.024) + (10_000 * 0.04) / modulus,
+      3,
+    )
+  })
+
   it('a hole as wide as the tie leaves nothing to check', () => {
     expect(reasons(checkTie({ ...tie, hole: { diameter: mm(100), metal: mm(24) } }, 1, DEFAULT_FACTORS))).toEqual([
       expect.stringMatching(/whole section/),

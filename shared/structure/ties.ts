@@ -1,4 +1,5 @@
 import { toSI } from '../units'
+import { netModulus } from './beams'
 import { findings, type Finding, type StrengthFactors } from './factors'
 import { strengthOf } from './materials'
 import type { Hole, TieStrength } from './member-data'
@@ -44,7 +45,7 @@ export function checkTie(tie: TieStrength, force: number, factors: StrengthFacto
       return [
         {
           check: `tension and bending, ${where}`,
-          demand: force / net + (force * arm) / section.sectionModulus,
+          demand: force / net + (force * arm) / netModulus(section, tie.hole),
           capacity: factors.ofYield * steel.yield,
           unit: 'Pa',
           source: `σ = P/A + P·e/S; ${allowed}`,
