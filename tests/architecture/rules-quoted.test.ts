@@ -5,28 +5,33 @@ import { PRESS_RULES } from '#shared/press/decide'
 import { PROOF_TEST_RULES } from '#shared/proof-test/decide'
 
 const ledgers = [
-  { name: 'a proof test', numbers: ['R1', ...PROOF_TEST_RULES.map((rule) => rule.id)], file: 'shared/proof-test/decide.test.ts' },
-  { name: 'a press', numbers: PRESS_RULES.map((rule) => rule.id), file: 'shared/press/decide.test.ts' },
+  {
+    name: 'a proof test',
+    numbers: ['R1', ...PROOF_TEST_RULES.map((rule) => rule.id)],
+    files: ['shared/proof-test/decide.test.ts', 'shared/proof-test/decide-load.test.ts'],
+  },
+  { name: 'a press', numbers: PRESS_RULES.map((rule) => rule.id), files: ['shared/press/decide.test.ts'] },
 ]
 
 /** Rule numbers in the names of tests: `it('R14: …')`, `it('R23 and R24: …')`. */
-function quoted(file: string): Set<string> {
-  const names = readFileSync(file, 'utf8').matchAll(/\bit\(\s*'((?:[RP]\d+)(?:(?:, | and )[RP]\d+)*):/g)
+function quoted(files: readonly string[]): Set<string> {
+  const text = files.map((file) => readFileSync(file, 'utf8')).join('\n')
+  const names = text.matchAll(/\bit\(\s*'((?:[RP]\d+)(?:(?:, | and )[RP]\d+)*):/g)
   return new Set([...names].flatMap(([, list = '']) => list.split(/, | and /)))
 }
 
-describe.each(ledgers)('the numbered rules of $name', ({ numbers, file }) => {
+describe.each(ledgers)('the numbered rules of $name', ({ numbers, files }) => {
   it('each have a number of their own', () => {
     expect(new Set(numbers).size).toBe(numbers.length)
   })
 
   it('are each quoted by at least one test', () => {
-    const tests = quoted(file)
+    const tests = quoted(files)
     expect(numbers.filter((number) => !tests.has(number))).toEqual([])
   })
 
   it('and no test quotes a number that no rule has', () => {
-    expect([...quoted(file)].filter((number) => !numbers.includes(number))).toEqual([])
+    expect([...quoted(files)].filter((number) => !numbers.includes(number))).toEqual([])
   })
 })
 

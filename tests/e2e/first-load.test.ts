@@ -3,7 +3,7 @@ import ExcelJS from 'exceljs'
 import { describe, expect, it } from 'vitest'
 import { shopWithOpenTest } from '../factories/e2e-shop'
 import { newPage } from '../support/browser'
-import { leadAtTheRun, RunScreen, signIn, ZERO, type Row } from '../support/run-screen'
+import { leadAtTheRun, signIn, ZERO, type Row, type RunScreen } from '../support/run-screen'
 
 /*
  * The press of these tests, computed here by hand and by nothing of the program: 50 mm bore, so
