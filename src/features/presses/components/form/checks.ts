@@ -15,7 +15,9 @@ function whole<T>(items: readonly unknown[], schema: z.ZodType<T>): T[] {
 }
 
 /** What can be said of the rated load so far, from the rams and parts that are whole; null while a ram is not. */
-export function ratingSoFar({ description }: Pick<PressFormDraft, 'description'>): { lowest: ComponentLimit; refusal: string | null } | null {
+export function ratingSoFar({
+  description,
+}: Pick<PressFormDraft, 'description'>): { lowest: ComponentLimit; refusal: string | null } | null {
   const payload = toPayload({ pressId: '', description, joints: [], lastWorkedOn: '' }).description
   const rams = whole(payload.rams, ramSchema)
   if (rams.length < payload.rams.length) return null
@@ -28,9 +30,12 @@ export function ratingSoFar({ description }: Pick<PressFormDraft, 'description'>
 
 /** Whether the joints that hold two members lead round the frame without a gap. */
 export function loadPathSoFar(draft: PressFormDraft): LoadPath {
-  const { joints } = toPayload(draft)
+  const { joints } = toPayload({ ...draft, joints: draft.joints.map((joint) => ({ ...joint, strength: null })) })
   const holding = joints.map((joint) => ({ ...joint, name: joint.name || `Joint ${joint.number}` }))
-  return loadPathOf(draft.description.members, whole(holding, jointSchema))
+  return loadPathOf(
+    draft.description.members.map(({ id, kind, name }) => ({ id, kind, name })),
+    whole(holding, jointSchema),
+  )
 }
 
 function fitting(reading: FittingReading, ram: Ram): string {

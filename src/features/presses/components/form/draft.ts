@@ -5,6 +5,8 @@ import { ratedLoadRefusal } from '#shared/press/ratings'
 import { startingFrame } from '#shared/press/starting-joints'
 import type { AreaUnit, ForceUnit, LengthUnit, MassUnit, PressureUnit, Unit } from '#shared/units'
 import { optionalTyped } from '../../../../lib/draft-resolver'
+import { draftOfJointStrength, type JointStrengthDraft, type MemberStrengthDraft } from './strength/draft'
+import { jointStrengthOf, memberStrengthOf } from './strength/payload'
 
 /** A quantity in a form: nothing may be typed yet, and no unit chosen. */
 export type Asked<U extends Unit> = { text: string; unit: U | '' }
@@ -34,11 +36,14 @@ export interface TrainPartDraft {
   ratedPressure: Asked<PressureUnit>
 }
 
-export type JointDraft = Omit<Joint, 'between' | 'madeOn' | 'place' | 'number'> & {
+export type MemberDraft = Omit<Member, 'strength'> & { strength?: MemberStrengthDraft | null }
+
+export type JointDraft = Omit<Joint, 'between' | 'madeOn' | 'place' | 'number' | 'strength'> & {
   number: number
   between: [string, string]
   madeOn: string
   place: string
+  strength?: JointStrengthDraft | null
 }
 
 /** The form as it is typed; the names are those of the entry, so that every message finds its field. */
@@ -56,7 +61,7 @@ export interface PressFormDraft {
       holes: string
     }
     ratedLoad: Asked<ForceUnit>
-    members: Member[]
+    members: MemberDraft[]
     rams: RamDraft[]
     train: TrainPartDraft[]
   }
@@ -118,20 +123,33 @@ export function newPress(nextId: () => string, units: FormUnits): PressFormDraft
   }
 }
 
-export function draftOfJoint(joint: Joint): JointDraft {
+export function draftOfJoint(joint: Joint, units: Pick<FormUnits, 'length'> = { length: 'mm' }): JointDraft {
   const { id, number, name, kind, detail, makeUp, madeBy, filler } = joint
   const [from, to] = joint.between
-  return { id, number, name, kind, detail, between: [from, to], makeUp, madeBy, filler, madeOn: joint.madeOn ?? '', place: joint.place ?? '' }
+  return {
+    id,
+    number,
+    name,
+    kind,
+    detail,
+    between: [from, to],
+    makeUp,
+    madeBy,
+    filler,
+    madeOn: joint.madeOn ?? '',
+    place: joint.place ?? '',
+    strength: joint.strength ? draftOfJointStrength(joint.strength, units) : null,
+  }
 }
 
 /** The members and joints that frames of this kind have at the least. */
-export function proposal(kind: FrameKind, nextId: () => string): { members: Member[]; joints: JointDraft[] } {
+export function proposal(kind: FrameKind, nextId: () => string): { members: MemberDraft[]; joints: JointDraft[] } {
   const { members, joints } = startingFrame(kind, nextId)
-  return { members, joints: joints.map(draftOfJoint) }
+  return { members: members.map((member) => ({ ...member, strength: null })), joints: joints.map((joint) => draftOfJoint(joint)) }
 }
 
 /** Whether members and joints are still what was proposed for one kind of frame, so that another kind may replace them. */
-export function isProposal(kind: FrameKind | '', draft: Pick<PressFormDraft, 'joints'> & { members: readonly Member[] }): boolean {
+export function isProposal(kind: FrameKind | '', draft: Pick<PressFormDraft, 'joints'> & { members: readonly MemberDraft[] }): boolean {
   if (draft.members.length === 0 && draft.joints.length === 0) return true
   if (kind === '') return false
   const proposed = proposal(kind, () => '')
@@ -139,6 +157,7 @@ export function isProposal(kind: FrameKind | '', draft: Pick<PressFormDraft, 'jo
   return (
     JSON.stringify(draft.members.map(({ kind: memberKind, name }) => [memberKind, name])) ===
       JSON.stringify(proposed.members.map(({ kind: memberKind, name }) => [memberKind, name])) &&
+    draft.members.every(({ strength }) => !strength) &&
     draft.joints.length === proposed.joints.length &&
     draft.joints.every((joint, index) => plain(joint) === plain(proposed.joints[index] ?? joint))
   )
@@ -146,7 +165,20 @@ export function isProposal(kind: FrameKind | '', draft: Pick<PressFormDraft, 'jo
 
 export function newJoint(id: string, joints: readonly JointDraft[]): JointDraft {
   const number = Math.max(0, ...joints.map((joint) => joint.number)) + 1
-  return { id, number, name: '', kind: 'weld', detail: '', between: ['', ''], makeUp: 'open', madeBy: '', filler: '', madeOn: '', place: '' }
+  return {
+    id,
+    number,
+    name: '',
+    kind: 'weld',
+    detail: '',
+    between: ['', ''],
+    makeUp: 'open',
+    madeBy: '',
+    filler: '',
+    madeOn: '',
+    place: '',
+    strength: null,
+  }
 }
 
 export function ramOf(ram: RamDraft) {
@@ -170,13 +202,18 @@ const trainPartOf = (part: TrainPartDraft) => ({
   ratedPressure: optionalTyped(part.ratedPressure),
 })
 
-const jointOf = (joint: JointDraft) => ({ ...joint, madeOn: joint.madeOn || null, place: joint.place || null })
+const memberOf = ({ strength, ...member }: MemberDraft) => (strength ? { ...member, strength: memberStrengthOf(strength) } : member)
+
+function jointOf({ strength, ...joint }: JointDraft) {
+  // Null is written out: a joint that is described anew keeps what it isn't told of.
+  return { ...joint, madeOn: joint.madeOn || null, place: joint.place || null, strength: jointStrengthOf(strength, joint.kind) }
+}
 
 const countOf = (text: string): number | undefined => (text.trim() === '' ? 0 : /^\d{1,3}$/.test(text.trim()) ? Number(text) : undefined)
 
 /** The description and joints that the form stands for, unchecked. */
 export function toPayload({ description, joints, lastWorkedOn }: PressFormDraft) {
-  const { dimensions, rams, train, ...rest } = description
+  const { dimensions, members, rams, train, ...rest } = description
   return {
     description: {
       ...rest,
@@ -187,6 +224,7 @@ export function toPayload({ description, joints, lastWorkedOn }: PressFormDraft)
         holePitch: optionalTyped(dimensions.holePitch),
         holes: countOf(dimensions.holes),
       },
+      members: members.map(memberOf),
       rams: rams.map(ramOf),
       train: train.map(trainPartOf),
     },

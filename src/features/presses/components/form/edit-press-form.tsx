@@ -67,8 +67,8 @@ export function EditPressForm({ state, description, units, onDone }: EditPressFo
             <RamsStep form={form} number={2} units={units} />
             <TrainStep form={form} number={3} units={units} />
             <RatedLoadStep form={form} number={4} />
-            <MembersStep form={form} number={5} />
-            <JointsStep form={form} number={6} />
+            <MembersStep form={form} number={5} units={units} />
+            <JointsStep form={form} number={6} units={units} />
             <FormStep number={7} title="Why" note="A clearance ends with this. Joints that are described anew are examined again.">
               <WholeRow>
                 <TextArea label="Why it is changed" value={why} message={said} onChange={(event) => setWhy(event.target.value)} />

@@ -49,7 +49,9 @@ describe('changing what is written down about a press', () => {
     const edits = edit((draft) => {
       draft.description.rams = draft.description.rams.map((ram) => ({ ...ram, bore: { text: '50.8', unit: 'mm' } }))
     })
-    expect(edits).toMatchObject([{ kind: 'described', payload: { description: { rams: [{ bore: { text: '50.8' } }] }, why: 'It was measured again.' } }])
+    expect(edits).toMatchObject([
+      { kind: 'described', payload: { description: { rams: [{ bore: { text: '50.8' } }] }, why: 'It was measured again.' } },
+    ])
   })
 
   it('writes one entry for each joint that was added, changed or taken out, in an order that never leaves a member unknown', () => {
@@ -59,18 +61,44 @@ describe('changing what is written down about a press', () => {
       if (!first || !second) throw new Error('The press has joints.')
       draft.joints = draft.joints.slice(1)
       second.detail = 'fillet 10 mm'
-      draft.joints.push({ ...second, id: '01990000-0000-7000-8000-0000000000bb', number: 9, between: [second.between[0], '01990000-0000-7000-8000-0000000000aa'] })
+      draft.joints.push({
+        ...second,
+        id: '01990000-0000-7000-8000-0000000000bb',
+        number: 9,
+        between: [second.between[0], '01990000-0000-7000-8000-0000000000aa'],
+      })
     })
     expect(edits.map((one) => one.kind)).toEqual(['joint-retired', 'described', 'joint-described', 'joint-added'])
     expect(edits[0]).toMatchObject({ payload: { jointId: joints[0]?.id } })
     expect(edits[2]).toMatchObject({ payload: { joint: { id: joints[1]?.id, detail: 'fillet 10 mm' } } })
   })
 
+  it('writes the strength of a joint down, and writes out that it was taken away again', () => {
+    const stored = {
+      kind: 'bearing',
+      area: { text: '900', unit: 'mm2' },
+      part: { material: { grade: 'A36' }, thickness: { text: '20', unit: 'mm' } },
+      loadShare: null,
+    } as const
+    const [first, ...rest] = state.joints
+    if (!first) throw new Error('The press has joints.')
+    const known = { ...state, joints: [{ ...first, kind: 'bearing' as const, strength: stored }, ...rest] }
+    const draft = draftOfPress(known, description, units)
+    const asIs = pressFormSchema.parse(toPayload(draft))
+    expect(asIs.joints[0]?.strength).toEqual(stored)
+    expect(editsOf(known, asIs, 'Nothing.')).toEqual([])
+    draft.joints = draft.joints.map((joint) => ({ ...joint, strength: null }))
+    const taken = editsOf(known, pressFormSchema.parse(toPayload(draft)), 'It was wrong.')
+    expect(taken).toMatchObject([{ kind: 'joint-described', payload: { joint: { id: first.id, strength: null } } }])
+  })
+
   it('refuses a rated load above the lowest rating, at its field', () => {
     const draft = draftOfPress(state, description, units)
     draft.description.ratedLoad = { text: '16', unit: 'short-ton' }
     const parsed = pressFormSchema.safeParse(toPayload(draft))
-    expect(parsed.error?.issues).toMatchObject([{ path: ['description', 'ratedLoad', 'text'], message: expect.stringContaining('Rate the press no higher') }])
+    expect(parsed.error?.issues).toMatchObject([
+      { path: ['description', 'ratedLoad', 'text'], message: expect.stringContaining('Rate the press no higher') },
+    ])
   })
 
   it('refuses two joints of one number', () => {

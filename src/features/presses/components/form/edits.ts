@@ -2,6 +2,7 @@ import type { PressDraft } from '#shared/press/entries'
 import type { Joint, PressDescription } from '#shared/press/model'
 import type { PressJoint, PressState } from '#shared/press/state'
 import type { Typed, Unit } from '#shared/units'
+import { draftOfMemberStrength } from './strength/draft'
 import { draftOfJoint, newRam, newTrainPart, type Asked, type FormUnits, type PressFormDraft } from './draft'
 
 const asked = <U extends Unit>(typed: Typed<U> | null, otherwise: Asked<U>): Asked<U> => (typed ? { ...typed } : otherwise)
@@ -27,8 +28,8 @@ function ramDraft(ram: PressDescription['rams'][number], units: FormUnits): Pres
 
 /** A joint as it was described, without what happened to it since. */
 function described(joint: PressJoint): Joint {
-  const { id, number, name, kind, detail, between, makeUp, madeBy, filler, madeOn, place } = joint
-  return { id, number, name, kind, detail, between, makeUp, madeBy, filler, madeOn, place }
+  const { id, number, name, kind, detail, between, makeUp, madeBy, filler, madeOn, place, strength } = joint
+  return { id, number, name, kind, detail, between, makeUp, madeBy, filler, madeOn, place, strength }
 }
 
 const inUse = (state: PressState): Joint[] =>
@@ -55,21 +56,28 @@ export function draftOfPress(state: PressState, description: PressDescription, u
         holes: dimensions.holes === 0 ? '' : String(dimensions.holes),
       },
       ratedLoad: { ...description.ratedLoad },
-      members: description.members.map((member) => ({ ...member })),
+      members: description.members.map(({ strength, ...member }) => ({
+        ...member,
+        strength: strength ? draftOfMemberStrength(strength, member.kind, units) : null,
+      })),
       rams: description.rams.map((ram) => ramDraft(ram, units)),
       train: description.train.map((part) => {
         const blank = newTrainPart(part.id, part.kind, part.name, units)
-        return { ...blank, ratedForce: asked(part.ratedForce, blank.ratedForce), ratedPressure: asked(part.ratedPressure, blank.ratedPressure) }
+        return {
+          ...blank,
+          ratedForce: asked(part.ratedForce, blank.ratedForce),
+          ratedPressure: asked(part.ratedPressure, blank.ratedPressure),
+        }
       }),
     },
-    joints: inUse(state).map(draftOfJoint),
+    joints: inUse(state).map((joint) => draftOfJoint(joint, units)),
     lastWorkedOn: state.lastWorkedOn ?? '',
   }
 }
 
-/** The same thing, whatever the order its properties were written in. */
+/** The same thing, whatever the order its properties were written in; what is null may as well be left out. */
 function same(a: unknown, b: unknown): boolean {
-  if (typeof a !== 'object' || typeof b !== 'object' || a === null || b === null) return a === b
+  if (typeof a !== 'object' || typeof b !== 'object' || a === null || b === null) return (a ?? null) === (b ?? null)
   const keys = new Set([...Object.keys(a), ...Object.keys(b)])
   return [...keys].every((key) => same((a as Record<string, unknown>)[key], (b as Record<string, unknown>)[key]))
 }

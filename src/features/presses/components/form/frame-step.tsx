@@ -23,7 +23,13 @@ export function FrameStep({ form, number, onKind }: FrameStepProps) {
   const cFrame = kind === 'c-frame'
   return (
     <FormStep number={number} title="The frame" note="What it is called in the shop, and what it is built like.">
-      <TextField label="Name" placeholder="Press 2" autoComplete="off" message={errors.description?.name?.message} {...register('description.name')} />
+      <TextField
+        label="Name"
+        placeholder="Press 2"
+        autoComplete="off"
+        message={errors.description?.name?.message}
+        {...register('description.name')}
+      />
       <TextField
         label="What it is for"
         optional
@@ -54,7 +60,13 @@ export function FrameStep({ form, number, onKind }: FrameStepProps) {
         units={LENGTH_UNITS}
       />
       {cFrame && (
-        <ControlledQuantity control={control} name="description.dimensions.throat" label="Throat, ram centre to column" optional units={LENGTH_UNITS} />
+        <ControlledQuantity
+          control={control}
+          name="description.dimensions.throat"
+          label="Throat, ram centre to column"
+          optional
+          units={LENGTH_UNITS}
+        />
       )}
       {kind === 'h-frame' && (
         <>
@@ -66,7 +78,13 @@ export function FrameStep({ form, number, onKind }: FrameStepProps) {
             message={errors.description?.dimensions?.holes && 'Enter whole holes, 0 to 40.'}
             {...register('description.dimensions.holes')}
           />
-          <ControlledQuantity control={control} name="description.dimensions.holePitch" label="Hole to hole" optional units={LENGTH_UNITS} />
+          <ControlledQuantity
+            control={control}
+            name="description.dimensions.holePitch"
+            label="Hole to hole"
+            optional
+            units={LENGTH_UNITS}
+          />
         </>
       )}
     </FormStep>

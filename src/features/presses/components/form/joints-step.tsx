@@ -9,7 +9,8 @@ import { FormStep, WholeRow } from '../../../../components/form-steps'
 import { JointBalloon } from '../../../../components/marks'
 import { SelectField } from '../../../../components/select-field'
 import { jointChoices, makeUpChoices } from '../words'
-import { newJoint, type JointDraft } from './draft'
+import { newJoint, type FormUnits, type JointDraft } from './draft'
+import { JointStrengthFields } from './strength/joint-strength'
 import type { PressForm } from './use-press-form'
 
 /** What of a joint is asked once: how it is made, what it holds together, where it is drawn. */
@@ -25,7 +26,13 @@ function Details({ form, index }: { form: PressForm; index: number }) {
   const [from, to] = [errors?.between?.[0]?.message, errors?.between?.[1]?.message]
   return (
     <div className="grid grid-cols-1 items-start gap-x-4 gap-y-3 pb-4 tablet:grid-cols-2">
-      <SelectField label="Holds" nothing="Choose a member" choices={memberChoices} message={from && 'Choose a member.'} {...register(`joints.${index}.between.0`)} />
+      <SelectField
+        label="Holds"
+        nothing="Choose a member"
+        choices={memberChoices}
+        message={from && 'Choose a member.'}
+        {...register(`joints.${index}.between.0`)}
+      />
       <SelectField
         label="to"
         nothing="Choose a member"
@@ -44,19 +51,29 @@ function Details({ form, index }: { form: PressForm; index: number }) {
       <TextField label="Made by" optional autoComplete="off" message={errors?.madeBy?.message} {...register(`joints.${index}.madeBy`)} />
       <DateField label="Made on" optional message={errors?.madeOn?.message} {...register(`joints.${index}.madeOn`)} />
       {jointKind === 'weld' && (
-        <TextField label="Filler" optional placeholder="E7018, 3.2 mm" message={errors?.filler?.message} {...register(`joints.${index}.filler`)} />
+        <TextField
+          label="Filler"
+          optional
+          placeholder="E7018, 3.2 mm"
+          message={errors?.filler?.message}
+          {...register(`joints.${index}.filler`)}
+        />
       )}
       <SelectField label="Drawn at" nothing="Beside the drawing" choices={places} {...register(`joints.${index}.place`)} />
     </div>
   )
 }
 
-type JointRowProps = { form: PressForm; index: number; onRemove: () => void; wrong: boolean }
+type JointRowProps = { form: PressForm; index: number; units: FormUnits; onRemove: () => void; wrong: boolean }
 
-function JointRow({ form, index, onRemove, wrong }: JointRowProps) {
+function JointRow({ form, index, units, onRemove, wrong }: JointRowProps) {
   const { control, register, formState } = form
   // Only what is drawn here: a letter typed into one joint's name draws no other row again.
-  const joint = useWatch({ control, name: `joints.${index}`, compute: (one: JointDraft | undefined) => one && { number: one.number, makeUp: one.makeUp } })
+  const joint = useWatch({
+    control,
+    name: `joints.${index}`,
+    compute: (one: JointDraft | undefined) => one && { number: one.number, makeUp: one.makeUp },
+  })
   const [asked, setAsked] = useState(() => form.getValues(`joints.${index}.name`) === '')
   const errors = formState.errors.joints?.[index]
   if (!joint) return null
@@ -67,7 +84,12 @@ function JointRow({ form, index, onRemove, wrong }: JointRowProps) {
         <span className="mb-2">
           <JointBalloon number={joint.number} state={joint.makeUp} size={34} />
         </span>
-        <TextField label={`Joint ${joint.number}`} autoComplete="off" message={errors?.name?.message ?? errors?.number?.message} {...register(`joints.${index}.name`)} />
+        <TextField
+          label={`Joint ${joint.number}`}
+          autoComplete="off"
+          message={errors?.name?.message ?? errors?.number?.message}
+          {...register(`joints.${index}.name`)}
+        />
         <div className="max-tablet:col-start-2">
           <SelectField label="Made up" choices={makeUpChoices} {...register(`joints.${index}.makeUp`)} />
         </div>
@@ -83,6 +105,7 @@ function JointRow({ form, index, onRemove, wrong }: JointRowProps) {
       {open && (
         <div className="tablet:pl-13">
           <Details form={form} index={index} />
+          <JointStrengthFields form={form} index={index} number={joint.number} units={units} />
         </div>
       )}
     </li>
@@ -90,10 +113,14 @@ function JointRow({ form, index, onRemove, wrong }: JointRowProps) {
 }
 
 /** Every place where two members are held together, and how far each is really made. */
-export function JointsStep({ form, number }: { form: PressForm; number: number }) {
+export function JointsStep({ form, number, units }: { form: PressForm; number: number; units: FormUnits }) {
   const { control, formState, getValues, register } = form
   const joints = useFieldArray({ control, name: 'joints', keyName: 'key' })
-  const finished = useWatch({ control, name: 'joints', compute: (all: JointDraft[]) => all.filter((joint) => joint.makeUp === 'finished').length })
+  const finished = useWatch({
+    control,
+    name: 'joints',
+    compute: (all: JointDraft[]) => all.filter((joint) => joint.makeUp === 'finished').length,
+  })
   const count = joints.fields.length
   return (
     <FormStep
@@ -109,6 +136,7 @@ export function JointsStep({ form, number }: { form: PressForm; number: number }
               key={field.key}
               form={form}
               index={index}
+              units={units}
               onRemove={() => joints.remove(index)}
               wrong={formState.errors.joints?.[index] !== undefined}
             />

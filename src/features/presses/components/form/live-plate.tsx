@@ -28,7 +28,9 @@ function drawn(draft: PressFormDraft) {
   const holes = Number(dimensions.holes)
   const path = loadPathSoFar(draft)
   return {
-    press: frame ? drawnPress({ kind: frame, dimensions: { ...dimensions, holes: Number.isInteger(holes) && holes <= MOST_HOLES ? holes : 0 } }) : null,
+    press: frame
+      ? drawnPress({ kind: frame, dimensions: { ...dimensions, holes: Number.isInteger(holes) && holes <= MOST_HOLES ? holes : 0 } })
+      : null,
     joints: draft.joints.map(({ id, number, name, makeUp, place }) => ({ id, number, name, state: makeUp, place: place || null })),
     gap: path.closed ? null : path.gap,
   }

@@ -71,8 +71,8 @@ export function NewPressForm({ shopId, units, onEntered }: NewPressFormProps) {
             <RamsStep form={form} number={2} units={units} />
             <TrainStep form={form} number={3} units={units} />
             <RatedLoadStep form={form} number={4} />
-            <MembersStep form={form} number={5} />
-            <JointsStep form={form} number={6} />
+            <MembersStep form={form} number={5} units={units} />
+            <JointsStep form={form} number={6} units={units} />
           </FormSteps>
           <FormActions>
             <Button type="submit" kind="next" busy={register.isPending && 'Entering it'}>

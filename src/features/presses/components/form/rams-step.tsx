@@ -53,13 +53,7 @@ function RamFields({ form, index, onRemove }: RamFieldsProps) {
       {areaBy === 'bore' ? (
         <>
           <ControlledQuantity control={control} name={`${at}.bore`} label="Bore, piston diameter" units={LENGTH_UNITS} />
-          <ControlledQuantity
-            control={control}
-            name={`${at}.boreTolerance`}
-            label="Bore known to within"
-            optional
-            units={LENGTH_UNITS}
-          />
+          <ControlledQuantity control={control} name={`${at}.boreTolerance`} label="Bore known to within" optional units={LENGTH_UNITS} />
         </>
       ) : (
         <ControlledQuantity control={control} name={`${at}.effectiveArea`} label="Effective area" units={AREA_UNITS} />

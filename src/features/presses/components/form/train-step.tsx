@@ -20,7 +20,13 @@ function PartFields({ form, index, onRemove }: { form: PressForm; index: number;
       <SelectField label="Part" choices={trainChoices} message={errors?.kind?.message} {...register(`${at}.kind`)} />
       <TextField label="Name or mark" autoComplete="off" message={errors?.name?.message} {...register(`${at}.name`)} />
       <ControlledQuantity control={control} name={`${at}.ratedPressure`} label="Rated pressure" units={PRESSURE_UNITS} />
-      <ControlledQuantity control={control} name={`${at}.ratedForce`} label="or rated force" units={FORCE_UNITS} askUnit="Which ton, or unit?" />
+      <ControlledQuantity
+        control={control}
+        name={`${at}.ratedForce`}
+        label="or rated force"
+        units={FORCE_UNITS}
+        askUnit="Which ton, or unit?"
+      />
       <WholeRow>
         <Button size="line" onClick={onRemove}>
           Take this part out

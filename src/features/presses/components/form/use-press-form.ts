@@ -1,14 +1,14 @@
-import { useCallback, useEffect, useRef, useState } from 'react'
+import { useState } from 'react'
 import { useForm } from 'react-hook-form'
 import { v7 as newId } from 'uuid'
 import type { FrameKind } from '#shared/press/model'
-import { dropDraft, keepDraft, readDraft } from '../../../../lib/drafts'
+import { dropDraft, readDraft } from '../../../../lib/drafts'
 import { draftResolver } from '../../../../lib/draft-resolver'
+import { useKeptDraft } from '../../../../lib/use-kept-draft'
 import { isProposal, pressFormSchema, proposal, toPayload, type PressFormDraft } from './draft'
 
 /** Goes up when the form's fields change, so that an older draft isn't poured into it. */
 const VERSION = 1
-const PAUSE = 300
 
 /** A form over a whole press: its draft outlives a reload under `name`, and its ids are made once. */
 export function usePressForm(name: string, initial: () => PressFormDraft) {
@@ -17,35 +17,9 @@ export function usePressForm(name: string, initial: () => PressFormDraft) {
     resolver: draftResolver(pressFormSchema, toPayload),
     defaultValues: kept ?? initial(),
   })
-  const { subscribe, getValues, setValue, reset } = form
-
-  const done = useRef(false)
-  useEffect(() => {
-    let timer: ReturnType<typeof setTimeout> | undefined
-    const save = () => {
-      if (!done.current) keepDraft(name, VERSION, getValues())
-    }
-    const stop = subscribe({
-      formState: { values: true },
-      callback: () => {
-        clearTimeout(timer)
-        timer = setTimeout(save, PAUSE)
-      },
-    })
-    return () => {
-      stop()
-      if (timer !== undefined) {
-        clearTimeout(timer)
-        save()
-      }
-    }
-  }, [getValues, name, subscribe])
-
+  const { getValues, setValue, reset } = form
   /** Nothing is kept from here on: the press is in the register. */
-  const finish = useCallback(() => {
-    done.current = true
-    dropDraft(name)
-  }, [name])
+  const finish = useKeptDraft(form, name, VERSION)
   return {
     form,
     restored: kept !== undefined,
