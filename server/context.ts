@@ -24,6 +24,6 @@ export interface Work {
 }
 
 /** READ COMMITTED: what a row lock waited for is seen as it is now. */
-export function inTransaction<T>(context: AppContext, work: (transaction: Transaction) => Promise<T>): Promise<T> {
+export function inTransaction<T>(context: Pick<AppContext, 'database'>, work: (transaction: Transaction) => Promise<T>): Promise<T> {
   return context.database.transaction({ isolationLevel: Transaction.ISOLATION_LEVELS.READ_COMMITTED }, work)
 }

@@ -1,3 +1,4 @@
+import type { Transaction } from 'sequelize'
 import type { Work } from '../context'
 import { LedgerEntry, ProofTest, Seal } from '../models'
 import { notFound } from '../problem'
@@ -10,6 +11,11 @@ export async function readRecord({ transaction, actor, now }: Work, id: string):
   const test = await ProofTest.findOne({ where: { id, shopId: actor.shopId }, attributes: ['id'], raw: true, transaction })
   if (test === null) throw notFound('This proof test')
   authorize(actor, 'record:export', { shopId: actor.shopId })
+  return recordSource(transaction, id, now)
+}
+
+/** The same with nobody asking: for commands run on the machine that holds the database. */
+export async function recordSource(transaction: Transaction, id: string, now: Date): Promise<RecordSource> {
   const entries = await LedgerEntry.findAll({
     where: { ledgerId: id },
     attributes: ['seq', 'canonical', 'hash', 'authorId'],
