@@ -7,7 +7,7 @@ export type Row = readonly [gauge: string, middle: string, left: string, right: 
 
 const LABELS = ['Gauge psi', 'Middle mm', 'Left pin mm', 'Right pin mm'] as const
 
-export async function signIn(page: Page, person: Person): Promise<void> {
+export async function signIn(page: Page, person: Pick<Person, 'email' | 'password'>): Promise<void> {
   await page.goto('/sign-in')
   await page.getByLabel('E-mail').fill(person.email)
   await page.getByLabel('Password', { exact: true }).fill(person.password)
