@@ -1,8 +1,9 @@
 import { clearanceLoad, clearancePressure } from '../hydraulics/clearance'
 import { ramInput } from '../press/ratings'
-import { storedEnergy, type StoredEnergy } from '../structure/stored-energy'
+import type { StoredEnergy } from '../structure/stored-energy'
 import { decimalsOf, FORCE_DECIMALS, toSI, toUnit, type ForceUnit, type PressureUnit } from '../units'
 import { evaluateClimb, type ClimbEvaluation, type Criterion, type StageEvaluation } from './evaluate-climb'
+import { energyAt } from './energy'
 import type { Opened } from './entries'
 import { leadInstrument, stageForce } from './force'
 import { witnessReads } from './protocol'
@@ -199,14 +200,10 @@ export function evaluateTest(state: ProofTestState): TestEvaluation {
     jointsAfter(state),
   ]
   const full = stages.filter((stage) => stage.percent >= 100).at(-1)
+  const { start } = full ?? {}
   const energy =
-    full?.start?.lead && full.start.force && full.start.force.force >= 0
-      ? storedEnergy({
-          force: full.start.force.force,
-          opening: Math.abs(full.start.lead.deflection),
-          pressure: full.start.force.pressure ?? 0,
-          oilVolume: 0,
-        })
+    start?.lead && start.force
+      ? energyAt(state, { force: start.force.force, opening: start.lead.deflection, pressure: start.force.pressure })
       : null
   return { climbs, criteria, against: standsAgainst(state, opened, legs, criteria), clearance: clearanceFigures(state, stages), energy }
 }

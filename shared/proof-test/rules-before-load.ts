@@ -80,7 +80,8 @@ export const OPENING_RULES: readonly ProofTestRule[] = [
   opening('R52', 'A load path check over 100 % waits for a named engineer’s document.', (opened) => {
     const { weakest } = checkOf(opened)
     if (weakest?.verdict !== 'beyond' || opened.engineer) return null
-    const much = weakest.utilisation === null ? 'carries nothing' : `comes to ${Math.round(weakest.utilisation * 100)} % of what it may carry`
+    const much =
+      weakest.utilisation === null ? 'carries nothing' : `comes to ${Math.round(weakest.utilisation * 100)} % of what it may carry`
     return `By the estimate ${weakest.name} ${much} (${weakest.check}). Lower the rated load, strengthen it, or name the engineer’s document that says otherwise.`
   }),
   opening('R10', 'Every point has an indicator of its own, and every leg of the protocol its bed hole.', (opened) => {

@@ -1,7 +1,7 @@
 import type { ReactElement } from 'react'
 import { nameJoints } from '#shared/press/joints'
 import { jointReady } from '#shared/proof-test/steps'
-import { storedEnergy } from '#shared/structure/stored-energy'
+import { energyAt } from '#shared/proof-test/energy'
 import { QuietPlate, ShutPlate } from '../../../components/run/plates'
 import { useRunShape } from '../../../components/run/run-frame'
 import type { Run } from '../use-run'
@@ -10,11 +10,12 @@ import { Into } from './slots'
 /** The least energy in frame and oil by the last row under load; null while nothing is loaded or read. */
 function energyOf(run: Run) {
   const row = run.evaluation?.stages.flatMap((stage) => stage.rows).at(-1)
-  if (!run.state.loaded || !row?.force || !row.lead || row.force.force < 0) return null
-  return storedEnergy({ force: row.force.force, opening: Math.abs(row.lead.deflection), pressure: row.force.pressure ?? 0, oilVolume: 0 })
+  if (!run.state.loaded || !row?.force || !row.lead) return null
+  return energyAt(run.state, { force: row.force.force, opening: row.lead.deflection, pressure: row.force.pressure })
 }
 
-const figure = (value: number): string => String(value >= 100 ? Math.round(value / 10) * 10 : Math.round(value))
+/** "290", "17": two figures are all that such an estimate carries. */
+export const energyFigure = (value: number): string => String(value >= 100 ? Math.round(value / 10) * 10 : Math.round(value))
 
 /** What would be let go at once if something broke. */
 export function StoredEnergy({ run }: { run: Run }): ReactElement | null {
@@ -22,7 +23,7 @@ export function StoredEnergy({ run }: { run: Run }): ReactElement | null {
   if (!energy) return null
   return (
     <div className="border-t border-ghost pt-3">
-      <p className="text-20 font-semibold">At least {figure(energy.total)} J is stored.</p>
+      <p className="text-20 font-semibold">At least {energyFigure(energy.total)} J is stored.</p>
       <p className="text-18">
         The same as {Math.max(1, Math.round(energy.massDroppedOneMetre))} kg dropped one metre. Release first, look after.
       </p>
@@ -49,13 +50,18 @@ export function RunAside({ run, onPanel, energy }: RunAsideProps): ReactElement 
     )
   }
   const pause = (): void => run.record({ kind: 'paused', payload: { why: '' } })
-  const shut = run.step.name === 'walk-down' ? run.state.joints.filter((joint) => !jointReady(joint)).map((joint) => joint.joint.number) : []
+  const shut =
+    run.step.name === 'walk-down' ? run.state.joints.filter((joint) => !jointReady(joint)).map((joint) => joint.joint.number) : []
   const mayPause = run.state.loaded !== null && run.state.paused === null && run.state.stopped === null
   return (
     <>
       {!(shape === 'portrait' && shut.length > 0) && (
         <Into slot="note">
-          <QuietPlate title="Note" note={mayPause ? 'noise, leak, readings so far' : 'noise, leak, movement'} onPress={() => onPanel('note')} />
+          <QuietPlate
+            title="Note"
+            note={mayPause ? 'noise, leak, readings so far' : 'noise, leak, movement'}
+            onPress={() => onPanel('note')}
+          />
         </Into>
       )}
       <Into slot="pause">

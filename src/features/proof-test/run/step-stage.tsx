@@ -1,6 +1,7 @@
 import type { ReactElement } from 'react'
 import type { StageRow } from '#shared/proof-test/state'
-import { stageForce, stageTarget } from '#shared/proof-test/force'
+import { energyAt } from '#shared/proof-test/energy'
+import { leadInstrument, stageForce, stageTarget } from '#shared/proof-test/force'
 import { groupDigits } from '#shared/units'
 import { clockFigure } from '../../../components/run/hold-timer'
 import { SoFar } from './so-far'
@@ -14,6 +15,7 @@ import { verdictRows } from '../verdict-model'
 import { useWaitFrom } from '../use-elapsed'
 import { Cautions } from './cautions'
 import { BenchScroll, HeadBand } from './head-band'
+import { energyFigure } from './run-aside'
 import { Into } from './slots'
 import { StageRowBench, useStageRow } from './stage-row'
 import type { StepProps } from './step-props'
@@ -24,6 +26,14 @@ export function BeginStageStep({ run, opened, step }: StepProps<'begin-stage'>):
   const { at, percent } = step
   const target = stageTarget(opened, percent)
   const next = predictionFor(opened, run.evaluation, percent)
+  const energy =
+    percent >= 100 && next && target
+      ? energyAt(run.state, {
+          force: target.readableForce,
+          opening: next.deflection,
+          pressure: leadInstrument(opened)?.details.kind === 'gauge' ? target.readable : null,
+        })
+      : null
   const hold = run.state.legs[at.leg]?.climbs[at.climb]?.stages[at.stage]?.holdSeconds ?? 0
   const pumpTo = target ? `${groupDigits(target.text)} ${target.unit}` : `${percent} %`
   const begin = (): void => {
@@ -57,10 +67,20 @@ export function BeginStageStep({ run, opened, step }: StepProps<'begin-stage'>):
           )}
         </dl>
         {target?.sentence && <p className="mt-3 text-18 font-medium">{target.sentence}</p>}
+        {energy && (
+          <p className="mt-3 text-18">
+            <strong className="font-semibold">At least {energyFigure(energy.total)} J will be stored</strong>, the same as{' '}
+            {Math.max(1, Math.round(energy.massDroppedOneMetre))} kg dropped one metre.
+          </p>
+        )}
         {percent >= 100 && <Cautions className="mt-4" />}
       </BenchScroll>
       <Into slot="action">
-        <ActionPlate title={`All behind the shield: pumping to ${pumpTo}`} note="stop pumping, wait ten seconds, then mark" onPress={begin} />
+        <ActionPlate
+          title={`All behind the shield: pumping to ${pumpTo}`}
+          note="stop pumping, wait ten seconds, then mark"
+          onPress={begin}
+        />
       </Into>
     </>
   )
@@ -76,7 +96,14 @@ export function ReadRowStep(props: StepProps<'read-row'>): ReactElement {
   return (
     <>
       {row.draft.mark ? (
-        <TimerBand step={step} total={total} elapsed={elapsed} label={`Hold ${step.percent} %`} sub="left, from the mark" overText="Over: enter this row" />
+        <TimerBand
+          step={step}
+          total={total}
+          elapsed={elapsed}
+          label={`Hold ${step.percent} %`}
+          sub="left, from the mark"
+          overText="Over: enter this row"
+        />
       ) : (
         <HeadBand low step={step} title={`${step.percent} %: mark, then read`}>
           The mark starts the hold.
@@ -111,7 +138,14 @@ export function HoldStep(props: StepProps<'hold'>): ReactElement {
     : { title: over ? 'The hold is over: mark, then read.' : 'Hold. Watch the gauge, do not pump.', hint: `At the mark: ${held ?? ''}.` }
   return (
     <>
-      <TimerBand step={step} total={step.stage.holdSeconds} elapsed={elapsed} label={`Hold ${step.percent} %`} sub="left, from the mark" overText="Over: read the row" />
+      <TimerBand
+        step={step}
+        total={step.stage.holdSeconds}
+        elapsed={elapsed}
+        label={`Hold ${step.percent} %`}
+        sub="left, from the mark"
+        overText="Over: read the row"
+      />
       <StageRowBench
         {...props}
         row={row}
