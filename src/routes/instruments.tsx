@@ -1,28 +1,31 @@
+import { INSTRUMENT_SORTS } from '#shared/api/instruments'
 import { ButtonLink } from '../components/button'
 import { KeysetPages } from '../components/keyset-pages'
 import { NothingHere } from '../components/nothing-here'
 import { Page } from '../components/page'
 import { SkeletonRows } from '../components/skeleton'
 import { useInstruments } from '../features/instruments/api/get-instruments'
+import { instrumentsAsked } from '../features/instruments/asked'
 import { InstrumentFilters } from '../features/instruments/components/instrument-filters'
 import { InstrumentTable } from '../features/instruments/components/instrument-table'
-import { useRegisterView } from '../features/instruments/components/register-view'
 import { calendarDate } from '../lib/dates'
 import { useCan, useShop } from '../lib/here'
+import { useRegister } from '../lib/register-view'
 import { paths } from '../paths'
 
 export function Component() {
   const shop = useShop()
   const can = useCan()
-  const view = useRegisterView(shop.id)
-  const list = useInstruments(view.asked)
+  const view = useRegister({ sorts: INSTRUMENT_SORTS, fallback: 'code', href: paths.instruments.href })
+  const { asked, narrowed } = instrumentsAsked(shop.id, view)
+  const list = useInstruments(asked)
   if (list.error && list.data === undefined) throw list.error
   const enter = can('instrument:write') && (
     <ButtonLink kind="next" to={paths.newInstrument.href({ shop: shop.id })}>
       Enter an instrument
     </ButtonLink>
   )
-  const nothing = view.narrowed ? (
+  const nothing = narrowed ? (
     <NothingHere what="No instrument fits." next="Take out a word, or show all kinds." />
   ) : (
     <NothingHere what="No instrument is entered yet." next="A test reads at least one gauge or load cell, and one indicator." />
@@ -30,10 +33,10 @@ export function Component() {
   return (
     <Page title="Instruments" note={view.sort.column === 'due' ? 'by the day they fall due' : 'by their code'} actions={enter || undefined}>
       <InstrumentFilters
-        search={view.asked.search ?? ''}
-        kind={view.asked.kind ?? ''}
-        retired={view.asked.retired === 'yes'}
-        sort={view.asked.sort}
+        search={asked.search ?? ''}
+        kind={asked.kind ?? ''}
+        retired={asked.retired === 'yes'}
+        sort={asked.sort}
         onChange={view.change}
       />
       {list.data === undefined ? (

@@ -1,15 +1,15 @@
-import { useEffect, useRef, useState } from 'react'
+import { useState } from 'react'
 import { useForm } from 'react-hook-form'
 import { v7 as newId } from 'uuid'
 import { openTestRequestSchema } from '#shared/api/proof-tests'
-import { dropDraft, keepDraft, readDraft } from '../../lib/drafts'
+import { readDraft } from '../../lib/drafts'
 import { draftResolver } from '../../lib/draft-resolver'
 import { bootId, deviceId, monotonicMs } from '../../lib/entry'
+import { useKeptDraft } from '../../lib/use-kept-draft'
 import { newPlan, toRequest, type PlanDraft, type PlanLookup, type Stamp } from './draft'
 
 /** Goes up when the form's fields change, so that an older draft isn't poured into it. */
 const VERSION = 2
-const PAUSE = 300
 
 const stamp = (): Stamp => ({ deviceId: deviceId(), bootId, monotonicMs: monotonicMs(), observedAt: new Date().toISOString() })
 
@@ -24,36 +24,7 @@ export function usePlanForm(shopId: string, askedPress: string, lookup: PlanLook
     resolver: draftResolver(openTestRequestSchema, (draft: PlanDraft) => toRequest(draft, stamp(), lookup)),
     defaultValues: initial,
   })
-  const { subscribe, getValues } = form
-  const done = useRef(false)
-  useEffect(() => {
-    let timer: ReturnType<typeof setTimeout> | undefined
-    const save = () => {
-      if (!done.current) keepDraft(name, VERSION, getValues())
-    }
-    const stop = subscribe({
-      formState: { values: true },
-      callback: () => {
-        clearTimeout(timer)
-        timer = setTimeout(save, PAUSE)
-      },
-    })
-    return () => {
-      stop()
-      if (timer !== undefined) {
-        clearTimeout(timer)
-        save()
-      }
-    }
-  }, [getValues, name, subscribe])
-  return {
-    form,
-    /** Nothing is kept from here on: the test is open. */
-    finish() {
-      done.current = true
-      dropDraft(name)
-    },
-  }
+  return { form, finish: useKeptDraft(form, name, VERSION) }
 }
 
 export type PlanForm = ReturnType<typeof usePlanForm>['form']

@@ -2,7 +2,7 @@ import { nameJoints, neighboursOf } from '#shared/press/joints'
 import type { ExaminationMethod } from '#shared/press/model'
 import type { JointState } from '#shared/proof-test/state'
 import type { JointMarkState } from '../../components/marks'
-import { capital } from './names'
+import { capital } from '../../lib/words'
 
 export type Occasion = 'before load' | 'after load'
 

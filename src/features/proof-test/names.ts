@@ -1,12 +1,5 @@
 import { formatForce, toUnit, unitLabel, type ForceUnit } from '#shared/units'
 
-/** "M. Sandoval" of "Marit Sandoval": a title block has little room. */
-export function shortName(name: string): string {
-  const words = name.trim().split(/\s+/)
-  const last = words.pop() ?? ''
-  return [...words.map((word) => `${word.charAt(0)}.`), last].join(' ')
-}
-
 /** "9 short tons" of a round load, "7.5 short tons" of another: no digit that says nothing. */
 export function roundLoad(force: number, unit: ForceUnit): string {
   const value = toUnit(force, unit)
@@ -18,5 +11,3 @@ export function roundLoad(force: number, unit: ForceUnit): string {
 export function duration(seconds: number): string {
   return seconds % 60 === 0 ? `${seconds / 60} min` : `${seconds} s`
 }
-
-export const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1)

@@ -2,6 +2,7 @@ import type { InstrumentRow } from '#shared/api/instruments'
 import { Mark } from '../../../components/marks'
 import { classNames } from '../../../lib/class-names'
 import { longDate } from '../../../lib/dates'
+import { capital } from '../../../lib/words'
 import { calibrationWord } from './calibration-word'
 
 function sayWhatFollows({ calibration, retired }: InstrumentRow, blocks: boolean, soon: boolean): string {
@@ -24,7 +25,7 @@ export function CalibrationState({ instrument, today }: { instrument: Instrument
       <Mark name={retired ? 'abandoned' : mark} size={52} />
       <div className="min-w-0">
         <p className={classNames('text-26 font-semibold', blocks && !retired && calibration !== null && 'text-stop-ink')}>
-          {words.charAt(0).toUpperCase() + words.slice(1)}
+          {capital(words)}
           {!retired && calibration && calibration.result === 'in tolerance' && (
             <span className="font-normal text-ink">
               , {blocks ? 'was due' : soon ? '' : 'until '} {longDate(calibration.dueOn)}

@@ -5,6 +5,7 @@ import { TextLink } from '../../../components/button'
 import { DataTable, type Column, type Sort } from '../../../components/data-table'
 import { Mark } from '../../../components/marks'
 import { shortDate } from '../../../lib/dates'
+import { capital } from '../../../lib/words'
 import { paths } from '../../../paths'
 import { DueCell, calibrationWord } from './calibration-word'
 
@@ -60,8 +61,6 @@ function columnsFor(today: string): Column<InstrumentRow>[] {
     },
   ]
 }
-
-const capital = (text: string) => text.charAt(0).toUpperCase() + text.slice(1)
 
 type InstrumentTableProps = {
   instruments: readonly InstrumentRow[]

@@ -1,15 +1,12 @@
 import { zodResolver } from '@hookform/resolvers/zod'
 import { useForm } from 'react-hook-form'
 import { openShopRequestSchema } from '#shared/api/open-shop'
-import { FORCE_UNITS, LENGTH_UNITS, PRESSURE_UNITS, unitLabel, type Unit } from '#shared/units'
 import { Button } from '../../../components/button'
 import { PasswordField, TextField } from '../../../components/field'
 import { Form, FormError } from '../../../components/form'
-import { SelectField } from '../../../components/select-field'
 import { useProblemFields } from '../../../lib/use-problem-fields'
 import { useOpenShop } from '../api/open-shop'
-
-export const unitChoices = (units: readonly Unit[]) => units.map((unit) => ({ value: unit, label: unitLabel(unit, { plural: true }) }))
+import { UnitFields } from './unit-fields'
 
 /** A new shop and its owner, in one step. */
 export function OpenShopForm({ onOpened }: { onOpened: () => void }) {
@@ -44,24 +41,7 @@ export function OpenShopForm({ onOpened }: { onOpened: () => void }) {
         <PasswordField label="Password" autoComplete="new-password" message={errors.password?.message} {...form.register('password')} />
       </div>
       <div className="grid gap-4 tablet:grid-cols-3">
-        <SelectField
-          label="Force in"
-          choices={unitChoices(FORCE_UNITS)}
-          message={errors.forceUnit?.message}
-          {...form.register('forceUnit')}
-        />
-        <SelectField
-          label="Pressure in"
-          choices={unitChoices(PRESSURE_UNITS)}
-          message={errors.pressureUnit?.message}
-          {...form.register('pressureUnit')}
-        />
-        <SelectField
-          label="Length in"
-          choices={unitChoices(LENGTH_UNITS)}
-          message={errors.lengthUnit?.message}
-          {...form.register('lengthUnit')}
-        />
+        <UnitFields register={form.register} errors={errors} />
       </div>
       <Button
         type="submit"

@@ -1,4 +1,5 @@
 import { roles, type Role } from '#shared/policy'
+import { capital } from '../../../lib/words'
 
 /** What each role is there for, in the words of the trade. */
 export const roleNotes: Record<Role, string> = {
@@ -8,4 +9,4 @@ export const roleNotes: Record<Role, string> = {
   crew: 'Sees which press may be used, to what load, and reports changes',
 }
 
-export const roleChoices = roles.map((role) => ({ value: role, label: role.charAt(0).toUpperCase() + role.slice(1) }))
+export const roleChoices = roles.map((role) => ({ value: role, label: capital(role) }))

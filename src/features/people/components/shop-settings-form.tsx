@@ -1,14 +1,12 @@
 import { zodResolver } from '@hookform/resolvers/zod'
 import { useForm } from 'react-hook-form'
 import { shopSchema, type Shop } from '#shared/api/shops'
-import { FORCE_UNITS, LENGTH_UNITS, PRESSURE_UNITS } from '#shared/units'
 import { Button } from '../../../components/button'
 import { TextField } from '../../../components/field'
 import { Form, FormActions, FormError, FormPart } from '../../../components/form'
-import { SelectField } from '../../../components/select-field'
 import { useProblemFields } from '../../../lib/use-problem-fields'
 import { useChangeShop } from '../api/change-shop'
-import { unitChoices } from './open-shop-form'
+import { UnitFields } from './unit-fields'
 
 const settingsSchema = shopSchema.omit({ id: true })
 
@@ -32,24 +30,7 @@ export function ShopSettingsForm({ shop, mayChange }: { shop: Shop; mayChange: b
         <TextField className="tablet:col-span-2" label="Name of the shop" message={errors.name?.message} {...form.register('name')} />
       </FormPart>
       <FormPart title="Units" note="What screens show first. What was typed keeps its own unit.">
-        <SelectField
-          label="Force in"
-          choices={unitChoices(FORCE_UNITS)}
-          message={errors.forceUnit?.message}
-          {...form.register('forceUnit')}
-        />
-        <SelectField
-          label="Pressure in"
-          choices={unitChoices(PRESSURE_UNITS)}
-          message={errors.pressureUnit?.message}
-          {...form.register('pressureUnit')}
-        />
-        <SelectField
-          label="Length in"
-          choices={unitChoices(LENGTH_UNITS)}
-          message={errors.lengthUnit?.message}
-          {...form.register('lengthUnit')}
-        />
+        <UnitFields register={form.register} errors={errors} />
       </FormPart>
       <FormPart title="Walk-down" note="How long an examination counts, and when a build is walked down as if new.">
         <TextField

@@ -3,9 +3,10 @@ import { RAM_POSITIONS } from '#shared/press/model'
 import { TextField } from '../../../components/field'
 import { FormStep, WholeRow } from '../../../components/form-steps'
 import { SelectField } from '../../../components/select-field'
+import { capital } from '../../../lib/words'
 import type { PlanForm } from '../use-plan-form'
 
-const positions = RAM_POSITIONS.map((position) => ({ value: position, label: position.charAt(0).toUpperCase() + position.slice(1) }))
+const positions = RAM_POSITIONS.map((position) => ({ value: position, label: capital(position) }))
 
 /** Where bed and ram stand in each leg. The clearance names them, and no others. */
 export function LegsStep({ form, number }: { form: PlanForm; number: number }) {

@@ -7,6 +7,7 @@ import { ControlledRadios } from '../../../components/controlled'
 import { FieldMessage, TextField } from '../../../components/field'
 import { FormStep, WholeRow } from '../../../components/form-steps'
 import { SelectField, type Choice } from '../../../components/select-field'
+import { capital } from '../../../lib/words'
 import { netOf } from '../draft'
 import type { PlanForm } from '../use-plan-form'
 
@@ -113,7 +114,7 @@ export function PointsStep({ form, number, press, indicators }: PointsStepProps)
             choices={[
               {
                 value: 'yes',
-                label: net.label.charAt(0).toUpperCase() + net.label.slice(1),
+                label: capital(net.label),
                 note: 'so that slack at the ends is not taken for bending',
               },
               { value: 'no', label: 'Each point by itself' },

@@ -12,6 +12,7 @@ import {
   type Member,
   type TrainPart,
 } from '#shared/press/model'
+import { capital } from '../../../lib/words'
 
 export const frameWords: Record<FrameKind, string> = {
   'h-frame': 'H-frame',
@@ -68,8 +69,6 @@ export const changeWords: Record<(typeof CHANGE_KINDS)[number], { label: string;
   painted: { label: 'Painted', note: 'joints may be hidden under it' },
   'ram or gauge changed': { label: 'Ram or gauge changed' },
 }
-
-const capital = (text: string) => text.charAt(0).toUpperCase() + text.slice(1)
 
 const choicesOf = <Value extends string>(values: readonly Value[], label: (value: Value) => string) =>
   values.map((value) => ({ value, label: label(value) }))

@@ -7,9 +7,9 @@ import { TextField } from '../../../components/field'
 import { JointBalloon } from '../../../components/marks'
 import { RadioRow } from '../../../components/radio-row'
 import { ActionPlate } from '../../../components/run/plates'
+import { capital } from '../../../lib/words'
 import { useDraft } from '../drafts'
 import { jointMark, jointSays, type Occasion } from '../joint-words'
-import { capital } from '../names'
 import type { Run } from '../use-run'
 import { Into } from './slots'
 
@@ -35,7 +35,8 @@ export function JointPanel({ run, joint, occasion, onDone }: JointPanelProps): R
   const [asked, setAsked] = useState(false)
   const weld = kind === 'weld'
   const noMethod = asked && looked.method === '' ? 'Say how it was examined.' : undefined
-  const notCold = asked && weld && occasion === 'before load' && !looked.cold ? 'Let it cool until a bare hand can lie on it, then tick this.' : undefined
+  const notCold =
+    asked && weld && occasion === 'before load' && !looked.cold ? 'Let it cool until a bare hand can lie on it, then tick this.' : undefined
   const write = (result: 'accepted' | 'rejected'): void => {
     setAsked(true)
     const needsCold = weld && occasion === 'before load' && result === 'accepted'
@@ -68,17 +69,32 @@ export function JointPanel({ run, joint, occasion, onDone }: JointPanelProps): R
       />
       {weld && occasion === 'before load' && (
         <div className="mt-2">
-          <CheckRow label="Cooled, and 12 hours since welding" checked={looked.cold} message={notCold} onChange={(event) => change({ cold: event.target.checked })} />
+          <CheckRow
+            label="Cooled, and 12 hours since welding"
+            checked={looked.cold}
+            message={notCold}
+            onChange={(event) => change({ cold: event.target.checked })}
+          />
         </div>
       )}
       <div className="mt-2 grid items-end gap-3 tablet:grid-cols-[minmax(0,1fr)_auto]">
-        <TextField label="Remark" optional value={looked.remark} maxLength={500} onChange={(event) => change({ remark: event.target.value })} />
+        <TextField
+          label="Remark"
+          optional
+          value={looked.remark}
+          maxLength={500}
+          onChange={(event) => change({ remark: event.target.value })}
+        />
         <Button className="desktop:min-h-14" onClick={() => write('rejected')}>
           Joint {number} is rejected
         </Button>
       </div>
       <Into slot="action">
-        <ActionPlate title={`Joint ${number} is accepted`} note={looked.method === '' ? 'say how it was examined' : `examined: ${looked.method}`} onPress={() => write('accepted')} />
+        <ActionPlate
+          title={`Joint ${number} is accepted`}
+          note={looked.method === '' ? 'say how it was examined' : `examined: ${looked.method}`}
+          onPress={() => write('accepted')}
+        />
       </Into>
     </section>
   )

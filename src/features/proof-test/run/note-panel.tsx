@@ -4,8 +4,8 @@ import { Button } from '../../../components/button'
 import { TextArea } from '../../../components/field'
 import { RadioRow } from '../../../components/radio-row'
 import { ActionPlate } from '../../../components/run/plates'
+import { capital } from '../../../lib/words'
 import { useDraft } from '../drafts'
-import { capital } from '../names'
 import type { Run } from '../use-run'
 import { BenchScroll, HeadBand } from './head-band'
 import { Into } from './slots'
@@ -15,7 +15,9 @@ type Kind = (typeof KINDS)[number]
 
 export function positionOf(run: Run): Position | null {
   const { position } = run.state
-  return position && position.stage !== null && position.attempt !== null ? { ...position, stage: position.stage, attempt: position.attempt } : null
+  return position && position.stage !== null && position.attempt !== null
+    ? { ...position, stage: position.stage, attempt: position.attempt }
+    : null
 }
 
 /** Something heard or seen, written down where the test is. */

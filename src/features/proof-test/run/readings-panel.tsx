@@ -9,7 +9,7 @@ import { TextField } from '../../../components/field'
 import { ActionPlate } from '../../../components/run/plates'
 import { setPercent } from '../../../components/typeset'
 import { clockTime } from '../../../lib/dates'
-import { capital } from '../names'
+import { capital } from '../../../lib/words'
 import { rowSources } from '../row-model'
 import { rowsSoFar, type NamedRow } from '../rows-so-far'
 import type { Run } from '../use-run'
@@ -72,7 +72,14 @@ function Correction({ run, opened, chosen, onLeave }: { run: Run; opened: Opened
   const write = (): void => {
     setAsked(true)
     if (!parsed.ok || why.trim().length < 3) return
-    const payload = { entryId: row.entryId, sourceId: reading.sourceId, text: text.trim(), unit: reading.unit, why: why.trim(), readAgainByBoth: both }
+    const payload = {
+      entryId: row.entryId,
+      sourceId: reading.sourceId,
+      text: text.trim(),
+      unit: reading.unit,
+      why: why.trim(),
+      readAgainByBoth: both,
+    }
     run.record({ kind: 'corrected', payload })
     onLeave()
   }
@@ -92,10 +99,20 @@ function Correction({ run, opened, chosen, onLeave }: { run: Run; opened: Opened
           message={asked && !parsed.ok ? parsed.message : undefined}
           onChange={setText}
         />
-        <TextField label="Why" maxLength={500} value={why} message={asked && why.trim().length < 3 ? 'Say why in a few words.' : undefined} onChange={(event) => setWhy(event.target.value)} />
+        <TextField
+          label="Why"
+          maxLength={500}
+          value={why}
+          message={asked && why.trim().length < 3 ? 'Say why in a few words.' : undefined}
+          onChange={(event) => setWhy(event.target.value)}
+        />
         {underLoad && (
           <div className="mt-3">
-            <CheckRow label="Lead and witness read it again together, at this load" checked={both} onChange={(event) => setBoth(event.target.checked)} />
+            <CheckRow
+              label="Lead and witness read it again together, at this load"
+              checked={both}
+              onChange={(event) => setBoth(event.target.checked)}
+            />
           </div>
         )}
         <Button className="mt-3 min-h-14" onClick={onLeave}>
@@ -103,7 +120,11 @@ function Correction({ run, opened, chosen, onLeave }: { run: Run; opened: Opened
         </Button>
       </BenchScroll>
       <Into slot="action">
-        <ActionPlate title="Corrected" note={parsed.ok ? `${reading.text} becomes ${text.trim()} ${unitLabel(reading.unit)}` : 'type what it should say'} onPress={write} />
+        <ActionPlate
+          title="Corrected"
+          note={parsed.ok ? `${reading.text} becomes ${text.trim()} ${unitLabel(reading.unit)}` : 'type what it should say'}
+          onPress={write}
+        />
       </Into>
     </>
   )
@@ -120,11 +141,21 @@ export function ReadingsPanel({ run, opened, onLeave }: { run: Run; opened: Open
         {shut ? 'They stand as they are.' : 'Tap one to correct it. A reading is never edited.'}
       </HeadBand>
       {chosen && !shut ? (
-        <Correction key={chosen.row.entryId + chosen.reading.sourceId} run={run} opened={opened} chosen={chosen} onLeave={() => setChosen(null)} />
+        <Correction
+          key={chosen.row.entryId + chosen.reading.sourceId}
+          run={run}
+          opened={opened}
+          chosen={chosen}
+          onLeave={() => setChosen(null)}
+        />
       ) : (
         <>
           <BenchScroll>
-            {rows.length === 0 ? <p className="text-18">No row has been entered yet.</p> : <Rows rows={rows} opened={opened} onChoose={shut ? () => undefined : setChosen} />}
+            {rows.length === 0 ? (
+              <p className="text-18">No row has been entered yet.</p>
+            ) : (
+              <Rows rows={rows} opened={opened} onChoose={shut ? () => undefined : setChosen} />
+            )}
           </BenchScroll>
           <Into slot="action">
             <ActionPlate title="Back to the test" onPress={onLeave} />

@@ -9,8 +9,8 @@ import { RadioRow } from '../../../components/radio-row'
 import { ActionPlate } from '../../../components/run/plates'
 import { VerdictTable } from '../../../components/run/verdict-table'
 import { setPercent } from '../../../components/typeset'
+import { capital } from '../../../lib/words'
 import { useDraft } from '../drafts'
-import { capital } from '../names'
 import type { Draft } from '../use-run'
 import { verdictRows } from '../verdict-model'
 import { BenchScroll, HeadBand } from './head-band'
@@ -46,7 +46,9 @@ function Against({ evaluation }: { evaluation: TestEvaluation }): ReactElement {
 function Would({ opened, evaluation }: { opened: Opened; evaluation: TestEvaluation }): ReactElement | null {
   const { clearance } = evaluation
   if (!clearance || evaluation.against.length > 0) return null
-  const pressure = clearance.gaugePressure ? `, ${groupDigits(clearance.gaugePressure.text)} ${clearance.gaugePressure.unit} on this gauge` : ''
+  const pressure = clearance.gaugePressure
+    ? `, ${groupDigits(clearance.gaugePressure.text)} ${clearance.gaugePressure.unit} on this gauge`
+    : ''
   const unmeasured = opened.notMeasured.length > 0 ? ` Not measured: ${opened.notMeasured.join(', ')}.` : ''
   return (
     <p className="mt-2 text-18">
@@ -110,7 +112,11 @@ export function ConcludeStep({ run, opened, step }: StepProps<'conclude'>): Reac
         />
       </BenchScroll>
       <Into slot="action">
-        <ActionPlate title={draft.conclusion === '' ? 'Choose a conclusion' : `Concluded: ${draft.conclusion}`} note="then sign the record with your password" onPress={conclude} />
+        <ActionPlate
+          title={draft.conclusion === '' ? 'Choose a conclusion' : `Concluded: ${draft.conclusion}`}
+          note="then sign the record with your password"
+          onPress={conclude}
+        />
       </Into>
     </>
   )

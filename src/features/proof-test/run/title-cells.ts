@@ -1,7 +1,7 @@
 import type { Opened } from '#shared/proof-test/entries'
 import type { TitleCell } from '../../../components/run/run-title-block'
 import { clockTime } from '../../../lib/dates'
-import { shortName } from '../names'
+import { shortName } from '../../../lib/words'
 import type { Run } from '../use-run'
 
 /** When the witness last wrote anything: what this tablet can know of who is here. */

@@ -5,13 +5,13 @@ import { Button } from '../../../components/button'
 import { ControlledDecimal } from '../../../components/controlled'
 import { TextField } from '../../../components/field'
 import { SelectField } from '../../../components/select-field'
+import { capital } from '../../../lib/words'
 import type { ProtocolDraft } from './protocol-draft'
 
 export type ProtocolControl = Control<ProtocolDraft, unknown, ProtocolRequest>
 type ProtocolForm = UseFormReturn<ProtocolDraft, unknown, ProtocolRequest>
 
 const beds = ['where it is used most', 'lowest', 'highest'] as const
-const capital = (text: string) => text.charAt(0).toUpperCase() + text.slice(1)
 const choicesOf = (values: readonly string[]) => values.map((value) => ({ value, label: capital(value) }))
 
 /** The rungs, lowest first; each takes a percentage and a hold. */

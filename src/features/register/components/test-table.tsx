@@ -7,15 +7,9 @@ import { Mark } from '../../../components/marks'
 import { classNames } from '../../../lib/class-names'
 import { shortDate } from '../../../lib/dates'
 import type { Sort } from '../../../lib/sort'
+import { shortName } from '../../../lib/words'
 import { outcomeOf, sealWord, whereOf } from './outcome'
 import { ReachedBar } from './reached-bar'
-
-/** "Marit Sandoval" as "M. Sandoval": columns stay narrow, the whole name is on the record. */
-function shortName(name: string): string {
-  const parts = name.trim().split(/\s+/)
-  const last = parts.at(-1) ?? name
-  return parts.length < 2 ? name : `${parts[0]?.charAt(0)}. ${last}`
-}
 
 function Load({ load }: { load: TestRow['ratedLoad'] }) {
   const parsed = parseDecimal(load.text)
