@@ -162,8 +162,8 @@ function weaker(a: CheckResult | null, b: CheckResult): CheckResult | null {
   return a === null || rank(b) > rank(a) ? b : a
 }
 
-/** "132 %", never rounded down to 100 % when it is past it. */
-function percent(utilisation: number): string {
+/** A utilisation (1 is all that is allowed) in print: "132 %", never rounded down to 100 % when it is past it. */
+export function percentUsed(utilisation: number): string {
   const rounded = Math.round(utilisation * 100)
   return `${utilisation > 1 ? Math.max(101, rounded) : rounded} %`
 }
@@ -179,7 +179,7 @@ function sentenceOf(check: Pick<LoadPathCheck, 'load' | 'path' | 'weakest' | 'no
   if (weakest.utilisation === null) {
     return `${weakest.name}: ${weakest.check}. It may carry nothing, and ${load} would go through it. Finish and examine it before any load.${left} ${NOT_A_DESIGN}`
   }
-  const figure = `${weakest.name}, ${weakest.check}: ${percent(weakest.utilisation)} of what the stated factor allows at ${load}.`
+  const figure = `${weakest.name}, ${weakest.check}: ${percentUsed(weakest.utilisation)} of what the stated factor allows at ${load}.`
   if (weakest.verdict === 'beyond') {
     return `${figure} No load until it is made stronger, the rated load is lowered, or a named engineer’s document for it is attached.${left} ${NOT_A_DESIGN}`
   }

@@ -18,6 +18,7 @@ import { ChangeForm, WithdrawForm } from './change-form'
 import { gathered, History } from './history'
 import { JointActions } from './joint-actions'
 import { Joints } from './joints'
+import { LoadPathSection } from './load-path-section'
 import { Train } from './train'
 
 type PressPageProps = { state: PressState; people: Readonly<Record<string, string>> }
@@ -151,6 +152,15 @@ export function PressPage({ state, people }: PressPageProps) {
               </ButtonLink>
             </div>
           </Section>
+        )}
+        {description && (
+          <LoadPathSection
+            description={description}
+            joints={joints}
+            forceUnit={shop.forceUnit}
+            lengthUnit={shop.lengthUnit}
+            editTo={can('press:describe') && !state.underTest ? paths.editPress.href(state.id) : null}
+          />
         )}
       </div>
     </div>

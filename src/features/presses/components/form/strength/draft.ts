@@ -1,6 +1,6 @@
 import type { Joint, Member } from '#shared/press/model'
 import type { Grade } from '#shared/structure/materials'
-import { BOLT_CLASSES, ELECTRODES, type JointStrength, type MemberStrength } from '#shared/structure/member-data'
+import type { BOLT_CLASSES, ELECTRODES, JointStrength, MemberStrength } from '#shared/structure/member-data'
 import type {
   SECOND_MOMENT_UNITS,
   SECTION_MODULUS_UNITS,
