@@ -84,6 +84,11 @@ function typeSize(text: string): string {
   return text.length > 3 ? 'text-34 min-[1000px]:max-[1140px]:text-26' : 'text-34'
 }
 
+/** A long name takes two narrow lines: neither it nor its unit may be cut off. */
+function labelFit({ label, unit }: ReadingField): string {
+  return label.length + unit.length > 11 ? 'font-condensed leading-[17px]' : 'leading-[24px] whitespace-nowrap'
+}
+
 interface FieldProps {
   field: ReadingField
   focused: boolean
@@ -101,7 +106,7 @@ function Field(props: FieldProps): ReactElement {
   const edge = field.error !== undefined ? 'border-2 border-stop-ink' : focused ? 'border-2 border-ink' : 'border border-rule'
   return (
     <div className="min-w-0">
-      <label htmlFor={id} className="mb-[5px] block truncate text-16 leading-[24px]">
+      <label htmlFor={id} className={`mb-[5px] block text-16 ${labelFit(field)}`}>
         <span className="font-medium text-ink">{field.label}</span> <span className="ml-2 text-graphite">{field.unit}</span>
       </label>
       <input
@@ -149,12 +154,12 @@ export function ReadingRow(props: ReadingRowProps): ReactElement {
   const columns = { '--columns': Math.min(fields.length, 4) } as CSSProperties
   return (
     <div>
-      <div className="flex flex-wrap gap-2 tablet:flex-nowrap">
+      <div className="flex flex-wrap items-end gap-2 tablet:flex-nowrap">
         <div className="w-full shrink-0 tablet:w-[132px]">
           <p className="mb-[5px] hidden text-16 font-medium leading-[24px] tablet:block">This row</p>
           <MarkPlate mark={props.mark} onMark={props.onMark} note={props.markNote} shut={props.markShut ?? false} />
         </div>
-        <div className="grid min-w-0 flex-1 grid-cols-2 gap-2 tablet:grid-cols-[repeat(var(--columns),minmax(0,1fr))]" style={columns}>
+        <div className="grid min-w-0 flex-1 grid-cols-2 items-end gap-2 tablet:grid-cols-[repeat(var(--columns),minmax(0,1fr))]" style={columns}>
           {fields.map((field, index) => (
             <Field
               key={field.id}
