@@ -159,7 +159,10 @@ export function ReadingRow(props: ReadingRowProps): ReactElement {
           <p className="mb-[5px] hidden text-16 font-medium leading-[24px] tablet:block">This row</p>
           <MarkPlate mark={props.mark} onMark={props.onMark} note={props.markNote} shut={props.markShut ?? false} />
         </div>
-        <div className="grid min-w-0 flex-1 grid-cols-2 items-end gap-2 tablet:grid-cols-[repeat(var(--columns),minmax(0,1fr))]" style={columns}>
+        <div
+          className="grid min-w-0 flex-1 grid-cols-2 items-end gap-2 tablet:grid-cols-[repeat(var(--columns),minmax(0,1fr))]"
+          style={columns}
+        >
           {fields.map((field, index) => (
             <Field
               key={field.id}

@@ -95,7 +95,7 @@ function Portrait(props: RunFrameProps): ReactElement {
           <Fit initial={{ width: 820, height: 540 }}>{(size) => props.line(size, 'portrait')}</Fit>
         </div>
       ) : (
-        <div className="ground-dye grid min-h-0 flex-[1_1_356px] grid-cols-[224px_minmax(0,1fr)]">
+        <div className="ground-dye grid min-h-0 flex-[1_1_330px] grid-cols-[224px_minmax(0,1fr)]">
           <Fit className="border-r border-ghost" initial={{ width: 223, height: 380 }}>
             {(size) => props.ladder(size, 'portrait')}
           </Fit>
