@@ -1,6 +1,8 @@
 import ExcelJS, { type CellFormulaValue, type Workbook, type Worksheet } from 'exceljs'
 import { beforeAll, describe, expect, test, vi } from 'vitest'
 import { firstClimb, recordedTest, repeatClimb, stoppedTest, storedEntries, twoLegTest, type RecordedTest } from '../../tests/factories/recorded-test'
+import type { MemberStrength } from '#shared/structure/member-data'
+import { openedPayload } from '../../tests/factories/test-press'
 import { recordFileName } from './record'
 import { recordWorkbook } from './record-workbook'
 import { cellParts } from './sheets/ledger'
@@ -84,6 +86,7 @@ describe('the workbook of a countersigned test', () => {
       'Criteria',
       'Uncertainty',
       'Joints',
+      'Load path check',
       'Train',
       'Instruments',
       'Protocol and limits',
@@ -277,4 +280,48 @@ test('the file is named after the number and the press, without what a file name
   const named = (name: string) => recordFileName({ number: 'PT-0001', press: { ...opened.press, name } }, 'xlsx')
   expect(named('..\\bed/3: "old"\r\n')).toBe('PT-0001 bed 3 old.xlsx')
   expect(named('Presse à épauler')).toBe('PT-0001 Presse à épauler.xlsx')
+})
+
+describe('the sheet of the load path check', () => {
+  const mm = (text: string) => ({ text, unit: 'mm' as const })
+  const known = openedPayload()
+  const bed: MemberStrength = {
+    role: 'beam',
+    section: { shape: 'flat', height: mm('160'), width: mm('20'), sideBySide: 2, plates: [] },
+    material: { grade: 'S355JR' },
+    support: 'both ends',
+    span: mm('640'),
+    ramOffset: null,
+    hole: null,
+    loadShare: null,
+  }
+  const opened = {
+    press: { ...known.press, members: known.press.members.map((member) => (member.kind === 'bed-beam' ? { ...member, strength: bed } : member)) },
+    engineer: { name: 'P. Lindqvist', document: 'Calculation 26-118', on: '2026-09-01' },
+  }
+
+  test('holds demand, capacity, source and a live utilisation, and says NOT CHECKED where there is no figure', async () => {
+    const rows = table(sheetOf(await open(recordedTest({ opened })), 'Load path check'))
+    const bending = rows.find((row) => row['Member or joint']?.text === 'Bed' && row['Check']?.text.includes('bending'))
+    // M = P·L/4 of 0.5·345 MPa·S, S = 2·b·h²/6, by hand.
+    const demand = (12 * SHORT_TON * 0.64) / 4
+    const capacity = (0.5 * 345e6 * 2 * 0.02 * 0.16 ** 2) / 6
+    expect(bending?.['Demand']?.value).toBeCloseTo(demand, 6)
+    expect(bending?.['Capacity ÷ factor']?.value).toBeCloseTo(capacity, 6)
+    expect(bending?.['Unit']?.text).toBe('N·m')
+    expect(live(bending?.['Utilisation']).formula).toMatch(/^C\d+\/D\d+$/)
+    expect(live(bending?.['Utilisation']).result).toBeCloseTo(demand / capacity, 10)
+    expect(bending?.['Source, or why it is not checked']?.text).toContain('EN 10025-2')
+    const head = rows.find((row) => row['Member or joint']?.text === 'Head beam')
+    expect(head?.['Verdict']?.text).toBe('NOT CHECKED')
+    expect(head?.['Utilisation']?.value).toBeNull()
+    expect(head?.['Source, or why it is not checked']?.text).toContain('No section')
+  })
+
+  test('names the engineer’s document, the factors and what is left out', async () => {
+    const words = textOf(sheetOf(await open(recordedTest({ opened })), 'Load path check'))
+    expect(words).toContain('P. Lindqvist, Calculation 26-118, of 2026-09-01')
+    expect(words).toContain('0.5 of yield, common practice, no source')
+    expect(words).toContain('Fatigue, cold, shock')
+  })
 })

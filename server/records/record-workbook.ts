@@ -7,6 +7,7 @@ import { uncertaintySheet } from './sheets/uncertainty'
 import { instrumentsSheet } from './sheets/instruments'
 import { jointsSheet } from './sheets/joints'
 import { ledgerSheet } from './sheets/ledger'
+import { loadPathSheet } from './sheets/load-path'
 import { peopleSheet } from './sheets/people'
 import { protocolSheet } from './sheets/protocol'
 import { placesOfReadings, readingsSheet } from './sheets/readings'
@@ -37,6 +38,7 @@ export async function recordWorkbook(source: RecordSource): Promise<Buffer> {
   criteriaSheet(workbook, record)
   uncertaintySheet(workbook, record)
   jointsSheet(workbook, record)
+  loadPathSheet(workbook, record)
   trainSheet(workbook, record)
   instrumentsSheet(workbook, record)
   protocolSheet(workbook, record)

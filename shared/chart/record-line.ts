@@ -4,6 +4,7 @@ import type { Opened } from '../proof-test/entries'
 import { stageForce } from '../proof-test/force'
 import { fitLine, type LineFit } from '../statistics/line'
 import { FORCE_DECIMALS, formatNumber, formatQuantity, toSI, toUnit, unitLabel } from '../units'
+import { chartBand } from './expected-band'
 import type { LineChartSpec, LineNote, LinePoint } from './line-spec'
 import { topOfScale } from './line-frame'
 
@@ -12,8 +13,7 @@ interface Size {
   height: number
 }
 
-const isBeyond = (stage: StageEvaluation): boolean =>
-  stage.criteria.some((criterion) => criterion.stops && criterion.verdict === 'beyond')
+const isBeyond = (stage: StageEvaluation): boolean => stage.criteria.some((criterion) => criterion.stops && criterion.verdict === 'beyond')
 
 /** The line through the datum and the stages before one that is beyond a limit: what the frame did while it was a spring. */
 function trustedFit(climb: ClimbEvaluation): LineFit | null {
@@ -67,16 +67,15 @@ export function recordLine(opened: Opened, climbs: readonly ClimbEvaluation[], s
   })
   const set = first.set?.row.lead
   const trusted = trustedFit(first)
-  const fit = trusted
-    ? { slope: (toUnit(trusted.slope, unit) * rated) / 100, intercept: toUnit(trusted.intercept, unit) }
-    : null
-  const widest = Math.max(...points.map((point) => point.x + point.ux), ...(comparison ?? []).map((point) => point.x))
+  const fit = trusted ? { slope: (toUnit(trusted.slope, unit) * rated) / 100, intercept: toUnit(trusted.intercept, unit) } : null
+  const band = chartBand(opened, first.leg)
+  const widest = Math.max(band?.high ?? 0, ...points.map((point) => point.x + point.ux), ...(comparison ?? []).map((point) => point.x))
   return {
     ...size,
     stages: [{ percent: 0, label: '0\u202f%', load: 'datum' }, ...stages],
     points,
     fit,
-    band: null,
+    band,
     prediction: null,
     notes: notesOf(opened, first, points),
     ...(set ? { setPoint: { x: toUnit(set.deflection, unit), ux: toUnit(set.U, unit) } } : {}),

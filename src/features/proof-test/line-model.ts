@@ -1,11 +1,13 @@
+import { chartBand } from '#shared/chart/expected-band'
 import type { LineChartSpec, LineNote, LinePoint, LinePrediction } from '#shared/chart/line-spec'
 import { topOfScale } from '#shared/chart/line-geometry'
 import type { Opened } from '#shared/proof-test/entries'
 import { lengthText, predict, type ClimbEvaluation, type RowFigures, type StageEvaluation } from '#shared/proof-test/evaluate-climb'
+import { predictFromBand } from '#shared/proof-test/expected'
 import { stageTarget } from '#shared/proof-test/force'
 import { fitLine } from '#shared/statistics/line'
 import { toSI, toUnit, unitLabel } from '#shared/units'
-import { capital } from './names'
+import { capital } from '../../lib/words'
 
 const beyond = (stage: StageEvaluation): boolean =>
   stage.criteria.some((criterion) => criterion.id === 'softening' && criterion.verdict === 'beyond')
@@ -14,13 +16,18 @@ function chartPoint(opened: Opened, row: RowFigures | null, mark?: 'stop'): Line
   if (!row?.force || !row.lead) return []
   const rated = toSI(opened.press.ratedLoad)
   const length = (si: number): number => toUnit(si, opened.lengthUnit)
-  return [{ x: length(row.lead.deflection), y: (row.force.force / rated) * 100, ux: length(row.lead.U), uy: (row.force.U / rated) * 100, mark }]
+  return [
+    { x: length(row.lead.deflection), y: (row.force.force / rated) * 100, ux: length(row.lead.U), uy: (row.force.U / rated) * 100, mark },
+  ]
 }
 
 /** The points that carry the line, in the order they were read: datum first. */
 export function linePoints(opened: Opened, climb: ClimbEvaluation | null): LinePoint[] {
   if (!climb?.datum) return []
-  return [{ x: 0, y: 0, ux: 0, uy: 0 }, ...climb.stages.flatMap((stage) => chartPoint(opened, stage.start, beyond(stage) ? 'stop' : undefined))]
+  return [
+    { x: 0, y: 0, ux: 0, uy: 0 },
+    ...climb.stages.flatMap((stage) => chartPoint(opened, stage.start, beyond(stage) ? 'stop' : undefined)),
+  ]
 }
 
 function fitOf(points: readonly LinePoint[]): LineChartSpec['fit'] {
@@ -30,7 +37,10 @@ function fitOf(points: readonly LinePoint[]): LineChartSpec['fit'] {
   return { slope, intercept }
 }
 
-/** What the readings so far predict for a stage that has not been read, at the load that is pumped to. */
+/**
+ * What the readings so far predict for a stage that has not been read, at the load that is pumped to; before there
+ * is a line, what the members' sections let expect.
+ */
 export function predictionFor(opened: Opened, climb: ClimbEvaluation | null, percent: number) {
   const target = stageTarget(opened, percent)
   if (!climb?.datum || !target) return null
@@ -40,7 +50,8 @@ export function predictionFor(opened: Opened, climb: ClimbEvaluation | null, per
       ? [{ force: row.force.force, deflection: row.lead.deflection, uForce: row.force.uIndependent, uDeflection: row.lead.uReading }]
       : [],
   )
-  return predict(opened, points, target.readableForce)
+  const uReading = points[0]?.uDeflection ?? 0
+  return predict(opened, points, target.readableForce) ?? predictFromBand(opened, climb.leg, target.readableForce, uReading)
 }
 
 /** "1.25 to 1.44 mm". */
@@ -98,6 +109,8 @@ interface LineOptions {
   /** The stage that is being read, or comes next. */
   percent: number | null
   alone: boolean
+  /** Whose expected band is drawn. */
+  leg: number
   /** The climb before, for a repeat. */
   before: ClimbEvaluation | null
 }
@@ -107,9 +120,16 @@ export function lineSpec(opened: Opened, climb: ClimbEvaluation | null, options:
   const points = linePoints(opened, climb)
   const fit = fitOf(points)
   const prediction = expected(opened, climb, options.percent)
+  const band = chartBand(opened, options.leg)
   const yMax = topOfScale(opened.protocol.content.stages)
   const comparison = linePoints(opened, options.before)
-  const reach = [...points.map((point) => point.x + point.ux), ...comparison.map((point) => point.x), prediction?.to ?? 0, fit ? fit.intercept + fit.slope * yMax : 0]
+  const reach = [
+    ...points.map((point) => point.x + point.ux),
+    ...comparison.map((point) => point.x),
+    prediction?.to ?? 0,
+    band?.high ?? 0,
+    fit ? fit.intercept + fit.slope * yMax : 0,
+  ]
   const set = climb?.set?.row.lead
   return {
     width: options.width,
@@ -117,7 +137,7 @@ export function lineSpec(opened: Opened, climb: ClimbEvaluation | null, options:
     stages: opened.protocol.content.stages.map(({ percent }) => ({ percent, label: `${percent} %` })),
     points,
     fit,
-    band: null,
+    band,
     prediction,
     notes: notesOf(opened, climb, points),
     setPoint: set ? { x: toUnit(set.deflection, opened.lengthUnit), ux: toUnit(set.U, opened.lengthUnit) } : undefined,

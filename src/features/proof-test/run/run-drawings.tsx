@@ -50,7 +50,10 @@ const metres = (length: TypedLength | null): number | null => (length ? toSI(len
 export function drawnPress(opened: Opened): DrawnPress {
   const { kind, dimensions } = opened.press
   const { height, opening, throat, holePitch, holes } = dimensions
-  return { kind, dimensions: { height: metres(height), width: metres(opening), throat: metres(throat), holes, holePitch: metres(holePitch) } }
+  return {
+    kind,
+    dimensions: { height: metres(height), width: metres(opening), throat: metres(throat), holes, holePitch: metres(holePitch) },
+  }
 }
 
 /** The drawing of the walk-down: every balloon a button. */
@@ -64,7 +67,13 @@ function WalkDownDrawing({ run, opened, size, shape }: DrawingProps): ReactEleme
     <div className={legend ? 'grid grid-cols-[65%_35%]' : ''}>
       <JointDrawing
         press={drawnPress(opened)}
-        joints={joints.map((joint) => ({ id: joint.joint.id, number: joint.joint.number, name: joint.joint.name, place: joint.joint.place, state: jointMark(joint, occasion) }))}
+        joints={joints.map((joint) => ({
+          id: joint.joint.id,
+          number: joint.joint.number,
+          name: joint.joint.name,
+          place: joint.joint.place,
+          state: jointMark(joint, occasion),
+        }))}
         points={opened.points.map(({ letter, place }) => ({ letter, place }))}
         selectedId={jointAtHand(joints, occasion, jointId)?.joint.id ?? null}
         onSelect={(id) => choose({ jointId: id })}
@@ -83,5 +92,5 @@ export function RunPicture(props: DrawingProps & { covered: boolean }): ReactEle
   const place = run.state.position
   const before = place && place.climb > 0 ? evaluateClimb(run.state, place.leg, place.climb - 1) : null
   const percent = 'percent' in run.step ? run.step.percent : null
-  return <LineChart {...lineSpec(opened, run.evaluation, { ...size, percent, alone: shape === 'phone', before })} />
+  return <LineChart {...lineSpec(opened, run.evaluation, { ...size, percent, alone: shape === 'phone', before, leg: place?.leg ?? 0 })} />
 }

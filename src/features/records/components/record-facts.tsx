@@ -1,6 +1,7 @@
 import { fullestForce } from '#shared/proof-test/budget'
 import { clearanceArithmetic, energyText, inPrint } from '#shared/proof-test/record'
 import { formatForce } from '#shared/units'
+import { checkText, engineerText } from '#shared/proof-test/check-record'
 import { forceInstrumentText, indicatorsText, ramText } from '../fact-words'
 import type { RecordView } from '../record-view'
 
@@ -33,6 +34,8 @@ function factsOf(record: RecordView): Fact[] {
       'Load path',
       confirmed ? `${state.joints.length} joints, none missing: ${record.nameOf(confirmed.by)}` : 'Not confirmed whole by the witness',
     ],
+    ['Check', checkText(opened)],
+    ...(opened.engineer ? [['Engineer', engineerText(opened.engineer)] as const] : []),
     ['Pump hand', pumpHand.relation ? `${pumpHand.name}, ${pumpHand.relation}` : pumpHand.name],
     ...rams,
     ...read,
