@@ -1,6 +1,6 @@
 import { decideByRules, type Decision } from '../ledger/rules'
 import { allRows } from './apply'
-import type { CriterionSnapshot } from './entries'
+import { ALWAYS_ALLOWED, type CriterionSnapshot } from './entries'
 import { evaluateTest } from './evaluate'
 import type { StageEvaluation } from './evaluate-climb'
 import { rule, type ProofTestQuestion, type ProofTestRule } from './rule'
@@ -121,9 +121,6 @@ const WHOLE_RULES: readonly ProofTestRule[] = [
 
 /** Every numbered rule of a proof test, in the order of the test. R1 is the one that nothing overrules. */
 export const PROOF_TEST_RULES: readonly ProofTestRule[] = [...WHOLE_RULES, ...OPENING_RULES, ...BEFORE_LOAD_RULES, ...UNDER_LOAD_RULES]
-
-/** R1: stop and release are always allowed; no rule may wait for a device while the press is loaded. */
-export const ALWAYS_ALLOWED: ReadonlySet<string> = new Set(['stopped', 'released'])
 
 /** What still marks a stop or a release that comes after the signatures, or from a clock that is off. */
 const MARKS_ONLY: readonly ProofTestRule[] = PROOF_TEST_RULES.filter((one) => one.id === 'R3' || one.id === 'R40')

@@ -190,6 +190,9 @@ export type ProofTestKind = keyof typeof PROOF_TEST_PAYLOADS
 export type ProofTestPayload<K extends ProofTestKind> = z.infer<(typeof PROOF_TEST_PAYLOADS)[K]>
 export type ProofTestDraft = { [K in ProofTestKind]: { kind: K; payload: ProofTestPayload<K> } }[ProofTestKind]
 
+/** R1: stop and release are always allowed; no rule may wait for a device while the press is loaded. */
+export const ALWAYS_ALLOWED: ReadonlySet<string> = new Set(['stopped', 'released'])
+
 /** Acts can be refused; everything else is a fact, which has happened and always lands. */
 export const PROOF_TEST_ACTS: ReadonlySet<string> = new Set([
   'opened',

@@ -32,7 +32,13 @@ class Server {
     if (this.down) return Promise.reject(this.down as Error)
     const results = request.entries.map((made): AppendResponse['results'][number] => {
       if (made.kind === this.refuse) {
-        const problem = { type: 'about:blank' as const, title: 'Conflict', status: 409, code: 'refused', detail: 'A joint is not examined.' }
+        const problem = {
+          type: 'about:blank' as const,
+          title: 'Conflict',
+          status: 409,
+          code: 'refused',
+          detail: 'A joint is not examined.',
+        }
         return { outcome: 'refused', id: made.id, problem }
       }
       if (!this.kept.some((one) => one.id === made.id)) this.kept.push(made)

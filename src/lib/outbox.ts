@@ -1,34 +1,14 @@
-import type { DBSchema, IDBPDatabase } from 'idb'
-import { openDB } from 'idb'
+import type { IDBPDatabase } from 'idb'
 import { v7 as newId } from 'uuid'
 import { appendResponseSchema, type AppendRequest, type AppendResponse } from '#shared/api/ledger'
-import type { ProblemBody } from '#shared/api/problem'
 import { sessionResponseSchema } from '#shared/api/session'
 import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
-import { PROOF_TEST_ACTS } from '#shared/proof-test/entries'
+import { ALWAYS_ALLOWED, PROOF_TEST_ACTS } from '#shared/proof-test/entries'
 import { api } from './api-client'
 import { makeEntry, type EntryParts } from './entry'
+import { inTime, openOutbox, type OutboxSchema, type Refused, type Waiting } from './outbox-database'
 import { ProblemError } from './problem'
-
-/** What waits to be sent: the entry, and the test whose ledger it belongs to. */
-interface Waiting {
-  testId: string
-  entry: EntryDraft
-}
-
-/** An act that the server refused, kept until somebody has seen why. */
-export interface Refused {
-  testId: string
-  entry: EntryDraft
-  problem: ProblemBody
-  at: string
-}
-
-interface OutboxSchema extends DBSchema {
-  pending: { key: [string, number]; value: Waiting; indexes: { id: string } }
-  attention: { key: string; value: Refused }
-  counts: { key: string; value: number }
-}
+import { UnkeptEntries } from './unkept'
 
 export type SenderState =
   | { is: 'idle' }
@@ -75,16 +55,6 @@ async function alone(work: () => Promise<void>): Promise<void> {
   else await work()
 }
 
-function open(name: string): Promise<IDBPDatabase<OutboxSchema>> {
-  return openDB<OutboxSchema>(name, 1, {
-    upgrade(database) {
-      database.createObjectStore('pending').createIndex('id', 'entry.id', { unique: true })
-      database.createObjectStore('attention')
-      database.createObjectStore('counts')
-    },
-  })
-}
-
 /** An act may be refused; what follows it is sent only once it is answered, so that the numbers stay without a gap. */
 function nextBatch(waiting: readonly Waiting[]): Waiting[] {
   const act = waiting.findIndex(({ entry }) => PROOF_TEST_ACTS.has(entry.kind))
@@ -109,8 +79,10 @@ export class Outbox {
   private readonly keptListeners = new Set<KeptListener>()
   private readonly ledgers = new Map<string, LedgerOutbox>()
   private readonly channel: BroadcastChannel | null
+  private readonly unkept: UnkeptEntries
   private sender: SenderState = { is: 'idle' }
   private fault: string | null = null
+  private readonly shownUnkept = new Set<string>()
   private personId: string | null = null
   private sending: Promise<void> | null = null
   private askedAgain = false
@@ -119,6 +91,12 @@ export class Outbox {
 
   constructor(parts: OutboxParts) {
     this.parts = parts
+    this.unkept = new UnkeptEntries({
+      post: parts.post,
+      delay: parts.delay ?? backoff,
+      onKept: (testId, kept) => this.handOn(testId, kept),
+      onChange: (ledgerId, says) => this.showUnkept(ledgerId, says),
+    })
     this.channel = typeof BroadcastChannel === 'undefined' ? null : new BroadcastChannel(parts.databaseName)
     this.channel?.addEventListener('message', (event: MessageEvent<{ testId: string; ledgerId: string; kept: LedgerEntry[] }>) => {
       const { testId, ledgerId, kept } = event.data
@@ -139,7 +117,8 @@ export class Outbox {
     if (known) return known
     const empty: LedgerOutbox = { loaded: false, pending: NOTHING, attention: NOTHING, sender: this.sender, fault: this.fault }
     this.ledgers.set(ledgerId, empty)
-    void this.refresh(ledgerId)
+    // Not before this has answered: where there is no storage at all, it fails at once.
+    queueMicrotask(() => void this.refresh(ledgerId))
     return empty
   }
 
@@ -158,20 +137,23 @@ export class Outbox {
 
   /**
    * Writes an entry through to the disk, numbered in the same transaction, and resolves when it is there.
-   * The same id a second time gives the entry that is kept already. Rejects when nothing can be kept.
+   * The same id a second time gives the entry that is kept already. Rejects when nothing can be kept, but for a stop
+   * or a release: these go to the server without the disk.
    * `knownSeq`: the highest number the server has from this device.
    */
   async enqueue(testId: string, parts: NewEntry, knownSeq = 0): Promise<EntryDraft> {
     const id = parts.id ?? newId()
     try {
-      const entry = await this.put(testId, { ...parts, id }, knownSeq)
+      const writing = this.put(testId, { ...parts, id }, knownSeq)
+      const entry = await (ALWAYS_ALLOWED.has(parts.kind) ? inTime(writing) : writing)
       await this.refresh(parts.ledgerId)
       this.tell(testId, parts.ledgerId, [])
       this.sendNow()
       return entry
     } catch (failure) {
       this.fail(failure)
-      throw failure
+      if (!ALWAYS_ALLOWED.has(parts.kind)) throw failure
+      return this.unkept.add(testId, parts)
     }
   }
 
@@ -187,6 +169,7 @@ export class Outbox {
     if (this.timer) clearTimeout(this.timer)
     this.timer = null
     this.askedAgain = true
+    void this.unkept.send()
     this.sending ??= this.sendUntilQuiet().finally(() => {
       this.sending = null
     })
@@ -199,12 +182,13 @@ export class Outbox {
 
   close(): void {
     if (this.timer) clearTimeout(this.timer)
+    this.unkept.close()
     this.channel?.close()
     void this.database?.then((database) => database.close())
   }
 
   private opened(): Promise<IDBPDatabase<OutboxSchema>> {
-    this.database ??= open(this.parts.databaseName)
+    this.database ??= openOutbox(this.parts.databaseName)
     return this.database
   }
 
@@ -220,11 +204,7 @@ export class Outbox {
     }
     const deviceSeq = Math.max((await counts.get(parts.ledgerId)) ?? 0, knownSeq) + 1
     const entry = makeEntry({ ...parts, deviceSeq })
-    await Promise.all([
-      pending.put({ testId, entry }, [parts.ledgerId, deviceSeq]),
-      counts.put(deviceSeq, parts.ledgerId),
-      tx.done,
-    ])
+    await Promise.all([pending.put({ testId, entry }, [parts.ledgerId, deviceSeq]), counts.put(deviceSeq, parts.ledgerId), tx.done])
     return entry
   }
 
@@ -238,7 +218,7 @@ export class Outbox {
       await tx.done
       this.ledgers.set(ledgerId, {
         loaded: true,
-        pending: waiting.map(({ entry }) => entry),
+        pending: [...waiting.map(({ entry }) => entry), ...this.unkept.of(ledgerId)],
         attention: refused.filter(({ entry }) => entry.ledgerId === ledgerId),
         sender: this.sender,
         fault: this.fault,
@@ -251,8 +231,18 @@ export class Outbox {
 
   private fail(failure: unknown): void {
     const said = typeof failure === 'object' && failure !== null && 'message' in failure ? String(failure.message).replace(/\.$/, '') : ''
-    this.fault = `This device can’t keep entries${said === '' ? '' : ` (${said})`}. Nothing more is taken in. Under load: stop, and release.`
+    this.fault = `This device can’t keep entries${said === '' ? '' : ` (${said})`}. Nothing more is taken in. Under load: stop, and release. Both go straight to the server.`
     this.spread({ fault: this.fault })
+  }
+
+  private showUnkept(ledgerId: string, says: string | null): void {
+    const before = this.ledger(ledgerId)
+    const unkept = this.unkept.of(ledgerId)
+    const kept = before.pending.filter((entry) => !this.shownUnkept.has(entry.id))
+    for (const entry of unkept) this.shownUnkept.add(entry.id)
+    this.ledgers.set(ledgerId, { ...before, pending: [...kept, ...unkept] })
+    if (says !== null) this.say({ is: 'refused', says })
+    this.notify()
   }
 
   private say(sender: SenderState): void {

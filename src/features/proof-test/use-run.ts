@@ -4,13 +4,14 @@ import { v7 as newId } from 'uuid'
 import type { LedgerEntry, Override } from '#shared/ledger/envelope'
 import type { Decision, Finding } from '#shared/ledger/rules'
 import { decideProofTest } from '#shared/proof-test/decide'
-import type { Mark, ProofTestKind, ProofTestPayload } from '#shared/proof-test/entries'
+import { ALWAYS_ALLOWED, type Mark, type ProofTestKind, type ProofTestPayload } from '#shared/proof-test/entries'
 import { evaluateClimb, type ClimbEvaluation } from '#shared/proof-test/evaluate-climb'
 import type { ProofTestState } from '#shared/proof-test/state'
 import { nextStep, type Step } from '#shared/proof-test/steps'
 import { bootId, deviceId, monotonicMs } from '../../lib/entry'
 import { useUser } from '../../lib/here'
-import { outbox, type LedgerOutbox, type Refused } from '../../lib/outbox'
+import { outbox, type LedgerOutbox } from '../../lib/outbox'
+import type { Refused } from '../../lib/outbox-database'
 import { Disconnected, isSignedOut } from '../../lib/problem'
 import { addKept, entriesQuery, type KnownLedger } from './api/get-entries'
 import { irregularUnderLoad, LedgerFold } from './ledger-view'
@@ -108,20 +109,33 @@ function useWriting({ ledgerId, testId, authorId, folded, blocked }: Writing) {
   )
   const record = useCallback(
     (draft: Draft, overrides: readonly Override[] = []): void => {
-      if (busy.current.has(draft.kind) || blocked) return
+      // R1: a device that can't keep entries still stops and releases.
+      if (busy.current.has(draft.kind) || (blocked && !ALWAYS_ALLOWED.has(draft.kind))) return
       const decision = decide(draft, overrides)
       setRefused(decision.outcome === 'refused' ? decision.findings : [])
       setAsking(decision.outcome === 'needs-reason' ? { draft, findings: decision.findings } : null)
       if (decision.outcome !== 'allowed') return
       busy.current.add(draft.kind)
-      const entry = { id: newId(), ledgerId, ...draft, authorId, basedOnSeq: server.headSeq, overrides: [...overrides], observedAt: new Date().toISOString() }
+      const entry = {
+        id: newId(),
+        ledgerId,
+        ...draft,
+        authorId,
+        basedOnSeq: server.headSeq,
+        overrides: [...overrides],
+        observedAt: new Date().toISOString(),
+      }
       outbox.enqueue(testId, entry, server.devices[deviceId()] ?? 0).catch(() => busy.current.delete(draft.kind))
     },
     [decide, blocked, ledgerId, testId, authorId, server],
   )
   const giveReason = useCallback(
     (reason: string) => {
-      if (asking) record(asking.draft, asking.findings.map(({ rule }) => ({ rule, reason })))
+      if (asking)
+        record(
+          asking.draft,
+          asking.findings.map(({ rule }) => ({ rule, reason })),
+        )
     },
     [asking, record],
   )

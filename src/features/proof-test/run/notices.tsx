@@ -19,10 +19,24 @@ function Notice({ mark, children, aside }: { mark: MarkName; children: ReactNode
 
 function sendingNotice(run: Run): ReactElement | null {
   const waiting = run.counts.tablet
-  const kept = waiting === 0 ? 'Nothing is lost: it goes on here.' : `${waiting === 1 ? 'One entry waits' : `${waiting} entries wait`} on this tablet. Nothing is lost: it goes on here.`
+  if (run.box.fault !== null && waiting > 0)
+    return (
+      <Notice mark="not-connected">The stop is not on the server yet. It stands on this page only: leave it open. Say it aloud.</Notice>
+    )
+  const kept =
+    waiting === 0
+      ? 'Nothing is lost: it goes on here.'
+      : `${waiting === 1 ? 'One entry waits' : `${waiting} entries wait`} on this tablet. Nothing is lost: it goes on here.`
   if (run.connection.signedOut) {
     return (
-      <Notice mark="not-connected" aside={<TextLink to={paths.signIn.href()} target="_blank">Sign in again</TextLink>}>
+      <Notice
+        mark="not-connected"
+        aside={
+          <TextLink to={paths.signIn.href()} target="_blank">
+            Sign in again
+          </TextLink>
+        }
+      >
         Your session has ended, so nothing is sent. {kept}
       </Notice>
     )
@@ -54,7 +68,15 @@ export function Notices({ run }: { run: Run }): ReactElement {
       {sendingNotice(run)}
       {others && <Notice mark="wait">Entries of another person wait on this tablet. They are sent when that person signs in here.</Notice>}
       {run.refused.map((finding) => (
-        <Notice key={finding.rule} mark="wait" aside={<Button size="line" onClick={run.leave}>Read</Button>}>
+        <Notice
+          key={finding.rule}
+          mark="wait"
+          aside={
+            <Button size="line" onClick={run.leave}>
+              Read
+            </Button>
+          }
+        >
           {setPercent(finding.says)} Rule {finding.rule}.
         </Notice>
       ))}
@@ -62,7 +84,11 @@ export function Notices({ run }: { run: Run }): ReactElement {
         <Notice
           key={refused.entry.id}
           mark="wait"
-          aside={<Button size="line" onClick={() => void outbox.dismiss(refused.entry.ledgerId, refused.entry.id)}>Read</Button>}
+          aside={
+            <Button size="line" onClick={() => void outbox.dismiss(refused.entry.ledgerId, refused.entry.id)}>
+              Read
+            </Button>
+          }
         >
           The server refused what was entered at {clockTime(refused.entry.observedAt)}: {refused.problem.detail}
         </Notice>

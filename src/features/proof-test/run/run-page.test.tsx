@@ -169,7 +169,7 @@ describe('a run', () => {
     server.down = true
     await userEvent.click(stop)
     expect(await screen.findByText('Open the release valve slowly, now.')).toBeVisible()
-    expect(await screen.findByText(/Not connected\..*One entry waits on this tablet/)).toBeVisible()
+    expect(await screen.findByText(/Not connected\..*One entry waits on this tablet/, {}, { timeout: 4000 })).toBeVisible()
     server.down = false
     window.dispatchEvent(new Event('online'))
     await waitFor(() => expect(sentOf(server, 'stopped')).toHaveLength(1), { timeout: 4000 })

@@ -1,0 +1,95 @@
+import { v7 as newId } from 'uuid'
+import type { AppendRequest, AppendResponse } from '#shared/api/ledger'
+import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
+import { makeEntry, type EntryParts } from './entry'
+import { ProblemError } from './problem'
+
+interface Unkept {
+  testId: string
+  entry: EntryDraft
+}
+
+interface UnkeptParts {
+  post: (testId: string, request: AppendRequest) => Promise<AppendResponse>
+  delay: (failures: number) => number
+  /** The server has it. */
+  onKept: (testId: string, kept: readonly LedgerEntry[]) => void
+  /** The list has changed, or the server took none of it and said why. */
+  onChange: (ledgerId: string, says: string | null) => void
+}
+
+/** Whether trying the same again may help: no link, a busy server, a session that somebody can renew. */
+const mayPass = (failure: unknown): boolean =>
+  !(failure instanceof ProblemError) || failure.status >= 500 || [401, 408, 429].includes(failure.status)
+
+/**
+ * Stops and releases of a device that can't keep entries: rule R1 lets nothing stand in their way. They stand in the
+ * memory of the page and go straight to the server, as often as it takes, under a device's name of their own: what the
+ * broken storage holds back would leave a gap in its numbers.
+ */
+export class UnkeptEntries {
+  private readonly parts: UnkeptParts
+  private readonly deviceId = newId()
+  private readonly counts = new Map<string, number>()
+  private waiting: readonly Unkept[] = []
+  private sending = false
+  private failures = 0
+  private timer: ReturnType<typeof setTimeout> | null = null
+
+  constructor(parts: UnkeptParts) {
+    this.parts = parts
+  }
+
+  of(ledgerId: string): EntryDraft[] {
+    return this.waiting.flatMap(({ entry }) => (entry.ledgerId === ledgerId ? [entry] : []))
+  }
+
+  add(testId: string, parts: Omit<EntryParts, 'id' | 'deviceSeq'>): EntryDraft {
+    const deviceSeq = (this.counts.get(parts.ledgerId) ?? 0) + 1
+    this.counts.set(parts.ledgerId, deviceSeq)
+    const entry = { ...makeEntry({ ...parts, id: newId(), deviceSeq }), deviceId: this.deviceId }
+    this.waiting = [...this.waiting, { testId, entry }]
+    this.parts.onChange(entry.ledgerId, null)
+    void this.send()
+    return entry
+  }
+
+  /** Tries at once, instead of when the timer would. */
+  async send(): Promise<void> {
+    if (this.sending) return
+    this.sending = true
+    if (this.timer) clearTimeout(this.timer)
+    try {
+      for (let next = this.waiting[0]; next; next = this.waiting[0]) await this.sendOne(next)
+      this.failures = 0
+    } catch {
+      this.timer = setTimeout(() => void this.send(), this.parts.delay(this.failures))
+      this.failures += 1
+    } finally {
+      this.sending = false
+    }
+  }
+
+  close(): void {
+    if (this.timer) clearTimeout(this.timer)
+  }
+
+  private async sendOne(one: Unkept): Promise<void> {
+    const { testId, entry } = one
+    let says: string | null = null
+    try {
+      const { results } = await this.parts.post(testId, { sentAt: new Date().toISOString(), entries: [entry] })
+      this.parts.onKept(
+        testId,
+        results.flatMap((result) => (result.outcome === 'kept' ? [result.entry] : [])),
+      )
+      const refused = results.find((result) => result.outcome === 'refused')
+      says = refused?.outcome === 'refused' ? refused.problem.detail : null
+    } catch (failure) {
+      if (mayPass(failure)) throw failure
+      says = failure instanceof ProblemError ? failure.detail : null
+    }
+    this.waiting = this.waiting.filter((candidate) => candidate !== one)
+    this.parts.onChange(entry.ledgerId, says)
+  }
+}
