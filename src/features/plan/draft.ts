@@ -32,6 +32,8 @@ export interface PlanDraft {
   witness: { id: string; relation: string }
   /** Asked where the protocol goes above the rated load. */
   aboveRating: { percent: string; rule: string }
+  /** Asked where the load path check is over 100 %. */
+  engineer: { name: string; document: string; on: string }
   repeatsId: string
   instrumentOverride: string
 }
@@ -52,6 +54,7 @@ export function newPlan(nextId: () => string, pressId: string): PlanDraft {
     pumpHand: { id: '', name: '' },
     witness: { id: '', relation: '' },
     aboveRating: { percent: '', rule: '' },
+    engineer: { name: '', document: '', on: '' },
     repeatsId: '',
     instrumentOverride: '',
   }
@@ -123,9 +126,12 @@ export interface PlanLookup {
   contentOf: (protocolId: string) => ProtocolContent | undefined
 }
 
+/** Whether anything is typed of an engineer's document: then it is shown, checked and sent. */
+export const engineerTyped = (engineer: PlanDraft['engineer']): boolean => Object.values(engineer).some((text) => text.trim() !== '')
+
 /** The request that the plan stands for, unchecked. */
 export function toRequest(draft: PlanDraft, stamp: Stamp, { nameOf, contentOf }: PlanLookup) {
-  const { combine: _combine, points, pumpHand, aboveRating, ...rest } = draft
+  const { combine: _combine, points, pumpHand, aboveRating, engineer, ...rest } = draft
   const stranger = pumpHand.id === SOMEBODY_ELSE
   return {
     ...rest,
@@ -136,6 +142,7 @@ export function toRequest(draft: PlanDraft, stamp: Stamp, { nameOf, contentOf }:
     pumpHand: stranger ? { id: null, name: pumpHand.name } : { id: pumpHand.id, name: nameOf(pumpHand.id) },
     // Kept in the draft while another protocol is tried, and sent only where it is asked for.
     aboveRating: contentOf(draft.protocolId)?.aboveRating ? { ...aboveRating, percent: typedNumber(aboveRating.percent) } : null,
+    engineer: engineerTyped(engineer) ? engineer : null,
     repeatsId: draft.repeatsId || null,
     instrumentOverride: draft.instrumentOverride.trim() || null,
   }

@@ -6,7 +6,7 @@ import { missingOf } from '#shared/press/may-it-be-used'
 import { loadPathOf } from '#shared/press/load-path'
 import type { PressState } from '#shared/press/state'
 import { emptyProofTest } from '#shared/proof-test/apply'
-import type { Mark, Opened } from '#shared/proof-test/entries'
+import { engineerSchema, type Mark, type Opened } from '#shared/proof-test/entries'
 import { forceOf, leadInstrument, stageTarget, type StageTarget } from '#shared/proof-test/force'
 import { OPENING_RULES } from '#shared/proof-test/rules-before-load'
 import { openTestRequestSchema } from '#shared/api/proof-tests'
@@ -85,6 +85,7 @@ export function previewOpened({ draft, registers, press, shop, lead }: Chosen): 
     repeats: null,
     walkDownHours: shop.walkDownHours,
     instrumentOverride: draft.instrumentOverride.trim() || null,
+    engineer: engineerSchema.safeParse(draft.engineer).data ?? null,
   }
 }
 

@@ -3,6 +3,7 @@ import { fireEvent, render, screen, waitFor } from '@testing-library/react'
 import { MemoryRouter } from 'react-router-dom'
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
 import type { OpenTestRequest } from '#shared/api/proof-tests'
+import type { MemberStrength } from '#shared/structure/member-data'
 import { SHIPPED_PROTOCOLS } from '#shared/proof-test/protocol'
 import { ids, names, openedPayload } from '../../../../tests/factories/test-press'
 import { HereContext, type Here } from '../../../lib/here'
@@ -139,5 +140,61 @@ describe('the plan of a test above rating', { timeout: 20_000 }, () => {
     expect(await screen.findByText('The order asks for 110 %.')).toBeVisible()
     expect(opened[0]?.aboveRating).toEqual({ percent: 112.5, rule: 'Customer’s order, clause 4' })
     expect(field('aboveRating.percent').value).toBe('112,5')
+  })
+})
+
+describe('the plan of a test whose estimate is over 100 %', { timeout: 20_000 }, () => {
+  const mm = (text: string) => ({ text, unit: 'mm' as const })
+  const weakBed: MemberStrength = {
+    role: 'beam',
+    section: { shape: 'flat', height: mm('80'), width: mm('20'), sideBySide: 2, plates: [] },
+    material: { grade: 'S355JR' },
+    support: 'both ends',
+    span: mm('640'),
+    ramOffset: null,
+    hole: null,
+    loadShare: null,
+  }
+  const members = example.press.members.map((member) => (member.kind === 'bed-beam' ? { ...member, strength: weakBed } : member))
+  const weak = {
+    ...ledger,
+    entries: ledger.entries.map((entry) => ({ ...entry, payload: { ...entry.payload, description: { ...example.press, members } } })),
+  }
+
+  beforeEach(() => {
+    localStorage.clear()
+    opened = []
+    vi.stubGlobal(
+      'fetch',
+      vi.fn((url: string, init?: { method?: string; body?: string }) =>
+        init?.method !== 'POST' && url.includes('/entries') ? json(weak) : answer(url, init),
+      ),
+    )
+  })
+  afterEach(() => vi.unstubAllGlobals())
+
+  it('says which member, asks for a named engineer’s document, and sends it', async () => {
+    show()
+    await waitFor(() => field('points.0.instrumentId'))
+    enter('protocolId', ids.protocol)
+    expect(document.querySelector('[name^="engineer"]')).toBeNull()
+    enter('forceInstrumentIds.0', ids.gauge)
+    await waitFor(() => field('engineer.name'))
+    expect(screen.getAllByText(/By the estimate Bed comes to/).length).toBe(1)
+    for (const [index, id] of ids.indicators.entries()) enter(`points.${index}.instrumentId`, id)
+    enter('legs.0.bedHole', '4')
+    enter('pumpHand.id', ids.pumpHand)
+    enter('witness.id', ids.witness)
+    enter('witness.relation', 'works next door')
+    enter('engineer.name', 'P. Lindqvist')
+    fireEvent.click(screen.getByText('Open this test'))
+    expect(await screen.findByText('Say which document, with its number.')).toBeVisible()
+    expect(opened).toEqual([])
+    enter('engineer.document', 'Calculation 26-118, issue B')
+    enter('engineer.on', '2026-09-01')
+    await waitFor(() => expect(screen.queryByText(/By the estimate Bed comes to/)).toBeNull())
+    fireEvent.click(screen.getByText('Open this test'))
+    await waitFor(() => expect(opened).toHaveLength(1))
+    expect(opened[0]?.engineer).toEqual({ name: 'P. Lindqvist', document: 'Calculation 26-118, issue B', on: '2026-09-01' })
   })
 })

@@ -21,6 +21,7 @@ import { legsOf, usualPoints, type PlanDraft } from '../draft'
 import { beforeLoad, previewOpened, wouldRefuse } from '../preview'
 import { usePlanForm } from '../use-plan-form'
 import { BeforeStep } from './before-step'
+import { CheckStep } from './check-step'
 import { ForceStep, instrumentChoices } from './force-step'
 import { LegsStep } from './legs-step'
 import { PeopleStep } from './people-step'
@@ -113,10 +114,11 @@ export function PlanForm({ registers, askedPress, onOpened }: PlanFormProps) {
             <LegsStep form={form} number={2} />
             <ForceStep form={form} number={3} registers={registers} today={today} rams={description?.rams.length ?? 1} opened={opened} />
             <PointsStep form={form} number={4} press={description} indicators={instrumentChoices(registers, today, ['indicator'])} />
-            <PeopleStep form={form} number={5} registers={registers} shopId={shop.id} lead={lead} />
+            <CheckStep form={form} number={5} opened={opened} engineer={draft.engineer} />
+            <PeopleStep form={form} number={6} registers={registers} shopId={shop.id} lead={lead} />
             <BeforeStep
               form={form}
-              number={6}
+              number={7}
               opened={opened}
               today={today}
               findings={findings}

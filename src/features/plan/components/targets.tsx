@@ -1,9 +1,12 @@
+import { expectedAtStage } from '#shared/proof-test/can-tell'
 import type { Opened } from '#shared/proof-test/entries'
+import { lengthText } from '#shared/proof-test/figures'
 import { secondsWords } from '#shared/proof-test/protocol-words'
 import { formatForce, groupDigits, unitLabel } from '#shared/units'
 import { Mark } from '../../../components/marks'
 import { Sheet } from '../../../components/plate'
 import { setPercent } from '../../../components/typeset'
+import { capital } from '../../../lib/words'
 import { plannedStages, type PlannedStage } from '../preview'
 
 const head =
@@ -12,6 +15,8 @@ const cell = 'h-12 pr-2 last:pr-0 tablet:pr-4'
 
 function StageRow({ stage, opened }: { stage: PlannedStage; opened: Opened }) {
   const { target, holdSeconds, U } = stage
+  const band = expectedAtStage(opened, target.percent)
+  const expected = band && `${lengthText(opened, band.low, { unit: false })} to ${lengthText(opened, band.high, { unit: false })}`
   const window = `${groupDigits(target.window.fromText)} to ${groupDigits(target.window.toText)}`
   return (
     <tr className="border-b border-hairline last:border-b-0">
@@ -33,6 +38,7 @@ function StageRow({ stage, opened }: { stage: PlannedStage; opened: Opened }) {
       <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{window}</td>
       <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{U === null ? '—' : `± ${formatForce(U, opened.forceUnit)}`}</td>
       <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{secondsWords(holdSeconds)}</td>
+      {expected && <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{expected}</td>}
     </tr>
   )
 }
@@ -42,6 +48,7 @@ export function Targets({ opened }: { opened: Opened }) {
   const stages = plannedStages(opened)
   const [first] = stages
   if (first === undefined) return null
+  const expected = expectedAtStage(opened, 100)
   const unit = unitLabel(first.target.unit, { plural: true })
   const warnings = [...new Set(stages.flatMap((stage) => stage.warnings))]
   return (
@@ -72,6 +79,11 @@ export function Targets({ opened }: { opened: Opened }) {
               <th scope="col" className={`${head} max-tablet:hidden`}>
                 Held
               </th>
+              {expected && (
+                <th scope="col" className={`${head} max-tablet:hidden`}>
+                  Expected, {unitLabel(opened.lengthUnit)}
+                </th>
+              )}
             </tr>
           </thead>
           <tbody>
@@ -81,6 +93,13 @@ export function Targets({ opened }: { opened: Opened }) {
           </tbody>
         </table>
       </Sheet>
+      {expected && (
+        <p className="mt-3">
+          {capital(opened.net?.label ?? opened.points[0]?.label ?? 'The first point')}: expected to move{' '}
+          {lengthText(opened, expected.low, { unit: false })} to {lengthText(opened, expected.high)} at the rated load, by an estimate from
+          the sections.
+        </p>
+      )}
       {warnings.length > 0 && (
         <ul className="mt-3 grid gap-1">
           {warnings.map((warning) => (
