@@ -3,10 +3,11 @@ import { QueryClientProvider } from '@tanstack/react-query'
 import { StrictMode } from 'react'
 import { createRoot } from 'react-dom/client'
 import { RouterProvider } from 'react-router-dom'
+import { SkeletonPage } from './components/skeleton'
 import { sessionEnded } from './features/people/api/get-session'
 import { createQueryClient } from './lib/query-client'
 import { applyTheme, readTheme } from './lib/theme'
-import { createRouter } from './router'
+import { createRouter, findOutWhoIsHere } from './router'
 
 applyTheme(readTheme())
 
@@ -14,10 +15,14 @@ const root = document.getElementById('root')
 if (root === null) throw new Error('The page has no element to draw into.')
 
 const client = createQueryClient(sessionEnded)
-createRoot(root).render(
-  <StrictMode>
-    <QueryClientProvider client={client}>
-      <RouterProvider router={createRouter(client)} />
-    </QueryClientProvider>
-  </StrictMode>,
-)
+const page = createRoot(root)
+page.render(<SkeletonPage />)
+void findOutWhoIsHere(client).then(() => {
+  page.render(
+    <StrictMode>
+      <QueryClientProvider client={client}>
+        <RouterProvider router={createRouter(client)} />
+      </QueryClientProvider>
+    </StrictMode>,
+  )
+})

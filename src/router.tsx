@@ -1,9 +1,15 @@
 import type { QueryClient } from '@tanstack/react-query'
-import { createBrowserRouter, type RouteObject } from 'react-router-dom'
+import { createBrowserRouter, matchRoutes, type RouteObject } from 'react-router-dom'
 import { NotFound, RouteError } from './components/route-error'
 import { SkeletonPage } from './components/skeleton'
 import { paths } from './paths'
-import { requireSession, SignedIn, SignedInBare } from './routes/signed-in'
+import { askWhoIsHere, requireSession } from './routes/session-guard'
+
+/** Screens for whoever comes. */
+const openScreens: RouteObject[] = [
+  { path: paths.signIn.pattern, lazy: () => import('./routes/sign-in') },
+  { path: paths.openShop.pattern, lazy: () => import('./routes/open-shop') },
+]
 
 /** Each screen is a chunk of its own, fetched when it is opened. */
 const signedInScreens: RouteObject[] = [
@@ -27,6 +33,8 @@ const signedInScreens: RouteObject[] = [
   { path: paths.settings.pattern, lazy: () => import('./routes/settings') },
   { path: paths.account.pattern, lazy: () => import('./routes/account') },
   { path: paths.more.pattern, lazy: () => import('./routes/more') },
+  { path: paths.help.pattern, lazy: () => import('./routes/help') },
+  { path: paths.helpTopic.pattern, lazy: () => import('./routes/help-topic') },
 ]
 
 /** Screens under load bring their own title block instead of the navigation. */
@@ -35,6 +43,11 @@ const bareScreens: RouteObject[] = [
   { path: paths.attendProofTest.pattern, lazy: () => import('./routes/proof-test-attend') },
 ]
 
+/** Asks for the session before a screen that needs one is fetched: who has none is spared its code. */
+export async function findOutWhoIsHere(client: QueryClient): Promise<void> {
+  if (matchRoutes(openScreens, window.location) === null) await askWhoIsHere(client)
+}
+
 export function createRouter(client: QueryClient) {
   const loader = requireSession(client)
   return createBrowserRouter([
@@ -42,12 +55,15 @@ export function createRouter(client: QueryClient) {
       ErrorBoundary: RouteError,
       HydrateFallback: SkeletonPage,
       children: [
-        { path: paths.signIn.pattern, lazy: () => import('./routes/sign-in') },
-        { path: paths.openShop.pattern, lazy: () => import('./routes/open-shop') },
-        { loader, Component: SignedInBare, children: [{ ErrorBoundary: RouteError, children: bareScreens }] },
+        ...openScreens,
         {
           loader,
-          Component: SignedIn,
+          lazy: async () => ({ Component: (await import('./routes/signed-in')).SignedInBare }),
+          children: [{ ErrorBoundary: RouteError, children: bareScreens }],
+        },
+        {
+          loader,
+          lazy: async () => ({ Component: (await import('./routes/signed-in')).SignedIn }),
           // A screen that fails keeps the navigation round it.
           children: [{ ErrorBoundary: RouteError, children: [...signedInScreens, { path: '*', Component: NotFound }] }],
         },

@@ -1,33 +1,63 @@
-import { zodResolver } from '@hookform/resolvers/zod'
-import { useForm } from 'react-hook-form'
+import { useState, type FormEvent } from 'react'
 import { signInRequestSchema } from '#shared/api/session'
 import { Button } from '../../../components/button'
 import { PasswordField, TextField } from '../../../components/field'
 import { Form, FormError } from '../../../components/form'
-import { useProblemFields } from '../../../lib/use-problem-fields'
+import { ProblemError, sayWhatFailed } from '../../../lib/problem'
 import { useSignIn } from '../api/sign-in'
 
-/** E-mail and password. Says what the server says when they don't fit; keeps what was typed. */
+/** What is wrong with the form as it was sent last, by field; "" for the form as a whole. */
+type Wrong = Readonly<Partial<Record<'email' | 'password' | '', string>>>
+
+const ofServer = (error: unknown): Wrong =>
+  error instanceof ProblemError && Object.keys(error.fields).length > 0 ? error.fields : { '': sayWhatFailed(error) }
+
+/**
+ * E-mail and password. Says what the server says when they don't fit; keeps what was typed. It does without the form
+ * library: nothing else of the first screen needs it, and it would be a tenth of what that screen fetches.
+ */
 export function SignInForm({ onSignedIn }: { onSignedIn: () => void }) {
   const signIn = useSignIn()
-  const form = useForm({ resolver: zodResolver(signInRequestSchema), defaultValues: { email: '', password: '' } })
-  const { errors, submitCount } = form.formState
-  const showProblem = useProblemFields(form)
+  const [wrong, setWrong] = useState<Wrong>({})
+  const [attempt, setAttempt] = useState(0)
+  const show = (found: Wrong, form: HTMLFormElement) => {
+    setWrong(found)
+    setAttempt((before) => before + 1)
+    const [first = ''] = Object.keys(found)
+    const field = first === '' ? null : form.elements.namedItem(first)
+    if (field instanceof HTMLElement) field.focus()
+  }
+  const submit = async (event: FormEvent<HTMLFormElement>) => {
+    const form = event.currentTarget
+    const asked = signInRequestSchema.safeParse(Object.fromEntries(new FormData(form)))
+    if (!asked.success) {
+      const found: Record<string, string> = {}
+      for (const { path, message } of asked.error.issues) found[String(path[0])] ??= message
+      show(found, form)
+      return
+    }
+    try {
+      await signIn.mutateAsync(asked.data)
+      onSignedIn()
+    } catch (error) {
+      show(ofServer(error), form)
+    }
+  }
   return (
-    <Form onSubmit={form.handleSubmit((request) => signIn.mutate(request, { onSuccess: onSignedIn, onError: showProblem }))}>
-      <FormError message={errors.root?.message} attempt={submitCount} />
+    <Form onSubmit={submit}>
+      <FormError message={wrong['']} attempt={attempt} />
       <TextField
         label="E-mail"
+        name="email"
         type="email"
         autoComplete="username"
         inputMode="email"
         autoCapitalize="none"
         spellCheck={false}
         autoFocus
-        message={errors.email?.message}
-        {...form.register('email')}
+        message={wrong.email}
       />
-      <PasswordField label="Password" autoComplete="current-password" message={errors.password?.message} {...form.register('password')} />
+      <PasswordField label="Password" name="password" autoComplete="current-password" message={wrong.password} />
       <Button
         type="submit"
         kind="next"
