@@ -22,6 +22,7 @@ import { mayItBeUsed } from '#shared/press/may-it-be-used'
 import type { PressState } from '#shared/press/state'
 import { foldProofTest } from '#shared/proof-test/apply'
 import { elapsedBetween } from '#shared/proof-test/clock'
+import { checkOf, expectedOf } from '#shared/proof-test/expected'
 import { evaluateTest } from '#shared/proof-test/evaluate'
 import { frozenDifferences } from '#shared/proof-test/record'
 import type { ProofTestState } from '#shared/proof-test/state'
@@ -246,6 +247,18 @@ describe('its presses', () => {
     expect(answer.clearance.loadNewton).toBe(clearance.load)
     expect(clearance.load).toBeLessThanOrEqual(clearance.lowestForce - clearance.U)
     expect(answer.clearance.until > today()).toBe(true)
+  })
+
+  it('Ox moved as its sections let expect, and its check holds nothing back', () => {
+    const state = only(testsOf('Ox'))
+    if (!state.opened) throw new Error('The test was opened.')
+    const band = expectedOf(state.opened, 0)
+    const full = evaluateTest(state).climbs[0]?.stages.find((stage) => stage.percent === 100)?.start?.lead?.deflection ?? 0
+    expect(full).toBeGreaterThan(band?.low ?? Infinity)
+    expect(full).toBeLessThan(band?.high ?? 0)
+    const check = checkOf(state.opened)
+    expect(check.blocks).toBe(false)
+    expect(check.weakest?.utilisation).toBeGreaterThan(0.5)
   })
 
   it('Mule is being built: one joint is only tacked, and the others are not examined', () => {

@@ -4,6 +4,7 @@ import { startingFrame } from '#shared/press/starting-joints'
 import type { TypedForce, TypedPressure } from '#shared/units'
 import { dayOf, daysBefore, type Desk } from './desk'
 import type { DemoShops } from './demo-people'
+import { BADGER, OX, type Strengths } from './demo-strengths'
 import { PressBook } from './press-book'
 
 const shortTons = (text: string): TypedForce => ({ text, unit: 'short-ton' })
@@ -83,12 +84,14 @@ interface Built {
   /** How far every joint is made when the press is entered. */
   makeUp: MakeUp
   madeOn: string | null
+  /** What it is made of, where somebody measured it for the load path check. */
+  strengths?: Strengths
 }
 
 /** A press from the list that its kind of frame starts with, with its joints as far made as it was when entered. */
 function built(press: Built): { description: PressDescription; joints: Joint[]; lastWorkedOn: string | null } {
   const frame = startingFrame(press.kind, () => newId())
-  const { makeUp, madeOn } = press
+  const { makeUp, madeOn, strengths } = press
   const made = makeUp === 'open' ? null : madeOn
   const joints = frame.joints.map(
     (joint): Joint => ({
@@ -98,6 +101,7 @@ function built(press: Built): { description: PressDescription; joints: Joint[]; 
       madeBy: joint.kind === 'weld' && made !== null ? 'Noor Hassett' : '',
       filler: joint.kind === 'weld' ? 'E7018, 3.2 mm' : '',
       madeOn: made,
+      strength: strengths?.joint(joint) ?? null,
     }),
   )
   return {
@@ -113,7 +117,7 @@ function built(press: Built): { description: PressDescription; joints: Joint[]; 
         holes: press.holes?.count ?? 0,
       },
       ratedLoad: press.ratedLoad,
-      members: frame.members,
+      members: frame.members.map((member) => ({ ...member, strength: strengths?.member(member) ?? null })),
       rams: [ram(press.marked)],
       train: train(press.marked.pressure, press.frameRating, press.stackRating),
     },
@@ -152,6 +156,7 @@ export const registerBadger = finishedPress(176, 'secondLead', {
   opening: '540',
   ratedLoad: shortTons('40'),
   marked: { bore: '100', stroke: '160', capacity: shortTons('60'), pressure: psi('10000') },
+  strengths: BADGER,
   frameRating: shortTons('48'),
   stackRating: shortTons('60'),
 })
@@ -190,6 +195,7 @@ export const registerOx = finishedPress(16, 'lead', {
   holes: { pitch: '150', count: 7 },
   ratedLoad: shortTons('20'),
   marked: { bore: '65', stroke: '180', capacity: shortTons('25'), pressure: psi('10000') },
+  strengths: OX,
   frameRating: shortTons('22'),
   stackRating: shortTons('40'),
 })

@@ -93,7 +93,7 @@ export async function testFerry(desk: Desk, registers: DemoRegisters, press: Pre
 }
 
 const badgerFrame = (bedsIn: number): FrameBehaviour => ({
-  points: [behaves(2, 0.0061, bedsIn, 0.015), behaves(0.5, 0.0011), behaves(0.5, 0.0012)],
+  points: [behaves(2, 0.0032, bedsIn, 0.015), behaves(0.5, 0.0011), behaves(0.5, 0.0012)],
   leak: 0.0015,
   creep: 0.001,
 })
@@ -199,7 +199,7 @@ export async function testOx(desk: Desk, registers: DemoRegisters, press: PressB
     force: 'dialGauge',
     ...bedPoints(press, dials(registers.instruments)),
     legs: central('4'),
-    frames: [{ points: [behaves(1, 0.0128, 0.043, 0.02), behaves(0.5, 0.0024, 0.006), behaves(0.5, 0.0022, 0.005)], leak: 0.002, creep: 0.001 }],
+    frames: [{ points: [behaves(1, 0.0071, 0.034, 0.02), behaves(0.5, 0.0024, 0.006), behaves(0.5, 0.0022, 0.005)], leak: 0.002, creep: 0.001 }],
     reliefSet: psi('8400'),
     strokePercent: '40',
     temperature: '19',

@@ -56,25 +56,42 @@ export function CheckBars({ check, forceUnit, most }: { check: LoadPathCheck; fo
   )
 }
 
+/** Names of what shares one reason, the check said once. */
+interface Unchecked {
+  names: string[]
+  check: string
+  why: string
+}
+
+function byReason(results: readonly CheckResult[]): Unchecked[] {
+  const groups = new Map<string, Unchecked>()
+  for (const { name, check, notChecked } of results) {
+    if (notChecked === null) continue
+    const group = groups.get(check + notChecked) ?? { names: [], check, why: notChecked }
+    group.names.push(name)
+    groups.set(check + notChecked, group)
+  }
+  return [...groups.values()]
+}
+
 /** What is not checked, each with its reason: no figure is no pass. */
 export function NotChecked({ check }: { check: LoadPathCheck }) {
-  const rows = check.results.filter(({ verdict }) => verdict === 'not checked')
-  if (rows.length === 0) return null
+  const groups = byReason(check.results)
+  if (groups.length === 0) return null
   return (
     <ul aria-label="Not checked" className="border-t border-hairline">
-      {rows.map((result, index) => (
+      {groups.map(({ names, check: what, why }) => (
         <li
-          key={index}
-          className="grid grid-cols-[1.75rem_minmax(0,1fr)] items-start gap-x-2 border-b border-hairline py-2 tablet:grid-cols-[1.75rem_minmax(0,1.1fr)_8rem_minmax(0,1.3fr)] tablet:gap-x-4"
+          key={what + why}
+          className="grid grid-cols-[1.75rem_minmax(0,1fr)] items-start gap-x-2 border-b border-hairline py-2 tablet:grid-cols-[1.75rem_minmax(0,1fr)_minmax(0,1.3fr)] tablet:gap-x-4"
         >
           <span className="mt-0.5">
             <Mark name="not-read" size={20} />
           </span>
           <p className="min-w-0">
-            <span className="font-medium">{capital(result.name)}</span> <span className="text-graphite">{result.check}</span>
+            <span className="font-semibold">NOT CHECKED</span> <span className="font-medium">{what}</span>. {why}
           </p>
-          <p className="font-semibold max-tablet:col-start-2">NOT CHECKED</p>
-          <p className="max-tablet:col-start-2">{result.notChecked}</p>
+          <p className="text-graphite max-tablet:col-start-2">{names.map(capital).join('; ')}</p>
         </li>
       ))}
     </ul>

@@ -52,7 +52,8 @@ describe('the load path check on the page of a press', () => {
     expect(first).toHaveTextContent(/^Bed .*within 58\s%, 17\.08\skN·m of 29\.44\skN·m/)
     expect(second).toHaveTextContent(/^Head beam/)
     const unchecked = within(screen.getByRole('list', { name: 'Not checked' })).getAllByRole('listitem')
-    expect(unchecked.every((row) => /NOT CHECKED\S/.test(row.textContent ?? ''))).toBe(true)
+    expect(unchecked.every((row) => /^NOT CHECKED .+\. .+\./.test(row.textContent ?? ''))).toBe(true)
+    expect(unchecked.find((row) => row.textContent?.includes('No section'))).toHaveTextContent('Left upright; Right upright; Ram seat')
   })
 
   it('says which limit is passed and what holds the load back', () => {
