@@ -1,6 +1,15 @@
 import ExcelJS, { type CellFormulaValue, type Workbook, type Worksheet } from 'exceljs'
 import { beforeAll, describe, expect, test, vi } from 'vitest'
-import { firstClimb, recordedTest, repeatClimb, stoppedTest, storedEntries, twoLegTest, type RecordedTest } from '../../tests/factories/recorded-test'
+import {
+  countersignedLater,
+  firstClimb,
+  recordedTest,
+  repeatClimb,
+  stoppedTest,
+  storedEntries,
+  twoLegTest,
+  type RecordedTest,
+} from '../../tests/factories/recorded-test'
 import type { MemberStrength } from '#shared/structure/member-data'
 import { openedPayload } from '../../tests/factories/test-press'
 import { recordFileName } from './record'
@@ -30,7 +39,13 @@ const counted = [
 vi.setConfig({ testTimeout: 60_000, hookTimeout: 60_000 })
 
 async function open(recorded: RecordedTest): Promise<Workbook> {
-  const source = { id: recorded.id, stored: storedEntries(recorded.entries), people: recorded.people, seals: [], writtenAt: '2026-09-21T08:00:00.000Z' }
+  const source = {
+    id: recorded.id,
+    stored: storedEntries(recorded.entries),
+    people: recorded.people,
+    seals: [],
+    writtenAt: '2026-09-21T08:00:00.000Z',
+  }
   const workbook = new ExcelJS.Workbook()
   // exceljs declares a Buffer of its own; what it reads is any array buffer.
   await workbook.xlsx.load((await recordWorkbook(source)) as unknown as ArrayBuffer)
@@ -96,6 +111,13 @@ describe('the workbook of a countersigned test', () => {
       'Units',
     ])
     expect(sheetOf(workbook, 'Chart').getImages()).toHaveLength(1)
+  })
+
+  test('names the witness’s relation to the shop, and how late a countersignature came', async () => {
+    const words = (book: Workbook) => sheetOf(book, 'People and signatures').getSheetValues().flat().map(String).join(' ')
+    expect(words(workbook)).toContain('works next door, no part in the build')
+    expect(words(workbook)).not.toContain('hours after the lead')
+    expect(words(await open(countersignedLater(recordedTest(), 26)))).toContain('26 hours after the lead')
   })
 
   test('computes every force from the reading and the bore, by formula', () => {
@@ -194,8 +216,13 @@ describe('the workbook of a countersigned test', () => {
     const all = workbook.worksheets.map(textOf).join('\n')
     expect(all).not.toMatch(/\bsafe\b|\byes\b|\bapproved\b/i)
     // Outside the ledger's own texts every ton says which one it is.
-    const printed = workbook.worksheets.filter((sheet) => sheet.name !== 'Ledger').map(textOf).join('\n')
-    expect(printed.replace(/(short|long)[\s-]tons?|metric tons?-force|metric ton-force/gi, '').replace(/"Ton" never stands alone/, '')).not.toMatch(/\btons?\b/i)
+    const printed = workbook.worksheets
+      .filter((sheet) => sheet.name !== 'Ledger')
+      .map(textOf)
+      .join('\n')
+    expect(
+      printed.replace(/(short|long)[\s-]tons?|metric tons?-force|metric ton-force/gi, '').replace(/"Ton" never stands alone/, ''),
+    ).not.toMatch(/\btons?\b/i)
   })
 
   test('keeps the ledger whole: hashes, and texts joined from their cells', () => {
@@ -227,17 +254,22 @@ function textOf(sheet: Worksheet): string {
 }
 
 describe('what begins like a formula', () => {
-  test.each(['=1+1', '+1', '-1', '@SUM(A1)', '\t=1', '=HYPERLINK("http://x.example","look")'])('stays words, formatted as text: %s', async (words) => {
-    const { opened } = recordedTest({ until: 'opened' }).state
-    const part = opened?.press.train[0]
-    if (!opened || !part) throw new Error('The test was opened with a train.')
-    const workbook = await open(recordedTest({ until: 'opened', opened: { press: { ...opened.press, train: [{ ...part, name: words }] } } }))
-    const cells: ExcelJS.Cell[] = []
-    for (const sheet of workbook.worksheets) sheet.eachRow((row) => row.eachCell((cell) => cells.push(cell)))
-    const found = cells.filter((cell) => cell.text === words)
-    expect(found.map(({ type, numFmt }) => ({ type, numFmt }))).toEqual([{ type: ExcelJS.ValueType.String, numFmt: '@' }])
-    expect(cells.filter((cell) => cell.type === ExcelJS.ValueType.Formula && live(cell).formula === words.replace(/^=/, ''))).toEqual([])
-  })
+  test.each(['=1+1', '+1', '-1', '@SUM(A1)', '\t=1', '=HYPERLINK("http://x.example","look")'])(
+    'stays words, formatted as text: %s',
+    async (words) => {
+      const { opened } = recordedTest({ until: 'opened' }).state
+      const part = opened?.press.train[0]
+      if (!opened || !part) throw new Error('The test was opened with a train.')
+      const workbook = await open(
+        recordedTest({ until: 'opened', opened: { press: { ...opened.press, train: [{ ...part, name: words }] } } }),
+      )
+      const cells: ExcelJS.Cell[] = []
+      for (const sheet of workbook.worksheets) sheet.eachRow((row) => row.eachCell((cell) => cells.push(cell)))
+      const found = cells.filter((cell) => cell.text === words)
+      expect(found.map(({ type, numFmt }) => ({ type, numFmt }))).toEqual([{ type: ExcelJS.ValueType.String, numFmt: '@' }])
+      expect(cells.filter((cell) => cell.type === ExcelJS.ValueType.Formula && live(cell).formula === words.replace(/^=/, ''))).toEqual([])
+    },
+  )
 })
 
 test('a stopped test says so, and its softening is beyond', async () => {
@@ -261,9 +293,13 @@ test('readings, once typed, are what the record shows: nothing is filled in', as
   const rows = table(sheetOf(await open(recordedTest()), 'Readings'))
   const typed = [firstClimb, repeatClimb].flatMap((climb) => climb.stages.flatMap(({ start, end }) => [start, end]))
   const shown = rows.filter((row) => /hold (start|end)/.test(row['Row']?.text ?? ''))
-  expect(shown.map((row) => [row['G-02 | as typed'], row['Middle | as typed'], row['Left pin | as typed'], row['Right pin | as typed']].map((cell) => cell?.value))).toEqual(
-    typed.map((row) => row.map(Number)),
-  )
+  expect(
+    shown.map((row) =>
+      [row['G-02 | as typed'], row['Middle | as typed'], row['Left pin | as typed'], row['Right pin | as typed']].map(
+        (cell) => cell?.value,
+      ),
+    ),
+  ).toEqual(typed.map((row) => row.map(Number)))
 })
 
 test('a long text is cut between characters, and joins again', () => {
@@ -296,7 +332,10 @@ describe('the sheet of the load path check', () => {
     loadShare: null,
   }
   const opened = {
-    press: { ...known.press, members: known.press.members.map((member) => (member.kind === 'bed-beam' ? { ...member, strength: bed } : member)) },
+    press: {
+      ...known.press,
+      members: known.press.members.map((member) => (member.kind === 'bed-beam' ? { ...member, strength: bed } : member)),
+    },
     engineer: { name: 'P. Lindqvist', document: 'Calculation 26-118', on: '2026-09-01' },
   }
 

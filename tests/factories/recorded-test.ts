@@ -156,7 +156,11 @@ class TestWriter {
   }
 
   setUp(): void {
-    this.write({ kind: 'load-path-confirmed', payload: { by: 'witness', joints: this.state.joints.length } }, this.moment('09:41'), ids.witness)
+    this.write(
+      { kind: 'load-path-confirmed', payload: { by: 'witness', joints: this.state.joints.length } },
+      this.moment('09:41'),
+      ids.witness,
+    )
     const payload = { items: [...SET_UP_ITEMS], reliefSet: { text: '8500', unit: 'psi' as const }, strokePercent: '40', note: '' }
     this.write({ kind: 'set-up-confirmed', payload }, this.moment('09:50'))
   }
@@ -315,4 +319,15 @@ export function storedEntries(entries: readonly LedgerEntry[]): StoredEntry[] {
     hash,
     canonical: entryText(draft, { seq, receivedAt, irregular, prevHash }),
   }))
+}
+
+/** The same test with the countersignature so many hours after the lead's. */
+export function countersignedLater(recorded: RecordedTest, hours: number): RecordedTest {
+  const signed = recorded.entries.find((entry) => entry.kind === 'signed')
+  if (!signed) throw new Error('The test has not been signed.')
+  const signedAt = new Date(Date.parse(String(signed.payload['signedAt'])) + hours * 3_600_000).toISOString()
+  const entries = recorded.entries.map((entry) =>
+    entry.kind === 'countersigned' ? { ...entry, payload: { ...entry.payload, signedAt } } : entry,
+  )
+  return { ...recorded, entries }
 }

@@ -6,7 +6,7 @@ import type { PlanRegisters } from './api/get-plan-registers'
 import { ids, names, openedPayload } from '../../../tests/factories/test-press'
 import { SHIPPED_PROTOCOLS } from '#shared/proof-test/protocol'
 import { legsOf, netOf, newPlan, toRequest, usualPoints, type PlanDraft, type PlanLookup } from './draft'
-import { beforeLoad, plannedStages, previewOpened, wouldRefuse, type Chosen } from './preview'
+import { beforeLoad, plannedStages, previewOpened, tellsSetFrom, wouldRefuse, type Chosen } from './preview'
 
 const example = openedPayload()
 const mark = { at: '2026-09-14T15:20:00.000Z', bootId: ids.test, monotonicMs: 0 }
@@ -210,6 +210,35 @@ describe('what to pump to', () => {
     const opened = previewOpened(chosen())
     const warnings = opened ? plannedStages(opened).flatMap((stage) => stage.warnings) : []
     expect(warnings).toContainEqual(expect.stringContaining('below one quarter'))
+  })
+
+  it('says how far a point has to move for its indicator to tell the permanent set', () => {
+    const opened = previewOpened(chosen())
+    // Increments of 0.01 mm: two of them are 5 % of 0.40 mm.
+    expect(tellsSetFrom(opened, ids.indicators[0] ?? '')).toMatch(/^Two of its increments are 5 % of 0\.40\smm\./)
+    expect(tellsSetFrom(opened, ids.gauge)).toBeNull()
+    expect(tellsSetFrom(null, ids.indicators[0] ?? '')).toBeNull()
+  })
+
+  it('warns where the gauge is above three quarters of its scale', () => {
+    const short = registers.instruments.map((one) =>
+      one.details.kind === 'gauge' ? { ...one, details: { ...one.details, fullScale: { text: '10000', unit: 'psi' as const } } } : one,
+    )
+    const opened = previewOpened(chosen({}, { registers: { ...registers, instruments: short } }))
+    const full = opened && plannedStages(opened).at(-1)
+    // 7 850 psi of 10 000.
+    expect(full?.warnings).toContainEqual(expect.stringMatching(/^100 %: The target is at 79 % of the scale, above three quarters/))
+  })
+
+  it('says that a gauge cannot tell whether a stage is reached', () => {
+    const coarse = registers.instruments.map((one) =>
+      one.details.kind === 'gauge'
+        ? { ...one, calibration: null, details: { ...one.details, accuracy: { standard: 'en-837-1' as const, class: 4 as const } } }
+        : one,
+    )
+    const opened = previewOpened(chosen({}, { registers: { ...registers, instruments: coarse } }))
+    const first = opened && plannedStages(opened)[0]
+    expect(first?.warnings).toContainEqual(expect.stringContaining('25 %: this gauge cannot tell whether the stage is reached'))
   })
 
   it('is not said before press, protocol and gauge are chosen', () => {

@@ -11,7 +11,7 @@ import { forceOf, leadInstrument, stageTarget, type StageTarget } from '#shared/
 import { OPENING_RULES } from '#shared/proof-test/rules-before-load'
 import { openTestRequestSchema } from '#shared/api/proof-tests'
 import { withAboveRating } from '#shared/proof-test/protocol'
-import { toSI } from '#shared/units'
+import { decimalsOfStep, formatQuantity, toSI } from '#shared/units'
 import type { PlanRegisters } from './api/get-plan-registers'
 import { typedNumber } from '../../lib/draft-resolver'
 import { netOf, SOMEBODY_ELSE, type PlanDraft } from './draft'
@@ -144,6 +144,20 @@ export function plannedStages(opened: Opened): PlannedStage[] {
     const U = forceOf(opened, readings)?.U ?? null
     return [{ target, holdSeconds, U, warnings: warningsOf(opened, target, U) }]
   })
+}
+
+/**
+ * From which movement at full load on an indicator can tell the protocol's permanent set: two of its increments are the
+ * share that may stay. Null where no protocol, indicator or share is chosen.
+ * Common practice, no source.
+ */
+export function tellsSetFrom(opened: Opened | null, instrumentId: string): string | null {
+  const details = opened?.instruments.find((one) => one.id === instrumentId)?.details
+  const share = (opened?.protocol.content.limits.setPercent ?? 0) / 100
+  if (details?.kind !== 'indicator' || share === 0) return null
+  const { unit } = details.increment
+  const least = formatQuantity((2 * toSI(details.increment)) / share, unit, decimalsOfStep(toSI(details.increment), unit))
+  return `Two of its increments are ${share * 100} % of ${least}. Where the point moves less than that at full load, it cannot tell the permanent set: fit a finer one.`
 }
 
 /** "G-02, glycerine gauge, 15 000 psi". */

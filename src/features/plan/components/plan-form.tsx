@@ -113,7 +113,13 @@ export function PlanForm({ registers, askedPress, onOpened }: PlanFormProps) {
             />
             <LegsStep form={form} number={2} />
             <ForceStep form={form} number={3} registers={registers} today={today} rams={description?.rams.length ?? 1} opened={opened} />
-            <PointsStep form={form} number={4} press={description} indicators={instrumentChoices(registers, today, ['indicator'])} />
+            <PointsStep
+              form={form}
+              number={4}
+              press={description}
+              indicators={instrumentChoices(registers, today, ['indicator'])}
+              opened={opened}
+            />
             <CheckStep form={form} number={5} opened={opened} engineer={draft.engineer} />
             <PeopleStep form={form} number={6} registers={registers} shopId={shop.id} lead={lead} />
             <BeforeStep

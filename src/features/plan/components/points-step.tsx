@@ -2,22 +2,35 @@ import { useFieldArray, useWatch } from 'react-hook-form'
 import { v7 as newId } from 'uuid'
 import type { PressDescription } from '#shared/press/model'
 import { measuringPlaces } from '#shared/press/places'
+import type { Opened } from '#shared/proof-test/entries'
 import { Button } from '../../../components/button'
 import { ControlledRadios } from '../../../components/controlled'
 import { FieldMessage, TextField } from '../../../components/field'
 import { FormStep, WholeRow } from '../../../components/form-steps'
 import { SelectField, type Choice } from '../../../components/select-field'
+import { setPercent } from '../../../components/typeset'
 import { capital } from '../../../lib/words'
 import { netOf } from '../draft'
+import { tellsSetFrom } from '../preview'
 import type { PlanForm } from '../use-plan-form'
 
 const places = measuringPlaces.map(({ place, label }) => ({ value: place, label }))
 
-type PointFieldsProps = { form: PlanForm; index: number; press: PressDescription; indicators: Choice[]; onRemove: (() => void) | undefined }
+type PointFieldsProps = {
+  form: PlanForm
+  index: number
+  press: PressDescription
+  indicators: Choice[]
+  /** What opening would freeze, as far as it is chosen. */
+  opened: Opened | null
+  onRemove: (() => void) | undefined
+}
 
-function PointFields({ form, index, press, indicators, onRemove }: PointFieldsProps) {
+function PointFields({ form, index, press, indicators, opened, onRemove }: PointFieldsProps) {
   const { control, register, formState } = form
+  const instrumentId = useWatch({ control, name: `points.${index}.instrumentId` })
   const errors = formState.errors.points?.[index]
+  const tells = tellsSetFrom(opened, instrumentId)
   return (
     <fieldset className="grid min-w-0 grid-cols-1 items-start gap-x-4 gap-y-3 border-b border-hairline pb-4 tablet:col-span-2 tablet:grid-cols-[4.5rem_minmax(0,1fr)_minmax(0,1fr)]">
       <legend className="sr-only">Measuring point {index + 1}</legend>
@@ -26,6 +39,7 @@ function PointFields({ form, index, press, indicators, onRemove }: PointFieldsPr
       <SelectField
         label="Indicator"
         nothing="Choose an indicator"
+        hint={tells === null ? undefined : setPercent(tells)}
         choices={indicators}
         message={errors?.instrumentId && 'Choose an indicator.'}
         {...register(`points.${index}.instrumentId`)}
@@ -57,10 +71,10 @@ function PointFields({ form, index, press, indicators, onRemove }: PointFieldsPr
   )
 }
 
-type PointsStepProps = { form: PlanForm; number: number; press: PressDescription | null; indicators: Choice[] }
+type PointsStepProps = { form: PlanForm; number: number; press: PressDescription | null; indicators: Choice[]; opened: Opened | null }
 
 /** Where the frame's movement is read, by what, and which way counts as load. */
-export function PointsStep({ form, number, press, indicators }: PointsStepProps) {
+export function PointsStep({ form, number, press, indicators, opened }: PointsStepProps) {
   const { control, formState } = form
   const points = useFieldArray({ control, name: 'points', keyName: 'key' })
   const values = useWatch({ control, name: 'points' })
@@ -86,6 +100,7 @@ export function PointsStep({ form, number, press, indicators }: PointsStepProps)
             index={index}
             press={press}
             indicators={indicators}
+            opened={opened}
             onRemove={points.fields.length > 1 ? () => points.remove(index) : undefined}
           />
         ))}

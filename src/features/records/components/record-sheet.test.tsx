@@ -5,7 +5,7 @@ import { MemoryRouter } from 'react-router-dom'
 import { afterEach, describe, expect, test, vi } from 'vitest'
 import type { EntriesResponse } from '#shared/api/ledger'
 import { can } from '#shared/policy'
-import { recordedTest, stoppedTest, twoLegTest, type RecordedTest } from '../../../../tests/factories/recorded-test'
+import { countersignedLater, recordedTest, stoppedTest, twoLegTest, type RecordedTest } from '../../../../tests/factories/recorded-test'
 import { ids } from '../../../../tests/factories/test-press'
 import { createQueryClient } from '../../../lib/query-client'
 import { useRecord } from '../api/get-ledger'
@@ -118,6 +118,15 @@ describe('the record of a countersigned test', () => {
     expect(signatures).toHaveTextContent(/Marit Sandoval.*signed with password.*I ran this test and these are its readings\./)
     expect(signatures).toHaveTextContent(/Tomas Achterberg.*signed with password.*I was present and read the gauge myself\./)
     expect(signatures).toHaveTextContent('Chain whole, checked 21 Sep 2026')
+  })
+
+  test('prints how the witness stands to the shop, and how late a countersignature came', async () => {
+    await show(recordedTest())
+    expect(screen.getByRole('region', { name: 'Signatures' })).toHaveTextContent('works next door, no part in the build')
+    expect(screen.getByRole('region', { name: 'Signatures' })).not.toHaveTextContent('hours after the lead')
+    document.body.replaceChildren()
+    await show(countersignedLater(recordedTest(), 26))
+    expect(screen.getByRole('region', { name: 'Signatures' })).toHaveTextContent('26 hours after the lead')
   })
 
   test('gives the spreadsheet to those who may export it only', async () => {
