@@ -174,6 +174,7 @@ export function stageTarget(opened: Opened, percent: number): StageTarget | null
     lowerTolerance: lower,
     upperTolerance: upper,
     capPressure: pressureFor(cap),
+    units: { pressure: instrument.details.increment.unit, force: opened.forceUnit },
   })
   const from = up(pressureFor(force * (1 - lower)))
   const to = down(pressureFor(Math.min(force * (1 + upper), cap)))

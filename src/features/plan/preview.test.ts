@@ -174,6 +174,10 @@ describe('what would keep a test shut', () => {
     expect(findings({ witness: { id: ids.pumpHand, relation: 'the pump hand' } })).toEqual(['R5'])
   })
 
+  it('is no matter of a witness and a pump hand who are not chosen yet', () => {
+    expect(findings({ witness: { id: '', relation: '' }, pumpHand: { id: '', name: '' } })).toEqual([])
+  })
+
   it('is a target past the end of the gauge', () => {
     const short = registers.instruments.map((one) =>
       one.details.kind === 'gauge' ? { ...one, details: { ...one.details, fullScale: { text: '7000', unit: 'psi' as const } } } : one,
@@ -228,6 +232,18 @@ describe('what to pump to', () => {
     const full = opened && plannedStages(opened).at(-1)
     // 7 850 psi of 10 000.
     expect(full?.warnings).toContainEqual(expect.stringMatching(/^100 %: The target is at 79 % of the scale, above three quarters/))
+  })
+
+  it('says in the gauge’s own unit where what can be read falls short of the stage', () => {
+    const coarse = registers.instruments.map((one) =>
+      one.details.kind === 'gauge' ? { ...one, details: { ...one.details, increment: { text: '200', unit: 'psi' as const } } } : one,
+    )
+    const opened = previewOpened(chosen({}, { registers: { ...registers, instruments: coarse } }))
+    const first = opened && plannedStages(opened)[0]
+    // A quarter of 7 886 psi is 1 971: in steps of 200 that is 1 800, 8.7 % less, and 2 000 is 1.4 % more.
+    expect(first?.warnings[0]).toMatch(
+      /^25 %: 1\s?800\spsi makes 2\.74\sshort tons, less than.*The next value that can be read, 2\s?000\spsi makes/,
+    )
   })
 
   it('says that a gauge cannot tell whether a stage is reached', () => {

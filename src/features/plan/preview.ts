@@ -75,7 +75,12 @@ export function previewOpened({ draft, registers, press, shop, lead }: Chosen): 
     legs: draft.legs,
     people: {
       lead: { ...lead, relation: '' },
-      pumpHand: { id: stranger ? null : draft.pumpHand.id, name: stranger ? draft.pumpHand.name : nameOf(draft.pumpHand.id), relation: '' },
+      // Nobody chosen yet is nobody: two empty choices are not the same person.
+      pumpHand: {
+        id: stranger ? null : draft.pumpHand.id || null,
+        name: stranger ? draft.pumpHand.name : nameOf(draft.pumpHand.id),
+        relation: '',
+      },
       witness: { id: draft.witness.id, name: nameOf(draft.witness.id), relation: draft.witness.relation },
     },
     forceUnit: shop.forceUnit,
@@ -119,7 +124,7 @@ export interface PlannedStage {
 
 function warningsOf(opened: Opened, target: StageTarget, U: number | null): string[] {
   const lead = leadInstrument(opened)
-  const sentences = target.sentence === null ? [] : [target.sentence]
+  const sentences = target.sentence === null ? [] : [`${target.percent} %: ${target.sentence}`]
   if (lead?.details.kind === 'gauge') {
     const { verdict, sentence } = gaugeSuitability({ fullScale: toSI(lead.details.fullScale), target: target.readable })
     if (verdict === 'high-on-scale' || verdict === 'low-on-scale') sentences.push(`${target.percent} %: ${sentence}`)

@@ -16,13 +16,14 @@ const cell = 'h-12 pr-2 last:pr-0 tablet:pr-4'
 function StageRow({ stage, opened }: { stage: PlannedStage; opened: Opened }) {
   const { target, holdSeconds, U } = stage
   const band = expectedAtStage(opened, target.percent)
-  const expected = band && `${lengthText(opened, band.low, { unit: false })} to ${lengthText(opened, band.high, { unit: false })}`
+  const expected = band && `moves ${lengthText(opened, band.low, { unit: false })} to ${lengthText(opened, band.high)}`
   const window = `${groupDigits(target.window.fromText)} to ${groupDigits(target.window.toText)}`
   return (
     <tr className="border-b border-hairline last:border-b-0">
       <th scope="row" className={`${cell} text-left font-semibold whitespace-nowrap`}>
         {target.percent}
-        {'\u202f'}%{target.percent > 100 && <span className="block text-14 font-normal text-graphite">second climb</span>}
+        {'\u202f'}%
+        {target.percent > 100 && <span className="block text-14 font-normal text-graphite max-tablet:whitespace-normal">second climb</span>}
       </th>
       <td className={cell}>
         <span className="whitespace-nowrap">{formatForce(target.force, opened.forceUnit)}</span>
@@ -34,11 +35,14 @@ function StageRow({ stage, opened }: { stage: PlannedStage; opened: Opened }) {
       <td className={`${cell} whitespace-nowrap`}>
         <span className="text-18 font-semibold">{groupDigits(target.text)}</span>
         <span className="block text-14 text-graphite tablet:hidden">{window}</span>
+        {expected && <span className="block text-14 text-graphite tablet:hidden">{expected}</span>}
       </td>
-      <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{window}</td>
+      <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>
+        {window}
+        {expected && <span className="block text-14 text-graphite">{expected}</span>}
+      </td>
       <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{U === null ? '—' : `± ${formatForce(U, opened.forceUnit)}`}</td>
       <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{secondsWords(holdSeconds)}</td>
-      {expected && <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>{expected}</td>}
     </tr>
   )
 }
@@ -79,11 +83,6 @@ export function Targets({ opened }: { opened: Opened }) {
               <th scope="col" className={`${head} max-tablet:hidden`}>
                 Held
               </th>
-              {expected && (
-                <th scope="col" className={`${head} max-tablet:hidden`}>
-                  Expected, {unitLabel(opened.lengthUnit)}
-                </th>
-              )}
             </tr>
           </thead>
           <tbody>
