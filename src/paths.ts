@@ -50,6 +50,9 @@ export const paths = {
   account: list('/account'),
   more: list('/more'),
 
+  help: list('/help'),
+  helpTopic: one('/help', 'topic'),
+
   signIn: {
     pattern: '/sign-in',
     href: (query: { next?: string } = {}) => withQuery('/sign-in', query),

@@ -18,6 +18,7 @@ export function usePersonEntries(): readonly MenuEntry[] {
   return [
     { label: 'Your account', to: paths.account.href() },
     { label: 'Shop settings', to: paths.settings.href() },
+    { label: 'Help', note: 'how each figure is worked out', to: paths.help.href() },
     ...otherShops.map((one) => ({ label: `Go to ${one.name}`, note: `there you are ${one.role}`, to: paths.today.href({ shop: one.id }) })),
     {
       label: signOut.isError ? 'Still signed in: try again' : 'Sign out',
