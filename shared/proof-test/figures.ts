@@ -82,7 +82,11 @@ export function spread(points: readonly Point[]): boolean {
 }
 
 /** The prediction for a force, from the datum and the stages before (DOMAIN 3.5). Null below two points. */
-export function predict(opened: Opened, points: readonly Point[], force: number): Prediction | null {
+export function predict(
+  opened: { protocol: { content: Pick<Opened['protocol']['content'], 'predictionAllowancePercent'> } },
+  points: readonly Point[],
+  force: number,
+): Prediction | null {
   if (!spread(points)) return null
   const fit = fitLine(points.map((point) => ({ x: point.force, y: point.deflection })))
   const deflection = fit.intercept + fit.slope * force

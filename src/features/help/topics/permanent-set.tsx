@@ -166,7 +166,7 @@ export const permanentSetTopic: Topic = {
         {
           what: 'What ASME ASP-2010 allows at most',
           sum: '0.125 in increase of the opening; the shop’s own tighter limit applies as well',
-          value: mm(ASP_PERMANENT_INCREASE_LIMIT, 2),
+          value: mm(ASP_PERMANENT_INCREASE_LIMIT),
         },
       ],
       so: 'A second set that stays means that the frame yields: the test is rejected. Read the set in the datum’s contact condition, and note the temperature; a warmed frame is longer.',
