@@ -1,18 +1,18 @@
-import { formatForce, formatNumber, formatQuantity, toUnit, type ForceUnit } from '../units'
+import { FORCE_DECIMALS, formatNumber, formatValue, toUnit, unitLabel, type ForceUnit } from '../units'
 import { DEFAULT_FACTORS, type StrengthFactors } from './factors'
 import { percentUsed, type CheckResult, type LoadPathCheck } from './load-path-check'
 
 /** How a load path check reads on screens, records and exports. */
 
-/** A demand or capacity in print: "53.4 kN" in the reader's force unit, "12.3 kN·m", "214 MPa". */
-export function loadWords(value: number, unit: NonNullable<CheckResult['unit']>, forceUnit: ForceUnit): string {
+/** A demand or capacity in print, number and unit: 53.4 in the reader's force unit, 12.3 kN·m, 214 MPa. */
+function loadWords(value: number, unit: NonNullable<CheckResult['unit']>, forceUnit: ForceUnit): { number: string; unit: string } {
   switch (unit) {
     case 'N':
-      return formatForce(value, forceUnit)
+      return { number: formatValue(value, forceUnit, FORCE_DECIMALS[forceUnit]), unit: unitLabel(forceUnit, { plural: true }) }
     case 'N·m':
-      return `${formatNumber(toUnit(value, 'kN'), 2)}\u00a0kN·m`
+      return { number: formatNumber(toUnit(value, 'kN'), 2), unit: 'kN·m' }
     case 'Pa':
-      return formatQuantity(value, 'MPa', 0)
+      return { number: formatValue(value, 'MPa', 0), unit: 'MPa' }
   }
 }
 
@@ -21,11 +21,12 @@ export function usedWords(result: CheckResult): string {
   return result.utilisation === null ? 'may carry nothing' : percentUsed(result.utilisation)
 }
 
-/** What is asked of it against what the stated factor allows: "53.4 kN of 106.8 kN". */
+/** What is asked of it against what the stated factor allows: "53.4 of 106.8 kN". */
 export function demandWords(result: CheckResult, forceUnit: ForceUnit): string {
   const { demand, capacity, unit } = result
   if (demand === null || capacity === null || unit === null) return ''
-  return `${loadWords(demand, unit, forceUnit)} of ${loadWords(capacity, unit, forceUnit)}`
+  const allowed = loadWords(capacity, unit, forceUnit)
+  return `${loadWords(demand, unit, forceUnit).number} of ${allowed.number}\u00a0${allowed.unit}`
 }
 
 const rank = ({ verdict, utilisation }: CheckResult): number => (verdict === 'not checked' ? -1 : (utilisation ?? Infinity))

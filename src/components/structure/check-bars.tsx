@@ -25,7 +25,7 @@ function Bar({ utilisation }: { utilisation: number | null }) {
 function BarRow({ result, forceUnit }: { result: CheckResult; forceUnit: ForceUnit }) {
   const beyond = result.verdict === 'beyond'
   return (
-    <li className="grid grid-cols-[1.75rem_minmax(0,1fr)] items-center gap-x-2 gap-y-1 border-b border-hairline py-2 tablet:grid-cols-[1.75rem_minmax(0,1.1fr)_minmax(4rem,0.6fr)_minmax(0,1.3fr)] tablet:gap-x-4">
+    <li className="grid grid-cols-[1.75rem_minmax(0,1fr)] items-center gap-x-2 gap-y-1 border-b border-hairline py-2 tablet:grid-cols-[1.75rem_minmax(0,1fr)_minmax(3rem,7rem)_auto] tablet:gap-x-4">
       <Mark name={beyond ? 'beyond' : 'within'} size={20} />
       <p className="min-w-0">
         <span className="font-semibold">{capital(result.name)}</span> <span className="text-graphite">{result.check}</span>
@@ -33,7 +33,7 @@ function BarRow({ result, forceUnit }: { result: CheckResult; forceUnit: ForceUn
       <div className="max-tablet:col-start-2">
         <Bar utilisation={result.utilisation} />
       </div>
-      <p className="max-tablet:col-start-2 tablet:text-right">
+      <p className="max-tablet:col-start-2 tablet:w-74 tablet:text-right">
         <span className={beyond ? 'font-semibold text-stop-ink' : 'font-semibold'}>
           {result.verdict} {setPercent(usedWords(result))}
         </span>

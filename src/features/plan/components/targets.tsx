@@ -34,8 +34,8 @@ function StageRow({ stage, opened }: { stage: PlannedStage; opened: Opened }) {
       <td className={`${cell} whitespace-nowrap`}>{groupDigits(target.exactText)}</td>
       <td className={`${cell} whitespace-nowrap`}>
         <span className="text-18 font-semibold">{groupDigits(target.text)}</span>
-        <span className="block text-14 text-graphite tablet:hidden">{window}</span>
-        {expected && <span className="block text-14 text-graphite tablet:hidden">{expected}</span>}
+        <span className="block text-14 whitespace-normal text-graphite tablet:hidden">{window}</span>
+        {expected && <span className="block w-20 text-14 whitespace-normal text-graphite tablet:hidden">{expected}</span>}
       </td>
       <td className={`${cell} whitespace-nowrap max-tablet:hidden`}>
         {window}
