@@ -85,7 +85,10 @@ function sizeOf(section: Built): { width: number; height: number } {
   }
 }
 
-/** A section from its dimensions, to scale: doubled pieces side by side, plates where they sit. Null for one known by figures only. */
+/**
+ * A section from its dimensions, to scale: doubled pieces side by side, plates where they sit; radii of channels and
+ * angles and the lean of flanges are left out. Null for one known by figures only.
+ */
 export function outlineOf(section: MemberSection): SectionOutline | null {
   if (section.shape === 'custom') return null
   const one = sizeOf(section)
