@@ -1,7 +1,8 @@
 import type { Sequelize, Transaction } from 'sequelize'
-import { applyPress, emptyPress } from '#shared/press/apply'
+import type { LedgerEntry } from '#shared/ledger/envelope'
+import { foldPress } from '#shared/press/apply'
 import type { PressState } from '#shared/press/state'
-import { applyProofTest, emptyProofTest } from '#shared/proof-test/apply'
+import { foldProofTest } from '#shared/proof-test/apply'
 import type { ProofTestState } from '#shared/proof-test/state'
 import { readEntries, type LedgerHead } from './read'
 
@@ -40,22 +41,26 @@ function folds(database: Sequelize): Folds {
   return made
 }
 
-export async function proofTestState(database: Sequelize, transaction: Transaction, head: LedgerHead): Promise<ProofTestState> {
-  const key = `${head.id} ${head.headHash}`
-  const known = folds(database).get(key)
-  if (known) return known as ProofTestState
-  const state = (await readEntries(database, transaction, head.id)).reduce(applyProofTest, emptyProofTest(head.id))
-  folds(database).set(key, state)
+/** The state of a ledger at its head: remembered, or folded from its entries. */
+async function stateAt<State extends ProofTestState | PressState>(
+  database: Sequelize,
+  transaction: Transaction,
+  head: LedgerHead,
+  fold: (id: string, entries: readonly LedgerEntry[]) => State,
+): Promise<State> {
+  const known = folds(database).get(`${head.id} ${head.headHash}`)
+  if (known) return known as State
+  const state = fold(head.id, await readEntries(database, transaction, head.id))
+  rememberFold(database, state)
   return state
 }
 
-export async function pressState(database: Sequelize, transaction: Transaction, head: LedgerHead): Promise<PressState> {
-  const key = `${head.id} ${head.headHash}`
-  const known = folds(database).get(key)
-  if (known) return known as PressState
-  const state = (await readEntries(database, transaction, head.id)).reduce(applyPress, emptyPress(head.id))
-  folds(database).set(key, state)
-  return state
+export function proofTestState(database: Sequelize, transaction: Transaction, head: LedgerHead): Promise<ProofTestState> {
+  return stateAt(database, transaction, head, foldProofTest)
+}
+
+export function pressState(database: Sequelize, transaction: Transaction, head: LedgerHead): Promise<PressState> {
+  return stateAt(database, transaction, head, foldPress)
 }
 
 /** Remembers a state under the head it was folded to. */

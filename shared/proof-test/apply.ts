@@ -2,7 +2,8 @@ import type { LedgerEntry } from '../ledger/envelope'
 import { FIRST_PREV_HASH } from '../ledger/chain'
 import { neighboursOf } from '../press/joints'
 import type { Opened, Position, ProofTestDraft, ProofTestKind, ProofTestPayload, Reading } from './entries'
-import type { AttemptState, ClimbState, JointState, LegState, Place, ProofTestState, Row, StageState, StageRow } from './state'
+import { replaceAt, withLeg, withClimb, withAttempt, rowOf, withJoint } from './fold-parts'
+import type { AttemptState, Place, ProofTestState, Row, StageState, StageRow } from './state'
 import { upcast } from './upcast'
 
 /** The state before the first entry. */
@@ -35,71 +36,6 @@ export function emptyProofTest(id: string): ProofTestState {
     headHash: FIRST_PREV_HASH,
     unknownKinds: 0,
   }
-}
-
-function climbFor(opened: Opened, climb: number): ClimbState {
-  const { stages, repeatHoldSeconds } = opened.protocol.content
-  return {
-    datum: [],
-    released: null,
-    set: [],
-    // A stage above rating belongs to the second climb alone, from the datum after full load, with its whole hold.
-    stages: stages
-      .filter((stage) => climb > 0 || stage.percent <= 100)
-      .map((stage): StageState => ({
-        percent: stage.percent,
-        holdSeconds: climb === 0 || stage.percent > 100 ? stage.holdSeconds : repeatHoldSeconds,
-        attempts: [],
-      })),
-  }
-}
-
-function replaceAt<T>(list: readonly T[], index: number, item: T): T[] {
-  const copy = list.slice()
-  copy[index] = item
-  return copy
-}
-
-function withLeg(state: ProofTestState, index: number, change: (leg: LegState) => LegState): ProofTestState {
-  const leg = state.legs[index]
-  return leg ? { ...state, legs: replaceAt(state.legs, index, change(leg)) } : state
-}
-
-function withClimb(state: ProofTestState, leg: number, climb: number, change: (climb: ClimbState) => ClimbState): ProofTestState {
-  return withLeg(state, leg, (before) => {
-    const opened = state.opened
-    const current = before.climbs[climb] ?? (opened && climb === before.climbs.length ? climbFor(opened, climb) : undefined)
-    return current ? { ...before, climbs: replaceAt(before.climbs, climb, change(current)) } : before
-  })
-}
-
-function withAttempt(state: ProofTestState, at: Position, change: (attempt: AttemptState) => AttemptState): ProofTestState {
-  return withClimb(state, at.leg, at.climb, (climb) => {
-    const stage = climb.stages[at.stage]
-    const attempt = stage?.attempts[at.attempt]
-    if (!stage || !attempt) return climb
-    const attempts = replaceAt(stage.attempts, at.attempt, change(attempt))
-    return { ...climb, stages: replaceAt(climb.stages, at.stage, { ...stage, attempts }) }
-  })
-}
-
-function rowOf(entry: LedgerEntry, payload: { mark: Row['mark']; readings: Reading[] }): Row {
-  return {
-    entryId: entry.id,
-    seq: entry.seq,
-    mark: payload.mark,
-    enteredAt: entry.observedAt,
-    by: entry.authorId,
-    typed: payload.readings,
-    readings: payload.readings,
-    irregular: entry.irregular,
-  }
-}
-
-function withJoint(state: ProofTestState, jointId: string, change: (joint: JointState) => JointState): ProofTestState {
-  const index = state.joints.findIndex((joint) => joint.joint.id === jointId)
-  const joint = state.joints[index]
-  return joint ? { ...state, joints: replaceAt(state.joints, index, change(joint)) } : state
 }
 
 function stageBegun(state: ProofTestState, at: Position, entry: LedgerEntry): ProofTestState {
