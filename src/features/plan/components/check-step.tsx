@@ -10,6 +10,7 @@ import { FormStep, WholeRow } from '../../../components/form-steps'
 import { Mark } from '../../../components/marks'
 import { CheckBars } from '../../../components/structure/check-bars'
 import { setPercent } from '../../../components/typeset'
+import { capital } from '../../../lib/words'
 import { paths } from '../../../paths'
 import { engineerTyped } from '../draft'
 import type { PlanForm } from '../use-plan-form'
@@ -74,7 +75,7 @@ export function CheckStep({ form, number, opened, engineer }: CheckStepProps) {
           <span className="mt-0.5">
             <Mark name={over ? 'stop' : check.weakest ? 'within' : 'not-read'} size={20} />
           </span>
-          <span>{setPercent(check.sentence)}</span>
+          <span>{setPercent(capital(check.sentence))}</span>
         </p>
         {known && <CheckBars check={check} forceUnit={opened.forceUnit} most={SHOWN} />}
         <p className="mt-2">

@@ -35,7 +35,7 @@ export function LoadPathSection({ description, joints, forceUnit, lengthUnit, ed
         <span className="mt-0.5">
           <Mark name={check.blocks ? 'stop' : check.weakest ? 'within' : 'not-read'} size={22} />
         </span>
-        <span className="max-w-prose">{setPercent(check.sentence)}</span>
+        <span className="max-w-prose">{setPercent(capital(check.sentence))}</span>
       </p>
       <CheckBars check={check} forceUnit={forceUnit} />
       {known && (
