@@ -85,8 +85,12 @@ function typeSize(text: string): string {
 }
 
 /** A long name takes two narrow lines: neither it nor its unit may be cut off. */
-function labelFit({ label, unit }: ReadingField): string {
-  return label.length + unit.length > 11 ? 'font-condensed leading-[17px]' : 'leading-[24px] whitespace-nowrap'
+function isLong({ label, unit }: ReadingField): boolean {
+  return label.length + unit.length > 11
+}
+
+function labelFit(field: ReadingField): string {
+  return isLong(field) ? 'font-condensed leading-[17px]' : 'leading-[24px] whitespace-nowrap'
 }
 
 interface FieldProps {
@@ -107,7 +111,8 @@ function Field(props: FieldProps): ReactElement {
   return (
     <div className="min-w-0">
       <label htmlFor={id} className={`mb-[5px] block text-16 ${labelFit(field)}`}>
-        <span className="font-medium text-ink">{field.label}</span> <span className="ml-2 text-graphite">{field.unit}</span>
+        <span className="font-medium text-ink">{field.label}</span>{' '}
+        <span className={`text-graphite ${isLong(field) ? '' : 'ml-2'}`}>{field.unit}</span>
       </label>
       <input
         ref={props.bind}
