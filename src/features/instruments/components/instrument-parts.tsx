@@ -4,6 +4,7 @@ import { GAUGE_STYLES, INDICATOR_STYLES, instrumentDetailsSchema, type Instrumen
 import { errorLimitWords } from '#shared/instruments/words'
 import { FORCE_UNITS, LENGTH_UNITS, PRESSURE_UNITS } from '#shared/units'
 import { ControlledDecimal, ControlledQuantity, ControlledRadios, ControlledSelect } from '../../../components/controlled'
+import { HowLink } from '../../../components/how-link'
 import { FormPart } from '../../../components/form'
 import { toInstrumentRequest, type InstrumentDraft } from './instrument-draft'
 
@@ -81,6 +82,7 @@ export function GaugeParts({ control }: PartProps) {
           <ControlledDecimal control={control} name="accuracy.percentOfSpan" label="Percent of span, either way" unit="% of span" />
         )}
         <LimitOfError control={control} />
+        <HowLink topic="gauge" of="the limit of error" beside className="tablet:col-span-2" />
       </FormPart>
     </>
   )

@@ -3,6 +3,7 @@ import type { Opened } from '#shared/proof-test/entries'
 import { lengthText } from '#shared/proof-test/figures'
 import { secondsWords } from '#shared/proof-test/protocol-words'
 import { formatForce, groupDigits, unitLabel } from '#shared/units'
+import { HowLinks } from '../../../components/how-link'
 import { Mark } from '../../../components/marks'
 import { Sheet } from '../../../components/plate'
 import { setPercent } from '../../../components/typeset'
@@ -92,6 +93,15 @@ export function Targets({ opened }: { opened: Opened }) {
           </tbody>
         </table>
       </Sheet>
+      <HowLinks
+        beside
+        className="mt-2"
+        topics={[
+          ['ram-force', 'what to pump to'],
+          ['uncertainty', 'known to'],
+          ['gauge', 'what this gauge can tell'],
+        ]}
+      />
       {expected && (
         <p className="mt-3">
           {capital(opened.net?.label ?? opened.points[0]?.label ?? 'The first point')}: expected to move{' '}

@@ -6,6 +6,7 @@ import { Button } from '../../../components/button'
 import { CheckRow } from '../../../components/check-row'
 import { ControlledDecimal, ControlledQuantity, ControlledRadios } from '../../../components/controlled'
 import { TextArea, TextField } from '../../../components/field'
+import { HowLinks } from '../../../components/how-link'
 import { Form, FormActions, FormError, FormPart } from '../../../components/form'
 import { draftResolver, typedNumber } from '../../../lib/draft-resolver'
 import { useProblemFields } from '../../../lib/use-problem-fields'
@@ -107,6 +108,16 @@ function LimitFields({ control }: { control: ProtocolControl }) {
         hint="ASME ASP-2010 3-4.1.1, as described: 3.18 mm increase of the opening."
         units={LENGTH_UNITS}
       />
+      <HowLinks
+        beside
+        className="tablet:col-span-2"
+        topics={[
+          ['ram-force', 'stage reached'],
+          ['hold', 'pressure loss and creep'],
+          ['softening', 'softening'],
+          ['permanent-set', 'permanent set'],
+        ]}
+      />
     </FormPart>
   )
 }
@@ -165,6 +176,15 @@ function JudgingFields({ control }: { control: ProtocolControl }) {
         label="Examined again within, months"
         unit="months"
         hint="29 CFR 1910.244(a)(2)(vi) asks six of jacks used at one place."
+      />
+      <HowLinks
+        beside
+        className="tablet:col-span-2"
+        topics={[
+          ['decision-rule', 'within and beyond'],
+          ['line', 'prediction'],
+          ['clearance', 'clearance'],
+        ]}
       />
     </FormPart>
   )

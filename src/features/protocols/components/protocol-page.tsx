@@ -1,6 +1,7 @@
 import type { ProtocolResponse, ProtocolVersion } from '#shared/api/protocols'
 import { Button, ButtonLink, TextLink } from '../../../components/button'
 import { FormError } from '../../../components/form'
+import { HowLinks } from '../../../components/how-link'
 import { Page, Section } from '../../../components/page'
 import { RuledList, RuledRow } from '../../../components/ruled-list'
 import { dateAndTime } from '../../../lib/dates'
@@ -105,12 +106,28 @@ export function ProtocolPage({ answer, asked, mayWrite }: ProtocolPageProps) {
         <div className="grid gap-8 desktop:grid-cols-3 desktop:gap-6">
           <Section title="Stops or waits">
             <ValueList values={stoppingLimits(content)} />
+            <HowLinks
+              className="mt-2"
+              topics={[
+                ['hold', 'pressure loss and creep'],
+                ['softening', 'softening'],
+                ['permanent-set', 'set'],
+              ]}
+            />
           </Section>
           <Section title="Times and steps">
             <ValueList values={timesAndSteps(content)} />
           </Section>
           <Section title="How it is judged">
             <ValueList values={judging(content)} />
+            <HowLinks
+              className="mt-2"
+              topics={[
+                ['decision-rule', 'rule'],
+                ['line', 'prediction'],
+                ['clearance', 'clearance'],
+              ]}
+            />
             {content.aboveRatingRule !== '' && <p className="mt-3">Above rating by: {content.aboveRatingRule}.</p>}
           </Section>
         </div>

@@ -1,5 +1,6 @@
 import { criteriaHeading, joinWords, verdictWord } from '#shared/proof-test/record'
 import type { Criterion, CriterionVerdict } from '#shared/proof-test/evaluate-climb'
+import { HowLinks } from '../../../components/how-link'
 import { Mark, type MarkName } from '../../../components/marks'
 import { setPercent } from '../../../components/typeset'
 import type { RecordView } from '../record-view'
@@ -68,6 +69,16 @@ export function CriteriaTable({ record }: { record: RecordView }) {
           )}
         </tbody>
       </table>
+      <HowLinks
+        className="mt-1 font-condensed"
+        topics={[
+          ['line', 'deflection'],
+          ['softening', 'softening'],
+          ['hold', 'pressure and creep'],
+          ['permanent-set', 'set'],
+          ['decision-rule', 'verdicts'],
+        ]}
+      />
     </section>
   )
 }

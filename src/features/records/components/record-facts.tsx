@@ -2,6 +2,7 @@ import { fullestForce } from '#shared/proof-test/budget'
 import { clearanceArithmetic, energyText, inPrint } from '#shared/proof-test/record'
 import { formatForce } from '#shared/units'
 import { checkText, engineerText } from '#shared/proof-test/check-record'
+import { HowLinks } from '../../../components/how-link'
 import { forceInstrumentText, indicatorsText, ramText } from '../fact-words'
 import type { RecordView } from '../record-view'
 
@@ -51,13 +52,25 @@ function factsOf(record: RecordView): Fact[] {
 /** What the figures rest on, a line each. */
 export function RecordFacts({ record }: { record: RecordView }) {
   return (
-    <dl className="font-condensed">
-      {factsOf(record).map(([name, value]) => (
-        <div key={name} className="grid grid-cols-[6rem_1fr] gap-x-2 border-b border-hairline py-0.5">
-          <dt className="text-graphite">{name}</dt>
-          <dd className="min-w-0">{value}</dd>
-        </div>
-      ))}
-    </dl>
+    <div>
+      <dl className="font-condensed">
+        {factsOf(record).map(([name, value]) => (
+          <div key={name} className="grid grid-cols-[6rem_1fr] gap-x-2 border-b border-hairline py-0.5">
+            <dt className="text-graphite">{name}</dt>
+            <dd className="min-w-0">{value}</dd>
+          </div>
+        ))}
+      </dl>
+      <HowLinks
+        className="mt-1 font-condensed"
+        topics={[
+          ['clearance', 'load'],
+          ['ram-force', 'delivered'],
+          ['gauge', 'gauge'],
+          ['uncertainty', 'its ±'],
+          ['stored-energy', 'energy'],
+        ]}
+      />
+    </div>
   )
 }

@@ -2,6 +2,7 @@ import { useController, useWatch } from 'react-hook-form'
 import { FORCE_UNITS, formatForce, parseDecimal } from '#shared/units'
 import { QuantityField } from '../../../../components/decimal-field'
 import { FormStep, WholeRow } from '../../../../components/form-steps'
+import { HowLinks } from '../../../../components/how-link'
 import { Mark } from '../../../../components/marks'
 import { ratingSoFar } from './checks'
 import type { PressForm } from './use-press-form'
@@ -31,6 +32,15 @@ export function RatedLoadStep({ form, number }: { form: PressForm; number: numbe
           </p>
         </WholeRow>
       )}
+      <WholeRow>
+        <HowLinks
+          beside
+          topics={[
+            ['units', 'the three tons'],
+            ['ram-force', 'what a ram makes at its rated pressure'],
+          ]}
+        />
+      </WholeRow>
     </FormStep>
   )
 }

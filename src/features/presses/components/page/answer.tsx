@@ -3,6 +3,7 @@ import type { Clearance } from '#shared/press/entries'
 import type { MayItBeUsed } from '#shared/press/state'
 import { typedWords } from '#shared/instruments/words'
 import { formatForce, groupDigits, unitLabel, type TypedForce } from '#shared/units'
+import { HowLink } from '../../../../components/how-link'
 import { Mark } from '../../../../components/marks'
 import { longDate } from '../../../../lib/dates'
 
@@ -43,6 +44,7 @@ function ClearedTo({ clearance, rated }: { clearance: Clearance; rated: TypedFor
           </p>
           <p className="text-graphite">No other bed hole was tested.</p>
           <p className="text-22 font-semibold">Until {longDate(clearance.until)}</p>
+          <HowLink topic="clearance" of="the load" />
         </Aside>
       </div>
       <p className="mt-3">
