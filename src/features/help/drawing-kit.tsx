@@ -24,11 +24,13 @@ type SayProps = {
   anchor?: 'start' | 'middle' | 'end'
   tone?: Ink
   strong?: boolean
+  /** On a filled shape nothing has to be kept off the letters. */
+  onShape?: boolean
   size?: number
   children: ReactNode
 }
 
-export function Say({ x, y, anchor = 'start', tone = 'faint-scribe', strong = false, size = 18, children }: SayProps) {
+export function Say({ x, y, anchor = 'start', tone = 'faint-scribe', strong = false, onShape = false, size = 18, children }: SayProps) {
   return (
     <text
       x={x}
@@ -39,7 +41,7 @@ export function Say({ x, y, anchor = 'start', tone = 'faint-scribe', strong = fa
       fontWeight={strong ? 600 : 400}
       fontFamily={CONDENSED}
       paintOrder="stroke"
-      stroke="var(--dye)"
+      stroke={onShape ? undefined : 'var(--dye)'}
       strokeWidth={5}
       strokeLinejoin="round"
     >

@@ -128,7 +128,7 @@ function Drawing() {
         closed
         fill="var(--thin-dye)"
       />
-      <Say x={216} y={362} anchor="middle" tone="scribe">
+      <Say x={216} y={362} anchor="middle" tone="scribe" onShape>
         <Letter>M</Letter>
       </Say>
       <Say x={228} y={416}>

@@ -32,7 +32,7 @@ function Drawing() {
         closed
         fill="var(--thin-dye)"
       />
-      <Say x={184} y={236} anchor="middle" tone="scribe" strong>
+      <Say x={184} y={236} anchor="middle" tone="scribe" strong onShape>
         ½ <Letter>F</Letter> <Letter>δ</Letter>
       </Say>
       <Say x={226} y={90} anchor="end">

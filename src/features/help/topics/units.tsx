@@ -41,7 +41,7 @@ function Drawing() {
               closed
               fill="var(--thin-dye)"
             />
-            <Say x={42} y={y + 35} tone="scribe" strong>
+            <Say x={42} y={y + 35} tone="scribe" strong onShape>
               {formatForce(newton, 'kN')}
             </Say>
           </g>

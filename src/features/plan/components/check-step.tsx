@@ -7,6 +7,7 @@ import { expectedDeflection } from '#shared/structure/expected-deflection'
 import { toSI } from '#shared/units'
 import { DateField, TextField } from '../../../components/field'
 import { FormStep, WholeRow } from '../../../components/form-steps'
+import { HowLink } from '../../../components/how-link'
 import { Mark } from '../../../components/marks'
 import { CheckBars } from '../../../components/structure/check-bars'
 import { setPercent } from '../../../components/typeset'
@@ -86,6 +87,7 @@ export function CheckStep({ form, number, opened, engineer }: CheckStepProps) {
             {known ? 'Every check, its factors and sources' : 'Give the sections of this press'}
           </Link>
         </p>
+        <HowLink topic="load-path" of="the load path check" beside />
       </WholeRow>
       {missing !== null && (
         <WholeRow>

@@ -3,6 +3,7 @@ import { CHECK_CAUTIONS, anyFigures, checkedByUse, factorWords } from '#shared/s
 import { checkLoadPath } from '#shared/structure/load-path-check'
 import { formatQuantity, type ForceUnit, type LengthUnit } from '#shared/units'
 import { ButtonLink } from '../../../../components/button'
+import { HowLink } from '../../../../components/how-link'
 import { Mark } from '../../../../components/marks'
 import { Section } from '../../../../components/page'
 import { Facts } from '../../../../components/ruled-list'
@@ -38,6 +39,7 @@ export function LoadPathSection({ description, joints, forceUnit, lengthUnit, ed
         <span className="max-w-prose">{setPercent(capital(check.sentence))}</span>
       </p>
       <CheckBars check={check} forceUnit={forceUnit} />
+      <HowLink topic="load-path" of="the load path check" className="mt-2" />
       {known && (
         <p className="mt-3">
           {band
