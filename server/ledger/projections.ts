@@ -1,5 +1,6 @@
 import type { Sequelize, Transaction } from 'sequelize'
 import { QueryTypes } from 'sequelize'
+import { awaitsSignature } from '#shared/press/may-it-be-used'
 import type { PressState } from '#shared/press/state'
 import type { ProofTestState } from '#shared/proof-test/state'
 import { toSI } from '#shared/units'
@@ -52,7 +53,8 @@ export function proofTestColumns(state: ProofTestState): Columns | null {
 }
 
 function pressStatus(state: PressState): string {
-  if (state.underTest && !state.underTest.stopped) return 'under test'
+  // Concluded and waiting for a signature: nothing is under way any more, and nothing is cleared yet.
+  if (state.underTest && !state.underTest.stopped && !awaitsSignature(state)) return 'under test'
   if (state.clearance.is !== 'none') return state.clearance.is
   const joints = state.joints.filter((joint) => !joint.retired)
   return joints.length > 0 && joints.every((joint) => joint.makeUp === 'finished') ? 'ready' : 'building'

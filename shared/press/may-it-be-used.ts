@@ -58,7 +58,7 @@ export function missingOf(state: Pick<PressState, 'description' | 'joints'>): st
 const PROOF_TEST = 'A proof test, concluded and countersigned.'
 
 /** An accepted test whose witness hasn't signed leaves the press shut: the conclusion alone clears nothing. */
-function awaitsSignature(state: PressState): boolean {
+export function awaitsSignature(state: PressState): boolean {
   const { underTest } = state
   if (!underTest) return false
   return state.history.some((event) => event.kind === 'test-concluded' && event.proofTestId === underTest.proofTestId)

@@ -192,6 +192,7 @@ describe('a whole test over HTTP', () => {
     await run.sign('lead').expect(201)
     await run.refresh()
     expect((await pressOf(run)).clearance.is).toBe('suspended')
+    expect(await projection('presses', run.pressId)).toMatchObject({ status: 'suspended' })
     await run.sign('lead').expect(409)
     const figures = evaluateTest(run.state).clearance
     await run.sign('witness').expect(201)
