@@ -11,10 +11,22 @@ export const overrideSchema = z.object({
   reason: z.string().trim().min(3, 'Say why in a few words.').max(500),
 })
 
+/** What a photo or a document may be. */
+export const ATTACHMENT_TYPES = ['image/jpeg', 'image/png', 'image/webp', 'application/pdf'] as const
+
+/** The largest photo or document, in bytes: a photo is made smaller on the device, a scanned certificate may be long. */
+export const LARGEST_ATTACHMENT = 12 * 1024 * 1024
+
+/**
+ * A photo or document of an entry: the entry names its bytes by their SHA-256 (FIPS 180-4), and so does everything that
+ * is hashed over the entry. The bytes follow by themselves.
+ */
 export const attachmentSchema = z.object({
   sha256: z.string().regex(/^[0-9a-f]{64}$/),
-  type: z.string().max(100),
-  size: z.number().int().nonnegative(),
+  type: z.enum(ATTACHMENT_TYPES, 'A photo is a JPEG, PNG or WebP, a document a PDF.'),
+  size: z.number().int().positive('This file is empty.').max(LARGEST_ATTACHMENT, 'This file is larger than 12 MB.'),
+  /** The file's name as its owner sees it. */
+  name: z.string().trim().min(1).max(120).optional(),
 })
 
 /**
@@ -49,6 +61,7 @@ export const ledgerEntrySchema = entryDraftSchema.extend({
 })
 
 export type Override = z.infer<typeof overrideSchema>
+export type Attachment = z.infer<typeof attachmentSchema>
 export type EntryDraft = z.infer<typeof entryDraftSchema>
 export type LedgerEntry = z.infer<typeof ledgerEntrySchema>
 export type LedgerSubject = 'proof-test' | 'press'
