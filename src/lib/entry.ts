@@ -1,5 +1,5 @@
 import { v7 as newId } from 'uuid'
-import type { EntryDraft, Override } from '#shared/ledger/envelope'
+import type { Attachment, EntryDraft, Override } from '#shared/ledger/envelope'
 
 const DEVICE = 'quarterload.device'
 const COUNT = 'quarterload.device-seq.'
@@ -63,6 +63,8 @@ export interface EntryParts {
   /** Of the payload's shape; 1 unless the kind has moved on. */
   v?: number
   overrides?: Override[]
+  /** Photos and documents it names; their bytes follow by themselves. */
+  attachments?: Attachment[]
   /** Made earlier, so that a second tap writes the same entry again. */
   id?: string
   deviceSeq?: number
@@ -85,7 +87,7 @@ export function makeEntry(parts: EntryParts): EntryDraft {
     observedAt: parts.observedAt ?? new Date().toISOString(),
     bootId,
     monotonicMs: monotonicMs(),
-    attachments: [],
+    attachments: parts.attachments ?? [],
     overrides: parts.overrides ?? [],
   }
 }
