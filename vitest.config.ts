@@ -57,6 +57,18 @@ export default defineConfig({
       },
       {
         test: {
+          name: 'faults',
+          environment: 'node',
+          include: ['tests/faults/**/*.test.ts'],
+          globalSetup: ['./tests/support/start-database.ts', './tests/support/build-client.ts'],
+          setupFiles: [quiet],
+          testTimeout: 30 * minutes,
+          hookTimeout: 2 * minutes,
+          fileParallelism: false,
+        },
+      },
+      {
+        test: {
           name: 'e2e',
           environment: 'node',
           include: ['tests/e2e/**/*.test.ts'],
