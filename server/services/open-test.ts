@@ -3,6 +3,7 @@ import type { OpenTestRequest } from '#shared/api/proof-tests'
 import { can } from '#shared/policy'
 import type { EntryDraft } from '#shared/ledger/envelope'
 import { openedSchema, PROOF_TEST_VERSION, type Opened } from '#shared/proof-test/entries'
+import { jointSchema } from '#shared/press/model'
 import type { PressState } from '#shared/press/state'
 import { forceUnitSchema, lengthUnitSchema, pressureUnitSchema } from '#shared/units'
 import { withAboveRating } from '#shared/proof-test/protocol'
@@ -82,21 +83,8 @@ async function composeOpened(work: Work, request: OpenTestRequest, press: PressS
     pressId: press.id,
     pressHeadSeq: headSeq,
     press: description,
-    joints: press.joints
-      .filter((joint) => !joint.retired)
-      .map(({ id, number, name, kind, detail, between, makeUp, madeBy, filler, madeOn, place }) => ({
-        id,
-        number,
-        name,
-        kind,
-        detail,
-        between,
-        makeUp,
-        madeBy,
-        filler,
-        madeOn,
-        place,
-      })),
+    // As described, with what the load path check needs; examinations are the test's own.
+    joints: press.joints.filter((joint) => !joint.retired).map((joint) => jointSchema.parse(joint)),
     stoodStillDays: press.lastWorkedOn ? Math.max(0, Math.floor((now.getTime() - Date.parse(press.lastWorkedOn)) / DAY)) : null,
     instruments: await instrumentsForTest(work, ids),
     forceInstrumentIds: request.forceInstrumentIds,

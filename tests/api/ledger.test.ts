@@ -166,6 +166,25 @@ describe('opening a test', () => {
     expect(problemSchema.parse(second.body)).toMatchObject({ rules: ['P11'] })
   })
 
+  it('freezes the joints as described, with the sizes that the load path check needs', async () => {
+    const staff = await openStaffedShop()
+    const weld = {
+      kind: 'weld' as const,
+      size: { by: 'leg' as const, value: { text: '8', unit: 'mm' as const } },
+      length: { text: '300', unit: 'mm' as const },
+      electrode: { grade: 'E70' as const },
+      base: null,
+      loadShare: null,
+    }
+    const pressId = await enterPress(staff.lead, ({ joints }) => ({
+      joints: joints.map((joint, index) => (index === 0 ? { ...joint, kind: 'weld', strength: weld } : joint)),
+    }))
+    const run = await ApiRun.open({ staff, pressId })
+    const described = (await pressOf(run)).joints[0]
+    expect(described?.strength).toMatchObject({ kind: 'weld' })
+    expect(run.state.opened?.joints[0]?.strength).toEqual(described?.strength)
+  })
+
   it('refuses, at the field, a witness who may not be one, and by rule R5 the lead as own witness', async () => {
     const staff = await openStaffedShop()
     const asWitness = (id: string) =>
