@@ -1,3 +1,4 @@
+import type { DeviceCount } from './device-count'
 import type { Conclusion, CriterionSnapshot, Mark, Opened, Position, ProofTestPayload, Reading, SetUpItem, Signature } from './entries'
 import type { NamedAttachment } from '../ledger/attachments'
 import type { ExaminationMethod, Joint, MakeUp } from '../press/model'
