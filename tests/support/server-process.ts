@@ -21,7 +21,7 @@ function ended(child: ChildProcess): Promise<number | null> {
 }
 
 /** The server as `npm start` runs it, on a free port unless PORT is given. Resolves once it has printed its address. */
-export async function startServer(environment: Record<string, string>): Promise<ServerProcess> {
+export async function startServer(environment: Record<string, string>, spawned?: (child: ChildProcess) => void): Promise<ServerProcess> {
   // The tests' shared database gives durability up for speed; a server says so at its start and is told that this is meant.
   const relaxed = (environment['DATABASE_URL'] ?? '') === '' ? {} : { NODE_ENV: 'test', RELAXED_DURABILITY: '1' }
   const child = spawn(process.execPath, ['--import', 'tsx', 'server/index.ts'], {
@@ -39,6 +39,7 @@ export async function startServer(environment: Record<string, string>): Promise<
     },
     stdio: ['ignore', 'pipe', 'pipe'],
   })
+  spawned?.(child)
   let printed = ''
   const address = await new Promise<string>((resolve, reject) => {
     const tooLate = setTimeout(() => {
