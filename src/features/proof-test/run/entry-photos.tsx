@@ -36,10 +36,17 @@ export function EnteredPhotos({ run, shown, className }: { run: Run; shown: read
   return <AttachmentStrip files={run.files} shown={shown} leavesFoot className={className} />
 }
 
+interface JointPhotosProps {
+  run: Run
+  jointId: string
+  number: number
+  className?: string
+}
+
 /** Photos of one joint, from all its entries. */
-export function JointPhotos({ run, jointId, number }: { run: Run; jointId: string; number: number }): ReactElement | null {
+export function JointPhotos({ run, jointId, number, className = 'mt-3' }: JointPhotosProps): ReactElement | null {
   const mine = run.photos.filter((one) => one.jointId === jointId)
   const place = ({ kind, occasion }: Placed): string =>
     `Joint ${number}, ${kind === 'joint-worked' ? 'worked on' : `examined ${occasion ?? ''}`}`
-  return <EnteredPhotos run={run} shown={shownOf(run, mine, place)} className="mt-3" />
+  return <EnteredPhotos run={run} shown={shownOf(run, mine, place)} className={className} />
 }
