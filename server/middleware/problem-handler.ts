@@ -16,6 +16,9 @@ function bodyProblem(error: unknown): Problem | undefined {
       return new Problem(400, 'malformed-json', 'What was sent is not JSON.')
     case 'entity.too.large':
       return new Problem(413, 'too-large', 'What was sent is too large.')
+    case 'request.aborted':
+    case 'request.size.invalid':
+      return new Problem(400, 'broken-off', 'What was sent broke off on the way. Send it again.')
     case 'charset.unsupported':
     case 'encoding.unsupported':
       return new Problem(400, 'unknown-encoding', 'Send the data as UTF-8 JSON.')
