@@ -10,11 +10,13 @@ import { openStaffedShop, type SignedInPerson } from '../factories/people'
 import { expectInOrder, expectOnce, expectWhole } from '../support/ledger-checks'
 import { isFullRun, pauseFor, runSeed, Seeded } from '../support/seeded'
 import { Tablet, type Deliver } from '../support/tablet'
+import { killBrowsers } from './browser-kills'
 import { Rig } from './rig'
 import { killsByProcess, leaveTotals, Tally } from './tally'
 
 const seed = runSeed()
-const times = isFullRun() ? 92 : 5
+const times = isFullRun() ? 90 : 4
+const browserTimes = isFullRun() ? 24 : 2
 const tally = new Tally()
 let rig: Rig
 let staff: Staff
@@ -145,7 +147,7 @@ afterAll(async () => {
   await rig.close()
   leaveTotals('kills', tally.totals())
   process.stdout.write(
-    `kills of server and database: ${tally.line()} (${killsByProcess(tally.totals())}; ${cutOff} requests cut off, ${rig.restarts} starts cut short; SEED=${seed})\n`,
+    `kills: ${tally.line()} (${killsByProcess(tally.totals())}; ${cutOff} requests cut off, ${rig.restarts} starts cut short; SEED=${seed})\n`,
   )
 })
 
@@ -171,6 +173,13 @@ describe(`kill -9 of the server and of its database during runs, seed ${seed}`, 
     expect(tally.lost()).toEqual([])
     expect(tally.duplicated()).toEqual([])
     expect(tally.totals().acknowledged).toBeGreaterThan(4 * times)
+    expect(rig.errors(), 'the server logs no error').toEqual([])
+  })
+
+  it('shows again what a killed browser showed as kept, and has it on the server once', async () => {
+    await killBrowsers({ address: rig.address, staff, tally }, browserTimes, new Seeded(seed))
+    expect(tally.lost()).toEqual([])
+    expect(tally.duplicated()).toEqual([])
     expect(rig.errors(), 'the server logs no error').toEqual([])
   })
 })
