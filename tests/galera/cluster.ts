@@ -4,7 +4,7 @@ import { closeSync, existsSync, mkdirSync, openSync, readFileSync } from 'node:f
 import path from 'node:path'
 import { createConnection } from 'mariadb'
 import type { Connection } from 'mariadb'
-import { createDataDirectory, delay, findProgram, freePort, isAlive } from '#server/database/mariadb-process'
+import { createDataDirectory, delay, findProgram, freePort, isAlive, withOwnTemporaryFolder } from '#server/database/mariadb-process'
 import type { Installed } from './packages'
 
 export const account = { user: 'quarterload', password: 'for-this-run-only', database: 'quarterload' }
@@ -79,7 +79,7 @@ export class Node {
   }
 
   private environment(): NodeJS.ProcessEnv {
-    return { ...process.env, PATH: `${this.installed.scripts}:${process.env['PATH'] ?? ''}:/usr/sbin:/sbin` }
+    return { ...withOwnTemporaryFolder(this.directory), PATH: `${this.installed.scripts}:${process.env['PATH'] ?? ''}:/usr/sbin:/sbin` }
   }
 
   /** After a crash the node's place in the cluster's history is in its own log files: read as Debian's service reads it. */

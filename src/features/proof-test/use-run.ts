@@ -15,7 +15,8 @@ import { useUser } from '../../lib/here'
 import { outbox, type LedgerOutbox } from '../../lib/outbox'
 import type { Refused } from '../../lib/outbox-database'
 import { Disconnected, isSignedOut } from '../../lib/problem'
-import { addKept, entriesQuery, type KnownLedger } from './api/get-entries'
+import { useLive } from '../../lib/use-live'
+import { addKept, entriesKey, entriesQuery, type KnownLedger } from './api/get-entries'
 import { irregularUnderLoad, LedgerFold } from './ledger-view'
 
 export type Part = 'lead' | 'pump hand' | 'witness'
@@ -82,6 +83,7 @@ function useBox(ledgerId: string): LedgerOutbox {
 function useLedger(testId: string) {
   const client = useQueryClient()
   const query = useQuery(entriesQuery(testId, client))
+  useLive([testId], entriesKey(testId))
   const user = useUser()
   useEffect(() => outbox.onKept((id, kept) => addKept(client, id, kept)), [client])
   useEffect(() => outbox.sendAs(user.id), [user.id])
