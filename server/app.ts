@@ -16,6 +16,7 @@ import { protocolRoutes } from './routes/protocols'
 import { recordRoutes } from './routes/records'
 import { sessionRoutes } from './routes/session'
 import { shopRoutes } from './routes/shops'
+import { streamRoutes } from './routes/stream'
 import { todayReadRoutes } from './routes/today-read'
 
 /** A batch of entries fits; a file doesn't belong in JSON. */
@@ -70,6 +71,7 @@ function api(context: AppContext) {
   router.use(todayReadRoutes(context))
   router.use(recordRoutes(context))
   router.use(ledgerRoutes(context))
+  router.use(streamRoutes(context))
   router.use(unknownEndpoint)
   return router
 }
