@@ -7,7 +7,7 @@ import type { Step } from '#shared/proof-test/steps'
 import { delay } from '#server/database/mariadb-process'
 import { ApiRun } from '../factories/api-run'
 import { aimClientsAt, answered } from '../factories/client'
-import { Tally } from '../faults/tally'
+import { leaveTotals, Tally } from '../faults/tally'
 import { balance } from '../support/balancer'
 import { startServer } from '../support/server-process'
 import { Cluster, type Node } from './cluster'
@@ -127,6 +127,7 @@ async function main(directory: string): Promise<boolean> {
   } finally {
     for (const close of closers.reverse()) await close()
   }
+  leaveTotals('galera', tally.totals())
   say(tally.line())
   const { lost, duplicated } = tally.totals()
   return lost === 0 && duplicated === 0
