@@ -18,6 +18,7 @@ import { sessionRoutes } from './routes/session'
 import { shopRoutes } from './routes/shops'
 import { streamRoutes } from './routes/stream'
 import { todayReadRoutes } from './routes/today-read'
+import { verificationRoutes } from './routes/verification'
 
 /** A batch of entries fits; a file doesn't belong in JSON. */
 const longestBody = '2mb'
@@ -60,6 +61,7 @@ function api(context: AppContext) {
   router.use(sameOrigin(context.config))
   router.use(express.json({ limit: longestBody }))
   router.use(healthRoutes(context))
+  router.use(verificationRoutes(context))
   router.use(sessionRoutes(context))
   router.use(shopRoutes(context))
   router.use(peopleRoutes(context))
