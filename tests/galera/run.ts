@@ -67,7 +67,7 @@ async function killDuring(cluster: Cluster, run: ApiRun, tally: Tally, until: St
   const stood = (writers.longestWait / 1000).toFixed(1)
   say(
     `    node ${victim.name} killed on the way to ${until}: ${writers.written} notes, ${writers.written - atKill} of them after the kill; ` +
-      `longest wait for an answer ${stood} s; back and in step after ${back} s`,
+      `longest wait for an answer ${stood} s; back and in step after ${back} s, given ${victim.lastTransfer()}`,
   )
 }
 
@@ -137,7 +137,7 @@ const directory = mkdtempSync(path.join(tmpdir(), 'quarterload-galera-'))
 chmodSync(directory, 0o755)
 try {
   process.exitCode = (await main(directory)) ? 0 : 1
-  if (process.env['KEEP'] === undefined) rmSync(directory, { recursive: true, force: true })
+  rmSync(directory, { recursive: true, force: true })
 } catch (error) {
   process.stderr.write(
     `${error instanceof Error ? (error.stack ?? error.message) : String(error)}\nThe nodes’ logs are under ${directory}\n`,
