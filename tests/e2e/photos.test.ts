@@ -43,7 +43,7 @@ describe('a photo at a joint', () => {
       .jpeg({ quality: 40 })
       .toBuffer()
 
-    await page.getByRole('button', { name: /^Joint 1,/ }).click()
+    await run.plate(/^Joint 1,/).click()
     await run.heading(/^Joint 1:/).waitFor()
     await page.context().setOffline(true)
     const chooser = page.getByLabel('Photos: choose a file')
@@ -65,7 +65,7 @@ describe('a photo at a joint', () => {
     )
     await page.context().setOffline(false)
     await page.reload()
-    await page.getByRole('button', { name: /^Joint 1,/ }).click()
+    await run.plate(/^Joint 1,/).click()
     await run.heading(/^Joint 1:/).waitFor()
     await expect.poll(() => page.getByText('on this tablet', { exact: true }).count()).toBe(2)
     await expect.poll(isDrawn(page, 'img[src^="blob:"]')).toBe(true)
