@@ -67,7 +67,8 @@ describe('an outbox whose storage fails', () => {
     })
     await box.enqueue(testId, entry('before'))
     const connection = connections.at(-1)
-    forceCloseDatabase(connection as Parameters<typeof forceCloseDatabase>[0])
+    // Its types say the class where they mean an instance.
+    forceCloseDatabase(connection as unknown as Parameters<typeof forceCloseDatabase>[0])
     await vi.waitFor(() => expect(fault(box)).toMatch(/the browser closed the storage/))
     await vi.waitFor(() => expect(fault(box)).toBeNull(), { timeout: 5000 })
     expect((await box.enqueue(testId, entry('after'))).deviceSeq).toBe(2)

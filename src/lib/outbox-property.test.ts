@@ -12,7 +12,7 @@ const other = '01990000-0000-7000-8000-000000000004'
 const SEED = Number(process.env['SEED'] ?? 20_261_201)
 
 type Act =
-  | { do: 'enqueue'; tab: number; by: typeof lead }
+  | { do: 'enqueue'; tab: number; by: string }
   | { do: 'link'; link: Link }
   | { do: 'sign'; as: string | null }
   | { do: 'reload'; tab: number }
