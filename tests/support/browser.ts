@@ -40,7 +40,7 @@ export function serverAddress(): string {
   return e2e().address
 }
 
-function listenTo(page: Page): void {
+export function listenTo(page: Page): void {
   page.on('console', (message) => {
     if (['error', 'warning'].includes(message.type()) && !notice.test(message.text())) noise.push(message.text())
   })
