@@ -21,7 +21,7 @@ export function EntryRow({ one, state, children }: { one: Waiting; state: ReactN
   const { what, says } = entryWords(one.entry)
   return (
     <li className="border-b border-hairline py-2.5">
-      <div className="grid gap-x-6 gap-y-1 tablet:grid-cols-[minmax(0,1fr)_11rem_auto] tablet:items-baseline">
+      <div className="grid gap-x-6 gap-y-1 tablet:grid-cols-[minmax(0,1fr)_11rem_auto] tablet:items-start">
         <p className="min-w-0">
           <span className="font-semibold">{what}</span>
           {says !== '' && <span className="ml-3 wrap-anywhere">{says}</span>}

@@ -1,4 +1,5 @@
 import { useEffect, useId, useRef, useState, type ReactElement } from 'react'
+import { PROOF_TEST_ACTS } from '#shared/proof-test/entries'
 import { Button } from '../../components/button'
 import { Mark, type MarkName } from '../../components/marks'
 import { Page, Section } from '../../components/page'
@@ -18,7 +19,7 @@ interface Line {
   says: string
 }
 
-function senderLine({ sender, unsent }: OutboxSummary): Line {
+function senderLine({ sender, unsent, attention }: OutboxSummary): Line {
   if (sender.is === 'signed-out')
     return { mark: 'not-connected', says: 'The session has ended, so nothing is sent. Sign in again as the same person.' }
   if (sender.is === 'other-person')
@@ -27,6 +28,7 @@ function senderLine({ sender, unsent }: OutboxSummary): Line {
   if (sender.is === 'waiting' && unsent > 0)
     return { mark: 'not-connected', says: 'The server does not answer. They are sent by themselves when it does.' }
   if (sender.is === 'sending') return { mark: 'go-on', says: 'Sending.' }
+  if (unsent === 0 && attention > 0) return { mark: 'wait', says: 'Nothing waits to be sent. What the server refused stands below.' }
   if (unsent === 0) return { mark: 'within', says: 'Everything entered here is on the server.' }
   return { mark: 'wait', says: 'They wait for the person who made them to sign in here.' }
 }
@@ -81,6 +83,8 @@ export function DevicePage({
   for (const one of waiting) {
     if (one.entry.authorId !== me.id) others.set(one.entry.authorId, [...(others.get(one.entry.authorId) ?? []), one])
   }
+  // A refused act was not done; a refused fact has happened, and the server has not got it.
+  const notThere = [...mine, ...attention.filter(({ entry }) => entry.authorId === me.id && !PROOF_TEST_ACTS.has(entry.kind))].length
   const stranded: readonly Waiting[] = [...mine, ...attention.filter(({ entry }) => entry.authorId === me.id)]
   const save = (author: { id: string; name: string | null }, entries: readonly Waiting[]): void => setSaved(saveToFile(author, entries))
   return (
@@ -96,7 +100,7 @@ export function DevicePage({
       }
     >
       {leaving && (
-        <Leaving name={me.name} waiting={mine.length} onSave={() => save(me, stranded)} onSignOut={onSignOut} failed={signOutFailed} />
+        <Leaving name={me.name} waiting={notThere} onSave={() => save(me, stranded)} onSignOut={onSignOut} failed={signOutFailed} />
       )}
       {summary.fault !== null && (
         <div role="alert" className="mb-6 flex items-center gap-4 bg-stop px-4 py-3 text-18 font-semibold text-on-stop">
@@ -104,7 +108,7 @@ export function DevicePage({
           <p>{summary.fault} It is tried again by itself.</p>
         </div>
       )}
-      {summary.loaded && <State summary={summary} />}
+      {summary.loaded && !leaving && <State summary={summary} />}
       <div className="grid gap-x-12 gap-y-8 desktop:grid-cols-[minmax(0,1fr)_22rem]">
         <div className="grid min-w-0 content-start gap-8">
           {attention.length > 0 && (

@@ -31,12 +31,12 @@ export function useLeave(): Leave {
   return { leave, failed: ending.isError }
 }
 
-/** Whether entries of this person wait on this device. Storage that fails is asked nothing: its screen says so. */
+/** Whether entries of this person wait on this device, or were refused. Storage that fails is asked nothing: its screen says so. */
 export async function entriesWait(personId: string): Promise<boolean> {
   if (!('indexedDB' in window)) return false
   const { outbox } = await import('../../../lib/outbox')
   return outbox.contents().then(
-    ({ waiting }) => waiting.some(({ entry }) => entry.authorId === personId),
+    ({ waiting, attention }) => [...waiting, ...attention].some(({ entry }) => entry.authorId === personId),
     () => true,
   )
 }
