@@ -1,7 +1,5 @@
 import { randomBytes } from 'node:crypto'
 import { rmSync, writeFileSync } from 'node:fs'
-import path from 'node:path'
-import ExcelJS from 'exceljs'
 import { QueryTypes } from 'sequelize'
 import sharp from 'sharp'
 import type { Response } from 'supertest'
@@ -12,25 +10,10 @@ import { problemSchema } from '#shared/api/problem'
 import { LARGEST_ATTACHMENT, type Attachment } from '#shared/ledger/envelope'
 import { ApiRun, Device, enterPress, post } from '../factories/api-run'
 import { fileOf, pdf, picture, type FileToSend } from '../factories/files'
+import { fileAddress, fileOnDisk, ledger, nameFiles, observed, putFile } from '../factories/send-files'
 import { calibration, enterInstrument, gauge } from '../factories/instruments'
 import { openShop, openStaffedShop, type SignedInPerson } from '../factories/people'
 import { testServer } from '../support/api-server'
-
-const observed = { kind: 'observed', payload: { at: null, what: 'other', note: 'See the photo.' } } as const
-
-/** An observation of the test that names files, entered by one of its people. */
-async function name(run: ApiRun, files: readonly { attachment: Attachment }[], device: Device = run.lead): Promise<void> {
-  const draft = { ...device.draft(observed), attachments: files.map(({ attachment }) => attachment) }
-  const { results } = await post(device.person, run.path, [draft])
-  expect(results[0]?.outcome).toBe('kept')
-  await run.refresh()
-}
-
-const at = (by: string, { attachment }: { attachment: Attachment }, more = '') => `/api/attachments/${attachment.sha256}?${by}${more}`
-const ledger = (id: string) => `ledger=${id}`
-
-const put = (person: SignedInPerson, by: string, file: FileToSend, type: string = file.attachment.type) =>
-  person.client.put(at(by, file)).set('Content-Type', type).send(file.bytes)
 
 const codeOf = (response: Response): string => `${response.status} ${problemSchema.parse(response.body).code}`
 
@@ -43,27 +26,17 @@ const stored = (file: FileToSend) =>
     type: QueryTypes.SELECT,
   })
 
-function binary(response: NodeJS.ReadableStream, done: (error: Error | null, body: Buffer) => void): void {
-  const chunks: Buffer[] = []
-  response.on('data', (chunk: Buffer) => chunks.push(chunk))
-  response.on('end', () => done(null, Buffer.concat(chunks)))
-}
-
-/** Where the test server's folder has a file of a shop. */
-const fileOnDisk = (shopId: string, { attachment }: FileToSend): string =>
-  path.join(testServer().context.config.dataDirectory, 'attachments', shopId, attachment.sha256)
-
 describe('the bytes of a file', () => {
   it('come after the entry that names them, and are read back as they were', async () => {
     const run = await ApiRun.open()
     const photo = await picture()
     const by = ledger(run.id)
-    expect(codeOf(await put(run.staff.lead, by, photo))).toBe('409 not-named-yet')
-    await name(run, [photo])
-    expect(codeOf(await run.staff.lead.client.get(at(by, photo)))).toBe('404 not-here-yet')
+    expect(codeOf(await putFile(run.staff.lead, by, photo))).toBe('409 not-named-yet')
+    await nameFiles(run, [photo])
+    expect(codeOf(await run.staff.lead.client.get(fileAddress(by, photo)))).toBe('404 not-here-yet')
     expect(await held(run.staff.lead, `/api/proof-tests/${run.id}`)).toMatchObject([{ sha256: photo.attachment.sha256, present: false }])
-    await put(run.staff.lead, by, photo).expect(204)
-    const read = await run.staff.witness.client.get(at(by, photo)).expect(200)
+    await putFile(run.staff.lead, by, photo).expect(204)
+    const read = await run.staff.witness.client.get(fileAddress(by, photo)).expect(200)
     expect((read.body as Buffer).equals(photo.bytes)).toBe(true)
     expect(read.headers).toMatchObject({
       'content-type': 'image/jpeg',
@@ -80,11 +53,11 @@ describe('the bytes of a file', () => {
   it('are kept once, however often and by however many they are sent', async () => {
     const run = await ApiRun.open()
     const photo = await picture('webp')
-    await name(run, [photo])
-    await name(run, [photo], run.witness)
+    await nameFiles(run, [photo])
+    await nameFiles(run, [photo], run.witness)
     const by = ledger(run.id)
-    await Promise.all([run.staff.lead, run.staff.witness, run.staff.lead].map((person) => put(person, by, photo).expect(204)))
-    await put(run.staff.lead, by, photo).expect(204)
+    await Promise.all([run.staff.lead, run.staff.witness, run.staff.lead].map((person) => putFile(person, by, photo).expect(204)))
+    await putFile(run.staff.lead, by, photo).expect(204)
     expect(await stored(photo)).toEqual([{ type: 'image/webp', size: photo.bytes.length }])
   })
 
@@ -92,23 +65,23 @@ describe('the bytes of a file', () => {
     const run = await ApiRun.open()
     const photo = await picture()
     const by = ledger(run.id)
-    await name(run, [photo])
-    await put(run.staff.lead, by, photo).expect(204)
+    await nameFiles(run, [photo])
+    await putFile(run.staff.lead, by, photo).expect(204)
     rmSync(fileOnDisk(run.staff.lead.shopId, photo))
-    expect(codeOf(await run.staff.lead.client.get(at(by, photo)))).toBe('404 not-here-yet')
+    expect(codeOf(await run.staff.lead.client.get(fileAddress(by, photo)))).toBe('404 not-here-yet')
     expect(testServer().loggedErrors.splice(0)).toHaveLength(1)
-    await put(run.staff.lead, by, photo).expect(204)
-    await run.staff.lead.client.get(at(by, photo)).expect(200)
+    await putFile(run.staff.lead, by, photo).expect(204)
+    await run.staff.lead.client.get(fileAddress(by, photo)).expect(200)
   })
 
   it('are never shown when somebody changed them in the storage', async () => {
     const run = await ApiRun.open()
     const photo = await picture()
-    await name(run, [photo])
-    await put(run.staff.lead, ledger(run.id), photo).expect(204)
+    await nameFiles(run, [photo])
+    await putFile(run.staff.lead, ledger(run.id), photo).expect(204)
     writeFileSync(fileOnDisk(run.staff.lead.shopId, photo), (await picture()).bytes)
     for (const size of ['', '&size=thumb']) {
-      expect(codeOf(await run.staff.lead.client.get(at(ledger(run.id), photo, size)))).toBe('500 altered-file')
+      expect(codeOf(await run.staff.lead.client.get(fileAddress(ledger(run.id), photo, size)))).toBe('500 altered-file')
       expect(testServer().loggedErrors.splice(0)).toHaveLength(1)
     }
   })
@@ -119,17 +92,17 @@ describe('what is not what was named', () => {
     const run = await ApiRun.open()
     const [photo, other] = [await picture(), await picture()]
     const longer = { attachment: { ...photo.attachment }, bytes: Buffer.concat([photo.bytes, Buffer.from('x')]) }
-    await name(run, [photo])
+    await nameFiles(run, [photo])
     const by = ledger(run.id)
     const { lead } = run.staff
     const flipped = { ...photo, bytes: Buffer.from(photo.bytes) }
     flipped.bytes[1000] = (flipped.bytes[1000] ?? 0) ^ 1
-    expect(codeOf(await put(lead, by, flipped))).toBe('422 wrong-bytes')
-    expect(codeOf(await put(lead, by, { ...photo, bytes: other.bytes }))).toBe('422 wrong-bytes')
-    expect(codeOf(await put(lead, by, longer))).toBe('422 wrong-bytes')
-    expect(codeOf(await put(lead, by, photo, 'image/png'))).toBe('422 wrong-bytes')
-    expect(codeOf(await put(lead, by, photo, 'application/json'))).toMatch(/^4(00 malformed-json|22 wrong-bytes)$/)
-    expect(codeOf(await lead.client.put(at(by, photo)).set('Content-Type', 'image/jpeg'))).toBe('422 wrong-bytes')
+    expect(codeOf(await putFile(lead, by, flipped))).toBe('422 wrong-bytes')
+    expect(codeOf(await putFile(lead, by, { ...photo, bytes: other.bytes }))).toBe('422 wrong-bytes')
+    expect(codeOf(await putFile(lead, by, longer))).toBe('422 wrong-bytes')
+    expect(codeOf(await putFile(lead, by, photo, 'image/png'))).toBe('422 wrong-bytes')
+    expect(codeOf(await putFile(lead, by, photo, 'application/json'))).toMatch(/^4(00 malformed-json|22 wrong-bytes)$/)
+    expect(codeOf(await lead.client.put(fileAddress(by, photo)).set('Content-Type', 'image/jpeg'))).toBe('422 wrong-bytes')
     expect(await stored(photo)).toEqual([])
   })
 
@@ -142,21 +115,21 @@ describe('what is not what was named', () => {
   ])('is refused by what its bytes are: %s', async (_what, bytes, type) => {
     const run = await ApiRun.open()
     const lie = fileOf(bytes, type)
-    await name(run, [lie])
-    expect(codeOf(await put(run.staff.lead, ledger(run.id), lie))).toBe('422 wrong-bytes')
+    await nameFiles(run, [lie])
+    expect(codeOf(await putFile(run.staff.lead, ledger(run.id), lie))).toBe('422 wrong-bytes')
     expect(await stored(lie)).toEqual([])
   })
 
   it('is absent for the one who named it so, also when another entry brought the same bytes under their real type', async () => {
     const run = await ApiRun.open()
     const photo = await picture('png')
-    await name(run, [photo])
-    await put(run.staff.lead, ledger(run.id), photo).expect(204)
+    await nameFiles(run, [photo])
+    await putFile(run.staff.lead, ledger(run.id), photo).expect(204)
     const second = await ApiRun.open({ staff: run.staff })
     const lie = { ...photo, attachment: { ...photo.attachment, type: 'application/pdf' as const } }
-    await name(second, [lie])
-    expect(codeOf(await second.staff.lead.client.get(at(ledger(second.id), lie)))).toBe('404 not-here-yet')
-    expect(codeOf(await put(second.staff.lead, ledger(second.id), lie))).toBe('422 wrong-bytes')
+    await nameFiles(second, [lie])
+    expect(codeOf(await second.staff.lead.client.get(fileAddress(ledger(second.id), lie)))).toBe('404 not-here-yet')
+    expect(codeOf(await putFile(second.staff.lead, ledger(second.id), lie))).toBe('422 wrong-bytes')
   })
 
   it('can be neither named nor sent above 12 MB', async () => {
@@ -166,8 +139,8 @@ describe('what is not what was named', () => {
     await post(run.staff.lead, run.path, [run.lead.draft(observed)])
     await run.staff.lead.client.post(run.path, { sentAt: new Date().toISOString(), entries: [draft] }).expect(422)
     const small = fileOf(pdf().bytes, 'application/pdf')
-    await name(run, [small])
-    expect(codeOf(await put(run.staff.lead, ledger(run.id), { ...small, bytes: huge.bytes }))).toBe('413 too-large')
+    await nameFiles(run, [small])
+    expect(codeOf(await putFile(run.staff.lead, ledger(run.id), { ...small, bytes: huge.bytes }))).toBe('413 too-large')
   })
 })
 
@@ -175,19 +148,19 @@ describe('who may', () => {
   it('send the files of a test: its people, as long as their facts land; not the crew, not another shop', async () => {
     const run = await ApiRun.open()
     const photo = await picture()
-    await name(run, [photo])
+    await nameFiles(run, [photo])
     const by = ledger(run.id)
     const { lead, witness, crew, owner } = run.staff
     const stranger = await openShop()
-    expect(codeOf(await put(crew, by, photo))).toBe('403 forbidden')
-    expect(codeOf(await put(stranger, by, photo))).toBe('404 not-found')
-    expect(codeOf(await stranger.client.get(at(by, photo)))).toBe('404 not-found')
+    expect(codeOf(await putFile(crew, by, photo))).toBe('403 forbidden')
+    expect(codeOf(await putFile(stranger, by, photo))).toBe('404 not-found')
+    expect(codeOf(await stranger.client.get(fileAddress(by, photo)))).toBe('404 not-found')
     expect(codeOf(await stranger.client.get(`/api/proof-tests/${run.id}/attachments`))).toBe('404 not-found')
     await owner.client.delete(`/api/people/${witness.userId}?shop=${owner.shopId}`)
-    await put(witness, by, photo).expect(204)
-    await witness.client.get(at(by, photo)).expect(200)
-    await crew.client.get(at(by, photo)).expect(200)
-    await put(lead, by, photo).expect(204)
+    await putFile(witness, by, photo).expect(204)
+    await witness.client.get(fileAddress(by, photo)).expect(200)
+    await crew.client.get(fileAddress(by, photo)).expect(200)
+    await putFile(lead, by, photo).expect(204)
   })
 
   it('send the files of a press: whoever may make the entry that names them', async () => {
@@ -201,11 +174,11 @@ describe('who may', () => {
     const described = { kind: 'changed', payload: { change: 'repair', jointIds: [], why: 'Welded over.' } }
     await post(staff.lead, `/api/presses/${pressId}/entries`, [{ ...lead.draft(described), attachments: [weld.attachment] }])
     const by = ledger(pressId)
-    await put(staff.crew, by, knock).expect(204)
-    await put(staff.lead, by, weld).expect(204)
+    await putFile(staff.crew, by, knock).expect(204)
+    await putFile(staff.lead, by, weld).expect(204)
     const stranger = await openShop()
-    expect(codeOf(await put(stranger, by, knock))).toBe('404 not-found')
-    expect(codeOf(await stranger.client.get(at(by, knock)))).toBe('404 not-found')
+    expect(codeOf(await putFile(stranger, by, knock))).toBe('404 not-found')
+    expect(codeOf(await stranger.client.get(fileAddress(by, knock)))).toBe('404 not-found')
     expect(await held(staff.crew, `/api/presses/${pressId}`)).toEqual([
       { ...knock.attachment, seq: 2, present: true, lost: null },
       { ...weld.attachment, seq: 3, present: true, lost: null },
@@ -216,36 +189,36 @@ describe('who may', () => {
   it('nobody who is not signed in, nor from another site', async () => {
     const run = await ApiRun.open()
     const photo = await picture()
-    await name(run, [photo])
+    await nameFiles(run, [photo])
     const by = ledger(run.id)
     const elsewhere = run.staff.lead.client
-      .put(at(by, photo))
+      .put(fileAddress(by, photo))
       .set('Sec-Fetch-Site', 'cross-site')
       .set('Origin', 'https://elsewhere.example')
     expect(codeOf(await elsewhere.set('Content-Type', 'image/jpeg').send(photo.bytes))).toBe('403 cross-origin')
     await run.staff.lead.client.delete('/api/session')
-    expect(codeOf(await put(run.staff.lead, by, photo))).toBe('401 not-signed-in')
-    expect(codeOf(await run.staff.lead.client.get(at(by, photo)))).toBe('401 not-signed-in')
+    expect(codeOf(await putFile(run.staff.lead, by, photo))).toBe('401 not-signed-in')
+    expect(codeOf(await run.staff.lead.client.get(fileAddress(by, photo)))).toBe('401 not-signed-in')
   })
 
   it('see one shop’s bytes through no other shop’s ledger', async () => {
     const [mine, theirs] = [await ApiRun.open(), await ApiRun.open()]
     const photo = await picture()
-    await name(mine, [photo])
-    await put(mine.staff.lead, ledger(mine.id), photo).expect(204)
-    await name(theirs, [photo])
-    expect(codeOf(await theirs.staff.lead.client.get(at(ledger(theirs.id), photo)))).toBe('404 not-here-yet')
+    await nameFiles(mine, [photo])
+    await putFile(mine.staff.lead, ledger(mine.id), photo).expect(204)
+    await nameFiles(theirs, [photo])
+    expect(codeOf(await theirs.staff.lead.client.get(fileAddress(ledger(theirs.id), photo)))).toBe('404 not-here-yet')
   })
 
   it('name what it belongs to, once, by a hash', async () => {
     const run = await ApiRun.open()
     const photo = await picture()
-    await name(run, [photo])
+    await nameFiles(run, [photo])
     const { client } = run.staff.lead
     await client.get(`/api/attachments/${photo.attachment.sha256}`).expect(422)
-    await client.get(at(ledger(run.id), photo, `&calibration=${run.id}`)).expect(422)
+    await client.get(fileAddress(ledger(run.id), photo, `&calibration=${run.id}`)).expect(422)
     await client.get(`/api/attachments/..%2f..%2fsecrets?${ledger(run.id)}`).expect(404)
-    expect(codeOf(await client.get(at(ledger(run.id), await picture())))).toBe('404 not-found')
+    expect(codeOf(await client.get(fileAddress(ledger(run.id), await picture())))).toBe('404 not-found')
   })
 })
 
@@ -255,14 +228,14 @@ describe('smaller pictures', () => {
     const drawn = await picture('jpeg', { width: 2400, height: 1200 })
     // Orientation 6: the camera was held upright (Exif 2.3, tag 0x0112).
     const photo = fileOf(await sharp(drawn.bytes).withMetadata({ orientation: 6 }).toBuffer(), 'image/jpeg', 'Crack "at" toe/7.jpeg')
-    await name(run, [photo])
-    await put(run.staff.lead, ledger(run.id), photo).expect(204)
+    await nameFiles(run, [photo])
+    await putFile(run.staff.lead, ledger(run.id), photo).expect(204)
     for (const [size, height] of [
       ['thumb', 320],
       ['page', 1600],
     ] as const) {
       for (const _time of ['made', 'read again']) {
-        const response = await run.staff.lead.client.get(at(ledger(run.id), photo, `&size=${size}`)).expect(200)
+        const response = await run.staff.lead.client.get(fileAddress(ledger(run.id), photo, `&size=${size}`)).expect(200)
         expect(response.headers['content-type']).toBe('image/jpeg')
         const { format, width, height: high, orientation, exif } = await sharp(response.body as Buffer).metadata()
         expect({ format, width, high, orientation, exif }).toEqual({
@@ -280,9 +253,9 @@ describe('smaller pictures', () => {
   it('are never larger than the photo was', async () => {
     const run = await ApiRun.open()
     const photo = await picture('webp', { width: 100, height: 60 })
-    await name(run, [photo])
-    await put(run.staff.lead, ledger(run.id), photo).expect(204)
-    const response = await run.staff.lead.client.get(at(ledger(run.id), photo, '&size=page')).expect(200)
+    await nameFiles(run, [photo])
+    await putFile(run.staff.lead, ledger(run.id), photo).expect(204)
+    const response = await run.staff.lead.client.get(fileAddress(ledger(run.id), photo, '&size=page')).expect(200)
     expect(await sharp(response.body as Buffer).metadata()).toMatchObject({ format: 'jpeg', width: 100, height: 60 })
   })
 
@@ -294,15 +267,15 @@ describe('smaller pictures', () => {
     const blank = sharp({ create: { width: 10_000, height: 6_000, channels: 3, background: '#000' } })
     const bomb = fileOf(await blank.png({ compressionLevel: 9 }).toBuffer(), 'image/png')
     const document = pdf()
-    await name(run, [broken, bomb, document])
+    await nameFiles(run, [broken, bomb, document])
     const { lead } = run.staff
-    for (const file of [broken, bomb, document]) await put(lead, ledger(run.id), file).expect(204)
+    for (const file of [broken, bomb, document]) await putFile(lead, ledger(run.id), file).expect(204)
     for (const file of [broken, bomb]) {
-      expect(codeOf(await lead.client.get(at(ledger(run.id), file, '&size=thumb')))).toBe('422 no-picture')
-      await lead.client.get(at(ledger(run.id), file)).expect(200)
+      expect(codeOf(await lead.client.get(fileAddress(ledger(run.id), file, '&size=thumb')))).toBe('422 no-picture')
+      await lead.client.get(fileAddress(ledger(run.id), file)).expect(200)
     }
-    expect(codeOf(await lead.client.get(at(ledger(run.id), document, '&size=thumb')))).toBe('404 no-picture')
-    const read = await lead.client.get(at(ledger(run.id), document)).expect(200)
+    expect(codeOf(await lead.client.get(fileAddress(ledger(run.id), document, '&size=thumb')))).toBe('404 no-picture')
+    const read = await lead.client.get(fileAddress(ledger(run.id), document)).expect(200)
     expect(read.headers['content-type']).toBe('application/pdf')
   }, 60_000)
 })
@@ -312,12 +285,12 @@ describe('signing', () => {
     const run = await ApiRun.open()
     const photo = await picture()
     await run.driveTo('sign')
-    await name(run, [photo])
+    await nameFiles(run, [photo])
     const refused = await run.sign('lead')
     expect(codeOf(refused)).toBe('409 refused')
     expect(problemSchema.parse(refused.body)).toMatchObject({ rules: ['R53'] })
     expect(problemSchema.parse(refused.body).detail).toContain('1 of 1 photos and documents is not on the server yet')
-    await put(run.staff.lead, ledger(run.id), photo).expect(204)
+    await putFile(run.staff.lead, ledger(run.id), photo).expect(204)
     await run.sign('lead').expect(201)
   })
 
@@ -325,7 +298,7 @@ describe('signing', () => {
     const run = await ApiRun.open()
     const photo = await picture()
     await run.driveTo('sign')
-    await name(run, [photo])
+    await nameFiles(run, [photo])
     const why = 'The tablet fell into the pit.'
     const lost = { kind: 'attachment-lost', payload: { sha256: photo.attachment.sha256, why } } as const
     expect(await run.send(run.lead, lost)).toMatchObject({ outcome: 'kept', entry: { irregular: [] } })
@@ -340,7 +313,7 @@ describe('signing', () => {
     await run.driveTo('sign')
     await run.sign('lead').expect(201)
     const photo = await picture()
-    await name(run, [photo])
+    await nameFiles(run, [photo])
     await run.refresh()
     expect(problemSchema.parse((await run.sign('witness')).body)).toMatchObject({ rules: ['R53'] })
     const lost = { kind: 'attachment-lost', payload: { sha256: photo.attachment.sha256, why: 'Never taken.' } } as const
@@ -366,13 +339,13 @@ describe('a certificate', () => {
     expect(entered.certificateFile).toEqual({ ...certificate.attachment, present: false })
     // What a test freezes of a calibration is what it was before.
     expect(entered.calibration).toEqual(calibration())
-    expect(codeOf(await put(staff.crew, by, certificate))).toBe('403 forbidden')
-    expect(codeOf(await put(staff.lead, by, pdf('Another')))).toBe('409 not-named-yet')
-    expect(codeOf(await put(await openShop(), by, certificate))).toBe('404 not-found')
-    await put(staff.lead, by, certificate).expect(204)
-    const read = await staff.crew.client.get(at(by, certificate)).buffer(true).expect(200)
+    expect(codeOf(await putFile(staff.crew, by, certificate))).toBe('403 forbidden')
+    expect(codeOf(await putFile(staff.lead, by, pdf('Another')))).toBe('409 not-named-yet')
+    expect(codeOf(await putFile(await openShop(), by, certificate))).toBe('404 not-found')
+    await putFile(staff.lead, by, certificate).expect(204)
+    const read = await staff.crew.client.get(fileAddress(by, certificate)).buffer(true).expect(200)
     expect(read.headers['content-disposition']).toContain("filename*=UTF-8''Certificate%20C-4471.pdf")
-    expect(codeOf(await (await openShop()).client.get(at(by, certificate)))).toBe('404 not-found')
+    expect(codeOf(await (await openShop()).client.get(fileAddress(by, certificate)))).toBe('404 not-found')
     expect(read.headers['content-disposition']).toMatch(/^inline;/)
     const { calibrations } = instrumentResponseSchema.parse((await staff.lead.client.get(`/api/instruments/${instrumentId}`)).body)
     expect(calibrations[0]?.certificateFile).toEqual({ ...certificate.attachment, present: true })
@@ -382,83 +355,6 @@ describe('a certificate', () => {
     const staff = await openStaffedShop()
     const { calibrations } = await enterInstrument(staff.lead, gauge(), [calibration()])
     expect(calibrations[0]?.certificateFile).toBeNull()
-    expect(codeOf(await put(staff.lead, `calibration=${calibrations[0]?.id}`, pdf()))).toBe('409 not-named-yet')
-  })
-})
-
-describe('the record’s workbook', () => {
-  const workbookOf = async (run: ApiRun): Promise<ExcelJS.Workbook> => {
-    const response = await run.staff.lead.client
-      .get(`/api/proof-tests/${run.id}/record.xlsx`)
-      .buffer(true)
-      .parse(binary as never)
-      .expect(200)
-    const workbook = new ExcelJS.Workbook()
-    await workbook.xlsx.load(response.body as ArrayBuffer)
-    return workbook
-  }
-  const rowsOf = (workbook: ExcelJS.Workbook): string[][] => {
-    const rows: string[][] = []
-    workbook.getWorksheet('Photos')?.eachRow((row, number) => {
-      if (number > 4) rows.push(Array.from({ length: 8 }, (_, column) => row.getCell(column + 1).text))
-    })
-    return rows
-  }
-
-  it('has every photo with what became of it, and the picture', async () => {
-    const run = await ApiRun.open()
-    const [photo, gone, missing, document] = [await picture('webp', { width: 1000, height: 500 }), await picture(), await picture(), pdf()]
-    await name(run, [photo, gone])
-    await name(run, [photo, missing, document], run.witness)
-    for (const file of [photo, document]) await put(run.staff.lead, ledger(run.id), file).expect(204)
-    const payload = { sha256: gone.attachment.sha256, why: 'The tablet fell into the pit.' }
-    await run.send(run.lead, { kind: 'attachment-lost', payload })
-    const workbook = await workbookOf(run)
-    const rows = rowsOf(workbook)
-    expect(rows.map(([number, seq, says, fileName, type]) => [number, seq, says, fileName, type])).toEqual([
-      ['1', '2', 'See the photo.', 'Joint 7.webp', 'image/webp'],
-      ['2', '2', 'See the photo.', 'Joint 7.jpeg', 'image/jpeg'],
-      ['3', '3', 'See the photo.', 'Joint 7.webp', 'image/webp'],
-      ['4', '3', 'See the photo.', 'Joint 7.jpeg', 'image/jpeg'],
-      ['5', '3', 'See the photo.', 'Certificate.pdf', 'application/pdf'],
-    ])
-    expect(rows.map((row) => row[6])).toEqual([
-      'On the server',
-      expect.stringMatching(/^Declared lost by Lena Vogt, .* UTC: The tablet fell into the pit\.$/),
-      'On the server',
-      'Not on the server',
-      'On the server',
-    ])
-    expect(rows.map((row) => row[7])).toEqual([photo, gone, photo, missing, document].map(({ attachment }) => attachment.sha256))
-    // Named twice, it stands on the sheet twice and is in the file once.
-    const images = workbook.getWorksheet('Photos')?.getImages() ?? []
-    expect(images.map(({ range }) => range.tl.nativeRow)).toEqual([4, 6])
-    expect(new Set(images.map(({ imageId }) => imageId)).size).toBe(1)
-    const embedded = workbook.getImage(Number(images[0]?.imageId)).buffer
-    expect(await sharp(Buffer.from(embedded as ArrayBuffer)).metadata()).toMatchObject({ format: 'jpeg', width: 800, height: 400 })
-  })
-
-  it('shows the first sixty and names the rest', async () => {
-    const run = await ApiRun.open()
-    const photos = await Promise.all(Array.from({ length: 62 }, () => picture('jpeg', { width: 8, height: 6 })))
-    for (let from = 0; from < photos.length; from += 20) await name(run, photos.slice(from, from + 20))
-    for (const photo of photos) await put(run.staff.lead, ledger(run.id), photo).expect(204)
-    const workbook = await workbookOf(run)
-    expect(rowsOf(workbook)).toHaveLength(62)
-    const images = workbook.getWorksheet('Photos')?.getImages() ?? []
-    expect(images.map(({ range }) => range.tl.nativeRow)).toEqual(Array.from({ length: 60 }, (_, index) => 4 + index))
-  }, 60_000)
-
-  it('prints on when a photo was lost or changed in the storage, and says which', async () => {
-    const run = await ApiRun.open()
-    const [altered, vanished] = [await picture(), await picture('png')]
-    await name(run, [altered, vanished])
-    for (const file of [altered, vanished]) await put(run.staff.lead, ledger(run.id), file).expect(204)
-    writeFileSync(fileOnDisk(run.staff.lead.shopId, altered), 'other bytes')
-    rmSync(fileOnDisk(run.staff.lead.shopId, vanished))
-    const workbook = await workbookOf(run)
-    expect(testServer().loggedErrors.splice(0)).toHaveLength(2)
-    expect(rowsOf(workbook).map((row) => row[6])).toEqual(['Altered after it was kept: not shown', 'Not on the server'])
-    expect(workbook.getWorksheet('Photos')?.getImages()).toEqual([])
+    expect(codeOf(await putFile(staff.lead, `calibration=${calibrations[0]?.id}`, pdf()))).toBe('409 not-named-yet')
   })
 })

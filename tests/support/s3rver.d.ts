@@ -1,7 +1,7 @@
 /** The part of s3rver, a local stand-in for object storage, that the tests use; the package brings no types. */
 declare module 's3rver' {
   import type { AddressInfo } from 'node:net'
-  export default class S3rver {
+  class S3rver {
     constructor(options: {
       address: string
       port: number
@@ -12,4 +12,5 @@ declare module 's3rver' {
     run(): Promise<AddressInfo>
     close(): Promise<void>
   }
+  export = S3rver
 }
