@@ -84,6 +84,13 @@ function beyond(column: string, { value, id }: Cursor, descending: boolean): Con
   return { sql: descending ? `(${further} OR ${column} IS NULL)` : `(${further})`, values: [value, value, id] }
 }
 
+/**
+ * Written as a range, and ordered by, so that MariaDB enters the index at the place of the cursor. For `shop_id = ?` it
+ * prefers to look up the shop alone once a page lies behind the middle, and reads every row before the page: 1.4 s
+ * instead of 1 ms in the middle of 100,000.
+ */
+const OF_THE_SHOP = 'shop_id >= ? AND shop_id <= ?'
+
 async function read<Row>(
   query: KeysetQuery,
   cursor: Cursor | undefined,
@@ -93,7 +100,7 @@ async function read<Row>(
   if (database === undefined) throw new Error(`${model.name} is not bound to a connection.`)
   const backwards = cursor?.way === 'newer'
   const descending = sort.descending !== backwards
-  const conditions: Condition[] = [{ sql: 'shop_id = ?', values: [shopId] }, ...(query.conditions ?? [])]
+  const conditions: Condition[] = [{ sql: OF_THE_SHOP, values: [shopId, shopId] }, ...(query.conditions ?? [])]
   if (cursor !== undefined) conditions.push(beyond(sort.column, cursor, descending))
   const selected = Object.entries({ ...query.columns, id: 'id', sortValue: sort.column }).map(
     ([name, column]) => `${column} AS \`${name}\``,
@@ -102,7 +109,7 @@ async function read<Row>(
   const rows = await database.query<Row & { sortValue: SortValue; id: string }>(
     `SELECT ${selected.join(', ')} FROM ${model.tableName}
      WHERE ${conditions.map((condition) => condition.sql).join(' AND ')}
-     ORDER BY ${sort.column} ${direction}, id ${direction} LIMIT ?`,
+     ORDER BY shop_id ${direction}, ${sort.column} ${direction}, id ${direction} LIMIT ?`,
     { replacements: [...conditions.flatMap((condition) => condition.values), limit + 1], type: QueryTypes.SELECT, transaction },
   )
   const more = rows.length > limit
