@@ -16,7 +16,7 @@ export function percentile(times: Times, percent: number): number {
 }
 
 /** How often each is done: enough for a hundredth part to be more than one. */
-export const SAMPLES = 1_000
+export const SAMPLES = 500
 const WARM_UP = 100
 
 /**

@@ -14,7 +14,7 @@ async function main(): Promise<number> {
   // As people run it: nothing about durability is relaxed.
   const database = await startEmbeddedMariaDb({ directory, secretsDirectory: path.join(directory, 'secrets') })
   try {
-    const lines = [...(await serverLines(database.url)), ...(await pureLines()), ...clientLines()]
+    const lines = [...clientLines(), ...(await pureLines()), ...(await serverLines(database.url))]
     await closeTestServer()
     const { text, isWithin } = tableOf(lines)
     const [load = 0] = loadavg()
