@@ -25,6 +25,7 @@ export async function openDatabase(config: Config, options: OpenOptions = {}): P
           directory: config.dataDirectory,
           secretsDirectory: config.secretsDirectory,
           shareRunning: options.shareRunning,
+          report: (sentence, cause) => options.logger?.warn({ err: cause }, sentence),
         })
       : undefined
   const sequelize = connect(embedded?.url ?? databaseUrl ?? '', { logger: options.logger })

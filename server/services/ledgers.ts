@@ -1,6 +1,7 @@
 import type { AppendRequest, AppendResponse, AppendResult, EntriesResponse } from '#shared/api/ledger'
 import type { OpenTestRequest, SignatureRequest } from '#shared/api/proof-tests'
 import type { EntryDraft, LedgerEntry, LedgerSubject } from '#shared/ledger/envelope'
+import type { DeviceCount } from '#shared/proof-test/device-count'
 import { SIGNATURE_KINDS } from '#shared/proof-test/entries'
 import type { AppContext } from '../context'
 import { parsePressDraft, parseProofTestDraft } from '../ledger/parse'
@@ -22,6 +23,9 @@ export interface Asking {
   context: AppContext
   userId: string
 }
+
+/** Of missing numbers in one answer: the rest is asked for when these have come. */
+const MOST_RUNS = 100
 
 type Append = (writing: Writing, draft: EntryDraft) => Promise<LedgerEntry>
 
@@ -109,16 +113,17 @@ export async function appendTestEntries(
   { entries, sentAt }: AppendRequest,
 ): Promise<AppendResponse> {
   const clockOff = Date.parse(sentAt) - context.now().getTime()
-  let resendFrom: number | null = null
+  let count: DeviceCount | undefined
   const answer = await appendBatch(context, testId, entries, async (writing, draft) => {
     const locked = await lockTest(writing, userId, testId)
     if (draft.kind === 'opened' || SIGNATURE_KINDS.has(draft.kind)) throw conflict('own-route', 'This is not entered here.')
     parseProofTestDraft(draft)
-    const expected = (locked.state.devices[draft.deviceId] ?? draft.deviceSeq - 1) + 1
-    if (draft.deviceSeq > expected) resendFrom ??= expected
-    return appendToTest(writing, locked, draft, clockOff)
+    const entry = await appendToTest(writing, locked, draft, clockOff)
+    count = locked.state.devices[draft.deviceId]
+    return entry
   })
-  return { ...answer, resendFrom }
+  const missing = (count?.missing ?? []).slice(0, MOST_RUNS).map(([first, last]): [number, number] => [first, last])
+  return { ...answer, resendFrom: missing[0]?.[0] ?? null, missing }
 }
 
 export async function openProofTest(

@@ -12,12 +12,16 @@ export const appendResultSchema = z.discriminatedUnion('outcome', [
   z.object({ outcome: z.literal('refused'), id: idSchema, problem: problemSchema }),
 ])
 
-/** `resendFrom` names the first number of this device's entries that the server lacks, when there is a gap. */
+/**
+ * `resendFrom` names the first number of this device's entries that the server lacks, when there is a gap; `missing` all
+ * of them, as runs of first and last. The device sends again what it still has of them.
+ */
 export const appendResponseSchema = z.object({
   results: z.array(appendResultSchema),
   headSeq: z.int(),
   headHash: z.string(),
   resendFrom: z.int().nullable(),
+  missing: z.array(z.tuple([z.int(), z.int()])).optional(),
 })
 
 /** GET …/entries?after=seq: what came after, and the names of everybody who wrote any of it. */

@@ -59,12 +59,13 @@ export function checkChain(entries: readonly StoredEntry[]): ChainCheck {
     const broken = (why: string): ChainCheck => ({ whole: false, brokenAt: expected, why })
     if (entry.seq !== expected) return broken(`Entry ${expected} is missing.`)
     if (sha256Hex(entry.canonical) !== entry.hash) return broken(`Entry ${expected} does not match its hash.`)
-    let stored: { seq?: unknown; prevHash?: unknown }
+    let stored: { seq?: unknown; prevHash?: unknown } | null
     try {
-      stored = JSON.parse(entry.canonical) as { seq?: unknown; prevHash?: unknown }
+      stored = JSON.parse(entry.canonical) as { seq?: unknown; prevHash?: unknown } | null
     } catch {
       return broken(`Entry ${expected} cannot be read.`)
     }
+    if (typeof stored !== 'object' || stored === null) return broken(`Entry ${expected} cannot be read.`)
     if (stored.seq !== expected) return broken(`Entry ${expected} carries another number.`)
     if (stored.prevHash !== prevHash) return broken(`Entry ${expected} does not follow the one before it.`)
     prevHash = entry.hash

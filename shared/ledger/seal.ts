@@ -24,8 +24,23 @@ export function makeSeal(seal: Omit<Seal, 'signature'>, secretKey: string): Seal
 
 /** True when the seal was made with the key whose public half (32 bytes, hexadecimal) is given. */
 export function checkSeal(seal: Seal, publicKey: string): boolean {
+  return checkText(sealBytes(seal), seal.signature, publicKey)
+}
+
+/** Signs a text with Ed25519 (RFC 8032). `secretKey` is 32 bytes in hexadecimal; so is the answer, of 64 bytes. */
+export function signText(text: string, secretKey: string): string {
+  return bytesToHex(ed25519.sign(utf8ToBytes(text), hexToBytes(secretKey)))
+}
+
+/**
+ * True when the signature over the text was made with the key whose public half is given. Both are lower-case
+ * hexadecimal: the same bytes spelled in capitals are another spelling, and refused. RFC 8032 5.1.7, strictly.
+ */
+export function checkText(text: string | Uint8Array, signature: string, publicKey: string): boolean {
+  if (!/^[0-9a-f]{128}$/.test(signature) || !/^[0-9a-f]{64}$/.test(publicKey)) return false
   try {
-    return ed25519.verify(hexToBytes(seal.signature), sealBytes(seal), hexToBytes(publicKey))
+    const bytes = typeof text === 'string' ? utf8ToBytes(text) : text
+    return ed25519.verify(hexToBytes(signature), bytes, hexToBytes(publicKey), { zip215: false })
   } catch {
     return false
   }

@@ -288,7 +288,8 @@ const handlers: Handlers = {
 
 function run<K extends PressKind>(state: PressState, kind: K, payload: PressPayload<K>, entry: LedgerEntry): PressState {
   const next = handlers[kind](state, payload, entry)
-  const event: PressEvent = { seq: entry.seq, at: entry.observedAt, authorId: entry.authorId, kind, ...tell[kind](payload, next) }
+  const { seq, observedAt, authorId, attachments } = entry
+  const event: PressEvent = { seq, at: observedAt, authorId, kind, attachments, ...tell[kind](payload, next) }
   return { ...next, history: [...state.history, event] }
 }
 

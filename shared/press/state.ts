@@ -1,4 +1,4 @@
-import type { Override } from '../ledger/envelope'
+import type { Attachment, Override } from '../ledger/envelope'
 import type { Clearance } from './entries'
 import type { ExaminationMethod, Joint, PressDescription } from './model'
 
@@ -28,6 +28,8 @@ export interface PressEvent {
   text: string
   mark: 'within' | 'stop' | 'plain' | 'under-way'
   proofTestId: string | null
+  /** Photos and documents that its entry names. */
+  attachments: readonly Attachment[]
 }
 
 /** What ends a suspension: the test that is under way, every joint accepted again, or a person who looks into it. */

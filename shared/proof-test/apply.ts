@@ -1,6 +1,8 @@
 import type { LedgerEntry } from '../ledger/envelope'
+import { withAttachmentsOf, withLost } from '../ledger/attachments'
 import { FIRST_PREV_HASH } from '../ledger/chain'
 import { neighboursOf } from '../press/joints'
+import { countDevice } from './device-count'
 import type { Opened, Position, ProofTestDraft, ProofTestKind, ProofTestPayload, Reading } from './entries'
 import { replaceAt, withLeg, withClimb, withAttempt, rowOf, withJoint } from './fold-parts'
 import type { AttemptState, Place, ProofTestState, Row, StageState, StageRow } from './state'
@@ -24,6 +26,7 @@ export function emptyProofTest(id: string): ProofTestState {
     corrections: [],
     reasons: [],
     irregular: [],
+    attachments: [],
     conclusion: null,
     signed: null,
     countersigned: null,
@@ -178,6 +181,14 @@ function jointWorked(state: ProofTestState, payload: ProofTestPayload<'joint-wor
   }
 }
 
+/** Lead and witness answer for the record, so only their word counts; anybody else's stands in the ledger and changes nothing. */
+function attachmentLost(state: ProofTestState, payload: ProofTestPayload<'attachment-lost'>, entry: LedgerEntry): ProofTestState {
+  const people = state.opened?.people
+  if (entry.authorId !== people?.lead.id && entry.authorId !== people?.witness.id) return state
+  const lost = { why: payload.why, by: entry.authorId, at: entry.observedAt }
+  return { ...state, attachments: withLost(state.attachments, payload.sha256, lost) }
+}
+
 type Handlers = { [K in ProofTestKind]: (state: ProofTestState, payload: ProofTestPayload<K>, entry: LedgerEntry) => ProofTestState }
 
 const handlers: Handlers = {
@@ -315,6 +326,7 @@ const handlers: Handlers = {
     ],
   }),
   reviewed: (state) => state,
+  'attachment-lost': attachmentLost,
 }
 
 function dispatch<K extends ProofTestKind>(
@@ -335,13 +347,14 @@ export function applyProofTest(before: ProofTestState, stored: LedgerEntry): Pro
   const entry = upcast(stored)
   const state: ProofTestState = {
     ...before,
-    devices: before.devices[entry.deviceId] === entry.deviceSeq ? before.devices : { ...before.devices, [entry.deviceId]: entry.deviceSeq },
+    devices: { ...before.devices, [entry.deviceId]: countDevice(before.devices[entry.deviceId], entry.deviceSeq) },
     entryCount: before.entryCount + 1,
     headSeq: entry.seq,
     headHash: entry.hash,
     lastMark: { at: entry.observedAt, bootId: entry.bootId, monotonicMs: entry.monotonicMs },
     irregular:
       entry.irregular.length > 0 ? [...before.irregular, { seq: entry.seq, kind: entry.kind, rules: entry.irregular }] : before.irregular,
+    attachments: withAttachmentsOf(before.attachments, entry),
     lateFacts: before.countersigned ? before.lateFacts + 1 : before.lateFacts,
     reasons:
       entry.overrides.length > 0

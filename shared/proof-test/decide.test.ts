@@ -58,6 +58,66 @@ describe('people and signatures', () => {
   })
 })
 
+describe('photos and documents', () => {
+  const [photo, page] = ['a'.repeat(64), 'b'.repeat(64)] as const
+  const named = (state: ProofTestState, hashes: readonly string[]): ProofTestState => ({
+    ...state,
+    attachments: hashes.map((sha256) => ({ sha256, type: 'image/jpeg', size: 9, seq: 4, kind: 'observed', lost: null })),
+  })
+  const lost = (sha256: string) => ({ kind: 'attachment-lost', payload: { sha256, why: 'The tablet fell into the pit.' } }) as const
+
+  it('R53: neither signs while a photo that the test names is missing', () => {
+    for (const kind of ['signed', 'countersigned']) {
+      const { state, entry } = before(kind)
+      const held = named(state, [photo, page, photo])
+      expect(ask(held, { ...asEntered(entry), absentFiles: [] }).outcome).toBe('allowed')
+      const refused = ask(held, { ...asEntered(entry), absentFiles: [page] })
+      expect(refused.rules).toEqual(['R53'])
+      expect(refused.says).toContain('1 of 2 photos and documents is not on the server yet')
+      expect(ask(held, { ...asEntered(entry), absentFiles: [page, photo] }).says).toContain('declare them lost')
+      // The device can't know what the server has: the server says no when it is asked.
+      expect(ask(held, asEntered(entry)).outcome).toBe('allowed')
+    }
+  })
+
+  it('R53: what was declared lost keeps nobody from signing', () => {
+    const { state, entry } = before('signed')
+    const declared = { ...entry, kind: 'attachment-lost', payload: { ...lost(photo).payload } }
+    const given = applyProofTest(named(state, [photo]), declared)
+    expect(given.attachments[0]?.lost).toMatchObject({ why: 'The tablet fell into the pit.', by: ids.lead })
+    expect(ask(given, { ...asEntered(entry), absentFiles: [photo] }).outcome).toBe('allowed')
+  })
+
+  it('R54: lead and witness declare a photo lost, the pump hand doesn’t, and nobody what was never named', () => {
+    const { state, entry } = before('concluded')
+    const held = named(state, [photo])
+    expect(ask(held, lost(photo)).outcome).toBe('allowed')
+    expect(ask(held, { ...lost(photo), authorId: ids.witness }).outcome).toBe('allowed')
+    expect(ask(held, { ...lost(photo), authorId: ids.pumpHand }).rules).toEqual(['R54'])
+    expect(ask(held, lost(page)).rules).toEqual(['R54'])
+    // What the pump hand wrote stands in the ledger; the photo is still asked for.
+    const byPumpHand = { ...entry, kind: 'attachment-lost', payload: { ...lost(photo).payload }, authorId: ids.pumpHand }
+    expect(applyProofTest(held, byPumpHand).attachments[0]?.lost).toBeNull()
+  })
+
+  it('R3: after the lead’s signature the witness may still give a photo up, the lead may not', () => {
+    const held = named(before('countersigned').state, [photo])
+    expect(ask(held, { ...lost(photo), authorId: ids.witness }).outcome).toBe('allowed')
+    expect(ask(held, lost(photo)).rules).toEqual(['R3'])
+  })
+
+  it('are remembered with the entry that names them, and asked for anew when another entry names a lost one', () => {
+    const { state, entry } = before('concluded')
+    const attachments = [{ sha256: photo, type: 'image/jpeg' as const, size: 9, name: 'Joint 7' }]
+    const observed = { ...entry, kind: 'observed', payload: { at: null, what: 'other', note: 'See the photo.' }, attachments }
+    const once = applyProofTest(state, observed)
+    expect(once.attachments).toEqual([{ ...attachments[0], seq: entry.seq, kind: 'observed', lost: null }])
+    const gone = applyProofTest(once, { ...entry, seq: entry.seq + 1, kind: 'attachment-lost', payload: { ...lost(photo).payload } })
+    const again = applyProofTest(gone, { ...observed, seq: entry.seq + 2 })
+    expect(again.attachments.map((one) => one.lost === null)).toEqual([false, true])
+  })
+})
+
 /** A round bar of 40 mm across 640 mm: it yields far below 12 short tons. */
 const weakBeam = {
   role: 'beam' as const,

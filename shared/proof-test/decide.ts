@@ -1,3 +1,4 @@
+import { neededHashes } from '../ledger/attachments'
 import { decideByRules, type Decision } from '../ledger/rules'
 import { allRows } from './apply'
 import { ALWAYS_ALLOWED, type CriterionSnapshot } from './entries'
@@ -32,9 +33,11 @@ const WHOLE_RULES: readonly ProofTestRule[] = [
     id: 'R3',
     text: 'After the lead’s signature only the witness acts; after the countersignature nothing changes.',
     severity: 'refuse',
-    check: ({ state, kind }) => {
+    check: ({ state, kind, authorId }) => {
       if (state.countersigned) return 'This record is sealed. Nothing is added to it any more.'
-      if (state.signed && kind !== 'countersigned' && kind !== 'declined')
+      // A file that was still to come when the lead signed would keep the witness from signing: the witness may give it up.
+      const givesUpFile = kind === 'attachment-lost' && authorId === state.opened?.people.witness.id
+      if (state.signed && kind !== 'countersigned' && kind !== 'declined' && !givesUpFile)
         return 'The lead has signed. Only the witness acts now: countersign, or decline with a reason.'
       return null
     },
@@ -116,6 +119,28 @@ const WHOLE_RULES: readonly ProofTestRule[] = [
     ['decided'],
     ({ payload }, state) => (state.stopped && payload.decision !== 'stop' ? 'This test was stopped. That stands.' : null),
     { interlock: true },
+  ),
+  rule(
+    'R53',
+    'A test is signed when every photo and document that it names is on the server or declared lost.',
+    ['signed', 'countersigned'],
+    (_asked, state, _opened, { absentFiles = [] }) => {
+      const needed = neededHashes(state.attachments)
+      const absent = needed.filter((sha256) => absentFiles.includes(sha256)).length
+      if (absent === 0) return null
+      const [are, them] = absent === 1 ? ['is', 'it'] : ['are', 'them']
+      return `${absent} of ${needed.length} photos and documents ${are} not on the server yet. Open this test on the device that holds ${them}, with a connection, or declare ${them} lost with the reason.`
+    },
+  ),
+  rule(
+    'R54',
+    'Only lead and witness declare a photo or document lost, and only one that this test names.',
+    ['attachment-lost'],
+    ({ payload }, state, opened, { authorId }) => {
+      const { lead, witness } = opened.people
+      if (authorId !== lead.id && authorId !== witness.id) return `Only the lead, ${lead.name}, or the witness, ${witness.name}, declares it lost.`
+      return state.attachments.some((one) => one.sha256 === payload.sha256) ? null : 'No entry of this test names such a photo or document.'
+    },
   ),
 ]
 

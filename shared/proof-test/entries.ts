@@ -184,6 +184,8 @@ export const PROOF_TEST_PAYLOADS = {
   countersigned: signatureSchema,
   declined: z.object({ personId: idSchema, printedName: z.string(), why }),
   reviewed: z.object({ why }),
+  /** The bytes of a photo or document that an entry names will not come any more. */
+  'attachment-lost': z.object({ sha256: z.string().regex(/^[0-9a-f]{64}$/), why }),
 } as const
 
 export type ProofTestKind = keyof typeof PROOF_TEST_PAYLOADS

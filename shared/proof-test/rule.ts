@@ -13,6 +13,8 @@ export interface ProofTestQuestion {
   mark: Mark
   /** How far the device's clock stood from the server's when it sent, in ms; undefined on the device itself. */
   clockOff?: number
+  /** Hashes of photos and documents whose bytes the server does not have; undefined on the device, which cannot know. */
+  absentFiles?: readonly string[]
 }
 
 export type ProofTestRule = Rule<ProofTestQuestion>

@@ -1,4 +1,6 @@
+import type { DeviceCount } from './device-count'
 import type { Conclusion, CriterionSnapshot, Mark, Opened, Position, ProofTestPayload, Reading, SetUpItem, Signature } from './entries'
+import type { NamedAttachment } from '../ledger/attachments'
 import type { ExaminationMethod, Joint, MakeUp } from '../press/model'
 
 export interface JointExamination {
@@ -154,6 +156,8 @@ export interface ProofTestState {
   corrections: Correction[]
   reasons: Reason[]
   irregular: Irregular[]
+  /** Photos and documents that entries name, oldest first. */
+  attachments: readonly NamedAttachment[]
   conclusion: {
     seq: number
     conclusion: Conclusion
@@ -170,8 +174,8 @@ export interface ProofTestState {
   lateFacts: number
   /** Moments of the last entry of every device, for clocks and holds. */
   lastMark: Mark | null
-  /** The last number of every device's own count, by device. */
-  devices: Readonly<Record<string, number>>
+  /** Every device's own count, by device. */
+  devices: Readonly<Record<string, DeviceCount>>
   entryCount: number
   headSeq: number
   headHash: string

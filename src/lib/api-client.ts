@@ -1,5 +1,6 @@
 import type { z } from 'zod'
 import { Disconnected, UnreadableAnswer, readProblem } from './problem'
+import { retryAfter } from './retry-delay'
 
 type Query = Record<string, string | number | boolean | undefined>
 type Options = { query?: Query; signal?: AbortSignal }
@@ -48,7 +49,7 @@ async function exchange(method: Method, path: `/api/${string}`, body: unknown, o
     throw new Disconnected(failure)
   }
   if (response.ok) return answer
-  const problem = readProblem(response.status, answer)
+  const problem = readProblem(response.status, answer, retryAfter(response.headers.get('retry-after'), Date.now()))
   if (GATEWAY.has(response.status) && problem.code.startsWith('http-')) throw new Disconnected(problem)
   throw problem
 }

@@ -31,6 +31,18 @@ export interface LedgerOutbox {
   fault: string | null
 }
 
+/** Everything that this browser keeps, over all ledgers and people. */
+export interface OutboxSummary {
+  /** False until what this device kept has been read. */
+  loaded: boolean
+  /** Entries that the server has not answered for. */
+  unsent: number
+  /** Entries that the server refused, and nobody has dealt with. */
+  attention: number
+  /** The ledgers with any of these. */
+  ledgers: readonly string[]
+}
+
 export interface OutboxParts {
   databaseName: string
   post: (testId: string, request: AppendRequest) => Promise<AppendResponse>
@@ -82,6 +94,7 @@ export class Outbox {
   private readonly unkept: UnkeptEntries
   private sender: SenderState = { is: 'idle' }
   private fault: string | null = null
+  private totals: OutboxSummary = { loaded: false, unsent: 0, attention: 0, ledgers: NOTHING }
   private readonly shownUnkept = new Set<string>()
   private personId: string | null = null
   private sending: Promise<void> | null = null
@@ -120,6 +133,16 @@ export class Outbox {
     // Not before this has answered: where there is no storage at all, it fails at once.
     queueMicrotask(() => void this.refresh(ledgerId))
     return empty
+  }
+
+  /** The same object until something changes; what it says is read when it is first asked for. */
+  summary = (): OutboxSummary => {
+    if (!this.totals.loaded && this.fault === null) queueMicrotask(() => void this.count())
+    return this.totals
+  }
+
+  unsentCount(): number {
+    return this.summary().unsent
   }
 
   /** Called with what the server kept, before it leaves the outbox. */
@@ -223,6 +246,19 @@ export class Outbox {
         sender: this.sender,
         fault: this.fault,
       })
+      await this.count()
+    } catch (failure) {
+      this.fail(failure)
+    }
+  }
+
+  private async count(): Promise<void> {
+    try {
+      const database = await this.opened()
+      const tx = database.transaction(['pending', 'attention'])
+      const [waiting, refused] = await Promise.all([tx.objectStore('pending').getAll(), tx.objectStore('attention').getAll()])
+      const ledgers = [...new Set([...waiting, ...refused].map(({ entry }) => entry.ledgerId))]
+      this.totals = { loaded: true, unsent: waiting.length, attention: refused.length, ledgers }
       this.notify()
     } catch (failure) {
       this.fail(failure)

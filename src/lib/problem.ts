@@ -12,14 +12,17 @@ export class ProblemError extends Error {
   readonly fields: Readonly<Record<string, string>>
   /** Numbers of the rules that refuse, such as `R7`. */
   readonly rules: readonly string[]
+  /** How long the server asks to wait before the same is sent again (ms); null when it doesn't say. */
+  readonly retryAfterMs: number | null
 
-  constructor(status: number, problem: Refusal) {
+  constructor(status: number, problem: Refusal, retryAfterMs: number | null = null) {
     super(problem.detail)
     this.status = status
     this.code = problem.code
     this.detail = problem.detail
     this.fields = problem.fields ?? {}
     this.rules = problem.rules ?? []
+    this.retryAfterMs = retryAfterMs
   }
 }
 
@@ -40,13 +43,11 @@ export class UnreadableAnswer extends Error {
 }
 
 /** The refusal in a response's body; one of our own making if the body isn't problem+json. */
-export function readProblem(status: number, body: unknown): ProblemError {
+export function readProblem(status: number, body: unknown, retryAfterMs: number | null = null): ProblemError {
   const parsed = problemSchema.safeParse(body)
-  if (parsed.success) return new ProblemError(status, parsed.data)
-  return new ProblemError(status, {
-    code: `http-${status}`,
-    detail: `The server answered ${status} and gave no reason. Nothing was changed on this screen.`,
-  })
+  if (parsed.success) return new ProblemError(status, parsed.data, retryAfterMs)
+  const detail = `The server answered ${status} and gave no reason. Nothing was changed on this screen.`
+  return new ProblemError(status, { code: `http-${status}`, detail }, retryAfterMs)
 }
 
 export const isSignedOut = (error: unknown): boolean => error instanceof ProblemError && error.status === 401

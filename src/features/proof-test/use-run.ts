@@ -125,7 +125,7 @@ function useWriting({ ledgerId, testId, authorId, folded, blocked }: Writing) {
         overrides: [...overrides],
         observedAt: new Date().toISOString(),
       }
-      outbox.enqueue(testId, entry, server.devices[deviceId()] ?? 0).catch(() => busy.current.delete(draft.kind))
+      outbox.enqueue(testId, entry, server.devices[deviceId()]?.highest ?? 0).catch(() => busy.current.delete(draft.kind))
     },
     [decide, blocked, ledgerId, testId, authorId, server],
   )
