@@ -64,7 +64,8 @@ function holdClearance(state: PressState, why: string): PressState {
   return { ...state, clearance: { is: 'suspended', clearance: clearance.clearance, why, until: 'the joints are accepted' } }
 }
 
-function isAccepted(joint: PressJoint): boolean {
+/** Finished, and accepted when it was last examined; a retired joint asks for nothing. */
+export function isAccepted(joint: PressJoint): boolean {
   return joint.retired || (joint.makeUp === 'finished' && joint.examination?.result === 'accepted')
 }
 
@@ -141,6 +142,12 @@ function jointWorked(state: PressState, payload: PressPayload<'joint-worked'>, a
   }))
   const moved = { ...next, lastWorkedOn: payload.workedAt.slice(0, 10) }
   return payload.test ? moved : endClearance(moved, `Joint ${worked.number} was worked on.`, at)
+}
+
+/** Whether a clearance that is in force, or could come into force again by itself, rests on an instrument. */
+export function restsOn({ clearance }: Pick<PressState, 'clearance'>, instrumentId: string): boolean {
+  const waits = clearance.is === 'suspended' && clearance.until === 'the joints are accepted'
+  return (clearance.is === 'cleared' || waits) && (clearance.clearance?.instrumentIds.includes(instrumentId) ?? false)
 }
 
 type Handlers = { [K in PressKind]: (state: PressState, payload: PressPayload<K>, entry: LedgerEntry) => PressState }
@@ -270,10 +277,10 @@ const handlers: Handlers = {
   }),
   'test-ended': (state, payload, entry) => withdraw({ ...state, underTest: null }, `${payload.number}: ${payload.why}`, entry.observedAt),
   'instrument-recalled': (state, payload) => {
-    const { clearance } = state
-    if (clearance.is !== 'cleared' || !clearance.clearance.instrumentIds.includes(payload.instrumentId)) return state
+    const clearance = lastClearance(state)
+    if (!restsOn(state, payload.instrumentId) || !clearance) return state
     const why = `${payload.code} was found out of tolerance on ${payload.calibratedOn}, and the clearance rests on it.`
-    return { ...state, clearance: { is: 'suspended', clearance: clearance.clearance, why, until: 'somebody looked into it' } }
+    return { ...state, clearance: { is: 'suspended', clearance, why, until: 'somebody looked into it' } }
   },
   'clearance-given': (state, payload) => ({
     ...state,

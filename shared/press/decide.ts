@@ -1,7 +1,9 @@
 import type { Override } from '../ledger/envelope'
 import { decideByRules, type Decision, type Rule } from '../ledger/rules'
+import { isAccepted } from './apply'
 import { PRESS_CONSEQUENCES, type PressKind, type PressPayload } from './entries'
 import { ratedLoadRefusal } from './ratings'
+import { nameJoints } from './joints'
 import type { Joint } from './model'
 import type { PressState, Repair } from './state'
 
@@ -167,6 +169,10 @@ export const PRESS_RULES: readonly PressRule[] = [
   rule('P28', 'A repair, a change or a split names joints that are there.', ['changed', 'repair-opened'], ({ payload }, state) =>
     payload.jointIds.every((id) => state.joints.some((joint) => joint.id === id)) ? null : 'There is no such joint on this press.',
   ),
+  rule('P29', 'A clearance is given while every joint of the press is accepted.', ['clearance-given'], (_asked, state) => {
+    const fallen = state.joints.filter((joint) => !isAccepted(joint)).map((joint) => joint.number)
+    return fallen.length > 0 ? `${nameJoints(fallen)} fell back after the press was loaded. Examine what happened, then test again.` : null
+  }),
   rule('P12', 'A clearance comes from the test that is under way on the press.', ['clearance-given'], ({ payload }, state) =>
     state.underTest?.proofTestId === payload.proofTestId ? null : 'No such test is under way on this press.',
   ),
