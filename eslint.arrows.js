@@ -23,7 +23,7 @@ const serverUses = {
 }
 
 /** Files at the top of `server` that know nothing of the rest. */
-const serverFoundation = new Set(['config', 'context', 'problem', 'secrets'])
+const serverFoundation = new Set(['config', 'context', 'problem', 'secrets', 'transaction'])
 
 const advice = {
   shared: 'shared is pure and uses zod, @noble and itself only: take what the clock, the network or the platform gives as an argument, and keep this in src or server.',

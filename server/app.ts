@@ -5,6 +5,7 @@ import type { Config } from './config'
 import type { AppContext } from './context'
 import { problemHandler, unknownEndpoint } from './middleware/problem-handler'
 import { sameOrigin } from './middleware/same-origin'
+import { attachmentRoutes } from './routes/attachments'
 import { healthRoutes } from './routes/health'
 import { ledgerRoutes } from './routes/ledgers'
 import { instrumentRoutes } from './routes/instruments'
@@ -61,6 +62,7 @@ function api(context: AppContext) {
   router.use(sessionRoutes(context))
   router.use(shopRoutes(context))
   router.use(peopleRoutes(context))
+  router.use(attachmentRoutes(context))
   router.use(instrumentRoutes(context))
   router.use(protocolRoutes(context))
   router.use(pressReadRoutes(context))

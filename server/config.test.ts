@@ -12,10 +12,23 @@ describe('the settings', () => {
       dataDirectory: path.join(projectRoot, '.data'),
       secretsDirectory: path.join(projectRoot, '.data/secrets'),
       publicUrl: undefined,
+      s3: undefined,
       bcryptCost: 11,
       trustProxy: 0,
+      relaxedDurability: false,
       logLevel: 'warn',
     })
+  })
+
+  it('give durability up for tests only', () => {
+    expect(readConfig({ RELAXED_DURABILITY: '1' }).relaxedDurability).toBe(false)
+    expect(readConfig({ RELAXED_DURABILITY: '1', NODE_ENV: 'test' }).relaxedDurability).toBe(true)
+  })
+
+  it('name object storage by its bucket, the rest having defaults', () => {
+    expect(readConfig({ S3_BUCKET: 'evidence' }).s3).toEqual({ bucket: 'evidence', endpoint: undefined, region: 'us-east-1', prefix: '' })
+    const elsewhere = { S3_BUCKET: 'evidence', S3_ENDPOINT: 'http://127.0.0.1:9000', S3_REGION: 'north', S3_PREFIX: 'quarterload' }
+    expect(readConfig(elsewhere).s3).toEqual({ bucket: 'evidence', endpoint: 'http://127.0.0.1:9000', region: 'north', prefix: 'quarterload/' })
   })
 
   it('take an empty variable as unset', () => {

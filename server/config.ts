@@ -12,8 +12,16 @@ const environment = z.object({
   DATA_DIR: z.string().min(1).default('.data'),
   SECRETS_DIR: z.string().min(1).optional(),
   PUBLIC_URL: z.url('PUBLIC_URL must be a whole address, such as https://press.example.').optional(),
+  S3_BUCKET: z.string().min(3).optional(),
+  S3_ENDPOINT: z.url('S3_ENDPOINT must be a whole address, such as https://objects.example.').optional(),
+  S3_REGION: z.string().min(1).default('us-east-1'),
+  S3_PREFIX: z
+    .string()
+    .regex(/^[\w.-]+(\/[\w.-]+)*\/?$/, 'S3_PREFIX is a path of plain names, such as quarterload/.')
+    .optional(),
   BCRYPT_COST: z.coerce.number().int().min(4).max(12, 'BCRYPT_COST must be between 4 and 12.').default(11),
   TRUST_PROXY: z.coerce.number('TRUST_PROXY is the number of proxies in front.').int().min(0).max(8).default(0),
+  RELAXED_DURABILITY: z.enum(['0', '1']).default('0'),
   LOG_LEVEL: z.enum(['silent', 'fatal', 'error', 'warn', 'info', 'debug']).default('warn'),
 })
 
@@ -28,8 +36,12 @@ export interface Config {
   secretsDirectory: string
   /** The address that people use, when a proxy stands in front. */
   publicUrl: string | undefined
+  /** Object storage for photos and documents; without it they are kept in a folder beside the data. */
+  s3: { bucket: string; endpoint: string | undefined; region: string; prefix: string } | undefined
   bcryptCost: number
   trustProxy: number
+  /** In tests only: a database that may lose its last second is taken as it is. */
+  relaxedDurability: boolean
   logLevel: string
 }
 
@@ -50,8 +62,18 @@ export function readConfig(variables: NodeJS.ProcessEnv): Config {
     dataDirectory,
     secretsDirectory: values.SECRETS_DIR === undefined ? path.join(dataDirectory, 'secrets') : path.resolve(projectRoot, values.SECRETS_DIR),
     publicUrl: values.PUBLIC_URL?.replace(/\/+$/, ''),
+    s3:
+      values.S3_BUCKET === undefined
+        ? undefined
+        : {
+            bucket: values.S3_BUCKET,
+            endpoint: values.S3_ENDPOINT,
+            region: values.S3_REGION,
+            prefix: values.S3_PREFIX?.replace(/\/?$/, '/') ?? '',
+          },
     bcryptCost: values.BCRYPT_COST,
     trustProxy: values.TRUST_PROXY,
+    relaxedDurability: values.NODE_ENV === 'test' && values.RELAXED_DURABILITY === '1',
     logLevel: values.LOG_LEVEL,
   }
 }

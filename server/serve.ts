@@ -11,6 +11,7 @@ import { openDatabase } from './database/open-database'
 import type { OpenDatabase } from './database/open-database'
 import { initModels } from './models'
 import { loadOrCreateSecret } from './secrets'
+import { openStorage } from './storage/open-storage'
 
 /** Requests under way get this long to finish after the server was asked to stop. */
 const drainMilliseconds = 10_000
@@ -68,6 +69,7 @@ async function open(options: ServeOptions, closing: AbortSignal, closers: Closer
   const context: AppContext = {
     config,
     database: database.sequelize,
+    storage: await openStorage(config, new Date()),
     sessionSecret: loadOrCreateSecret(config.secretsDirectory, 'session-secret'),
     logger,
     now: () => new Date(),

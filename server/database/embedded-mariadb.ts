@@ -102,7 +102,7 @@ function serverArguments(places: Places, port: number, relaxed: boolean): string
     '--innodb-log-file-size=16M',
     ...(relaxed
       ? ['--innodb-flush-log-at-trx-commit=0', '--sync-binlog=0', '--innodb-doublewrite=0']
-      : ['--innodb-flush-log-at-trx-commit=1']),
+      : ['--innodb-flush-log-at-trx-commit=1', '--sync-binlog=1', '--innodb-doublewrite=1']),
   ]
 }
 

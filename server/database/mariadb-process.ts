@@ -57,6 +57,16 @@ export function freePort(): Promise<number> {
   })
 }
 
+/**
+ * A temporary folder that no other mariadbd uses: one that starts deletes what it takes for its own leftovers, also from
+ * under another that is at work.
+ */
+export function withOwnTemporaryFolder(directory: string): NodeJS.ProcessEnv {
+  const folder = path.join(directory, 'tmp')
+  mkdirSync(folder, { recursive: true, mode: 0o700 })
+  return { ...process.env, TMPDIR: folder }
+}
+
 /** Makes the system tables beside the final place and renames them, so an interrupted start leaves nothing half-made. */
 export function createDataDirectory(dataDirectory: string): void {
   if (existsSync(dataDirectory)) return
@@ -65,8 +75,15 @@ export function createDataDirectory(dataDirectory: string): void {
   mkdirSync(draft, { recursive: true, mode: 0o700 })
   const result = spawnSync(
     findProgram('mariadb-install-db'),
-    ['--no-defaults', ...userOptions(), `--datadir=${draft}`, '--auth-root-authentication-method=normal', '--skip-test-db', '--innodb-log-file-size=16M'],
-    { encoding: 'utf8' },
+    [
+      '--no-defaults',
+      ...userOptions(),
+      `--datadir=${draft}`,
+      '--auth-root-authentication-method=normal',
+      '--skip-test-db',
+      '--innodb-log-file-size=16M',
+    ],
+    { encoding: 'utf8', env: withOwnTemporaryFolder(path.dirname(dataDirectory)) },
   )
   if (result.status !== 0) throw new Error(`mariadb-install-db failed:\n${result.stdout}${result.stderr}`)
   renameSync(draft, dataDirectory)
@@ -124,7 +141,11 @@ export async function endServer(pid: number, patienceMilliseconds = 20_000): Pro
 export function spawnServer(args: string[], logFile: string): ChildProcess {
   const log = openSync(logFile, 'a', 0o600)
   try {
-    const child = spawn(findProgram('mariadbd'), args, { stdio: ['ignore', log, log], detached: true })
+    const child = spawn(findProgram('mariadbd'), args, {
+      stdio: ['ignore', log, log],
+      detached: true,
+      env: withOwnTemporaryFolder(path.dirname(logFile)),
+    })
     child.unref()
     return child
   } finally {

@@ -2,6 +2,7 @@ import type { Sequelize } from 'sequelize'
 import type { Logger } from 'pino'
 import type { Config } from '../config'
 import { connect } from './connection'
+import { requireDurable } from './durability'
 import { startEmbeddedMariaDb } from './embedded-mariadb'
 
 export interface OpenDatabase {
@@ -38,6 +39,12 @@ export async function openDatabase(config: Config, options: OpenOptions = {}): P
   } catch (error) {
     await close()
     throw new Error('The database does not answer. Is DATABASE_URL right, and is the server up?', { cause: error })
+  }
+  try {
+    await requireDurable(sequelize, { isRelaxed: config.relaxedDurability })
+  } catch (error) {
+    await close()
+    throw error
   }
   return { sequelize, isEmbedded: embedded !== undefined, close }
 }

@@ -1,16 +1,12 @@
 import type { ErrorRequestHandler, RequestHandler } from 'express'
-import { BaseError, ConnectionError, DatabaseError, TimeoutError } from 'sequelize'
+import { ConnectionError, TimeoutError } from 'sequelize'
 import type { Logger } from 'pino'
 import { Problem } from '../problem'
+import { passingReason } from '../transaction'
 
-/** Deadlock and lock wait timeout: the same request may well go through a moment later. */
-const passingDatabaseErrors = new Set([1205, 1213])
-
-function isPassing(error: BaseError): boolean {
-  if (error instanceof ConnectionError || error instanceof TimeoutError) return true
-  if (!(error instanceof DatabaseError)) return false
-  const cause: object = error.original
-  return 'errno' in cause && typeof cause.errno === 'number' && passingDatabaseErrors.has(cause.errno)
+/** The same request may well go through a moment later. */
+function isPassing(error: unknown): boolean {
+  return error instanceof ConnectionError || error instanceof TimeoutError || passingReason(error) !== undefined
 }
 
 function bodyProblem(error: unknown): Problem | undefined {
@@ -20,6 +16,9 @@ function bodyProblem(error: unknown): Problem | undefined {
       return new Problem(400, 'malformed-json', 'What was sent is not JSON.')
     case 'entity.too.large':
       return new Problem(413, 'too-large', 'What was sent is too large.')
+    case 'request.aborted':
+    case 'request.size.invalid':
+      return new Problem(400, 'broken-off', 'What was sent broke off on the way. Send it again.')
     case 'charset.unsupported':
     case 'encoding.unsupported':
       return new Problem(400, 'unknown-encoding', 'Send the data as UTF-8 JSON.')
@@ -33,12 +32,16 @@ export function toProblem(error: unknown, logger: Logger): Problem {
   const fromBody = bodyProblem(error)
   if (fromBody !== undefined) return fromBody
   if (error instanceof URIError) return new Problem(400, 'malformed-address', 'This address is mistyped.')
-  if (error instanceof BaseError && isPassing(error)) {
+  if (isPassing(error)) {
     logger.warn({ err: error }, 'The database could not answer')
     return new Problem(503, 'try-again', 'The server is busy for a moment. Nothing was changed; try again.', { retryAfterSeconds: 2 })
   }
   logger.error({ err: error }, 'A request failed')
-  return new Problem(500, 'unexpected', 'Something failed on the server. What you entered is kept; try again, and tell whoever looks after the server.')
+  return new Problem(
+    500,
+    'unexpected',
+    'Something failed on the server. What you entered is kept; try again, and tell whoever looks after the server.',
+  )
 }
 
 export const unknownEndpoint: RequestHandler = () => {

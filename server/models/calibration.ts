@@ -1,6 +1,6 @@
 import { Model } from 'sequelize'
-import type { InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize'
-import { dayColumn, idColumn, jsonColumn, textColumn, timeColumn } from './columns'
+import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize'
+import { dayColumn, idColumn, jsonColumn, optionalCountColumn, optionalHashColumn, optionalTextColumn, textColumn, timeColumn } from './columns'
 
 export class Calibration extends Model<InferAttributes<Calibration>, InferCreationAttributes<Calibration>> {
   declare id: string
@@ -13,6 +13,11 @@ export class Calibration extends Model<InferAttributes<Calibration>, InferCreati
   declare result: string
   declare details: unknown
   declare createdBy: string
+  /** The certificate's file, when there is one: all four together. */
+  declare fileSha256: CreationOptional<string | null>
+  declare fileType: CreationOptional<string | null>
+  declare fileSize: CreationOptional<number | null>
+  declare fileName: CreationOptional<string | null>
   declare createdAt: Date
 }
 
@@ -29,6 +34,10 @@ export function initCalibration(sequelize: Sequelize): void {
       result: textColumn(),
       details: jsonColumn(),
       createdBy: idColumn(),
+      fileSha256: optionalHashColumn(),
+      fileType: optionalTextColumn(),
+      fileSize: optionalCountColumn(),
+      fileName: optionalTextColumn(),
       createdAt: timeColumn(),
     },
     { sequelize, tableName: 'calibrations' },

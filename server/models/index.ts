@@ -1,5 +1,6 @@
 import type { Sequelize } from 'sequelize'
 import { ActiveTest, initActiveTest } from './active-test'
+import { Attachment, initAttachment } from './attachment'
 import { Calibration, initCalibration } from './calibration'
 import { Instrument, initInstrument } from './instrument'
 import { Ledger, initLedger } from './ledger'
@@ -16,6 +17,7 @@ import { User, initUser } from './user'
 
 export {
   ActiveTest,
+  Attachment,
   Calibration,
   Instrument,
   Ledger,
@@ -34,6 +36,7 @@ export {
 /** Binds every model to one connection. Relations are joined in queries, where they are seen. */
 export function initModels(sequelize: Sequelize): void {
   initActiveTest(sequelize)
+  initAttachment(sequelize)
   initCalibration(sequelize)
   initInstrument(sequelize)
   initLedger(sequelize)

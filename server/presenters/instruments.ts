@@ -14,9 +14,10 @@ export function presentInstrumentWithHistory({ shopId, instrument, calibrations 
   return {
     shopId,
     instrument: presentInstrument(instrument),
-    calibrations: calibrations.map(({ id, calibration, createdAt, createdBy }) => ({
+    calibrations: calibrations.map(({ id, calibration, certificateFile, createdAt, createdBy }) => ({
       id,
       calibration,
+      certificateFile,
       createdAt: createdAt.toISOString(),
       createdBy,
     })),

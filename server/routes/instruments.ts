@@ -1,8 +1,7 @@
 import { Router } from 'express'
 import type { Request } from 'express'
-import { instrumentListQuerySchema, instrumentRequestSchema } from '#shared/api/instruments'
+import { calibrationRequestSchemaFor, instrumentListQuerySchema, instrumentRequestSchema } from '#shared/api/instruments'
 import type { InstrumentResponse } from '#shared/api/instruments'
-import { calibrationSchemaFor } from '#shared/instruments/model'
 import type { AppContext, Work } from '../context'
 import { authenticate } from '../middleware/authenticate'
 import { idParam, parseBody, parseQuery, shopOf } from '../middleware/validate'
@@ -64,7 +63,8 @@ export function instrumentRoutes(context: AppContext): Router {
   router.post('/instruments/:instrumentId/calibrations', async (request, response) => {
     const answer = await on(request, async (work, id) => {
       const instrument = await lockInstrument(work, id)
-      await addCalibration(context.database, work, instrument, parseBody(request, calibrationSchemaFor[instrument.kind]))
+      const { certificateFile, ...calibration } = parseBody(request, calibrationRequestSchemaFor[instrument.kind])
+      await addCalibration(context.database, work, instrument, calibration, certificateFile ?? null)
     })
     response.status(201).json(answer)
   })

@@ -6,13 +6,20 @@ import { personOf } from '../middleware/authenticate'
 import { notFound } from '../problem'
 import { actorIn, membershipOf } from '../services/membership'
 
+/** Reading may be done twice; what these routes write makes its own ids, so that a second run could write it twice. */
+const isReading = (request: Request) => ({ idempotent: request.method === 'GET' || request.method === 'HEAD' })
+
 /** One transaction in a shop that the person belongs to; 404 when not. */
 export function workIn<T>(context: AppContext, request: Request, shopId: string, act: (work: Work) => Promise<T>): Promise<T> {
   const { userId } = personOf(request)
-  return inTransaction(context, async (transaction) => {
-    const actor = await membershipOf({ transaction, userId, shopId })
-    return act({ transaction, actor, now: context.now() })
-  })
+  return inTransaction(
+    context,
+    async (transaction) => {
+      const actor = await membershipOf({ transaction, userId, shopId })
+      return act({ transaction, actor, now: context.now() })
+    },
+    isReading(request),
+  )
 }
 
 /** The same for what is named by its id alone: `shopOf` looks up whose it is. An unknown id and another shop's answer alike. */
@@ -24,10 +31,14 @@ export function workOn<T>(
   act: (work: Work) => Promise<T>,
 ): Promise<T> {
   const { userId } = personOf(request)
-  return inTransaction(context, async (transaction) => {
-    const shopId = await shopOf(transaction)
-    const actor = shopId === undefined ? undefined : await actorIn({ transaction, userId, shopId })
-    if (actor === undefined || actor.role === null) throw notFound(what)
-    return act({ transaction, actor, now: context.now() })
-  })
+  return inTransaction(
+    context,
+    async (transaction) => {
+      const shopId = await shopOf(transaction)
+      const actor = shopId === undefined ? undefined : await actorIn({ transaction, userId, shopId })
+      if (actor === undefined || actor.role === null) throw notFound(what)
+      return act({ transaction, actor, now: context.now() })
+    },
+    isReading(request),
+  )
 }

@@ -1,17 +1,22 @@
 import type { Sequelize, Transaction } from 'sequelize'
 import { v7 as newId } from 'uuid'
+import type { CertificateFile } from '#shared/api/instruments'
 import { calibrationSchema } from '#shared/instruments/model'
 import type { Calibration as CalibrationBody } from '#shared/instruments/model'
+import { attachmentSchema } from '#shared/ledger/envelope'
+import type { Attachment } from '#shared/ledger/envelope'
 import type { Work } from '../context'
 import { recallInstrument } from '../ledger/press'
 import { Calibration, User } from '../models'
 import type { Instrument } from '../models'
 import { conflict, invalid } from '../problem'
+import { absentHashes } from './held-files'
 import { authorize } from './membership'
 
 export interface DatedCalibration {
   id: string
   calibration: CalibrationBody
+  certificateFile: CertificateFile | null
   createdAt: Date
   createdBy: string
 }
@@ -22,6 +27,14 @@ function latestToday(now: Date): string {
 }
 
 const readBody = (calibration: Pick<Calibration, 'details'>): CalibrationBody => calibrationSchema.parse(calibration.details)
+
+type FileColumns = Pick<Calibration, 'fileSha256' | 'fileType' | 'fileSize' | 'fileName'>
+
+/** The file of a calibration's certificate as it was named; null without one. */
+export function certificateFileOf({ fileSha256, fileType, fileSize, fileName }: FileColumns): Attachment | null {
+  if (fileSha256 === null) return null
+  return attachmentSchema.parse({ sha256: fileSha256, type: fileType, size: fileSize, ...(fileName === null ? {} : { name: fileName }) })
+}
 
 /** The latest first: by the day of the comparison, then by when it was entered. */
 const latestFirst: [string, string][] = [
@@ -59,9 +72,17 @@ export async function calibrationsOf(instrument: Pick<Instrument, 'id' | 'shopId
   })
   const users = await User.findAll({ where: { id: rows.map((row) => row.createdBy) }, attributes: ['id', 'name'], raw: true, transaction })
   const names = new Map(users.map((user) => [user.id, user.name]))
+  const files = new Map(rows.map((row) => [row.id, certificateFileOf(row)]))
+  const named = [...files.values()].filter((file) => file !== null)
+  const absent = new Set(await absentHashes(transaction, instrument.shopId, named))
+  const fileOf = (id: string): CertificateFile | null => {
+    const file = files.get(id) ?? null
+    return file && { ...file, present: !absent.has(file.sha256) }
+  }
   return rows.map((row) => ({
     id: row.id,
     calibration: readBody(row),
+    certificateFile: fileOf(row.id),
     createdAt: row.createdAt,
     createdBy: names.get(row.createdBy) ?? '',
   }))
@@ -76,6 +97,7 @@ export async function addCalibration(
   { transaction, actor, now }: Work,
   instrument: Instrument,
   calibration: CalibrationBody,
+  certificateFile: Attachment | null = null,
 ): Promise<void> {
   authorize(actor, 'calibration:write', { shopId: instrument.shopId })
   if (instrument.retiredAt !== null) throw conflict('retired', 'This instrument is retired. Bring it back into use first.')
@@ -93,6 +115,10 @@ export async function addCalibration(
       comparedWith,
       result,
       details: calibration,
+      fileSha256: certificateFile?.sha256 ?? null,
+      fileType: certificateFile?.type ?? null,
+      fileSize: certificateFile?.size ?? null,
+      fileName: certificateFile?.name ?? null,
       createdBy: actor.userId,
       createdAt: now,
     },

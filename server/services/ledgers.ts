@@ -118,7 +118,7 @@ export async function appendTestEntries(
     const locked = await lockTest(writing, userId, testId)
     if (draft.kind === 'opened' || SIGNATURE_KINDS.has(draft.kind)) throw conflict('own-route', 'This is not entered here.')
     parseProofTestDraft(draft)
-    const entry = await appendToTest(writing, locked, draft, clockOff)
+    const entry = await appendToTest(writing, locked, draft, { clockOff })
     count = locked.state.devices[draft.deviceId]
     return entry
   })

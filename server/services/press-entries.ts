@@ -18,11 +18,14 @@ const ACTIONS: Record<string, Action> = {
   withdrawn: 'press:withdraw',
 }
 
+/** What it takes to enter a kind by hand; undefined for what only follows from a proof test. */
+export const pressAction = (kind: string): Action | undefined => ACTIONS[kind]
+
 /** Appends one entry that a person made to a press's ledger, if the person may, in the transaction given. */
 export async function appendPress(writing: Writing, { actor }: Pick<Work, 'actor'>, draft: EntryDraft): Promise<LedgerEntry> {
   const locked = await lockPress(writing, draft.ledgerId)
   if (!locked || locked.head.shopId !== actor.shopId) throw notFound('This press')
-  const action = ACTIONS[draft.kind]
+  const action = pressAction(draft.kind)
   if (!action) throw conflict('not-by-hand', 'This follows from a proof test and is not entered by hand.', ['P10'])
   authorize(actor, action, { shopId: locked.head.shopId })
   if (draft.authorId !== actor.userId) throw forbidden()

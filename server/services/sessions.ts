@@ -7,6 +7,7 @@ import type { AppContext } from '../context'
 import { inTransaction } from '../context'
 import { Membership, Session, Shop, User } from '../models'
 import { Problem, invalid, notSignedIn } from '../problem'
+import { retried } from '../transaction'
 import { comparePassword, hashPassword } from './passwords'
 import { withinLimits } from './sign-in-limits'
 
@@ -55,11 +56,13 @@ export async function resumeSession(context: AppContext, token: string): Promise
   const sessionId = sessionIdIn(context, token)
   if (sessionId === undefined) return undefined
   const now = context.now()
-  const [row] = await context.database.query<Omit<SignedIn, 'sessionId'> & { lastSeenAt: Date }>(
-    `SELECT s.user_id AS userId, u.name AS name, u.email AS email, s.expires_at AS expiresAt, s.last_seen_at AS lastSeenAt
-       FROM sessions s JOIN users u ON u.id = s.user_id
-      WHERE s.id = ? AND s.ended_at IS NULL AND s.expires_at > ?`,
-    { replacements: [sessionId, now], type: QueryTypes.SELECT },
+  const [row] = await retried(() =>
+    context.database.query<Omit<SignedIn, 'sessionId'> & { lastSeenAt: Date }>(
+      `SELECT s.user_id AS userId, u.name AS name, u.email AS email, s.expires_at AS expiresAt, s.last_seen_at AS lastSeenAt
+         FROM sessions s JOIN users u ON u.id = s.user_id
+        WHERE s.id = ? AND s.ended_at IS NULL AND s.expires_at > ?`,
+      { replacements: [sessionId, now], type: QueryTypes.SELECT },
+    ),
   )
   if (row === undefined) return undefined
   if (now.getTime() - row.lastSeenAt.getTime() > seenEveryMilliseconds) {
@@ -104,7 +107,10 @@ export async function signIn(context: AppContext, request: SignInRequest, client
   if (user === undefined) {
     throw new Problem(401, 'wrong-sign-in', 'The e-mail address and the password do not go together. Check both and try again.')
   }
-  return inTransaction(context, (transaction) => startSession({ transaction, now: context.now() }, user, client.userAgent))
+  // A session that nobody was told of is never used, so this may run twice.
+  return inTransaction(context, (transaction) => startSession({ transaction, now: context.now() }, user, client.userAgent), {
+    idempotent: true,
+  })
 }
 
 export async function endSession(context: AppContext, sessionId: string): Promise<void> {
@@ -122,14 +128,15 @@ export async function changePassword(
     throw invalid({ currentPassword: 'This is not your present password.' })
   }
   const passwordHash = await hashPassword(request.newPassword, context.config.bcryptCost)
-  await inTransaction(context, async (transaction) => {
+  const change = async (transaction: Transaction) => {
     const [changed] = await User.update({ passwordHash }, { where: { id: signedIn.userId }, transaction })
     if (changed === 0) throw notSignedIn()
     await Session.update(
       { endedAt: context.now() },
       { where: { userId: signedIn.userId, id: { [Op.ne]: signedIn.sessionId }, endedAt: null }, transaction },
     )
-  })
+  }
+  await inTransaction(context, change, { idempotent: true })
 }
 
 /** The shops this person belongs to now, by name. */

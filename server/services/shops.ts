@@ -48,6 +48,7 @@ export async function openShop(context: AppContext, request: OpenShopRequest, cl
   const owner = await ownerFor(context, request, client)
   const now = context.now()
   try {
+    // Not to be run twice: the second time would find the address taken, or found a second shop.
     return await inTransaction(context, async (transaction) => {
       const user =
         'existing' in owner

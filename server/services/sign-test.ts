@@ -5,6 +5,7 @@ import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
 import { makeSeal } from '#shared/ledger/seal'
 import { PROOF_TEST_VERSION, type Opened } from '#shared/proof-test/entries'
 import { conflict, notFound } from '../problem'
+import { absentHashes } from './held-files'
 import { appendToTest, lockTest } from './test-entries'
 import { SERVER_DEVICE } from '../ledger/press'
 import { readEntry } from '../ledger/read'
@@ -68,7 +69,9 @@ export async function signTest(
     attachments: [],
     overrides: [],
   }
-  const entry = await appendToTest(writing, locked, draft)
+  // Asked in the same transaction: bytes only ever arrive, so that what is here now is here when it commits.
+  const absentFiles = await absentHashes(transaction, head.shopId, state.attachments)
+  const entry = await appendToTest(writing, locked, draft, { absentFiles })
   const seal = makeSeal(
     { kid: key.kid, ledgerId: testId, seq: entry.seq, headHash: entry.hash, sealedAt: now.toISOString() },
     key.secretKey,

@@ -1,7 +1,7 @@
 import type { Action, Actor, Assignment } from '#shared/policy'
 import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
 import type { ProofTestState } from '#shared/proof-test/state'
-import { appendToProofTest, lockProofTest, type LockedProofTest } from '../ledger/proof-test'
+import { appendToProofTest, lockProofTest, type Circumstances, type LockedProofTest } from '../ledger/proof-test'
 import type { Writing } from '../ledger/write'
 import { forbidden, notFound } from '../problem'
 import { actorIn, authorize } from './membership'
@@ -40,10 +40,15 @@ export async function lockTest(writing: Writing, userId: string, testId: string)
 }
 
 /** Appends one entry of a person to a test that is locked, if the person may. */
-export async function appendToTest(writing: Writing, locked: LockedTest, draft: EntryDraft, clockOff?: number): Promise<LedgerEntry> {
+export async function appendToTest(
+  writing: Writing,
+  locked: LockedTest,
+  draft: EntryDraft,
+  circumstances: Circumstances = {},
+): Promise<LedgerEntry> {
   const { head, state, actor } = locked
   const assignment = draft.kind === 'opened' ? undefined : assignmentOf(state)
   authorize(actor, ACTIONS[draft.kind] ?? 'proof-test:append-fact', { shopId: head.shopId, assignment })
   if (draft.authorId !== actor.userId) throw forbidden()
-  return appendToProofTest(writing, locked, draft, clockOff)
+  return appendToProofTest(writing, locked, draft, circumstances)
 }

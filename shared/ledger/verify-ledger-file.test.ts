@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { ledgerFileBytes, ledgerFileOf, PUBLIC_KEY, SECRET_KEY } from '../../tests/factories/ledger-file'
-import { recordedTest, storedEntries, twoLegTest } from '../../tests/factories/recorded-test'
+import { recordedTest, stoppedTest, storedEntries, twoLegTest } from '../../tests/factories/recorded-test'
 import { seededRandom } from '../../tests/reference/seeded-random'
 import { SIGNATURE_KINDS } from '../proof-test/entries'
 import { canonicalText } from './canonical'
@@ -175,16 +175,21 @@ describe('a ledger file', () => {
   it('is not whole after any of a seeded choice of one-byte changes, cuts and insertions', () => {
     const { rectangular } = seededRandom(20_260_915)
     const random = () => rectangular(0.5) + 0.5
-    for (let at = Math.floor(random() * 37); at < bytes.length; at += 700 + Math.floor(random() * 800)) {
-      const flipped = bytes.slice()
+    const small = ledgerFileBytes(ledgerFileOf(stoppedTest()))
+    const kept = ['whole', 'not sealed yet']
+    for (let at = Math.floor(random() * 37); at < small.length; at += 200 + Math.floor(random() * 900)) {
+      const flipped = small.slice()
       flipped[at] = (flipped[at] ?? 0) ^ (1 << Math.floor(random() * 8))
-      const cut = new Uint8Array([...bytes.subarray(0, at), ...bytes.subarray(at + 1)])
-      const added = new Uint8Array([...bytes.subarray(0, at), Math.floor(random() * 256), ...bytes.subarray(at)])
+      const cut = Uint8Array.from(small.filter((_byte, index) => index !== at))
+      const added = new Uint8Array(small.length + 1)
+      added.set(small.subarray(0, at))
+      added.set(small.subarray(at), at + 1)
+      added[at] = Math.floor(random() * 256)
       for (const [how, other] of Object.entries({ flipped, cut, added })) {
-        expect(['whole', 'not sealed yet'], `byte ${at} ${how}`).not.toContain(verifyLedgerFile(other).verdict)
+        expect(kept, `byte ${at} ${how}`).not.toContain(verifyLedgerFile(other).verdict)
       }
     }
-  })
+  }, 60_000)
 
   it('knows the same kinds of signatures as the test’s own ledger', () => {
     expect([...SEALED_KINDS].sort()).toEqual([...SIGNATURE_KINDS].sort())

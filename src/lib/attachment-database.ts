@@ -39,3 +39,14 @@ export function openFiles(name: string, onGone: () => void): Promise<FilesDataba
     terminated: onGone,
   })
 }
+
+const LONGEST_WRITE = 15_000
+
+/** A disk that doesn't answer is a disk that refuses. */
+export function inTime<T>(write: Promise<T>): Promise<T> {
+  let timer: ReturnType<typeof setTimeout> | undefined
+  const late = new Promise<never>((_resolve, reject) => {
+    timer = setTimeout(() => reject(new Error('the storage does not answer')), LONGEST_WRITE)
+  })
+  return Promise.race([write, late]).finally(() => clearTimeout(timer))
+}

@@ -1,7 +1,6 @@
 import type { Attachment } from '#shared/ledger/envelope'
-import { keyOf, openFiles, type FilesDatabase, type KeptFile, type Owner } from './attachment-database'
+import { inTime, keyOf, openFiles, type FilesDatabase, type KeptFile, type Owner } from './attachment-database'
 import type { Prepared } from './attachment-prepare'
-import { inTime } from './outbox-database'
 import { ProblemError } from './problem'
 
 /** What this device keeps for one ledger or calibration. */

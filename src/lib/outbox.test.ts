@@ -176,7 +176,7 @@ describe('the outbox', () => {
     expect(server.kept.map(noted)).toEqual(['mine', 'theirs'])
   })
 
-  it('sets a refused act aside with its reason and gives its number to the entry after it', async () => {
+  it('sets a refused act aside with its reason, and changes no entry after it', async () => {
     const server = new Server()
     server.refuse = 'concluded'
     const box = makeOutbox(server)
@@ -186,12 +186,12 @@ describe('the outbox', () => {
     await box.settled()
     await pendingOf(box)
     expect(server.requests.map(({ entries }) => entries.length)).toEqual([1, 1])
-    expect(server.kept.map((made) => [made.deviceSeq, noted(made)])).toEqual([[1, 'a fact']])
+    expect(server.kept.map((made) => [made.deviceSeq, noted(made)])).toEqual([[2, 'a fact']])
     const [refused] = box.ledger(testId).attention
     expect(refused?.problem.detail).toBe('A joint is not examined.')
     await box.dismiss(testId, refused?.entry.id ?? '')
     expect(box.ledger(testId).attention).toEqual([])
-    expect((await box.enqueue(testId, entry('next'))).deviceSeq).toBe(2)
+    expect((await box.enqueue(testId, entry('next'))).deviceSeq).toBe(3)
   })
 
   it('says loudly that nothing can be kept, and takes nothing in', async () => {

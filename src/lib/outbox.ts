@@ -1,38 +1,44 @@
-import type { IDBPDatabase } from 'idb'
 import { v7 as newId } from 'uuid'
-import { appendResponseSchema, type AppendRequest, type AppendResponse } from '#shared/api/ledger'
+import {
+  appendResponseSchema,
+  entriesResponseSchema,
+  type AppendRequest,
+  type AppendResponse,
+  type EntriesResponse,
+} from '#shared/api/ledger'
 import { sessionResponseSchema } from '#shared/api/session'
 import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
-import { ALWAYS_ALLOWED, PROOF_TEST_ACTS } from '#shared/proof-test/entries'
+import { ALWAYS_ALLOWED } from '#shared/proof-test/entries'
 import { api } from './api-client'
-import { makeEntry, type EntryParts } from './entry'
-import { inTime, openOutbox, type OutboxSchema, type Refused, type Waiting } from './outbox-database'
-import { ProblemError } from './problem'
+import type { NewEntry, Refused, Sent, Waiting } from './outbox-database'
+import { OutboxSender, type SenderState } from './outbox-sender'
+import { OutboxStore } from './outbox-store'
+import { fullJitter } from './retry-delay'
+import { asStorageFault, sayFault, type StorageFault } from './storage-fault'
 import { UnkeptEntries } from './unkept'
 
-export type SenderState =
-  | { is: 'idle' }
-  | { is: 'sending' }
-  /** Nothing answered, or the server was too busy: it is tried again by itself. */
-  | { is: 'waiting' }
-  /** The session ended: nothing is sent until the same person has signed in again. */
-  | { is: 'signed-out' }
-  /** The server would not take the request as a whole. */
-  | { is: 'refused'; says: string }
+export type { NewEntry } from './outbox-database'
+export type { SenderState } from './outbox-sender'
+
+/** What holds for every ledger alike. */
+interface OfTheDevice {
+  sender: SenderState
+  /** Why nothing can be kept on this device; entry is blocked while it stands. */
+  fault: string | null
+  /** Since when entries are kept again after a fault, until the next one is. */
+  backSince: string | null
+}
 
 /** One ledger's part of the outbox, as a screen shows it. */
-export interface LedgerOutbox {
+export interface LedgerOutbox extends OfTheDevice {
   /** False until what this device kept has been read. */
   loaded: boolean
   pending: readonly EntryDraft[]
   attention: readonly Refused[]
-  sender: SenderState
-  /** Why nothing can be kept on this device; entry is blocked while it stands. */
-  fault: string | null
 }
 
 /** Everything that this browser keeps, over all ledgers and people. */
-export interface OutboxSummary {
+export interface OutboxSummary extends OfTheDevice {
   /** False until what this device kept has been read. */
   loaded: boolean
   /** Entries that the server has not answered for. */
@@ -43,75 +49,86 @@ export interface OutboxSummary {
   ledgers: readonly string[]
 }
 
+/** The entries themselves: on this device, refused, and on the server. */
+export interface OutboxContents {
+  waiting: readonly Waiting[]
+  attention: readonly Refused[]
+  sent: readonly Sent[]
+}
+
 export interface OutboxParts {
   databaseName: string
   post: (testId: string, request: AppendRequest) => Promise<AppendResponse>
+  /** What the server has of a test after a number. */
+  read?: (testId: string, after: number) => Promise<EntriesResponse>
   /** The id of whoever is signed in now; throws when nobody is, or nothing answers. */
   whoIsSignedIn: () => Promise<string>
   /** How long to wait before trying again, by how often it has failed (ms). */
-  delay?: (failures: number) => number
+  delay: (failures: number) => number
 }
 
-export type NewEntry = Omit<EntryParts, 'deviceSeq' | 'id'> & { id?: string }
 type KeptListener = (testId: string, entries: readonly LedgerEntry[]) => void
+interface Told {
+  testId: string
+  ledgerId: string
+  kept: LedgerEntry[]
+}
 
-const LOCK = 'quarterload-outbox'
-const MOST_AT_ONCE = 50
 const NOTHING: readonly never[] = []
+const WELL: OfTheDevice = { sender: { is: 'idle' }, fault: null, backSince: null }
+const EMPTY: OutboxSummary = { loaded: false, unsent: 0, attention: 0, ledgers: NOTHING, ...WELL }
 
-const backoff = (failures: number): number => Math.min(30_000, 1000 * 2 ** Math.min(failures, 5))
+const ofTheDevice = ({ sender, fault, backSince }: OfTheDevice): OfTheDevice => ({ sender, fault, backSince })
+const sameState = (a: OfTheDevice, b: OfTheDevice): boolean => JSON.stringify(ofTheDevice(a)) === JSON.stringify(ofTheDevice(b))
 
-/** One sender at a time, over all tabs where the browser can say so. */
-async function alone(work: () => Promise<void>): Promise<void> {
-  if (typeof navigator !== 'undefined' && 'locks' in navigator) await navigator.locks.request(LOCK, work)
-  else await work()
-}
-
-/** An act may be refused; what follows it is sent only once it is answered, so that the numbers stay without a gap. */
-function nextBatch(waiting: readonly Waiting[]): Waiting[] {
-  const act = waiting.findIndex(({ entry }) => PROOF_TEST_ACTS.has(entry.kind))
-  return waiting.slice(0, Math.min(act === -1 ? waiting.length : act + 1, MOST_AT_ONCE))
-}
-
-function byLedger(waiting: readonly Waiting[]): Waiting[][] {
-  const groups = new Map<string, Waiting[]>()
-  for (const one of waiting) groups.set(one.entry.ledgerId, [...(groups.get(one.entry.ledgerId) ?? []), one])
-  return [...groups.values()]
-}
+const FIRST_REOPEN = 500
+const LONGEST_REOPEN = 15_000
 
 /**
  * Keeps entries on this device until the server has them. An entry is written through to the disk before it
- * is shown as kept or sent; it is sent in the order it was made, as often as it takes, and leaves the outbox
- * only after the server's answer has been handed on.
+ * is shown as kept or sent; it is sent in the order it was made, as often as it takes, and waits no more only
+ * after the server's answer has been handed on.
  */
 export class Outbox {
-  private readonly parts: OutboxParts
-  private database: Promise<IDBPDatabase<OutboxSchema>> | null = null
+  private readonly store: OutboxStore
+  private readonly sender: OutboxSender
+  private readonly unkept: UnkeptEntries
   private readonly listeners = new Set<() => void>()
   private readonly keptListeners = new Set<KeptListener>()
   private readonly ledgers = new Map<string, LedgerOutbox>()
   private readonly channel: BroadcastChannel | null
-  private readonly unkept: UnkeptEntries
-  private sender: SenderState = { is: 'idle' }
-  private fault: string | null = null
-  private totals: OutboxSummary = { loaded: false, unsent: 0, attention: 0, ledgers: NOTHING }
   private readonly shownUnkept = new Set<string>()
-  private personId: string | null = null
-  private sending: Promise<void> | null = null
-  private askedAgain = false
-  private failures = 0
-  private timer: ReturnType<typeof setTimeout> | null = null
+  private totals = EMPTY
+  private reopenTimer: ReturnType<typeof setTimeout> | null = null
+  private reopened = 0
+  private closed = false
+  private pruned = false
 
   constructor(parts: OutboxParts) {
-    this.parts = parts
+    this.store = new OutboxStore(parts.databaseName, (fault) => this.fail(fault))
+    this.sender = new OutboxSender({
+      lockName: `${parts.databaseName}-outbox`,
+      store: this.store,
+      post: parts.post,
+      read: parts.read,
+      whoIsSignedIn: parts.whoIsSignedIn,
+      delay: parts.delay,
+      onState: (sender) => this.spread({ sender }),
+      onKept: (testId, kept) => this.handOn(testId, kept),
+      onMoved: async (testId, ledgerId, kept) => {
+        await this.refresh(ledgerId)
+        this.tell({ testId, ledgerId, kept })
+      },
+      onFault: (fault) => this.fail(fault),
+    })
     this.unkept = new UnkeptEntries({
       post: parts.post,
-      delay: parts.delay ?? backoff,
+      delay: parts.delay,
       onKept: (testId, kept) => this.handOn(testId, kept),
       onChange: (ledgerId, says) => this.showUnkept(ledgerId, says),
     })
     this.channel = typeof BroadcastChannel === 'undefined' ? null : new BroadcastChannel(parts.databaseName)
-    this.channel?.addEventListener('message', (event: MessageEvent<{ testId: string; ledgerId: string; kept: LedgerEntry[] }>) => {
+    this.channel?.addEventListener('message', (event: MessageEvent<Told>) => {
       const { testId, ledgerId, kept } = event.data
       if (kept.length > 0) this.handOn(testId, kept)
       void this.refresh(ledgerId)
@@ -128,7 +145,7 @@ export class Outbox {
   ledger = (ledgerId: string): LedgerOutbox => {
     const known = this.ledgers.get(ledgerId)
     if (known) return known
-    const empty: LedgerOutbox = { loaded: false, pending: NOTHING, attention: NOTHING, sender: this.sender, fault: this.fault }
+    const empty: LedgerOutbox = { loaded: false, pending: NOTHING, attention: NOTHING, ...ofTheDevice(this.totals) }
     this.ledgers.set(ledgerId, empty)
     // Not before this has answered: where there is no storage at all, it fails at once.
     queueMicrotask(() => void this.refresh(ledgerId))
@@ -137,12 +154,17 @@ export class Outbox {
 
   /** The same object until something changes; what it says is read when it is first asked for. */
   summary = (): OutboxSummary => {
-    if (!this.totals.loaded && this.fault === null) queueMicrotask(() => void this.count())
+    if (!this.totals.loaded && this.totals.fault === null) queueMicrotask(() => void this.count())
     return this.totals
   }
 
   unsentCount(): number {
     return this.summary().unsent
+  }
+
+  async contents(): Promise<OutboxContents> {
+    const [waiting, attention, sent] = await Promise.all([this.store.waiting(), this.store.attention(), this.store.sent()])
+    return { waiting: [...waiting, ...this.unkept.all()], attention, sent }
   }
 
   /** Called with what the server kept, before it leaves the outbox. */
@@ -153,9 +175,8 @@ export class Outbox {
 
   /** Only this person's entries are sent: a tablet handed over must not re-attribute. */
   sendAs(personId: string | null): void {
-    if (this.personId === personId && this.sender.is !== 'signed-out') return
-    this.personId = personId
-    if (personId !== null) this.sendNow()
+    if (!this.pruned) this.prune()
+    this.sender.sendAs(personId)
   }
 
   /**
@@ -166,109 +187,131 @@ export class Outbox {
    */
   async enqueue(testId: string, parts: NewEntry, knownSeq = 0): Promise<EntryDraft> {
     const id = parts.id ?? newId()
+    const urgent = ALWAYS_ALLOWED.has(parts.kind)
     try {
-      const writing = this.put(testId, { ...parts, id }, knownSeq)
-      const entry = await (ALWAYS_ALLOWED.has(parts.kind) ? inTime(writing) : writing)
+      const entry = await this.store.put(testId, { ...parts, id }, knownSeq)
+      this.spread({ backSince: null })
       await this.refresh(parts.ledgerId)
-      this.tell(testId, parts.ledgerId, [])
-      this.sendNow()
+      this.tell({ testId, ledgerId: parts.ledgerId, kept: [] })
+      if (urgent) this.sendNow()
+      else this.sender.sendSoon()
       return entry
     } catch (failure) {
-      this.fail(failure)
-      if (!ALWAYS_ALLOWED.has(parts.kind)) throw failure
+      this.fail(asStorageFault(failure))
+      if (!urgent) throw failure
       return this.unkept.add(testId, parts)
     }
   }
 
-  /** Somebody has read why an act was refused. */
-  async dismiss(ledgerId: string, entryId: string): Promise<void> {
-    const database = await this.opened()
-    await database.delete('attention', entryId)
+  /** Somebody has read why an act was refused. False for a fact, which has happened: it is sent again, or saved. */
+  async dismiss(ledgerId: string, entryId: string): Promise<boolean> {
+    const gone = await this.store.dismiss(entryId)
     await this.refresh(ledgerId)
+    return gone
+  }
+
+  /** What was refused waits again and is sent as it was made. */
+  async sendAgain(entryId: string): Promise<void> {
+    const again = await this.store.sendAgain(entryId)
+    if (again) await this.refresh(again.entry.ledgerId)
+    this.sendNow()
+  }
+
+  /** Entries that were saved to a file; gives back how many of them this device did not hold. */
+  async takeIn(entries: readonly Waiting[]): Promise<number> {
+    const added = await this.store.takeIn(entries)
+    for (const ledgerId of new Set(added.map(({ entry }) => entry.ledgerId))) await this.refresh(ledgerId)
+    this.sendNow()
+    return added.length
   }
 
   /** Tries at once, instead of when the timer would. */
   sendNow(): void {
-    if (this.timer) clearTimeout(this.timer)
-    this.timer = null
-    this.askedAgain = true
     void this.unkept.send()
-    this.sending ??= this.sendUntilQuiet().finally(() => {
-      this.sending = null
-    })
+    this.sender.sendNow()
+  }
+
+  /** Compares what was sent with what the server has: how far it is sealed, and whether any of it is lacking. */
+  lookAgain(): void {
+    this.sender.lookAgain()
   }
 
   /** Resolves when the sender has nothing to do now. */
-  async settled(): Promise<void> {
-    while (this.sending) await this.sending
+  settled(): Promise<void> {
+    return this.sender.settled()
   }
 
   close(): void {
-    if (this.timer) clearTimeout(this.timer)
+    this.closed = true
+    if (this.reopenTimer) clearTimeout(this.reopenTimer)
+    this.sender.close()
     this.unkept.close()
     this.channel?.close()
-    void this.database?.then((database) => database.close())
+    this.store.close()
   }
 
-  private opened(): Promise<IDBPDatabase<OutboxSchema>> {
-    this.database ??= openOutbox(this.parts.databaseName)
-    return this.database
-  }
-
-  private async put(testId: string, parts: NewEntry & { id: string }, knownSeq: number): Promise<EntryDraft> {
-    const database = await this.opened()
-    const tx = database.transaction(['pending', 'counts'], 'readwrite', { durability: 'strict' })
-    const pending = tx.objectStore('pending')
-    const counts = tx.objectStore('counts')
-    const kept = await pending.index('id').get(parts.id)
-    if (kept) {
-      await tx.done
-      return kept.entry
-    }
-    const deviceSeq = Math.max((await counts.get(parts.ledgerId)) ?? 0, knownSeq) + 1
-    const entry = makeEntry({ ...parts, deviceSeq })
-    await Promise.all([pending.put({ testId, entry }, [parts.ledgerId, deviceSeq]), counts.put(deviceSeq, parts.ledgerId), tx.done])
-    return entry
+  private prune(): void {
+    this.pruned = true
+    this.store.prune(Date.now()).catch((failure: unknown) => this.fail(asStorageFault(failure)))
   }
 
   private async refresh(ledgerId: string): Promise<void> {
+    if (this.closed) return
     try {
-      const database = await this.opened()
-      const tx = database.transaction(['pending', 'attention'])
-      const range = IDBKeyRange.bound([ledgerId, 0], [ledgerId, Number.MAX_SAFE_INTEGER])
-      const waiting = await tx.objectStore('pending').getAll(range)
-      const refused = await tx.objectStore('attention').getAll()
-      await tx.done
+      const [waiting, refused] = await Promise.all([this.store.waitingOf(ledgerId), this.store.attention()])
       this.ledgers.set(ledgerId, {
         loaded: true,
         pending: [...waiting.map(({ entry }) => entry), ...this.unkept.of(ledgerId)],
         attention: refused.filter(({ entry }) => entry.ledgerId === ledgerId),
-        sender: this.sender,
-        fault: this.fault,
+        ...ofTheDevice(this.totals),
       })
       await this.count()
     } catch (failure) {
-      this.fail(failure)
+      this.fail(asStorageFault(failure))
     }
   }
 
   private async count(): Promise<void> {
+    if (this.closed) return
     try {
-      const database = await this.opened()
-      const tx = database.transaction(['pending', 'attention'])
-      const [waiting, refused] = await Promise.all([tx.objectStore('pending').getAll(), tx.objectStore('attention').getAll()])
-      const ledgers = [...new Set([...waiting, ...refused].map(({ entry }) => entry.ledgerId))]
-      this.totals = { loaded: true, unsent: waiting.length, attention: refused.length, ledgers }
+      const [waiting, refused] = await Promise.all([this.store.waiting(), this.store.attention()])
+      const unkept = this.unkept.all()
+      const ledgers = [...new Set([...waiting, ...unkept, ...refused].map(({ entry }) => entry.ledgerId))]
+      this.totals = { ...this.totals, loaded: true, unsent: waiting.length + unkept.length, attention: refused.length, ledgers }
       this.notify()
     } catch (failure) {
-      this.fail(failure)
+      this.fail(asStorageFault(failure))
     }
   }
 
-  private fail(failure: unknown): void {
-    const said = typeof failure === 'object' && failure !== null && 'message' in failure ? String(failure.message).replace(/\.$/, '') : ''
-    this.fault = `This device can’t keep entries${said === '' ? '' : ` (${said})`}. Nothing more is taken in. Under load: stop, and release. Both go straight to the server.`
-    this.spread({ fault: this.fault })
+  private fail(fault: StorageFault): void {
+    if (this.closed) return
+    this.spread({ fault: sayFault(fault), backSince: null })
+    if (this.reopenTimer !== null) return
+    const wait = Math.min(LONGEST_REOPEN, FIRST_REOPEN * 2 ** Math.min(this.reopened, 10))
+    this.reopened += 1
+    this.reopenTimer = setTimeout(() => void this.reopen(), wait)
+  }
+
+  /** Tries the storage afresh; what stood in memory alone is put on the disk when it works again. */
+  private async reopen(): Promise<void> {
+    try {
+      this.store.close()
+      await this.store.probe()
+      const unkept = this.unkept.all()
+      await this.store.takeIn(unkept)
+      this.unkept.handOver(unkept)
+    } catch (failure) {
+      this.reopenTimer = null
+      this.fail(asStorageFault(failure))
+      return
+    }
+    this.reopenTimer = null
+    this.reopened = 0
+    this.spread({ fault: null, backSince: new Date().toISOString() })
+    for (const ledgerId of this.ledgers.keys()) await this.refresh(ledgerId)
+    await this.count()
+    this.sendNow()
   }
 
   private showUnkept(ledgerId: string, says: string | null): void {
@@ -277,16 +320,15 @@ export class Outbox {
     const kept = before.pending.filter((entry) => !this.shownUnkept.has(entry.id))
     for (const entry of unkept) this.shownUnkept.add(entry.id)
     this.ledgers.set(ledgerId, { ...before, pending: [...kept, ...unkept] })
-    if (says !== null) this.say({ is: 'refused', says })
+    this.totals = { ...this.totals, unsent: Math.max(this.totals.unsent, this.unkept.all().length) }
+    if (says !== null) this.spread({ sender: { is: 'refused', says } })
     this.notify()
   }
 
-  private say(sender: SenderState): void {
-    this.sender = sender
-    this.spread({ sender })
-  }
-
-  private spread(change: Partial<LedgerOutbox>): void {
+  private spread(change: Partial<OfTheDevice>): void {
+    // Tried and failed the same way again: no screen needs drawing for it.
+    if (sameState({ ...this.totals, ...change }, this.totals)) return
+    this.totals = { ...this.totals, ...change }
     for (const [ledgerId, ledger] of this.ledgers) this.ledgers.set(ledgerId, { ...ledger, ...change })
     this.notify()
   }
@@ -299,115 +341,20 @@ export class Outbox {
     for (const listener of this.keptListeners) listener(testId, entries)
   }
 
-  private tell(testId: string, ledgerId: string, kept: LedgerEntry[]): void {
-    this.channel?.postMessage({ testId, ledgerId, kept })
-  }
-
-  private tryLater(): void {
-    const delay = (this.parts.delay ?? backoff)(this.failures)
-    this.failures += 1
-    if (this.timer) clearTimeout(this.timer)
-    this.timer = setTimeout(() => this.sendNow(), delay)
-  }
-
-  private async sendUntilQuiet(): Promise<void> {
-    try {
-      while (this.askedAgain) {
-        this.askedAgain = false
-        await alone(() => this.sendAll())
-      }
-      this.failures = 0
-      this.say({ is: 'idle' })
-    } catch (failure) {
-      this.askedAgain = false
-      if (failure instanceof ProblemError && failure.status === 401) this.say({ is: 'signed-out' })
-      else if (failure instanceof ProblemError && failure.status < 500 && ![408, 429].includes(failure.status)) {
-        this.say({ is: 'refused', says: failure.detail })
-      } else this.say({ is: 'waiting' })
-      this.tryLater()
-    }
-  }
-
-  private async sendAll(): Promise<void> {
-    if (this.sender.is === 'signed-out') this.personId = await this.parts.whoIsSignedIn()
-    const database = await this.opened()
-    let failed: unknown
-    for (;;) {
-      const mine = (await database.getAll('pending')).filter(({ entry }) => entry.authorId === this.personId)
-      if (mine.length === 0) return
-      this.say({ is: 'sending' })
-      failed = undefined
-      let moved = false
-      for (const waiting of byLedger(mine)) {
-        try {
-          moved = (await this.sendBatch(nextBatch(waiting))) || moved
-        } catch (failure) {
-          // One ledger that is refused holds up no other; a lost link or an ended session holds up all of them.
-          if (!(failure instanceof ProblemError) || failure.status === 401 || failure.status >= 500) throw failure
-          failed = failure
-        }
-      }
-      if (!moved) throw failed ?? new Error('The server answered, but kept nothing.')
-    }
-  }
-
-  /** True when something left the outbox. */
-  private async sendBatch(batch: readonly Waiting[]): Promise<boolean> {
-    const [first] = batch
-    if (!first) return false
-    const { testId } = first
-    const { ledgerId } = first.entry
-    const answer = await this.parts.post(testId, { sentAt: new Date().toISOString(), entries: batch.map(({ entry }) => entry) })
-    const kept = answer.results.flatMap((result) => (result.outcome === 'kept' ? [result.entry] : []))
-    this.handOn(testId, kept)
-    let left = 0
-    for (const { entry } of batch) {
-      const result = answer.results.find(({ id }) => id === entry.id)
-      if (!result) continue
-      if (result.outcome === 'kept') await this.forget(entry)
-      else await this.setAside({ testId, entry, problem: result.problem, at: new Date().toISOString() })
-      left += 1
-    }
-    await this.refresh(ledgerId)
-    this.tell(testId, ledgerId, kept)
-    return left > 0
-  }
-
-  private async forget(entry: EntryDraft): Promise<void> {
-    const database = await this.opened()
-    await database.delete('pending', [entry.ledgerId, entry.deviceSeq])
-  }
-
-  /** A refused entry never came to be: its number goes to the next one, none of which has been sent yet. */
-  private async setAside(refused: Refused): Promise<void> {
-    const { ledgerId, deviceSeq, id } = refused.entry
-    const database = await this.opened()
-    const tx = database.transaction(['pending', 'attention', 'counts'], 'readwrite', { durability: 'strict' })
-    const pending = tx.objectStore('pending')
-    await tx.objectStore('attention').put(refused, id)
-    await pending.delete([ledgerId, deviceSeq])
-    if (PROOF_TEST_ACTS.has(refused.entry.kind)) {
-      const later = await pending.getAll(IDBKeyRange.bound([ledgerId, deviceSeq + 1], [ledgerId, Number.MAX_SAFE_INTEGER]))
-      for (const waiting of later) {
-        const entry = { ...waiting.entry, deviceSeq: waiting.entry.deviceSeq - 1 }
-        await pending.delete([ledgerId, waiting.entry.deviceSeq])
-        await pending.put({ ...waiting, entry }, [ledgerId, entry.deviceSeq])
-      }
-      const count = await tx.objectStore('counts').get(ledgerId)
-      if (count !== undefined) await tx.objectStore('counts').put(count - 1, ledgerId)
-    }
-    await tx.done
+  private tell(told: Told): void {
+    if (!this.closed) this.channel?.postMessage(told)
   }
 }
 
 const LONGEST_WAIT = 20_000
 
+const path = (testId: string) => `/api/proof-tests/${encodeURIComponent(testId)}/entries` as const
+
 /** The outbox of this browser. */
 export const outbox = new Outbox({
   databaseName: 'quarterload',
-  post: (testId, request) =>
-    api.send('POST', appendResponseSchema, `/api/proof-tests/${encodeURIComponent(testId)}/entries`, request, {
-      signal: AbortSignal.timeout(LONGEST_WAIT),
-    }),
+  post: (testId, request) => api.send('POST', appendResponseSchema, path(testId), request, { signal: AbortSignal.timeout(LONGEST_WAIT) }),
+  read: (testId, after) => api.get(entriesResponseSchema, path(testId), { query: { after }, signal: AbortSignal.timeout(LONGEST_WAIT) }),
   whoIsSignedIn: async () => (await api.get(sessionResponseSchema, '/api/session')).user.id,
+  delay: (failures) => fullJitter(failures, Math.random),
 })

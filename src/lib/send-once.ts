@@ -9,7 +9,8 @@ const sameThing = (entry: EntryDraft, parts: EntryParts): boolean =>
   entry.ledgerId === parts.ledgerId &&
   entry.kind === parts.kind &&
   entry.authorId === parts.authorId &&
-  JSON.stringify(entry.payload) === JSON.stringify(parts.payload)
+  JSON.stringify(entry.payload) === JSON.stringify(parts.payload) &&
+  JSON.stringify(entry.attachments) === JSON.stringify(parts.attachments ?? [])
 
 function read(slot: string): EntryDraft[] {
   try {

@@ -2,12 +2,8 @@ import { v7 as newId } from 'uuid'
 import type { AppendRequest, AppendResponse } from '#shared/api/ledger'
 import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
 import { makeEntry, type EntryParts } from './entry'
+import type { Waiting } from './outbox-database'
 import { ProblemError } from './problem'
-
-interface Unkept {
-  testId: string
-  entry: EntryDraft
-}
 
 interface UnkeptParts {
   post: (testId: string, request: AppendRequest) => Promise<AppendResponse>
@@ -19,8 +15,7 @@ interface UnkeptParts {
 }
 
 /** Whether trying the same again may help: no link, a busy server, a session that somebody can renew. */
-const mayPass = (failure: unknown): boolean =>
-  !(failure instanceof ProblemError) || failure.status >= 500 || [401, 408, 429].includes(failure.status)
+const mayPass = ({ status }: ProblemError): boolean => status >= 500 || [401, 408, 429].includes(status)
 
 /**
  * Stops and releases of a device that can't keep entries: rule R1 lets nothing stand in their way. They stand in the
@@ -31,7 +26,7 @@ export class UnkeptEntries {
   private readonly parts: UnkeptParts
   private readonly deviceId = newId()
   private readonly counts = new Map<string, number>()
-  private waiting: readonly Unkept[] = []
+  private waiting: readonly Waiting[] = []
   private sending = false
   private failures = 0
   private timer: ReturnType<typeof setTimeout> | null = null
@@ -42,6 +37,16 @@ export class UnkeptEntries {
 
   of(ledgerId: string): EntryDraft[] {
     return this.waiting.flatMap(({ entry }) => (entry.ledgerId === ledgerId ? [entry] : []))
+  }
+
+  all(): readonly Waiting[] {
+    return this.waiting
+  }
+
+  /** The disk has these now: they are sent from there. */
+  handOver(taken: readonly Waiting[]): void {
+    this.waiting = this.waiting.filter((one) => !taken.includes(one))
+    for (const ledgerId of new Set(taken.map(({ entry }) => entry.ledgerId))) this.parts.onChange(ledgerId, null)
   }
 
   add(testId: string, parts: Omit<EntryParts, 'id' | 'deviceSeq'>): EntryDraft {
@@ -59,37 +64,35 @@ export class UnkeptEntries {
     if (this.sending) return
     this.sending = true
     if (this.timer) clearTimeout(this.timer)
-    try {
-      for (let next = this.waiting[0]; next; next = this.waiting[0]) await this.sendOne(next)
+    this.timer = null
+    for (const one of this.waiting) await this.sendOne(one)
+    this.sending = false
+    if (this.waiting.length === 0) {
       this.failures = 0
-    } catch {
-      this.timer = setTimeout(() => void this.send(), this.parts.delay(this.failures))
-      this.failures += 1
-    } finally {
-      this.sending = false
+      return
     }
+    this.timer = setTimeout(() => void this.send(), this.parts.delay(this.failures))
+    this.failures += 1
   }
 
   close(): void {
     if (this.timer) clearTimeout(this.timer)
   }
 
-  private async sendOne(one: Unkept): Promise<void> {
+  /** A stop has happened: whatever the server answers, it stays until it is kept. */
+  private async sendOne(one: Waiting): Promise<void> {
     const { testId, entry } = one
     let says: string | null = null
     try {
       const { results } = await this.parts.post(testId, { sentAt: new Date().toISOString(), entries: [entry] })
-      this.parts.onKept(
-        testId,
-        results.flatMap((result) => (result.outcome === 'kept' ? [result.entry] : [])),
-      )
+      const kept = results.flatMap((result) => (result.outcome === 'kept' ? [result.entry] : []))
+      this.parts.onKept(testId, kept)
+      if (kept.length > 0) this.waiting = this.waiting.filter((candidate) => candidate !== one)
       const refused = results.find((result) => result.outcome === 'refused')
       says = refused?.outcome === 'refused' ? refused.problem.detail : null
     } catch (failure) {
-      if (mayPass(failure)) throw failure
-      says = failure instanceof ProblemError ? failure.detail : null
+      says = failure instanceof ProblemError && !mayPass(failure) ? failure.detail : null
     }
-    this.waiting = this.waiting.filter((candidate) => candidate !== one)
     this.parts.onChange(entry.ledgerId, says)
   }
 }

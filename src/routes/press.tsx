@@ -12,5 +12,5 @@ export function Component() {
     if (press.error) throw press.error
     return <SkeletonPage />
   }
-  return <PressPage key={pressId} state={press.data.state} people={press.data.people} />
+  return <PressPage key={pressId} state={press.data.state} people={press.data.people} photos={press.data.photos} />
 }

@@ -11,6 +11,7 @@ import { CORE_VERSION, evaluateTest, freezeEvaluation } from '#shared/proof-test
 import { stageTarget } from '#shared/proof-test/force'
 import { nextStep, type Step } from '#shared/proof-test/steps'
 import type { ProofTestState } from '#shared/proof-test/state'
+import { answered } from './client'
 import { calibration, enterInstrument, gauge, indicator } from './instruments'
 import { openStaffedShop, type SignedInPerson } from './people'
 import { openedPayload } from './test-press'
@@ -32,6 +33,11 @@ export class Device {
   mark(afterSeconds = 0): Mark {
     this.elapsed += afterSeconds * 1000
     return { at: new Date().toISOString(), bootId: this.bootId, monotonicMs: this.elapsed }
+  }
+
+  /** Where this device's clock stands: marks move it on. */
+  get clock(): Pick<EntryDraft, 'bootId' | 'monotonicMs'> {
+    return { bootId: this.bootId, monotonicMs: this.elapsed }
   }
 
   draft(draft: { kind: string; payload: object }, overrides: Override[] = []): EntryDraft {
@@ -56,7 +62,8 @@ export class Device {
 }
 
 export async function post(person: SignedInPerson, path: string, entries: readonly EntryDraft[], status = 200): Promise<AppendResponse> {
-  const response = await person.client.post(path, { sentAt: new Date().toISOString(), entries }).expect(status)
+  const response = await answered(() => person.client.post(path, { sentAt: new Date().toISOString(), entries }))
+  if (response.status !== status) throw new Error(`${path} answered ${response.status}, not ${status}: ${response.text}`)
   return appendResponseSchema.parse(response.body)
 }
 
@@ -167,7 +174,8 @@ export class ApiRun {
   }
 
   async refresh(): Promise<void> {
-    const response = await this.staff.lead.client.get(this.path).expect(200)
+    const response = await answered(() => this.staff.lead.client.get(this.path))
+    if (response.status !== 200) throw new Error(`${this.path} answered ${response.status}: ${response.text}`)
     this.state = foldProofTest(this.id, entriesResponseSchema.parse(response.body).entries)
   }
 
@@ -196,7 +204,7 @@ export class ApiRun {
   }
 
   /** The drafts that a lead and a witness would make for a step. */
-  private draftsFor(step: Step, frame: Frame): [Device, ProofTestDraft][] {
+  draftsFor(step: Step, frame: Frame = spring): [Device, ProofTestDraft][] {
     const { lead, witness } = this
     const { opened } = this.state
     if (!opened) throw new Error('The test is open.')

@@ -106,6 +106,8 @@ export function leaveTotals(part: string, totals: Totals): void {
 export function readTotals(directory = TALLIES): Map<string, Totals> {
   const files = readdirSync(directory).filter((file) => file.endsWith('.json'))
   return new Map(
-    files.sort().map((file) => [file.replace(/\.json$/, ''), totalsSchema.parse(JSON.parse(readFileSync(path.join(directory, file), 'utf8')))]),
+    files
+      .sort()
+      .map((file) => [file.replace(/\.json$/, ''), totalsSchema.parse(JSON.parse(readFileSync(path.join(directory, file), 'utf8')))]),
   )
 }

@@ -8,6 +8,7 @@ import { readConfig } from '#server/config'
 import type { AppContext } from '#server/context'
 import { connect } from '#server/database/connection'
 import { initModels } from '#server/models/index'
+import { DiskStorage } from '#server/storage/disk'
 
 export interface TestServer {
   app: Express
@@ -35,6 +36,7 @@ export function openTestServer(databaseUrl: string): TestServer {
       TRUST_PROXY: '1',
     }),
     database: connect(databaseUrl, { poolSize: 8 }),
+    storage: new DiskStorage(path.join(directory, 'attachments')),
     sessionSecret: 'for tests only',
     logger: pino({ level: 'error' }, { write: (line) => void loggedErrors.push(line) }),
     now: () => new Date(Date.now() + offset),

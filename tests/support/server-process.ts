@@ -21,7 +21,9 @@ function ended(child: ChildProcess): Promise<number | null> {
 }
 
 /** The server as `npm start` runs it, on a free port unless PORT is given. Resolves once it has printed its address. */
-export async function startServer(environment: Record<string, string>): Promise<ServerProcess> {
+export async function startServer(environment: Record<string, string>, spawned?: (child: ChildProcess) => void): Promise<ServerProcess> {
+  // The tests' shared database gives durability up for speed; a server says so at its start and is told that this is meant.
+  const relaxed = (environment['DATABASE_URL'] ?? '') === '' ? {} : { NODE_ENV: 'test', RELAXED_DURABILITY: '1' }
   const child = spawn(process.execPath, ['--import', 'tsx', 'server/index.ts'], {
     cwd: projectRoot,
     env: {
@@ -32,10 +34,12 @@ export async function startServer(environment: Record<string, string>): Promise<
       PUBLIC_URL: '',
       HOST: '127.0.0.1',
       PORT: '0',
+      ...relaxed,
       ...environment,
     },
     stdio: ['ignore', 'pipe', 'pipe'],
   })
+  spawned?.(child)
   let printed = ''
   const address = await new Promise<string>((resolve, reject) => {
     const tooLate = setTimeout(() => {

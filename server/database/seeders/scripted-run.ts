@@ -151,7 +151,7 @@ export class ScriptedRun {
     const entry = this.tablets.draft({ personId: by, at, ...draft, v: PROOF_TEST_VERSION, basedOnSeq: this.current.headSeq })
     const writing = writingAt(this.desk, at + 190 + ((this.current.entryCount * 137) % 430))
     const locked = await lockTest(writing, by, this.id)
-    const written = await appendToTest(writing, locked, parseProofTestDraft(entry), 0)
+    const written = await appendToTest(writing, locked, parseProofTestDraft(entry), { clockOff: 0 })
     this.current = locked.state
     return written
   }

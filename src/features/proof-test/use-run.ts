@@ -1,25 +1,28 @@
 import { useCallback, useEffect, useMemo, useRef, useState, useSyncExternalStore } from 'react'
 import { useQuery, useQueryClient } from '@tanstack/react-query'
 import { v7 as newId } from 'uuid'
-import type { LedgerEntry, Override } from '#shared/ledger/envelope'
+import type { Attachment, LedgerEntry, Override } from '#shared/ledger/envelope'
 import type { Decision, Finding } from '#shared/ledger/rules'
 import { decideProofTest } from '#shared/proof-test/decide'
 import { ALWAYS_ALLOWED, type Mark, type ProofTestKind, type ProofTestPayload } from '#shared/proof-test/entries'
 import { evaluateClimb, type ClimbEvaluation } from '#shared/proof-test/evaluate-climb'
 import type { ProofTestState } from '#shared/proof-test/state'
 import { nextStep, type Step } from '#shared/proof-test/steps'
+import { useFiles, type Files } from '../../lib/attachment-held'
+import { placedIn, type Placed } from '../../lib/attachment-places'
 import { bootId, deviceId, monotonicMs } from '../../lib/entry'
 import { useUser } from '../../lib/here'
 import { outbox, type LedgerOutbox } from '../../lib/outbox'
 import type { Refused } from '../../lib/outbox-database'
 import { Disconnected, isSignedOut } from '../../lib/problem'
-import { addKept, entriesQuery, type KnownLedger } from './api/get-entries'
+import { useLive } from '../../lib/use-live'
+import { addKept, entriesKey, entriesQuery, type KnownLedger } from './api/get-entries'
 import { irregularUnderLoad, LedgerFold } from './ledger-view'
 
 export type Part = 'lead' | 'pump hand' | 'witness'
 
-/** What a press of a button would write. */
-export type Draft = { [K in ProofTestKind]: { kind: K; payload: ProofTestPayload<K> } }[ProofTestKind]
+/** What a press of a button would write, and the photos that go with it. */
+export type Draft = { [K in ProofTestKind]: { kind: K; payload: ProofTestPayload<K>; attachments?: Attachment[] } }[ProofTestKind]
 
 /** Something that may be written only with a reason: the rules that ask, and what was to be written. */
 export interface Asking {
@@ -41,6 +44,9 @@ export interface Run {
   step: Step
   entries: readonly LedgerEntry[]
   people: Readonly<Record<string, string>>
+  /** Photos and documents that entries name, and where their bytes are. */
+  photos: readonly Placed[]
+  files: Files
   /** The climb that is under way, or was last. */
   evaluation: ClimbEvaluation | null
   /** Rules of interlocks that were gone against under this load; then only stop and release are offered. */
@@ -77,6 +83,7 @@ function useBox(ledgerId: string): LedgerOutbox {
 function useLedger(testId: string) {
   const client = useQueryClient()
   const query = useQuery(entriesQuery(testId, client))
+  useLive([testId], entriesKey(testId))
   const user = useUser()
   useEffect(() => outbox.onKept((id, kept) => addKept(client, id, kept)), [client])
   useEffect(() => outbox.sendAs(user.id), [user.id])
@@ -157,6 +164,8 @@ export function useRun(testId: string): RunLoad {
   const step = useMemo(() => nextStep(state), [state])
   const evaluation = useMemo(() => (state.position ? evaluateClimb(state, state.position.leg, state.position.climb) : null), [state])
   const irregular = useMemo(() => irregularUnderLoad(state, entries), [state, entries])
+  const photos = useMemo(() => placedIn(entries), [entries])
+  const files = useFiles('proof-tests', testId, photos.length)
   if (!query.data || !box.loaded) {
     if (query.data === undefined && query.error) return { is: 'failed', error: query.error }
     if (box.fault === null || query.data === undefined) return { is: 'loading' }
@@ -170,6 +179,8 @@ export function useRun(testId: string): RunLoad {
     step,
     entries,
     people: known.people,
+    photos,
+    files,
     evaluation,
     irregular,
     connection: {

@@ -1,21 +1,31 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query'
 import { appendResponseSchema } from '#shared/api/ledger'
+import type { Attachment } from '#shared/ledger/envelope'
 import { PRESS_VERSION, type PressDraft } from '#shared/press/entries'
 import { api } from '../../../lib/api-client'
+import { files } from '../../../lib/attachments'
 import { useUser } from '../../../lib/here'
 import { sendOnce } from '../../../lib/send-once'
 import { pressQuery } from './get-press'
+
+/** What somebody did to a press, and the photos of it. */
+export type PressWriting = PressDraft & { attachments?: Attachment[] }
 
 /** Adds to a press's ledger what somebody did to it, in the order given. `form` names what is being filled in. */
 export function useAppendToPress(pressId: string, headSeq: number, form: string) {
   const client = useQueryClient()
   const user = useUser()
   return useMutation({
-    mutationFn: (drafts: readonly PressDraft[]) =>
+    mutationFn: (drafts: readonly PressWriting[]) =>
       sendOnce(
         `${pressId}.${form}`,
         drafts.map((draft) => ({ ledgerId: pressId, ...draft, v: PRESS_VERSION, authorId: user.id, basedOnSeq: headSeq })),
         (request) => api.send('POST', appendResponseSchema, `/api/presses/${encodeURIComponent(pressId)}/entries`, request),
+      ),
+    onSuccess: (_answer, drafts) =>
+      files.named(
+        `ledger:${pressId}`,
+        drafts.flatMap(({ attachments = [] }) => attachments.map(({ sha256 }) => sha256)),
       ),
     onSettled: () =>
       Promise.all([

@@ -3,6 +3,7 @@ import { entriesResponseSchema } from '#shared/api/ledger'
 import { pressResponseSchema } from '#shared/api/presses'
 import { foldPress } from '#shared/press/apply'
 import { api } from '../../../lib/api-client'
+import { placedIn } from '../../../lib/attachment-places'
 
 const addressOf = (id: string): `/api/presses/${string}` => `/api/presses/${encodeURIComponent(id)}`
 
@@ -12,7 +13,8 @@ async function fetchPress(id: string, signal?: AbortSignal) {
     api.get(pressResponseSchema, addressOf(id), { signal }),
     api.get(entriesResponseSchema, `${addressOf(id)}/entries`, { signal }),
   ])
-  return { shopId: row.shopId, row: row.press, state: foldPress(id, ledger.entries), people: ledger.people }
+  const state = foldPress(id, ledger.entries)
+  return { shopId: row.shopId, row: row.press, state, people: ledger.people, photos: placedIn(ledger.entries) }
 }
 
 export const pressQuery = (id: string) =>

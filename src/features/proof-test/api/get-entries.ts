@@ -2,6 +2,7 @@ import { queryOptions, type QueryClient } from '@tanstack/react-query'
 import { entriesResponseSchema } from '#shared/api/ledger'
 import type { LedgerEntry } from '#shared/ledger/envelope'
 import { api } from '../../../lib/api-client'
+import { askAgainAfter } from '../../../lib/use-live'
 import { mergeEntries, wholeUpTo } from '../ledger-view'
 
 /** Everything that the server has sent of one test's ledger so far. */
@@ -14,12 +15,13 @@ export interface KnownLedger {
   sealedSeq: number
 }
 
+/** Where no stream of the server tells of it. */
 const POLL = 1000
 const LONGEST_WAIT = 8000
 
 export const entriesKey = (testId: string) => ['proof-test', testId, 'entries'] as const
 
-/** Asks for what came after what is known, every second, and keeps what it has while nothing answers. */
+/** Asks for what came after what is known, every second where no stream tells, and keeps what it has while nothing answers. */
 export const entriesQuery = (testId: string, client: QueryClient) =>
   queryOptions({
     queryKey: entriesKey(testId),
@@ -37,7 +39,7 @@ export const entriesQuery = (testId: string, client: QueryClient) =>
       return { ledgerId: answer.ledgerId, entries, people: { ...latest?.people, ...answer.people }, sealedSeq }
     },
     structuralSharing: false,
-    refetchInterval: POLL,
+    refetchInterval: () => askAgainAfter([testId], POLL),
     refetchIntervalInBackground: true,
     staleTime: 0,
     retry: false,

@@ -17,6 +17,7 @@ import { rowsSoFar } from '../rows-so-far'
 import { setPercent } from '../../../components/typeset'
 import { capital } from '../../../lib/words'
 import { ConfirmLoadPath } from '../run/confirm-load-path'
+import { JointPhotos } from '../run/entry-photos'
 import { Into } from '../run/slots'
 import { useElapsed } from '../use-elapsed'
 import type { Run } from '../use-run'
@@ -107,15 +108,18 @@ function Joints({ run, occasion }: { run: Run; occasion: Occasion }): ReactEleme
   return (
     <ul aria-label="Joints of the load path" className="mt-4 border-t border-hairline">
       {run.state.joints.map((joint) => (
-        <li key={joint.joint.id} className="flex min-h-14 items-center gap-3 border-b border-hairline">
-          <JointBalloon number={joint.joint.number} state={jointMark(joint, occasion)} size={36} decorative />
-          <span>
-            <span className="block text-16 leading-[21px] font-semibold">
-              <span className="sr-only">Joint {joint.joint.number}, </span>
-              {joint.joint.name}
+        <li key={joint.joint.id} className="border-b border-hairline">
+          <div className="flex min-h-14 items-center gap-3">
+            <JointBalloon number={joint.joint.number} state={jointMark(joint, occasion)} size={36} decorative />
+            <span>
+              <span className="block text-16 leading-[21px] font-semibold">
+                <span className="sr-only">Joint {joint.joint.number}, </span>
+                {joint.joint.name}
+              </span>
+              <span className="block font-condensed text-16 leading-[20px] text-graphite">{jointSays(joint, occasion)}</span>
             </span>
-            <span className="block font-condensed text-16 leading-[20px] text-graphite">{jointSays(joint, occasion)}</span>
-          </span>
+          </div>
+          <JointPhotos run={run} jointId={joint.joint.id} number={joint.joint.number} className="mb-3" />
         </li>
       ))}
     </ul>

@@ -1,4 +1,5 @@
 import { useState, type ReactElement } from 'react'
+import type { Attachment } from '#shared/ledger/envelope'
 import { EXAMINATION_METHODS, type ExaminationMethod } from '#shared/press/model'
 import type { JointState } from '#shared/proof-test/state'
 import { Button } from '../../../components/button'
@@ -11,6 +12,7 @@ import { capital } from '../../../lib/words'
 import { useDraft } from '../drafts'
 import { jointMark, jointSays, type Occasion } from '../joint-words'
 import type { Run } from '../use-run'
+import { EntryPhotos, JointPhotos, photosToEnter } from './entry-photos'
 import { Into } from './slots'
 
 interface JointPanelProps {
@@ -24,9 +26,10 @@ interface Looked {
   method: ExaminationMethod | ''
   remark: string
   cold: boolean
+  photos: Attachment[]
 }
 
-const LOOKED: Looked = { method: '', remark: '', cold: false }
+const LOOKED: Looked = { method: '', remark: '', cold: false, photos: [] }
 
 /** One joint being examined: how, what was found, and what to say about it. */
 export function JointPanel({ run, joint, occasion, onDone }: JointPanelProps): ReactElement {
@@ -42,7 +45,7 @@ export function JointPanel({ run, joint, occasion, onDone }: JointPanelProps): R
     const needsCold = weld && occasion === 'before load' && result === 'accepted'
     if (looked.method === '' || (needsCold && !looked.cold)) return
     const payload = { occasion, jointId: id, method: looked.method, result, remark: looked.remark.trim(), cold: looked.cold }
-    run.record({ kind: 'joint-examined', payload })
+    run.record({ kind: 'joint-examined', payload, attachments: photosToEnter(run, looked.photos) })
     onDone()
   }
   return (
@@ -89,6 +92,8 @@ export function JointPanel({ run, joint, occasion, onDone }: JointPanelProps): R
           Joint {number} is rejected
         </Button>
       </div>
+      <EntryPhotos className="mt-3" run={run} chosen={looked.photos} onChange={(photos) => change({ photos })} />
+      <JointPhotos run={run} jointId={id} number={number} />
       <Into slot="action">
         <ActionPlate
           title={`Joint ${number} is accepted`}

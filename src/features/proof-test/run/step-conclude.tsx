@@ -13,6 +13,7 @@ import { capital } from '../../../lib/words'
 import { useDraft } from '../drafts'
 import type { Draft } from '../use-run'
 import { verdictRows } from '../verdict-model'
+import { AfterStop } from './after-stop'
 import { BenchScroll, HeadBand } from './head-band'
 import { Into } from './slots'
 import type { StepProps } from './step-props'
@@ -90,6 +91,7 @@ export function ConcludeStep({ run, opened, step }: StepProps<'conclude'>): Reac
         <div className="mt-3">
           <VerdictTable caption="The whole test" rows={verdictRows(evaluation.criteria)} />
         </div>
+        <AfterStop run={run} />
         <RadioRow
           className="mt-4"
           name="conclusion"

@@ -1,4 +1,5 @@
 import type { ReactElement } from 'react'
+import type { Attachment } from '#shared/ledger/envelope'
 import type { JointState } from '#shared/proof-test/state'
 import { JointBalloon, Mark } from '../../../components/marks'
 import { ActionPlate } from '../../../components/run/plates'
@@ -6,6 +7,7 @@ import { useDraft } from '../drafts'
 import { examinationOf, jointMark, jointSays, madeUpWord, needsWork, toExamineAfter, workSentence, type Occasion } from '../joint-words'
 import type { Run } from '../use-run'
 import { ConfirmLoadPath } from './confirm-load-path'
+import { EntryPhotos, JointPhotos, photosToEnter } from './entry-photos'
 import { BenchScroll, HeadBand } from './head-band'
 import { JointPanel } from './joint-panel'
 import { Into } from './slots'
@@ -58,10 +60,13 @@ function JointList({ joints, occasion, chosen, onChoose }: JointListProps): Reac
 
 function Work({ run, joint, occasion }: { run: Run; joint: JointState; occasion: Occasion }): ReactElement {
   const { title, body } = workSentence(joint, run.state.joints)
+  const { id, number } = joint.joint
+  const [{ photos }, change] = useDraft<{ photos: Attachment[] }>(`${run.testId}.worked.${id}`, { photos: [] })
   const finish = (): void =>
     run.record({
       kind: 'joint-worked',
-      payload: { jointId: joint.joint.id, makeUp: 'finished', how: '', workedAt: new Date().toISOString() },
+      payload: { jointId: id, makeUp: 'finished', how: '', workedAt: new Date().toISOString() },
+      attachments: photosToEnter(run, photos),
     })
   return (
     <>
@@ -79,6 +84,8 @@ function Work({ run, joint, occasion }: { run: Run; joint: JointState; occasion:
           )}
         </div>
       </div>
+      <EntryPhotos className="mt-3" run={run} label={`Photos of the work on joint ${number}`} chosen={photos} onChange={(chosen) => change({ photos: chosen })} />
+      <JointPhotos run={run} jointId={id} number={number} />
       <Into slot="action">
         <ActionPlate title={`Joint ${joint.joint.number} is ${madeUpWord(joint)}`} note={`then examine ${toExamineAfter(run.state.joints, joint)}`} onPress={finish} focusHint />
       </Into>

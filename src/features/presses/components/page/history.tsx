@@ -1,7 +1,10 @@
 import type { PressEvent } from '#shared/press/state'
+import { AttachmentStrip } from '../../../../components/attachments/attachment-strip'
 import { TextLink } from '../../../../components/button'
 import { Mark } from '../../../../components/marks'
-import { shortDate } from '../../../../lib/dates'
+import type { Files } from '../../../../lib/attachment-held'
+import type { Placed } from '../../../../lib/attachment-places'
+import { dateAndTime, shortDate } from '../../../../lib/dates'
 import { paths } from '../../../../paths'
 
 const MARKS = { within: 'within', stop: 'stop', 'under-way': 'under-way' } as const
@@ -15,10 +18,15 @@ function Dot({ event }: { event: PressEvent }) {
   )
 }
 
-type HistoryProps = { events: readonly PressEvent[]; people: Readonly<Record<string, string>> }
+type HistoryProps = {
+  events: readonly (PressEvent & { seqs: readonly number[] })[]
+  people: Readonly<Record<string, string>>
+  photos: readonly Placed[]
+  files: Files
+}
 
 /** What happened to the press, the latest first, on one line of time. */
-export function History({ events, people }: HistoryProps) {
+export function History({ events, people, photos, files }: HistoryProps) {
   return (
     <ol className="relative before:absolute before:top-2 before:bottom-2 before:left-[10px] before:w-px before:bg-rule">
       {[...events].reverse().map((event) => (
@@ -32,6 +40,17 @@ export function History({ events, people }: HistoryProps) {
               {shortDate(event.at)}
               {people[event.authorId] !== undefined && `, ${people[event.authorId]}`}
             </p>
+            <AttachmentStrip
+              className="mt-2"
+              files={files}
+              shown={photos
+                .filter(({ seq }) => event.seqs.includes(seq))
+                .map(({ attachment, at, by }) => ({
+                  attachment,
+                  place: event.text,
+                  note: [people[by], dateAndTime(at)].filter(Boolean).join(', '),
+                }))}
+            />
           </div>
         </li>
       ))}
@@ -40,8 +59,8 @@ export function History({ events, people }: HistoryProps) {
 }
 
 /** Examinations of one test, one after the other, are one thing that happened. */
-export function gathered(events: readonly PressEvent[]): PressEvent[] {
-  const told: (PressEvent & { count: number })[] = []
+export function gathered(events: readonly PressEvent[]): (PressEvent & { seqs: readonly number[] })[] {
+  const told: (PressEvent & { seqs: number[] })[] = []
   for (const event of events) {
     const last = told.at(-1)
     const same =
@@ -51,10 +70,10 @@ export function gathered(events: readonly PressEvent[]): PressEvent[] {
       last.mark === 'plain' &&
       last.proofTestId === event.proofTestId
     if (last && same) {
-      last.count += 1
-      last.text = `${last.count} joints examined and accepted`
+      last.seqs.push(event.seq)
+      last.text = `${last.seqs.length} joints examined and accepted`
       last.at = event.at
-    } else told.push({ ...event, count: 1 })
+    } else told.push({ ...event, seqs: [event.seq] })
   }
   return told
 }

@@ -2,19 +2,22 @@ import { zodResolver } from '@hookform/resolvers/zod'
 import { useState } from 'react'
 import { useForm } from 'react-hook-form'
 import { z } from 'zod'
-import { PRESS_PAYLOADS, type PressDraft } from '#shared/press/entries'
+import type { Attachment } from '#shared/ledger/envelope'
+import { PRESS_PAYLOADS } from '#shared/press/entries'
 import { nameJoints, neighboursOf } from '#shared/press/joints'
 import type { PressJoint } from '#shared/press/state'
+import { PhotoField } from '../../../../components/attachments/photo-field'
 import { Button } from '../../../../components/button'
 import { TextField } from '../../../../components/field'
 import { Form, FormActions, FormError } from '../../../../components/form'
 import { RadioRow } from '../../../../components/radio-row'
 import { SelectField } from '../../../../components/select-field'
 import { useProblemFields } from '../../../../lib/use-problem-fields'
+import type { PressWriting } from '../../api/append-to-press'
 import { makeUpChoices, methodChoices } from '../words'
 
-type Send = (drafts: PressDraft[], answers: { onSuccess: () => void; onError: (error: unknown) => void }) => void
-type ActionProps = { joint: PressJoint; joints: readonly PressJoint[]; send: Send; busy: boolean; onDone: () => void }
+type Send = (drafts: PressWriting[], answers: { onSuccess: () => void; onError: (error: unknown) => void }) => void
+type ActionProps = { pressId: string; joint: PressJoint; joints: readonly PressJoint[]; send: Send; busy: boolean; onDone: () => void }
 
 /** "2026-09-14T10:30" as the browser's own field writes it, where the reader is. */
 function localMoment(moment: Date): string {
@@ -27,11 +30,12 @@ const workSchema = z.object({
   workedAt: z.string().min(1, 'Say when the work was done: a weld is examined 12 hours after it.'),
 })
 
-function WorkForm({ joint, joints, send, busy, onDone }: ActionProps) {
+function WorkForm({ pressId, joint, joints, send, busy, onDone }: ActionProps) {
   const form = useForm({
     resolver: zodResolver(workSchema),
     defaultValues: { makeUp: 'finished' as const, how: '', workedAt: localMoment(new Date()) },
   })
+  const [photos, setPhotos] = useState<Attachment[]>([])
   const { errors, submitCount } = form.formState
   const onError = useProblemFields(form)
   const touched = neighboursOf(joints, joint.id)
@@ -39,7 +43,13 @@ function WorkForm({ joint, joints, send, busy, onDone }: ActionProps) {
     <Form
       onSubmit={form.handleSubmit(({ makeUp, how, workedAt }) =>
         send(
-          [{ kind: 'joint-worked', payload: { jointId: joint.id, makeUp, how, workedAt: new Date(workedAt).toISOString(), test: null } }],
+          [
+            {
+              kind: 'joint-worked',
+              payload: { jointId: joint.id, makeUp, how, workedAt: new Date(workedAt).toISOString(), test: null },
+              attachments: photos,
+            },
+          ],
           {
             onSuccess: onDone,
             onError,
@@ -58,6 +68,7 @@ function WorkForm({ joint, joints, send, busy, onDone }: ActionProps) {
         <TextField label="How" optional placeholder="welded out, E7018" message={errors.how?.message} {...form.register('how')} />
         <TextField label="When the work was done" type="datetime-local" message={errors.workedAt?.message} {...form.register('workedAt')} />
       </div>
+      <PhotoField label="Photos" owner={`ledger:${pressId}`} chosen={photos} onChange={setPhotos} />
       {touched.length > 0 && (
         <p className="text-graphite">
           It shares members with {nameJoints(touched.map(({ number }) => number))}: {touched.length === 1 ? 'it is' : 'they are'} examined
@@ -76,17 +87,21 @@ function WorkForm({ joint, joints, send, busy, onDone }: ActionProps) {
 
 const examinedSchema = PRESS_PAYLOADS['joint-examined'].pick({ method: true, result: true, remark: true })
 
-function ExamineForm({ joint, send, busy, onDone }: ActionProps) {
+function ExamineForm({ pressId, joint, send, busy, onDone }: ActionProps) {
   const form = useForm({
     resolver: zodResolver(examinedSchema),
     defaultValues: { method: 'visual' as const, result: undefined, remark: '' },
   })
+  const [photos, setPhotos] = useState<Attachment[]>([])
   const { errors, submitCount } = form.formState
   const onError = useProblemFields(form)
   return (
     <Form
       onSubmit={form.handleSubmit((payload) =>
-        send([{ kind: 'joint-examined', payload: { jointId: joint.id, ...payload, test: null } }], { onSuccess: onDone, onError }),
+        send([{ kind: 'joint-examined', payload: { jointId: joint.id, ...payload, test: null }, attachments: photos }], {
+          onSuccess: onDone,
+          onError,
+        }),
       )}
     >
       <FormError message={errors.root?.message} attempt={submitCount} />
@@ -103,6 +118,7 @@ function ExamineForm({ joint, send, busy, onDone }: ActionProps) {
         />
       </div>
       <TextField label="What was seen" optional message={errors.remark?.message} {...form.register('remark')} />
+      <PhotoField label="Photos" owner={`ledger:${pressId}`} chosen={photos} onChange={setPhotos} />
       <FormActions>
         <Button type="submit" busy={busy && 'Writing it down'}>
           {`Joint ${joint.number} was examined`}

@@ -2,10 +2,13 @@ import { useState } from 'react'
 import type { PressState } from '#shared/press/state'
 import { loadPathOf } from '#shared/press/load-path'
 import { mayItBeUsed } from '#shared/press/may-it-be-used'
+import { AttachmentStrip } from '../../../../components/attachments/attachment-strip'
 import { Button, ButtonLink } from '../../../../components/button'
 import { drawnPress, jointState } from '../../../../components/instruments/drawn-press'
 import { PressPlate } from '../../../../components/instruments/press-plate'
 import { PageHeading, Section, inset } from '../../../../components/page'
+import { useFiles } from '../../../../lib/attachment-held'
+import type { Placed } from '../../../../lib/attachment-places'
 import { classNames } from '../../../../lib/class-names'
 import { calendarDate } from '../../../../lib/dates'
 import { useCan, useShop } from '../../../../lib/here'
@@ -19,9 +22,10 @@ import { gathered, History } from './history'
 import { JointActions } from './joint-actions'
 import { Joints } from './joints'
 import { LoadPathSection } from './load-path-section'
+import { ofJoint, shownOf } from './press-photos'
 import { Train } from './train'
 
-type PressPageProps = { state: PressState; people: Readonly<Record<string, string>> }
+type PressPageProps = { state: PressState; people: Readonly<Record<string, string>>; photos?: readonly Placed[] }
 type Open = 'change' | 'withdraw' | null
 
 function Actions({ state, open, onOpen }: { state: PressState; open: Open; onOpen: (open: Open) => void }) {
@@ -62,7 +66,7 @@ function Actions({ state, open, onOpen }: { state: PressState; open: Open; onOpe
 }
 
 /** One press: may it be used, to what and until when; its joints, its train and what happened to it. */
-export function PressPage({ state, people }: PressPageProps) {
+export function PressPage({ state, people, photos = [] }: PressPageProps) {
   const { description } = state
   const name = description ? [description.name, description.whatFor].filter(Boolean).join(', ') : 'This press'
   useTitle(name)
@@ -75,6 +79,7 @@ export function PressPage({ state, people }: PressPageProps) {
   const answer = mayItBeUsed(state, calendarDate(new Date()))
   const path = loadPathOf(description?.members ?? [], joints)
   const form = { send: append.mutate, busy: append.isPending, onDone: () => setOpen(null) }
+  const files = useFiles('presses', state.id, photos.length)
   const selected = joints.find((joint) => joint.id === selectedId)
   return (
     <div className="grid grow content-start desktop:grid-cols-[minmax(22rem,37.5%)_minmax(0,1fr)] desktop:grid-rows-[auto_1fr]">
@@ -97,7 +102,7 @@ export function PressPage({ state, people }: PressPageProps) {
         </div>
         {open === 'change' && (
           <Section title="Report a change" className="mt-6 border-t-2 border-ink pt-4">
-            <ChangeForm joints={joints} cleared={answer.answer === 'cleared'} {...form} />
+            <ChangeForm pressId={state.id} joints={joints} cleared={answer.answer === 'cleared'} {...form} />
           </Section>
         )}
         {open === 'withdraw' && (
@@ -126,8 +131,9 @@ export function PressPage({ state, people }: PressPageProps) {
         <div className="grid gap-x-6 gap-y-6 desktop:grid-cols-[minmax(0,500fr)_minmax(0,212fr)]">
           <Section title="Joints">
             <Joints joints={joints} selectedId={selectedId} onSelect={setSelectedId}>
+              <AttachmentStrip className="mt-2" files={files} shown={shownOf(ofJoint(photos, selectedId), state, people)} />
               {selected && can('press:record') && !state.underTest && (
-                <JointActions key={selected.id} joint={selected} joints={joints} send={append.mutate} busy={append.isPending} />
+                <JointActions key={selected.id} pressId={state.id} joint={selected} joints={joints} send={append.mutate} busy={append.isPending} />
               )}
               {selected && state.underTest && (
                 <p>It is walked down in {state.underTest.number}: work and examinations are entered there.</p>
@@ -135,7 +141,7 @@ export function PressPage({ state, people }: PressPageProps) {
             </Joints>
           </Section>
           <Section title="What happened">
-            <History events={gathered(state.history)} people={people} />
+            <History events={gathered(state.history)} people={people} photos={photos} files={files} />
           </Section>
         </div>
         {description && (
