@@ -81,6 +81,8 @@ export const openTestRequestSchema = z.object({
   /** Asked where the load path check comes out over 100 %: the document that stands against it. */
   engineer: engineerSchema.nullish(),
   repeatsId: idSchema.nullable(),
+  /** Loose tooling of the shop's register that the force passes through in this test; each joins the train with its rating. */
+  toolingIds: z.array(idSchema).max(6, 'At most six pieces.').optional(),
   instrumentOverride: z.string().trim().min(3, 'Say why in a few words.').max(500).nullable(),
 })
 
