@@ -13,7 +13,9 @@ function membersBehind(opened: Opened, criterion: Criterion): string[] {
 }
 
 /** Criteria that speak of how the frame moved, not of gauge or time. */
-const OF_THE_FRAME: ReadonlySet<string> = new Set(['softening', 'creep', 'set'])
+const OF_THE_FRAME = ['softening', 'creep', 'set'] as const
+
+const isOfTheFrame = ({ id }: Criterion): boolean => OF_THE_FRAME.some((kind) => id === kind || id.startsWith(`${kind}-`))
 
 /** The members whose points went beyond a limit in a test, by id: where its repair begins to look. */
 export function membersConcerned(state: ProofTestState): string[] {
@@ -24,6 +26,6 @@ export function membersConcerned(state: ProofTestState): string[] {
     ...criteria,
     ...climbs.flatMap((climb) => [...climb.stages.flatMap((stage) => stage.criteria), ...(climb.set?.criteria ?? [])]),
   ]
-  const beyond = all.filter((criterion) => criterion.verdict === 'beyond' && OF_THE_FRAME.has(criterion.id))
+  const beyond = all.filter((criterion) => criterion.verdict === 'beyond' && isOfTheFrame(criterion))
   return [...new Set(beyond.flatMap((criterion) => membersBehind(opened, criterion)))]
 }
