@@ -16,7 +16,9 @@ import { protocolRoutes } from './routes/protocols'
 import { recordRoutes } from './routes/records'
 import { sessionRoutes } from './routes/session'
 import { shopRoutes } from './routes/shops'
+import { streamRoutes } from './routes/stream'
 import { todayReadRoutes } from './routes/today-read'
+import { verificationRoutes } from './routes/verification'
 
 /** A batch of entries fits; a file doesn't belong in JSON. */
 const longestBody = '2mb'
@@ -59,6 +61,7 @@ function api(context: AppContext) {
   router.use(sameOrigin(context.config))
   router.use(express.json({ limit: longestBody }))
   router.use(healthRoutes(context))
+  router.use(verificationRoutes(context))
   router.use(sessionRoutes(context))
   router.use(shopRoutes(context))
   router.use(peopleRoutes(context))
@@ -70,6 +73,7 @@ function api(context: AppContext) {
   router.use(todayReadRoutes(context))
   router.use(recordRoutes(context))
   router.use(ledgerRoutes(context))
+  router.use(streamRoutes(context))
   router.use(unknownEndpoint)
   return router
 }

@@ -49,6 +49,8 @@ export const paths = {
   settings: list('/settings'),
   account: list('/account'),
   more: list('/more'),
+  /** `leaving` when somebody signs out while entries wait. */
+  thisDevice: list('/this-device'),
 
   help: list('/help'),
   helpTopic: one('/help', 'topic'),

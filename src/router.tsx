@@ -33,6 +33,7 @@ const signedInScreens: RouteObject[] = [
   { path: paths.settings.pattern, lazy: () => import('./routes/settings') },
   { path: paths.account.pattern, lazy: () => import('./routes/account') },
   { path: paths.more.pattern, lazy: () => import('./routes/more') },
+  { path: paths.thisDevice.pattern, lazy: () => import('./routes/this-device') },
   { path: paths.help.pattern, lazy: () => import('./routes/help') },
   { path: paths.helpTopic.pattern, lazy: () => import('./routes/help-topic') },
 ]

@@ -1,6 +1,7 @@
 import { spawnSync } from 'node:child_process'
-import { mkdirSync, readFileSync, rmSync } from 'node:fs'
+import { existsSync, mkdirSync, readFileSync, rmSync } from 'node:fs'
 import { z } from 'zod'
+import { lineOf, readTotals, sumOf, TALLIES } from './faults/tally'
 import { outsideValuesTable } from './support/outside-values-report'
 
 interface Outcome {
@@ -47,6 +48,7 @@ function tests(command: string[]): Outcome {
   say('\n── tests')
   rmSync(report, { force: true })
   rmSync(outsideValues, { force: true, recursive: true })
+  rmSync(TALLIES, { force: true, recursive: true })
   const { ok, seconds } = run(command)
   const name = 'tests'
   let parsed: z.infer<typeof reportSchema>
@@ -74,6 +76,15 @@ function outsideValuesCompared(): Outcome {
   return { name: 'values', passed: values > 0 ? 1 : 0, failed: values > 0 ? 0 : 1, detail, seconds: 0 }
 }
 
+/** What was killed, and what came through, in the part of the fault tests that runs here; `npm run test:faults` runs all. */
+function faultsCounted(): Outcome {
+  say('\n── entries under faults')
+  const sum = sumOf(existsSync(TALLIES) ? [...readTotals().values()] : [])
+  const inOrder = sum.acknowledged > 0 && sum.lost === 0 && sum.duplicated === 0
+  say(lineOf(sum))
+  return { name: 'faults', passed: inOrder ? 1 : 0, failed: inOrder ? 0 : 1, detail: lineOf(sum), seconds: 0 }
+}
+
 function main(): number {
   mkdirSync('.artefacts', { recursive: true })
   const node = process.execPath
@@ -83,6 +94,7 @@ function main(): number {
     check('build', [node, 'server/bootstrap/prepare.mjs', 'build', '--force']),
     tests([node, 'node_modules/vitest/vitest.mjs', 'run', '--reporter=default', '--reporter=json', `--outputFile.json=${report}`]),
     outsideValuesCompared(),
+    faultsCounted(),
   ]
   say('')
   for (const { name, failed, detail, seconds } of outcomes) {

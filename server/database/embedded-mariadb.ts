@@ -45,6 +45,7 @@ interface Places {
 
 const ownerLock = 'quarterload-owner'
 const readyWithinMilliseconds = 60_000
+const orphanReadyWithinMilliseconds = 15_000
 
 function placesIn(directory: string): Places {
   return {
@@ -83,6 +84,20 @@ async function tryConnect(places: Places, rootPassword: string): Promise<Connect
   } catch {
     return undefined
   }
+}
+
+/** One that a killed app left behind while it came up is waited for: told to stop now, it can hang for good. */
+async function connectWhileItStarts(places: Places, rootPassword: string): Promise<Connection | undefined> {
+  const until = Date.now() + orphanReadyWithinMilliseconds
+  do {
+    const connection = await tryConnect(places, rootPassword)
+    if (connection !== undefined) {
+      rmSync(places.initFile, { force: true })
+      return connection
+    }
+    await delay(20)
+  } while (Date.now() < until && runningServerPid(places.pidFile, places.dataDirectory) !== undefined)
+  return undefined
 }
 
 function serverArguments(places: Places, port: number, relaxed: boolean): string[] {
@@ -169,7 +184,7 @@ async function own(
   port?: number,
 ): Promise<{ connection: Connection; isOwner: boolean }> {
   const relaxed = options.relaxedDurability ?? false
-  const running = await tryConnect(places, passwords.root)
+  const running = await connectWhileItStarts(places, passwords.root)
   if (running !== undefined) {
     const isOwner = await takeOwnership(running)
     if (!isOwner && options.shareRunning !== true) {

@@ -10,6 +10,12 @@ const UNKNOWN_VARIABLE = 1193
  */
 const CAUSAL_READS = 1
 
+/**
+ * A node that hands its whole data to another holds up COMMIT meanwhile, and whoever waits for a row that such a COMMIT
+ * holds, holds up the node: they give way after this, and run again.
+ */
+const LOCK_WAIT_SECONDS = 5
+
 class NodeNotReady extends Error {
   /** As the node itself answers statements: "WSREP has not yet prepared node for application use". */
   readonly errno = 1047
@@ -44,5 +50,5 @@ export async function joinCluster(connection: Connection): Promise<void> {
   // A donor serves as before while it hands its data to a node that comes back.
   const isFit = status.get('wsrep_ready') === 'ON' && status.get('wsrep_cluster_status') === 'Primary' && /^(Synced|Donor)/.test(state)
   if (!isFit) throw new NodeNotReady(`This node of the database cluster is not ready: ${state || 'unknown state'}.`)
-  await connection.query(`SET SESSION wsrep_sync_wait = ${CAUSAL_READS}`)
+  await connection.query(`SET SESSION wsrep_sync_wait = ${CAUSAL_READS}, innodb_lock_wait_timeout = ${LOCK_WAIT_SECONDS}`)
 }

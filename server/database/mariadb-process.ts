@@ -1,7 +1,7 @@
 import { spawn, spawnSync } from 'node:child_process'
 import type { ChildProcess } from 'node:child_process'
 import { createHash } from 'node:crypto'
-import { accessSync, constants, existsSync, mkdirSync, openSync, closeSync, readFileSync, renameSync, rmSync } from 'node:fs'
+import { accessSync, constants, existsSync, mkdirSync, openSync, closeSync, readdirSync, readFileSync, renameSync, rmSync } from 'node:fs'
 import { createServer } from 'node:net'
 import { tmpdir } from 'node:os'
 import path from 'node:path'
@@ -103,20 +103,33 @@ export function isAlive(pid: number): boolean {
   }
 }
 
-/** The mariadbd of this data directory, if one is running; never another process that got the same number. */
+function isServerOf(pid: number, dataDirectory: string): boolean {
+  if (!Number.isInteger(pid) || pid <= 1 || !isAlive(pid)) return false
+  try {
+    return readFileSync(`/proc/${pid}/cmdline`, 'utf8').split('\0').includes(`--datadir=${dataDirectory}`)
+  } catch {
+    return false
+  }
+}
+
+function writtenPid(pidFile: string): number {
+  try {
+    return Number(readFileSync(pidFile, 'utf8').trim())
+  } catch {
+    return 0
+  }
+}
+
+/**
+ * The mariadbd of this data directory, if one is running; never another process that got the same number. One that is
+ * only coming up has not written its number yet and is looked for among all processes.
+ */
 export function runningServerPid(pidFile: string, dataDirectory: string): number | undefined {
-  let pid: number
-  try {
-    pid = Number(readFileSync(pidFile, 'utf8').trim())
-  } catch {
-    return undefined
-  }
-  if (!Number.isInteger(pid) || pid <= 1 || !isAlive(pid)) return undefined
-  try {
-    return readFileSync(`/proc/${pid}/cmdline`, 'utf8').split('\0').includes(`--datadir=${dataDirectory}`) ? pid : undefined
-  } catch {
-    return undefined
-  }
+  const written = writtenPid(pidFile)
+  if (isServerOf(written, dataDirectory)) return written
+  return readdirSync('/proc')
+    .map(Number)
+    .find((pid) => isServerOf(pid, dataDirectory))
 }
 
 async function waitForEnd(pid: number, milliseconds: number): Promise<boolean> {

@@ -1,5 +1,6 @@
 import type { Sequelize, Transaction } from 'sequelize'
 import { QueryTypes } from 'sequelize'
+import type { StoredEntry } from '#shared/ledger/chain'
 import type { LedgerEntry } from '#shared/ledger/envelope'
 import type { Seal } from '#shared/ledger/seal'
 
@@ -9,7 +10,7 @@ interface StoredRow {
 }
 
 /** An entry as it was stored, with its hash: nothing is read from the columns beside the hashed text. */
-function entryOf(row: StoredRow): LedgerEntry {
+export function entryOf(row: StoredRow): LedgerEntry {
   return { ...(JSON.parse(row.canonical) as Omit<LedgerEntry, 'hash'>), hash: row.hash }
 }
 
@@ -34,14 +35,18 @@ export async function lockHead(database: Sequelize, transaction: Transaction, le
   return head ?? null
 }
 
-/** Entries of a ledger after a number, in order. */
-export async function readEntries(database: Sequelize, transaction: Transaction, ledgerId: string, after = 0): Promise<LedgerEntry[]> {
-  const rows = await database.query<StoredRow>('SELECT canonical, hash FROM ledger_entries WHERE ledger_id = ? AND seq > ? ORDER BY seq', {
+/** Entries of a ledger after a number, in order, as they were stored: what a check is made on. */
+export function readStored(database: Sequelize, transaction: Transaction, ledgerId: string, after = 0): Promise<StoredEntry[]> {
+  return database.query<StoredEntry>('SELECT seq, canonical, hash FROM ledger_entries WHERE ledger_id = ? AND seq > ? ORDER BY seq', {
     replacements: [ledgerId, after],
     type: QueryTypes.SELECT,
     transaction,
   })
-  return rows.map(entryOf)
+}
+
+/** Entries of a ledger after a number, in order. */
+export async function readEntries(database: Sequelize, transaction: Transaction, ledgerId: string, after = 0): Promise<LedgerEntry[]> {
+  return (await readStored(database, transaction, ledgerId, after)).map(entryOf)
 }
 
 /** The entry with an id, whichever ledger it stands in. */
@@ -60,4 +65,21 @@ export async function readSeals(database: Sequelize, transaction: Transaction, l
     { replacements: [ledgerId], type: QueryTypes.SELECT, transaction },
   )
   return rows.map((row) => ({ ...row, sealedAt: new Date(row.sealedAt).toISOString() }))
+}
+
+/**
+ * Reads entries and seals that belong together, although each is read by a statement of its own while somebody may be
+ * signing: the seals are the same before the entries were read and after.
+ */
+export async function readTogether<Many extends readonly unknown[], Entries>(
+  seals: () => Promise<Many>,
+  entries: () => Promise<Entries>,
+): Promise<{ seals: Many; entries: Entries }> {
+  let before = await seals()
+  for (;;) {
+    const read = await entries()
+    const after = await seals()
+    if (after.length === before.length) return { seals: after, entries: read }
+    before = after
+  }
 }

@@ -106,6 +106,7 @@ describe('the workbook of a countersigned test', () => {
       'Instruments',
       'Protocol and limits',
       'Corrections',
+      'Photos',
       'Ledger',
       'Chart',
       'Units',
@@ -312,8 +313,8 @@ test('a long text is cut between characters, and joins again', () => {
 test('the file is named after the number and the press, without what a file name cannot hold', () => {
   const opened = recordedTest().state.opened
   if (!opened) throw new Error('The test was opened.')
-  expect(recordFileName(opened, 'xlsx')).toBe('PT-0043 Press 2.xlsx')
-  const named = (name: string) => recordFileName({ number: 'PT-0001', press: { ...opened.press, name } }, 'xlsx')
+  expect(recordFileName(opened)).toBe('PT-0043 Press 2.xlsx')
+  const named = (name: string) => recordFileName({ number: 'PT-0001', press: { ...opened.press, name } })
   expect(named('..\\bed/3: "old"\r\n')).toBe('PT-0001 bed 3 old.xlsx')
   expect(named('Presse à épauler')).toBe('PT-0001 Presse à épauler.xlsx')
 })

@@ -1,4 +1,5 @@
 import ExcelJS from 'exceljs'
+import { NO_FILES, type RecordFiles } from './files'
 import { recordOf, type RecordSource } from './record'
 import { chartSheet } from './sheets/chart'
 import { correctionsSheet } from './sheets/corrections'
@@ -8,6 +9,7 @@ import { instrumentsSheet } from './sheets/instruments'
 import { jointsSheet } from './sheets/joints'
 import { ledgerSheet } from './sheets/ledger'
 import { loadPathSheet } from './sheets/load-path'
+import { photosSheet } from './sheets/photos'
 import { peopleSheet } from './sheets/people'
 import { protocolSheet } from './sheets/protocol'
 import { placesOfReadings, readingsSheet } from './sheets/readings'
@@ -21,7 +23,7 @@ import { unitsSheet } from './sheets/units'
  * the readings as typed and the bore, each with the core's own result beside it, so that a reader can recompute.
  * @throws RangeError when the ledger doesn't begin with the opening of a test.
  */
-export async function recordWorkbook(source: RecordSource): Promise<Buffer> {
+export async function recordWorkbook(source: RecordSource, files: RecordFiles = NO_FILES): Promise<Buffer> {
   const record = recordOf(source)
   const workbook = new ExcelJS.Workbook()
   workbook.creator = 'Quarterload'
@@ -43,6 +45,7 @@ export async function recordWorkbook(source: RecordSource): Promise<Buffer> {
   instrumentsSheet(workbook, record)
   protocolSheet(workbook, record)
   correctionsSheet(workbook, record)
+  photosSheet(workbook, record, files)
   ledgerSheet(workbook, record)
   chartSheet(workbook, record)
   unitsSheet(workbook, record)

@@ -5,6 +5,7 @@ import { foldProofTest } from '#shared/proof-test/apply'
 import type { Opened } from '#shared/proof-test/entries'
 import { evaluateTest, type TestEvaluation } from '#shared/proof-test/evaluate'
 import type { ProofTestState } from '#shared/proof-test/state'
+import { fileName } from './file-name'
 
 /** What a record is made of: the ledger as stored, and the names of those who wrote it. */
 export interface RecordSource {
@@ -58,11 +59,6 @@ export function momentText(iso: string): string {
 }
 
 /** Name of the file that a record is saved as: number and press, without what a file name can't hold. */
-export function recordFileName(opened: Pick<Opened, 'number' | 'press'>, extension: 'xlsx'): string {
-  const press = opened.press.name
-    .normalize('NFC')
-    .replace(/[\p{Cc}\p{Cf}\\/:*?"<>|]/gu, ' ')
-    .replace(/\s+/g, ' ')
-    .replace(/^[.\s]+|[.\s]+$/g, '')
-  return `${[opened.number, press].filter(Boolean).join(' ')}.${extension}`
+export function recordFileName(opened: Pick<Opened, 'number' | 'press'>): string {
+  return fileName([opened.number, opened.press.name], 'xlsx')
 }

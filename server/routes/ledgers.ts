@@ -10,11 +10,11 @@ import {
   appendPressEntries,
   appendTestEntries,
   openProofTest,
-  readLedger,
   registerPress,
   signProofTest,
   type Asking,
 } from '../services/ledgers'
+import { readLedger } from '../services/read-ledger'
 import { clientOf } from './session'
 
 const afterSchema = z.object({ after: z.coerce.number().int().min(0).default(0) })

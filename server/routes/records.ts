@@ -5,7 +5,10 @@ import { authenticate } from '../middleware/authenticate'
 import { idParam } from '../middleware/validate'
 import { recordFileName, recordOf } from '../records/record'
 import { recordWorkbook } from '../records/record-workbook'
+import { ledgerFile } from '../services/ledger-files'
+import { shopOfPress } from '../services/press-register'
 import { shopOfProofTest } from '../services/proof-test-register'
+import { recordFiles } from '../services/record-files'
 import { readRecord } from '../services/records'
 import { workOn } from './work'
 
@@ -17,12 +20,26 @@ export function recordRoutes(context: AppContext): Router {
   router.get('/proof-tests/:proofTestId/record.xlsx', authenticate(context), async (request, response) => {
     const id = idParam(request, 'proofTestId')
     const shopOfIt = (transaction: Transaction) => shopOfProofTest(id, transaction)
-    const source = await workOn(context, request, 'This proof test', shopOfIt, (work) => readRecord(work, id))
-    const { opened } = recordOf(source)
+    const source = await workOn(context, request, 'This proof test', shopOfIt, (work) => readRecord(context, work, id))
+    const { opened, state } = recordOf(source)
     // Written after the transaction: a spreadsheet takes longer than a connection should be held.
-    const workbook = await recordWorkbook(source)
-    response.attachment(recordFileName(opened, 'xlsx')).type(WORKBOOK).send(workbook)
+    const files = await recordFiles(context, opened.shop.id, state.attachments)
+    const workbook = await recordWorkbook(source, files)
+    response.attachment(recordFileName(opened)).type(WORKBOOK).send(workbook)
   })
+
+  const ledgers = [
+    { subject: 'proof-test', what: 'This proof test', path: '/proof-tests/:id/ledger.json', shopOf: shopOfProofTest },
+    { subject: 'press', what: 'This press', path: '/presses/:id/ledger.json', shopOf: shopOfPress },
+  ] as const
+  for (const { subject, what, path, shopOf } of ledgers) {
+    router.get(path, authenticate(context), async (request, response) => {
+      const id = idParam(request, 'id')
+      const shopOfIt = (transaction: Transaction) => shopOf(id, transaction)
+      const { name, text } = await workOn(context, request, what, shopOfIt, (work) => ledgerFile(context, work, subject, id))
+      response.attachment(name).type('application/json').send(Buffer.from(text, 'utf8'))
+    })
+  }
 
   return router
 }

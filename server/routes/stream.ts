@@ -48,7 +48,7 @@ function begin(response: Response): void {
 }
 
 function send(response: Response, event: string, data: HeadsEvent | Record<string, never>): void {
-  response.write(`event: ${event}\ndata: ${JSON.stringify(data)}\n\n`)
+  if (!response.writableEnded) response.write(`event: ${event}\ndata: ${JSON.stringify(data)}\n\n`)
 }
 
 interface Streaming {
@@ -56,13 +56,16 @@ interface Streaming {
   userId: string
   token: string
   ids: readonly string[]
+  /** Called when the server is asked to stop; returns how to stop listening for that. */
+  onClosing(end: () => void): () => unknown
 }
 
 /** Writes heads and beats until the session, the right to read, the connection or the server ends. */
-async function stream(response: Response, { context, userId, token, ids }: Streaming): Promise<void> {
+async function stream(response: Response, { context, userId, token, ids, onClosing }: Streaming): Promise<void> {
+  let forget: () => unknown = () => undefined
   const ended = new Promise<void>((resolve) => {
     response.once('close', resolve)
-    context.closing.addEventListener('abort', () => resolve(), { once: true })
+    forget = onClosing(resolve)
   })
   let readable = new Set<string>()
   const tell = (heads: Heads) => {
@@ -90,10 +93,14 @@ async function stream(response: Response, { context, userId, token, ids }: Strea
     readable = new Set(Object.keys(heads))
     send(response, STREAM_EVENTS.heads, { heads })
     await ended
+  } catch (error) {
+    // The answer has begun: all that can be said is its end, and the client tries again.
+    context.logger.warn({ err: error }, 'A stream could not begin')
   } finally {
     clearInterval(beat)
     clearInterval(recheck)
     unwatch()
+    forget()
     response.end()
   }
 }
@@ -102,6 +109,12 @@ async function stream(response: Response, { context, userId, token, ids }: Strea
 export function streamRoutes(context: AppContext): Router {
   const router = Router()
   const take = streamCounter()
+  const closers = new Set<() => void>()
+  context.closing.addEventListener('abort', () => closers.forEach((end) => end()), { once: true })
+  const onClosing = (end: () => void) => {
+    closers.add(end)
+    return () => closers.delete(end)
+  }
 
   router.get('/stream', authenticate(context), async (request, response) => {
     const { ledgers: ids } = parseQuery(request, streamQuerySchema)
@@ -111,7 +124,7 @@ export function streamRoutes(context: AppContext): Router {
     const giveBack = take(sessionId)
     try {
       begin(response)
-      await stream(response, { context, userId, token, ids })
+      await stream(response, { context, userId, token, ids, onClosing })
     } finally {
       giveBack()
     }

@@ -11,7 +11,7 @@ import { pressState, proofTestState } from '../ledger/folds'
 import { readHead, type LedgerHead } from '../ledger/read'
 import { Calibration } from '../models'
 import { notFound, Problem } from '../problem'
-import { smallerPicture } from '../storage/pictures'
+import { smallerPicture, type Picture } from '../storage/pictures'
 import { certificateFileOf } from './calibrations'
 import { absentHashes } from './held-files'
 import type { Asking } from './ledgers'
@@ -148,12 +148,17 @@ async function readWhole({ storage, logger }: Asking['context'], key: string, sh
   return bytes
 }
 
-async function readSmaller(context: Asking['context'], key: string, file: Named, size: PictureSize): Promise<Buffer> {
+/** A smaller picture of a photo that is kept, made from bytes that were checked; null when they can't be shown as one. */
+export async function pictureOf(context: Asking['context'], shopId: string, { sha256 }: Named, longest: number): Promise<Picture | null> {
+  return smallerPicture(await readWhole(context, keyOf(shopId, sha256), sha256), longest)
+}
+
+async function readSmaller(context: Asking['context'], shopId: string, file: Named, size: PictureSize): Promise<Buffer> {
   if (file.type === 'application/pdf') throw new Problem(404, 'no-picture', 'A document has no small picture. Open the document itself.')
-  const smallKey = `${key}.${size}`
+  const smallKey = `${keyOf(shopId, file.sha256)}.${size}`
   const made = await context.storage.get(smallKey)
   if (made !== null) return made
-  const picture = await smallerPicture(await readWhole(context, key, file.sha256), PICTURE_SIZES[size])
+  const picture = await pictureOf(context, shopId, file, PICTURE_SIZES[size])
   if (picture === null) throw new Problem(422, 'no-picture', 'This file can’t be shown as a picture. Its bytes are kept as they were sent.')
   await context.storage.put(smallKey, picture.jpeg)
   return picture.jpeg
@@ -168,9 +173,8 @@ export async function readFile({ context, userId }: Asking, by: NamedBy, sha256:
     return { shopId, file: found, isHere: (await absentHashes(transaction, shopId, [found])).length === 0 }
   })
   if (!isHere) throw notHereYet()
-  const key = keyOf(shopId, sha256)
-  if (size === undefined) return { file, bytes: await readWhole(context, key, sha256) }
-  return { file: { ...file, type: 'image/jpeg' }, bytes: await readSmaller(context, key, file, size) }
+  if (size === undefined) return { file, bytes: await readWhole(context, keyOf(shopId, sha256), sha256) }
+  return { file: { ...file, type: 'image/jpeg' }, bytes: await readSmaller(context, shopId, file, size) }
 }
 
 /** Every file that a ledger names, with whether it is here. */

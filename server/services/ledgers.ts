@@ -1,17 +1,16 @@
-import type { AppendRequest, AppendResponse, AppendResult, EntriesResponse } from '#shared/api/ledger'
+import type { AppendRequest, AppendResponse, AppendResult } from '#shared/api/ledger'
 import type { OpenTestRequest, SignatureRequest } from '#shared/api/proof-tests'
-import type { EntryDraft, LedgerEntry, LedgerSubject } from '#shared/ledger/envelope'
+import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
 import type { DeviceCount } from '#shared/proof-test/device-count'
 import { SIGNATURE_KINDS } from '#shared/proof-test/entries'
 import type { AppContext } from '../context'
 import { parsePressDraft, parseProofTestDraft } from '../ledger/parse'
-import { readEntries, readHead, readSeals } from '../ledger/read'
+import { readHead } from '../ledger/read'
 import { inRetriedTransaction } from '../ledger/retry'
 import { loadSealKey } from '../ledger/seal-keys'
 import { createLedger, type Writing } from '../ledger/write'
 import { conflict, invalid, notFound, Problem } from '../problem'
 import { membershipOf } from './membership'
-import { namesOf } from './names'
 import { openTest } from './open-test'
 import { appendPress } from './press-entries'
 import { verifyPassword } from './sessions'
@@ -50,33 +49,6 @@ async function appendBatch(
   }
   const head = await inRetriedTransaction(database, (transaction) => readHead(database, transaction, ledgerId))
   return { results, headSeq: head?.headSeq ?? 0, headHash: head?.headHash ?? '' }
-}
-
-/** Entries after a number, with the names of who wrote them and the seals; 404 for another shop's ledger. */
-export async function readLedger(
-  { context, userId }: Asking,
-  subject: LedgerSubject,
-  ledgerId: string,
-  after: number,
-): Promise<EntriesResponse> {
-  const { database } = context
-  return inRetriedTransaction(database, async (transaction) => {
-    const head = await readHead(database, transaction, ledgerId)
-    if (!head || head.subject !== subject) throw notFound(subject === 'press' ? 'This press' : 'This proof test')
-    await membershipOf({ transaction, userId, shopId: head.shopId })
-    const entries = await readEntries(database, transaction, ledgerId, after)
-    const last = entries.at(-1)
-    const authors = entries.map((entry) => entry.authorId)
-    const seals = await readSeals(database, transaction, ledgerId)
-    return {
-      ledgerId,
-      entries,
-      headSeq: last?.seq ?? head.headSeq,
-      headHash: last?.hash ?? head.headHash,
-      people: await namesOf(transaction, authors),
-      sealed: seals.map(({ ledgerId: _ledgerId, ...seal }) => seal),
-    }
-  })
 }
 
 /** Enters a press: its ledger and the first entry in it. */

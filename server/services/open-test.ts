@@ -143,7 +143,7 @@ export async function openTest(writing: Writing, work: Work, request: OpenTestRe
     observedAt: request.observedAt,
     bootId: request.bootId,
     monotonicMs: request.monotonicMs,
-    attachments: [],
+    attachments: request.attachments ?? [],
     overrides: [],
   }
   await appendToTest(writing, locked, draft)

@@ -32,6 +32,8 @@ export const entriesResponseSchema = z.object({
   headHash: z.string(),
   people: z.record(z.string(), z.string()),
   sealed: z.array(z.object({ seq: z.int(), headHash: z.string(), kid: z.string(), signature: z.string(), sealedAt: timeSchema })),
+  /** Said when the server found the ledger altered as it read it: at which entry, where that can be told. */
+  broken: z.object({ at: z.int().nullable(), why: z.string() }).nullish(),
 })
 
 export type AppendRequest = z.infer<typeof appendRequestSchema>

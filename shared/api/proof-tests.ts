@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { idSchema as envelopeId } from '../ledger/envelope'
+import { attachmentSchema, idSchema as envelopeId } from '../ledger/envelope'
 import { engineerSchema, legSetupSchema, measuringPointSchema, netSchema, CONCLUSIONS } from '../proof-test/entries'
 import { FORCE_UNITS } from '../units'
 import { idSchema, timeSchema } from './common'
@@ -80,6 +80,8 @@ export const openTestRequestSchema = z.object({
     .nullish(),
   /** Asked where the load path check comes out over 100 %: the document that stands against it. */
   engineer: engineerSchema.nullish(),
+  /** The document itself: named by the opening entry, its bytes are put afterwards. */
+  attachments: z.array(attachmentSchema).max(4, 'At most four files go with the opening.').optional(),
   repeatsId: idSchema.nullable(),
   /** Loose tooling of the shop's register that the force passes through in this test; each joins the train with its rating. */
   toolingIds: z.array(idSchema).max(6, 'At most six pieces.').optional(),

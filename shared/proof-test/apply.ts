@@ -260,6 +260,7 @@ const handlers: Handlers = {
     ...state,
     paused: {
       at: entry.observedAt,
+      by: entry.authorId,
       why: payload.why,
       mark: { at: entry.observedAt, bootId: entry.bootId, monotonicMs: entry.monotonicMs },
     },

@@ -213,7 +213,7 @@ describe('under load', () => {
   it('R36: a pause under load of more than five minutes ends in release', () => {
     const { state, entry } = before('row-read')
     const mark = markOf(entry)
-    const paused: ProofTestState = { ...state, paused: { at: mark.at, mark, why: '' } }
+    const paused: ProofTestState = { ...state, paused: { at: mark.at, by: 'somebody', mark, why: '' } }
     expect(ask(paused, { kind: 'resumed', payload: {} }, later(mark, 299)).outcome).toBe('allowed')
     expect(ask(paused, { kind: 'resumed', payload: {} }, later(mark, 301)).rules).toEqual(['R36'])
   })

@@ -150,7 +150,7 @@ export interface ProofTestState {
   /** Where the test is; null before the first leg begins. */
   position: Place | null
   loaded: Loaded
-  paused: { at: string; mark: Mark; why: string } | null
+  paused: { at: string; by: string; mark: Mark; why: string } | null
   stopped: Stopped | null
   observations: Observation[]
   corrections: Correction[]

@@ -19,13 +19,20 @@ function tone(context: AudioContext, from: number, frequency: number): void {
   oscillator.stop(from + 0.4)
 }
 
-export type AlarmKind = 'hold over' | 'stop'
+export type AlarmKind = 'hold over' | 'pause' | 'stop'
 
-/** Three even tones when a hold or a wait is over; five high ones when somebody called stop. */
+/** How often and how high (Hz) each sounds: a stop is told from the rest without looking. */
+const TONES: Record<AlarmKind, { count: number; frequency: number }> = {
+  'hold over': { count: 3, frequency: 880 },
+  pause: { count: 2, frequency: 1100 },
+  stop: { count: 5, frequency: 1320 },
+}
+
+/** Three even tones when a hold or a wait is over, two when somebody else paused, five high ones when somebody called stop. */
 export function soundAlarm(kind: AlarmKind): void {
-  const count = kind === 'stop' ? 5 : 3
+  const { count, frequency } = TONES[kind]
   if ('vibrate' in navigator) navigator.vibrate(Array.from({ length: count }, () => [220, 120]).flat())
   readyAlarm()
   if (!sound) return
-  for (let index = 0; index < count; index += 1) tone(sound, sound.currentTime + index * 0.34, kind === 'stop' ? 1320 : 880)
+  for (let index = 0; index < count; index += 1) tone(sound, sound.currentTime + index * 0.34, frequency)
 }

@@ -65,11 +65,14 @@ export function tellsOfItsCamera(bytes: Uint8Array, type: AttachmentType): boole
   return type === 'image/webp' && webpTells(bytes)
 }
 
-/** "84 kB", "1.4 MB": by thousands, as a storage label counts. */
+const KILO = 1024
+const MEGA = KILO * KILO
+
+/** "84 kB", "1.4 MB": by 1024, as the limit counts, and rounded up, so that nothing over the limit reads like it. */
 export function sizeText(bytes: number): string {
-  if (bytes < 1000) return `${bytes} bytes`
-  if (bytes < 1_000_000) return `${Math.round(bytes / 1000)}\u00a0kB`
-  return `${(bytes / 1_000_000).toFixed(1)}\u00a0MB`
+  if (bytes < KILO) return `${bytes} bytes`
+  if (bytes < MEGA) return `${Math.ceil(bytes / KILO)}\u00a0kB`
+  return `${Math.ceil((bytes / MEGA) * 10) / 10}\u00a0MB`
 }
 
 /** The first and last four bytes of a hash, enough to tell one from another by eye. */

@@ -24,8 +24,11 @@ export const heldQuery = (subject: Subject, ledgerId: string) =>
     retry: false,
   })
 
-/** What of one owner lies on this device. */
-export const useOwnFiles = (owner: Owner): OwnFiles => useSyncExternalStore(files.subscribe, () => files.of(owner))
+const NONE: OwnFiles = { loaded: false, files: [] }
+
+/** What of one owner lies on this device; nothing is looked up while nobody asks. */
+export const useOwnFiles = (owner: Owner, asked = true): OwnFiles =>
+  useSyncExternalStore(files.subscribe, () => (asked ? files.of(owner) : NONE))
 
 /** Where the bytes of a photo or document are. */
 export type Where =
@@ -59,7 +62,7 @@ export interface Files {
 export function useFiles(subject: Subject, ledgerId: string, named: number): Files {
   const owner: Owner = `ledger:${ledgerId}`
   const client = useQueryClient()
-  const own = useOwnFiles(owner)
+  const own = useOwnFiles(owner, named > 0)
   const { data } = useQuery({
     ...heldQuery(subject, ledgerId),
     enabled: named > 0 && ledgerId !== '',

@@ -127,7 +127,9 @@ async function killAtRandom(random: Seeded): Promise<void> {
       if (left.server > 0 && left.database > 0 && random.chance(0.12)) {
         left.server -= 1
         left.database -= 1
-        await rig.killBoth(random)
+        const more = Math.min(again, left.server)
+        left.server -= more
+        await rig.killBoth(random, more)
       } else {
         const more = Math.min(again, left[victim] - 1)
         left[victim] -= 1 + more
@@ -147,7 +149,7 @@ afterAll(async () => {
   await rig.close()
   leaveTotals('kills', tally.totals())
   process.stdout.write(
-    `kills: ${tally.line()} (${killsByProcess(tally.totals())}; ${cutOff} requests cut off, ${rig.restarts} starts cut short; SEED=${seed})\n`,
+    `kills: ${tally.line()} (${killsByProcess(tally.totals())}; ${cutOff} requests cut off, ${rig.cutShort} starts cut short, ${rig.failedStarts} failed; SEED=${seed})\n`,
   )
 })
 
@@ -173,6 +175,7 @@ describe(`kill -9 of the server and of its database during runs, seed ${seed}`, 
     expect(tally.lost()).toEqual([])
     expect(tally.duplicated()).toEqual([])
     expect(tally.totals().acknowledged).toBeGreaterThan(4 * times)
+    expect(rig.failedStarts, 'starts that ended by themselves').toBe(0)
     expect(rig.errors(), 'the server logs no error').toEqual([])
   })
 

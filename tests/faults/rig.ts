@@ -39,8 +39,10 @@ export class Rig {
   private server: ServerProcess | undefined
   private child: ChildProcess | undefined
   private readonly said: string[] = []
-  /** How often a start was ended by a kill or by its own failure, and another start did it. */
-  restarts = 0
+  /** How often a start was ended by a kill. */
+  cutShort = 0
+  /** How often a start ended by itself, and another one had to do it. */
+  failedStarts = 0
 
   private constructor(
     private readonly directory: string,
@@ -102,14 +104,18 @@ export class Rig {
   /** Kills the server, `again` times more while it comes up, and has it started each time. */
   async killServer(random: Seeded, again = 0): Promise<void> {
     this.killServerNow()
-    for (let times = 0; times < again; times += 1) {
+    await this.killWhileItStarts(random, again)
+    await this.startAgain()
+  }
+
+  private async killWhileItStarts(random: Seeded, times: number): Promise<void> {
+    for (let time = 0; time < times; time += 1) {
       const broken = this.start().catch(() => undefined)
       await pauseFor(random.between(200, 2200))
-      this.restarts += 1
+      this.cutShort += 1
       this.killServerNow()
       await broken
     }
-    await this.startAgain()
   }
 
   private async startAgain(): Promise<void> {
@@ -118,7 +124,8 @@ export class Rig {
         await this.start()
         break
       } catch (error) {
-        this.restarts += 1
+        this.failedStarts += 1
+        this.said.push(String(error))
         if (tries === 3) throw error
       }
     }
@@ -137,7 +144,7 @@ export class Rig {
   }
 
   /** As when the power goes. */
-  async killBoth(random: Seeded): Promise<void> {
+  async killBoth(random: Seeded, again = 0): Promise<void> {
     if (random.chance(0.5)) {
       this.killServerNow()
       await this.killDatabaseNow()
@@ -145,6 +152,7 @@ export class Rig {
       await this.killDatabaseNow()
       this.killServerNow()
     }
+    await this.killWhileItStarts(random, again)
     await this.startAgain()
   }
 

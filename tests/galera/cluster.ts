@@ -29,6 +29,8 @@ interface Ports {
 /** One mariadbd of the cluster, durable as a node of a shop would be. */
 export class Node {
   private child: ChildProcess | undefined
+  /** How much it had logged before it was started last. */
+  private logBefore = 0
 
   constructor(
     readonly name: string,
@@ -44,6 +46,11 @@ export class Node {
 
   private get logFile(): string {
     return path.join(this.directory, 'mariadbd.log')
+  }
+
+  /** How it last took what it lacked: the missing entries alone, or all of another node's data. */
+  lastTransfer(): 'what it lacked' | 'everything' {
+    return readFileSync(this.logFile, 'utf8').slice(this.logBefore).includes('SST succeeded') ? 'everything' : 'what it lacked'
   }
 
   log(): string {
@@ -84,7 +91,7 @@ export class Node {
 
   /** After a crash the node's place in the cluster's history is in its own log files: read as Debian's service reads it. */
   private recoveredPosition(): string[] {
-    const found = spawnSync(findProgram('mariadbd'), [...this.options(), '--wsrep-recover'], {
+    const found = spawnSync(findProgram('mariadbd'), [...this.options(), '--wsrep-recover', '--wsrep-cluster-address=gcomm://'], {
       encoding: 'utf8',
       env: this.environment(),
       ...nobody,
@@ -101,6 +108,7 @@ export class Node {
     const others = this.members().map((node) => `127.0.0.1:${node.ports.group}`)
     const address = founds ? 'gcomm://' : `gcomm://${others.join(',')}`
     const position = returns ? this.recoveredPosition() : []
+    this.logBefore = existsSync(this.logFile) ? readFileSync(this.logFile, 'utf8').length : 0
     const log = openSync(this.logFile, 'a', 0o600)
     try {
       this.child = spawn(findProgram('mariadbd'), [...this.options(), ...position, `--wsrep-cluster-address=${address}`], {

@@ -7,7 +7,7 @@ import type { Step } from '#shared/proof-test/steps'
 import { delay } from '#server/database/mariadb-process'
 import { ApiRun } from '../factories/api-run'
 import { aimClientsAt, answered } from '../factories/client'
-import { Tally } from '../faults/tally'
+import { leaveTotals, Tally } from '../faults/tally'
 import { balance } from '../support/balancer'
 import { startServer } from '../support/server-process'
 import { Cluster, type Node } from './cluster'
@@ -67,7 +67,7 @@ async function killDuring(cluster: Cluster, run: ApiRun, tally: Tally, until: St
   const stood = (writers.longestWait / 1000).toFixed(1)
   say(
     `    node ${victim.name} killed on the way to ${until}: ${writers.written} notes, ${writers.written - atKill} of them after the kill; ` +
-      `longest wait for an answer ${stood} s; back and in step after ${back} s`,
+      `longest wait for an answer ${stood} s; back and in step after ${back} s, given ${victim.lastTransfer()}`,
   )
 }
 
@@ -127,6 +127,7 @@ async function main(directory: string): Promise<boolean> {
   } finally {
     for (const close of closers.reverse()) await close()
   }
+  leaveTotals('galera', tally.totals())
   say(tally.line())
   const { lost, duplicated } = tally.totals()
   return lost === 0 && duplicated === 0
@@ -136,7 +137,7 @@ const directory = mkdtempSync(path.join(tmpdir(), 'quarterload-galera-'))
 chmodSync(directory, 0o755)
 try {
   process.exitCode = (await main(directory)) ? 0 : 1
-  if (process.env['KEEP'] === undefined) rmSync(directory, { recursive: true, force: true })
+  rmSync(directory, { recursive: true, force: true })
 } catch (error) {
   process.stderr.write(
     `${error instanceof Error ? (error.stack ?? error.message) : String(error)}\nThe nodes’ logs are under ${directory}\n`,

@@ -20,7 +20,7 @@ const people = at('People', paths.people.pattern)
 /** The cells of the navigation on tablet and desktop. */
 export const destinations: readonly Destination[] = [today, presses, instruments, protocols, proofTests, people]
 
-const elsewhere = [paths.more, paths.instruments, paths.protocols, paths.people, paths.settings, paths.account, paths.help]
+const elsewhere = [paths.more, paths.instruments, paths.protocols, paths.people, paths.settings, paths.account, paths.thisDevice, paths.help]
 
 /** The four cells at the foot of the phone; the fourth stands for all the rest. */
 export const phoneDestinations: readonly Destination[] = [

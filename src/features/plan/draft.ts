@@ -1,3 +1,4 @@
+import type { Attachment } from '#shared/ledger/envelope'
 import type { PressDescription, RamPosition } from '#shared/press/model'
 import type { ProtocolContent } from '#shared/proof-test/protocol'
 import { typedNumber } from '../../lib/draft-resolver'
@@ -34,6 +35,8 @@ export interface PlanDraft {
   aboveRating: { percent: string; rule: string }
   /** Asked where the load path check is over 100 %. */
   engineer: { name: string; document: string; on: string }
+  /** The document itself, kept on this device until the test is open. */
+  engineerFiles: Attachment[]
   repeatsId: string
   instrumentOverride: string
 }
@@ -55,6 +58,7 @@ export function newPlan(nextId: () => string, pressId: string): PlanDraft {
     witness: { id: '', relation: '' },
     aboveRating: { percent: '', rule: '' },
     engineer: { name: '', document: '', on: '' },
+    engineerFiles: [],
     repeatsId: '',
     instrumentOverride: '',
   }
@@ -131,7 +135,7 @@ export const engineerTyped = (engineer: PlanDraft['engineer']): boolean => Objec
 
 /** The request that the plan stands for, unchecked. */
 export function toRequest(draft: PlanDraft, stamp: Stamp, { nameOf, contentOf }: PlanLookup) {
-  const { combine: _combine, points, pumpHand, aboveRating, engineer, ...rest } = draft
+  const { combine: _combine, points, pumpHand, aboveRating, engineer, engineerFiles, ...rest } = draft
   const stranger = pumpHand.id === SOMEBODY_ELSE
   return {
     ...rest,
@@ -143,6 +147,7 @@ export function toRequest(draft: PlanDraft, stamp: Stamp, { nameOf, contentOf }:
     // Kept in the draft while another protocol is tried, and sent only where it is asked for.
     aboveRating: contentOf(draft.protocolId)?.aboveRating ? { ...aboveRating, percent: typedNumber(aboveRating.percent) } : null,
     engineer: engineerTyped(engineer) ? engineer : null,
+    attachments: engineerTyped(engineer) ? engineerFiles : [],
     repeatsId: draft.repeatsId || null,
     instrumentOverride: draft.instrumentOverride.trim() || null,
   }

@@ -9,7 +9,7 @@ import { useKeptDraft } from '../../lib/use-kept-draft'
 import { newPlan, toRequest, type PlanDraft, type PlanLookup, type Stamp } from './draft'
 
 /** Goes up when the form's fields change, so that an older draft isn't poured into it. */
-const VERSION = 3
+const VERSION = 4
 
 const stamp = (): Stamp => ({ deviceId: deviceId(), bootId, monotonicMs: monotonicMs(), observedAt: new Date().toISOString() })
 

@@ -6,6 +6,7 @@ import { evaluateTest, type TestEvaluation } from '#shared/proof-test/evaluate'
 import { frozenDifferences, standingOf, type FrozenDifference, type RecordStanding } from '#shared/proof-test/record'
 import type { Correction, ProofTestState, Row } from '#shared/proof-test/state'
 import type { MarkName } from '../../components/marks'
+import { placedIn, type Placed } from '../../lib/attachment-places'
 
 /** A record as the page shows it: everything follows from the ledger. */
 export interface RecordView {
@@ -17,6 +18,8 @@ export interface RecordView {
   chain: ChainCheck
   sealed: EntriesResponse['sealed']
   differences: FrozenDifference[]
+  /** Photos and documents with the entries that name them. */
+  photos: Placed[]
   nameOf: (personId: string) => string
 }
 
@@ -41,6 +44,7 @@ export function readRecord(answer: EntriesResponse): RecordView {
     chain: checkChain(stored),
     sealed: answer.sealed,
     differences: frozenDifferences(answer.ledgerId, answer.entries),
+    photos: placedIn(answer.entries),
     nameOf: (personId) => named[personId] ?? 'somebody unknown here',
   }
 }

@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react'
 import { useForm } from 'react-hook-form'
 import { calibrationSchemaFor, type Calibration, type InstrumentDetails } from '#shared/instruments/model'
 import { FORCE_UNITS, LENGTH_UNITS, PRESSURE_UNITS, type Unit } from '#shared/units'
@@ -29,11 +30,13 @@ type CalibrationFormProps = {
   details: InstrumentDetails
   send: (calibration: Calibration) => Promise<unknown>
   sending: boolean
+  /** The certificate's own file, chosen above the actions. */
+  file?: ReactNode
   onLeave: () => void
 }
 
 /** A certificate: when, until when, against what, and what was found. */
-export function CalibrationForm({ details, send, sending, onLeave }: CalibrationFormProps) {
+export function CalibrationForm({ details, send, sending, file, onLeave }: CalibrationFormProps) {
   const form = useForm<CalibrationDraft, unknown, Calibration>({
     resolver: draftResolver<CalibrationDraft, Calibration>(calibrationSchemaFor[details.kind], toCalibration),
     defaultValues: {
@@ -92,6 +95,7 @@ export function CalibrationForm({ details, send, sending, onLeave }: Calibration
           hint="Printed beside U, mostly 2. Goes with U."
         />
       </div>
+      {file}
       <FormActions>
         <Button type="submit" kind="next" busy={sending && 'Keeping it'}>
           Enter this calibration

@@ -4,6 +4,7 @@ import { DataTable, type Column } from '../../../components/data-table'
 import { Mark } from '../../../components/marks'
 import { NothingHere } from '../../../components/nothing-here'
 import { shortDate } from '../../../lib/dates'
+import { CertificateFile } from './certificate-file'
 
 function Found({ result }: { result: CalibrationRow['calibration']['result'] }) {
   const sound = result === 'in tolerance'
@@ -21,7 +22,7 @@ function uncertaintyWords({ calibration }: CalibrationRow): string {
     : `± ${typedWords(calibration.uncertainty.value)}, k = ${calibration.uncertainty.k}`
 }
 
-const columns: readonly Column<CalibrationRow>[] = [
+const columnsOf = (code: string): readonly Column<CalibrationRow>[] => [
   { id: 'on', header: 'Compared on', names: true, className: 'whitespace-nowrap', cell: (row) => shortDate(row.calibration.calibratedOn) },
   { id: 'found', header: 'Found', className: 'whitespace-nowrap', cell: (row) => <Found result={row.calibration.result} /> },
   { id: 'due', header: 'Next one due', className: 'whitespace-nowrap', cell: (row) => shortDate(row.calibration.dueOn) },
@@ -29,12 +30,13 @@ const columns: readonly Column<CalibrationRow>[] = [
     id: 'certificate',
     header: 'Certificate',
     className: 'w-full',
-    cell: ({ calibration, createdBy }) => (
+    cell: (row) => (
       <>
-        {calibration.certificate}
+        {row.calibration.certificate}
         <span className="block text-graphite">
-          {calibration.comparedWith !== '' && `${calibration.comparedWith}. `}Entered by {createdBy}
+          {row.calibration.comparedWith !== '' && `${row.calibration.comparedWith}. `}Entered by {row.createdBy}
         </span>
+        <CertificateFile row={row} code={code} />
       </>
     ),
   },
@@ -42,13 +44,13 @@ const columns: readonly Column<CalibrationRow>[] = [
 ]
 
 /** Every calibration the instrument ever had, the latest first. */
-export function CalibrationTable({ calibrations }: { calibrations: readonly CalibrationRow[] }) {
+export function CalibrationTable({ calibrations, code }: { calibrations: readonly CalibrationRow[]; code: string }) {
   return (
     <DataTable
       caption="Calibrations, the latest first"
       rows={calibrations}
       rowKey={(row) => row.id}
-      columns={columns}
+      columns={columnsOf(code)}
       nothing={<NothingHere what="No calibration is entered yet." next="Until there is one, this instrument blocks a new test." />}
       phoneRow={(row) => ({
         mark: <Mark name={row.calibration.result === 'in tolerance' ? 'within' : 'beyond'} />,

@@ -1,6 +1,7 @@
 import { useState } from 'react'
 import type { InstrumentResponse } from '#shared/api/instruments'
 import { instrumentWords } from '#shared/instruments/words'
+import { PhotoField } from '../../../components/attachments/photo-field'
 import { Button, ButtonLink } from '../../../components/button'
 import { FormError } from '../../../components/form'
 import { Page, PlateBesidePaper, Section } from '../../../components/page'
@@ -8,6 +9,7 @@ import { sayWhatFailed } from '../../../lib/problem'
 import { paths } from '../../../paths'
 import { useAddCalibration } from '../api/add-calibration'
 import { useRetireInstrument } from '../api/retire-instrument'
+import { useCertificate } from '../use-certificate'
 import { CalibrationForm } from './calibration-form'
 import { CalibrationState } from './calibration-state'
 import { CalibrationTable } from './calibration-table'
@@ -40,6 +42,7 @@ export function InstrumentPage({ answer, today, mayWrite, mayCalibrate }: Instru
   const { id, details, retired } = instrument
   const [entering, setEntering] = useState(false)
   const add = useAddCalibration(id)
+  const certificate = useCertificate(id, calibrations, entering)
   const actions = mayWrite && !retired && (
     <>
       <ButtonLink to={paths.editInstrument.href(id)}>Change its details</ButtonLink>
@@ -61,15 +64,26 @@ export function InstrumentPage({ answer, today, mayWrite, mayCalibrate }: Instru
                 details={details}
                 sending={add.isPending}
                 send={async (calibration) => {
-                  await add.mutateAsync(calibration)
+                  await add.mutateAsync({ ...calibration, certificateFile: certificate.chosen[0] ?? null })
                   setEntering(false)
                 }}
                 onLeave={() => setEntering(false)}
+                file={
+                  <PhotoField
+                    label="The certificate itself"
+                    hint="A PDF or a photo of it. It is sent when the calibration is entered."
+                    owner={certificate.owner}
+                    chosen={certificate.chosen}
+                    // What is chosen is what is kept for this draft.
+                    onChange={() => undefined}
+                    most={1}
+                  />
+                }
               />
             </Section>
           )}
           <Section title="Calibrations">
-            <CalibrationTable calibrations={calibrations} />
+            <CalibrationTable calibrations={calibrations} code={details.code} />
           </Section>
           {mayWrite && <Retirement id={id} code={details.code} retired={retired} />}
         </div>

@@ -37,7 +37,9 @@ export function HereProvider({ children, staysWhenSignedOut = false }: HereProvi
   const userId = user?.id
   useEffect(() => {
     // What an earlier page kept and could not send goes out from whichever screen comes next.
-    if (userId !== undefined && 'indexedDB' in window) void import('../../../lib/outbox').then(({ outbox }) => outbox.sendAs(userId))
+    if (userId === undefined || !('indexedDB' in window)) return
+    void import('../../../lib/outbox').then(({ outbox }) => outbox.sendAs(userId))
+    void import('../../../lib/attachments').then(({ files }) => files.sendNow({ everything: true }))
   }, [userId])
   const here = useMemo<Here | null>(() => (user && shops && shop ? { user, shops, shop, adopt } : null), [user, shops, shop, adopt])
 

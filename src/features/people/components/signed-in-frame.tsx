@@ -1,35 +1,32 @@
 import type { ReactNode } from 'react'
-import { useQueryClient } from '@tanstack/react-query'
 import { useLocation, useNavigate } from 'react-router-dom'
 import { PhoneNavigation, PhoneTitleBar } from '../../../components/navigation/phone-navigation'
 import { ShopMenu, type MenuEntry } from '../../../components/navigation/shop-menu'
 import { TopNavigation } from '../../../components/navigation/top-navigation'
 import { useHere } from '../../../lib/here'
 import { paths } from '../../../paths'
-import { useSignOut } from '../api/sign-out'
+import { entriesWait, useLeave } from '../api/sign-out'
 
 /** What belongs to the person and the shop: the menu on wide screens, part of "More" on the phone. */
 export function usePersonEntries(): readonly MenuEntry[] {
-  const { shop, shops } = useHere()
-  const signOut = useSignOut()
-  const client = useQueryClient()
+  const { user, shop, shops } = useHere()
+  const { leave, failed } = useLeave()
   const navigate = useNavigate()
+  const leaveOrSay = async (): Promise<void> => {
+    if (await entriesWait(user.id)) await navigate(paths.thisDevice.href({ leaving: 'yes' }))
+    else leave()
+  }
   const otherShops = shops.filter((one) => one.id !== shop.id)
   return [
     { label: 'Your account', to: paths.account.href() },
     { label: 'Shop settings', to: paths.settings.href() },
+    { label: 'On this device', note: 'what is kept here, sent and sealed', to: paths.thisDevice.href() },
     { label: 'Help', note: 'how each figure is worked out', to: paths.help.href() },
     ...otherShops.map((one) => ({ label: `Go to ${one.name}`, note: `there you are ${one.role}`, to: paths.today.href({ shop: one.id }) })),
     {
-      label: signOut.isError ? 'Still signed in: try again' : 'Sign out',
-      note: signOut.isError ? 'The server was not reached.' : undefined,
-      act: () =>
-        signOut.mutate(undefined, {
-          onSuccess: () => {
-            client.clear()
-            void navigate(paths.signIn.href())
-          },
-        }),
+      label: failed ? 'Still signed in: try again' : 'Sign out',
+      note: failed ? 'The server was not reached.' : undefined,
+      act: () => void leaveOrSay(),
     },
   ]
 }

@@ -1,6 +1,7 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query'
 import { openTestResponseSchema, type OpenTestRequest } from '#shared/api/proof-tests'
 import { api } from '../../../lib/api-client'
+import { files } from '../../../lib/attachments'
 
 const openTest = (shopId: string, request: OpenTestRequest) =>
   api.send('POST', openTestResponseSchema, '/api/proof-tests', request, { query: { shop: shopId } })
@@ -10,9 +11,17 @@ export function useOpenTest(shopId: string) {
   const client = useQueryClient()
   return useMutation({
     mutationFn: (request: OpenTestRequest) => openTest(shopId, request),
-    onSuccess: () =>
-      Promise.all(
+    onSuccess: (_answer, { id, attachments = [] }) => {
+      // What goes wrong here is tried again at the next start.
+      files
+        .named(
+          `ledger:${id}`,
+          attachments.map(({ sha256 }) => sha256),
+        )
+        .catch(() => undefined)
+      return Promise.all(
         [['proof-tests'], ['presses'], ['press'], ['planned-press'], ['today']].map((queryKey) => client.invalidateQueries({ queryKey })),
-      ),
+      )
+    },
   })
 }

@@ -1,3 +1,4 @@
+import { useWatch } from 'react-hook-form'
 import { Link } from 'react-router-dom'
 import { cannotTell, expectedAtStage } from '#shared/proof-test/can-tell'
 import type { Opened } from '#shared/proof-test/entries'
@@ -5,6 +6,7 @@ import { checkOf } from '#shared/proof-test/expected'
 import { anyFigures } from '#shared/structure/check-words'
 import { expectedDeflection } from '#shared/structure/expected-deflection'
 import { toSI } from '#shared/units'
+import { PhotoField } from '../../../components/attachments/photo-field'
 import { DateField, TextField } from '../../../components/field'
 import { FormStep, WholeRow } from '../../../components/form-steps'
 import { HowLink } from '../../../components/how-link'
@@ -29,6 +31,8 @@ function whyNothingExpected(opened: Opened): string | null {
 
 function EngineerFields({ form }: { form: PlanForm }) {
   const errors = form.formState.errors.engineer
+  const { control, getValues, setValue } = form
+  const chosen = useWatch({ control, name: 'engineerFiles' })
   return (
     <WholeRow>
       <fieldset className="grid grid-cols-1 items-start gap-4 border-2 border-ink p-4 tablet:grid-cols-2">
@@ -46,6 +50,15 @@ function EngineerFields({ form }: { form: PlanForm }) {
           {...form.register('engineer.document')}
         />
         <DateField label="Its date" message={errors?.on?.message} {...form.register('engineer.on')} />
+        <PhotoField
+          className="tablet:col-span-2"
+          label="The document itself"
+          hint="As PDF or photo. It is sent when the test is open, and stands in the record."
+          owner={`ledger:${getValues('id')}`}
+          chosen={chosen}
+          onChange={(next) => setValue('engineerFiles', next)}
+          most={4}
+        />
       </fieldset>
     </WholeRow>
   )

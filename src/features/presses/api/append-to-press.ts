@@ -22,11 +22,11 @@ export function useAppendToPress(pressId: string, headSeq: number, form: string)
         drafts.map((draft) => ({ ledgerId: pressId, ...draft, v: PRESS_VERSION, authorId: user.id, basedOnSeq: headSeq })),
         (request) => api.send('POST', appendResponseSchema, `/api/presses/${encodeURIComponent(pressId)}/entries`, request),
       ),
-    onSuccess: (_answer, drafts) =>
-      files.named(
-        `ledger:${pressId}`,
-        drafts.flatMap(({ attachments = [] }) => attachments.map(({ sha256 }) => sha256)),
-      ),
+    onSuccess: (_answer, drafts) => {
+      const hashes = drafts.flatMap(({ attachments = [] }) => attachments.map(({ sha256 }) => sha256))
+      // What goes wrong here is tried again at the next start.
+      files.named(`ledger:${pressId}`, hashes).catch(() => undefined)
+    },
     onSettled: () =>
       Promise.all([
         client.invalidateQueries({ queryKey: pressQuery(pressId).queryKey }),

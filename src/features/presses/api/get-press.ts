@@ -4,6 +4,7 @@ import { pressResponseSchema } from '#shared/api/presses'
 import { foldPress } from '#shared/press/apply'
 import { api } from '../../../lib/api-client'
 import { placedIn } from '../../../lib/attachment-places'
+import { useLive } from '../../../lib/use-live'
 
 const addressOf = (id: string): `/api/presses/${string}` => `/api/presses/${encodeURIComponent(id)}`
 
@@ -17,11 +18,16 @@ async function fetchPress(id: string, signal?: AbortSignal) {
   return { shopId: row.shopId, row: row.press, state, people: ledger.people, photos: placedIn(ledger.entries) }
 }
 
+const pressKey = (id: string) => ['press', id] as const
+
 export const pressQuery = (id: string) =>
   queryOptions({
-    queryKey: ['press', id] as const,
+    queryKey: pressKey(id),
     queryFn: ({ signal }) => fetchPress(id, signal),
   })
 
-export const usePress = (id: string) => useQuery(pressQuery(id))
+export function usePress(id: string) {
+  useLive([id], pressKey(id))
+  return useQuery(pressQuery(id))
+}
 export type PressFetched = Awaited<ReturnType<typeof fetchPress>>

@@ -1,14 +1,15 @@
-import { useEffect, type ReactElement } from 'react'
+import type { ReactElement } from 'react'
 import type { Opened } from '#shared/proof-test/entries'
 import { QuietPlate } from '../../../components/run/plates'
 import { RunTitleBlock } from '../../../components/run/run-title-block'
-import { readyAlarm, soundAlarm } from '../../../lib/alarm'
+import { readyAlarm } from '../../../lib/alarm'
 import { clockTime } from '../../../lib/dates'
 import { useTitle } from '../../../lib/use-title'
 import { useWakeLock } from '../../../lib/wake-lock'
 import { Notices } from '../run/notices'
 import { ReasonPanel } from '../run/reason-panel'
 import { SlotFrame } from '../run/slots'
+import { useOthersAlarm } from '../use-others-alarm'
 import type { Run } from '../use-run'
 import { AttendFrame } from './attend-frame'
 import { AttendView } from './attend-view'
@@ -49,10 +50,7 @@ export function AttendScreen({ run, opened }: { run: Run; opened: Opened }): Rea
   useWakeLock(run.state.loaded !== null)
   const { stopped } = run.state
   const { connected } = run.connection
-  const byOther = stopped !== null && run.state.loaded !== null && stopped.by !== run.me.id
-  useEffect(() => {
-    if (byOther) soundAlarm('stop')
-  }, [byOther])
+  useOthersAlarm(run)
   const stop = (): void => {
     readyAlarm()
     run.record({ kind: 'stopped', payload: { cause: 'called', why: `Called by ${run.me.name}` } })

@@ -16,11 +16,19 @@ export function PausePanel({ run }: { run: Run }): ReactElement {
   const release = (): void => run.record({ kind: 'released', payload: { gaugeZero: true, ramClear: true } })
   return (
     <>
-      <TimerBand step={run.step} total={LONGEST_PAUSE_SECONDS} elapsed={elapsed} label="Paused" sub="left, then release" overText="Over: release" />
+      <TimerBand
+        step={run.step}
+        total={LONGEST_PAUSE_SECONDS}
+        elapsed={elapsed}
+        label="Paused"
+        sub="left, then release"
+        overText="Over: release"
+      />
       <BenchScroll>
         <h1 tabIndex={-1} className="text-22 tablet:text-26">
           {over ? 'Open the release valve slowly.' : 'Paused. The press stays loaded.'}
         </h1>
+        {paused && <p className="mt-1 text-18 font-semibold">{paused.why}.</p>}
         <p className="mt-1 text-18">
           {over
             ? 'A press is not kept loaded longer than five minutes without going on. The climb starts again from its first stage.'

@@ -7,6 +7,7 @@ import { useTitle } from '../../../lib/use-title'
 import { useWakeLock } from '../../../lib/wake-lock'
 import { dropDraftsOf } from '../drafts'
 import { readyAlarm } from '../../../lib/alarm'
+import { useOthersAlarm } from '../use-others-alarm'
 import type { Run } from '../use-run'
 import { useCover } from './cover'
 import { IrregularPanel } from './irregular-panel'
@@ -53,6 +54,11 @@ export function RunScreen({ run, opened }: Props): ReactElement {
   const covered = cover && run.state.loaded !== null && run.state.stopped === null
   const { stopped } = run.state
   const over = run.state.conclusion !== null
+  const pausedByOther = useOthersAlarm(run)
+  // What somebody called out must not lie behind a note that is being written; its text is kept.
+  useEffect(() => {
+    if (pausedByOther) setPanel('none')
+  }, [pausedByOther])
   useWakeLock(run.state.loaded !== null || run.step.name === 'datum-watch' || run.step.name === 'recovery')
   useEffect(() => {
     if (over) dropDraftsOf(run.testId)

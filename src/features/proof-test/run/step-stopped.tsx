@@ -1,6 +1,5 @@
 import { useEffect, useRef, type ReactElement } from 'react'
 import { VerdictBanner } from '../../../components/run/verdict-banner'
-import { soundAlarm } from '../../../lib/alarm'
 import { clockTime } from '../../../lib/dates'
 import { BenchScroll } from './head-band'
 import { ReleasePlate } from './release'
@@ -11,7 +10,8 @@ import { Evidence, stageBefore } from './verdict-parts'
 function StopsFor(): ReactElement {
   return (
     <p className="mt-4 border-t-2 border-ink pt-2 text-18">
-      <strong className="font-semibold">This test cannot go back under load.</strong> Conclude it, find the joint, repair, then start again from the walk-down.
+      <strong className="font-semibold">This test cannot go back under load.</strong> Conclude it, find the joint, repair, then start again
+      from the walk-down.
     </p>
   )
 }
@@ -22,11 +22,9 @@ export function StoppedReleaseStep({ run }: StepProps<'stopped-release'>): React
   const { stopped } = run.state
   const stage = run.evaluation?.stages.at(-1)
   const byCriterion = stopped?.cause === 'criterion' && stage !== undefined
-  const others = stopped !== null && stopped.by !== run.me.id
   useEffect(() => {
     heading.current?.focus({ preventScroll: true })
-    if (others) soundAlarm('stop')
-  }, [others])
+  }, [])
   return (
     <>
       <Into slot="over">

@@ -1,6 +1,7 @@
 import { ButtonAnchor, ButtonLink, TextLink } from '../../../components/button'
 import { inset } from '../../../components/page'
 import { ZonedSheet } from '../../../components/zoned-sheet'
+import { useFiles } from '../../../lib/attachment-held'
 import { classNames } from '../../../lib/class-names'
 import { useTitle } from '../../../lib/use-title'
 import { paths } from '../../../paths'
@@ -14,6 +15,7 @@ import { ForceBudget } from './force-budget'
 import { RecordChart } from './record-chart'
 import { RecordFacts } from './record-facts'
 import { RecordCourse, RecordHead, RecordResult } from './record-head'
+import { RecordPhotos } from './record-photos'
 import { SignPanel } from './sign-panel'
 import { SignatureBlocks } from './signature-blocks'
 import { StagesAsRead } from './stages-table'
@@ -56,6 +58,7 @@ function Actions({ record, turn, mayExport, part }: RecordSheetProps) {
 /** The record of one proof test as one sheet, and what may be done about it. */
 export function RecordSheet(props: RecordSheetProps) {
   const { record, turn, today } = props
+  const files = useFiles('proof-tests', record.id, record.photos.length)
   useTitle(`${record.opened.number} ${record.opened.press.name}`)
   return (
     <div className={classNames(inset, 'mx-auto w-full max-w-[1328px] pb-8 max-tablet:px-2 print:max-w-none print:p-0')}>
@@ -80,12 +83,13 @@ export function RecordSheet(props: RecordSheetProps) {
           <ForceBudget record={record} />
           <EveryCriterion record={record} />
           <Corrections record={record} />
+          <RecordPhotos record={record} files={files} />
           <Notices record={record} />
           <Cautions record={record} />
         </article>
         <SignatureBlocks record={record} today={today} />
       </ZonedSheet>
-      <SignPanel record={record} turn={turn} />
+      <SignPanel record={record} turn={turn} files={files} mayGiveUp={props.part !== 'other'} />
     </div>
   )
 }

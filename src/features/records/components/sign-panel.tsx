@@ -5,10 +5,13 @@ import { z } from 'zod'
 import { Button } from '../../../components/button'
 import { PasswordField, TextArea, TextField } from '../../../components/field'
 import { Form, FormActions, FormError } from '../../../components/form'
+import type { Files } from '../../../lib/attachment-held'
 import { useProblemFields } from '../../../lib/use-problem-fields'
 import { hasMovedOn, useSign } from '../api/sign'
 import type { RecordView } from '../record-view'
 import type { SignTurn } from '../sign-turn'
+import { missingOf } from '../file-places'
+import { MissingFiles } from './missing-files'
 
 const MEANINGS = {
   lead: 'I ran this test and these are its readings.',
@@ -105,9 +108,19 @@ function Panel({ title, note, children }: { title: string; note: ReactNode; chil
   )
 }
 
+interface SignPanelProps {
+  record: RecordView
+  turn: SignTurn
+  files: Files
+  /** Lead and witness may declare a file lost. */
+  mayGiveUp: boolean
+}
+
 /** What the person who reads may do about it now: sign, countersign, decline, or know who is waited for. */
-export function SignPanel({ record, turn }: { record: RecordView; turn: SignTurn }) {
+export function SignPanel({ record, turn, files, mayGiveUp }: SignPanelProps) {
   const { opened, state } = record
+  const missing = missingOf(record, files.where)
+  const waiting = missing.length > 0 && <MissingFiles record={record} files={files} missing={missing} mayGiveUp={mayGiveUp} />
   if (turn.is === 'nobody') return null
   if (turn.is === 'waits') {
     return (
@@ -122,9 +135,11 @@ export function SignPanel({ record, turn }: { record: RecordView; turn: SignTurn
         title="Sign this record"
         note={`You concluded it ${state.conclusion?.conclusion ?? ''}. Read what stands above as it will print; then only ${opened.people.witness.name} can act.`}
       >
-        <div className="max-w-xl">
-          <SignForm record={record} as="lead" />
-        </div>
+        {waiting || (
+          <div className="max-w-xl">
+            <SignForm record={record} as="lead" />
+          </div>
+        )}
       </Panel>
     )
   }
@@ -134,7 +149,7 @@ export function SignPanel({ record, turn }: { record: RecordView; turn: SignTurn
       note={`${state.signed?.printedName ?? ''} signed it as lead. You are named as the witness, ${opened.people.witness.relation}.`}
     >
       <div className="grid gap-x-12 gap-y-8 desktop:grid-cols-2">
-        <SignForm record={record} as="witness" />
+        {waiting || <SignForm record={record} as="witness" />}
         <DeclineForm record={record} />
       </div>
     </Panel>
