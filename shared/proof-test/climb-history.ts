@@ -1,5 +1,5 @@
 import type { ClimbHistory } from '../api/press-history'
-import { tQuantile } from '../statistics/student-t'
+import { studentTQuantile } from '../statistics/student-t'
 import type { ClimbEvaluation } from './evaluate-climb'
 import { evaluateTest } from './evaluate'
 import type { Criterion } from './figures'
@@ -13,7 +13,7 @@ function stiffnessOf({ fit }: ClimbEvaluation): { stiffness: number | null; stif
   if (!fit || !(fit.slope > 0)) return { stiffness: null, stiffnessU: null }
   const stiffness = 1 / fit.slope
   // u(1/b) = u(b)/b² (JCGM 100, 5.1.2).
-  const stiffnessU = fit.seSlope === null || fit.dof < 1 ? null : (tQuantile(0.975, fit.dof) * fit.seSlope) / fit.slope ** 2
+  const stiffnessU = fit.seSlope === null || fit.dof < 1 ? null : (studentTQuantile(0.975, fit.dof) * fit.seSlope) / fit.slope ** 2
   return { stiffness, stiffnessU }
 }
 
