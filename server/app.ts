@@ -27,7 +27,7 @@ import { verificationRoutes } from './routes/verification'
 const longestBody = '2mb'
 
 function securityHeaders(config: Config) {
-  const isHttps = config.publicUrl?.startsWith('https:') ?? false
+  const { isHttps } = config
   return helmet({
     // In development Vite puts a script of its own into the page.
     contentSecurityPolicy:

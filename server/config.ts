@@ -8,10 +8,15 @@ const environment = z.object({
   NODE_ENV: z.enum(['production', 'development', 'test']).default('production'),
   PORT: z.coerce.number('PORT must be a number.').int().min(0).max(65535).default(4280),
   HOST: z.string().min(1).default('127.0.0.1'),
-  DATABASE_URL: z.string().regex(/^(mariadb|mysql):\/\//, 'DATABASE_URL must begin with mariadb:// or mysql://.').optional(),
+  DATABASE_URL: z
+    .string()
+    .regex(/^(mariadb|mysql):\/\//, 'DATABASE_URL must begin with mariadb:// or mysql://.')
+    .optional(),
   DATA_DIR: z.string().min(1).default('.data'),
   SECRETS_DIR: z.string().min(1).optional(),
   PUBLIC_URL: z.url('PUBLIC_URL must be a whole address, such as https://press.example.').optional(),
+  TLS_CERT: z.string().min(1).optional(),
+  TLS_KEY: z.string().min(1).optional(),
   S3_BUCKET: z.string().min(3).optional(),
   S3_ENDPOINT: z.url('S3_ENDPOINT must be a whole address, such as https://objects.example.').optional(),
   S3_REGION: z.string().min(1).default('us-east-1'),
@@ -36,6 +41,10 @@ export interface Config {
   secretsDirectory: string
   /** The address that people use, when a proxy stands in front. */
   publicUrl: string | undefined
+  /** Files of a certificate with its chain and of its key, in PEM: the server then speaks https itself. */
+  tls: { certificateFile: string; keyFile: string } | undefined
+  /** Whether people's browsers come by https, to the server itself or to a proxy in front of it. */
+  isHttps: boolean
   /** Object storage for photos and documents; without it they are kept in a folder beside the data. */
   s3: { bucket: string; endpoint: string | undefined; region: string; prefix: string } | undefined
   bcryptCost: number
@@ -43,6 +52,12 @@ export interface Config {
   /** In tests only: a database that may lose its last second is taken as it is. */
   relaxedDurability: boolean
   logLevel: string
+}
+
+function tlsOf({ TLS_CERT, TLS_KEY }: z.infer<typeof environment>): Config['tls'] {
+  if (TLS_CERT === undefined && TLS_KEY === undefined) return undefined
+  if (TLS_CERT === undefined || TLS_KEY === undefined) throw new Error('TLS_CERT and TLS_KEY go together: set both, or none.')
+  return { certificateFile: path.resolve(projectRoot, TLS_CERT), keyFile: path.resolve(projectRoot, TLS_KEY) }
 }
 
 /** Empty variables count as unset: `DATABASE_URL= npm start` means the embedded database. */
@@ -54,14 +69,18 @@ export function readConfig(variables: NodeJS.ProcessEnv): Config {
   }
   const values = parsed.data
   const dataDirectory = path.resolve(projectRoot, values.DATA_DIR)
+  const tls = tlsOf(values)
   return {
     environment: values.NODE_ENV,
     port: values.PORT,
     host: values.HOST,
     databaseUrl: values.DATABASE_URL,
     dataDirectory,
-    secretsDirectory: values.SECRETS_DIR === undefined ? path.join(dataDirectory, 'secrets') : path.resolve(projectRoot, values.SECRETS_DIR),
+    secretsDirectory:
+      values.SECRETS_DIR === undefined ? path.join(dataDirectory, 'secrets') : path.resolve(projectRoot, values.SECRETS_DIR),
     publicUrl: values.PUBLIC_URL?.replace(/\/+$/, ''),
+    tls,
+    isHttps: values.PUBLIC_URL === undefined ? tls !== undefined : values.PUBLIC_URL.startsWith('https:'),
     s3:
       values.S3_BUCKET === undefined
         ? undefined

@@ -3,6 +3,7 @@ import { migrateUp } from './database/migrator'
 import { openDatabase } from './database/open-database'
 import { loadDemoShop, signInLines } from './database/seeders/demo'
 import { initModels } from './models'
+import { openStorage } from './storage/open-storage'
 
 /** `npm run demo`: the demo shop for a database that has no shop yet, the one that DATABASE_URL names or the embedded one. */
 async function main(): Promise<void> {
@@ -11,7 +12,7 @@ async function main(): Promise<void> {
   try {
     initModels(database.sequelize)
     await migrateUp(database.sequelize)
-    const signIns = await loadDemoShop({ config, database: database.sequelize, now: () => new Date() })
+    const signIns = await loadDemoShop({ config, database: database.sequelize, storage: await openStorage(config, new Date()), now: () => new Date() })
     process.stdout.write(signInLines(signIns) || 'There are shops in this database already: nothing was loaded.\n')
   } finally {
     await database.close()

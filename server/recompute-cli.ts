@@ -9,6 +9,7 @@ import { recordOf, type RecordSource } from './records/record'
 import { recordWorkbook } from './records/record-workbook'
 import { differenceOf, numberOf, openRecomputing, workbookFrom, type ComputedCell } from './records/recompute'
 import { recordSource } from './services/records'
+import { openStorage } from './storage/open-storage'
 
 /** The most that two programs may differ by in the same sum, relative to it: both compute with 15 to 16 digits. */
 const MOST = 1e-9
@@ -37,7 +38,7 @@ async function readSource(number: string | undefined): Promise<RecordSource> {
     initModels(database.sequelize)
     if (database.isEmbedded) {
       await migrateUp(database.sequelize)
-      await loadDemoShop({ config, database: database.sequelize, now: () => new Date() })
+      await loadDemoShop({ config, database: database.sequelize, storage: await openStorage(config, new Date()), now: () => new Date() })
     }
     return await findRecord(database.sequelize, number)
   } finally {

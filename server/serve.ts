@@ -1,5 +1,7 @@
+import { readFileSync } from 'node:fs'
 import { createServer } from 'node:http'
 import type { Server } from 'node:http'
+import { createServer as createTlsServer } from 'node:https'
 import type { Express } from 'express'
 import { pino } from 'pino'
 import { createApp } from './app'
@@ -21,7 +23,26 @@ export interface Pages {
   close?(): Promise<void>
 }
 
-function listen(server: Server, { port, host }: Config): Promise<string> {
+function readPem(variable: string, file: string): Buffer {
+  try {
+    return readFileSync(file)
+  } catch {
+    throw new Error(`${variable} names ${file}, which can't be read.`)
+  }
+}
+
+/** Speaks https itself where a certificate is given, else http. */
+function makeServer({ tls }: Config): Server {
+  if (tls === undefined) return createServer()
+  const [cert, key] = [readPem('TLS_CERT', tls.certificateFile), readPem('TLS_KEY', tls.keyFile)]
+  try {
+    return createTlsServer({ cert, key, minVersion: 'TLSv1.2' })
+  } catch (error) {
+    throw new Error('TLS_CERT and TLS_KEY are not a certificate and its key, in PEM.', { cause: error })
+  }
+}
+
+function listen(server: Server, { port, host, tls }: Config): Promise<string> {
   return new Promise((resolve, reject) => {
     server.once('error', (error: NodeJS.ErrnoException) => {
       reject(error.code === 'EADDRINUSE' ? new Error(`Port ${port} is taken. Set PORT to another one.`) : error)
@@ -29,7 +50,7 @@ function listen(server: Server, { port, host }: Config): Promise<string> {
     server.listen(port, host, () => {
       const address = server.address()
       const bound = address === null || typeof address === 'string' ? port : address.port
-      resolve(`http://${host.includes(':') ? `[${host}]` : host}:${bound}`)
+      resolve(`${tls === undefined ? 'http' : 'https'}://${host.includes(':') ? `[${host}]` : host}:${bound}`)
     })
   })
 }
@@ -63,6 +84,7 @@ type Closers = (() => Promise<void>)[]
 
 async function open(options: ServeOptions, closing: AbortSignal, closers: Closers): Promise<Running> {
   const config = readConfig(process.env)
+  const server = makeServer(config)
   const logger = pino({ level: config.logLevel }, pino.destination({ dest: 2, sync: true }))
   const database = await openDatabase(config, { logger })
   closers.push(() => database.close())
@@ -78,10 +100,12 @@ async function open(options: ServeOptions, closing: AbortSignal, closers: Closer
   initModels(database.sequelize)
   await migrateUp(database.sequelize)
   await options.prepare?.(context, database)
-  const server = createServer()
   const pages = await options.pages?.(server, config)
   if (pages?.close !== undefined) closers.push(() => pages.close?.() ?? Promise.resolve())
-  server.on('request', createApp(context, (app) => pages?.add(app)))
+  server.on(
+    'request',
+    createApp(context, (app) => pages?.add(app)),
+  )
   const address = await listen(server, config)
   closers.push(() => drain(server))
   return { context, database, address }

@@ -60,4 +60,5 @@ export const paths = {
     href: (query: { next?: string } = {}) => withQuery('/sign-in', query),
   },
   openShop: { pattern: '/open-shop', href: () => '/open-shop' },
+  checkRecord: { pattern: '/check', href: () => '/check' },
 } as const

@@ -9,6 +9,7 @@ import { askWhoIsHere, requireSession } from './routes/session-guard'
 const openScreens: RouteObject[] = [
   { path: paths.signIn.pattern, lazy: () => import('./routes/sign-in') },
   { path: paths.openShop.pattern, lazy: () => import('./routes/open-shop') },
+  { path: paths.checkRecord.pattern, lazy: () => import('./routes/check') },
 ]
 
 /** Each screen is a chunk of its own, fetched when it is opened. */

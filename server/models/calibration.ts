@@ -1,6 +1,15 @@
 import { Model } from 'sequelize'
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize'
-import { dayColumn, idColumn, jsonColumn, optionalCountColumn, optionalHashColumn, optionalTextColumn, textColumn, timeColumn } from './columns'
+import {
+  dayColumn,
+  idColumn,
+  jsonColumn,
+  optionalCountColumn,
+  optionalHashColumn,
+  optionalTextColumn,
+  textColumn,
+  timeColumn,
+} from './columns'
 
 export class Calibration extends Model<InferAttributes<Calibration>, InferCreationAttributes<Calibration>> {
   declare id: string

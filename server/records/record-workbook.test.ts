@@ -233,9 +233,11 @@ describe('the workbook of a countersigned test', () => {
     stored.forEach((entry, index) => {
       const row = sheet.getRow(5 + index)
       let text = ''
-      for (let column = 9; row.getCell(column).value !== null; column += 1) text += row.getCell(column).text
+      for (let column = 10; row.getCell(column).value !== null; column += 1) text += row.getCell(column).text
       expect(text).toBe(entry.canonical)
-      expect(row.getCell(7).value).toBe(entry.hash)
+      expect(row.getCell(8).value).toBe(entry.hash)
+      expect(row.getCell(4).value).toBeTruthy()
+      expect(row.getCell(5).value).toBeTruthy()
     })
   })
 

@@ -14,8 +14,7 @@ export function clientOf(request: Request): Client {
 }
 
 function cookieOptions(context: AppContext) {
-  const secure = context.config.publicUrl?.startsWith('https:') ?? false
-  return { name: sessionCookie, httpOnly: true, sameSite: 'lax', path: '/', secure } as const
+  return { name: sessionCookie, httpOnly: true, sameSite: 'lax', path: '/', secure: context.config.isHttps } as const
 }
 
 /** Sets the cookie and answers the session. */

@@ -132,7 +132,11 @@ export interface Served {
 }
 
 const notHereYet = (): Problem =>
-  new Problem(404, 'not-here-yet', 'This file is named and has not arrived yet. It comes from the device that took it, once that has a connection.')
+  new Problem(
+    404,
+    'not-here-yet',
+    'This file is named and has not arrived yet. It comes from the device that took it, once that has a connection.',
+  )
 
 /** The bytes as they were sent: checked against their hash each time, so that nobody is shown others. */
 async function readWhole({ storage, logger }: Asking['context'], key: string, sha256: string): Promise<Buffer> {
@@ -143,7 +147,11 @@ async function readWhole({ storage, logger }: Asking['context'], key: string, sh
   }
   if (sha256Of(bytes) !== sha256) {
     logger.error({ key }, 'A file that was kept has other bytes now')
-    throw new Problem(500, 'altered-file', 'The bytes of this file were altered after they were kept, so they are not shown. Restore them from a backup.')
+    throw new Problem(
+      500,
+      'altered-file',
+      'The bytes of this file were altered after they were kept, so they are not shown. Restore them from a backup.',
+    )
   }
   return bytes
 }

@@ -92,12 +92,15 @@ describe.each<[string, () => Storage]>([
     expect((await storage.list()).length).toBeGreaterThanOrEqual(4)
   })
 
-  it.each(['../outside', 'a/../../b', '/etc/passwd', 'a//b', '', '.incoming/x', 'a\\..\\b', 'a/.', 'a\0b'])('refuses the key %j', async (key) => {
-    const storage = make()
-    await expect(storage.put(key, Buffer.from('x'))).rejects.toThrow(RangeError)
-    await expect(storage.get(key)).rejects.toThrow(RangeError)
-    await expect(storage.has(key)).rejects.toThrow(RangeError)
-  })
+  it.each(['../outside', 'a/../../b', '/etc/passwd', 'a//b', '', '.incoming/x', 'a\\..\\b', 'a/.', 'a\0b'])(
+    'refuses the key %j',
+    async (key) => {
+      const storage = make()
+      await expect(storage.put(key, Buffer.from('x'))).rejects.toThrow(RangeError)
+      await expect(storage.get(key)).rejects.toThrow(RangeError)
+      await expect(storage.has(key)).rejects.toThrow(RangeError)
+    },
+  )
 })
 
 describe('a folder', () => {
@@ -154,7 +157,9 @@ describe('a bucket', () => {
       const token = new URL(request.url ?? '', 'http://fake').searchParams.get('continuation-token')
       asked.push(token)
       const more = '<IsTruncated>true</IsTruncated><NextContinuationToken>page 2</NextContinuationToken>'
-      response.setHeader('Content-Type', 'application/xml').end(token === null ? page('shop/a', more) : page('shop/b', '<IsTruncated>false</IsTruncated>'))
+      response
+        .setHeader('Content-Type', 'application/xml')
+        .end(token === null ? page('shop/a', more) : page('shop/b', '<IsTruncated>false</IsTruncated>'))
     })
     await new Promise<void>((resolve) => paging.listen(0, '127.0.0.1', resolve))
     try {

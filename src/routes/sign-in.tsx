@@ -26,7 +26,12 @@ export function Component() {
           Stop when it stops behaving like a spring.
         </>
       }
-      foot={<FootLink to={paths.openShop.href()}>Open a shop</FootLink>}
+      foot={
+        <>
+          <FootLink to={paths.openShop.href()}>Open a shop</FootLink>
+          <FootLink to={paths.checkRecord.href()}>Check a record</FootLink>
+        </>
+      }
     >
       <SignInForm onSignedIn={() => void navigate(ownPath(search.get('next')) ?? paths.today.href(), { replace: true })} />
     </TitleBlock>

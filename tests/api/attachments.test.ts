@@ -218,7 +218,10 @@ describe('who may', () => {
     const photo = await picture()
     await name(run, [photo])
     const by = ledger(run.id)
-    const elsewhere = run.staff.lead.client.put(at(by, photo)).set('Sec-Fetch-Site', 'cross-site').set('Origin', 'https://elsewhere.example')
+    const elsewhere = run.staff.lead.client
+      .put(at(by, photo))
+      .set('Sec-Fetch-Site', 'cross-site')
+      .set('Origin', 'https://elsewhere.example')
     expect(codeOf(await elsewhere.set('Content-Type', 'image/jpeg').send(photo.bytes))).toBe('403 cross-origin')
     await run.staff.lead.client.delete('/api/session')
     expect(codeOf(await put(run.staff.lead, by, photo))).toBe('401 not-signed-in')
@@ -254,12 +257,21 @@ describe('smaller pictures', () => {
     const photo = fileOf(await sharp(drawn.bytes).withMetadata({ orientation: 6 }).toBuffer(), 'image/jpeg', 'Crack "at" toe/7.jpeg')
     await name(run, [photo])
     await put(run.staff.lead, ledger(run.id), photo).expect(204)
-    for (const [size, height] of [['thumb', 320], ['page', 1600]] as const) {
+    for (const [size, height] of [
+      ['thumb', 320],
+      ['page', 1600],
+    ] as const) {
       for (const _time of ['made', 'read again']) {
         const response = await run.staff.lead.client.get(at(ledger(run.id), photo, `&size=${size}`)).expect(200)
         expect(response.headers['content-type']).toBe('image/jpeg')
         const { format, width, height: high, orientation, exif } = await sharp(response.body as Buffer).metadata()
-        expect({ format, width, high, orientation, exif }).toEqual({ format: 'jpeg', width: height / 2, high: height, orientation: undefined, exif: undefined })
+        expect({ format, width, high, orientation, exif }).toEqual({
+          format: 'jpeg',
+          width: height / 2,
+          high: height,
+          orientation: undefined,
+          exif: undefined,
+        })
         expect(response.headers['content-disposition']).toBe("inline; filename*=UTF-8''Crack%20%22at%22%20toe_7.jpg")
       }
     }
@@ -376,7 +388,11 @@ describe('a certificate', () => {
 
 describe('the record’s workbook', () => {
   const workbookOf = async (run: ApiRun): Promise<ExcelJS.Workbook> => {
-    const response = await run.staff.lead.client.get(`/api/proof-tests/${run.id}/record.xlsx`).buffer(true).parse(binary as never).expect(200)
+    const response = await run.staff.lead.client
+      .get(`/api/proof-tests/${run.id}/record.xlsx`)
+      .buffer(true)
+      .parse(binary as never)
+      .expect(200)
     const workbook = new ExcelJS.Workbook()
     await workbook.xlsx.load(response.body as ArrayBuffer)
     return workbook

@@ -47,6 +47,26 @@ describe('migrations', () => {
     }
   })
 
+  it('run again from their beginning where a start was cut off before they were noted', async () => {
+    const database = connect(await schemaFor(inject('databaseUrl'), `cut_off_${process.env['VITEST_POOL_ID'] ?? '1'}`), { poolSize: 2 })
+    try {
+      await migrateDown(database, 'all')
+      await migrateUp(database)
+      // As a kill between any two statements could leave it: everything is made, part of it, or all of it, is not noted.
+      for (const { name } of [...migrations].reverse()) {
+        await database.query('DELETE FROM migrations WHERE name >= ?', { replacements: [name] })
+        const again = migrations.map((migration) => migration.name).filter((one) => one >= name)
+        expect(await migrateUp(database)).toEqual(again)
+      }
+      await database.query('DROP TABLE active_tests')
+      await database.query("DELETE FROM migrations WHERE name >= '002'")
+      await migrateUp(database)
+      expect(await database.query('SELECT * FROM active_tests', { type: QueryTypes.SELECT })).toEqual([])
+    } finally {
+      await database.close()
+    }
+  })
+
   it('run once when two servers start together', async () => {
     const url = await schemaFor(inject('databaseUrl'), `together_${process.env['VITEST_POOL_ID'] ?? '1'}`)
     const servers = [connect(url, { poolSize: 2 }), connect(url, { poolSize: 2 })]

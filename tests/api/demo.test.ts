@@ -13,6 +13,7 @@ import { rebuildProjections } from '#server/ledger/rebuild'
 import { loadSealKey } from '#server/ledger/seal-keys'
 import { initModels, User } from '#server/models/index'
 import { signIn } from '#server/services/sessions'
+import { smallerPicture } from '#server/storage/pictures'
 import { calibrationState, type Calibration } from '#shared/instruments/model'
 import { checkChain } from '#shared/ledger/chain'
 import type { LedgerEntry } from '#shared/ledger/envelope'
@@ -203,7 +204,9 @@ describe('its ledgers', () => {
     const seals = await select<Omit<Seal, 'sealedAt'> & { sealedAt: Date }>(
       'SELECT kid, ledger_id AS ledgerId, seq, head_hash AS headHash, sealed_at AS sealedAt, signature FROM seals',
     )
-    const signatures = [...tests.values()].flatMap(({ entries }) => entries.filter((entry) => ['signed', 'countersigned'].includes(entry.kind)))
+    const signatures = [...tests.values()].flatMap(({ entries }) =>
+      entries.filter((entry) => ['signed', 'countersigned'].includes(entry.kind)),
+    )
     expect(seals).toHaveLength(signatures.length)
     const { publicKey } = loadSealKey(context.config)
     for (const seal of seals) expect(checkSeal({ ...seal, sealedAt: seal.sealedAt.toISOString() }, publicKey)).toBe(true)
@@ -301,7 +304,10 @@ describe('its presses', () => {
     expect(state.legs.map((leg) => leg.climbs.length)).toEqual([1, 1])
     expect(evaluateTest(state).against).toEqual([])
     expect(proofTestColumns(state)).toMatchObject({ status: 'to countersign', result: 'accepted' })
-    expect(mayItBeUsed(press('Long Meg'), today())).toMatchObject({ answer: 'do not use', missing: [`The signatures of ${state.opened?.number}.`] })
+    expect(mayItBeUsed(press('Long Meg'), today())).toMatchObject({
+      answer: 'do not use',
+      missing: [`The signatures of ${state.opened?.number}.`],
+    })
   })
 
   it('Ferry, rated in metric tons-force and read in bar, is overdue', () => {
@@ -353,6 +359,25 @@ describe('its instruments', () => {
         expect(calibrationState(calibration, day)).toBe('in-date')
         expect((calibration?.calibratedOn ?? '') <= day).toBe(true)
       }
+    }
+  })
+})
+
+describe('the demo’s photos and certificates', () => {
+  it('stand in a press’s history, in a signed test, in one under way and with a calibration, and open', async () => {
+    const named = [
+      ...[...presses.values()].flatMap(({ history }) => history.flatMap(({ attachments }) => attachments)),
+      ...[...tests.values()].flatMap(({ state }) => state.attachments),
+    ]
+    expect(named.map(({ name }) => name).sort()).toEqual(['Column weld, opened', 'Head beam, left', 'Left upright'])
+    const certificates = await select<{ sha256: string }>('SELECT file_sha256 AS sha256 FROM calibrations WHERE file_sha256 IS NOT NULL')
+    expect(certificates).toHaveLength(1)
+    const kept = await select<{ shopId: string; sha256: string; type: string }>('SELECT shop_id AS shopId, sha256, type FROM attachments')
+    expect(kept.map(({ sha256 }) => sha256).sort()).toEqual([...named, ...certificates].map(({ sha256 }) => sha256).sort())
+    for (const { shopId, sha256, type } of kept) {
+      const bytes = await context.storage.get(`${shopId}/${sha256}`)
+      if (type === 'application/pdf') expect(bytes?.toString('latin1')).toContain('DEMO CERTIFICATE')
+      else expect(bytes && (await smallerPicture(bytes, 320))).toMatchObject({ width: 320, height: 240 })
     }
   })
 })

@@ -30,7 +30,7 @@ describe('the record as a spreadsheet', () => {
     const workbook = await workbookOf(response)
     const summary = workbook.getWorksheet('Summary')
     expect(summary?.getCell('A2').text).toBe(`${run.number}, Press 2`)
-    expect(workbook.getWorksheet('Ledger')?.getCell(4 + run.state.headSeq, 7).value).toBe(run.state.headHash)
+    expect(workbook.getWorksheet('Ledger')?.getCell(4 + run.state.headSeq, 8).value).toBe(run.state.headHash)
   })
 
   it('carries signatures and seals once it is countersigned', async () => {

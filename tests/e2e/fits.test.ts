@@ -8,6 +8,7 @@ import { readConfig } from '#server/config'
 import { connect } from '#server/database/connection'
 import { loadDemoShop } from '#server/database/seeders/demo'
 import { initModels } from '#server/models/index'
+import { openStorage } from '#server/storage/open-storage'
 import { testListSchema } from '#shared/api/proof-tests'
 import { sessionResponseSchema } from '#shared/api/session'
 import { newPage } from '../support/browser'
@@ -77,7 +78,8 @@ describe('every signed-in screen of the demo shop', () => {
     // An outside database gets no demo shop by itself; it is loaded beside the running server.
     const database = connect(environment.DATABASE_URL, { poolSize: 2 })
     initModels(database)
-    people = await loadDemoShop({ config: readConfig(environment), database, now: () => new Date() })
+    const config = readConfig(environment)
+    people = await loadDemoShop({ config, database, storage: await openStorage(config, new Date()), now: () => new Date() })
     await database.close()
   })
 

@@ -1,5 +1,6 @@
 import { createHash } from 'node:crypto'
 import sharp from 'sharp'
+import { plainPdf } from '#server/database/seeders/plain-pdf'
 import type { Attachment } from '#shared/ledger/envelope'
 
 export interface FileToSend {
@@ -19,22 +20,5 @@ export async function picture(format: 'jpeg' | 'png' | 'webp' = 'jpeg', size = {
   return fileOf(await drawn.toFormat(format).toBuffer(), `image/${format}`, `Joint 7.${format}`)
 }
 
-/** The least that a reader of documents opens: one empty page (ISO 32000-1, 7.5). */
-export function pdf(title = 'Certificate'): FileToSend {
-  const objects = [
-    '<< /Type /Catalog /Pages 2 0 R >>',
-    '<< /Type /Pages /Kids [3 0 R] /Count 1 >>',
-    '<< /Type /Page /Parent 2 0 R /MediaBox [0 0 200 100] >>',
-    `<< /Title (${title}) >>`,
-  ]
-  let text = '%PDF-1.4\n'
-  const places = objects.map((object, index) => {
-    const at = text.length
-    text += `${index + 1} 0 obj\n${object}\nendobj\n`
-    return at
-  })
-  const from = text.length
-  const rows = places.map((at) => `${String(at).padStart(10, '0')} 00000 n \n`).join('')
-  text += `xref\n0 ${objects.length + 1}\n0000000000 65535 f \n${rows}trailer\n<< /Size ${objects.length + 1} /Root 1 0 R /Info 4 0 R >>\nstartxref\n${from}\n%%EOF\n`
-  return fileOf(Buffer.from(text, 'latin1'), 'application/pdf', `${title}.pdf`)
-}
+/** A document of one page. */
+export const pdf = (title = 'Certificate'): FileToSend => fileOf(plainPdf([title]), 'application/pdf', `${title}.pdf`)

@@ -20,7 +20,7 @@ import { Tablet, type Deliver } from '../support/tablet'
 import { leaveTotals, Tally } from './tally'
 
 const seed = runSeed()
-const runs = isFullRun() ? 60 : 6
+const runs = isFullRun() ? 40 : 6
 const TABLETS = 4
 
 type Command =

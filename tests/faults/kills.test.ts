@@ -15,7 +15,8 @@ import { Rig } from './rig'
 import { killsByProcess, leaveTotals, Tally } from './tally'
 
 const seed = runSeed()
-const times = isFullRun() ? 90 : 4
+/** A start of the server takes seconds, of its database a fraction of one. */
+const times = isFullRun() ? { server: 64, database: 118 } : { server: 3, database: 5 }
 const browserTimes = isFullRun() ? 24 : 2
 const tally = new Tally()
 let rig: Rig
@@ -68,10 +69,11 @@ async function sent(tablet: Tablet, run: ApiRun): Promise<void> {
 }
 
 /** A whole test from the walk-down to its conclusion, entered as fast as two people never could. */
-async function drive(random: Seeded): Promise<Driven> {
+async function drive(random: Seeded, driven: Driven[]): Promise<void> {
   const run = await turn.take(() => ApiRun.open({ staff }))
   const lead = tabletOf(staff.lead)
   const witness = tabletOf(staff.witness)
+  driven.push({ run, tablets: [lead, witness] })
   let last = lead
   for (;;) {
     const drafts = run.draftsFor(nextStep(run.state))
@@ -90,19 +92,20 @@ async function drive(random: Seeded): Promise<Driven> {
   }
   await sent(lead, run)
   await sent(witness, run)
-  lead.close()
-  witness.close()
-  return { run, tablets: [lead, witness] }
 }
 
 async function entriesOf(path: string) {
   return entriesResponseSchema.parse((await staff.lead.client.get(path).expect(200)).body)
 }
 
+/** Before anything is judged, so that a run that failed is counted too. */
+async function count({ run, tablets }: Driven): Promise<void> {
+  for (const tablet of tablets) for (const id of tablet.acknowledged.keys()) tally.acknowledged(id)
+  tally.saw((await entriesOf(run.path)).entries.map((entry) => entry.id))
+}
+
 async function check({ run, tablets }: Driven): Promise<void> {
   const { entries, headHash } = await entriesOf(run.path)
-  for (const tablet of tablets) for (const id of tablet.acknowledged.keys()) tally.acknowledged(id)
-  tally.saw(entries.map((entry) => entry.id))
   expectWhole(entries, headHash)
   for (const tablet of tablets) {
     expectOnce(entries, tablet.written)
@@ -118,7 +121,7 @@ async function check({ run, tablets }: Driven): Promise<void> {
 
 /** Kills until each has been killed as often as planned; a moment later or in the middle of the next start. */
 async function killAtRandom(random: Seeded): Promise<void> {
-  const left = { server: times, database: times }
+  const left = { ...times }
   while (left.server + left.database > 0) {
     await pauseFor(random.between(0, 900))
     const again = random.chance(0.15) ? 1 : 0
@@ -167,14 +170,17 @@ describe(`kill -9 of the server and of its database during runs, seed ${seed}`, 
       over = true
     })
     const driving = (async () => {
-      for (let number = 1; !over; number += 1) driven.push(await drive(new Seeded(seed + number)))
+      for (let number = 1; !over; number += 1) await drive(new Seeded(seed + number), driven)
     })()
-    await Promise.all([killing, driving])
+    const outcomes = await Promise.allSettled([killing, driving])
+    for (const tablet of driven.flatMap((one) => one.tablets)) tablet.close()
     await rig.killBoth(new Seeded(seed))
-    for (const one of driven) await check(one)
+    for (const one of driven) await count(one)
     expect(tally.lost()).toEqual([])
     expect(tally.duplicated()).toEqual([])
-    expect(tally.totals().acknowledged).toBeGreaterThan(4 * times)
+    expect(outcomes.flatMap((outcome) => (outcome.status === 'rejected' ? [outcome.reason as unknown] : []))).toEqual([])
+    for (const one of driven) await check(one)
+    expect(tally.totals().acknowledged).toBeGreaterThan(3 * (times.server + times.database))
     expect(rig.failedStarts, 'starts that ended by themselves').toBe(0)
     expect(rig.errors(), 'the server logs no error').toEqual([])
   })

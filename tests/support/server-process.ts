@@ -48,7 +48,7 @@ export async function startServer(environment: Record<string, string>, spawned?:
     }, readyWithinMilliseconds)
     const read = (chunk: Buffer) => {
       printed += chunk.toString('utf8')
-      const found = /http:\/\/\S+:\d+/.exec(printed)
+      const found = /https?:\/\/\S+:\d+/.exec(printed)
       if (found === null) return
       clearTimeout(tooLate)
       resolve(found[0])

@@ -5,7 +5,7 @@ export const attachments: Migration = {
   name: '005-attachments',
   async up(database) {
     await database.query(
-      `CREATE TABLE attachments (
+      `CREATE TABLE IF NOT EXISTS attachments (
         shop_id ${id} NOT NULL,
         sha256 ${hash} NOT NULL,
         type ${word(40)} NOT NULL,
@@ -18,10 +18,10 @@ export const attachments: Migration = {
     // No foreign key to attachments: a file is named first and its bytes come after.
     await database.query(
       `ALTER TABLE calibrations
-         ADD COLUMN file_sha256 ${hash} NULL,
-         ADD COLUMN file_type ${word(40)} NULL,
-         ADD COLUMN file_size INT NULL,
-         ADD COLUMN file_name VARCHAR(120) NULL`,
+         ADD COLUMN IF NOT EXISTS file_sha256 ${hash} NULL,
+         ADD COLUMN IF NOT EXISTS file_type ${word(40)} NULL,
+         ADD COLUMN IF NOT EXISTS file_size INT NULL,
+         ADD COLUMN IF NOT EXISTS file_name VARCHAR(120) NULL`,
     )
   },
   async down(database) {

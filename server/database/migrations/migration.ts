@@ -3,16 +3,20 @@ import type { Sequelize } from 'sequelize'
 export interface Migration {
   /** NNN-what-it-does, as the file is named; never changed once it has run anywhere. */
   name: string
+  /** Must bear being run again after it was cut off at any statement. */
   up(database: Sequelize): Promise<void>
   down(database: Sequelize): Promise<void>
 }
 
-/** MariaDB commits after each DDL statement, so a migration is a list of statements and its way back the list of tables. */
+/**
+ * MariaDB commits after each DDL statement, so a migration is a list of statements and its way back the list of tables.
+ * One that was cut off half-way, or not noted, runs again from its beginning: what is there already stays.
+ */
 export function tables(name: string, statements: string[], tableNames: string[]): Migration {
   return {
     name,
     async up(database) {
-      for (const statement of statements) await database.query(statement)
+      for (const statement of statements) await database.query(statement.replace(/^CREATE TABLE /, 'CREATE TABLE IF NOT EXISTS '))
     },
     async down(database) {
       for (const table of [...tableNames].reverse()) await database.query(`DROP TABLE IF EXISTS ${table}`)

@@ -5,6 +5,7 @@ import { SHIPPED_PROTOCOLS } from '#shared/proof-test/protocol'
 import { addCalibration } from '../../services/calibrations'
 import { addInstrument, lockInstrument } from '../../services/instruments'
 import { addProtocol, addProtocolVersion, listProtocols } from '../../services/protocols'
+import { keepDemoCertificate } from './demo-files'
 import { dayOf, daysBefore, workAt, type Desk } from './desk'
 import type { DemoShops } from './demo-people'
 
@@ -115,6 +116,8 @@ interface Compared {
   lasts?: number
   result?: Calibration['result']
   uncertainty?: Calibration['uncertainty']
+  /** Whether its certificate is kept as a file. */
+  filed?: boolean
 }
 
 const psi = (text: string): Calibration['uncertainty'] => ({ value: { text, unit: 'psi' }, k: 2 })
@@ -135,7 +138,7 @@ const CALIBRATIONS: readonly Compared[] = [
   { instrument: 'digital3', daysAgo: 300 },
   { instrument: 'badDigital', daysAgo: 280 },
   { instrument: 'loadCell', daysAgo: 200, uncertainty: kN('0.25') },
-  { instrument: 'dialGauge', daysAgo: 34, uncertainty: psi('60') },
+  { instrument: 'dialGauge', daysAgo: 34, uncertainty: psi('60'), filed: true },
   { instrument: 'dial1', daysAgo: 33 },
   { instrument: 'dial2', daysAgo: 33 },
   { instrument: 'dial3', daysAgo: 33 },
@@ -147,9 +150,10 @@ const COMPARED_WITH = { gauge: 'dead-weight tester DT-2', 'load-cell': 'proving 
 
 /** Enters the comparisons made from one day to another, counted back from today. */
 export async function enterCalibrations(desk: Desk, { main, people }: DemoShops, ids: DemoInstruments, from: number, to: number): Promise<void> {
-  for (const { instrument, daysAgo, lasts = 365, result = 'in tolerance', uncertainty = null } of CALIBRATIONS) {
+  for (const { instrument, daysAgo, lasts = 365, result = 'in tolerance', uncertainty = null, filed = false } of CALIBRATIONS) {
     if (daysAgo > from || daysAgo <= to) continue
-    const work = await workAt(desk, main, people.lead, daysBefore(desk, daysAgo, '19:15'))
+    const at = daysBefore(desk, daysAgo, '19:15')
+    const work = await workAt(desk, main, people.lead, at)
     const { kind, code } = INSTRUMENTS[instrument]
     const calibration = calibrationSchemaFor[kind].parse({
       calibratedOn: dayOf(daysBefore(desk, daysAgo, '12:00')),
@@ -159,7 +163,10 @@ export async function enterCalibrations(desk: Desk, { main, people }: DemoShops,
       result,
       uncertainty,
     })
-    await addCalibration(desk.database, work, await lockInstrument(work, ids[instrument]), calibration)
+    const { calibratedOn, certificate, comparedWith } = calibration
+    const lines = [`Number ${certificate}`, `Instrument ${code}, compared on ${calibratedOn} with ${comparedWith}`, `Found ${result}`]
+    const file = filed ? await keepDemoCertificate(desk, main, at, lines, `${certificate}.pdf`) : null
+    await addCalibration(desk.database, work, await lockInstrument(work, ids[instrument]), calibration, file)
   }
 }
 

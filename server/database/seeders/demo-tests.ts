@@ -203,7 +203,15 @@ export async function testOx(desk: Desk, registers: DemoRegisters, press: PressB
     reliefSet: psi('8400'),
     strokePercent: '40',
     temperature: '19',
-    remarks: [{ percent: 75, by: 'lead', what: 'other', note: 'Scale flaked off the head beam at the left. Chalked, nothing under it.' }],
+    remarks: [
+      {
+        percent: 75,
+        by: 'lead',
+        what: 'other',
+        note: 'Scale flaked off the head beam at the left. Chalked, nothing under it.',
+        photo: { of: 'scaled beam', name: 'Head beam, left' },
+      },
+    ],
   })
   return run.until()
 }
@@ -250,6 +258,15 @@ export async function testBadgerNow(desk: Desk, registers: DemoRegisters, press:
     ...bedPoints(press, dials(registers.instruments)),
     legs: central('fixed bed'),
     frames: [badgerFrame(0)],
+    remarks: [
+      {
+        percent: 25,
+        by: 'witness',
+        what: 'other',
+        note: 'Weld at the left upright, looked at through the shield: nothing to see.',
+        photo: { of: 'sound weld', name: 'Left upright' },
+      },
+    ],
     reliefSet: psi('7000'),
     strokePercent: '45',
     temperature: '20',

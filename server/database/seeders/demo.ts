@@ -3,6 +3,7 @@ import { inRetriedTransaction } from '../../ledger/retry'
 import { loadSealKey } from '../../ledger/seal-keys'
 import { Shop } from '../../models'
 import { hashPassword } from '../../services/passwords'
+import { keepDemoPhoto } from './demo-files'
 import { daysBefore, type Desk } from './desk'
 import { enterCalibrations, enterInstruments, shortenHolds, writeProtocols } from './demo-instruments'
 import { DEMO_PASSWORD, foundDemoShops, standingSignIns, type DemoShops, type DemoSignIn } from './demo-people'
@@ -20,14 +21,16 @@ import { testBadgerFirst, testBadgerNow, testFerry, testHeron, testLongMeg, test
 import type { PressBook } from './press-book'
 
 export type { DemoSignIn }
-export type DemoContext = Pick<AppContext, 'config' | 'database' | 'now'>
+export type DemoContext = Pick<AppContext, 'config' | 'database' | 'now' | 'storage'>
 
 /** The joint that the stopped test pointed to, opened up and found cracked. */
-async function rejectColumnWeld(desk: Desk, { people }: DemoShops, press: PressBook): Promise<void> {
+async function rejectColumnWeld(desk: Desk, { main, people }: DemoShops, press: PressBook): Promise<void> {
   const jointId = press.joint('Head arm to column').id
   const remark = 'Crack of 40 mm at the toe, upper side. To be gouged out and welded again.'
   const payload = { jointId, method: 'dye penetrant' as const, result: 'rejected' as const, remark, test: null }
-  await press.write({ kind: 'joint-examined', payload }, people.secondLead, daysBefore(desk, 38, '14:20'))
+  const at = daysBefore(desk, 38, '14:20')
+  const photo = await keepDemoPhoto(desk, main, at, 'cracked weld', 'Column weld, opened')
+  await press.write({ kind: 'joint-examined', payload }, people.secondLead, at, { attachments: [photo] })
 }
 
 /** The shop's story, the oldest first: what a test freezes is what the registers said on its day. */
@@ -63,10 +66,10 @@ async function isEmpty(): Promise<boolean> {
   return (await Shop.findOne({ attributes: ['id'], raw: true })) === null
 }
 
-function load({ config, database, now }: DemoContext, passwordHash: string): Promise<void> {
+function load({ config, database, now, storage }: DemoContext, passwordHash: string): Promise<void> {
   const sealKey = loadSealKey(config)
   const loadedAt = now()
-  return inRetriedTransaction(database, (transaction) => tell({ database, transaction, now: loadedAt, sealKey }, passwordHash))
+  return inRetriedTransaction(database, (transaction) => tell({ database, transaction, storage, now: loadedAt, sealKey }, passwordHash))
 }
 
 /**

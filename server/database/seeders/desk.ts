@@ -1,8 +1,8 @@
 import type { Sequelize, Transaction } from 'sequelize'
 import { v7 as newId } from 'uuid'
-import type { EntryDraft } from '#shared/ledger/envelope'
+import type { Attachment, EntryDraft } from '#shared/ledger/envelope'
 import type { Mark } from '#shared/proof-test/entries'
-import type { Work } from '../../context'
+import type { Storage, Work } from '../../context'
 import type { SealKey } from '../../ledger/seal-keys'
 import type { Writing } from '../../ledger/write'
 import { membershipOf } from '../../services/membership'
@@ -11,6 +11,7 @@ import { membershipOf } from '../../services/membership'
 export interface Desk {
   database: Sequelize
   transaction: Transaction
+  storage: Storage
   /** The moment of loading; every date of the demo counts back from it. */
   now: Date
   sealKey: SealKey
@@ -83,11 +84,12 @@ export class Tablets {
     v: number
     payload: Record<string, unknown>
     basedOnSeq: number
+    attachments?: Attachment[]
   }): EntryDraft {
-    const { personId, at, ...rest } = entry
+    const { personId, at, attachments = [], ...rest } = entry
     const stamp = this.stamp(personId, at)
     const deviceSeq = this.count(personId)
-    return { id: newId({ msecs: at }), ledgerId: this.ledgerId, authorId: personId, deviceSeq, ...stamp, ...rest, attachments: [], overrides: [] }
+    return { id: newId({ msecs: at }), ledgerId: this.ledgerId, authorId: personId, deviceSeq, ...stamp, ...rest, attachments, overrides: [] }
   }
 
   private tabletOf(personId: string): Tablet {

@@ -1,5 +1,5 @@
 import { v7 as newId } from 'uuid'
-import type { Override } from '#shared/ledger/envelope'
+import type { Attachment, Override } from '#shared/ledger/envelope'
 import { PRESS_VERSION, type PressDraft } from '#shared/press/entries'
 import type { Joint, PressDescription } from '#shared/press/model'
 import { appendPress } from '../../services/press-entries'
@@ -38,11 +38,16 @@ export class PressBook {
     return book
   }
 
-  async write(draft: PressDraft, by: string, at: number, overrides: Override[] = []): Promise<void> {
+  async write(
+    draft: PressDraft,
+    by: string,
+    at: number,
+    { overrides = [], attachments = [] }: { overrides?: Override[]; attachments?: Attachment[] } = {},
+  ): Promise<void> {
     const receivedAt = at + 350
     const writing = writingAt(this.desk, receivedAt)
     const head = await readHead(writing.database, writing.transaction, this.id)
-    const entry = this.tablets.draft({ personId: by, at, ...draft, v: PRESS_VERSION, basedOnSeq: head?.headSeq ?? 0 })
+    const entry = this.tablets.draft({ personId: by, at, ...draft, v: PRESS_VERSION, basedOnSeq: head?.headSeq ?? 0, attachments })
     const work = await workAt(this.desk, this.shopId, by, receivedAt)
     await appendPress(writing, work, parsePressDraft({ ...entry, overrides }))
   }

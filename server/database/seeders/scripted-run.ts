@@ -8,11 +8,13 @@ import { forceOf, leadInstrument, stageTarget } from '#shared/proof-test/force'
 import type { JointState, ProofTestState } from '#shared/proof-test/state'
 import { nextStep, type Step } from '#shared/proof-test/steps'
 import { decimalsOf, toSI, toUnit } from '#shared/units'
-import type { LedgerEntry } from '#shared/ledger/envelope'
+import type { Attachment, LedgerEntry } from '#shared/ledger/envelope'
 import { appendToTest, lockTest } from '../../services/test-entries'
 import { openTest } from '../../services/open-test'
 import { parseProofTestDraft } from '../../ledger/parse'
 import { signTest } from '../../services/sign-test'
+import { keepDemoPhoto } from './demo-files'
+import type { DrawnSubject } from './demo-drawings'
 import { Tablets, workAt, writingAt, type Desk } from './desk'
 import { asRead, FrameUnderLoad, type FrameBehaviour } from './frame-behaviour'
 
@@ -30,6 +32,7 @@ export interface Remark {
   by: 'lead' | 'witness'
   what: ProofTestPayload<'observed'>['what']
   note: string
+  photo?: { of: DrawnSubject; name: string }
 }
 
 export interface RunScript {
@@ -146,9 +149,9 @@ export class ScriptedRun {
     this.clock += (seconds + ((this.current.entryCount * 7) % 11)) * 1000
   }
 
-  private async write(draft: ProofTestDraft, by = this.script.leadId): Promise<LedgerEntry> {
+  private async write(draft: ProofTestDraft, by = this.script.leadId, attachments: Attachment[] = []): Promise<LedgerEntry> {
     const at = this.clock
-    const entry = this.tablets.draft({ personId: by, at, ...draft, v: PROOF_TEST_VERSION, basedOnSeq: this.current.headSeq })
+    const entry = this.tablets.draft({ personId: by, at, ...draft, v: PROOF_TEST_VERSION, basedOnSeq: this.current.headSeq, attachments })
     const writing = writingAt(this.desk, at + 190 + ((this.current.entryCount * 137) % 430))
     const locked = await lockTest(writing, by, this.id)
     const written = await appendToTest(writing, locked, parseProofTestDraft(entry), { clockOff: 0 })
@@ -288,9 +291,10 @@ export class ScriptedRun {
   }
 
   private async remark(at: Position, percent: number): Promise<void> {
-    for (const { by, what, note } of this.script.remarks?.filter((one) => one.percent === percent) ?? []) {
+    for (const { by, what, note, photo } of this.script.remarks?.filter((one) => one.percent === percent) ?? []) {
       this.pass(5)
-      await this.write({ kind: 'observed', payload: { at, what, note } }, by === 'witness' ? this.witnessId : this.script.leadId)
+      const photos = photo ? [await keepDemoPhoto(this.desk, this.script.shopId, this.clock, photo.of, photo.name)] : []
+      await this.write({ kind: 'observed', payload: { at, what, note } }, by === 'witness' ? this.witnessId : this.script.leadId, photos)
     }
   }
 

@@ -1,4 +1,5 @@
 import type { Workbook } from 'exceljs'
+import { clocksApart } from '#shared/ledger/clocks'
 import type { RecordOfTest } from '../record'
 import { FIRST_ROW, addSheet, colours, put, putRow, type Column } from '../sheet'
 
@@ -11,8 +12,9 @@ const columns: Column[] = [
   { header: 'Entry', width: 7, align: 'right' },
   { header: 'Kind', width: 20 },
   { header: 'Author', width: 20 },
-  { header: 'Observed (UTC)', width: 19 },
-  { header: 'Received (UTC)', width: 19 },
+  { header: 'Made, by the device’s clock (UTC)', width: 19, wrap: true },
+  { header: 'Received, by the server’s clock (UTC)', width: 19, wrap: true },
+  { header: 'Apart', width: 18, wrap: true },
   { header: 'Irregular', width: 12 },
   { header: 'Hash', width: 68 },
   { header: 'Hash before', width: 68 },
@@ -44,6 +46,7 @@ export function ledgerSheet(workbook: Workbook, record: RecordOfTest): void {
       record.nameOf(entry.authorId),
       { moment: entry.observedAt },
       { moment: entry.receivedAt },
+      clocksApart(entry) === '' ? null : { words: clocksApart(entry), bold: true },
       entry.irregular.length > 0 ? { words: entry.irregular.join(', '), bold: true, colour: colours.stop } : null,
       entry.hash,
       entry.prevHash,
@@ -52,5 +55,5 @@ export function ledgerSheet(workbook: Workbook, record: RecordOfTest): void {
   })
   // A text of thousands of signs on paper helps nobody: the hashes print, the texts stay in the file.
   // exceljs writes the dollar before the column only.
-  sheet.pageSetup.printArea = `A$1:H$${FIRST_ROW + record.entries.length - 1}`
+  sheet.pageSetup.printArea = `A$1:I$${FIRST_ROW + record.entries.length - 1}`
 }

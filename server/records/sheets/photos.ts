@@ -19,9 +19,18 @@ const columns: Column[] = [
   { header: 'Type', width: 16 },
   { header: 'Size, bytes', width: 11, align: 'right' },
   { header: 'Where its bytes are', width: 34, wrap: true },
-  { header: 'SHA-256 of its bytes', width: 68 },
+  { header: 'SHA-256 of its bytes', width: 38, wrap: true },
   { header: 'Picture, made smaller', width: 46 },
 ]
+
+/** Points that a row of wrapped words takes: programs that open a workbook don't grow its rows by themselves. */
+function heightOf(contents: readonly Content[]): number {
+  const lines = contents.map((content, index) => {
+    const words = typeof content === 'string' ? content : content !== null && 'words' in content ? content.words : ''
+    return Math.ceil((words.length * 1.1) / (columns[index]?.width ?? 1))
+  })
+  return 6 + 13 * Math.max(1, ...lines)
+}
 
 /** What an entry is about, in a few words: what the photo should show. */
 function aboutEntry({ entries, state }: RecordOfTest, seq: number): string {
@@ -62,7 +71,7 @@ export function photosSheet(workbook: Workbook, record: RecordOfTest, files: Rec
   const images = new Map<string, number>()
   attachments.forEach((file, index) => {
     const row = FIRST_ROW + index
-    putRow(sheet, row, columns, [
+    const contents: Content[] = [
       { number: index + 1, format: '0' },
       { number: file.seq, format: '0' },
       aboutEntry(record, file.seq),
@@ -71,12 +80,14 @@ export function photosSheet(workbook: Workbook, record: RecordOfTest, files: Rec
       { number: file.size, format: '#,##0' },
       whereItIs(record, files, file),
       file.sha256,
-    ])
+    ]
+    putRow(sheet, row, columns, contents)
+    sheet.getRow(row).height = heightOf(contents)
     const picture = files.pictures.get(file.sha256)
     if (!picture) return
     const scale = Math.min(1, SHOWN.width / picture.width, SHOWN.height / picture.height)
     const [width, height] = [Math.round(picture.width * scale), Math.round(picture.height * scale)]
-    sheet.getRow(row).height = Math.max(20, (height + 12) * POINTS_PER_PIXEL)
+    sheet.getRow(row).height = Math.max(heightOf(contents), (height + 12) * POINTS_PER_PIXEL)
     // Named by several entries, it is in the file once.
     const image = images.get(file.sha256) ?? workbook.addImage({ base64: picture.jpeg.toString('base64'), extension: 'jpeg' })
     images.set(file.sha256, image)

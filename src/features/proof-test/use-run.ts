@@ -1,10 +1,10 @@
 import { useCallback, useEffect, useMemo, useRef, useState, useSyncExternalStore } from 'react'
 import { useQuery, useQueryClient } from '@tanstack/react-query'
 import { v7 as newId } from 'uuid'
-import type { Attachment, LedgerEntry, Override } from '#shared/ledger/envelope'
+import type { Attachment, EntryDraft, LedgerEntry, Override } from '#shared/ledger/envelope'
 import type { Decision, Finding } from '#shared/ledger/rules'
 import { decideProofTest } from '#shared/proof-test/decide'
-import { ALWAYS_ALLOWED, type Mark, type ProofTestKind, type ProofTestPayload } from '#shared/proof-test/entries'
+import { ALWAYS_ALLOWED, PROOF_TEST_ACTS, type Mark, type ProofTestKind, type ProofTestPayload } from '#shared/proof-test/entries'
 import { evaluateClimb, type ClimbEvaluation } from '#shared/proof-test/evaluate-climb'
 import type { ProofTestState } from '#shared/proof-test/state'
 import { nextStep, type Step } from '#shared/proof-test/steps'
@@ -15,6 +15,7 @@ import { useUser } from '../../lib/here'
 import { outbox, type LedgerOutbox } from '../../lib/outbox'
 import type { Refused } from '../../lib/outbox-database'
 import { Disconnected, isSignedOut } from '../../lib/problem'
+import { askToKeepOnce } from '../../lib/storage-persistence'
 import { useLive } from '../../lib/use-live'
 import { addKept, entriesKey, entriesQuery, type KnownLedger } from './api/get-entries'
 import { irregularUnderLoad, LedgerFold } from './ledger-view'
@@ -53,6 +54,8 @@ export interface Run {
   irregular: readonly string[]
   connection: Connection
   counts: { tablet: number; server: number; sealed: boolean }
+  /** How far an entry has come, by its id. */
+  placeOf: (entryId: string) => EntryPlaceName
   box: LedgerOutbox
   asking: Asking | null
   refused: readonly Finding[]
@@ -79,6 +82,13 @@ function useBox(ledgerId: string): LedgerOutbox {
   return useSyncExternalStore(outbox.subscribe, () => outbox.ledger(ledgerId))
 }
 
+/** A fact that the server refused has happened all the same: it counts here, in its place, until the server takes it. */
+function madeHere({ pending, attention }: LedgerOutbox): readonly EntryDraft[] {
+  const facts = attention.flatMap(({ entry }) => (PROOF_TEST_ACTS.has(entry.kind) ? [] : [entry]))
+  if (facts.length === 0) return pending
+  return [...facts, ...pending].sort((a, b) => (a.deviceId === b.deviceId ? a.deviceSeq - b.deviceSeq : 0))
+}
+
 /** The test's ledger as this device sees it: the server's entries, and behind them its own that wait. */
 function useLedger(testId: string) {
   const client = useQueryClient()
@@ -90,7 +100,7 @@ function useLedger(testId: string) {
   const known = query.data ?? NOBODY
   const box = useBox(known.ledgerId === '' ? testId : known.ledgerId)
   const fold = useMemo(() => new LedgerFold(testId), [testId])
-  const folded = useMemo(() => fold.fold(known.entries, box.pending), [fold, known.entries, box.pending])
+  const folded = useMemo(() => fold.fold(known.entries, madeHere(box)), [fold, known.entries, box])
   return { query, known, box, folded, user }
 }
 
@@ -123,6 +133,8 @@ function useWriting({ ledgerId, testId, authorId, folded, blocked }: Writing) {
       setAsking(decision.outcome === 'needs-reason' ? { draft, findings: decision.findings } : null)
       if (decision.outcome !== 'allowed') return
       busy.current.add(draft.kind)
+      // A person has just tapped: browsers answer this better then.
+      void askToKeepOnce()
       const entry = {
         id: newId(),
         ledgerId,
@@ -153,6 +165,17 @@ function useWriting({ ledgerId, testId, authorId, folded, blocked }: Writing) {
   return { decide, record, asking, refused, giveReason, leave }
 }
 
+export type EntryPlaceName = 'tablet' | 'server' | 'sealed'
+
+function placesOf({ entries, sealedSeq }: KnownLedger): (entryId: string) => EntryPlaceName {
+  const seqs = new Map(entries.map((entry) => [entry.id, entry.seq]))
+  return (entryId) => {
+    const seq = seqs.get(entryId)
+    if (seq === undefined) return 'tablet'
+    return seq <= sealedSeq ? 'sealed' : 'server'
+  }
+}
+
 export type RunLoad = { is: 'ready'; run: Run } | { is: 'loading' } | { is: 'failed'; error: unknown }
 
 /** Everything that the screens of a test under way need: where it is, what comes next, and the way to write. */
@@ -164,6 +187,7 @@ export function useRun(testId: string): RunLoad {
   const step = useMemo(() => nextStep(state), [state])
   const evaluation = useMemo(() => (state.position ? evaluateClimb(state, state.position.leg, state.position.climb) : null), [state])
   const irregular = useMemo(() => irregularUnderLoad(state, entries), [state, entries])
+  const placeOf = useMemo(() => placesOf(known), [known])
   const photos = useMemo(() => placedIn(entries), [entries])
   const files = useFiles('proof-tests', testId, photos.length)
   if (!query.data || !box.loaded) {
@@ -189,6 +213,7 @@ export function useRun(testId: string): RunLoad {
       lastHeard: query.dataUpdatedAt > 0 ? new Date(query.dataUpdatedAt) : null,
     },
     counts: { tablet: folded.pending, server: known.entries.length, sealed: state.headSeq > 0 && known.sealedSeq >= state.headSeq },
+    placeOf,
     box,
     attention: box.attention,
   }

@@ -1,4 +1,5 @@
 import type { EntriesResponse } from '#shared/api/ledger'
+import type { LedgerEntry } from '#shared/ledger/envelope'
 import { checkChain, entryText, type ChainCheck } from '#shared/ledger/chain'
 import { foldProofTest } from '#shared/proof-test/apply'
 import type { Opened, Reading } from '#shared/proof-test/entries'
@@ -15,6 +16,8 @@ export interface RecordView {
   opened: Opened
   evaluation: TestEvaluation
   standing: RecordStanding
+  /** As they stand in the ledger. */
+  entries: readonly LedgerEntry[]
   chain: ChainCheck
   sealed: EntriesResponse['sealed']
   differences: FrozenDifference[]
@@ -41,6 +44,7 @@ export function readRecord(answer: EntriesResponse): RecordView {
     opened,
     evaluation: evaluateTest(state),
     standing: standingOf(state),
+    entries: answer.entries,
     chain: checkChain(stored),
     sealed: answer.sealed,
     differences: frozenDifferences(answer.ledgerId, answer.entries),

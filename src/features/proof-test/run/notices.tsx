@@ -1,9 +1,12 @@
-import type { ReactElement, ReactNode } from 'react'
+import { useEffect, useState, type ReactElement, type ReactNode } from 'react'
+import { PROOF_TEST_ACTS } from '#shared/proof-test/entries'
 import { Button, TextLink } from '../../../components/button'
 import { Mark, type MarkName } from '../../../components/marks'
 import { setPercent } from '../../../components/typeset'
 import { clockTime } from '../../../lib/dates'
 import { outbox } from '../../../lib/outbox'
+import type { Refused } from '../../../lib/outbox-database'
+import { readStorageState } from '../../../lib/storage-persistence'
 import { paths } from '../../../paths'
 import type { Run } from '../use-run'
 
@@ -17,6 +20,12 @@ function Notice({ mark, children, aside }: { mark: MarkName; children: ReactNode
   )
 }
 
+const signInAgain = (
+  <TextLink to={paths.signIn.href()} target="_blank">
+    Sign in again
+  </TextLink>
+)
+
 function sendingNotice(run: Run): ReactElement | null {
   const waiting = run.counts.tablet
   if (run.box.fault !== null && waiting > 0)
@@ -29,19 +38,19 @@ function sendingNotice(run: Run): ReactElement | null {
       : `${waiting === 1 ? 'One entry waits' : `${waiting} entries wait`} on this tablet. Nothing is lost: it goes on here.`
   if (run.connection.signedOut) {
     return (
-      <Notice
-        mark="not-connected"
-        aside={
-          <TextLink to={paths.signIn.href()} target="_blank">
-            Sign in again
-          </TextLink>
-        }
-      >
+      <Notice mark="not-connected" aside={signInAgain}>
         Your session has ended, so nothing is sent. {kept}
       </Notice>
     )
   }
   const { sender } = run.box
+  if (sender.is === 'other-person') {
+    return (
+      <Notice mark="not-connected" aside={signInAgain}>
+        Somebody else is signed in on this browser now, so what you enter is not sent. {kept}
+      </Notice>
+    )
+  }
   if (sender.is === 'refused') return <Notice mark="wait">The server does not take the entries: {sender.says} It is tried again.</Notice>
   if (!run.connection.connected) {
     const heard = run.connection.lastHeard ? ` Last heard ${clockTime(run.connection.lastHeard, { seconds: true })}.` : ''
@@ -62,9 +71,15 @@ export function Notices({ run }: { run: Run }): ReactElement {
       {run.box.fault && (
         <div role="alert" className="flex items-center gap-3 bg-stop px-4 py-3 text-18 font-semibold text-on-stop">
           <Mark name="stop" tone="plate" size={32} />
-          <p>{run.box.fault}</p>
+          <p>{run.box.fault} It is tried again by itself.</p>
         </div>
       )}
+      {run.box.backSince !== null && (
+        <Notice mark="within">
+          Entries are kept again since {clockTime(run.box.backSince, { seconds: true })}. What was not taken in before: enter it now.
+        </Notice>
+      )}
+      <StorageNotice run={run} />
       {sendingNotice(run)}
       {others && <Notice mark="wait">Entries of another person wait on this tablet. They are sent when that person signs in here.</Notice>}
       {run.refused.map((finding) => (
@@ -81,18 +96,52 @@ export function Notices({ run }: { run: Run }): ReactElement {
         </Notice>
       ))}
       {run.attention.map((refused) => (
-        <Notice
-          key={refused.entry.id}
-          mark="wait"
-          aside={
-            <Button size="line" onClick={() => void outbox.dismiss(refused.entry.ledgerId, refused.entry.id)}>
-              Read
-            </Button>
-          }
-        >
-          The server refused what was entered at {clockTime(refused.entry.observedAt)}: {refused.problem.detail}
-        </Notice>
+        <RefusedNotice key={refused.entry.id} refused={refused} />
       ))}
     </>
+  )
+}
+
+/** An act that was refused was not done: it is read, and gone. A fact has happened: it stays until the server takes it. */
+function RefusedNotice({ refused }: { refused: Refused }): ReactElement {
+  const { entry, problem } = refused
+  const isAct = PROOF_TEST_ACTS.has(entry.kind)
+  return (
+    <Notice
+      mark="wait"
+      aside={
+        isAct ? (
+          <Button size="line" onClick={() => void outbox.dismiss(entry.ledgerId, entry.id)}>
+            Read
+          </Button>
+        ) : (
+          <Button size="line" onClick={() => void outbox.sendAgain(entry.id)}>
+            Send again
+          </Button>
+        )
+      }
+    >
+      The server refused what was entered at {clockTime(entry.observedAt)}: {problem.detail}
+      {!isAct && ' It is kept on this tablet, and counts here as entered.'}
+    </Notice>
+  )
+}
+
+/** Only where entries may have to wait long, and never while somebody stands beside a loaded press. */
+function StorageNotice({ run }: { run: Run }): ReactElement | null {
+  const [mayClear, setMayClear] = useState(false)
+  const stranded = !run.connection.connected && run.state.loaded === null && run.counts.tablet > 0
+  useEffect(() => {
+    let here = true
+    if (stranded) void readStorageState().then(({ keeping }) => here && setMayClear(keeping === 'may-clear'))
+    return () => {
+      here = false
+    }
+  }, [stranded])
+  if (!stranded || !mayClear) return null
+  return (
+    <Notice mark="undecided" aside={<TextLink to={paths.thisDevice.href()}>What to do</TextLink>}>
+      The browser may clear what is not sent, should this tablet run short of room.
+    </Notice>
   )
 }

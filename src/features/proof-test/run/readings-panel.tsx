@@ -5,6 +5,7 @@ import { parseDecimal, unitLabel } from '#shared/units'
 import { Button } from '../../../components/button'
 import { CheckRow } from '../../../components/check-row'
 import { DecimalField } from '../../../components/decimal-field'
+import { EntryPlace } from '../../../components/entry-place'
 import { TextField } from '../../../components/field'
 import { ActionPlate } from '../../../components/run/plates'
 import { setPercent } from '../../../components/typeset'
@@ -41,13 +42,21 @@ function Value({ row, reading, opened, onChoose }: { row: Row; reading: Reading;
   )
 }
 
-function Rows({ rows, opened, onChoose }: { rows: readonly NamedRow[]; opened: Opened; onChoose: (chosen: Chosen) => void }): ReactElement {
+interface RowsProps {
+  rows: readonly NamedRow[]
+  opened: Opened
+  placeOf: Run['placeOf']
+  onChoose: (chosen: Chosen) => void
+}
+
+function Rows({ rows, opened, placeOf, onChoose }: RowsProps): ReactElement {
   return (
     <ul className="border-t border-hairline">
       {rows.map(({ row, name }) => (
         <li key={row.entryId} className="border-b border-hairline py-1">
-          <p className="flex justify-between gap-3 text-16">
-            <span className="font-medium">{setPercent(capital(name))}</span>
+          <p className="flex flex-wrap items-baseline gap-x-4 text-16">
+            <span className="min-w-0 flex-1 font-medium">{setPercent(capital(name))}</span>
+            <EntryPlace place={placeOf(row.entryId)} />
             <span className="text-graphite">{clockTime(row.mark.at, { seconds: true })}</span>
           </p>
           <div className="-mx-2 grid grid-cols-2 tablet:grid-cols-4">
@@ -154,7 +163,7 @@ export function ReadingsPanel({ run, opened, onLeave }: { run: Run; opened: Open
             {rows.length === 0 ? (
               <p className="text-18">No row has been entered yet.</p>
             ) : (
-              <Rows rows={rows} opened={opened} onChoose={shut ? () => undefined : setChosen} />
+              <Rows rows={rows} opened={opened} placeOf={run.placeOf} onChoose={shut ? () => undefined : setChosen} />
             )}
           </BenchScroll>
           <Into slot="action">

@@ -3,6 +3,7 @@ import type { Opened } from '#shared/proof-test/entries'
 import { RunFrame, useRunShape } from '../../../components/run/run-frame'
 import { RunTitleBlock } from '../../../components/run/run-title-block'
 import { clockTime } from '../../../lib/dates'
+import { rememberTestName } from '../../../lib/test-names'
 import { useTitle } from '../../../lib/use-title'
 import { useWakeLock } from '../../../lib/wake-lock'
 import { dropDraftsOf } from '../drafts'
@@ -47,7 +48,8 @@ function stepKey({ step, state }: Run): string {
 
 /** The run: title block, ladder, bench, line, and Stop in its corner whatever the step. */
 export function RunScreen({ run, opened }: Props): ReactElement {
-  useTitle(`${opened.number}, ${opened.press.name}`)
+  const name = `${opened.number}, ${opened.press.name}`
+  useTitle(name)
   const shape = useRunShape()
   const [panel, setPanel] = useState<Panel>('none')
   const [cover] = useCover(run.testId)
@@ -63,6 +65,7 @@ export function RunScreen({ run, opened }: Props): ReactElement {
   useEffect(() => {
     if (over) dropDraftsOf(run.testId)
   }, [over, run.testId])
+  useEffect(() => rememberTestName(run.testId, name), [run.testId, name])
   const stop = (): void => {
     readyAlarm()
     setPanel('none')

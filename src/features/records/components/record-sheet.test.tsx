@@ -26,6 +26,16 @@ function answerOf(recorded: RecordedTest): EntriesResponse {
   }
 }
 
+/** The same ledger with its first joint examined twelve minutes before the server received it. */
+function receivedLater(recorded: RecordedTest): RecordedTest {
+  const entries = recorded.entries.map((entry) =>
+    entry.kind === 'joint-examined' && entry === recorded.entries.find(({ kind }) => kind === 'joint-examined')
+      ? { ...entry, receivedAt: new Date(Date.parse(entry.observedAt) + 12 * 60_000).toISOString() }
+      : entry,
+  )
+  return { ...recorded, entries }
+}
+
 type Reader = { userId: string; role: 'lead' | 'witness' | 'crew' }
 const lead: Reader = { userId: ids.lead, role: 'lead' }
 const witness: Reader = { userId: ids.witness, role: 'witness' }
@@ -44,7 +54,8 @@ function Shown({ id, reader }: { id: string; reader: Reader }) {
 function serve(ledgers: EntriesResponse[], onPost: () => Response = () => new Response('{}', { status: 500 })) {
   const posted: Record<string, unknown>[] = []
   let reads = 0
-  vi.stubGlobal('fetch', async (_url: string, init: RequestInit) => {
+  vi.stubGlobal('fetch', async (url: string, init: RequestInit) => {
+    if (url.includes('/verification/')) return keys === undefined ? new Response('{}', { status: 503 }) : Response.json({ keys })
     if (init.method === 'POST') {
       posted.push(JSON.parse(String(init.body)) as Record<string, unknown>)
       return onPost()
@@ -117,7 +128,7 @@ describe('the record of a countersigned test', () => {
     const signatures = screen.getByRole('region', { name: 'Signatures' })
     expect(signatures).toHaveTextContent(/Marit Sandoval.*signed with password.*I ran this test and these are its readings\./)
     expect(signatures).toHaveTextContent(/Tomas Achterberg.*signed with password.*I was present and read the gauge myself\./)
-    expect(signatures).toHaveTextContent('Chain whole, checked 21 Sep 2026')
+    expect(signatures).toHaveTextContent(/Chain whole over \d+ entries, checked 21 Sep 2026/)
   })
 
   test('prints how the witness stands to the shop, and how late a countersignature came', async () => {
@@ -127,6 +138,18 @@ describe('the record of a countersigned test', () => {
     document.body.replaceChildren()
     await show(countersignedLater(recordedTest(), 26))
     expect(screen.getByRole('region', { name: 'Signatures' })).toHaveTextContent('26 hours after the lead')
+  })
+
+  test('lists every entry by both clocks, and says how far apart they are where it is more than five minutes', async () => {
+    const recorded = receivedLater(recordedTest())
+    await show(recorded)
+    await userEvent.click(screen.getByText(`Every entry, ${recorded.entries.length} in all, by both clocks`))
+    const rows = within(screen.getByRole('table', { name: 'Every entry by both clocks' }))
+      .getAllByRole('row')
+      .slice(1)
+    expect(rows).toHaveLength(recorded.entries.length)
+    expect(rows.filter((row) => row.textContent.includes('12 min later'))).toHaveLength(1)
+    expect(rows.filter((row) => /later/.test(row.textContent))).toHaveLength(1)
   })
 
   test('gives the spreadsheet to those who may export it only', async () => {
@@ -160,7 +183,7 @@ describe('a record that needs a second look', () => {
     expect(screen.getByRole('heading', { name: 'Today’s arithmetic differs from what was frozen at the conclusion' })).toBeInTheDocument()
     expect(document.body).toHaveTextContent('Permanent set: frozen 0.04 mm, within; today 0.02 mm, within.')
     // The altered text no longer has the hash that was stored.
-    expect(screen.getByRole('heading', { name: 'The ledger is not whole' })).toBeInTheDocument()
+    expect(screen.getByRole('heading', { name: 'This record was altered at entry 10' })).toBeInTheDocument()
   })
 
   test('says nothing of arithmetic when nothing differs', () => {

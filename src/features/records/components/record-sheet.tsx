@@ -8,10 +8,12 @@ import { paths } from '../../../paths'
 import type { RecordView } from '../record-view'
 import type { SignTurn } from '../sign-turn'
 import { Corrections } from './corrections'
+import { AlteredPlate, ledgerFileAddress } from './altered-plate'
 import { CriteriaTable } from './criteria-table'
 import { Cautions, Notices } from './notices'
 import { EveryCriterion } from './every-criterion'
 import { ForceBudget } from './force-budget'
+import { LedgerList } from './ledger-list'
 import { RecordChart } from './record-chart'
 import { RecordFacts } from './record-facts'
 import { RecordCourse, RecordHead, RecordResult } from './record-head'
@@ -35,10 +37,15 @@ function Actions({ record, turn, mayExport, part }: RecordSheetProps) {
     <nav aria-label="This record" className="flex flex-wrap items-center justify-between gap-3 py-3 print:hidden">
       <TextLink to={paths.proofTests.href()}>All proof tests</TextLink>
       <div className="flex flex-wrap gap-3 max-tablet:w-full max-tablet:flex-col">
-        {mayExport && (
-          <ButtonAnchor href={file} download size="line">
-            Download spreadsheet
-          </ButtonAnchor>
+        {mayExport && record.broken === null && (
+          <>
+            <ButtonAnchor href={ledgerFileAddress(record.id)} download size="line">
+              Download ledger file
+            </ButtonAnchor>
+            <ButtonAnchor href={file} download size="line">
+              Download spreadsheet
+            </ButtonAnchor>
+          </>
         )}
         {(record.standing === 'under way' || record.standing === 'stopped') && part === 'lead' && (
           <ButtonLink to={paths.runProofTest.href(record.id)} size="line">
@@ -63,6 +70,7 @@ export function RecordSheet(props: RecordSheetProps) {
   return (
     <div className={classNames(inset, 'mx-auto w-full max-w-[1328px] pb-8 max-tablet:px-2 print:max-w-none print:p-0')}>
       <Actions {...props} />
+      <AlteredPlate record={record} mayExport={props.mayExport} />
       <ZonedSheet tone="sheet" className="tablet:p-3 print:p-0">
         <article className="px-3 pt-4 tablet:px-6">
           <RecordHead record={record} />
@@ -82,6 +90,7 @@ export function RecordSheet(props: RecordSheetProps) {
           <StagesAsRead record={record} />
           <ForceBudget record={record} />
           <EveryCriterion record={record} />
+          <LedgerList record={record} />
           <Corrections record={record} />
           <RecordPhotos record={record} files={files} />
           <Notices record={record} />
