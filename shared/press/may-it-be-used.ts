@@ -62,10 +62,12 @@ function proofTestMissing({ toRepeat }: PressState): string {
   return toRepeat ? `A proof test that repeats ${toRepeat.number}, concluded and countersigned.` : PROOF_TEST
 }
 
+const asSentence = (text: string): string => (/[.!?]$/.test(text) ? text : `${text}.`)
+
 /** Repairs that stand open, in a sentence each. A joint that was rejected speaks for itself. */
 function openRepairs(state: PressState): string[] {
   return state.repairs.flatMap((repair) =>
-    repair.closed || repair.from === 'joint' ? [] : [`A repair is open: ${repair.why} Say what was done, and close it.`],
+    repair.closed || repair.from === 'joint' ? [] : [`A repair is open: ${asSentence(repair.why)} Say what was done, and close it.`],
   )
 }
 
