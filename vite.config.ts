@@ -1,6 +1,7 @@
 import tailwindcss from '@tailwindcss/vite'
 import react from '@vitejs/plugin-react'
 import { defineConfig } from 'vite'
+import { offlineClient } from './server/bootstrap/client-plugins.ts'
 
 /**
  * Parts that every screen needs are named, so that a change in a screen leaves them in the browser's cache.
@@ -14,10 +15,11 @@ const chunks = [
 ]
 
 export default defineConfig({
-  plugins: [react(), tailwindcss()],
+  plugins: [react(), tailwindcss(), offlineClient()],
   build: {
     outDir: 'dist',
-    emptyOutDir: true,
+    // A page that was loaded before an update still finds its parts: see former-builds.ts.
+    emptyOutDir: false,
     rolldownOptions: { output: { codeSplitting: { groups: chunks } } },
   },
 })

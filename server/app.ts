@@ -48,6 +48,8 @@ function securityHeaders(config: Config) {
               styleSrcAttr: ["'unsafe-inline'"],
               imgSrc: ["'self'", 'data:', 'blob:'],
               fontSrc: ["'self'", 'data:'],
+              workerSrc: ["'self'"],
+              manifestSrc: ["'self'"],
               ...(isHttps ? { upgradeInsecureRequests: [] } : {}),
             },
           },

@@ -6,6 +6,7 @@ import { RouterProvider } from 'react-router-dom'
 import { SkeletonPage } from './components/skeleton'
 import { sessionEnded } from './features/people/api/get-session'
 import { createQueryClient } from './lib/query-client'
+import { newVersion } from './lib/new-version'
 import { applyTheme, readTheme } from './lib/theme'
 import { createRouter, findOutWhoIsHere } from './router'
 
@@ -26,3 +27,6 @@ void findOutWhoIsHere(client).then(() => {
     </StrictMode>,
   )
 })
+
+// Work on the program is not to be looked at through yesterday's copy of it.
+void (import.meta.env.PROD ? newVersion.watch() : newVersion.unregister())

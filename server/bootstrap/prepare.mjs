@@ -1,7 +1,7 @@
 // Runs before `npm start`, `npm run dev` and `npm test`, in plain Node with no dependencies: on a fresh clone there are none yet.
 import { spawnSync } from 'node:child_process'
 import { createHash } from 'node:crypto'
-import { accessSync, constants, existsSync, readdirSync, readFileSync, writeFileSync } from 'node:fs'
+import { accessSync, constants, existsSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
 import path from 'node:path'
 import { fileURLToPath } from 'node:url'
 
@@ -113,7 +113,7 @@ function filesUnder(place) {
 }
 
 function sourceHash() {
-  const single = ['index.html', 'package-lock.json', 'package.json', 'tsconfig.json', 'vite.config.ts', 'tailwind.config.ts']
+  const single = ['index.html', 'package-lock.json', 'package.json', 'tsconfig.json', 'vite.config.ts', 'tailwind.config.ts', 'server/bootstrap/client-plugins.ts']
   const files = [...filesUnder('src'), ...filesUnder('shared'), ...single.filter((file) => existsSync(path.join(root, file)))].sort()
   const hash = createHash('sha256')
   for (const file of files) hash.update(file).update('\0').update(readFileSync(path.join(root, file))).update('\0')
@@ -125,6 +125,8 @@ function buildClient() {
   const hash = sourceHash()
   if (!force && existsSync(stamp) && readFileSync(stamp, 'utf8') === hash) return
   say('Building the client …')
+  // A build that is broken off leaves files of two versions: it must not pass for the one before it.
+  rmSync(stamp, { force: true })
   // The address printed at the end is what people should read, so the list of chunks stays out.
   if (!run(process.execPath, ['node_modules/vite/bin/vite.js', 'build', '--logLevel', 'warn'], { NODE_ENV: 'production' })) {
     stop('The client could not be built; see above.')

@@ -30,8 +30,8 @@ export interface SenderParts {
   whoIsSignedIn: () => Promise<string>
   delay: (failures: number) => number
   onState: (state: SenderState) => void
-  /** The server has these; they leave what waits after this returns. */
-  onKept: (testId: string, kept: readonly LedgerEntry[]) => void
+  /** The server has these; they leave what waits after this is done. */
+  onKept: (testId: string, kept: readonly LedgerEntry[]) => Promise<void>
   /** Something of this ledger left, or came to need attention. */
   onMoved: (testId: string, ledgerId: string, kept: LedgerEntry[]) => Promise<void>
   onFault: (fault: StorageFault) => void
@@ -254,7 +254,7 @@ export class OutboxSender {
     const [first] = batch
     if (!first) return false
     const kept = keptIn(answer)
-    this.parts.onKept(first.testId, kept)
+    await this.parts.onKept(first.testId, kept)
     let left = false
     for (const one of batch) {
       const result = answer.results.find(({ id }) => id === one.entry.id)

@@ -10,6 +10,7 @@ import { sessionResponseSchema } from '#shared/api/session'
 import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
 import { ALWAYS_ALLOWED } from '#shared/proof-test/entries'
 import { api } from './api-client'
+import { ledgerCache } from './ledger-cache'
 import type { NewEntry, Refused, Sent, Waiting } from './outbox-database'
 import { OutboxSender, type SenderState } from './outbox-sender'
 import { OutboxStore } from './outbox-store'
@@ -67,7 +68,7 @@ export interface OutboxParts {
   delay: (failures: number) => number
 }
 
-type KeptListener = (testId: string, entries: readonly LedgerEntry[]) => void
+type KeptListener = (testId: string, entries: readonly LedgerEntry[]) => unknown
 interface Told {
   testId: string
   ledgerId: string
@@ -124,13 +125,13 @@ export class Outbox {
     this.unkept = new UnkeptEntries({
       post: parts.post,
       delay: parts.delay,
-      onKept: (testId, kept) => this.handOn(testId, kept),
+      onKept: (testId, kept) => void this.handOn(testId, kept),
       onChange: (ledgerId, says) => this.showUnkept(ledgerId, says),
     })
     this.channel = typeof BroadcastChannel === 'undefined' ? null : new BroadcastChannel(parts.databaseName)
     this.channel?.addEventListener('message', (event: MessageEvent<Told>) => {
       const { testId, ledgerId, kept } = event.data
-      if (kept.length > 0) this.handOn(testId, kept)
+      if (kept.length > 0) void this.handOn(testId, kept)
       void this.refresh(ledgerId)
     })
     if (typeof window !== 'undefined') window.addEventListener('online', () => this.sendNow())
@@ -167,7 +168,7 @@ export class Outbox {
     return { waiting: [...waiting, ...this.unkept.all()], attention, sent }
   }
 
-  /** Called with what the server kept, before it leaves the outbox. */
+  /** Called with what the server kept; it leaves the outbox once the listeners are done, none of which may fail. */
   onKept(listener: KeptListener): () => void {
     this.keptListeners.add(listener)
     return () => this.keptListeners.delete(listener)
@@ -337,8 +338,8 @@ export class Outbox {
     for (const listener of this.listeners) listener()
   }
 
-  private handOn(testId: string, entries: readonly LedgerEntry[]): void {
-    for (const listener of this.keptListeners) listener(testId, entries)
+  private async handOn(testId: string, entries: readonly LedgerEntry[]): Promise<void> {
+    await Promise.all([...this.keptListeners].map((listener) => listener(testId, entries)))
   }
 
   private tell(told: Told): void {
@@ -358,3 +359,6 @@ export const outbox = new Outbox({
   whoIsSignedIn: async () => (await api.get(sessionResponseSchema, '/api/session')).user.id,
   delay: (failures) => fullJitter(failures, Math.random),
 })
+
+// What the server has answered for stands among what is kept of its ledger before it leaves: a reload shows no less.
+outbox.onKept((testId, kept) => ledgerCache.add(testId, kept))

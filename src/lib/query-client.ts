@@ -13,6 +13,7 @@ export function createQueryClient(onSignedOut: (client: QueryClient, queryKey: r
       queries: {
         staleTime: 15_000,
         networkMode: 'always',
+        refetchOnReconnect: true,
         retry: (count, error) => error instanceof Disconnected && count < 2,
         retryDelay: 1000,
       },

@@ -78,7 +78,10 @@ export class LedgerStream {
     // Held until the tab goes: then the browser gives it to the next.
     void navigator.locks.request(LOCK, () => {
       this.isLeader = true
+      // Whoever is still there says again what it wants; a tab that crashed doesn't.
+      this.wants.clear()
       this.post({ says: 'who' })
+      this.tellWants()
       this.reopen()
       return new Promise(() => undefined)
     })

@@ -11,6 +11,7 @@ import { TestTable } from '../features/register/components/test-table'
 import { calendarDate } from '../lib/dates'
 import { useCan, useShop, useUser } from '../lib/here'
 import { useRegister } from '../lib/register-view'
+import { useKeptOnDevice } from '../lib/use-kept-on-device'
 import { paths } from '../paths'
 
 export function Component() {
@@ -21,6 +22,8 @@ export function Component() {
   const view = useRegister({ sorts: TEST_SORTS, fallback: '-opened', href: paths.proofTests.href })
   const { asked, note, narrowed } = testsAsked(shop.id, view)
   const list = useProofTests(asked)
+  const underWay = list.data?.proofTests.filter((test) => test.status === 'under way' && [test.leadId, test.witnessId].includes(user.id)) ?? []
+  useKeptOnDevice(underWay.map(({ id }) => id))
   if (list.error && list.data === undefined) throw list.error
   const plan = can('proof-test:open') && (
     <ButtonLink kind="next" to={paths.planProofTest.href({ shop: shop.id })}>

@@ -1,4 +1,5 @@
 import { Outlet } from 'react-router-dom'
+import { VersionPlate } from '../components/version-plate'
 import { HereProvider } from '../features/people/components/here-provider'
 import { SignedInFrame } from '../features/people/components/signed-in-frame'
 import { weekday } from '../lib/dates'
@@ -8,6 +9,7 @@ export function SignedIn() {
   return (
     <HereProvider>
       <SignedInFrame day={weekday(new Date())}>
+        <VersionPlate />
         <Outlet />
       </SignedInFrame>
     </HereProvider>

@@ -6,6 +6,9 @@ import { shopWithOpenTest } from '../factories/e2e-shop'
 import { newPage } from '../support/browser'
 import { leadAtTheRun, signIn } from '../support/run-screen'
 
+/** Two servers, a database and a browser share the machine: what comes by itself may take its time. */
+const PATIENT = { timeout: 20_000 }
+
 const hashOf = (content: Buffer): string => createHash('sha256').update(content).digest('hex')
 const noise = (width: number, height: number) => sharp(randomBytes(width * height * 3), { raw: { width, height, channels: 3 } })
 
@@ -54,7 +57,7 @@ describe('a photo at a joint', () => {
       { name: 'weld 1 wide.jpg', mimeType: 'image/jpeg', buffer: tellsWhere },
     ])
     const chosen = page.getByRole('list', { name: 'Chosen' }).getByRole('listitem')
-    await expect.poll(() => chosen.count()).toBe(2)
+    await expect.poll(() => chosen.count(), PATIENT).toBe(2)
     expect(await page.getByText('This file is no photo').count()).toBe(0)
     await run.accept(1, { weld: true, before: true })
 
@@ -67,14 +70,14 @@ describe('a photo at a joint', () => {
     await page.reload()
     await run.plate(/^Joint 1,/).click()
     await run.heading(/^Joint 1:/).waitFor()
-    await expect.poll(() => page.getByText('on this tablet', { exact: true }).count()).toBe(2)
-    await expect.poll(isDrawn(page, 'img[src^="blob:"]')).toBe(true)
+    await expect.poll(() => page.getByText('on this tablet', { exact: true }).count(), PATIENT).toBe(2)
+    await expect.poll(isDrawn(page, 'img[src^="blob:"]'), PATIENT).toBe(true)
     expect(await heldBy(page, shop.testId)).toEqual([])
 
     await page.unroute('**/entries')
     await page.unroute('**/api/attachments/*')
-    await expect.poll(async () => (await heldBy(page, shop.testId)).map((one) => one.present), { timeout: 30_000 }).toEqual([true, true])
-    await expect.poll(() => page.getByText('on the server', { exact: true }).count(), { timeout: 15_000 }).toBe(2)
+    await expect.poll(async () => (await heldBy(page, shop.testId)).map((one) => one.present), PATIENT).toEqual([true, true])
+    await expect.poll(() => page.getByText('on the server', { exact: true }).count(), PATIENT).toBe(2)
 
     const [first, second] = await heldBy(page, shop.testId)
     expect(first?.sha256).toBe(hashOf(small))
@@ -89,16 +92,71 @@ describe('a photo at a joint', () => {
     await witness.goto(`/proof-tests/${shop.testId}/attend`)
     const thumbnail = witness.getByRole('button', { name: 'Photo weld 1.jpg, Joint 1, examined before load: open it large' })
     await thumbnail.waitFor()
-    await expect.poll(isDrawn(witness, 'li img')).toBe(true)
+    await expect.poll(isDrawn(witness, 'li img'), PATIENT).toBe(true)
     await thumbnail.click()
     const large = witness.getByRole('dialog', { name: 'Photo weld 1.jpg, large' })
     await large.getByText(hashOf(small).slice(0, 8)).waitFor()
-    await expect.poll(isDrawn(witness, 'dialog img')).toBe(true)
+    await expect.poll(isDrawn(witness, 'dialog img'), PATIENT).toBe(true)
     expect(await witness.getByRole('button', { name: /stop/i }).first().isVisible()).toBe(true)
     await witness.keyboard.press('ArrowRight')
     await witness.getByRole('dialog', { name: 'Photo weld 1 wide.jpg, large' }).waitFor()
     await witness.keyboard.press('Escape')
     await witness.getByRole('dialog').waitFor({ state: 'detached' })
     expect(await thumbnail.isVisible()).toBe(true)
+  })
+
+  it('keeps the record from being signed while its bytes are missing, until they come or somebody says they will not', async () => {
+    const shop = await shopWithOpenTest()
+    const { page, run } = await leadAtTheRun(shop)
+    const [lost, late] = await Promise.all([noise(200, 150).jpeg().toBuffer(), noise(150, 200).jpeg().toBuffer()])
+    await page.route('**/api/attachments/*', (route) =>
+      route.request().method() === 'PUT' ? route.abort('connectionreset') : route.continue(),
+    )
+    await run.press(/^Note/)
+    await page.getByRole('radio', { name: 'Leak' }).check({ force: true })
+    await page.getByLabel('In a few words').fill('Drops at the ram seal.')
+    await page.getByLabel('Photos: choose a file').setInputFiles([
+      { name: 'seal.jpg', mimeType: 'image/jpeg', buffer: lost },
+      { name: 'hose.jpg', mimeType: 'image/jpeg', buffer: late },
+    ])
+    await page.getByRole('list', { name: 'Chosen' }).getByRole('listitem').nth(1).waitFor()
+    await run.press(/^Written down/)
+    await run.toTheClimb()
+    await run.press(/^All behind the shield: pumping to/)
+    await run.press(/^Stop/)
+    await run.release()
+    await run.heading('What was found after the stop').waitFor()
+    await page.getByRole('radio', { name: 'Rejected' }).check({ force: true })
+    await page.getByLabel(/^Why/).fill('Oil under the ram.')
+    await run.press('Concluded: rejected')
+    await page.getByRole('link', { name: /Go to the record and sign/ }).click()
+    await page.getByText('2 photos or documents are not on the server yet. The signature waits for them.').waitFor()
+    await expect.poll(() => page.getByText('On this tablet: it is being sent. Leave this page open.').count(), PATIENT).toBe(2)
+    expect(await page.getByRole('form', { name: 'Sign' }).count()).toBe(0)
+
+    const elsewhere = await newPage()
+    await signIn(elsewhere, shop.lead)
+    await elsewhere.goto(`/proof-tests/${shop.testId}`)
+    const missing = elsewhere.getByRole('list', { name: 'Not on the server yet' }).getByRole('listitem')
+    await expect.poll(() => missing.count(), PATIENT).toBe(2)
+    await missing.first().getByRole('button', { name: 'Declare it lost' }).click()
+    await missing.first().getByRole('button', { name: 'It is lost' }).click()
+    await missing.first().getByText('Say why in a few words.').waitFor()
+    await missing.first().getByLabel('Why its bytes will not come').fill('The tablet went into the oil.')
+    await missing.first().getByRole('button', { name: 'It is lost' }).click()
+    await elsewhere.getByText(/seal\.jpg of entry \d+ was declared lost by Lena Vogt: The tablet went into the oil\./).waitFor()
+    await expect.poll(() => missing.count(), PATIENT).toBe(1)
+    expect(await elsewhere.getByRole('form', { name: 'Sign' }).count()).toBe(0)
+
+    await page.unroute('**/api/attachments/*')
+    const form = elsewhere.getByRole('form', { name: 'Sign' })
+    await form.waitFor({ timeout: 45_000 })
+    expect((await bytesOf(page, shop.testId, hashOf(late))).equals(late)).toBe(true)
+    await form.getByLabel('Your password').fill(shop.lead.password)
+    await form.getByRole('button', { name: 'Sign as lead' }).click()
+    await elsewhere
+      .getByText(/Waits for Wim Faber/)
+      .first()
+      .waitFor()
   })
 })

@@ -122,7 +122,10 @@ async function check({ run, tablets }: Driven): Promise<void> {
 /** Kills until each has been killed as often as planned; a moment later or in the middle of the next start. */
 async function killAtRandom(random: Seeded): Promise<void> {
   const left = { ...times }
-  while (left.server + left.database > 0) {
+  const all = left.server + left.database
+  for (let said = 0; left.server + left.database > 0;) {
+    const done = all - left.server - left.database
+    if (isFullRun() && done >= said + 20) process.stdout.write(`${(said = done)} of ${all} kills, seed ${seed}\n`)
     await pauseFor(random.between(0, 900))
     const again = random.chance(0.15) ? 1 : 0
     await turn.take(async () => {

@@ -30,8 +30,9 @@ const vitest = (name: string, project: string, file: string, leaves?: string): P
 const PARTS: Part[] = [
   { name: 'client', args: ['server/bootstrap/prepare.mjs', 'build'] },
   vitest('tally', 'faults', 'tests/faults/tally.test.ts'),
-  vitest('clients', 'faults', 'tests/faults/clients.test.ts', 'clients'),
   vitest('kills', 'faults', 'tests/faults/kills.test.ts', 'kills'),
+  vitest('database', 'faults', 'tests/faults/database-start.test.ts'),
+  vitest('clients', 'faults', 'tests/faults/clients.test.ts', 'clients'),
   vitest('every-byte', 'faults', 'tests/faults/every-byte.test.ts'),
   vitest('offline', 'e2e', 'tests/e2e/offline.test.ts'),
   { name: 'galera', args: ['--import', 'tsx', 'tests/galera/run.ts'], leaves: 'galera' },

@@ -48,9 +48,11 @@ export class Node {
     return path.join(this.directory, 'mariadbd.log')
   }
 
-  /** How it last took what it lacked: the missing entries alone, or all of another node's data. */
-  lastTransfer(): 'what it lacked' | 'everything' {
-    return readFileSync(this.logFile, 'utf8').slice(this.logBefore).includes('SST succeeded') ? 'everything' : 'what it lacked'
+  /** What it was given by the others when it was started last: the transactions it lacked, or all of their data. */
+  lastTransfer(): string {
+    const found = /IST uuid:\S+ f: (\d+), l: (\d+)/.exec(readFileSync(this.logFile, 'utf8').slice(this.logBefore))
+    const [from, to] = [Number(found?.[1] ?? 0), Number(found?.[2] ?? 0)]
+    return from > 0 ? `the ${to - from + 1} transactions it lacked` : 'all the data'
   }
 
   log(): string {

@@ -14,8 +14,8 @@ let open: E2e | undefined
 const contexts: BrowserContext[] = []
 const noise: string[] = []
 
-/** The browser's own notice of an answer such as 401 or 409, which the screen handles. */
-const notice = /^Failed to load resource: /
+/** The browser's own notice of an answer such as 401 or 409, which the screen handles; a driver's, that it lets no service worker in. */
+const notice = /^Failed to load resource: |^Service Worker registration blocked by Playwright/
 
 export async function openE2e(address: string): Promise<void> {
   const browser = await chromium.launch({

@@ -13,14 +13,21 @@ export interface Shown {
   note: string
 }
 
-const frame = 'block size-22 overflow-hidden border-2 border-rule bg-field hover:border-ink'
+const frame = 'block shrink-0 touch-manipulation overflow-hidden border-2 border-rule bg-field hover:border-ink'
 
-function DocumentLink({ files, attachment, children }: { files: Files; attachment: Attachment; children: ReactNode }): ReactElement {
+interface DocumentLinkProps {
+  files: Files
+  attachment: Attachment
+  className: string
+  children: ReactNode
+}
+
+function DocumentLink({ files, attachment, className, children }: DocumentLinkProps): ReactElement {
   const url = useAttachmentUrl(files.owner, attachment)
   const label = `${calledWords(attachment)}: opens in a new tab`
-  if (url === null) return <span className={frame}>{children}</span>
+  if (url === null) return <span className={className}>{children}</span>
   return (
-    <a href={url} target="_blank" rel="noreferrer" aria-label={label} className={frame}>
+    <a href={url} target="_blank" rel="noreferrer" aria-label={label} className={className}>
       {children}
     </a>
   )
@@ -40,6 +47,7 @@ interface StripProps {
 export function AttachmentStrip({ files, shown, captions = false, leavesFoot = false, className }: StripProps): ReactElement | null {
   const [open, setOpen] = useState<number | null>(null)
   if (shown.length === 0) return null
+  const box = classNames(frame, captions ? 'size-22' : 'size-28')
   const photos = shown.filter(({ attachment }) => !isDocument(attachment))
   return (
     <>
@@ -53,10 +61,10 @@ export function AttachmentStrip({ files, shown, captions = false, leavesFoot = f
           return (
             <li
               key={`${place}${note}${attachment.sha256}`}
-              className={captions ? 'flex min-w-0 gap-3 border-t border-hairline pt-3' : 'w-22'}
+              className={captions ? 'flex min-w-0 gap-3 border-t border-hairline pt-3' : 'w-28'}
             >
               {isDocument(attachment) ? (
-                <DocumentLink files={files} attachment={attachment}>
+                <DocumentLink files={files} attachment={attachment} className={box}>
                   {thumbnail}
                 </DocumentLink>
               ) : (
@@ -64,7 +72,7 @@ export function AttachmentStrip({ files, shown, captions = false, leavesFoot = f
                   type="button"
                   aria-label={`${calledWords(attachment)}, ${place}: open it large`}
                   onClick={() => setOpen(photos.indexOf(one))}
-                  className={classNames(frame, 'shrink-0 touch-manipulation')}
+                  className={box}
                 >
                   {thumbnail}
                 </button>
@@ -76,7 +84,7 @@ export function AttachmentStrip({ files, shown, captions = false, leavesFoot = f
                   <WhereItIs where={files.where(attachment)} className="font-condensed text-graphite print:hidden" />
                 </div>
               ) : (
-                <WhereItIs where={files.where(attachment)} className="mt-0.5 font-condensed text-14 leading-4 text-graphite" />
+                <WhereItIs where={files.where(attachment)} className="mt-1 font-condensed text-16 leading-5 text-graphite" />
               )}
             </li>
           )

@@ -117,7 +117,7 @@ export function AttachmentViewer({ files, all, index, onIndex, onClose, leavesFo
           {all.length > 1 && `. ${index + 1} of ${all.length}`}
           <span className="flex flex-wrap items-center justify-center gap-x-4">
             <WhereItIs where={where} />
-            <span>
+            <span className="whitespace-nowrap">
               SHA-256 <span className="font-mono text-14">{shortHash(attachment.sha256)}</span>
             </span>
           </span>

@@ -3,7 +3,6 @@ import { ATTACHMENT_TYPES, type Attachment } from '#shared/ledger/envelope'
 import type { Owner } from '../../lib/attachment-database'
 import { FileRefused, prepareAttachment } from '../../lib/attachment-prepare'
 import { files } from '../../lib/attachments'
-import { classNames } from '../../lib/class-names'
 import { Button } from '../button'
 import { FieldMessage } from '../field'
 import { CameraGlyph, DocumentGlyph } from './glyphs'
@@ -41,12 +40,12 @@ function Chosen({ owner, attachment, onRemove }: { owner: Owner; attachment: Att
         type="button"
         onClick={onRemove}
         aria-label={`Leave out ${calledWords(attachment)}`}
-        className="w-14 touch-manipulation border-l-2 border-rule text-16 font-medium hover:bg-sheet"
+        className="w-20 touch-manipulation border-l-2 border-rule text-16 hover:bg-sheet"
       >
         <span aria-hidden className="block text-26 leading-7">
           ×
         </span>
-        <span aria-hidden className="font-condensed text-14 leading-4">
+        <span aria-hidden className="font-condensed">
           leave out
         </span>
       </button>
@@ -125,7 +124,7 @@ export function PhotoField({ label, owner, chosen, onChange, hint = PHOTO_HINT, 
       )}
       {room > 0 && (
         <div className="flex flex-wrap items-center gap-3">
-          <Button className={classNames('min-h-14 pointer-fine:hidden')} busy={busy} onClick={() => camera.current?.click()}>
+          <Button className="min-h-14 pointer-fine:hidden" busy={busy} onClick={() => camera.current?.click()}>
             <span className="flex items-center gap-2.5">
               <CameraGlyph /> Take photo
             </span>

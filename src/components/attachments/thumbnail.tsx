@@ -15,7 +15,7 @@ function Sheet({ attachment }: { attachment: Attachment }): ReactElement {
   return (
     <span className="flex size-full flex-col items-center justify-center gap-0.5 bg-field text-ink">
       <DocumentGlyph size={36} />
-      <span className="font-condensed text-14 leading-4">PDF {sizeText(attachment.size)}</span>
+      <span className="font-condensed text-16 leading-5 whitespace-nowrap">PDF {sizeText(attachment.size)}</span>
     </span>
   )
 }

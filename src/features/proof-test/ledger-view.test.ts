@@ -3,7 +3,8 @@ import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
 import { foldProofTest } from '#shared/proof-test/apply'
 import { ids } from '../../../tests/factories/test-press'
 import { recordedTest } from '../../../tests/factories/recorded-test'
-import { irregularUnderLoad, LedgerFold, mergeEntries, wholeUpTo } from './ledger-view'
+import { mergeEntries, wholeUpTo } from '../../lib/known-ledger'
+import { irregularUnderLoad, LedgerFold } from './ledger-view'
 
 const { entries } = recordedTest()
 const draftOf = ({ seq: _seq, receivedAt: _at, irregular: _irregular, prevHash: _prev, hash: _hash, ...draft }: LedgerEntry): EntryDraft => draft

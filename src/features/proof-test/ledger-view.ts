@@ -1,33 +1,8 @@
 import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
-import { findingsOf } from '#shared/ledger/rules'
 import { applyProofTest, emptyProofTest } from '#shared/proof-test/apply'
-import { decideProofTest, PROOF_TEST_RULES } from '#shared/proof-test/decide'
+import { PROOF_TEST_RULES } from '#shared/proof-test/decide'
 import type { ProofTestState } from '#shared/proof-test/state'
-
-/** Both lists as one, by `seq`, each entry once; the first list itself when nothing is new. */
-export function mergeEntries(known: readonly LedgerEntry[], more: readonly LedgerEntry[]): readonly LedgerEntry[] {
-  const have = new Set(known.map((entry) => entry.seq))
-  const added = more.filter((entry) => !have.has(entry.seq))
-  if (added.length === 0) return known
-  return [...known, ...added].sort((a, b) => a.seq - b.seq)
-}
-
-/** The last `seq` before the first gap: what comes after it is asked for. */
-export function wholeUpTo(entries: readonly LedgerEntry[]): number {
-  let seq = 0
-  while (entries[seq]?.seq === seq + 1) seq += 1
-  return seq
-}
-
-const NO_HASH = '0'.repeat(64)
-
-/** An entry that only this device has yet, numbered as if it came next, and marked as the server would mark it. */
-export function provisional(state: ProofTestState, draft: EntryDraft): LedgerEntry {
-  const { kind, payload, overrides, authorId, bootId, monotonicMs, observedAt } = draft
-  const mark = { bootId, monotonicMs, at: observedAt }
-  const irregular = findingsOf(decideProofTest(state, { kind, payload, overrides, authorId, mark })).map((finding) => finding.rule)
-  return { ...draft, seq: state.headSeq + 1, receivedAt: observedAt, irregular, prevHash: NO_HASH, hash: NO_HASH }
-}
+import { foldWaiting } from '../../lib/provisional'
 
 export interface Folded {
   /** What the server has, folded. */
@@ -56,18 +31,7 @@ export class LedgerFold {
 
   fold(known: readonly LedgerEntry[], waiting: readonly EntryDraft[]): Folded {
     const server = this.foldServer(known)
-    const have = new Set(known.map((entry) => entry.id))
-    const entries = [...known]
-    let state = server
-    let pending = 0
-    for (const draft of waiting) {
-      if (have.has(draft.id)) continue
-      const entry = provisional(state, draft)
-      entries.push(entry)
-      state = applyProofTest(state, entry)
-      pending += 1
-    }
-    return { server, state, entries, pending }
+    return { server, ...foldWaiting(server, known, waiting) }
   }
 
   private foldServer(known: readonly LedgerEntry[]): ProofTestState {

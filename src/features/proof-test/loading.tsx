@@ -1,11 +1,14 @@
-import type { ReactElement, ReactNode } from 'react'
+import { useEffect, useState, type ReactElement, type ReactNode } from 'react'
+import { useQueryClient } from '@tanstack/react-query'
 import type { Opened } from '#shared/proof-test/entries'
 import { Button, ButtonLink } from '../../components/button'
 import { PlainScreen } from '../../components/plain-screen'
 import { SkeletonPage } from '../../components/skeleton'
 import { useAdoptShop } from '../../lib/here'
+import { newVersion } from '../../lib/new-version'
 import { Disconnected, isNotFound } from '../../lib/problem'
 import { paths } from '../../paths'
+import { showKept } from './api/get-entries'
 import { useRun, type Run } from './use-run'
 
 interface WithRunProps {
@@ -42,9 +45,23 @@ function Ready({ run, opened, children }: { run: Run; opened: Opened; children: 
   return children(run, opened)
 }
 
+/** What this device kept of the test is looked up first: without a network it is all there is. */
+function useKeptShown(testId: string): boolean {
+  const client = useQueryClient()
+  const [shown, setShown] = useState<string | null>(null)
+  useEffect(() => {
+    let left = false
+    void showKept(client, testId).then(() => left || setShown(testId))
+    return () => {
+      left = true
+    }
+  }, [client, testId])
+  return shown === testId
+}
+
 /** A test and its run, once they are here. The run needs an origin that the browser trusts with its storage. */
-export function WithRun({ testId, children }: WithRunProps): ReactNode {
-  const load = useRun(testId)
+export function WithRun(props: WithRunProps): ReactNode {
+  const shown = useKeptShown(props.testId)
   if (window.isSecureContext === false) {
     return (
       <PlainScreen mark="stop" title="No test is run over an open connection">
@@ -52,6 +69,11 @@ export function WithRun({ testId, children }: WithRunProps): ReactNode {
       </PlainScreen>
     )
   }
+  return shown ? <Loaded {...props} /> : <SkeletonPage />
+}
+
+function Loaded({ testId, children }: WithRunProps): ReactNode {
+  const load = useRun(testId)
   if (load.is === 'loading') return <SkeletonPage />
   if (load.is === 'failed') return <Failed error={load.error} />
   const { opened } = load.run.state
@@ -67,7 +89,7 @@ export function WithRun({ testId, children }: WithRunProps): ReactNode {
       <PlainScreen
         title="This page is older than the test"
         actions={
-          <Button kind="next" onClick={() => window.location.reload()}>
+          <Button kind="next" onClick={() => void newVersion.load()}>
             Update it
           </Button>
         }

@@ -12,12 +12,13 @@ import { useFiles, type Files } from '../../lib/attachment-held'
 import { placedIn, type Placed } from '../../lib/attachment-places'
 import { bootId, deviceId, monotonicMs } from '../../lib/entry'
 import { useUser } from '../../lib/here'
+import type { KnownLedger } from '../../lib/known-ledger'
 import { outbox, type LedgerOutbox } from '../../lib/outbox'
 import type { Refused } from '../../lib/outbox-database'
 import { Disconnected, isSignedOut } from '../../lib/problem'
 import { askToKeepOnce } from '../../lib/storage-persistence'
 import { useLive } from '../../lib/use-live'
-import { addKept, entriesKey, entriesQuery, type KnownLedger } from './api/get-entries'
+import { addKept, entriesKey, entriesQuery } from './api/get-entries'
 import { irregularUnderLoad, LedgerFold } from './ledger-view'
 
 export type Part = 'lead' | 'pump hand' | 'witness'
@@ -82,6 +83,20 @@ function useBox(ledgerId: string): LedgerOutbox {
   return useSyncExternalStore(outbox.subscribe, () => outbox.ledger(ledgerId))
 }
 
+/** How long a test that was kept on this device waits for the server's first word before it counts as unconnected (ms). */
+const FIRST_WORD = 1500
+
+function useUnheard(known: KnownLedger): boolean {
+  const [late, setLate] = useState(false)
+  const waiting = known.fromDevice === true
+  useEffect(() => {
+    if (!waiting) return undefined
+    const timer = setTimeout(() => setLate(true), FIRST_WORD)
+    return () => clearTimeout(timer)
+  }, [waiting])
+  return waiting && late
+}
+
 /** A fact that the server refused has happened all the same: it counts here, in its place, until the server takes it. */
 function madeHere({ pending, attention }: LedgerOutbox): readonly EntryDraft[] {
   const facts = attention.flatMap(({ entry }) => (PROOF_TEST_ACTS.has(entry.kind) ? [] : [entry]))
@@ -101,7 +116,8 @@ function useLedger(testId: string) {
   const box = useBox(known.ledgerId === '' ? testId : known.ledgerId)
   const fold = useMemo(() => new LedgerFold(testId), [testId])
   const folded = useMemo(() => fold.fold(known.entries, madeHere(box)), [fold, known.entries, box])
-  return { query, known, box, folded, user }
+  const unheard = useUnheard(known)
+  return { query, known, box, folded, user, unheard }
 }
 
 interface Writing {
@@ -180,7 +196,7 @@ export type RunLoad = { is: 'ready'; run: Run } | { is: 'loading' } | { is: 'fai
 
 /** Everything that the screens of a test under way need: where it is, what comes next, and the way to write. */
 export function useRun(testId: string): RunLoad {
-  const { query, known, box, folded, user } = useLedger(testId)
+  const { query, known, box, folded, user, unheard } = useLedger(testId)
   const { state, entries } = folded
   const ledgerId = known.ledgerId
   const writing = useWriting({ ledgerId, testId, authorId: user.id, folded, blocked: box.fault !== null })
@@ -208,7 +224,7 @@ export function useRun(testId: string): RunLoad {
     evaluation,
     irregular,
     connection: {
-      connected: !lost && query.data !== undefined,
+      connected: !lost && !unheard && query.data !== undefined,
       signedOut: isSignedOut(query.error) || box.sender.is === 'signed-out',
       lastHeard: query.dataUpdatedAt > 0 ? new Date(query.dataUpdatedAt) : null,
     },

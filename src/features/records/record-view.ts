@@ -1,6 +1,7 @@
 import type { EntriesResponse } from '#shared/api/ledger'
 import type { LedgerEntry } from '#shared/ledger/envelope'
 import { checkChain, entryText, type ChainCheck } from '#shared/ledger/chain'
+import { checkLedger, type LedgerCheck, type PublicSealKey } from '#shared/ledger/check-ledger'
 import { foldProofTest } from '#shared/proof-test/apply'
 import type { Opened, Reading } from '#shared/proof-test/entries'
 import { evaluateTest, type TestEvaluation } from '#shared/proof-test/evaluate'
@@ -19,6 +20,10 @@ export interface RecordView {
   /** As they stand in the ledger. */
   entries: readonly LedgerEntry[]
   chain: ChainCheck
+  /** Chain and seals as this browser checked them; null while the keys are not here. */
+  check: LedgerCheck | null
+  /** What is wrong with it, by this browser's own check or the server's; at which entry, where that can be told. */
+  broken: { at: number | null; why: string } | null
   sealed: EntriesResponse['sealed']
   differences: FrozenDifference[]
   /** Photos and documents with the entries that name them. */
@@ -26,8 +31,17 @@ export interface RecordView {
   nameOf: (personId: string) => string
 }
 
-/** Folds and checks a ledger as the server answered it. Throws when it doesn't begin with an opening. */
-export function readRecord(answer: EntriesResponse): RecordView {
+function brokenOf(answer: EntriesResponse, chain: ChainCheck, check: LedgerCheck | null): RecordView['broken'] {
+  if (!chain.whole) return { at: chain.brokenAt, why: chain.why }
+  if (check !== null && check.verdict !== 'whole') return { at: check.verdict === 'altered' ? check.at : null, why: check.why }
+  return answer.broken ?? null
+}
+
+/**
+ * Folds and checks a ledger as the server answered it; its seals too, once the keys are here. Throws when it doesn't
+ * begin with an opening.
+ */
+export function readRecord(answer: EntriesResponse, keys?: readonly PublicSealKey[]): RecordView {
   const state = foldProofTest(answer.ledgerId, answer.entries)
   const { opened } = state
   if (opened === null) throw new Error('This ledger has no opened test.')
@@ -36,6 +50,9 @@ export function readRecord(answer: EntriesResponse): RecordView {
     hash,
     canonical: entryText(draft, { seq, receivedAt, irregular, prevHash }),
   }))
+  const chain = checkChain(stored)
+  const seals = answer.sealed.map((seal) => ({ ...seal, ledgerId: answer.ledgerId }))
+  const check = keys === undefined ? null : checkLedger(answer.ledgerId, stored, seals, keys)
   const named: Record<string, string> = { ...answer.people }
   for (const person of Object.values(opened.people)) if (person.id !== null) named[person.id] ??= person.name
   return {
@@ -45,7 +62,9 @@ export function readRecord(answer: EntriesResponse): RecordView {
     evaluation: evaluateTest(state),
     standing: standingOf(state),
     entries: answer.entries,
-    chain: checkChain(stored),
+    chain,
+    check,
+    broken: brokenOf(answer, chain, check),
     sealed: answer.sealed,
     differences: frozenDifferences(answer.ledgerId, answer.entries),
     photos: placedIn(answer.entries),

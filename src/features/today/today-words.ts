@@ -81,11 +81,11 @@ function inShort(one: UnderWayData, now: Date): string {
   return `${name}, at ${live.percent}\u202f%${since === '' ? '' : ` for ${since}`}`
 }
 
-/** A test under way, as its plate shows it to this person: the lead goes on, the witness attends, others look. */
+/** A test under way, as its plate shows it to this person: lead and pump hand go on, the witness attends, others look. */
 export function underWayWords(one: UnderWayData, userId: string, now: Date): UnderWay {
   const { test, whatFor } = one
   const action =
-    test.leadId === userId
+    test.leadId === userId || one.pumpHandId === userId
       ? { label: 'Go on with the test', to: paths.runProofTest.href(test.id) }
       : test.witnessId === userId
         ? { label: 'Attend the test', to: paths.attendProofTest.href(test.id) }

@@ -55,7 +55,12 @@ export function CalibrationTable({ calibrations, code }: { calibrations: readonl
       phoneRow={(row) => ({
         mark: <Mark name={row.calibration.result === 'in tolerance' ? 'within' : 'beyond'} />,
         title: shortDate(row.calibration.calibratedOn),
-        note: `${row.calibration.certificate}, by ${row.createdBy}`,
+        note: (
+          <>
+            {row.calibration.certificate}, by {row.createdBy}
+            <CertificateFile row={row} code={code} />
+          </>
+        ),
         aside: row.calibration.result,
         asideNote: `until ${shortDate(row.calibration.dueOn)}`,
       })}

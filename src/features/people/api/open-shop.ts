@@ -2,7 +2,7 @@ import { useMutation, useQueryClient } from '@tanstack/react-query'
 import type { OpenShopRequest } from '#shared/api/open-shop'
 import { sessionResponseSchema } from '#shared/api/session'
 import { api } from '../../../lib/api-client'
-import { sessionQuery } from './get-session'
+import { rememberSession, sessionQuery } from './get-session'
 
 const openShop = (request: OpenShopRequest) => api.send('POST', sessionResponseSchema, '/api/shops', request)
 
@@ -14,6 +14,7 @@ export function useOpenShop() {
     onSuccess: (session) => {
       client.clear()
       client.setQueryData(sessionQuery().queryKey, session)
+      void rememberSession(session)
     },
   })
 }

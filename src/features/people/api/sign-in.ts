@@ -1,7 +1,7 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query'
 import { sessionResponseSchema, type SignInRequest } from '#shared/api/session'
 import { api } from '../../../lib/api-client'
-import { sessionQuery } from './get-session'
+import { rememberSession, sessionQuery } from './get-session'
 
 const signIn = (request: SignInRequest) => api.send('POST', sessionResponseSchema, '/api/session', request)
 
@@ -13,6 +13,7 @@ export function useSignIn() {
     onSuccess: (session) => {
       client.clear()
       client.setQueryData(sessionQuery().queryKey, session)
+      void rememberSession(session)
     },
   })
 }

@@ -3,7 +3,12 @@ import { useNavigate } from 'react-router-dom'
 import { api } from '../../../lib/api-client'
 import { paths } from '../../../paths'
 
-const signOut = () => api.tell('DELETE', '/api/session')
+/** Ends the session; what this device kept to go on without a network goes with it, what waits to be sent never does. */
+async function signOut(): Promise<void> {
+  await api.tell('DELETE', '/api/session')
+  const { forgetSession } = await import('../../../lib/kept-session')
+  await forgetSession().catch(() => undefined)
+}
 
 interface Leave {
   /** Ends the session; what waits on this device stays there. */

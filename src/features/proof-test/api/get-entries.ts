@@ -1,23 +1,12 @@
 import { queryOptions, type QueryClient } from '@tanstack/react-query'
-import { entriesResponseSchema } from '#shared/api/ledger'
 import type { LedgerEntry } from '#shared/ledger/envelope'
-import { api } from '../../../lib/api-client'
+import { fetchLedger } from '../../../lib/fetch-ledger'
+import { mergeEntries, type KnownLedger } from '../../../lib/known-ledger'
+import { ledgerCache } from '../../../lib/ledger-cache'
 import { askAgainAfter } from '../../../lib/use-live'
-import { mergeEntries, wholeUpTo } from '../ledger-view'
-
-/** Everything that the server has sent of one test's ledger so far. */
-export interface KnownLedger {
-  ledgerId: string
-  /** By `seq`, each once. */
-  entries: readonly LedgerEntry[]
-  people: Readonly<Record<string, string>>
-  /** The highest entry that a seal stands on; 0 while there is none. */
-  sealedSeq: number
-}
 
 /** Where no stream of the server tells of it. */
 const POLL = 1000
-const LONGEST_WAIT = 8000
 
 export const entriesKey = (testId: string) => ['proof-test', testId, 'entries'] as const
 
@@ -25,19 +14,7 @@ export const entriesKey = (testId: string) => ['proof-test', testId, 'entries'] 
 export const entriesQuery = (testId: string, client: QueryClient) =>
   queryOptions({
     queryKey: entriesKey(testId),
-    queryFn: async ({ signal }): Promise<KnownLedger> => {
-      const known = client.getQueryData<KnownLedger>(entriesKey(testId))
-      const answer = await api.get(entriesResponseSchema, `/api/proof-tests/${encodeURIComponent(testId)}/entries`, {
-        query: { after: known ? wholeUpTo(known.entries) : 0 },
-        signal: AbortSignal.any([signal, AbortSignal.timeout(LONGEST_WAIT)]),
-      })
-      // What the outbox handed on while this was under way is in the cache by now: both are kept.
-      const latest = client.getQueryData<KnownLedger>(entriesKey(testId))
-      const sealedSeq = Math.max(latest?.sealedSeq ?? 0, ...answer.sealed.map((seal) => seal.seq))
-      const entries = mergeEntries(latest?.entries ?? [], answer.entries)
-      if (latest && latest.entries === entries && latest.sealedSeq === sealedSeq) return latest
-      return { ledgerId: answer.ledgerId, entries, people: { ...latest?.people, ...answer.people }, sealedSeq }
-    },
+    queryFn: ({ signal }): Promise<KnownLedger> => fetchLedger(testId, () => client.getQueryData<KnownLedger>(entriesKey(testId)), signal),
     structuralSharing: false,
     refetchInterval: () => askAgainAfter([testId], POLL),
     refetchIntervalInBackground: true,
@@ -49,4 +26,16 @@ export const entriesQuery = (testId: string, client: QueryClient) =>
 /** Puts entries that the server has answered into what is known, before the next poll would. */
 export function addKept(client: QueryClient, testId: string, kept: readonly LedgerEntry[]): void {
   client.setQueryData<KnownLedger>(entriesKey(testId), (known) => known && { ...known, entries: mergeEntries(known.entries, kept) })
+}
+
+/** Puts what this device kept of a test where the run looks, unless something newer is there. Never fails. */
+export async function showKept(client: QueryClient, testId: string): Promise<void> {
+  const kept = await ledgerCache.read(testId)
+  if (!kept || client.getQueryData(entriesKey(testId)) !== undefined) return
+  const { ledgerId, entries, people, sealedSeq, heardAt } = kept
+  client.setQueryData<KnownLedger>(
+    entriesKey(testId),
+    { ledgerId, entries, people, sealedSeq, fromDevice: true },
+    { updatedAt: Date.parse(heardAt) },
+  )
 }

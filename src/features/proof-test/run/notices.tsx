@@ -34,8 +34,8 @@ function sendingNotice(run: Run): ReactElement | null {
     )
   const kept =
     waiting === 0
-      ? 'Nothing is lost: it goes on here.'
-      : `${waiting === 1 ? 'One entry waits' : `${waiting} entries wait`} on this tablet. Nothing is lost: it goes on here.`
+      ? 'What is entered now stays on this tablet and is sent when there is a link.'
+      : `${waiting === 1 ? 'One entry is' : `${waiting} entries are`} on this tablet, sent when there is a link.`
   if (run.connection.signedOut) {
     return (
       <Notice mark="not-connected" aside={signInAgain}>
@@ -56,7 +56,7 @@ function sendingNotice(run: Run): ReactElement | null {
     const heard = run.connection.lastHeard ? ` Last heard ${clockTime(run.connection.lastHeard, { seconds: true })}.` : ''
     return (
       <Notice mark="not-connected">
-        Not connected.{heard} {kept}
+        Not connected.{heard} {kept} The test goes on here.
       </Notice>
     )
   }

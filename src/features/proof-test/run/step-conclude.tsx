@@ -6,7 +6,7 @@ import type { Opened } from '#shared/proof-test/entries'
 import { TextArea } from '../../../components/field'
 import { Mark } from '../../../components/marks'
 import { RadioRow } from '../../../components/radio-row'
-import { ActionPlate } from '../../../components/run/plates'
+import { ActionPlate, ShutPlate } from '../../../components/run/plates'
 import { VerdictTable } from '../../../components/run/verdict-table'
 import { setPercent } from '../../../components/typeset'
 import { capital } from '../../../lib/words'
@@ -114,11 +114,17 @@ export function ConcludeStep({ run, opened, step }: StepProps<'conclude'>): Reac
         />
       </BenchScroll>
       <Into slot="action">
-        <ActionPlate
-          title={draft.conclusion === '' ? 'Choose a conclusion' : `Concluded: ${draft.conclusion}`}
-          note="then sign the record with your password"
-          onPress={conclude}
-        />
+        {run.connection.connected ? (
+          <ActionPlate
+            title={draft.conclusion === '' ? 'Choose a conclusion' : `Concluded: ${draft.conclusion}`}
+            note="then sign the record with your password"
+            onPress={conclude}
+          />
+        ) : (
+          <div className="ground-dye">
+            <ShutPlate title="Concluded with a link" note="what others entered may not be here yet" />
+          </div>
+        )}
       </Into>
     </>
   )

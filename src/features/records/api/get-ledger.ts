@@ -3,6 +3,7 @@ import { useMemo } from 'react'
 import { entriesResponseSchema } from '#shared/api/ledger'
 import { api } from '../../../lib/api-client'
 import { askAgainAfter, useLive } from '../../../lib/use-live'
+import { useVerificationKeys } from '../../../lib/verification-keys'
 import { readRecord, type RecordView } from '../record-view'
 
 const fetchLedger = (id: string, signal?: AbortSignal) =>
@@ -22,10 +23,11 @@ export const ledgerQuery = (id: string) =>
     refetchInterval: ({ state }) => (state.data?.entries.at(-1)?.kind === 'countersigned' ? false : askAgainAfter([id], AGAIN_AFTER)),
   })
 
-/** The ledger folded and evaluated; the same object until the ledger grows. */
+/** The ledger folded, evaluated and checked with the server's keys; the same object until the ledger grows. */
 export function useRecord(id: string): { record: RecordView | undefined; error: unknown } {
   const { data, error } = useQuery(ledgerQuery(id))
   useLive([id], ledgerKey(id))
-  const record = useMemo(() => (data === undefined ? undefined : readRecord(data)), [data])
+  const { keys } = useVerificationKeys(data?.sealed.map(({ kid }) => kid))
+  const record = useMemo(() => (data === undefined ? undefined : readRecord(data, keys)), [data, keys])
   return { record, error }
 }

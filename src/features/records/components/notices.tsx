@@ -11,14 +11,9 @@ interface Notice {
 }
 
 function noticesOf(record: RecordView): Notice[] {
-  const { state, evaluation, chain, differences, nameOf } = record
+  const { state, evaluation, differences, nameOf } = record
   const { stopped } = state
   const notices: Notice[] = [
-    {
-      title: 'The ledger is not whole',
-      mark: 'stop',
-      lines: chain.whole ? [] : [`${chain.why} What stands here cannot be relied on: keep a copy and ask whoever looks after the server.`],
-    },
     {
       title: 'Entries of a kind this page does not know',
       mark: 'wait',

@@ -4,8 +4,10 @@ import userEvent from '@testing-library/user-event'
 import { MemoryRouter } from 'react-router-dom'
 import { afterEach, describe, expect, test, vi } from 'vitest'
 import type { EntriesResponse } from '#shared/api/ledger'
+import { kidOf } from '#shared/ledger/check-ledger'
 import { can } from '#shared/policy'
 import { countersignedLater, recordedTest, stoppedTest, twoLegTest, type RecordedTest } from '../../../../tests/factories/recorded-test'
+import { PUBLIC_KEY, sealsOf } from '../../../../tests/factories/ledger-file'
 import { ids } from '../../../../tests/factories/test-press'
 import { createQueryClient } from '../../../lib/query-client'
 import { useRecord } from '../api/get-ledger'
@@ -51,7 +53,11 @@ function Shown({ id, reader }: { id: string; reader: Reader }) {
 }
 
 /** Answers of the server in turn for the ledger; posts are kept and answered by `onPost`. */
-function serve(ledgers: EntriesResponse[], onPost: () => Response = () => new Response('{}', { status: 500 })) {
+function serve(
+  ledgers: EntriesResponse[],
+  onPost: () => Response = () => new Response('{}', { status: 500 }),
+  keys?: { kid: string; publicKey: string; since: string; retiredOn: string | null }[],
+) {
   const posted: Record<string, unknown>[] = []
   let reads = 0
   vi.stubGlobal('fetch', async (url: string, init: RequestInit) => {
@@ -67,8 +73,10 @@ function serve(ledgers: EntriesResponse[], onPost: () => Response = () => new Re
   return posted
 }
 
-async function show(recorded: RecordedTest, reader: Reader = lead) {
-  serve([answerOf(recorded)])
+const SERVED = { kid: kidOf(PUBLIC_KEY), publicKey: PUBLIC_KEY, since: '2026-09-01T00:00:00.000Z', retiredOn: null }
+
+async function show(recorded: RecordedTest, reader: Reader = lead, more: Partial<EntriesResponse> = {}) {
+  serve([{ ...answerOf(recorded), ...more }], undefined, more.sealed && [SERVED])
   const client = createQueryClient(() => undefined)
   render(
     <QueryClientProvider client={client}>
@@ -183,7 +191,33 @@ describe('a record that needs a second look', () => {
     expect(screen.getByRole('heading', { name: 'Today’s arithmetic differs from what was frozen at the conclusion' })).toBeInTheDocument()
     expect(document.body).toHaveTextContent('Permanent set: frozen 0.04 mm, within; today 0.02 mm, within.')
     // The altered text no longer has the hash that was stored.
-    expect(screen.getByRole('heading', { name: 'This record was altered at entry 10' })).toBeInTheDocument()
+    expect(screen.getByRole('heading', { name: /This record was altered at entry \d+/ })).toBeInTheDocument()
+  })
+
+  test('checks the seals with the server’s keys, and says who sealed it', async () => {
+    const recorded = recordedTest()
+    await show(recorded, lead, { sealed: sealsOf(recorded) })
+    const signatures = screen.getByRole('region', { name: 'Signatures' })
+    await waitFor(() => expect(signatures).toHaveTextContent(/Whole: \d+ entries, sealed by Marit Sandoval and .+; checked 21 Sep 2026/))
+    expect(screen.queryByRole('alert')).toBeNull()
+    expect(screen.getByRole('link', { name: 'Download ledger file' })).toHaveAttribute('href', `/api/proof-tests/${ids.test}/ledger.json`)
+  })
+
+  test('that another key sealed, or whose seal is gone, is not as it was sealed', async () => {
+    const recorded = recordedTest()
+    await show(recorded, lead, { sealed: sealsOf(recorded, 'a7'.repeat(32)) })
+    expect(await screen.findByRole('heading', { name: 'This record is not as it was sealed' })).toBeInTheDocument()
+    document.body.replaceChildren()
+    await show(recorded, lead, { sealed: sealsOf(recorded).slice(1) })
+    const signed = recorded.entries.find(({ kind }) => kind === 'signed')?.seq
+    expect(await screen.findByRole('heading', { name: `This record was altered at entry ${signed}` })).toBeInTheDocument()
+  })
+
+  test('says on red what the server found, prints no spreadsheet, and hands out the evidence', async () => {
+    await show(recordedTest(), lead, { broken: { at: 12, why: 'Entry 12 does not match its hash.' } })
+    expect(screen.getByRole('alert')).toHaveTextContent('This record was altered at entry 12')
+    expect(screen.queryByRole('link', { name: 'Download spreadsheet' })).toBeNull()
+    expect(screen.getByRole('link', { name: 'Download ledger file' })).toBeInTheDocument()
   })
 
   test('says nothing of arithmetic when nothing differs', () => {

@@ -1,7 +1,9 @@
 import type { ReactNode } from 'react'
 import type { Signature } from '#shared/proof-test/entries'
 import { Mark } from '../../../components/marks'
+import { TextLink } from '../../../components/button'
 import { dateAndTime, shortDate } from '../../../lib/dates'
+import { paths } from '../../../paths'
 import type { RecordView } from '../record-view'
 
 const DAY = 24 * 3600_000
@@ -53,8 +55,17 @@ function hashLines(hash: string): string[] {
   return [groups.slice(0, 4).join(' '), groups.slice(4).join(' ')]
 }
 
+/** What was checked here, over what was received: entries, their chain, and the seals over it. */
+function checkedWords({ broken, check, chain, sealed }: RecordView, today: Date): string {
+  if (broken !== null) return broken.at === null ? 'Not as it was sealed' : `Altered at entry ${broken.at}`
+  const entries = chain.whole ? chain.entries : 0
+  if (check === null || sealed.length === 0) return `Chain whole over ${entries} entries, checked ${shortDate(today)}`
+  const by = check.verdict === 'whole' ? check.seals.map(({ printedName }) => printedName).join(' and ') : ''
+  return `Whole: ${entries} entries, sealed by ${by}; checked ${shortDate(today)}`
+}
+
 function Seal({ record, today }: { record: RecordView; today: Date }) {
-  const { state, chain, sealed } = record
+  const { state, broken, sealed } = record
   const seal = sealed.at(-1)
   return (
     <Block title={seal ? `Seal over ${seal.seq} entries` : `No seal yet; ${state.headSeq} entries`}>
@@ -66,14 +77,17 @@ function Seal({ record, today }: { record: RecordView; today: Date }) {
         ))}
       </p>
       <p className="flex items-center gap-2">
-        <Mark name={chain.whole ? 'within' : 'stop'} size={20} />
-        {chain.whole ? `Chain whole, checked ${shortDate(today)}` : `Broken at entry ${chain.brokenAt}`}
+        <Mark name={broken === null ? 'within' : 'stop'} size={20} />
+        {checkedWords(record, today)}
       </p>
       {seal && (
         <p className="text-graphite">
           Sealed {dateAndTime(seal.sealedAt)}, key {seal.kid}
         </p>
       )}
+      <p className="print:hidden">
+        <TextLink to={paths.checkRecord.href()}>Check its ledger file</TextLink>
+      </p>
     </Block>
   )
 }
