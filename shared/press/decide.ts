@@ -135,7 +135,9 @@ export const PRESS_RULES: readonly PressRule[] = [
   ),
   rule('P21', 'No proof test opens while a repair is open.', ['test-opened'], (_asked, state) => {
     const repair = openRepair(state)
-    return repair ? `A repair is open: ${repair.why.replace(/[.!?]$/, '')}. Say what was done and close it, then examine the joints and test.` : null
+    return repair
+      ? `A repair is open: ${repair.why.replace(/[.!?]$/, '')}. Say what was done and close it, then examine the joints and test.`
+      : null
   }),
   rule('P22', 'A test after one that went wrong names the one it repeats.', ['test-opened'], ({ payload }, state) =>
     state.toRepeat && payload.repeatsId !== state.toRepeat.proofTestId

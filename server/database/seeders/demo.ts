@@ -34,7 +34,7 @@ async function rejectColumnWeld(desk: Desk, { main, people }: DemoShops, press: 
 }
 
 /** The leak that stopped the test: a new coupler, and the press examined again in the walk-down of the test that repeats it. */
-async function changeCoupler(desk: Desk, { main, people }: DemoShops, press: PressBook): Promise<void> {
+async function changeCoupler(desk: Desk, { people }: DemoShops, press: PressBook): Promise<void> {
   const said = {
     note: 'Coupler taken off. Its seal was cut by a burr on the nipple.',
     done: 'New coupler and nipple fitted, both rated 700 bar, pumped to 200 bar and dry.',
