@@ -6,6 +6,7 @@ import type { AppContext } from './context'
 import { problemHandler, unknownEndpoint } from './middleware/problem-handler'
 import { sameOrigin } from './middleware/same-origin'
 import { attachmentRoutes } from './routes/attachments'
+import { calendarRoutes } from './routes/calendar'
 import { healthRoutes } from './routes/health'
 import { ledgerRoutes } from './routes/ledgers'
 import { instrumentRoutes } from './routes/instruments'
@@ -17,7 +18,9 @@ import { recordRoutes } from './routes/records'
 import { sessionRoutes } from './routes/session'
 import { shopRoutes } from './routes/shops'
 import { streamRoutes } from './routes/stream'
+import { tagRoutes } from './routes/tags'
 import { todayReadRoutes } from './routes/today-read'
+import { toolingRoutes } from './routes/tooling'
 import { verificationRoutes } from './routes/verification'
 
 /** A batch of entries fits; a file doesn't belong in JSON. */
@@ -73,6 +76,9 @@ function api(context: AppContext) {
   router.use(pressReadRoutes(context))
   router.use(proofTestReadRoutes(context))
   router.use(todayReadRoutes(context))
+  router.use(toolingRoutes(context))
+  router.use(tagRoutes(context))
+  router.use(calendarRoutes(context))
   router.use(recordRoutes(context))
   router.use(ledgerRoutes(context))
   router.use(streamRoutes(context))

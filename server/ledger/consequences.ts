@@ -2,10 +2,13 @@ import { QueryTypes } from 'sequelize'
 import type { EntryDraft } from '#shared/ledger/envelope'
 import type { PressDraft } from '#shared/press/entries'
 import { PROOF_TEST_ACTS, type ProofTestDraft } from '#shared/proof-test/entries'
+import { conditionsOf } from '#shared/press/clearance-words'
+import { membersConcerned } from '#shared/proof-test/concerned'
 import { evaluateTest } from '#shared/proof-test/evaluate'
 import { instrumentOf, leadInstrument } from '#shared/proof-test/force'
 import { monthsAfter } from '#shared/proof-test/record'
 import type { ProofTestState } from '#shared/proof-test/state'
+import { toSI } from '#shared/units'
 import { appendConsequence } from './press'
 import type { Writing } from './write'
 
@@ -23,6 +26,14 @@ function clearanceOf(state: ProofTestState, clearedOn: string): PressDraft[] {
   }
   const gauge = leadInstrument(opened)
   const climbs = state.legs.flatMap((leg) => leg.climbs)
+  const tooling = opened.press.train.filter((part) => part.kind === 'tooling')
+  const ratings = tooling.flatMap((part) => (part.ratedForce ? [toSI(part.ratedForce)] : []))
+  const proven = {
+    gaugeCode: gauge ? (instrumentOf(opened, gauge.id)?.details.code ?? '') : '',
+    bedHoles: [...new Set(opened.legs.map((leg) => leg.bedHole))],
+    ramPositions: [...new Set(opened.legs.map((leg) => leg.ramPosition))],
+    tooling: tooling.map((part) => part.name),
+  }
   return [
     {
       kind: 'clearance-given',
@@ -30,17 +41,17 @@ function clearanceOf(state: ProofTestState, clearedOn: string): PressDraft[] {
         load: { text: figures.text, unit: figures.unit },
         loadNewton: figures.load,
         gaugePressure: figures.gaugePressure,
-        gaugeCode: gauge ? (instrumentOf(opened, gauge.id)?.details.code ?? '') : '',
+        ...proven,
         instrumentIds: opened.instruments.map((instrument) => instrument.id),
-        bedHoles: [...new Set(opened.legs.map((leg) => leg.bedHole))],
-        ramPositions: [...new Set(opened.legs.map((leg) => leg.ramPosition))],
-        tooling: opened.press.train.filter((part) => part.kind === 'tooling').map((part) => part.name),
         until: monthsAfter(clearedOn, opened.protocol.content.examinationMonths),
         clearedOn,
         clearedBy: opened.people.lead.name,
         ...test,
         staticLoads: climbs.filter((climb) => climb.released).length || 1,
         notMeasured: opened.notMeasured,
+        conditions: conditionsOf(proven),
+        protocol: `${opened.protocol.name}, version ${opened.protocol.version}`,
+        toolingLimitNewton: ratings.length > 0 ? Math.min(...ratings) : null,
       },
     },
   ]
@@ -53,7 +64,7 @@ function consequencesOf(before: ProofTestState, after: ProofTestState, draft: Pr
   const test = { proofTestId: after.id, number: opened.number }
   const jointIds = after.joints.map((joint) => joint.joint.id)
   if (after.stopped && !before.stopped && !after.conclusion) {
-    return [{ kind: 'test-stopped', payload: { ...test, why: after.stopped.why, jointIds } }]
+    return [{ kind: 'test-stopped', payload: { ...test, why: after.stopped.why, jointIds, memberIds: membersConcerned(after) } }]
   }
   if (before.countersigned && !PROOF_TEST_ACTS.has(draft.kind)) {
     return [
@@ -62,7 +73,7 @@ function consequencesOf(before: ProofTestState, after: ProofTestState, draft: Pr
   }
   switch (draft.kind) {
     case 'opened':
-      return [{ kind: 'test-opened', payload: test }]
+      return [{ kind: 'test-opened', payload: { ...test, repeatsId: opened.repeats?.id ?? null } }]
     case 'joint-worked':
       return [{ kind: 'joint-worked', payload: { ...draft.payload, test } }]
     case 'joint-examined': {
@@ -70,7 +81,12 @@ function consequencesOf(before: ProofTestState, after: ProofTestState, draft: Pr
       return [{ kind: 'joint-examined', payload: { jointId, method, result, remark, test } }]
     }
     case 'concluded':
-      return [{ kind: 'test-concluded', payload: { ...test, conclusion: draft.payload.conclusion, jointIds } }]
+      return [
+        {
+          kind: 'test-concluded',
+          payload: { ...test, conclusion: draft.payload.conclusion, jointIds, memberIds: membersConcerned(after) },
+        },
+      ]
     case 'countersigned':
       return after.conclusion?.conclusion === 'accepted' ? clearanceOf(after, draft.payload.signedAt.slice(0, 10)) : []
     default:

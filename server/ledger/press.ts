@@ -1,4 +1,5 @@
-import { applyPress } from '#shared/press/apply'
+import { applyPress, isAccepted, restsOn } from '#shared/press/apply'
+import { nameJoints } from '#shared/press/joints'
 import { decidePress } from '#shared/press/decide'
 import { QueryTypes } from 'sequelize'
 import { PRESS_ACTS, PRESS_CONSEQUENCES, PRESS_VERSION, type PressDraft, type PressPayload } from '#shared/press/entries'
@@ -66,15 +67,17 @@ export async function recallInstrument(
   recalled: PressPayload<'instrument-recalled'>,
 ): Promise<void> {
   const { database, transaction, now } = writing
-  const presses = await database.query<{ id: string }>("SELECT id FROM presses WHERE shop_id = ? AND status = 'cleared' ORDER BY id", {
-    replacements: [shopId],
-    type: QueryTypes.SELECT,
-    transaction,
-  })
+  const presses = await database.query<{ id: string }>(
+    "SELECT id FROM presses WHERE shop_id = ? AND status IN ('cleared', 'suspended') ORDER BY id",
+    {
+      replacements: [shopId],
+      type: QueryTypes.SELECT,
+      transaction,
+    },
+  )
   for (const { id } of presses) {
     const locked = await lockPress(writing, id)
-    const clearance = locked?.state.clearance
-    if (!locked || clearance?.is !== 'cleared' || !clearance.clearance.instrumentIds.includes(recalled.instrumentId)) continue
+    if (!locked || !restsOn(locked.state, recalled.instrumentId)) continue
     const cause = {
       id: newId(),
       ledgerId: id,
@@ -103,6 +106,12 @@ export async function appendConsequence(writing: Writing, pressId: string, cause
   const locked = await lockPress(writing, pressId)
   if (!locked) throw notFound('This press')
   const { head, state } = locked
+  if (consequence.kind === 'clearance-given') {
+    const fallen = state.joints.filter((joint) => !isAccepted(joint)).map((joint) => joint.number)
+    const { proofTestId, number } = consequence.payload
+    const why = `${nameJoints(fallen)} fell back after the press was loaded, so it gives no clearance.`
+    if (fallen.length > 0) return appendConsequence(writing, pressId, cause, { kind: 'test-ended', payload: { proofTestId, number, why } })
+  }
   const payload: Record<string, unknown> = consequence.payload
   const decision = decidePress(state, { kind: consequence.kind, payload, overrides: [], at: cause.observedAt, consequence: true })
   const findings = findingsOf(decision)

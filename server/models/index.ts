@@ -2,6 +2,7 @@ import type { Sequelize } from 'sequelize'
 import { ActiveTest, initActiveTest } from './active-test'
 import { Attachment, initAttachment } from './attachment'
 import { Calibration, initCalibration } from './calibration'
+import { CalendarFeed, initCalendarFeed } from './calendar-feed'
 import { Instrument, initInstrument } from './instrument'
 import { Ledger, initLedger } from './ledger'
 import { LedgerEntry, initLedgerEntry } from './ledger-entry'
@@ -13,11 +14,14 @@ import { ProtocolVersion, initProtocolVersion } from './protocol-version'
 import { Seal, initSeal } from './seal'
 import { Session, initSession } from './session'
 import { Shop, initShop } from './shop'
+import { Tag, initTag } from './tag'
+import { Tooling, initTooling } from './tooling'
 import { User, initUser } from './user'
 
 export {
   ActiveTest,
   Attachment,
+  CalendarFeed,
   Calibration,
   Instrument,
   Ledger,
@@ -30,6 +34,8 @@ export {
   Seal,
   Session,
   Shop,
+  Tag,
+  Tooling,
   User,
 }
 
@@ -37,6 +43,7 @@ export {
 export function initModels(sequelize: Sequelize): void {
   initActiveTest(sequelize)
   initAttachment(sequelize)
+  initCalendarFeed(sequelize)
   initCalibration(sequelize)
   initInstrument(sequelize)
   initLedger(sequelize)
@@ -49,5 +56,7 @@ export function initModels(sequelize: Sequelize): void {
   initSeal(sequelize)
   initSession(sequelize)
   initShop(sequelize)
+  initTag(sequelize)
+  initTooling(sequelize)
   initUser(sequelize)
 }

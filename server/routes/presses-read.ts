@@ -5,6 +5,7 @@ import type { AppContext } from '../context'
 import { authenticate } from '../middleware/authenticate'
 import { idParam, parseQuery, shopOf } from '../middleware/validate'
 import { presentPress, presentPressList } from '../presenters/press-register'
+import { readPressHistory } from '../services/press-history'
 import { listPresses, readPress, shopOfPress } from '../services/press-register'
 import { workIn, workOn } from './work'
 
@@ -23,6 +24,12 @@ export function pressReadRoutes(context: AppContext): Router {
     const shopOfIt = (transaction: Transaction) => shopOfPress(id, transaction)
     const press = await workOn(context, request, 'This press', shopOfIt, (work) => readPress(work, id))
     response.json({ shopId: press.shopId, press: presentPress(press) })
+  })
+
+  router.get('/presses/:pressId/history', authenticate(context), async (request, response) => {
+    const id = idParam(request, 'pressId')
+    const shopOfIt = (transaction: Transaction) => shopOfPress(id, transaction)
+    response.json(await workOn(context, request, 'This press', shopOfIt, (work) => readPressHistory(work, id)))
   })
 
   return router

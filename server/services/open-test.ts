@@ -13,6 +13,7 @@ import { conflict, invalid, notFound } from '../problem'
 import { authorize } from './membership'
 import { instrumentsForTest } from './instruments'
 import { protocolForTest } from './protocols'
+import { toolingForTest } from './tooling'
 import { appendToTest, lockTest } from './test-entries'
 import { pressState } from '../ledger/folds'
 import { lockHead } from '../ledger/read'
@@ -82,7 +83,8 @@ async function composeOpened(work: Work, request: OpenTestRequest, press: PressS
     shop: { id: shop.id, name: shop.name },
     pressId: press.id,
     pressHeadSeq: headSeq,
-    press: description,
+    // Loose tooling joins the train, so that no load of the test passes its rating.
+    press: { ...description, train: [...description.train, ...(await toolingForTest(work, request.toolingIds ?? []))] },
     // As described, with what the load path check needs; examinations are the test's own.
     joints: press.joints.filter((joint) => !joint.retired).map((joint) => jointSchema.parse(joint)),
     stoodStillDays: press.lastWorkedOn ? Math.max(0, Math.floor((now.getTime() - Date.parse(press.lastWorkedOn)) / DAY)) : null,

@@ -12,10 +12,18 @@ const ACTIONS: Record<string, Action> = {
   'joint-added': 'press:describe',
   'joint-described': 'press:describe',
   'joint-retired': 'press:describe',
+  'joint-split': 'press:describe',
+  'joint-placed': 'press:describe',
+  'strength-described': 'press:describe',
   'joint-worked': 'press:record',
   'joint-examined': 'press:record',
   changed: 'press:change-report',
+  // Whoever sees a crack says so; what was done about it is closed by a lead.
+  'repair-opened': 'press:change-report',
+  'repair-noted': 'press:repair-note',
+  'repair-closed': 'press:record',
   withdrawn: 'press:withdraw',
+  'tag-taken-off': 'press:tag-off',
 }
 
 /** What it takes to enter a kind by hand; undefined for what only follows from a proof test. */

@@ -5,7 +5,9 @@ import type { Due, Need } from '#shared/api/today'
 import { calibrationState } from '#shared/instruments/model'
 import type { Calibration } from '#shared/instruments/model'
 import { can } from '#shared/policy'
-import { mayItBeUsed } from '#shared/press/may-it-be-used'
+import { isAccepted } from '#shared/press/apply'
+import { nameJoints } from '#shared/press/joints'
+import { mayItBeUsed, tagToTakeOff } from '#shared/press/may-it-be-used'
 import type { PressState } from '#shared/press/state'
 import { emptyProofTest } from '#shared/proof-test/apply'
 import { summariseClimb } from '#shared/proof-test/climb-summary'
@@ -112,23 +114,49 @@ async function testsUnderWay(work: Work, tests: readonly TestRecord[], presses: 
   })
 }
 
-/** Presses whose ledger is asked for the reason: those that were in use and may be no longer. */
-function foldShut(work: Work, presses: readonly PressRecord[]): Promise<Map<string, PressState>> {
-  const shut = presses.filter((press) => press.status === 'withdrawn' || press.status === 'suspended')
-  return foldEach(work, shut, pressState)
+/** Presses whose ledger is asked for more than its row says: those in use once, or shut, or with a tag. */
+function foldEachInUse(work: Work, presses: readonly PressRecord[]): Promise<Map<string, PressState>> {
+  return foldEach(
+    work,
+    presses.filter((press) => press.status !== 'building'),
+    pressState,
+  )
 }
 
 const since = (state: PressState): string | null =>
   state.clearance.is === 'withdrawn' ? state.clearance.at : (state.history.at(-1)?.at ?? null)
 
+/** What a press that may not be used waits for, the first thing first: one row for it, not one for each that is missing. */
+function shutNeed(state: PressState, named: { pressId: string; pressName: string }, why: string): Need {
+  const repair = state.repairs.find((one) => !one.closed && one.from !== 'joint')
+  if (repair) return { kind: 'repair-open', ...named, repairId: repair.id, why: repair.why, since: repair.openedAt }
+  const { clearance, toRepeat } = state
+  if (clearance.is === 'suspended' && clearance.until === 'the joints are accepted') {
+    const joints = nameJoints(state.joints.filter((joint) => !isAccepted(joint)).map((joint) => joint.number))
+    return { kind: 'joints-to-examine', ...named, joints, since: since(state) }
+  }
+  if (toRepeat) return { kind: 'retest', ...named, repeatsId: toRepeat.proofTestId, number: toRepeat.number, since: since(state) }
+  return { kind: 'press-shut', ...named, why, since: since(state) }
+}
+
 function pressNeeds(presses: readonly PressToday[], states: ReadonlyMap<string, PressState>, day: string): Need[] {
   return presses.flatMap(({ press, why, test }): Need[] => {
     const named = { pressId: press.id, pressName: press.name }
     const state = states.get(press.id)
-    if (test === null && state !== undefined && why !== null) return [{ kind: 'press-shut', ...named, why, since: since(state) }]
+    const wasInUse = press.status === 'withdrawn' || press.status === 'suspended'
+    if (test === null && state !== undefined && why !== null && wasInUse) return [shutNeed(state, named, why)]
     if (press.status !== 'cleared' || press.clearedUntil === null) return []
     if (press.clearedUntil < day) return [{ kind: 'press-overdue', ...named, until: press.clearedUntil }]
     return press.clearedUntil <= addDays(day, SOON_DAYS) ? [{ kind: 'press-due', ...named, until: press.clearedUntil }] : []
+  })
+}
+
+/** Tags that hang on presses that may not be used: for everybody, because whoever stands nearest takes it off. */
+function tagNeeds(presses: readonly PressToday[], states: ReadonlyMap<string, PressState>, day: string): Need[] {
+  return presses.flatMap(({ press, why }): Need[] => {
+    const state = states.get(press.id)
+    if (state === undefined || !tagToTakeOff(state, day)) return []
+    return [{ kind: 'tag-hangs', pressId: press.id, pressName: press.name, why: why ?? 'Its clearance has run out.', since: since(state) }]
   })
 }
 
@@ -155,7 +183,11 @@ function instrumentNeeds(instruments: readonly InstrumentToday[], day: string): 
 }
 
 const order: Record<Need['kind'], number> = {
-  'press-shut': 0,
+  'tag-hangs': 0,
+  'repair-open': 1,
+  'joints-to-examine': 1,
+  retest: 1,
+  'press-shut': 1,
   'press-overdue': 1,
   conclude: 2,
   declined: 3,
@@ -197,7 +229,7 @@ export async function readToday(work: Work, asked: string | undefined): Promise<
   })
   const tests = await openTests(work)
   const instruments = await instrumentsInUse(work)
-  const states = await foldShut(work, records)
+  const states = await foldEachInUse(work, records)
   const presses = records.map((press): PressToday => {
     const test = tests.find((one) => one.pressId === press.id && press.status !== 'cleared' && one.status !== 'stopped')
     const state = states.get(press.id)
@@ -210,6 +242,7 @@ export async function readToday(work: Work, asked: string | undefined): Promise<
   })
   const leads = can(actor, 'proof-test:open', { shopId: actor.shopId })
   const needs = [
+    ...tagNeeds(presses, states, day),
     ...testNeeds(tests, actor.userId),
     ...(leads ? [...pressNeeds(presses, states, day), ...instrumentNeeds(instruments, day)] : []),
   ]

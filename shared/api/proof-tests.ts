@@ -83,6 +83,8 @@ export const openTestRequestSchema = z.object({
   /** The document itself: named by the opening entry, its bytes are put afterwards. */
   attachments: z.array(attachmentSchema).max(4, 'At most four files go with the opening.').optional(),
   repeatsId: idSchema.nullable(),
+  /** Loose tooling of the shop's register that the force passes through in this test; each joins the train with its rating. */
+  toolingIds: z.array(idSchema).max(6, 'At most six pieces.').optional(),
   instrumentOverride: z.string().trim().min(3, 'Say why in a few words.').max(500).nullable(),
 })
 

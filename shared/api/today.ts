@@ -19,13 +19,22 @@ const press = { pressId: idSchema, pressName: z.string() }
 /** Something that waits for the person who asks, by their role and their parts in tests. */
 export const needSchema = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('press-shut'), ...press, why: z.string(), since: timeSchema.nullable() }),
+  z.object({ kind: z.literal('tag-hangs'), ...press, why: z.string(), since: timeSchema.nullable() }),
+  z.object({ kind: z.literal('repair-open'), ...press, repairId: idSchema, why: z.string(), since: timeSchema }),
+  z.object({ kind: z.literal('joints-to-examine'), ...press, joints: z.string(), since: timeSchema.nullable() }),
+  z.object({ kind: z.literal('retest'), ...press, repeatsId: idSchema, number: z.string(), since: timeSchema.nullable() }),
   z.object({ kind: z.literal('press-overdue'), ...press, until: day }),
   z.object({ kind: z.literal('press-due'), ...press, until: day }),
   z.object({ kind: z.literal('countersign'), ...test, since: timeSchema }),
   z.object({ kind: z.literal('sign'), ...test, since: timeSchema }),
   z.object({ kind: z.literal('declined'), ...test, since: timeSchema }),
   z.object({ kind: z.literal('conclude'), ...test, since: timeSchema }),
-  z.object({ kind: z.literal('instrument-out'), ...instrument, is: z.enum(['out-of-date', 'out-of-tolerance', 'never']), dueOn: day.nullable() }),
+  z.object({
+    kind: z.literal('instrument-out'),
+    ...instrument,
+    is: z.enum(['out-of-date', 'out-of-tolerance', 'never']),
+    dueOn: day.nullable(),
+  }),
   z.object({ kind: z.literal('instrument-due'), ...instrument, dueOn: day }),
 ])
 

@@ -1,10 +1,11 @@
 import { FIRST_PREV_HASH } from '../ledger/chain'
 import type { LedgerEntry } from '../ledger/envelope'
 import type { Clearance, PressDraft, PressKind, PressPayload } from './entries'
-import { nameJoints, neighboursOf } from './joints'
+import { neighboursOf } from './joints'
 import type { Joint } from './model'
-import type { PressEvent, PressJoint, PressState } from './state'
-import { unitLabel } from '../units'
+import { changeRule, describesAnotherPress, touchedBy } from './changes'
+import type { PressEvent, PressJoint, PressState, Repair } from './state'
+import { tell } from './tell'
 
 export function emptyPress(id: string): PressState {
   return {
@@ -14,6 +15,9 @@ export function emptyPress(id: string): PressState {
     clearance: { is: 'none' },
     underTest: null,
     lastWorkedOn: null,
+    repairs: [],
+    tagHangs: false,
+    toRepeat: null,
     history: [],
     headSeq: 0,
     headHash: FIRST_PREV_HASH,
@@ -53,6 +57,77 @@ function endClearance(state: PressState, why: string, at: string): PressState {
   return state.clearance.is === 'none' || state.clearance.is === 'withdrawn' ? state : withdraw(state, why, at)
 }
 
+/** A change that the clearance can outlive: it holds again when every joint is accepted. */
+function holdClearance(state: PressState, why: string): PressState {
+  const { clearance } = state
+  if (clearance.is !== 'cleared') return state
+  return { ...state, clearance: { is: 'suspended', clearance: clearance.clearance, why, until: 'the joints are accepted' } }
+}
+
+/** Finished, and accepted when it was last examined; a retired joint asks for nothing. */
+export function isAccepted(joint: PressJoint): boolean {
+  return joint.retired || (joint.makeUp === 'finished' && joint.examination?.result === 'accepted')
+}
+
+/** Gives back a clearance that waited for the joints, once the last of them is accepted. */
+function resumeClearance(state: PressState): PressState {
+  const { clearance } = state
+  if (clearance.is !== 'suspended' || clearance.until !== 'the joints are accepted' || !clearance.clearance) return state
+  return state.joints.every(isAccepted) ? { ...state, clearance: { is: 'cleared', clearance: clearance.clearance } } : state
+}
+
+type Wanted = Pick<Repair, 'from' | 'why' | 'jointIds' | 'test'> & { memberIds?: string[] }
+
+/** Opens a repair named for the entry that calls for it. */
+function wantRepair(state: PressState, { id, observedAt, authorId }: LedgerEntry, wanted: Wanted): PressState {
+  const repair: Repair = {
+    id,
+    openedAt: observedAt,
+    openedBy: authorId,
+    ...wanted,
+    memberIds: wanted.memberIds ?? [],
+    notes: [],
+    closed: null,
+  }
+  return { ...state, repairs: [...state.repairs, repair] }
+}
+
+function changeRepair(state: PressState, id: string, change: (repair: Repair) => Repair): PressState {
+  return { ...state, repairs: state.repairs.map((repair) => (repair.id === id ? change(repair) : repair)) }
+}
+
+/** A joint that is rejected wants a repair, unless one that is open names it already. */
+function rejectedJoint(state: PressState, payload: PressPayload<'joint-examined'>, entry: LedgerEntry): PressState {
+  const number = state.joints.find((joint) => joint.id === payload.jointId)?.number ?? 0
+  const ended = endClearance(state, `Joint ${number} was rejected.`, entry.observedAt)
+  if (state.repairs.some((repair) => !repair.closed && repair.jointIds.includes(payload.jointId))) return ended
+  const why = `Joint ${number} was rejected${payload.remark ? `: ${payload.remark}` : '.'}`
+  return wantRepair(ended, entry, { from: 'joint', why, jointIds: [payload.jointId], test: payload.test })
+}
+
+/** The repair that a rejection called for is over when the joint is accepted. */
+function acceptedJoint(state: PressState, { jointId }: PressPayload<'joint-examined'>, entry: LedgerEntry): PressState {
+  const closed = { at: entry.observedAt, by: entry.authorId, done: 'Examined again and accepted.', doneBy: '' }
+  const over = (repair: Repair) => repair.from === 'joint' && !repair.closed && repair.jointIds.includes(jointId)
+  const repairs = state.repairs.map((repair) => (over(repair) ? { ...repair, closed } : repair))
+  return resumeClearance({ ...state, repairs })
+}
+
+/** Whether a clearance, its tag and its repair are to follow from a test that did not end well. */
+function testWentWrong(
+  state: PressState,
+  payload: PressPayload<'test-stopped'> | PressPayload<'test-concluded'>,
+  why: string,
+  wantsRepair: boolean,
+  entry: LedgerEntry,
+): PressState {
+  const { proofTestId, number, jointIds, memberIds } = payload
+  const test = { proofTestId, number }
+  const next = { ...withdraw(fallBack(state, jointIds, why), why, entry.observedAt), toRepeat: test }
+  const hasOne = next.repairs.some((repair) => repair.from === 'test' && repair.test?.proofTestId === proofTestId)
+  return hasOne || !wantsRepair ? next : wantRepair(next, entry, { from: 'test', why, jointIds, memberIds, test })
+}
+
 function jointWorked(state: PressState, payload: PressPayload<'joint-worked'>, at: string): PressState {
   const worked = state.joints.find((joint) => joint.id === payload.jointId)
   if (!worked) return state
@@ -69,6 +144,12 @@ function jointWorked(state: PressState, payload: PressPayload<'joint-worked'>, a
   return payload.test ? moved : endClearance(moved, `Joint ${worked.number} was worked on.`, at)
 }
 
+/** Whether a clearance that is in force, or could come into force again by itself, rests on an instrument. */
+export function restsOn({ clearance }: Pick<PressState, 'clearance'>, instrumentId: string): boolean {
+  const waits = clearance.is === 'suspended' && clearance.until === 'the joints are accepted'
+  return (clearance.is === 'cleared' || waits) && (clearance.clearance?.instrumentIds.includes(instrumentId) ?? false)
+}
+
 type Handlers = { [K in PressKind]: (state: PressState, payload: PressPayload<K>, entry: LedgerEntry) => PressState }
 
 const handlers: Handlers = {
@@ -78,8 +159,12 @@ const handlers: Handlers = {
     joints: payload.joints.map(fresh),
     lastWorkedOn: payload.lastWorkedOn,
   }),
-  described: (state, payload, entry) =>
-    endClearance({ ...state, description: payload.description }, 'The description of the press was changed.', entry.observedAt),
+  described: (state, payload, entry) => {
+    const next = { ...state, description: payload.description }
+    return describesAnotherPress(state.description, payload.description)
+      ? endClearance(next, 'The description of the press was changed.', entry.observedAt)
+      : next
+  },
   'joint-added': (state, payload, entry) =>
     endClearance(
       { ...state, joints: [...state.joints, fresh(payload.joint)] },
@@ -103,6 +188,25 @@ const handlers: Handlers = {
       'A joint was retired.',
       entry.observedAt,
     ),
+  'joint-split': (state, payload, entry) => {
+    const split = state.joints.find((joint) => joint.id === payload.jointId)
+    const retired = changeJoints(state, [payload.jointId], (joint) => ({ ...joint, retired: true }))
+    const joints = [...retired.joints, ...payload.into.map(fresh)]
+    return endClearance({ ...retired, joints }, `Joint ${split?.number ?? 0} was split.`, entry.observedAt)
+  },
+  'joint-placed': (state, payload) => changeJoints(state, [payload.jointId], (joint) => ({ ...joint, place: payload.place })),
+  'strength-described': (state, payload) => {
+    const { description } = state
+    const members = description?.members.map((member) => {
+      const known = payload.members.find((one) => one.memberId === member.id)
+      return known ? { ...member, strength: known.strength } : member
+    })
+    const joints = state.joints.map((joint) => {
+      const known = payload.joints.find((one) => one.jointId === joint.id)
+      return known ? { ...joint, strength: known.strength } : joint
+    })
+    return { ...state, description: description && { ...description, members: members ?? [] }, joints }
+  },
   'joint-worked': (state, payload, entry) => jointWorked(state, payload, entry.observedAt),
   'joint-examined': (state, payload, entry) => {
     const examined = changeJoints(state, [payload.jointId], (joint) => ({
@@ -117,40 +221,50 @@ const handlers: Handlers = {
         proofTestNumber: payload.test?.number ?? null,
       },
     }))
-    if (payload.result === 'accepted') return examined
-    const number = state.joints.find((joint) => joint.id === payload.jointId)?.number ?? 0
-    return endClearance(examined, `Joint ${number} was rejected.`, entry.observedAt)
+    return payload.result === 'accepted' ? acceptedJoint(examined, payload, entry) : rejectedJoint(examined, payload, entry)
   },
   changed: (state, payload, entry) => {
-    const all = state.joints.filter((joint) => !joint.retired).map((joint) => joint.id)
-    const touched = payload.change === 'painted' ? [] : payload.jointIds.length > 0 ? payload.jointIds : all
+    const rule = changeRule(payload.change)
+    const said = `${payload.change[0]?.toUpperCase()}${payload.change.slice(1)}: ${payload.why}`
+    const touched = touchedBy(state, payload).map((joint) => joint.id)
     const fallen = fallBack(state, touched, `${payload.change}: ${payload.why}`)
-    return endClearance(fallen, `${payload.change[0]?.toUpperCase()}${payload.change.slice(1)}: ${payload.why}`, entry.observedAt)
+    if (rule.clearance === 'stands') return fallen
+    return rule.clearance === 'ends' ? endClearance(fallen, said, entry.observedAt) : holdClearance(fallen, said)
+  },
+  'repair-opened': (state, payload, entry) => {
+    const fallen = fallBack(state, payload.jointIds, `a repair was opened: ${payload.why}`)
+    return wantRepair(endClearance(fallen, payload.why, entry.observedAt), entry, { ...payload, from: 'person', test: null })
+  },
+  'repair-noted': (state, payload, entry) =>
+    changeRepair(state, payload.repairId, (repair) => ({
+      ...repair,
+      notes: [...repair.notes, { at: entry.observedAt, by: entry.authorId, note: payload.note, doneBy: payload.doneBy, seq: entry.seq }],
+    })),
+  'repair-closed': (state, payload, entry) => {
+    const repair = state.repairs.find((one) => one.id === payload.repairId)
+    if (!repair) return state
+    const closed = { at: entry.observedAt, by: entry.authorId, done: payload.done, doneBy: payload.doneBy }
+    const next = changeRepair(state, repair.id, (one) => ({ ...one, closed }))
+    // What was examined between the repair's work and its close counts no more: the whole is looked at when it is done.
+    return fallBack(next, repair.jointIds, `it was repaired: ${payload.done}`)
   },
   'test-opened': (state, payload) => ({
     ...state,
-    underTest: { ...payload, stopped: false },
+    underTest: { proofTestId: payload.proofTestId, number: payload.number, stopped: false },
     clearance:
       state.clearance.is === 'withdrawn'
         ? state.clearance
-        : { is: 'suspended', clearance: lastClearance(state), why: `${payload.number} is under way.`, proofTestId: payload.proofTestId },
+        : { is: 'suspended', clearance: lastClearance(state), why: `${payload.number} is under way.`, until: 'the test is over' },
   }),
   'test-stopped': (state, payload, entry) => ({
-    ...withdraw(
-      fallBack(state, payload.jointIds, `${payload.number} was stopped`),
-      `${payload.number} was stopped. ${payload.why}`,
-      entry.observedAt,
-    ),
+    ...testWentWrong(state, payload, `${payload.number} was stopped. ${payload.why}`, true, entry),
     underTest: state.underTest && { ...state.underTest, stopped: true },
   }),
   'test-concluded': (state, payload, entry) => {
-    const ended: PressState = { ...state, underTest: payload.conclusion === 'accepted' ? state.underTest : null }
-    if (payload.conclusion === 'accepted') return ended
-    return withdraw(
-      fallBack(ended, payload.jointIds, `${payload.number} was ${payload.conclusion}`),
-      `${payload.number} was ${payload.conclusion}.`,
-      entry.observedAt,
-    )
+    const { conclusion, number } = payload
+    const ended: PressState = { ...state, underTest: conclusion === 'accepted' ? state.underTest : null }
+    if (conclusion === 'accepted') return ended
+    return testWentWrong(ended, payload, `${number} was ${conclusion}.`, conclusion === 'rejected', entry)
   },
   'test-late-fact': (state, payload) => ({
     ...state,
@@ -158,56 +272,25 @@ const handlers: Handlers = {
       is: 'suspended',
       clearance: lastClearance(state),
       why: `${payload.number}: ${payload.why}`,
-      proofTestId: payload.proofTestId,
+      until: 'somebody looked into it',
     },
   }),
   'test-ended': (state, payload, entry) => withdraw({ ...state, underTest: null }, `${payload.number}: ${payload.why}`, entry.observedAt),
   'instrument-recalled': (state, payload) => {
-    const { clearance } = state
-    if (clearance.is !== 'cleared' || !clearance.clearance.instrumentIds.includes(payload.instrumentId)) return state
+    const clearance = lastClearance(state)
+    if (!restsOn(state, payload.instrumentId) || !clearance) return state
     const why = `${payload.code} was found out of tolerance on ${payload.calibratedOn}, and the clearance rests on it.`
-    return { ...state, clearance: { is: 'suspended', clearance: clearance.clearance, why, proofTestId: clearance.clearance.proofTestId } }
+    return { ...state, clearance: { is: 'suspended', clearance, why, until: 'somebody looked into it' } }
   },
-  'clearance-given': (state, payload) => ({ ...state, underTest: null, clearance: { is: 'cleared', clearance: payload } }),
+  'clearance-given': (state, payload) => ({
+    ...state,
+    underTest: null,
+    clearance: { is: 'cleared', clearance: payload },
+    tagHangs: true,
+    toRepeat: null,
+  }),
+  'tag-taken-off': (state) => ({ ...state, tagHangs: false }),
   withdrawn: (state, payload, entry) => withdraw(state, payload.why, entry.observedAt),
-}
-
-const PLAIN = { mark: 'plain', proofTestId: null } as const
-type Told = Pick<PressEvent, 'text' | 'mark' | 'proofTestId'>
-type Tellers = { [K in PressKind]: (payload: PressPayload<K>, state: PressState) => Told }
-
-const numbersOf = (state: PressState, ids: readonly string[]): string =>
-  nameJoints(state.joints.filter((joint) => ids.includes(joint.id)).map((joint) => joint.number))
-
-const tell: Tellers = {
-  registered: (payload) => ({ ...PLAIN, text: `Entered with ${payload.joints.length} joints` }),
-  described: () => ({ ...PLAIN, text: 'Description changed' }),
-  'joint-added': (payload) => ({ ...PLAIN, text: `Joint ${payload.joint.number} added` }),
-  'joint-described': (payload) => ({ ...PLAIN, text: `Joint ${payload.joint.number} described anew` }),
-  'joint-retired': (payload, state) => ({ ...PLAIN, text: `Retired ${numbersOf(state, [payload.jointId])}` }),
-  'joint-worked': (payload, state) => ({ ...PLAIN, text: `Now ${payload.makeUp}: ${numbersOf(state, [payload.jointId])}` }),
-  'joint-examined': (payload, state) => ({
-    text: `${payload.result === 'accepted' ? 'Accepted' : 'Rejected'} ${numbersOf(state, [payload.jointId])}, ${payload.method}`,
-    mark: payload.result === 'accepted' ? 'plain' : 'stop',
-    proofTestId: payload.test?.proofTestId ?? null,
-  }),
-  changed: (payload) => ({ ...PLAIN, text: `${payload.change[0]?.toUpperCase()}${payload.change.slice(1)}: ${payload.why}` }),
-  'test-opened': (payload) => ({ text: `${payload.number} opened`, mark: 'under-way', proofTestId: payload.proofTestId }),
-  'test-stopped': (payload) => ({ text: `${payload.number} stopped. ${payload.why}`, mark: 'stop', proofTestId: payload.proofTestId }),
-  'test-concluded': (payload) => ({
-    text: `${payload.number} concluded: ${payload.conclusion}`,
-    mark: payload.conclusion === 'accepted' ? 'within' : 'stop',
-    proofTestId: payload.proofTestId,
-  }),
-  'test-late-fact': (payload) => ({ text: `${payload.number}: ${payload.why}`, mark: 'stop', proofTestId: payload.proofTestId }),
-  'test-ended': (payload) => ({ text: `${payload.number}: ${payload.why}`, mark: 'stop', proofTestId: payload.proofTestId }),
-  'instrument-recalled': (payload) => ({ text: `${payload.code} was found out of tolerance`, mark: 'stop', proofTestId: null }),
-  'clearance-given': (payload) => ({
-    text: `Cleared up to ${payload.load.text} ${unitLabel(payload.load.unit, { plural: true })}`,
-    mark: 'within',
-    proofTestId: payload.proofTestId,
-  }),
-  withdrawn: (payload) => ({ text: `Withdrawn. ${payload.why}`, mark: 'stop', proofTestId: null }),
 }
 
 function run<K extends PressKind>(state: PressState, kind: K, payload: PressPayload<K>, entry: LedgerEntry): PressState {

@@ -57,6 +57,29 @@ export function missingOf(state: Pick<PressState, 'description' | 'joints'>): st
 
 const PROOF_TEST = 'A proof test, concluded and countersigned.'
 
+/** The proof test that is missing, named as the repeat of the one that went wrong. */
+function proofTestMissing({ toRepeat }: PressState): string {
+  return toRepeat ? `A proof test that repeats ${toRepeat.number}, concluded and countersigned.` : PROOF_TEST
+}
+
+const asSentence = (text: string): string => (/[.!?]$/.test(text) ? text : `${text}.`)
+
+/** Repairs that stand open, in a sentence each. A joint that was rejected speaks for itself. */
+function openRepairs(state: PressState): string[] {
+  return state.repairs.flatMap((repair) =>
+    repair.closed || repair.from === 'joint' ? [] : [`A repair is open: ${asSentence(repair.why)} Say what was done, and close it.`],
+  )
+}
+
+/**
+ * Whether a paper tag hangs on a press that may no longer be used by it on `today` (an ISO date): a withdrawal is over
+ * only when somebody has taken it off. A test under way covers the tag; the press stands under its lead.
+ */
+export function tagToTakeOff(state: PressState, today: string): boolean {
+  if (!state.tagHangs || (state.underTest && !state.underTest.stopped)) return false
+  return mayItBeUsed(state, today).answer === 'do not use'
+}
+
 /** An accepted test whose witness hasn't signed leaves the press shut: the conclusion alone clears nothing. */
 export function awaitsSignature(state: PressState): boolean {
   const { underTest } = state
@@ -80,21 +103,28 @@ export function mayItBeUsed(state: PressState, today: string): MayItBeUsed {
     const { number, stopped } = state.underTest
     if (stopped) {
       const why = state.clearance.is === 'withdrawn' ? state.clearance.why : `${number} was stopped.`
-      return { answer: 'do not use', why, missing: [`The conclusion of ${number}.`, ...missingOf(state), PROOF_TEST] }
+      return {
+        answer: 'do not use',
+        why,
+        missing: [`The conclusion of ${number}.`, ...openRepairs(state), ...missingOf(state), proofTestMissing(state)],
+      }
     }
     return awaitsSignature(state)
       ? { answer: 'do not use', why: `${number} is concluded, and a signature is missing.`, missing: [`The signatures of ${number}.`] }
       : { answer: 'under test', why: `${number} is under way.` }
   }
-  const missing = [...missingOf(state), PROOF_TEST]
   const { clearance } = state
+  const joints = missingOf(state)
+  const missing = [...openRepairs(state), ...joints, proofTestMissing(state)]
   switch (clearance.is) {
     case 'cleared':
       return clearance.clearance.until < today
         ? { answer: 'do not use', why: 'Its clearance has run out: it is overdue for a proof test.', missing }
         : { answer: 'cleared', clearance: clearance.clearance }
     case 'suspended':
-      return { answer: 'do not use', why: `Its clearance is suspended. ${clearance.why}`, missing }
+      return clearance.until === 'the joints are accepted'
+        ? { answer: 'do not use', why: `Its clearance waits for its joints. ${clearance.why}`, missing: joints }
+        : { answer: 'do not use', why: `Its clearance is suspended. ${clearance.why}`, missing }
     case 'withdrawn':
       return { answer: 'do not use', why: clearance.why, missing }
     case 'none':

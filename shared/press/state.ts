@@ -32,11 +32,38 @@ export interface PressEvent {
   attachments: readonly Attachment[]
 }
 
+/** What ends a suspension: the test that is under way, every joint accepted again, or a person who looks into it. */
+export type SuspendedUntil = 'the test is over' | 'the joints are accepted' | 'somebody looked into it'
+
 export type ClearanceState =
   | { is: 'none' }
   | { is: 'cleared'; clearance: Clearance }
-  | { is: 'suspended'; clearance: Clearance | null; why: string; proofTestId: string }
+  | { is: 'suspended'; clearance: Clearance | null; why: string; until: SuspendedUntil }
   | { is: 'withdrawn'; why: string; at: string; last: Clearance | null }
+
+export interface RepairNote {
+  at: string
+  by: string
+  note: string
+  doneBy: string
+  seq: number
+}
+
+/** What has to be put right before the press is loaded again. Its id is that of the entry that opened it. */
+export interface Repair {
+  id: string
+  /** A test that went wrong, a joint that was rejected, or somebody who saw something. */
+  from: 'test' | 'joint' | 'person'
+  openedAt: string
+  openedBy: string
+  why: string
+  jointIds: string[]
+  memberIds: string[]
+  /** The test that was stopped or rejected; null when no test opened it. */
+  test: { proofTestId: string; number: string } | null
+  notes: RepairNote[]
+  closed: { at: string; by: string; done: string; doneBy: string } | null
+}
 
 /** A press's ledger, folded. */
 export interface PressState {
@@ -46,6 +73,11 @@ export interface PressState {
   clearance: ClearanceState
   underTest: { proofTestId: string; number: string; stopped: boolean } | null
   lastWorkedOn: string | null
+  repairs: Repair[]
+  /** Whether a paper tag of a clearance hangs on the press, as far as anybody has said. */
+  tagHangs: boolean
+  /** The test that went wrong last: the next one names it. */
+  toRepeat: { proofTestId: string; number: string } | null
   history: PressEvent[]
   headSeq: number
   headHash: string

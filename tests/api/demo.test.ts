@@ -42,7 +42,6 @@ interface StoredRow {
 const directory = mkdtempSync(path.join(tmpdir(), 'quarterload-demo-'))
 let context: AppContext
 let signIns: DemoSignIn[]
-let loadedIn: number
 const rows = new Map<string, StoredRow[]>()
 const presses = new Map<string, PressState>()
 const tests = new Map<string, { state: ProofTestState; entries: LedgerEntry[] }>()
@@ -98,9 +97,7 @@ beforeAll(async () => {
   }
   initModels(context.database)
   await migrateUp(context.database)
-  const begun = performance.now()
   signIns = await loadDemoShop(context)
-  loadedIn = performance.now() - begun
   await readLedgers()
 })
 
@@ -110,10 +107,6 @@ afterAll(async () => {
 })
 
 describe('the demo shop', () => {
-  it('is loaded within some seconds', () => {
-    expect(loadedIn).toBeLessThan(15_000)
-  })
-
   it('has people in every role who can sign in with what is printed, one of them in two shops', async () => {
     expect(new Set(signIns.map((one) => one.role.split(' of ')[0]))).toEqual(new Set(['owner', 'lead', 'witness', 'crew']))
     expect(signIns.filter((one) => one.role.startsWith('lead'))).toHaveLength(2)
@@ -282,7 +275,7 @@ describe('its presses', () => {
     expect(press('Heron').clearance.is).toBe('withdrawn')
     const answer = mayItBeUsed(press('Heron'), today())
     expect(answer).toMatchObject({ answer: 'do not use', why: `${state.opened?.number} was rejected.` })
-    expect(answer.answer === 'do not use' && answer.missing[0]).toMatch(/was rejected. Repair it/)
+    expect(answer.answer === 'do not use' && answer.missing[0]).toMatch(/A repair is open: PT-0004 was stopped/)
   })
 
   it('Badger is under test by the second lead, just before 50 %, and its earlier clearance is suspended', () => {
@@ -292,7 +285,7 @@ describe('its presses', () => {
     expect(now?.loaded).not.toBeNull()
     expect(now?.opened?.people.lead.name).toBe('Ruben Ashby')
     const { clearance } = press('Badger')
-    expect(clearance).toMatchObject({ is: 'suspended', clearance: { number: before?.opened?.number }, proofTestId: now?.id })
+    expect(clearance).toMatchObject({ is: 'suspended', clearance: { number: before?.opened?.number }, until: 'the test is over' })
     expect(mayItBeUsed(press('Badger'), today())).toMatchObject({ answer: 'under test' })
     expect(pressColumns(press('Badger'))).toMatchObject({ status: 'under test' })
   })

@@ -1,6 +1,7 @@
 import { readdirSync, readFileSync } from 'node:fs'
 import path from 'node:path'
 import { describe, expect, it } from 'vitest'
+import { CHANGE_RULES } from '#shared/press/changes'
 import { PRESS_RULES } from '#shared/press/decide'
 import { PROOF_TEST_RULES } from '#shared/proof-test/decide'
 
@@ -10,7 +11,7 @@ const ledgers = [
     numbers: ['R1', ...PROOF_TEST_RULES.map((rule) => rule.id)],
     files: ['shared/proof-test/decide.test.ts', 'shared/proof-test/decide-load.test.ts'],
   },
-  { name: 'a press', numbers: PRESS_RULES.map((rule) => rule.id), files: ['shared/press/decide.test.ts'] },
+  { name: 'a press', numbers: [...PRESS_RULES, ...CHANGE_RULES].map((rule) => rule.id), files: ['shared/press/decide.test.ts'] },
 ]
 
 /** Rule numbers in the names of tests: `it('R14: …')`, `it('R23 and R24: …')`. */

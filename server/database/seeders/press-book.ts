@@ -3,6 +3,7 @@ import type { Attachment, Override } from '#shared/ledger/envelope'
 import { PRESS_VERSION, type PressDraft } from '#shared/press/entries'
 import type { Joint, PressDescription } from '#shared/press/model'
 import { appendPress } from '../../services/press-entries'
+import { pressState } from '../../ledger/folds'
 import { parsePressDraft } from '../../ledger/parse'
 import { readHead } from '../../ledger/read'
 import { createLedger } from '../../ledger/write'
@@ -50,6 +51,17 @@ export class PressBook {
     const entry = this.tablets.draft({ personId: by, at, ...draft, v: PRESS_VERSION, basedOnSeq: head?.headSeq ?? 0, attachments })
     const work = await workAt(this.desk, this.shopId, by, receivedAt)
     await appendPress(writing, work, parsePressDraft({ ...entry, overrides }))
+  }
+
+  /** Says what was done about the repair that stands open, and closes it. */
+  async closeRepair(said: { note: string; done: string; doneBy: string }, by: string, at: number): Promise<void> {
+    const { database, transaction } = writingAt(this.desk, at)
+    const head = await readHead(database, transaction, this.id)
+    const open = head && (await pressState(database, transaction, head)).repairs.find((repair) => !repair.closed)
+    if (!open) throw new Error(`No repair of ${this.description.name} is open.`)
+    const { note, done, doneBy } = said
+    await this.write({ kind: 'repair-noted', payload: { repairId: open.id, note, doneBy } }, by, at - 3 * 3_600_000)
+    await this.write({ kind: 'repair-closed', payload: { repairId: open.id, done, doneBy } }, by, at)
   }
 
   joint(name: string): Joint {

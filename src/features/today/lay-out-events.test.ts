@@ -25,17 +25,23 @@ describe('words on the calendar', () => {
 
   it('never run into each other on the two lower rows', () => {
     fc.assert(
-      fc.property(fc.array(fc.record({ x: fc.integer({ min: 40, max: 1180 }), length: fc.integer({ min: 3, max: 30 }) }), { maxLength: 12 }), (days) => {
-        const placed = lay(days.map(({ x, length }) => ({ event: event('x'.repeat(length)), x })))
-        expect(placed).toHaveLength(days.length)
-        for (const level of [0, 1]) {
-          const spans = placed
-            .filter((one) => one.level === level)
-            .map(({ event: { label }, x, flipped }) => (flipped ? [x - 12 - label.length * 8, x - 12] : [x + 12, x + 12 + label.length * 8]) as [number, number])
-            .sort((a, b) => a[0] - b[0])
-          spans.slice(1).forEach(([from], index) => expect(from).toBeGreaterThanOrEqual(spans[index]?.[1] ?? 0))
-        }
-      }),
+      fc.property(
+        fc.array(fc.record({ x: fc.integer({ min: 40, max: 1180 }), length: fc.integer({ min: 3, max: 30 }) }), { maxLength: 12 }),
+        (days) => {
+          const placed = lay(days.map(({ x, length }) => ({ event: event('x'.repeat(length)), x })))
+          expect(placed).toHaveLength(days.length)
+          for (const level of [0, 1]) {
+            const spans = placed
+              .filter((one) => one.level === level)
+              .map(
+                ({ event: { label }, x, flipped }) =>
+                  (flipped ? [x - 12 - label.length * 8, x - 12] : [x + 12, x + 12 + label.length * 8]) as [number, number],
+              )
+              .sort((a, b) => a[0] - b[0])
+            spans.slice(1).forEach(([from], index) => expect(from).toBeGreaterThanOrEqual(spans[index]?.[1] ?? 0))
+          }
+        },
+      ),
     )
   })
 })

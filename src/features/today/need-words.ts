@@ -29,11 +29,32 @@ function testWords(need: Extract<NeedData, { proofTestId: string }>, today: stri
   const due = waiting(need.since, today)
   switch (need.kind) {
     case 'countersign':
-      return { mark: 'to-countersign', title: `Countersignature wanted on ${need.number}`, note: `${of} You were the witness.`, due, urgency: 'now', to }
+      return {
+        mark: 'to-countersign',
+        title: `Countersignature wanted on ${need.number}`,
+        note: `${of} You were the witness.`,
+        due,
+        urgency: 'now',
+        to,
+      }
     case 'sign':
-      return { mark: 'to-countersign', title: `Sign ${need.number}`, note: `${of} It is concluded and waits for you.`, due, urgency: 'now', to }
+      return {
+        mark: 'to-countersign',
+        title: `Sign ${need.number}`,
+        note: `${of} It is concluded and waits for you.`,
+        due,
+        urgency: 'now',
+        to,
+      }
     case 'declined':
-      return { mark: 'undecided', title: `${need.number} was declined`, note: `${of} The witness did not countersign. Read why.`, due, urgency: 'now', to }
+      return {
+        mark: 'undecided',
+        title: `${need.number} was declined`,
+        note: `${of} The witness did not countersign. Read why.`,
+        due,
+        urgency: 'now',
+        to,
+      }
     case 'conclude':
       return {
         mark: 'stop',
@@ -61,14 +82,69 @@ function instrumentOut(need: Extract<NeedData, { kind: 'instrument-out' }>, toda
         to,
       }
     case 'out-of-tolerance':
-      return { mark: 'beyond', title: `${name} was out of tolerance`, note: 'Nothing can rest on it. Have it put right.', due: 'Now', urgency: 'late', to }
+      return {
+        mark: 'beyond',
+        title: `${name} was out of tolerance`,
+        note: 'Nothing can rest on it. Have it put right.',
+        due: 'Now',
+        urgency: 'late',
+        to,
+      }
     case 'never':
-      return { mark: 'clock-late', title: `${name} was never calibrated`, note: 'It blocks any new test. Enter its certificate.', due: 'Now', urgency: 'late', to }
+      return {
+        mark: 'clock-late',
+        title: `${name} was never calibrated`,
+        note: 'It blocks any new test. Enter its certificate.',
+        due: 'Now',
+        urgency: 'late',
+        to,
+      }
   }
 }
 
-function words(need: NeedData, today: string): Words {
+type PressNeed = Extract<NeedData, { kind: 'tag-hangs' | 'repair-open' | 'joints-to-examine' | 'retest' | 'press-shut' }>
+
+/** What a press that may not be used waits for. */
+function shutWords(need: PressNeed, today: string): Words {
+  const to = paths.press.href(need.pressId)
+  const due = need.since === null ? 'Now' : waiting(need.since, today)
   switch (need.kind) {
+    case 'tag-hangs':
+      return {
+        mark: 'stop',
+        title: `Take the tag off ${need.pressName}`,
+        note: `${need.why} Say so when it is off.`,
+        due,
+        urgency: 'now',
+        to: `${to}#tag`,
+      }
+    case 'repair-open':
+      return {
+        mark: 'stop',
+        title: `${need.pressName} waits for a repair`,
+        note: `${need.why} Say what was done.`,
+        due,
+        urgency: 'now',
+        to: `${to}#repairs`,
+      }
+    case 'joints-to-examine':
+      return {
+        mark: 'undecided',
+        title: `Examine ${need.joints} of ${need.pressName}`,
+        note: 'Its clearance holds again when they are accepted.',
+        due,
+        urgency: 'now',
+        to: `${to}#joints`,
+      }
+    case 'retest':
+      return {
+        mark: 'stop',
+        title: `${need.pressName} waits for its retest`,
+        note: `${need.number} did not end well. Examine the joints, then plan the test that repeats it.`,
+        due,
+        urgency: 'now',
+        to: paths.planProofTest.href({ press: need.pressId, repeats: need.repeatsId }),
+      }
     case 'press-shut':
       return {
         mark: 'stop',
@@ -76,8 +152,19 @@ function words(need: NeedData, today: string): Words {
         note: `${need.why} Plan a proof test.`,
         due: 'Now',
         urgency: 'now',
-        to: paths.press.href(need.pressId),
+        to,
       }
+  }
+}
+
+function words(need: NeedData, today: string): Words {
+  switch (need.kind) {
+    case 'tag-hangs':
+    case 'repair-open':
+    case 'joints-to-examine':
+    case 'retest':
+    case 'press-shut':
+      return shutWords(need, today)
     case 'press-overdue':
       return {
         mark: 'clock-late',

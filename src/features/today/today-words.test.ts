@@ -28,7 +28,11 @@ describe('what needs somebody', () => {
       protocolName: 'Off-centre',
       since: '2026-09-12T12:00:00.000Z',
     }
-    expect(say(need)).toMatchObject({ title: 'Countersignature wanted on PT-0042', note: 'Press 5, off-centre. You were the witness.', due: 'waiting 9 days' })
+    expect(say(need)).toMatchObject({
+      title: 'Countersignature wanted on PT-0042',
+      note: 'Press 5, off-centre. You were the witness.',
+      due: 'waiting 9 days',
+    })
   })
 
   it('says how late an instrument is, and when one falls due', () => {
@@ -41,7 +45,9 @@ describe('what needs somebody', () => {
     })
     expect(say({ kind: 'instrument-due', ...named, dueOn: '2026-09-22' })).toMatchObject({ due: 'in 1 day' })
     expect(say({ kind: 'instrument-due', ...named, dueOn: '2026-09-21' })).toMatchObject({ due: 'today' })
-    expect(say({ kind: 'instrument-due', ...named, dueOn: '2027-01-05' })).toMatchObject({ note: '5 January 2027. Send it before the next test.' })
+    expect(say({ kind: 'instrument-due', ...named, dueOn: '2027-01-05' })).toMatchObject({
+      note: '5 January 2027. Send it before the next test.',
+    })
   })
 })
 
@@ -82,7 +88,11 @@ describe('which press may be used', () => {
   it('tells a test under way from one that waits for a signature', () => {
     const test = { proofTestId: id(5), number: 'PT-0042', status: 'under way' as const }
     expect(say(press({ status: 'under test' }, test))).toEqual(['under-way', 'under test', '12 short tons planned'])
-    expect(say(press({ status: 'under test' }, { ...test, status: 'to countersign' }))).toEqual(['stop', 'do not use', 'countersignature missing'])
+    expect(say(press({ status: 'under test' }, { ...test, status: 'to countersign' }))).toEqual([
+      'stop',
+      'do not use',
+      'countersignature missing',
+    ])
     expect(say(press({ status: 'under test' }, { ...test, status: 'concluded' }))).toEqual(['stop', 'do not use', 'signature missing'])
   })
 })
@@ -150,10 +160,21 @@ describe('a test under way', () => {
 })
 
 describe('what falls due', () => {
-  const indicator = (code: string, on: string): Due => ({ kind: 'calibration', on, instrumentId: id(10), code, instrumentKind: 'indicator' })
+  const indicator = (code: string, on: string): Due => ({
+    kind: 'calibration',
+    on,
+    instrumentId: id(10),
+    code,
+    instrumentKind: 'indicator',
+  })
 
   it('gathers instruments of one kind that fall due on one day', () => {
-    const due = [indicator('I-06', '2026-11-07'), indicator('I-04', '2026-11-07'), indicator('I-05', '2026-11-07'), indicator('I-10', '2026-12-01')]
+    const due = [
+      indicator('I-06', '2026-11-07'),
+      indicator('I-04', '2026-11-07'),
+      indicator('I-05', '2026-11-07'),
+      indicator('I-10', '2026-12-01'),
+    ]
     expect(eventsOf(due, id(1)).map((event) => [event.date, event.label])).toEqual([
       ['2026-11-07', 'Indicators I-04 to I-06'],
       ['2026-12-01', 'Indicator I-10, calibration'],

@@ -102,7 +102,13 @@ export function underWayWords(one: UnderWayData, userId: string, now: Date): Und
   }
 }
 
-const reasons = { overdue: 'overdue', 'being built': 'being built', 'not tested': 'never tested', suspended: 'suspended', withdrawn: 'withdrawn' } as const
+const reasons = {
+  overdue: 'overdue',
+  'being built': 'being built',
+  'not tested': 'never tested',
+  suspended: 'suspended',
+  withdrawn: 'withdrawn',
+} as const
 
 function usability({ press, test }: TodayPress, today: string): Pick<PressUse, 'mark' | 'use' | 'note'> {
   if (test && test.status !== 'under way') {
@@ -141,7 +147,8 @@ function calibrations(due: readonly CalibrationDue[], shopId: string): CalendarE
   const [first, last] = [codes[0] ?? '', codes.at(-1) ?? '']
   const kind = one?.instrumentKind ?? 'gauge'
   const date = one?.on ?? ''
-  if (one && due.length === 1) return { date, label: `${singular[kind]} ${first}, calibration`, to: paths.instrument.href(one.instrumentId) }
+  if (one && due.length === 1)
+    return { date, label: `${singular[kind]} ${first}, calibration`, to: paths.instrument.href(one.instrumentId) }
   const label = `${plural[kind]} ${due.length === 2 ? `${first} and ${last}` : `${first} to ${last}`}`
   return { date, label, to: paths.instruments.href({ shop: shopId, sort: 'due' }) }
 }
