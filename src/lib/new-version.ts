@@ -23,7 +23,12 @@ function reaches(worker: ServiceWorker, state: ServiceWorkerState): Promise<void
  */
 export class NewVersion {
   private readonly listeners = new Set<() => void>()
+  private readonly reload: () => void
   private ready = false
+
+  constructor(reload: () => void) {
+    this.reload = reload
+  }
 
   subscribe = (listener: () => void): (() => void) => {
     this.listeners.add(listener)
@@ -76,7 +81,7 @@ export class NewVersion {
         await reaches(next, 'activated')
       }
     } finally {
-      window.location.reload()
+      this.reload()
     }
   }
 
@@ -87,4 +92,4 @@ export class NewVersion {
 }
 
 /** The newer version of this page, if there is one. */
-export const newVersion = new NewVersion()
+export const newVersion = new NewVersion(() => window.location.reload())
