@@ -92,6 +92,36 @@ describe('appending to a ledger', () => {
     expect((await post(run.staff.lead, run.path, [missing])).results[0]?.outcome).toBe('kept')
   })
 
+  it('names every missing number of a device until it has come, late and out of order', async () => {
+    const run = await ApiRun.open()
+    const device = new Device(run.staff.lead, run.id)
+    const [one, two, three, four, five] = Array.from({ length: 5 }, (_unused, index) => device.draft(note(`Number ${index + 1}.`)))
+    if (!one || !two || !three || !four || !five) throw new Error('There are five.')
+    const send = async (draft: typeof one) => {
+      const { resendFrom, missing } = await post(run.staff.lead, run.path, [draft])
+      return { resendFrom, missing }
+    }
+    expect(await send(three)).toEqual({ resendFrom: 1, missing: [[1, 2]] })
+    expect(await send(five)).toEqual({
+      resendFrom: 1,
+      missing: [
+        [1, 2],
+        [4, 4],
+      ],
+    })
+    expect(await send(one)).toEqual({
+      resendFrom: 2,
+      missing: [
+        [2, 2],
+        [4, 4],
+      ],
+    })
+    // A resend of what is there already changes nothing, and still says what is lacking.
+    expect((await send(five)).resendFrom).toBe(2)
+    expect(await send(two)).toEqual({ resendFrom: 4, missing: [[4, 4]] })
+    expect(await send(four)).toEqual({ resendFrom: null, missing: [] })
+  })
+
   it('lands a fact that goes against a rule, marked, inside the hash', async () => {
     const run = await ApiRun.open()
     const at = { leg: 0, climb: 0, stage: 0, attempt: 0 }
