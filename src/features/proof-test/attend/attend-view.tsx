@@ -12,6 +12,7 @@ import { clockTime } from '../../../lib/dates'
 import { paths } from '../../../paths'
 import { jointMark, jointSays, type Occasion } from '../joint-words'
 import { ladderStages, levelPercent } from '../ladder-model'
+import { RowCorrections, Struck } from '../row-corrections'
 import { rowSources } from '../row-model'
 import { rowsSoFar } from '../rows-so-far'
 import { setPercent } from '../../../components/typeset'
@@ -92,11 +93,13 @@ function Rows({ run, opened }: Props): ReactElement | null {
                 <div key={reading.sourceId} className="min-w-0">
                   <dt className="font-condensed text-16 text-graphite">{label(reading.sourceId)}</dt>
                   <dd className="text-18 font-semibold">
+                    <Struck state={run.state} row={row} reading={reading} />
                     {reading.text} <span className="text-16 font-normal text-graphite">{unitLabel(reading.unit)}</span>
                   </dd>
                 </div>
               ))}
             </dl>
+            <RowCorrections state={run.state} row={row} opened={opened} />
           </li>
         ))}
       </ul>

@@ -1,6 +1,6 @@
 import { useState, type ReactElement } from 'react'
 import type { Opened, Reading } from '#shared/proof-test/entries'
-import type { Row } from '#shared/proof-test/state'
+import type { ProofTestState, Row } from '#shared/proof-test/state'
 import { parseDecimal, unitLabel } from '#shared/units'
 import { Button } from '../../../components/button'
 import { CheckRow } from '../../../components/check-row'
@@ -11,6 +11,7 @@ import { ActionPlate } from '../../../components/run/plates'
 import { setPercent } from '../../../components/typeset'
 import { clockTime } from '../../../lib/dates'
 import { capital } from '../../../lib/words'
+import { RowCorrections, Struck } from '../row-corrections'
 import { rowSources } from '../row-model'
 import { rowsSoFar, type NamedRow } from '../rows-so-far'
 import type { Run } from '../use-run'
@@ -25,17 +26,23 @@ interface Chosen {
 
 const labelOf = (opened: Opened, sourceId: string): string => rowSources(opened).find((source) => source.id === sourceId)?.label ?? ''
 
+interface ValueProps {
+  state: ProofTestState
+  row: Row
+  reading: Reading
+  opened: Opened
+  onChoose: () => void
+}
+
 /** One reading, struck through where a correction replaced it: both stay. */
-function Value({ row, reading, opened, onChoose }: { row: Row; reading: Reading; opened: Opened; onChoose: () => void }): ReactElement {
-  const typed = row.typed.find((one) => one.sourceId === reading.sourceId)
-  const changed = typed !== undefined && typed.text !== reading.text
+function Value({ state, row, reading, opened, onChoose }: ValueProps): ReactElement {
   return (
     <button type="button" onClick={onChoose} className="min-h-14 touch-manipulation px-2 py-1 text-left hover:bg-field">
       <span className="block font-condensed text-16 text-graphite">
         {labelOf(opened, reading.sourceId)}, {unitLabel(reading.unit)}
       </span>
       <span className="text-18 font-semibold">
-        {changed && <s className="mr-2 font-normal text-graphite">{typed.text}</s>}
+        <Struck state={state} row={row} reading={reading} />
         {reading.text}
       </span>
     </button>
@@ -44,12 +51,13 @@ function Value({ row, reading, opened, onChoose }: { row: Row; reading: Reading;
 
 interface RowsProps {
   rows: readonly NamedRow[]
+  state: ProofTestState
   opened: Opened
   placeOf: Run['placeOf']
   onChoose: (chosen: Chosen) => void
 }
 
-function Rows({ rows, opened, placeOf, onChoose }: RowsProps): ReactElement {
+function Rows({ rows, state, opened, placeOf, onChoose }: RowsProps): ReactElement {
   return (
     <ul className="border-t border-hairline">
       {rows.map(({ row, name }) => (
@@ -61,9 +69,10 @@ function Rows({ rows, opened, placeOf, onChoose }: RowsProps): ReactElement {
           </p>
           <div className="-mx-2 grid grid-cols-2 tablet:grid-cols-4">
             {row.readings.map((reading) => (
-              <Value key={reading.sourceId} row={row} reading={reading} opened={opened} onChoose={() => onChoose({ row, name, reading })} />
+              <Value key={reading.sourceId} state={state} row={row} reading={reading} opened={opened} onChoose={() => onChoose({ row, name, reading })} />
             ))}
           </div>
+          <RowCorrections state={state} row={row} opened={opened} />
         </li>
       ))}
     </ul>
@@ -163,7 +172,7 @@ export function ReadingsPanel({ run, opened, onLeave }: { run: Run; opened: Open
             {rows.length === 0 ? (
               <p className="text-18">No row has been entered yet.</p>
             ) : (
-              <Rows rows={rows} opened={opened} placeOf={run.placeOf} onChoose={shut ? () => undefined : setChosen} />
+              <Rows rows={rows} state={run.state} opened={opened} placeOf={run.placeOf} onChoose={shut ? () => undefined : setChosen} />
             )}
           </BenchScroll>
           <Into slot="action">
