@@ -10,7 +10,7 @@ import { inTransaction } from '../context'
 import { pressState, proofTestState } from '../ledger/folds'
 import { readHead, type LedgerHead } from '../ledger/read'
 import { Calibration } from '../models'
-import { notFound, Problem } from '../problem'
+import { forbidden, notFound, Problem } from '../problem'
 import { smallerPicture, type Picture } from '../storage/pictures'
 import { certificateFileOf } from './calibrations'
 import { absentHashes } from './held-files'
@@ -96,8 +96,15 @@ const wrongBytes = (detail: string): Problem =>
 
 /** What is to come under a hash, before its bytes are read: 409 while no entry names it, since the entry goes first. */
 export async function expectFile({ context, userId }: Asking, by: NamedBy, sha256: string, type: string): Promise<Expected> {
-  const { shopId, named } = await inTransaction(context, (transaction) => filesOf({ context, userId, transaction }, by, 'send'))
-  const files = named.filter((one) => one.sha256 === sha256)
+  const { shopId, files } = await inTransaction(context, async (transaction) => {
+    const asked = { context, userId, transaction }
+    const isIt = (one: Named) => one.sha256 === sha256
+    const { shopId, named } = await filesOf(asked, by, 'send')
+    const files = named.filter(isIt)
+    // Named by an entry that this person may not make: it never becomes theirs to send, so that trying again is no use.
+    if (files.length === 0 && (await filesOf(asked, by, 'read')).named.some(isIt)) throw forbidden()
+    return { shopId, files }
+  })
   const file = files.find((one) => one.type === type)
   if (file) return { shopId, file }
   if (files.length > 0) throw wrongBytes('This file was named as another type.')

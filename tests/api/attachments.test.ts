@@ -13,6 +13,7 @@ import { fileOf, pdf, picture, type FileToSend } from '../factories/files'
 import { fileAddress, fileOnDisk, ledger, nameFiles, observed, putFile } from '../factories/send-files'
 import { calibration, enterInstrument, gauge } from '../factories/instruments'
 import { openShop, openStaffedShop, type SignedInPerson } from '../factories/people'
+import { openedPayload } from '../factories/test-press'
 import { testServer } from '../support/api-server'
 
 const codeOf = (response: Response): string => `${response.status} ${problemSchema.parse(response.body).code}`
@@ -171,10 +172,13 @@ describe('who may', () => {
     const state = { kind: 'changed', payload: { change: 'knock', jointIds: [], why: 'The forklift touched the column.' } }
     const change = { ...new Device(staff.crew, pressId).draft(state), attachments: [knock.attachment] }
     await post(staff.crew, `/api/presses/${pressId}/entries`, [change])
-    const described = { kind: 'changed', payload: { change: 'repair', jointIds: [], why: 'Welded over.' } }
+    const jointId = openedPayload().joints[0]?.id ?? ''
+    const looked = { jointId, method: 'visual', result: 'accepted', remark: '', test: null }
+    const described = { kind: 'joint-examined', payload: looked }
     await post(staff.lead, `/api/presses/${pressId}/entries`, [{ ...lead.draft(described), attachments: [weld.attachment] }])
     const by = ledger(pressId)
     await putFile(staff.crew, by, knock).expect(204)
+    expect(codeOf(await putFile(staff.crew, by, weld))).toBe('403 forbidden')
     await putFile(staff.lead, by, weld).expect(204)
     const stranger = await openShop()
     expect(codeOf(await putFile(stranger, by, knock))).toBe('404 not-found')
