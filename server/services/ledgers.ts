@@ -7,7 +7,6 @@ import type { AppContext } from '../context'
 import { parsePressDraft, parseProofTestDraft } from '../ledger/parse'
 import { readHead } from '../ledger/read'
 import { inRetriedTransaction } from '../ledger/retry'
-import { loadSealKey } from '../ledger/seal-keys'
 import { createLedger, type Writing } from '../ledger/write'
 import { conflict, invalid, notFound, Problem } from '../problem'
 import { membershipOf } from './membership'
@@ -121,9 +120,8 @@ export async function signProofTest(
   if (!(await verifyPassword(context, userId, request.password, address))) {
     throw invalid({ password: 'That is not your password. Nothing was signed.' })
   }
-  const key = loadSealKey(context.config)
   const { database } = context
   return inRetriedTransaction(database, (transaction) =>
-    signTest({ database, transaction, now: context.now() }, key, userId, testId, request),
+    signTest({ database, transaction, now: context.now() }, context, userId, testId, request),
   )
 }

@@ -4,12 +4,14 @@ import type { SignatureRequest } from '#shared/api/proof-tests'
 import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
 import { makeSeal } from '#shared/ledger/seal'
 import { PROOF_TEST_VERSION, type Opened } from '#shared/proof-test/entries'
+import type { AppContext } from '../context'
 import { conflict, notFound } from '../problem'
 import { absentHashes } from './held-files'
 import { appendToTest, lockTest } from './test-entries'
+import { alteredProblem, findBroken } from '../ledger/check-stored'
 import { SERVER_DEVICE } from '../ledger/press'
-import { readEntry } from '../ledger/read'
-import type { SealKey } from '../ledger/seal-keys'
+import { readEntry, readSeals, readStored } from '../ledger/read'
+import { loadSealKey } from '../ledger/seal-keys'
 import type { Writing } from '../ledger/write'
 
 function payloadOf(
@@ -29,13 +31,24 @@ function payloadOf(
   }
 }
 
+/** What seals are made and checked with, and who is told of a ledger that is not whole. */
+export type Sealing = Pick<AppContext, 'config' | 'logger'>
+
+/** A seal vouches for every entry below it, so that none is put on a ledger that somebody changed meanwhile. */
+async function refuseBroken({ database, transaction }: Writing, sealing: Sealing, testId: string): Promise<void> {
+  const stored = await readStored(database, transaction, testId)
+  const broken = findBroken({ ...sealing, database }, testId, stored, await readSeals(database, transaction, testId))
+  if (broken !== null) throw alteredProblem(broken)
+}
+
 /**
  * Signs, countersigns or declines, for a person whose password was just checked: the only writer of these
- * kinds. Refuses when the ledger has moved on since the person read it. Every signature is sealed.
+ * kinds. Refuses when the ledger has moved on since the person read it, or is not whole as it is stored. Every
+ * signature is sealed.
  */
 export async function signTest(
   writing: Writing,
-  key: SealKey,
+  sealing: Sealing,
   userId: string,
   testId: string,
   request: SignatureRequest,
@@ -49,6 +62,7 @@ export async function signTest(
     if (known.ledgerId === testId && known.authorId === userId) return known
     throw conflict('id-reused', 'This signature’s id was used already. Sign again.')
   }
+  await refuseBroken(writing, sealing, testId)
   if (head.headHash !== request.headHash) {
     throw conflict('stale-head', 'Something was added to this record since you read it. Read it again, then sign.')
   }
@@ -72,6 +86,7 @@ export async function signTest(
   // Asked in the same transaction: bytes only ever arrive, so that what is here now is here when it commits.
   const absentFiles = await absentHashes(transaction, head.shopId, state.attachments)
   const entry = await appendToTest(writing, locked, draft, { absentFiles })
+  const key = loadSealKey(sealing.config)
   const seal = makeSeal(
     { kid: key.kid, ledgerId: testId, seq: entry.seq, headHash: entry.hash, sealedAt: now.toISOString() },
     key.secretKey,

@@ -117,6 +117,31 @@ describe('a signed record that was altered in the database', () => {
     expect(testServer().loggedErrors.splice(0).join()).toContain('not whole')
   })
 
+  it('is not countersigned, nor signed before that: no seal vouches for what was changed', async () => {
+    const run = await ApiRun.open()
+    await run.driveTo('sign')
+    const drafts = await run.staff.owner.client.get(`/api/proof-tests/${run.id}/entries`).expect(200)
+    const middle = entriesResponseSchema.parse(drafts.body).entries.find(({ kind }) => kind === 'row-read')?.seq ?? 0
+    await alter(run, middle, '"unit":"mm"', '"unit":"in"')
+    const unsigned = problemSchema.parse((await run.sign('lead').expect(409)).body)
+    expect(unsigned).toMatchObject({ code: 'altered' })
+    expect(unsigned.detail).toContain(`This record was altered at entry ${middle}.`)
+
+    await alter(run, middle, '"unit":"in"', '"unit":"mm"')
+    await run.sign('lead').expect(201)
+    await run.refresh()
+    await alter(run, middle, '"unit":"mm"', '"unit":"in"')
+    expect(problemSchema.parse((await run.sign('witness').expect(409)).body)).toMatchObject({ code: 'altered' })
+    const declined = { as: 'decline', why: 'I read another figure.', meaning: undefined }
+    expect(problemSchema.parse((await run.sign('witness', declined).expect(409)).body)).toMatchObject({ code: 'altered' })
+
+    await alter(run, middle, '"unit":"in"', '"unit":"mm"')
+    await run.refresh()
+    expect(run.state.countersigned).toBeNull()
+    await run.sign('witness').expect(201)
+    testServer().loggedErrors.splice(0)
+  })
+
   it('is told in a sentence too when an entry can no longer be read at all', async () => {
     const run = await signedRun()
     await alter(run, 3, '{', '')

@@ -1,6 +1,6 @@
+import { pino } from 'pino'
 import type { AppContext } from '../../context'
 import { inRetriedTransaction } from '../../ledger/retry'
-import { loadSealKey } from '../../ledger/seal-keys'
 import { Shop } from '../../models'
 import { hashPassword } from '../../services/passwords'
 import { keepDemoPhoto } from './demo-files'
@@ -78,9 +78,9 @@ async function isEmpty(): Promise<boolean> {
 }
 
 function load({ config, database, now, storage }: DemoContext, passwordHash: string): Promise<void> {
-  const sealKey = loadSealKey(config)
+  const logger = pino({ level: config.logLevel }, pino.destination({ dest: 2, sync: true }))
   const loadedAt = now()
-  return inRetriedTransaction(database, (transaction) => tell({ database, transaction, storage, now: loadedAt, sealKey }, passwordHash))
+  return inRetriedTransaction(database, (transaction) => tell({ database, transaction, storage, now: loadedAt, sealing: { config, logger } }, passwordHash))
 }
 
 /**

@@ -3,9 +3,9 @@ import { v7 as newId } from 'uuid'
 import type { Attachment, EntryDraft } from '#shared/ledger/envelope'
 import type { Mark } from '#shared/proof-test/entries'
 import type { Storage, Work } from '../../context'
-import type { SealKey } from '../../ledger/seal-keys'
 import type { Writing } from '../../ledger/write'
 import { membershipOf } from '../../services/membership'
+import type { Sealing } from '../../services/sign-test'
 
 /** What everything of the demo shop is written with: one transaction, so that it is there whole or not at all. */
 export interface Desk {
@@ -14,7 +14,7 @@ export interface Desk {
   storage: Storage
   /** The moment of loading; every date of the demo counts back from it. */
   now: Date
-  sealKey: SealKey
+  sealing: Sealing
 }
 
 const MINUTE = 60_000

@@ -318,7 +318,7 @@ export class ScriptedRun {
     const writing = writingAt(this.desk, this.clock)
     const meaning = as === 'lead' ? 'I ran this test and these are its readings.' : 'I was present and read the gauge myself.'
     const request = { as, entryId: newId({ msecs: this.clock }), password: '', headHash: this.current.headHash, meaning }
-    await signTest(writing, this.desk.sealKey, userId, this.id, request)
+    await signTest(writing, this.desk.sealing, userId, this.id, request)
     this.current = (await lockTest(writing, userId, this.id)).state
   }
 
