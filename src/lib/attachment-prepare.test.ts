@@ -58,7 +58,9 @@ describe('a chosen file', () => {
 
   it('is made smaller when it is large: its long edge has 2000 px, and it is called a JPEG', async () => {
     const noise = randomBytes(1500 * 2400 * 3)
-    const made = await sharp(noise, { raw: { width: 1500, height: 2400, channels: 3 } }).png().toBuffer()
+    const made = await sharp(noise, { raw: { width: 1500, height: 2400, channels: 3 } })
+      .png()
+      .toBuffer()
     const { attachment, bytes: kept } = await prepareAttachment(fileOf(made, 'joint 7.png'), shrink)
     const { width, height, format } = await sharp(kept).metadata()
     expect({ width, height, format }).toEqual({ width: 1250, height: 2000, format: 'jpeg' })
@@ -72,7 +74,9 @@ describe('a chosen file', () => {
   })
 
   it('is told by its bytes, not by its name', async () => {
-    expect(await refusal(fileOf('only words', 'weld.jpg'))).toMatch(/^This file is no photo and no PDF, whatever its name says\. Take a photo/)
+    expect(await refusal(fileOf('only words', 'weld.jpg'))).toMatch(
+      /^This file is no photo and no PDF, whatever its name says\. Take a photo/,
+    )
     const pdf = await prepareAttachment(fileOf('%PDF-1.7 a certificate', 'certificate.jpg'), neverAsked)
     expect(pdf.attachment.type).toBe('application/pdf')
   })
