@@ -80,7 +80,9 @@ async function isEmpty(): Promise<boolean> {
 function load({ config, database, now, storage }: DemoContext, passwordHash: string): Promise<void> {
   const logger = pino({ level: config.logLevel }, pino.destination({ dest: 2, sync: true }))
   const loadedAt = now()
-  return inRetriedTransaction(database, (transaction) => tell({ database, transaction, storage, now: loadedAt, sealing: { config, logger } }, passwordHash))
+  return inRetriedTransaction(database, (transaction) =>
+    tell({ database, transaction, storage, now: loadedAt, sealing: { config, logger } }, passwordHash),
+  )
 }
 
 /**

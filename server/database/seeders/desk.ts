@@ -89,7 +89,16 @@ export class Tablets {
     const { personId, at, attachments = [], ...rest } = entry
     const stamp = this.stamp(personId, at)
     const deviceSeq = this.count(personId)
-    return { id: newId({ msecs: at }), ledgerId: this.ledgerId, authorId: personId, deviceSeq, ...stamp, ...rest, attachments, overrides: [] }
+    return {
+      id: newId({ msecs: at }),
+      ledgerId: this.ledgerId,
+      authorId: personId,
+      deviceSeq,
+      ...stamp,
+      ...rest,
+      attachments,
+      overrides: [],
+    }
   }
 
   private tabletOf(personId: string): Tablet {
