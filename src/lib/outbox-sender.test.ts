@@ -194,6 +194,18 @@ describe('the outbox in two tabs', () => {
   })
 })
 
+describe('an entry whose tab is gone before it was sent', () => {
+  it('is sent by the other tab at once', async () => {
+    const server = new LedgerDouble(lead)
+    const [writes, stays] = [open(server, 'closed early'), open(server, 'closed early')]
+    stays.sendAs(lead)
+    await stays.settled()
+    await writes.enqueue(testId, entry('the last thing it did'))
+    writes.close()
+    await vi.waitFor(() => expect(notes(server)).toEqual(['the last thing it did']))
+  })
+})
+
 describe('entries that are carried by file', () => {
   it('go out from another device as they were made, and taken in twice are entered once', async () => {
     const server = new LedgerDouble(null)

@@ -132,6 +132,8 @@ export class Outbox {
     this.channel?.addEventListener('message', (event: MessageEvent<Told>) => {
       const { testId, ledgerId, kept } = event.data
       if (kept.length > 0) void this.handOn(testId, kept)
+      // The tab that wrote it may be closed before it has sent it.
+      else this.sender.sendSoon()
       void this.refresh(ledgerId)
     })
     if (typeof window !== 'undefined') window.addEventListener('online', () => this.sendNow())

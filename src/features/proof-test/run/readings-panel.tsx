@@ -62,14 +62,21 @@ function Rows({ rows, state, opened, placeOf, onChoose }: RowsProps): ReactEleme
     <ul className="border-t border-hairline">
       {rows.map(({ row, name }) => (
         <li key={row.entryId} className="border-b border-hairline py-1">
-          <p className="flex flex-wrap items-baseline gap-x-4 text-16">
+          <p className="flex flex-wrap items-center gap-x-4 text-16">
             <span className="min-w-0 flex-1 font-medium">{setPercent(capital(name))}</span>
             <EntryPlace place={placeOf(row.entryId)} />
             <span className="text-graphite">{clockTime(row.mark.at, { seconds: true })}</span>
           </p>
           <div className="-mx-2 grid grid-cols-2 tablet:grid-cols-4">
             {row.readings.map((reading) => (
-              <Value key={reading.sourceId} state={state} row={row} reading={reading} opened={opened} onChoose={() => onChoose({ row, name, reading })} />
+              <Value
+                key={reading.sourceId}
+                state={state}
+                row={row}
+                reading={reading}
+                opened={opened}
+                onChoose={() => onChoose({ row, name, reading })}
+              />
             ))}
           </div>
           <RowCorrections state={state} row={row} opened={opened} />
