@@ -4,6 +4,7 @@ import { lineDrawing } from '#shared/chart/line-geometry'
 import { recordLine } from '#shared/chart/record-line'
 import type { ClimbEvaluation } from '#shared/proof-test/evaluate-climb'
 import type { Opened } from '#shared/proof-test/entries'
+import type { ProofTestState } from '#shared/proof-test/state'
 import { textPath } from './text-paths'
 
 /** The light palette of the screen: a record on paper has no dark one. */
@@ -29,7 +30,8 @@ function svgOf(item: DrawingItem): string {
     return `<path d="${item.d}" fill="${paint(item.fill)}" stroke="${paint(item.stroke)}" stroke-width="${item.width}"${dash}${opacity}/>`
   }
   const d = textPath(item)
-  const halo = item.halo === null ? '' : `<path d="${d}" fill="none" stroke="${paint(item.halo)}" stroke-width="5" stroke-linejoin="round"/>`
+  const halo =
+    item.halo === null ? '' : `<path d="${d}" fill="none" stroke="${paint(item.halo)}" stroke-width="5" stroke-linejoin="round"/>`
   return `${halo}<path d="${d}" fill="${paint(item.ink)}"/>`
 }
 
@@ -54,8 +56,12 @@ export interface ChartPicture {
 const SIZE = { width: 640, height: 536 }
 
 /** The line of one leg as PNG; null before a stage was read. */
-export function chartPicture(opened: Opened, climbs: readonly ClimbEvaluation[]): ChartPicture | null {
-  const spec = recordLine(opened, climbs, SIZE)
+export function chartPicture(
+  opened: Opened,
+  climbs: readonly ClimbEvaluation[],
+  state: Pick<ProofTestState, 'corrections'>,
+): ChartPicture | null {
+  const spec = recordLine(opened, climbs, SIZE, state)
   if (spec === null) return null
   const svg = drawingSvg(lineDrawing(spec))
   const png = new Resvg(svg, { fitTo: { mode: 'zoom', value: 2 }, font: { loadSystemFonts: false } }).render().asPng()

@@ -198,6 +198,12 @@ describe('the workbook of a countersigned test', () => {
       [5580, 5850],
     ])
     expect(corrections[1]?.['Why']?.text).toBe('Digits swapped when typed. Witness saw 5850.')
+    expect(corrections.map((one) => one['Letter']?.text)).toEqual(['a', 'b'])
+    const stages = table(sheetOf(workbook, 'Stages'))
+    const marked = ['Datum', '25 %', '50 %', '75 %', '100 %', 'Set'].map(
+      (stage) => pick(stages, 1, 'Stage', stage)['Corrected readings, | see Corrections']?.text,
+    )
+    expect(marked).toEqual(['', '', 'a: Right pin, hold start', 'b: G-02, hold end', '', ''])
   })
 
   test('prints who signed, when with the zone, and what the signature means', () => {

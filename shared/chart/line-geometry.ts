@@ -49,6 +49,8 @@ function axes(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
       }),
     )
   }
+  if (spec.footnote !== undefined && alone)
+    items.push(textItem(24, frame.zero + 46, spec.footnote, 'scribe', { size: 14, condensed: true }))
   const words = `${spec.xLabel}, ${spec.xUnit}`
   items.push(
     alone
@@ -140,6 +142,16 @@ function readings(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
     items.push({ kind: 'path', d: circlePath({ x, y: frame.zero }, 4), stroke: 'scribe', width: 1.6, fill: 'dye' })
   }
   return items
+}
+
+/** The letters of its corrections at the lower right of a reading, where neither line nor bar runs. */
+function corrections(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
+  const set = spec.setPoint === undefined ? [] : [{ ...spec.setPoint, y: 0 }]
+  return [...spec.points, ...(spec.comparison ?? []), ...set].flatMap(({ x, y, corrected }) =>
+    corrected === undefined
+      ? []
+      : [textItem(frame.x(x) + 9, frame.y(y) + (y > 0 ? 17 : -8), corrected, 'scribe', { size: 16, weight: 600, halo: 'dye' })],
+  )
 }
 
 /** An octagon with a bar, in the middle of the step that calls for a stop. */
@@ -237,6 +249,7 @@ export function lineDrawing(spec: LineChartSpec): Drawing {
     )
   items.push(...stageGuides(spec, frame), ...band(spec, frame), ...axes(spec, frame))
   items.push(...line(spec, frame), ...prediction(spec, frame), ...readings(spec, frame), ...stopMarks(spec, frame))
+  items.push(...corrections(spec, frame))
   for (const note of layOutNotes(spec, frame)) items.push(...noteItems(note))
   return { width: spec.width, height: spec.height, items }
 }

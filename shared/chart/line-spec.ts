@@ -15,6 +15,8 @@ export interface LinePoint {
   ux: number
   uy: number
   mark?: 'stop' | 'wait'
+  /** Letters of the corrections that the reading took; it is then drawn with them. */
+  corrected?: string
 }
 
 /** What the next reading should be: from–to in deflection, at load `y` (percent). */
@@ -51,9 +53,9 @@ export interface LineChartSpec {
   /** At most three are drawn, the prediction's own included. */
   notes: LineNote[]
   /** Set or release reading on the axis, in deflection. */
-  setPoint?: { x: number; ux: number }
+  setPoint?: { x: number; ux: number; corrected?: string }
   /** Readings on the way down or of a repeat climb, drawn as a dotted line. */
-  comparison?: { x: number; y: number }[]
+  comparison?: { x: number; y: number; corrected?: string }[]
   xLabel: string
   xUnit: string
   /** Deflection the axis has to reach; rounded up to a labelled step. */
@@ -62,6 +64,8 @@ export interface LineChartSpec {
   yMax: number
   title?: string
   aside?: string
+  /** What the letters mean, at the foot of a chart that stands alone. */
+  footnote?: string
   /** `beside` shares the ladder's scale and leaves the stages to it; `alone` labels its own. */
   setting?: 'beside' | 'alone'
 }

@@ -1,7 +1,9 @@
 import type { ClimbEvaluation, StageEvaluation } from '../proof-test/evaluate-climb'
 import { lengthText } from '../proof-test/evaluate-climb'
+import { correctionLetters } from '../proof-test/corrections'
 import type { Opened } from '../proof-test/entries'
 import { stageForce } from '../proof-test/force'
+import type { ProofTestState } from '../proof-test/state'
 import { fitLine, type LineFit } from '../statistics/line'
 import { FORCE_DECIMALS, formatNumber, formatQuantity, toSI, toUnit, unitLabel } from '../units'
 import { chartBand } from './expected-band'
@@ -37,14 +39,23 @@ function formatQuantityOf(value: number, decimals: number, unit: string): string
 
 /**
  * The line of one leg as the record draws it: the first climb's readings with their uncertainty and fit, the
- * repeat climb dotted beside them, the set on the axis. `climbs` are the leg's, in order; null before a stage
- * was read. Deflections in the test's unit, loads in percent of rated load.
+ * repeat climb dotted beside them, the set on the axis. `climbs` are the leg's, in order; readings that `state` has
+ * corrections of bear their letters. Null before a stage was read. Deflections in the test's unit, loads in percent of rated load.
  */
-export function recordLine(opened: Opened, climbs: readonly ClimbEvaluation[], size: Size): LineChartSpec | null {
+export function recordLine(
+  opened: Opened,
+  climbs: readonly ClimbEvaluation[],
+  size: Size,
+  state: Pick<ProofTestState, 'corrections'>,
+): LineChartSpec | null {
   const [first, repeat] = climbs
   const rated = toSI(opened.press.ratedLoad)
   const unit = opened.lengthUnit
   if (!first || !first.stages.some((stage) => stage.start?.lead && stage.start.force)) return null
+  const lettered = (...entryIds: string[]): { corrected?: string } => {
+    const corrected = correctionLetters(state, entryIds)
+    return corrected === '' ? {} : { corrected }
+  }
   const pointsOf = (climb: ClimbEvaluation): LinePoint[] =>
     climb.stages.flatMap((stage): LinePoint[] => {
       const { start } = stage
@@ -54,22 +65,32 @@ export function recordLine(opened: Opened, climbs: readonly ClimbEvaluation[], s
         y: (start.force.force / rated) * 100,
         ux: toUnit(start.lead.U, unit),
         uy: (start.force.U / rated) * 100,
+        ...lettered(start.row.entryId),
       }
       return [isBeyond(stage) ? { ...point, mark: 'stop' } : point]
     })
-  const datum: LinePoint = { x: 0, y: ((first.datum?.force?.force ?? 0) / rated) * 100, ux: 0, uy: 0 }
+  const datum: LinePoint = {
+    x: 0,
+    y: ((first.datum?.force?.force ?? 0) / rated) * 100,
+    ux: 0,
+    uy: 0,
+    ...(first.datum ? lettered(first.datum.row.entryId) : {}),
+  }
   const points = [datum, ...pointsOf(first)]
-  const comparison = repeat ? [{ x: 0, y: 0 }, ...pointsOf(repeat).map(({ x, y }) => ({ x, y }))] : undefined
+  const comparison = repeat ? [{ x: 0, y: 0 }, ...pointsOf(repeat).map(({ ux: _ux, uy: _uy, mark: _mark, ...point }) => point)] : undefined
   const stages = opened.protocol.content.stages.map(({ percent }, index, all) => {
     const load = toUnit(stageForce(opened, percent), opened.forceUnit).toFixed(FORCE_DECIMALS[opened.forceUnit])
     const last = index === all.length - 1
     return { percent, label: `${percent}\u202f%`, load: last ? `${load} ${unitLabel(opened.forceUnit, { plural: true })}` : load }
   })
   const set = first.set?.row.lead
+  const setPoint =
+    first.set && set ? { x: toUnit(set.deflection, unit), ux: toUnit(set.U, unit), ...lettered(first.set.row.row.entryId) } : null
   const trusted = trustedFit(first)
   const fit = trusted ? { slope: (toUnit(trusted.slope, unit) * rated) / 100, intercept: toUnit(trusted.intercept, unit) } : null
   const band = chartBand(opened, first.leg)
   const widest = Math.max(band?.high ?? 0, ...points.map((point) => point.x + point.ux), ...(comparison ?? []).map((point) => point.x))
+  const isCorrected = [...points, ...(comparison ?? []), ...(setPoint ? [setPoint] : [])].some((point) => 'corrected' in point)
   return {
     ...size,
     stages: [{ percent: 0, label: '0\u202f%', load: 'datum' }, ...stages],
@@ -78,7 +99,7 @@ export function recordLine(opened: Opened, climbs: readonly ClimbEvaluation[], s
     band,
     prediction: null,
     notes: notesOf(opened, first, points),
-    ...(set ? { setPoint: { x: toUnit(set.deflection, unit), ux: toUnit(set.U, unit) } } : {}),
+    ...(setPoint ? { setPoint } : {}),
     ...(comparison && comparison.length > 1 ? { comparison } : {}),
     xLabel: 'deflection',
     xUnit: unitLabel(unit),
@@ -87,6 +108,7 @@ export function recordLine(opened: Opened, climbs: readonly ClimbEvaluation[], s
     title: 'Deflection against load',
     // A narrow chart has room for its title only.
     ...(size.width < 480 ? {} : { aside: opened.net?.label ?? opened.points[0]?.label ?? '' }),
+    ...(isCorrected ? { footnote: 'Letter: corrected, see Corrections' } : {}),
     setting: 'alone',
   }
 }

@@ -1,4 +1,5 @@
 import type { Workbook } from 'exceljs'
+import { correctionLetter } from '#shared/proof-test/corrections'
 import { unitLabel } from '#shared/units'
 import type { RecordOfTest } from '../record'
 import { recordRows } from '../rows'
@@ -8,6 +9,7 @@ import { asTyped } from './train'
 export const CORRECTIONS_SHEET = 'Corrections'
 
 const columns: Column[] = [
+  { header: 'Letter', width: 7 },
   { header: 'Entry', width: 8, align: 'right' },
   { header: 'Corrects\nentry', width: 9, align: 'right' },
   { header: 'Row', width: 26 },
@@ -40,6 +42,7 @@ export function correctionsSheet(workbook: Workbook, record: RecordOfTest): void
     const { from, to } = correction
     const units = from.unit === to.unit ? unitLabel(to.unit) : `${unitLabel(from.unit)}, then ${unitLabel(to.unit)}`
     putRow(sheet, row, columns, [
+      { words: correctionLetter(index), bold: true },
       { number: correction.seq, format: '0' },
       { number: correction.correctsSeq, format: '0' },
       rows.find((candidate) => candidate.key === correction.correctsEntryId)?.what ?? '',
@@ -52,7 +55,7 @@ export function correctionsSheet(workbook: Workbook, record: RecordOfTest): void
       { moment: correction.at },
       `${correction.readAgainByBoth ? 'by both' : 'not by both'}, ${correction.underLoad ? 'under load' : 'after release'}`,
     ])
-    const first = sheet.getCell(row, 5)
+    const first = sheet.getCell(row, 6)
     first.font = { ...first.font, strike: true, color: { argb: colours.stop } }
   })
 }

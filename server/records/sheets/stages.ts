@@ -1,6 +1,8 @@
 import type { Workbook, Worksheet } from 'exceljs'
 import { creep, pressureLoss } from '#shared/statistics/hold'
+import { correctionsOf } from '#shared/proof-test/corrections'
 import type { ClimbEvaluation, Criterion, RowFigures, StageEvaluation } from '#shared/proof-test/evaluate-climb'
+import { instrumentOf } from '#shared/proof-test/force'
 import type { StageRow } from '#shared/proof-test/state'
 import { FORCE_DECIMALS, toSI, toUnit, unitLabel } from '#shared/units'
 import type { RecordOfTest } from '../record'
@@ -53,6 +55,7 @@ function layOut(record: RecordOfTest): Layout {
     { header: `Set limit\n${length}`, width: 9, align: 'right' },
     { header: 'Set is', width: 10 },
     { header: 'Decision', width: 10 },
+    { header: 'Corrected readings,\nsee Corrections', width: 34, wrap: true },
   ]
   return { columns, place: { net: 9, force: 11, stiffness: 16 } }
 }
@@ -214,6 +217,18 @@ function creepContent({ record, readings, own, start, end, stage }: CreepInput):
   return { formula: `${to}-${from}+${given}`, result: toUnit(result, unit), format: decimals(unit === 'in' ? 4 : 3) }
 }
 
+/** Which readings of these rows count as they were corrected: "a: Right pin, hold start". */
+function correctedContent(record: RecordOfTest, rows: readonly RowFigures[]): Content {
+  const { opened, state } = record
+  const words = rows.flatMap(({ row }) =>
+    correctionsOf(state, [row.entryId]).map(({ letter, correction: { sourceId } }) => {
+      const name = opened.points.find(({ id }) => id === sourceId)?.label ?? instrumentOf(opened, sourceId)?.details.code ?? ''
+      return `${letter}: ${name}${'occasion' in row ? `, ${(row as StageRow).occasion}` : ''}`
+    }),
+  )
+  return words.length === 0 ? null : words.join('; ')
+}
+
 const lead = (record: RecordOfTest, climb: ClimbEvaluation): Content[] => [
   record.opened.legs[climb.leg]?.label ?? `Leg ${climb.leg + 1}`,
   { number: climb.climb + 1, format: '0' },
@@ -237,6 +252,7 @@ function stageRow(drawing: Drawing, row: number, climb: ClimbEvaluation, stage: 
     null,
     null,
     decided ? { words: decided.decision.replace('-', ' '), bold: true } : null,
+    correctedContent(record, stage.rows),
   ]
   putRow(sheet, row, layout.columns, cells)
   if (start?.lead && start.force) places.points.push(row)
@@ -260,6 +276,8 @@ function setRow(drawing: Drawing, row: number, climb: ClimbEvaluation, places: C
     ...blanks,
     setLimitContent({ record, criterion, increment: set.row.lead?.increment ?? 0, full: places.full === null ? null : address(layout.place.net, places.full) }),
     verdictContent(criterion),
+    null,
+    correctedContent(record, [set.row]),
   ])
 }
 
@@ -277,6 +295,8 @@ function climbRows(drawing: Drawing, top: number, climb: ClimbEvaluation): numbe
       gaugeCell(drawing, climb.datum),
       null,
       ...figureCells(drawing, row, climb.datum),
+      ...Array.from({ length: 12 }, () => null),
+      correctedContent(record, [climb.datum]),
     ])
     places.points.push(row)
     row += 1

@@ -19,7 +19,8 @@ interface LineChartProps extends LineChartSpec {
 function inWords(spec: LineChartSpec): string {
   const readings = spec.points.map((point) => {
     const bad = point.mark === 'stop' ? ', step beyond its limit' : ''
-    return `${point.x} ${spec.xUnit} at ${Math.round(point.y)} percent${bad}`
+    const corrected = point.corrected === undefined ? '' : `, corrected (${point.corrected})`
+    return `${point.x} ${spec.xUnit} at ${Math.round(point.y)} percent${bad}${corrected}`
   })
   const next = spec.prediction === null ? [] : [`${spec.prediction.caption ?? 'Expected'} ${spec.prediction.text}`]
   const notes = spec.notes.map((note) => note.lines.join(', '))

@@ -3,6 +3,7 @@ import type { LedgerEntry } from '#shared/ledger/envelope'
 import { checkChain, entryText, type ChainCheck } from '#shared/ledger/chain'
 import { checkLedger, type LedgerCheck, type PublicSealKey } from '#shared/ledger/check-ledger'
 import { foldProofTest } from '#shared/proof-test/apply'
+import { correctionLetter } from '#shared/proof-test/corrections'
 import type { Opened, Reading } from '#shared/proof-test/entries'
 import { evaluateTest, type TestEvaluation } from '#shared/proof-test/evaluate'
 import { frozenDifferences, standingOf, type FrozenDifference, type RecordStanding } from '#shared/proof-test/record'
@@ -70,12 +71,6 @@ export function readRecord(answer: EntriesResponse, keys?: readonly PublicSealKe
     photos: placedIn(answer.entries),
     nameOf: (personId) => named[personId] ?? 'somebody unknown here',
   }
-}
-
-/** "a", "b" … "z", "aa": how corrections are told apart on the sheet. */
-export function correctionLetter(index: number): string {
-  const rest = Math.floor(index / 26)
-  return (rest > 0 ? correctionLetter(rest - 1) : '') + String.fromCharCode(97 + (index % 26))
 }
 
 export interface ShownReading {

@@ -1,9 +1,10 @@
+import { correctionLetter } from '#shared/proof-test/corrections'
 import { capital, countInWords } from '#shared/proof-test/record'
 import type { Correction, Row } from '#shared/proof-test/state'
 import { allRows } from '#shared/proof-test/apply'
 import { groupDigits, unitLabel } from '#shared/units'
 import { clockTime } from '../../../lib/dates'
-import { correctionLetter, type RecordView } from '../record-view'
+import type { RecordView } from '../record-view'
 
 /** "Right pin at 50 %", "G-02 at the datum": which reading of which row. */
 function whichReading(record: RecordView, correction: Correction): string {

@@ -12,10 +12,10 @@ const ON_PAPER =
 
 /** The line of one leg on its dye plate, with what was decided at each stage beside it. */
 export function RecordChart({ record, leg }: { record: RecordView; leg: number }) {
-  const { opened, evaluation } = record
+  const { opened, evaluation, state } = record
   const climbs = evaluation.climbs.filter((climb) => climb.leg === leg)
   const label = opened.legs[leg]?.label ?? ''
-  if (recordLine(opened, climbs, { width: 640, height: 536 }) === null) {
+  if (recordLine(opened, climbs, { width: 640, height: 536 }, state) === null) {
     return (
       <div className="ground-dye flex min-h-60 items-center justify-center p-6 text-faint-scribe">
         <p>{opened.legs.length > 1 ? `${label}: no stage was read.` : 'No stage was read.'}</p>
@@ -37,7 +37,7 @@ export function RecordChart({ record, leg }: { record: RecordView; leg: number }
         className={`w-full ${ON_PAPER} ${opened.legs.length > 1 ? 'h-[440px]' : 'h-[440px] tablet:h-[536px] wide:h-auto wide:min-h-[536px] wide:grow'}`}
       >
         {(size) => {
-          const spec = recordLine(opened, climbs, size)
+          const spec = recordLine(opened, climbs, size, state)
           return spec && <LineChart {...spec} stageMarks={[{ percent: 0, mark: 'datum' }, ...marks]} />
         }}
       </Fit>
