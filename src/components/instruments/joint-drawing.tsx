@@ -32,6 +32,8 @@ interface JointDrawingProps {
   joints: DrawnJoint[]
   points?: { letter: string; place: string }[]
   selectedId?: string | null
+  /** More joints that are pointed out: chosen for a report, or concerned by a repair. */
+  markedIds?: readonly string[]
   /** Without it the balloons are part of the picture, not buttons. */
   onSelect?: (id: string) => void
   tone?: 'dye' | 'steel'
@@ -148,7 +150,7 @@ const KIND: Record<FrameKind, string> = {
 
 /** The press as drawn on the board, with every joint in a balloon whose outline tells its state. */
 export function JointDrawing(props: JointDrawingProps): ReactElement {
-  const { press, joints, points = [], selectedId = null, onSelect, tone = 'dye', size } = props
+  const { press, joints, points = [], selectedId = null, markedIds = [], onSelect, tone = 'dye', size } = props
   const cFrame = press.kind === 'c-frame' ? cFrameOf(press.dimensions, size) : null
   const portal = cFrame === null ? portalOf(press.kind, press.dimensions, size) : null
   const elevation = cFrame !== null ? cFrameElevation(cFrame) : portal !== null ? portalElevation(portal) : null
@@ -183,7 +185,7 @@ export function JointDrawing(props: JointDrawingProps): ReactElement {
             joint={joint}
             centre={balloon.centre}
             tone={tone}
-            selected={joint.id === selectedId}
+            selected={joint.id === selectedId || markedIds.includes(joint.id)}
             onSelect={onSelect}
           />
         )

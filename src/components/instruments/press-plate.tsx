@@ -31,6 +31,7 @@ type PressPlateProps = {
   joints: DrawnJoint[]
   points?: { letter: string; place: string }[]
   selectedId?: string | null
+  markedIds?: readonly string[]
   onSelect?: (id: string) => void
   /** Outlines that can occur here. */
   states?: readonly JointMarkState[]
@@ -43,7 +44,7 @@ type PressPlateProps = {
 const ALL: readonly JointMarkState[] = LEGEND.map(({ state }) => state)
 
 /** The press on its dye plate, as high as the window beside a page that scrolls. */
-export function PressPlate({ press, joints, points, selectedId, onSelect, states = ALL, nothing, children }: PressPlateProps) {
+export function PressPlate({ press, joints, points, selectedId, markedIds, onSelect, states = ALL, nothing, children }: PressPlateProps) {
   const phone = usePhone()
   const title = press?.kind === 'c-frame' ? 'Side elevation' : 'Front elevation'
   return (
@@ -56,7 +57,7 @@ export function PressPlate({ press, joints, points, selectedId, onSelect, states
         <div className="flex min-h-40 grow items-center justify-center border border-dashed border-ghost px-6 text-center text-faint-scribe">{nothing}</div>
       ) : (
         <Fit className="h-[440px] tablet:h-[600px] desktop:h-auto desktop:min-h-0 desktop:grow" initial={{ width: phone ? 358 : 432, height: phone ? 440 : 560 }}>
-          {(size) => <JointDrawing press={press} joints={joints} points={points} selectedId={selectedId} onSelect={onSelect} size={size} />}
+          {(size) => <JointDrawing press={press} joints={joints} points={points} selectedId={selectedId} markedIds={markedIds} onSelect={onSelect} size={size} />}
         </Fit>
       )}
       {children}
