@@ -293,10 +293,21 @@ const handlers: Handlers = {
   withdrawn: (state, payload, entry) => withdraw(state, payload.why, entry.observedAt),
 }
 
+/** What became of a clearance between two states of a press; one that is given or opened under a test tells it by itself. */
+function clearanceTurn(before: PressState, after: PressState, kind: PressKind): PressEvent['clearance'] {
+  const from = before.clearance.is
+  const to = after.clearance.is
+  if (kind === 'clearance-given' || kind === 'withdrawn' || from === to) return null
+  if (to === 'withdrawn' && (from === 'cleared' || lastClearance(before) !== null)) return 'ended'
+  if (to === 'suspended' && from === 'cleared') return 'held'
+  return to === 'cleared' ? 'holds again' : null
+}
+
 function run<K extends PressKind>(state: PressState, kind: K, payload: PressPayload<K>, entry: LedgerEntry): PressState {
   const next = handlers[kind](state, payload, entry)
   const { seq, observedAt, authorId, attachments } = entry
-  const event: PressEvent = { seq, at: observedAt, authorId, kind, attachments, ...tell[kind](payload, next) }
+  const clearance = clearanceTurn(state, next, kind)
+  const event: PressEvent = { seq, at: observedAt, authorId, kind, attachments, clearance, ...tell[kind](payload, next) }
   return { ...next, history: [...state.history, event] }
 }
 

@@ -28,6 +28,8 @@ export interface PressEvent {
   text: string
   mark: 'within' | 'stop' | 'plain' | 'under-way'
   proofTestId: string | null
+  /** What became of a clearance with it. */
+  clearance: 'ended' | 'held' | 'holds again' | null
   /** Photos and documents that its entry names. */
   attachments: readonly Attachment[]
 }

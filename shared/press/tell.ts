@@ -42,12 +42,12 @@ export const tell: Tellers = {
   }),
   'test-late-fact': (payload) => ({ text: `${payload.number}: ${payload.why}`, mark: 'stop', proofTestId: payload.proofTestId }),
   'test-ended': (payload) => ({ text: `${payload.number}: ${payload.why}`, mark: 'stop', proofTestId: payload.proofTestId }),
-  'instrument-recalled': (payload) => ({ text: `${payload.code} was found out of tolerance`, mark: 'stop', proofTestId: null }),
+  'instrument-recalled': (payload) => ({ text: `${payload.code} was found out of tolerance on ${payload.calibratedOn}`, mark: 'stop', proofTestId: null }),
   'clearance-given': (payload) => ({
     text: `Cleared up to ${payload.load.text} ${unitLabel(payload.load.unit, { plural: true })}`,
     mark: 'within',
     proofTestId: payload.proofTestId,
   }),
   'tag-taken-off': () => ({ ...PLAIN, text: 'Tag taken off the press' }),
-  withdrawn: (payload) => ({ text: `Withdrawn. ${payload.why}`, mark: 'stop', proofTestId: null }),
+  withdrawn: (payload) => ({ text: `Withdrawn by hand. ${payload.why}`, mark: 'stop', proofTestId: null }),
 }
