@@ -40,6 +40,10 @@ class Browser {
       viewport: { width: 1180, height: 820 },
       serviceWorkers: 'block',
     })
+    // A row half typed hides which one was entered last: it is left out, as nothing of it counts as read.
+    await this.context.addInitScript(() => {
+      for (const key of Object.keys(localStorage)) if (key.startsWith('quarterload.draft.')) localStorage.removeItem(key)
+    })
     const page = this.context.pages()[0] ?? (await this.context.newPage())
     if (cut) {
       await page.route('**/api/proof-tests/*/entries*', (route) => (route.request().method() === 'POST' ? route.abort() : route.continue()))
@@ -86,7 +90,7 @@ async function testAtItsDatum(staff: Staff): Promise<ApiRun> {
 /** The number of the last row that the screen shows as entered; 0 while it asks for the first. */
 async function lastShown(page: Page): Promise<number> {
   const heading = page.getByText(/First row: 0,|Zero the indicators, then mark/).first()
-  await heading.waitFor({ timeout: 20_000 })
+  await heading.waitFor({ timeout: 60_000 })
   const found = SHOWN.exec(await page.locator('body').innerText())
   return found ? Math.round(Number(found[1]) / 0.02) : 0
 }
@@ -113,7 +117,7 @@ async function enterRows(page: Page, run: RunScreen, from: number, shown: (row: 
     await page
       .getByText(`First row: 0, ${middleOf(row)}, 0.00, 0.00`)
       .first()
-      .waitFor({ timeout: 10_000 })
+      .waitFor({ timeout: 60_000 })
     shown(row)
   }
 }
