@@ -25,6 +25,7 @@ export default defineConfig({
           environment: 'jsdom',
           include: ['src/**/*.test.tsx'],
           setupFiles: [quiet, './tests/support/dom.ts'],
+          testTimeout: minutes / 2,
         },
       },
       {

@@ -33,11 +33,11 @@ function CriterionRow({ criterion }: { criterion: Criterion }) {
 
 /** Every criterion at its worst, with number, limit and verdict on one line, and what nobody measured. */
 export function CriteriaTable({ record }: { record: RecordView }) {
-  const { evaluation, opened } = record
+  const { evaluation, opened, broken } = record
   const unmeasured = opened.notMeasured
   return (
     <section>
-      <h2 className="pb-2 text-20">{criteriaHeading(evaluation)}</h2>
+      <h2 className="pb-2 text-20">{broken === null ? criteriaHeading(evaluation) : 'Worked out from altered entries'}</h2>
       <table className="w-full border-collapse">
         <thead className="max-tablet:sr-only">
           <tr className="border-b border-rule text-14 text-graphite">

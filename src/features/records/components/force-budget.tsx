@@ -22,16 +22,16 @@ export function ForceBudget({ record }: { record: RecordView }) {
             <th scope="col" className="py-1 font-normal">
               Source
             </th>
-            <th scope="col" className="py-1 text-right font-normal">
+            <th scope="col" className="py-1 pl-3 text-right font-normal">
               ± kN
             </th>
-            <th scope="col" className="py-1 text-right font-normal max-tablet:hidden">
+            <th scope="col" className="py-1 pl-3 text-right font-normal max-tablet:hidden">
               Distribution
             </th>
-            <th scope="col" className="py-1 text-right font-normal">
+            <th scope="col" className="py-1 pl-3 text-right font-normal">
               u, kN
             </th>
-            <th scope="col" className="py-1 text-right font-normal">
+            <th scope="col" className="py-1 pl-3 text-right font-normal">
               Share
             </th>
           </tr>
@@ -42,10 +42,10 @@ export function ForceBudget({ record }: { record: RecordView }) {
               <th scope="row" className="py-1 pr-3 text-left font-normal first-letter:uppercase">
                 {line.name}
               </th>
-              <td className="py-1 text-right">{line.value}</td>
-              <td className="py-1 text-right max-tablet:hidden">{line.distribution}</td>
-              <td className="py-1 text-right font-semibold">{line.u}</td>
-              <td className="py-1 text-right">{setPercent(line.share)}</td>
+              <td className="py-1 pl-3 text-right">{line.value}</td>
+              <td className="py-1 pl-3 text-right max-tablet:hidden">{line.distribution}</td>
+              <td className="py-1 pl-3 text-right font-semibold">{line.u}</td>
+              <td className="py-1 pl-3 text-right">{setPercent(line.share)}</td>
             </tr>
           ))}
         </tbody>

@@ -62,16 +62,21 @@ function lines(record: RecordView): string[] {
 
 /** What it came to, in one line that can be read from across the room, and what it rests on. */
 export function RecordResult({ record }: { record: RecordView }) {
-  const { state, evaluation, standing } = record
-  const colour = standing === 'rejected' || standing === 'stopped' ? 'text-stop-ink' : 'text-ink'
+  const { state, evaluation, standing, broken } = record
+  const headline = headlineOf(state, evaluation)
+  const isRed = broken !== null || standing === 'rejected' || standing === 'stopped'
   return (
     <section aria-label="Result" className="flex items-start gap-4 border-b border-hairline py-4 tablet:gap-6">
-      <Mark name={standingMark(standing)} size={64} className="hidden shrink-0 tablet:block desktop:h-24 desktop:w-24" />
+      <Mark
+        name={broken === null ? standingMark(standing) : 'stop'}
+        size={64}
+        className="hidden shrink-0 tablet:block desktop:h-24 desktop:w-24"
+      />
       <div className="min-w-0">
-        <p className={`text-26 font-semibold tablet:text-34 desktop:text-46 ${colour}`} data-part="headline">
-          {headlineOf(state, evaluation)}
+        <p className={`text-26 font-semibold tablet:text-34 desktop:text-46 ${isRed ? 'text-stop-ink' : 'text-ink'}`} data-part="headline">
+          {broken === null ? headline : <del className="decoration-2">{headline}</del>}
         </p>
-        {lines(record)
+        {(broken === null ? lines(record) : ['This is worked out from entries that were altered: it clears the press to no load.'])
           .filter((line) => line !== '')
           .map((line) => (
             <p key={line} className="mt-0.5 text-18">

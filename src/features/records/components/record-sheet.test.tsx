@@ -216,6 +216,11 @@ describe('a record that needs a second look', () => {
   test('says on red what the server found, prints no spreadsheet, and hands out the evidence', async () => {
     await show(recordedTest(), lead, { broken: { at: 12, why: 'Entry 12 does not match its hash.' } })
     expect(screen.getByRole('alert')).toHaveTextContent('This record was altered at entry 12')
+    const result = screen.getByRole('region', { name: 'Result' })
+    expect(within(result).getByText(/^Accepted/).tagName).toBe('DEL')
+    expect(result).toHaveTextContent('it clears the press to no load')
+    expect(result).not.toHaveTextContent('Cleared by')
+    expect(document.body).not.toHaveTextContent('Within every limit checked')
     expect(screen.queryByRole('link', { name: 'Download spreadsheet' })).toBeNull()
     expect(screen.getByRole('link', { name: 'Download ledger file' })).toBeInTheDocument()
   })
