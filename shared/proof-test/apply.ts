@@ -92,6 +92,16 @@ export function allRows(state: ProofTestState): Row[] {
   ])
 }
 
+/** Whether the press stands as it did when this row was read, so that it can be read again. */
+function standsAsRead(state: ProofTestState, entryId: string): boolean {
+  const isRow = (row: Row): boolean => row.entryId === entryId
+  if (state.loaded) return currentAttempt(state)?.attempt.rows.some(isRow) ?? false
+  const place = state.position
+  const climb = place && state.legs[place.leg]?.climbs[place.climb]
+  if (!climb) return false
+  return climb.set.some(isRow) || (climb.datum.some(isRow) && climb.stages.every((stage) => stage.attempts.length === 0))
+}
+
 function corrected(state: ProofTestState, payload: ProofTestPayload<'corrected'>, entry: LedgerEntry): ProofTestState {
   const row = allRows(state).find((candidate) => candidate.entryId === payload.entryId)
   const from = row?.readings.find((reading) => reading.sourceId === payload.sourceId)
@@ -128,6 +138,7 @@ function corrected(state: ProofTestState, payload: ProofTestPayload<'corrected'>
         at: entry.observedAt,
         readAgainByBoth: payload.readAgainByBoth,
         underLoad: state.loaded !== null,
+        atItsLoad: standsAsRead(state, row.entryId),
       },
     ],
   }

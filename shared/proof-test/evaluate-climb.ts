@@ -14,6 +14,7 @@ import {
   type Suggestion,
 } from './criteria'
 import { NET } from './deflection'
+import { withoutLifting } from './corrections'
 import type { Opened, Position } from './entries'
 import { predictFromBand } from './expected'
 import { figuresOf, lengthText, pointOf, predict, spread, type Criterion, type Point, type Prediction, type RowFigures } from './figures'
@@ -63,8 +64,44 @@ export function countingAttempt(attempts: readonly AttemptState[]): { attempt: A
   return last ? { attempt: last, index: attempts.length - 1 } : null
 }
 
-/** Everything that one climb's readings say, stage by stage, from the core alone. */
+/** From what may go on to what may not. */
+const GRAVITY = { within: 0, 'not-read': 0, wait: 1, undecided: 2, beyond: 3 } satisfies Record<Criterion['verdict'], number>
+const URGENCY = { 'not-read': 0, 'go-on': 0, hold: 1, wait: 2, stop: 3 } satisfies Record<Suggestion, number>
+
+function graver(criteria: readonly Criterion[], before: readonly Criterion[]): Criterion[] {
+  return criteria.map((criterion) => {
+    const was = before.find(({ id }) => id === criterion.id)
+    return was && GRAVITY[was.verdict] > GRAVITY[criterion.verdict] ? was : criterion
+  })
+}
+
+/**
+ * Everything that one climb's readings say, stage by stage, from the core alone. A correction that brings a value
+ * beyond its limit counts; one that would bring it back leaves the verdict as it was, unless lead and witness read it
+ * again at that load (DOMAIN §4).
+ */
 export function evaluateClimb(state: ProofTestState, legIndex: number, climbIndex: number): ClimbEvaluation | null {
+  const climb = evaluateReadings(state, legIndex, climbIndex)
+  const unlifted = climb && withoutLifting(state)
+  const before = unlifted && evaluateReadings(unlifted, legIndex, climbIndex)
+  if (!climb || !before) return climb
+  return {
+    ...climb,
+    stages: climb.stages.map((stage, index) => {
+      const was = before.stages[index]
+      if (!was) return stage
+      const suggestion = URGENCY[was.suggestion] > URGENCY[stage.suggestion] ? was.suggestion : stage.suggestion
+      return { ...stage, criteria: graver(stage.criteria, was.criteria), suggestion }
+    }),
+    set: climb.set && {
+      ...climb.set,
+      criteria: graver(climb.set.criteria, before.set?.criteria ?? []),
+      visible: climb.set.visible || (before.set?.visible ?? false),
+    },
+  }
+}
+
+function evaluateReadings(state: ProofTestState, legIndex: number, climbIndex: number): ClimbEvaluation | null {
   const opened = state.opened
   const climb: ClimbState | undefined = state.legs[legIndex]?.climbs[climbIndex]
   if (!opened || !climb) return null

@@ -35,6 +35,8 @@ export interface Correction {
   at: string
   readAgainByBoth: boolean
   underLoad: boolean
+  /** Made while the press stood as it did when the row was read: at that load, or released for a datum or a set. */
+  atItsLoad: boolean
 }
 
 /** One row of readings as it stands: `typed` as first entered, `readings` with corrections in. */
