@@ -1,11 +1,12 @@
 import type { ReactNode } from 'react'
 import type { Clearance } from '#shared/press/entries'
-import type { MayItBeUsed } from '#shared/press/state'
+import type { ClearanceState, MayItBeUsed, PressState } from '#shared/press/state'
 import { typedWords } from '#shared/instruments/words'
 import { formatForce, groupDigits, unitLabel, type TypedForce } from '#shared/units'
 import { HowLink } from '../../../../components/how-link'
 import { Mark } from '../../../../components/marks'
 import { longDate } from '../../../../lib/dates'
+import { Dashes } from './dashes'
 
 const loads = (count: number): string => (count === 1 ? 'one static load' : `${count} static loads`)
 const list = (words: readonly string[]): string => words.join(', ')
@@ -55,13 +56,37 @@ function ClearedTo({ clearance, rated }: { clearance: Clearance; rated: TypedFor
   )
 }
 
-function NotToBeUsed({ title, why, missing }: { title: string; why: string; missing: readonly string[] }) {
+const upTo = (clearance: Clearance): string => `${typedWords(clearance.load)}, until ${longDate(clearance.until)}`
+
+/** What a suspension waits for, and what comes of it; what a withdrawal took away. */
+function standing(clearance: ClearanceState, today: string): string | null {
+  if (clearance.is === 'withdrawn') {
+    const before = clearance.last ? ` Before that it was cleared up to ${upTo(clearance.last)}.` : ''
+    return `Withdrawn on ${longDate(clearance.at)}.${before}`
+  }
+  if (clearance.is !== 'suspended' || !clearance.clearance) return null
+  switch (clearance.until) {
+    case 'the joints are accepted':
+      return clearance.clearance.until < today
+        ? `Suspended until every joint is accepted again; its day, ${longDate(clearance.clearance.until)}, has gone by meanwhile, so it wants a proof test as well.`
+        : `Suspended until every joint is accepted again. Then it is cleared as before: up to ${upTo(clearance.clearance)}.`
+    case 'somebody looked into it':
+      return `Suspended until somebody has looked into it: test it again, or withdraw the clearance up to ${upTo(clearance.clearance)}.`
+    case 'the test is over':
+      return null
+  }
+}
+
+type NotToBeUsedProps = { title: string; why: string; standing: string | null; missing: readonly string[] }
+
+function NotToBeUsed({ title, why, standing: stands, missing }: NotToBeUsedProps) {
   return (
     <div className="flex items-start gap-5">
       <Mark name={title === 'Under test' ? 'under-way' : 'stop'} size={70} className="mt-1 shrink-0 max-tablet:size-14" />
       <div className="min-w-0">
         <p className="text-46 font-semibold tablet:text-54">{title}</p>
         <p className="text-20 font-semibold">{why}</p>
+        {stands !== null && <p className="mt-1 text-graphite">{stands}</p>}
         {missing.length > 0 && (
           <>
             <p className="mt-3 font-semibold">What is missing</p>
@@ -73,33 +98,26 @@ function NotToBeUsed({ title, why, missing }: { title: string; why: string; miss
   )
 }
 
-/** Sentences one under the other, each after a dash. */
-export function Dashes({ sentences }: { sentences: readonly string[] }) {
-  return (
-    <ul>
-      {sentences.map((sentence) => (
-        <li
-          key={sentence}
-          className="relative pl-[18px] before:absolute before:top-[11px] before:left-0 before:h-0.5 before:w-2.5 before:bg-ink"
-        >
-          {sentence}
-        </li>
-      ))}
-    </ul>
-  )
-}
+type AnswerProps = { answer: MayItBeUsed; state: Pick<PressState, 'clearance' | 'description'>; today: string }
 
 /** May it be used: the load with its unit, or what stands against it. Never a bare yes. */
-export function Answer({ answer, rated }: { answer: MayItBeUsed; rated: TypedForce | undefined }) {
+export function Answer({ answer, state, today }: AnswerProps) {
   switch (answer.answer) {
     case 'cleared':
-      return <ClearedTo clearance={answer.clearance} rated={rated} />
+      return <ClearedTo clearance={answer.clearance} rated={state.description?.ratedLoad} />
     case 'under test':
       return (
-        <NotToBeUsed title="Under test" why={answer.why} missing={['Nobody uses it before the test is concluded and countersigned.']} />
+        <NotToBeUsed
+          title="Under test"
+          why={answer.why}
+          standing={null}
+          missing={['Nobody uses it before the test is concluded and countersigned.']}
+        />
       )
     case 'do not use':
-      return <NotToBeUsed title="Do not use" why={answer.why} missing={answer.missing} />
+      return (
+        <NotToBeUsed title="Do not use" why={answer.why} standing={standing(state.clearance, today)} missing={answer.missing} />
+      )
   }
 }
 
@@ -113,9 +131,10 @@ export function EndsAtOnce({ load, buildPauseDays }: { load: TypedForce; buildPa
           'a weld, pin or member is changed or repaired',
           `it is loaded past ${typedWords(load)}, or knocked`,
           'a joint cracks, moves or leaks',
-          `it stands unused for ${buildPauseDays} days`,
+          'its ram or gauge is another one',
         ]}
       />
+      <p className="mt-1 text-graphite">It waits for its joints when it was moved, or stood unused for {buildPauseDays} days.</p>
     </>
   )
 }

@@ -1,4 +1,5 @@
-import type { PressEvent } from '#shared/press/state'
+import { typedWords } from '#shared/instruments/words'
+import type { PressEvent, PressState } from '#shared/press/state'
 import { AttachmentStrip } from '../../../../components/attachments/attachment-strip'
 import { TextLink } from '../../../../components/button'
 import { Mark } from '../../../../components/marks'
@@ -6,6 +7,12 @@ import type { Files } from '../../../../lib/attachment-held'
 import type { Placed } from '../../../../lib/attachment-places'
 import { dateAndTime, shortDate } from '../../../../lib/dates'
 import { paths } from '../../../../paths'
+
+const TURNS: Record<NonNullable<PressEvent['clearance']>, string> = {
+  ended: 'The clearance ended with it.',
+  held: 'The clearance was suspended with it.',
+  'holds again': 'The clearance held again from then on.',
+}
 
 const MARKS = { within: 'within', stop: 'stop', 'under-way': 'under-way' } as const
 
@@ -40,6 +47,7 @@ export function History({ events, people, photos, files }: HistoryProps) {
               {shortDate(event.at)}
               {people[event.authorId] !== undefined && `, ${people[event.authorId]}`}
             </p>
+            {event.clearance !== null && <p className="text-14 font-medium max-desktop:text-16">{TURNS[event.clearance]}</p>}
             <AttachmentStrip
               className="mt-2"
               files={files}
@@ -68,12 +76,33 @@ export function gathered(events: readonly PressEvent[]): (PressEvent & { seqs: r
       event.mark === 'plain' &&
       last?.kind === event.kind &&
       last.mark === 'plain' &&
+      last.clearance === null &&
       last.proofTestId === event.proofTestId
     if (last && same) {
       last.seqs.push(event.seq)
       last.text = `${last.seqs.length} joints examined and accepted`
       last.at = event.at
+      last.clearance = event.clearance
     } else told.push({ ...event, seqs: [event.seq] })
   }
   return told
+}
+
+/** What happened, with the day on which a clearance ran out: nobody enters that, and it ends the clearance all the same. */
+export function toldUntil(state: Pick<PressState, 'history' | 'clearance' | 'headSeq'>, today: string): PressEvent[] {
+  const { history, clearance, headSeq } = state
+  if (clearance.is !== 'cleared' || clearance.clearance.until >= today) return history
+  const { until, load } = clearance.clearance
+  const ranOut: PressEvent = {
+    seq: headSeq + 1,
+    at: until,
+    authorId: '',
+    kind: 'ran-out',
+    text: `The clearance up to ${typedWords(load)} ran out`,
+    mark: 'stop',
+    proofTestId: null,
+    clearance: null,
+    attachments: [],
+  }
+  return [...history, ranOut]
 }

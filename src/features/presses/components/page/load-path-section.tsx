@@ -10,7 +10,7 @@ import { Facts } from '../../../../components/ruled-list'
 import { CheckBars, NotChecked } from '../../../../components/structure/check-bars'
 import { setPercent } from '../../../../components/typeset'
 import { capital } from '../../../../lib/words'
-import { Dashes } from './answer'
+import { Dashes } from './dashes'
 
 type LoadPathSectionProps = {
   description: PressDescription

@@ -90,7 +90,8 @@ describe('a press’s page', { timeout: 20_000 }, () => {
   beforeEach(() => {
     localStorage.clear()
     sent = []
-    vi.stubGlobal('fetch', (_url: string, { body }: { body: string }) => {
+    vi.stubGlobal('fetch', (url: string, { body }: { body: string }) => {
+      if (url.endsWith('/history')) return Promise.resolve(new Response(JSON.stringify({ climbs: [] })))
       const request = JSON.parse(body) as AppendRequest
       sent.push(request)
       const results = request.entries.map((entry) => ({

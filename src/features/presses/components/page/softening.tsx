@@ -1,0 +1,152 @@
+import { useQuery } from '@tanstack/react-query'
+import { lazy, Suspense, useState } from 'react'
+import type { ClimbHistory } from '#shared/api/press-history'
+import type { LengthUnit } from '#shared/units'
+import { ButtonLink, TextLink } from '../../../../components/button'
+import { Mark } from '../../../../components/marks'
+import { NothingHere } from '../../../../components/nothing-here'
+import { Section } from '../../../../components/page'
+import { RadioRow } from '../../../../components/radio-row'
+import { SkeletonRows } from '../../../../components/skeleton'
+import { shortDate } from '../../../../lib/dates'
+import { useCan, useShop } from '../../../../lib/here'
+import { pressHistoryQuery } from '../../../../lib/press-history'
+import { sayWhatFailed } from '../../../../lib/problem'
+import { paths } from '../../../../paths'
+import { changeWords, firstClimbs, limitWords, rowOf, seriesOf, stiffnessChange, type Series } from './softening-figures'
+
+// The drawing library is a chunk of its own, fetched when somebody scrolls to a press that has tests.
+const SofteningCharts = lazy(() => import('./softening-charts').then((module) => ({ default: module.SofteningCharts })))
+
+const RESULT: Record<NonNullable<ClimbHistory['result']>, string> = { accepted: 'accepted', rejected: 'rejected', abandoned: 'abandoned' }
+
+function Table({ series, length }: { series: Series; length: LengthUnit }) {
+  return (
+    <div className="mt-3 overflow-x-auto">
+      <table className="w-full min-w-[36rem] text-left">
+        <caption className="sr-only">
+          {series.label}: {series.climbs[0]?.of}
+        </caption>
+        <thead>
+          <tr className="border-y border-ink text-14 text-graphite max-desktop:text-16">
+            <th scope="col" className="py-1.5 pr-3 font-normal">
+              Test
+            </th>
+            <th scope="col" className="pr-3 font-normal">
+              Stiffness
+            </th>
+            <th scope="col" className="pr-3 font-normal">
+              Permanent set
+            </th>
+            <th scope="col" className="font-normal">
+              Pressure loss
+            </th>
+          </tr>
+        </thead>
+        <tbody>
+          {series.climbs.map((climb) => {
+            const row = rowOf(climb, length)
+            return (
+              <tr key={`${climb.proofTestId} ${climb.climb}`} className="border-b border-hairline align-top">
+                <th scope="row" className="py-2 pr-3 font-medium">
+                  <TextLink to={paths.proofTest.href(climb.proofTestId)}>{climb.number}</TextLink>
+                  {climb.climb > 0 && <span className="font-normal">, repeat climb</span>}
+                  <span className="block font-normal text-graphite">
+                    {shortDate(climb.on)}
+                    {climb.result && `, ${RESULT[climb.result]}`}
+                    {climb.repeats !== null && `, repeats ${climb.repeats}`}
+                  </span>
+                </th>
+                <td className="py-2 pr-3">{row.stiffness}</td>
+                <td className="py-2 pr-3">{row.set}</td>
+                <td className="py-2">{row.loss}</td>
+              </tr>
+            )
+          })}
+        </tbody>
+      </table>
+    </div>
+  )
+}
+
+function InWords({ climbs }: { climbs: readonly ClimbHistory[] }) {
+  const change = stiffnessChange(climbs)
+  return (
+    <div className="flex items-start gap-3">
+      <Mark
+        name={change === null ? 'not-read' : change.says === 'softer' ? 'beyond' : change.says === 'stiffer' ? 'within' : 'undecided'}
+        size={26}
+        className="mt-0.5 shrink-0"
+      />
+      <div className="max-w-prose">
+        <p className="text-18 font-semibold">
+          {change === null ? 'One line only: the next test tells whether it is getting softer.' : changeWords(change)}
+        </p>
+        <p className="text-graphite">
+          {limitWords(climbs).join(' ')} The ± tells how the readings scatter about their lines; another gauge or ram adds its own.
+        </p>
+      </div>
+    </div>
+  )
+}
+
+function Nothing({ pressId }: { pressId: string }) {
+  const can = useCan()
+  const shop = useShop()
+  return (
+    <NothingHere
+      what="No test of this press has been read yet."
+      next="Each proof test adds its stiffness, its set and its pressure loss here, and they are compared with the first."
+      action={
+        can('proof-test:open') && (
+          <ButtonLink size="line" to={paths.planProofTest.href({ shop: shop.id, press: pressId })}>
+            Plan a proof test
+          </ButtonLink>
+        )
+      }
+    />
+  )
+}
+
+function Shown({ series }: { series: readonly Series[] }) {
+  const { lengthUnit } = useShop()
+  const [key, setKey] = useState(series[0]?.key)
+  const shown = series.find((one) => one.key === key) ?? series[0]
+  if (!shown) return null
+  const climbs = firstClimbs(shown)
+  return (
+    <>
+      {series.length > 1 && (
+        <RadioRow
+          label="Position"
+          name="leg"
+          className="mb-4"
+          choices={series.map((one) => ({ value: one.key, label: one.label }))}
+          value={shown.key}
+          onChange={(event) => setKey(event.target.value)}
+        />
+      )}
+      <InWords climbs={climbs} />
+      <div className="ground-dye mt-3 max-tablet:-mx-4">
+        <Suspense fallback={<div className="h-[34rem]" />}>
+          <SofteningCharts climbs={climbs} lengthUnit={lengthUnit} />
+        </Suspense>
+      </div>
+      <Table series={shown} length={lengthUnit} />
+    </>
+  )
+}
+
+/** Stiffness, set and pressure loss of one press over all its tests: is it getting softer? */
+export function Softening({ pressId, className }: { pressId: string; className: string }) {
+  const history = useQuery(pressHistoryQuery(pressId))
+  const climbs = history.data?.climbs
+  return (
+    <Section title="Is it getting softer?" className={className}>
+      {climbs === undefined &&
+        (history.error ? <p className="text-graphite">{sayWhatFailed(history.error)}</p> : <SkeletonRows rows={3} />)}
+      {climbs?.length === 0 && <Nothing pressId={pressId} />}
+      {climbs !== undefined && climbs.length > 0 && <Shown series={seriesOf(climbs)} />}
+    </Section>
+  )
+}
