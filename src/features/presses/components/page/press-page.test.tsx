@@ -118,6 +118,16 @@ describe('a press’s page', { timeout: 20_000 }, () => {
     expect(page).not.toMatch(/\b(yes|safe|approved)\b/i)
   })
 
+  it('hands out its ledger as a file beside what happened, but not to the crew', () => {
+    show(stateOf(inDate))
+    expect(screen.getByRole('link', { name: 'Download ledger file' })).toHaveAttribute('href', `/api/presses/${ids.press}/ledger.json`)
+    expect(screen.getByRole('link', { name: 'Check a ledger file' })).toHaveAttribute('href', '/check')
+    document.body.replaceChildren()
+    show(stateOf(inDate), 'crew')
+    expect(screen.getByText('Until 1 January 2999', { exact: false })).toBeInTheDocument()
+    expect(screen.queryByRole('link', { name: 'Download ledger file' })).toBeNull()
+  })
+
   it('says do not use, why, and which joints are missing', () => {
     show(stateOf(inDate, { kind: 'changed', payload: { change: 'repair', jointIds: [], why: 'Hose changed' } }))
     expect(screen.getByText('Do not use')).toBeInTheDocument()
