@@ -92,6 +92,11 @@ export function createApp(context: AppContext, client?: (app: Express) => void):
   app.disable('x-powered-by')
   app.set('trust proxy', context.config.trustProxy)
   app.use(securityHeaders(context.config))
+  // A tag's code is for whoever stands at the press, not for a search engine.
+  app.use(['/tag', '/api/tags'], (_request, response, next) => {
+    response.set('X-Robots-Tag', 'noindex, nofollow')
+    next()
+  })
   app.use('/api', api(context))
   client?.(app)
   app.use(unknownEndpoint)

@@ -7,3 +7,11 @@ export const CAUTIONS: readonly string[] = [
   'Never above the lowest rating in the train.',
   'Release first, look after.',
 ]
+
+/** The same for where there is little room: on a press's tag. */
+export const SHORT_CAUTIONS: readonly string[] = [
+  'Never above the lowest rating in the train.',
+  'Nobody in line with pins, ram or tooling, no hand near a leak.',
+  'Says nothing of fatigue, cold, or faces nobody examined.',
+  'An aid, not a design approval: local law and codes come first.',
+]

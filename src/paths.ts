@@ -28,11 +28,17 @@ export const paths = {
   newPress: list('/presses/new'),
   press: one('/presses', 'pressId'),
   editPress: one('/presses', 'pressId', '/edit'),
+  pressTag: one('/presses', 'pressId', '/tag'),
 
   instruments: list('/instruments'),
   newInstrument: list('/instruments/new'),
   instrument: one('/instruments', 'instrumentId'),
   editInstrument: one('/instruments', 'instrumentId', '/edit'),
+
+  tooling: list('/tooling'),
+  newTool: list('/tooling/new'),
+  tool: one('/tooling', 'toolingId'),
+  editTool: one('/tooling', 'toolingId', '/edit'),
 
   protocols: list('/protocols'),
   newProtocol: list('/protocols/new'),
@@ -44,6 +50,8 @@ export const paths = {
   proofTest: one('/proof-tests', 'proofTestId'),
   runProofTest: one('/proof-tests', 'proofTestId', '/run'),
   attendProofTest: one('/proof-tests', 'proofTestId', '/attend'),
+
+  calendar: list('/calendar'),
 
   people: list('/people'),
   settings: list('/settings'),
@@ -61,4 +69,6 @@ export const paths = {
   },
   openShop: { pattern: '/open-shop', href: () => '/open-shop' },
   checkRecord: { pattern: '/check', href: () => '/check' },
+  /** What the QR code of a press's tag leads to, for whoever scans it. */
+  publicTag: one('/tag', 'code'),
 } as const

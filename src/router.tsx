@@ -10,6 +10,7 @@ const openScreens: RouteObject[] = [
   { path: paths.signIn.pattern, lazy: () => import('./routes/sign-in') },
   { path: paths.openShop.pattern, lazy: () => import('./routes/open-shop') },
   { path: paths.checkRecord.pattern, lazy: () => import('./routes/check') },
+  { path: paths.publicTag.pattern, lazy: () => import('./routes/public-tag') },
 ]
 
 /** Each screen is a chunk of its own, fetched when it is opened. */
@@ -19,6 +20,10 @@ const signedInScreens: RouteObject[] = [
   { path: paths.newInstrument.pattern, lazy: () => import('./routes/instrument-form') },
   { path: paths.instrument.pattern, lazy: () => import('./routes/instrument') },
   { path: paths.editInstrument.pattern, lazy: () => import('./routes/instrument-form') },
+  { path: paths.tooling.pattern, lazy: () => import('./routes/tooling') },
+  { path: paths.newTool.pattern, lazy: () => import('./routes/tooling-form') },
+  { path: paths.tool.pattern, lazy: () => import('./routes/tooling-piece') },
+  { path: paths.editTool.pattern, lazy: () => import('./routes/tooling-form') },
   { path: paths.protocols.pattern, lazy: () => import('./routes/protocols') },
   { path: paths.newProtocol.pattern, lazy: () => import('./routes/protocol-form') },
   { path: paths.protocol.pattern, lazy: () => import('./routes/protocol') },
@@ -27,6 +32,8 @@ const signedInScreens: RouteObject[] = [
   { path: paths.newPress.pattern, lazy: () => import('./routes/press-new') },
   { path: paths.press.pattern, lazy: () => import('./routes/press') },
   { path: paths.editPress.pattern, lazy: () => import('./routes/press-edit') },
+  { path: paths.pressTag.pattern, lazy: () => import('./routes/press-tag') },
+  { path: paths.calendar.pattern, lazy: () => import('./routes/calendar') },
   { path: paths.proofTest.pattern, lazy: () => import('./routes/proof-test-record') },
   { path: paths.planProofTest.pattern, lazy: () => import('./routes/plan-proof-test') },
   { path: paths.proofTests.pattern, lazy: () => import('./routes/proof-tests') },

@@ -10,17 +10,33 @@ const at = (label: string, root: string): Destination => ({
   matches: root === '/' ? (pathname) => pathname === '/' : under(root),
 })
 
-const today = at('Today', paths.today.pattern)
+// The calendar is Today's scale in full, and has no cell of its own.
+const today: Destination = {
+  ...at('Today', paths.today.pattern),
+  matches: (pathname) => pathname === paths.today.pattern || under(paths.calendar.pattern)(pathname),
+}
 const presses = at('Presses', paths.presses.pattern)
 const instruments = at('Instruments', paths.instruments.pattern)
+const tooling = at('Tooling', paths.tooling.pattern)
+const calendar = at('Calendar', paths.calendar.pattern)
 const protocols = at('Protocols', paths.protocols.pattern)
 const proofTests = at('Proof tests', paths.proofTests.pattern)
 const people = at('People', paths.people.pattern)
 
 /** The cells of the navigation on tablet and desktop. */
-export const destinations: readonly Destination[] = [today, presses, instruments, protocols, proofTests, people]
+export const destinations: readonly Destination[] = [today, presses, instruments, tooling, protocols, proofTests, people]
 
-const elsewhere = [paths.more, paths.instruments, paths.protocols, paths.people, paths.settings, paths.account, paths.thisDevice, paths.help]
+const elsewhere = [
+  paths.more,
+  paths.instruments,
+  paths.tooling,
+  paths.protocols,
+  paths.people,
+  paths.settings,
+  paths.account,
+  paths.thisDevice,
+  paths.help,
+]
 
 /** The four cells at the foot of the phone; the fourth stands for all the rest. */
 export const phoneDestinations: readonly Destination[] = [
@@ -31,4 +47,4 @@ export const phoneDestinations: readonly Destination[] = [
 ]
 
 /** What the phone's "More" leads to. */
-export const moreDestinations: readonly Destination[] = [instruments, protocols, people]
+export const moreDestinations: readonly Destination[] = [instruments, tooling, protocols, people, calendar]
