@@ -16,16 +16,17 @@ interface Slip {
   source?: string
   text: string
   both?: boolean
+  unit?: 'mm' | 'psi'
 }
 
 /** The state with one more correction, as the ledger's next entry. */
-function corrected(state: ProofTestState, { row, source = ids.middle, text, both = true }: Slip): ProofTestState {
+function corrected(state: ProofTestState, { row, source = ids.middle, text, both = true, unit = 'mm' }: Slip): ProofTestState {
   const entry = {
     id: `${row.slice(0, -2)}${state.headSeq + 10}`,
     seq: state.headSeq + 1,
     kind: 'corrected',
     v: 1,
-    payload: { entryId: row, sourceId: source, text, unit: 'mm', why: 'Digits swapped.', readAgainByBoth: both },
+    payload: { entryId: row, sourceId: source, text, unit, why: 'Digits swapped.', readAgainByBoth: both },
     authorId: ids.lead,
     observedAt: '2026-09-14T11:00:00.000Z',
     attachments: [],
@@ -52,8 +53,8 @@ const isStartOf50 = ({ kind, payload }: LedgerEntry): boolean =>
   (payload['at'] as Position).stage === 1 &&
   (payload['at'] as Position).climb === 0
 
-function withMiddle(entry: LedgerEntry, text: string): LedgerEntry {
-  const readings = (entry.payload['readings'] as Reading[]).map((one) => (one.sourceId === ids.middle ? { ...one, text } : one))
+function withReading(entry: LedgerEntry, source: string, text: string): LedgerEntry {
+  const readings = (entry.payload['readings'] as Reading[]).map((one) => (one.sourceId === source ? { ...one, text } : one))
   return { ...entry, payload: { ...entry.payload, readings } }
 }
 
@@ -123,7 +124,9 @@ describe('a correction that would bring a reading back within its limit', () => 
   it('does not lift it at another load: 50 % is not read again at 75 %', () => {
     const { entries, id } = recordedTest()
     const at75 = entries.filter(({ kind }) => kind === 'row-read')[5]?.seq ?? 0
-    const typed = entries.filter(({ seq }) => seq < at75).map((entry) => (isStartOf50(entry) ? withMiddle(entry, '1.40') : entry))
+    const typed = entries
+      .filter(({ seq }) => seq < at75)
+      .map((entry) => (isStartOf50(entry) ? withReading(entry, ids.middle, '1.40') : entry))
     const state = typed.reduce(applyProofTest, emptyProofTest(id))
     expect(state.position?.stage).toBe(2)
     expect(softening(state, 1)).toBe('beyond')
@@ -143,6 +146,24 @@ describe('a correction that would bring a reading back within its limit', () => 
     expect(verdict(beyond)).toBe('beyond')
     expect(verdict(corrected(beyond, { row: set, text: read, both: false }))).toBe('beyond')
     expect(verdict(corrected(beyond, { row: set, text: read }))).toBe('within')
+  })
+})
+
+describe('a correction of the gauge at full load', () => {
+  it('raises no clearance after release, and lowers it', () => {
+    const { entries, id, state } = recordedTest({ until: 'concluded' })
+    const full = state.legs[0]?.climbs[0]?.stages[3]?.attempts[0]?.rows.at(-1)
+    const row = full?.entryId ?? ''
+    const load = (of: ProofTestState): number => evaluateTest(of).clearance?.load ?? 0
+    const gauge = { row, source: ids.gauge, unit: 'psi' as const }
+    expect(load(corrected(state, { ...gauge, text: '7000' }))).toBeLessThan(load(state))
+
+    const typedLow = entries.map((entry) => (entry.id === row ? withReading(entry, ids.gauge, '7000') : entry))
+    const low = typedLow.reduce(applyProofTest, emptyProofTest(id))
+    expect(load(low)).toBeLessThan(load(state))
+    const raised = corrected(low, { ...gauge, text: '7750' })
+    expect(raised.corrections.at(-1)).toMatchObject({ readAgainByBoth: true, atItsLoad: false })
+    expect(load(raised)).toBe(load(low))
   })
 })
 

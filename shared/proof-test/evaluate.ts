@@ -3,6 +3,7 @@ import { ramInput } from '../press/ratings'
 import type { StoredEnergy } from '../structure/stored-energy'
 import { decimalsOf, FORCE_DECIMALS, toSI, toUnit, type ForceUnit, type PressureUnit } from '../units'
 import { evaluateClimb, type ClimbEvaluation, type Criterion, type StageEvaluation } from './evaluate-climb'
+import { withoutLifting } from './corrections'
 import { energyAt } from './energy'
 import type { Opened } from './entries'
 import { leadInstrument, stageForce } from './force'
@@ -152,6 +153,15 @@ function clearanceFigures(state: ProofTestState, stages: readonly StageEvaluatio
   return { lowestForce: lowest.force, U: lowest.U, load, text, unit, gaugePressure }
 }
 
+/** A correction that may lift no stop raises no clearance either: the lower one of those with it and without it. */
+function lowerClearance(state: ProofTestState, stages: readonly StageEvaluation[]): ClearanceFigures | null {
+  const given = clearanceFigures(state, stages)
+  const unlifted = given && withoutLifting(state)
+  if (!unlifted) return given
+  const without = clearanceFigures(unlifted, everyStage(unlifted.legs.flatMap((_leg, index) => evaluateLeg(unlifted, index))))
+  return without === null || without.load < given.load ? without : given
+}
+
 function jointsAfter(state: ProofTestState): Criterion {
   const accepted = state.joints.filter((joint) => joint.after?.result === 'accepted').length
   const rejected = state.joints.filter((joint) => joint.after?.result === 'rejected').length
@@ -205,7 +215,7 @@ export function evaluateTest(state: ProofTestState): TestEvaluation {
     start?.lead && start.force
       ? energyAt(state, { force: start.force.force, opening: start.lead.deflection, pressure: start.force.pressure })
       : null
-  return { climbs, criteria, against: standsAgainst(state, opened, legs, criteria), clearance: clearanceFigures(state, stages), energy }
+  return { climbs, criteria, against: standsAgainst(state, opened, legs, criteria), clearance: lowerClearance(state, stages), energy }
 }
 
 function standsAgainst(
