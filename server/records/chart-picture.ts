@@ -19,6 +19,10 @@ const inks: Record<InkName, string> = {
   'stop-text': '#ffb8b0',
   'sound-line': '#9be3c3',
   'on-stop': '#ffffff',
+  'on-chalk': '#0b1733',
+  'sound-fill': '#0f5c46',
+  'tack-line': '#f6de5a',
+  'reject-line': '#ff8a80',
 }
 
 const paint = (ink: InkName | null): string => (ink === null ? 'none' : inks[ink])
@@ -32,7 +36,8 @@ function svgOf(item: DrawingItem): string {
   const d = textPath(item)
   const halo =
     item.halo === null ? '' : `<path d="${d}" fill="none" stroke="${paint(item.halo)}" stroke-width="5" stroke-linejoin="round"/>`
-  return `${halo}<path d="${d}" fill="${paint(item.ink)}"/>`
+  const letters = `${halo}<path d="${d}" fill="${paint(item.ink)}"/>`
+  return item.turned === undefined ? letters : `<g transform="rotate(${item.turned} ${item.x} ${item.y})">${letters}</g>`
 }
 
 /** A drawing as SVG without any text element: it looks the same wherever it is rendered. */

@@ -15,6 +15,10 @@ export type InkName =
   | 'stop-text'
   | 'sound-line'
   | 'on-stop'
+  | 'on-chalk'
+  | 'sound-fill'
+  | 'tack-line'
+  | 'reject-line'
 
 export interface Point {
   x: number
@@ -45,6 +49,8 @@ export interface TextItem {
   ink: InkName
   /** A stroke of the ground's colour under the letters, so that lines break where words lie on them. */
   halo: InkName | null
+  /** Turned about x, y (degrees, clockwise). */
+  turned?: number
 }
 
 export type DrawingItem = PathItem | TextItem

@@ -1,6 +1,6 @@
 import type { ReactElement, SVGProps } from 'react'
 
-export { JointBalloon, JointBalloonShape, jointStateWord } from './joint-balloon'
+export { JointBalloon, jointStateWord } from './joint-balloon'
 export type { JointMarkState } from './joint-balloon'
 export { ProductMark } from './product-mark'
 

@@ -1,16 +1,15 @@
-import type { ReactElement } from 'react'
-import type { Drawing, DrawingItem, InkName } from '#shared/chart/drawing'
+import { memo, type ReactElement } from 'react'
+import type { Drawing, DrawingItem } from '#shared/chart/drawing'
 import { CONDENSED } from '../typeset'
+import { inkOn, type Ground } from './inks'
 
-const paint = (ink: InkName | null): string => (ink === null ? 'none' : `var(--${ink})`)
-
-function Item({ item }: { item: DrawingItem }): ReactElement {
+function Item({ item, ground }: { item: DrawingItem; ground: Ground }): ReactElement {
   if (item.kind === 'path') {
     return (
       <path
         d={item.d}
-        fill={paint(item.fill)}
-        stroke={paint(item.stroke)}
+        fill={inkOn(ground, item.fill)}
+        stroke={inkOn(ground, item.stroke)}
         strokeWidth={item.width}
         strokeDasharray={item.dash}
         opacity={item.opacity}
@@ -25,8 +24,9 @@ function Item({ item }: { item: DrawingItem }): ReactElement {
       fontWeight={item.weight}
       fontFamily={item.condensed ? CONDENSED : undefined}
       textAnchor={item.anchor}
-      fill={paint(item.ink)}
-      stroke={paint(item.halo)}
+      transform={item.turned === undefined ? undefined : `rotate(${item.turned} ${item.x} ${item.y})`}
+      fill={inkOn(ground, item.ink)}
+      stroke={inkOn(ground, item.halo)}
       strokeWidth={item.halo === null ? 0 : 5}
       strokeLinejoin="round"
       paintOrder="stroke"
@@ -36,8 +36,32 @@ function Item({ item }: { item: DrawingItem }): ReactElement {
   )
 }
 
+/** Items of a drawing inside somebody's svg. */
+export const DrawingItems = memo(function DrawingItems({
+  items,
+  ground = 'dye',
+}: {
+  items: readonly DrawingItem[]
+  ground?: Ground
+}): ReactElement {
+  return (
+    <>
+      {items.map((item, index) => (
+        <Item key={index} item={item} ground={ground} />
+      ))}
+    </>
+  )
+})
+
+interface DrawingViewProps {
+  drawing: Drawing
+  label: string
+  ground?: Ground
+  className?: string
+}
+
 /** Paints a drawing that shared code laid out. `label` is all that someone who can't see it gets: make it say the facts. */
-export function DrawingView({ drawing, label }: { drawing: Drawing; label: string }): ReactElement {
+export function DrawingView({ drawing, label, ground = 'dye', className = 'block' }: DrawingViewProps): ReactElement {
   return (
     <svg
       width={drawing.width}
@@ -45,11 +69,9 @@ export function DrawingView({ drawing, label }: { drawing: Drawing; label: strin
       viewBox={`0 0 ${drawing.width} ${drawing.height}`}
       role="img"
       aria-label={label}
-      className="block"
+      className={className}
     >
-      {drawing.items.map((item, index) => (
-        <Item key={index} item={item} />
-      ))}
+      <DrawingItems items={drawing.items} ground={ground} />
     </svg>
   )
 }

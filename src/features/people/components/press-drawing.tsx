@@ -1,4 +1,5 @@
-import { JointBalloonShape, type JointMarkState } from '../../../components/joint-balloon'
+import { balloonItems, type JointMarkState } from '#shared/drawing/balloon-items'
+import { DrawingItems } from '../../../components/instruments/drawing-view'
 import { CONDENSED } from '../../../components/typeset'
 
 const uprights = [184, 448] as const
@@ -172,7 +173,7 @@ export function PressDrawing({ className }: { className?: string }) {
         ))}
       </g>
       {balloons.map(({ number, state, at }) => (
-        <JointBalloonShape key={number} number={number} state={state} x={at[0]} y={at[1]} size={36} tone="dye" />
+        <DrawingItems key={number} items={balloonItems({ number, state, at: { x: at[0], y: at[1] }, size: 36 })} />
       ))}
     </svg>
   )

@@ -1,8 +1,4 @@
-import type { ReactElement } from 'react'
-import type { Elevation } from './balloon-layout'
-import { Across, CentreLine, Ground, Hair, millimetres, Outline, RamStack, Upright } from './drafting'
-import { ramHeights } from './portal-geometry'
-import type { Box, PressDimensions } from './portal-geometry'
+import { ramHeights, sheetSides, type Box, type Elevation, type PressDimensions } from './frame'
 
 /** A C-frame from the side: the ram's axis left, the column right (px). */
 export interface CFrame {
@@ -26,12 +22,9 @@ const TYPICAL = { height: 1.2, throat: 0.3 }
 
 /** Lays out the side elevation inside a box (px), to scale as far as the box allows. */
 export function cFrameOf(dimensions: PressDimensions, box: Box): CFrame {
-  const small = box.width < 440
-  const dimensionX = small ? 14 : 36
-  const laneLeft = dimensionX + (small ? 34 : 40)
-  const laneRight = box.width - (small ? 30 : 56)
-  const from = laneLeft + 21 + (small ? 8 : 33)
-  const to = laneRight - 21 - (small ? 8 : 33)
+  const { dimensionX, laneLeft, laneRight, clear } = sheetSides(box)
+  const from = laneLeft + 21 + clear
+  const to = laneRight - 21 - clear
   const height = dimensions.height ?? TYPICAL.height
   const throat = dimensions.throat ?? dimensions.width ?? TYPICAL.throat
   const floor = Math.round(box.height - 24)
@@ -71,7 +64,18 @@ export function cFrameElevation(frame: CFrame): Elevation {
   const inner = Math.round((axis + span * 0.13 + column) / 2)
   return {
     lanes: { 'outer-left': frame.laneLeft, 'outer-right': frame.laneRight, 'inner-left': inner, 'inner-right': inner },
-    from: Math.max(24, top - 4),
+    parts: {
+      head: { x: (axis + column) / 2, y: (top + headBottom) / 2 },
+      'upright-left': { x: (column + back) / 2, y: (headBottom + bedTop) / 2 },
+      seat: { x: axis, y: headBottom + 10 },
+      ram: { x: axis, y: (ram.seat + ram.cylinder) / 2 },
+      adaptor: { x: axis, y: (ram.rod + ram.adaptor) / 2 },
+      bed: { x: (axis + column) / 2, y: (bedTop + bedBottom) / 2 },
+      'stiffener-left': { x: nose + 18, y: (bedTop + bedBottom) / 2 },
+      'stiffener-right': { x: column + 14, y: (headBottom + bedTop) / 2 },
+      'foot-left': { x: (nose + back) / 2, y: floor - 8 },
+    },
+    from: 30,
     to: floor - 26,
     anchors: {
       'head-left': { tip: { x: nose + 2, y: top + 24 }, lane: 'outer-left', y: top + 8 },
@@ -93,39 +97,4 @@ export function cFrameElevation(frame: CFrame): Elevation {
       'head-left': { at: { x: nose + 12, y: headBottom + 9 }, letter: 'left' },
     },
   }
-}
-
-/** The plate of the C with its rounded throat, its web, and its foot. */
-export function CFrameDrawing({ frame, dimensions }: { frame: CFrame; dimensions: PressDimensions }): ReactElement {
-  const { axis, nose, column, back, top, floor, headBottom, bedTop, bedBottom, box } = frame
-  const r = Math.min(22, (bedTop - headBottom) / 6)
-  const height = millimetres(dimensions.height)
-  const throat = millimetres(dimensions.throat ?? null)
-  const outline = [
-    `M${nose} ${top + 14}L${nose + 14} ${top}H${back}V${floor - 10}H${column - 10}V${bedBottom + 26}`,
-    `L${column - 36} ${bedBottom}H${nose}V${bedTop}H${column - r}A${r} ${r} 0 0 0 ${column} ${bedTop - r}`,
-    `V${headBottom + r}A${r} ${r} 0 0 0 ${column - r} ${headBottom}H${nose}Z`,
-  ].join('')
-  return (
-    <g>
-      <Ground from={Math.max(4, nose - 44)} to={Math.min(box.width - 4, back + 44)} y={floor} />
-      <Outline>
-        <path d={outline} fill="var(--dye)" />
-        <rect x={nose + 16} y={bedTop + 5} width={4} height={bedBottom - bedTop - 10} strokeWidth={1.2} />
-        <rect x={nose + 6} y={floor - 10} width={back - nose + 10} height={10} fill="var(--dye)" />
-      </Outline>
-      <Hair
-        d={[
-          `M${nose} ${headBottom - 5}H${column - r}A${r + 5} ${r + 5} 0 0 1 ${column + 5} ${headBottom + r}`,
-          `V${bedTop - r}A${r + 5} ${r + 5} 0 0 1 ${column - r} ${bedTop + 5}H${nose}`,
-          `M${back - 6} ${top}V${floor - 10}M${nose} ${bedBottom - 5}H${column - 38}`,
-        ].join('')}
-      />
-      <RamStack cx={axis} span={frame.span} top={headBottom} bottom={bedTop} heights={ramHeights(frame)} />
-      <CentreLine d={`M${axis} ${top - 24}V${floor + 12}`} strong />
-      <CentreLine d={`M${(column + back) / 2} ${top - 14}V${floor + 12}`} />
-      {height !== null && <Upright x={frame.dimensionX} top={top} bottom={floor} reach={nose - 8} text={height} />}
-      {throat !== null && <Across y={Math.round((bedBottom + floor) / 2) + 6} left={axis} right={column} text={throat} />}
-    </g>
-  )
 }

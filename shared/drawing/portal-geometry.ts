@@ -1,23 +1,5 @@
-import type { Anchor, Elevation, Lane } from './balloon-layout'
-import type { FrameKind } from './joint-places'
-
-/** What is drawn of a press; lengths in metres, null where nobody has measured. */
-export interface PressDimensions {
-  height: number | null
-  /** Between the centre lines of the uprights. */
-  width: number | null
-  /** From the ram's centre line to the column of a C-frame. */
-  throat?: number | null
-  holes?: number
-  holePitch?: number | null
-  /** The hole the bed is pinned in, counted from the top. */
-  bedHole?: number | null
-}
-
-export interface Box {
-  width: number
-  height: number
-}
+import type { FrameKind } from '../press/model'
+import { ramHeights, sheetSides, type Anchor, type Box, type Elevation, type Lane, type PressDimensions } from './frame'
 
 /** Everything that stands between two uprights, in px: the same geometry draws H-frames, four-posts and bench presses. */
 export interface Portal {
@@ -62,12 +44,9 @@ function holesBetween(first: number, last: number, count: number, pitch: number)
 
 /** Lays out a portal frame inside a box (px), to scale as far as the box allows. */
 export function portalOf(kind: FrameKind, dimensions: PressDimensions, box: Box): Portal {
-  const small = box.width < 440
-  const dimensionX = small ? 14 : 36
-  const laneLeft = dimensionX + (small ? 34 : 40)
-  const laneRight = box.width - (small ? 30 : 56)
+  const { dimensionX, laneLeft, laneRight, clear } = sheetSides(box)
   const cx = Math.round((laneLeft + laneRight) / 2)
-  const half = (laneRight - laneLeft) / 2 - BALLOON - (small ? 8 : 33)
+  const half = (laneRight - laneLeft) / 2 - BALLOON - clear
   const typical = TYPICAL[kind]
   const height = dimensions.height ?? typical.height
   const width = dimensions.width ?? typical.width
@@ -120,35 +99,9 @@ export function portalOf(kind: FrameKind, dimensions: PressDimensions, box: Box)
   }
 }
 
-/** Heights of ram, adaptor and stack between head and bed (px). */
-export interface RamHeights {
-  seat: number
-  flange: number
-  cylinder: number
-  nut: number
-  rod: number
-  adaptor: number
-  stack: number
-}
-
-/** Shares of the daylight between head and bed; every part keeps at least a few px. */
-export function ramHeights(portal: Pick<Portal, 'headBottom' | 'bedTop'>): RamHeights {
-  const daylight = portal.bedTop - portal.headBottom
-  const at = (share: number): number => Math.round(portal.headBottom + daylight * share)
-  return {
-    seat: at(0.036),
-    flange: at(0.064),
-    cylinder: at(0.35),
-    nut: at(0.366),
-    rod: at(0.58),
-    adaptor: at(0.646),
-    stack: at(0.96),
-  }
-}
-
 /** Where joints and measuring points of a portal frame are. */
 export function portalElevation(portal: Portal): Elevation {
-  const { cx, left, right, post, headBottom, bedTop, bedBottom, pin, floor, span, top, headTop } = portal
+  const { cx, left, right, post, headBottom, bedTop, bedBottom, pin, floor, span, headTop } = portal
   const ram = ramHeights(portal)
   const both = (name: string, lane: 'outer' | 'inner', dx: number, y: number, balloonY: number): Record<string, Anchor> => ({
     [`${name}-left`]: { tip: { x: cx - dx, y }, lane: `${lane}-left`, y: balloonY },
@@ -166,7 +119,20 @@ export function portalElevation(portal: Portal): Elevation {
   const atRight = { at: { x: right, y: below }, letter: bench ? 'left' : 'right', clear } as const
   return {
     lanes: portal.lanes,
-    from: Math.max(24, top - 4),
+    parts: {
+      head: { x: cx + span * 0.3, y: (headTop + headBottom) / 2 },
+      'upright-left': { x: left, y: middle },
+      'upright-right': { x: right, y: middle },
+      seat: { x: cx, y: headBottom + 10 },
+      ram: { x: cx, y: (ram.seat + ram.cylinder) / 2 },
+      adaptor: { x: cx, y: (ram.rod + ram.adaptor) / 2 },
+      bed: { x: cx, y: pin },
+      'stiffener-left': { x: cx - span * 0.151, y: pin },
+      'stiffener-right': { x: cx + span * 0.151, y: pin },
+      'foot-left': { x: left, y: floor - 10 },
+      'foot-right': { x: right, y: floor - 10 },
+    },
+    from: 30,
     to: floor - 26,
     anchors: {
       ...both('head', 'outer', postX + post * 0.55, headBottom - 1, headBottom - 28),

@@ -1,2 +1,0 @@
-export type { FrameKind } from '#shared/press/model'
-export { jointPlaces, measuringPlaces, type Spot as JointPlace } from '#shared/press/places'
