@@ -76,7 +76,7 @@ export function RecordResult({ record }: { record: RecordView }) {
         <p className={`text-26 font-semibold tablet:text-34 desktop:text-46 ${isRed ? 'text-stop-ink' : 'text-ink'}`} data-part="headline">
           {broken === null ? headline : <del className="decoration-2">{headline}</del>}
         </p>
-        {(broken === null ? lines(record) : ['This is worked out from entries that were altered: it clears the press to no load.'])
+        {(broken === null ? lines(record) : ['This is worked out from entries that were altered: don’t load the press by it.'])
           .filter((line) => line !== '')
           .map((line) => (
             <p key={line} className="mt-0.5 text-18">

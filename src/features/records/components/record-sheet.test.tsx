@@ -218,7 +218,7 @@ describe('a record that needs a second look', () => {
     expect(screen.getByRole('alert')).toHaveTextContent('This record was altered at entry 12')
     const result = screen.getByRole('region', { name: 'Result' })
     expect(within(result).getByText(/^Accepted/).tagName).toBe('DEL')
-    expect(result).toHaveTextContent('it clears the press to no load')
+    expect(result).toHaveTextContent('don’t load the press by it')
     expect(result).not.toHaveTextContent('Cleared by')
     expect(document.body).not.toHaveTextContent('Within every limit checked')
     expect(screen.queryByRole('link', { name: 'Download spreadsheet' })).toBeNull()
