@@ -1,4 +1,4 @@
-import { arrowHead, circlePath, hatch, pathThrough } from './drawing'
+import { arrowHead, circlePath, estimateTextWidth, hatch, pathThrough } from './drawing'
 import type { Drawing, DrawingItem, InkName, Point, TextItem } from './drawing'
 import { bandEdges, cutAtFrame, lineFrame } from './line-frame'
 import type { LineFrame } from './line-frame'
@@ -63,6 +63,17 @@ function axes(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
   return items
 }
 
+/** A load beside its stage, in one line where it has room before the axis, else with its unit below it. */
+function stageLoad(load: string, y: number, until: number): DrawingItem[] {
+  const style = { size: 14, condensed: true }
+  const [figure = '', ...unit] = load.split(' ')
+  if (unit.length === 0 || 104 + estimateTextWidth(load, 14, 400, true) <= until) return [textItem(104, y + 5, load, 'faint-scribe', style)]
+  return [
+    textItem(104, y + 5, figure, 'faint-scribe', style),
+    textItem(until - 3, y + 22, unit.join(' '), 'faint-scribe', { ...style, anchor: 'end' }),
+  ]
+}
+
 function stageGuides(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
   const items: DrawingItem[] = []
   for (const stage of spec.stages) {
@@ -71,8 +82,7 @@ function stageGuides(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
     if (stage.percent > 0) items.push(strokeItem(`M${from} ${y}H${frame.right}`, 'ghost', 1.6, { dash: '2 5', opacity: 0.8 }))
     if (spec.setting !== 'alone') continue
     items.push(textItem(47, y + 5, stage.label, 'scribe', { size: 16, weight: 600 }))
-    if (stage.load !== undefined)
-      items.push(textItem(104, y + 5, stage.load, 'faint-scribe', { size: 14, condensed: true }))
+    if (stage.load !== undefined) items.push(...stageLoad(stage.load, y, frame.left - 3))
   }
   return items
 }
