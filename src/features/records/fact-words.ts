@@ -29,6 +29,17 @@ export function forceInstrumentText(instrument: FrozenInstrument): string {
   return `${details.code}, ${inPrint(details.fullScale)}, ±\u00a0${within}, ${due(instrument)}`
 }
 
+/** "T-01 Flat nose, 20 short tons": the tooling of the train, each piece with what it carries. Null where there is none. */
+export function toolingText({ press }: Opened): string | null {
+  const pieces = press.train.filter(({ kind }) => kind === 'tooling')
+  if (pieces.length === 0) return null
+  return pieces
+    .map(({ name, ratedForce, ratedPressure }) =>
+      [name, ...[ratedForce, ratedPressure].flatMap((rating) => (rating ? [inPrint(rating)] : []))].join(', '),
+    )
+    .join('; ')
+}
+
 /** "I-04 to I-06, 0.01 ± 0.005 mm, due 7 Nov 2026": alike ones together, the earliest date due. */
 export function indicatorsText(opened: Opened): string {
   const used = new Set(opened.points.map((point) => point.instrumentId))

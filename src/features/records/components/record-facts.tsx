@@ -3,7 +3,7 @@ import { clearanceArithmetic, energyText, inPrint } from '#shared/proof-test/rec
 import { formatForce } from '#shared/units'
 import { checkText, engineerText } from '#shared/proof-test/check-record'
 import { HowLinks } from '../../../components/how-link'
-import { forceInstrumentText, indicatorsText, ramText } from '../fact-words'
+import { forceInstrumentText, indicatorsText, ramText, toolingText } from '../fact-words'
 import type { RecordView } from '../record-view'
 
 type Fact = readonly [name: string, value: string]
@@ -21,6 +21,7 @@ function factsOf(record: RecordView): Fact[] {
     return instrument ? [[instrument.details.kind === 'load-cell' ? 'Load cell' : 'Gauge', forceInstrumentText(instrument)]] : []
   })
   const indicators = indicatorsText(opened)
+  const tooling = toolingText(opened)
   return [
     ...(arithmetic ? [['Load', arithmetic] as const] : []),
     ...(fullest && fullest.force.pressure !== null
@@ -40,6 +41,7 @@ function factsOf(record: RecordView): Fact[] {
     ['Pump hand', pumpHand.relation ? `${pumpHand.name}, ${pumpHand.relation}` : pumpHand.name],
     ...rams,
     ...read,
+    ...(tooling ? [['Tooling', tooling] as const] : []),
     ...(indicators ? [['Indicators', indicators] as const] : []),
     ['Relief', state.setUp?.reliefSet ? `Set to ${state.setUp.reliefSet.text} ${state.setUp.reliefSet.unit}` : 'No setting noted'],
     ['Rule', `${rule}, k\u00a0=\u00a02.${opened.repeats ? ` Repeats ${opened.repeats.number}` : ''}`],
