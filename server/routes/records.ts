@@ -1,16 +1,16 @@
 import { Router } from 'express'
+import type { Response } from 'express'
 import type { Transaction } from 'sequelize'
 import type { AppContext } from '../context'
 import { authenticate } from '../middleware/authenticate'
 import { idParam } from '../middleware/validate'
 import { recordFileName, recordOf } from '../records/record'
 import { recordWorkbook } from '../records/record-workbook'
-import { ledgerFile } from '../services/ledger-files'
+import { ledgerFile, type LedgerFile } from '../services/ledger-files'
 import { shopOfPress } from '../services/press-register'
-import { shopOfProofTest } from '../services/proof-test-register'
 import { recordFiles } from '../services/record-files'
 import { readRecord } from '../services/records'
-import { workOn } from './work'
+import { workOn, workOnTest } from './work'
 
 const WORKBOOK = 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet'
 
@@ -19,8 +19,7 @@ export function recordRoutes(context: AppContext): Router {
 
   router.get('/proof-tests/:proofTestId/record.xlsx', authenticate(context), async (request, response) => {
     const id = idParam(request, 'proofTestId')
-    const shopOfIt = (transaction: Transaction) => shopOfProofTest(id, transaction)
-    const source = await workOn(context, request, 'This proof test', shopOfIt, (work) => readRecord(context, work, id))
+    const source = await workOnTest(context, request, id, (work) => readRecord(context, work, id))
     const { opened, state } = recordOf(source)
     // Written after the transaction: a spreadsheet takes longer than a connection should be held.
     const files = await recordFiles(context, opened.shop.id, state.attachments)
@@ -28,18 +27,19 @@ export function recordRoutes(context: AppContext): Router {
     response.attachment(recordFileName(opened)).type(WORKBOOK).send(workbook)
   })
 
-  const ledgers = [
-    { subject: 'proof-test', what: 'This proof test', path: '/proof-tests/:id/ledger.json', shopOf: shopOfProofTest },
-    { subject: 'press', what: 'This press', path: '/presses/:id/ledger.json', shopOf: shopOfPress },
-  ] as const
-  for (const { subject, what, path, shopOf } of ledgers) {
-    router.get(path, authenticate(context), async (request, response) => {
-      const id = idParam(request, 'id')
-      const shopOfIt = (transaction: Transaction) => shopOf(id, transaction)
-      const { name, text } = await workOn(context, request, what, shopOfIt, (work) => ledgerFile(context, work, subject, id))
-      response.attachment(name).type('application/json').send(Buffer.from(text, 'utf8'))
-    })
-  }
+  const sendFile = (response: Response, { name, text }: LedgerFile) =>
+    response.attachment(name).type('application/json').send(Buffer.from(text, 'utf8'))
+
+  router.get('/proof-tests/:id/ledger.json', authenticate(context), async (request, response) => {
+    const id = idParam(request, 'id')
+    sendFile(response, await workOnTest(context, request, id, (work) => ledgerFile(context, work, 'proof-test', id)))
+  })
+
+  router.get('/presses/:id/ledger.json', authenticate(context), async (request, response) => {
+    const id = idParam(request, 'id')
+    const shopOfIt = (transaction: Transaction) => shopOfPress(id, transaction)
+    sendFile(response, await workOn(context, request, 'This press', shopOfIt, (work) => ledgerFile(context, work, 'press', id)))
+  })
 
   return router
 }
