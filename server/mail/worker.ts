@@ -95,13 +95,17 @@ async function send(sending: Sending, delivery: Delivery, origin: string, holder
 
 /** Sends what is due, one letter after the other; returns how many were taken in hand. Several servers may do so at once. */
 export async function sendDueMail(sending: Sending, delivery: Delivery, origin: string, closing?: AbortSignal): Promise<number> {
-  for (let count = 0; ; count += 1) {
-    if (closing?.aborted) return count
+  let count = 0
+  while (!closing?.aborted) {
     const holder = newId()
     const claimed = await claim(sending, delivery, holder)
-    if (claimed === 'none') return count
-    if (claimed !== 'lost') await send(sending, delivery, origin, holder, claimed)
+    if (claimed === 'none') break
+    // Another server was quicker: there may be more.
+    if (claimed === 'lost') continue
+    await send(sending, delivery, origin, holder, claimed)
+    count += 1
   }
+  return count
 }
 
 /** Sends until the server is asked to stop; resolves when the letter in hand is settled. */
