@@ -2,10 +2,12 @@ import { Page, Section } from '../components/page'
 import { Facts } from '../components/ruled-list'
 import { ChangePasswordForm } from '../features/people/components/change-password-form'
 import { ThemeChoice } from '../features/people/components/theme-choice'
-import { useHere } from '../lib/here'
+import { useGuestOf, useMyShops, useUser } from '../lib/here'
 
 export function Component() {
-  const { user, shops } = useHere()
+  const user = useUser()
+  const shops = useMyShops()
+  const guestOf = useGuestOf()
   return (
     <Page title="Your account">
       <div className="grid gap-x-12 gap-y-8 desktop:grid-cols-2">
@@ -16,6 +18,7 @@ export function Component() {
                 ['Name on records', user.name],
                 ['E-mail', user.email],
                 ...shops.map((shop) => [shop.name, shop.role] as const),
+                ...guestOf.map(({ shopName, pressName, test }) => [shopName, `witness of ${test?.number ?? `the next test of ${pressName}`}`] as const),
               ]}
             />
           </Section>
