@@ -79,7 +79,7 @@ function instrumentOut(need: Extract<NeedData, { kind: 'instrument-out' }>, toda
         note: `Due ${need.dueOn === null ? '' : dayAndMonth(need.dueOn, today)}. It blocks any new test.`,
         due: `${days(late)} late`,
         urgency: 'late',
-        to,
+        to: `${to}#calibration`,
       }
     case 'out-of-tolerance':
       return {
@@ -97,7 +97,7 @@ function instrumentOut(need: Extract<NeedData, { kind: 'instrument-out' }>, toda
         note: 'It blocks any new test. Enter its certificate.',
         due: 'Now',
         urgency: 'late',
-        to,
+        to: `${to}#calibration`,
       }
   }
 }
@@ -152,7 +152,7 @@ function shutWords(need: PressNeed, today: string): Words {
         note: `${need.why} Plan a proof test.`,
         due: 'Now',
         urgency: 'now',
-        to,
+        to: paths.planProofTest.href({ press: need.pressId }),
       }
   }
 }
@@ -169,10 +169,10 @@ function words(need: NeedData, today: string): Words {
       return {
         mark: 'clock-late',
         title: `${need.pressName} is overdue`,
-        note: `Its clearance ran until ${dayAndMonth(need.until, today)}. It may not be used.`,
+        note: `Its clearance ran until ${dayAndMonth(need.until, today)}. Plan a proof test.`,
         due: `${days(daysBetween(need.until, today))} late`,
         urgency: 'late',
-        to: paths.press.href(need.pressId),
+        to: paths.planProofTest.href({ press: need.pressId }),
       }
     case 'press-due':
       return {

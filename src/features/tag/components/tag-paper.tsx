@@ -179,7 +179,7 @@ function Cleared({ tag, clearance, address, code, size, onFull }: Given & { clea
           <Edge />
           <div className="flex justify-between gap-[2mm] pt-[0.8mm] pb-[0.4mm]">
             <Load words={words} small />
-            <Code address={address} code={code} className="-mt-[1.4mm] -mr-[1.4mm] size-[24mm]" />
+            <Code address={address} code={code} className="-mr-[1.4mm] size-[24mm]" />
           </div>
         </div>
         <div className="flex min-h-0 grow border-t-[0.4mm] border-black">
@@ -259,7 +259,7 @@ function Shut({ tag, answer, address, code, size, onFull }: Given & { answer: Ex
         </div>
       </div>
       <Foot size={size}>
-        Printed {dateAndTime(tag.asOf)}. {small && 'It comes off when the press is cleared again; the code says how it stands now.'}
+        Printed {dateAndTime(tag.asOf)}. {small && 'It comes off when the press is cleared again.'}
       </Foot>
       <Stripes className={small ? 'h-[5mm]' : 'h-[8mm]'} />
     </>
