@@ -1,8 +1,10 @@
-import type { PressDescription } from '#shared/press/model'
+import type { Joint, PressDescription } from '#shared/press/model'
 import type { PressJoint } from '#shared/press/state'
 import { parseDecimal, toSI, type LengthUnit } from '#shared/units'
 import type { JointMarkState } from '#shared/drawing/balloon-items'
-import type { DrawnPress } from '#shared/drawing/frame'
+import type { DrawnPress, FramePart } from '#shared/drawing/frame'
+import { partsOf } from '#shared/drawing/member-parts'
+import { looseMembers } from '#shared/press/load-path'
 
 type Measure = { text: string; unit: LengthUnit | '' } | null
 
@@ -37,4 +39,18 @@ export function jointState(joint: Pick<PressJoint, 'makeUp' | 'examination'>): J
   if (joint.examination?.result === 'rejected') return 'rejected'
   if (joint.makeUp !== 'finished') return joint.makeUp
   return joint.examination?.result ?? 'finished'
+}
+
+/** The parts of the drawing whose member hangs on no joint that leads to the rest. */
+export function looseParts(
+  description: Pick<PressDescription, 'kind' | 'members'> | null,
+  joints: readonly Pick<Joint, 'between'>[],
+): ReadonlySet<FramePart> {
+  if (description === null) return new Set()
+  const { kind, members } = description
+  return partsOf(
+    kind,
+    members,
+    looseMembers(members, joints).map(({ id }) => id),
+  )
 }

@@ -1,10 +1,10 @@
-import { useState } from 'react'
+import { useMemo, useState } from 'react'
 import type { PressState } from '#shared/press/state'
 import { loadPathOf } from '#shared/press/load-path'
 import { mayItBeUsed, tagToTakeOff } from '#shared/press/may-it-be-used'
 import { AttachmentStrip } from '../../../../components/attachments/attachment-strip'
 import { ButtonLink } from '../../../../components/button'
-import { drawnPress, jointState } from '../../../../components/instruments/drawn-press'
+import { drawnPress, jointState, looseParts } from '../../../../components/instruments/drawn-press'
 import { PressPlate } from '../../../../components/instruments/press-plate'
 import { PageHeading, Section, inset } from '../../../../components/page'
 import { useFiles } from '../../../../lib/attachment-held'
@@ -22,8 +22,7 @@ import { Answer, EndsAtOnce } from './answer'
 import { ChangeForm } from './change-form'
 import { ClearanceFacts } from './clearance-facts'
 import { gathered, History, toldUntil } from './history'
-import { JointActions } from './joint-actions'
-import { Joints } from './joints'
+import { JointsPart } from './joints-part'
 import { LedgerFile } from './ledger-file'
 import { LoadPathSection } from './load-path-section'
 import { ofJoint, shownOf } from './press-photos'
@@ -33,6 +32,8 @@ import { Softening } from './softening'
 import { TagPlate } from './tag-plate'
 import { Train } from './train'
 import { useJointsMeant } from './use-joints-meant'
+import { usePressWalk } from './use-press-walk'
+import { useSpotting } from './use-spotting'
 import { WithdrawForm } from './withdraw-form'
 
 type PressPageProps = { state: PressState; people: Readonly<Record<string, string>>; photos?: readonly Placed[] }
@@ -56,6 +57,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
   const answer = mayItBeUsed(state, today)
   const tagHangs = tagToTakeOff(state, today)
   const path = loadPathOf(description?.members ?? [], joints)
+  const loose = useMemo(() => looseParts(description, joints), [description, joints])
   const choose = (next: OpenForm) => {
     meant.clear()
     setOpen(next)
@@ -63,7 +65,8 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
   const sending = { send: append.mutate, busy: append.isPending }
   const form = { ...sending, onDone: () => choose(null) }
   const files = useFiles('presses', state.id, photos.length)
-  const selected = joints.find((joint) => joint.id === meant.selectedId)
+  const walk = usePressWalk(state.id, description?.kind ?? 'h-frame', joints)
+  const { spotting, placing } = useSpotting()
   const openRepairs = state.repairs.some((repair) => !repair.closed)
   const repairs = (
     <Repairs
@@ -81,7 +84,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
     </Repairs>
   )
   return (
-    <div className="grid grow content-start desktop:grid-cols-[minmax(22rem,37.5%)_minmax(0,1fr)] desktop:grid-rows-[auto_1fr]">
+    <div className="grid grow grid-cols-[minmax(0,1fr)] content-start desktop:grid-cols-[minmax(22rem,37.5%)_minmax(0,1fr)] desktop:grid-rows-[auto_1fr]">
       <div className={classNames(inset, 'pt-6 pb-4 desktop:col-start-2 desktop:px-8')}>
         {tagHangs && can('press:tag-off') && (
           <TagPlate why={answer.answer === 'do not use' ? answer.why : ''} send={append.mutate} busy={append.isPending} />
@@ -123,7 +126,9 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
             state: jointState(joint),
             place: joint.place,
           }))}
-          selectedId={meant.selectedId}
+          loose={loose}
+          placing={placing}
+          selectedId={meant.selectedId ?? (meant.choosing ? null : (walk.walked?.toCome[0]?.id ?? null))}
           markedIds={
             meant.choosing
               ? meant.chosen
@@ -135,6 +140,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
           onSelect={meant.tap}
         >
           {!path.closed && <p>{path.gap}</p>}
+          {placing && <p role="status">Tap the cross where the joint stands.</p>}
           {meant.choosing && (
             <p role="status">{meant.chosen.length === 0 ? 'Tap the joints that are meant.' : `${meant.chosen.length} marked.`}</p>
           )}
@@ -144,24 +150,9 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
         {(openRepairs || open === 'repair') && <div className="mb-6">{repairs}</div>}
         <div className="grid gap-x-6 gap-y-6 desktop:grid-cols-[minmax(0,500fr)_minmax(0,212fr)]">
           <div id="joints" tabIndex={-1} className="scroll-mt-4">
-            <Section title="Joints">
-              <Joints joints={joints} selectedId={meant.selectedId} onSelect={meant.select}>
-                <AttachmentStrip className="mt-2" files={files} shown={shownOf(ofJoint(photos, meant.selectedId), state, people)} />
-                {selected && can('press:record') && !state.underTest && (
-                  <JointActions
-                    key={selected.id}
-                    pressId={state.id}
-                    joint={selected}
-                    joints={joints}
-                    send={append.mutate}
-                    busy={append.isPending}
-                  />
-                )}
-                {selected && state.underTest && (
-                  <p>It is walked down in {state.underTest.number}: work and examinations are entered there.</p>
-                )}
-              </Joints>
-            </Section>
+            <JointsPart {...{ state, joints, walk, spotting, ...sending }} selectedId={meant.selectedId} onSelect={meant.select}>
+              <AttachmentStrip className="mt-2" files={files} shown={shownOf(ofJoint(photos, meant.selectedId), state, people)} />
+            </JointsPart>
           </div>
           <Section title="What happened">
             <History events={gathered(toldUntil(state, today))} people={people} photos={photos} files={files} />
