@@ -7,6 +7,7 @@ import { Button, TextLink } from '../../../../components/button'
 import { jointState } from '../../../../components/instruments/drawn-press'
 import { JointBalloon, Mark } from '../../../../components/marks'
 import { Section } from '../../../../components/page'
+import { setPercent } from '../../../../components/typeset'
 import type { Files } from '../../../../lib/attachment-held'
 import type { Placed } from '../../../../lib/attachment-places'
 import { longDate, shortDate } from '../../../../lib/dates'
@@ -121,7 +122,7 @@ function OpenRepair({ shown, repair, pointed, onPoint, send, busy }: OpenRepairP
       <div className="flex items-start gap-3">
         <Mark name="stop" size={22} className="mt-1 shrink-0" />
         <div className="min-w-0 grow">
-          <h3 className="text-18">{repair.why}</h3>
+          <h3 className="text-18">{setPercent(repair.why)}</h3>
           <Origin repair={repair} people={people} />
           <div className="mt-2">
             <Concerned state={state} repair={repair} />
@@ -162,7 +163,7 @@ function ClosedRepair({ shown, repair }: { shown: Shown; repair: Repair }) {
   const left = toExamine(shown.state, repair)
   return (
     <li className="border-b border-hairline py-3">
-      <p className="font-semibold">{repair.why}</p>
+      <p className="font-semibold">{setPercent(repair.why)}</p>
       <Origin repair={repair} people={shown.people} />
       <p className="mt-1">
         {closed.done}{' '}
