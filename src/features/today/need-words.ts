@@ -1,5 +1,6 @@
 import type { Need as NeedData } from '#shared/api/today'
 import { calendarDate, daysBetween, longDate } from '../../lib/dates'
+import { asSentence } from '../../lib/words'
 import { paths } from '../../paths'
 import type { Need } from './components/today-view'
 
@@ -113,7 +114,7 @@ function shutWords(need: PressNeed, today: string): Words {
       return {
         mark: 'stop',
         title: `Take the tag off ${need.pressName}`,
-        note: `${need.why} Say so when it is off.`,
+        note: `${asSentence(need.why)} Say so when it is off.`,
         due,
         urgency: 'now',
         to: `${to}#tag`,
@@ -122,7 +123,7 @@ function shutWords(need: PressNeed, today: string): Words {
       return {
         mark: 'stop',
         title: `${need.pressName} waits for a repair`,
-        note: `${need.why} Say what was done.`,
+        note: `${asSentence(need.why)} Say what was done.`,
         due,
         urgency: 'now',
         to: `${to}#repairs`,
@@ -149,7 +150,7 @@ function shutWords(need: PressNeed, today: string): Words {
       return {
         mark: 'stop',
         title: `${need.pressName} may not be used`,
-        note: `${need.why} Plan a proof test.`,
+        note: `${asSentence(need.why)} Plan a proof test.`,
         due: 'Now',
         urgency: 'now',
         to: paths.planProofTest.href({ press: need.pressId }),
