@@ -183,7 +183,7 @@ function Cleared({ tag, clearance, address, code, size, onFull }: Given & { clea
           <Edge />
           <div className="flex justify-between gap-[2mm] pt-[0.8mm] pb-[0.4mm]">
             <Load words={words} small />
-            <Code address={address} code={code} className="-mr-[1.4mm] size-[24mm]" />
+            <Code address={address} code={code} className="-mr-[1.2mm] size-[21.5mm]" />
           </div>
         </div>
         <div className="flex min-h-0 grow border-t-[0.4mm] border-black">
