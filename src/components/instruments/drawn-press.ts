@@ -21,7 +21,7 @@ type Described = {
 }
 
 /** A press as its drawing takes it: what nobody measured is drawn in proportion and bears no figure. */
-export function drawnPress({ kind, dimensions }: Described): DrawnPress {
+export function drawnPress({ kind, dimensions }: Described, bedHole: number | null = null): DrawnPress {
   return {
     kind,
     dimensions: {
@@ -30,8 +30,15 @@ export function drawnPress({ kind, dimensions }: Described): DrawnPress {
       throat: metres(dimensions.throat),
       holePitch: metres(dimensions.holePitch),
       holes: dimensions.holes,
+      bedHole,
     },
   }
+}
+
+/** The hole the bed is pinned in, where it is named by its number from the top; other names are not drawn. */
+export function holeInUse(name: string | undefined): number | null {
+  const number = /^(?:hole )?(\d{1,2})$/i.exec(name?.trim() ?? '')?.[1]
+  return number === undefined ? null : Number(number)
 }
 
 /** How a joint's balloon is drawn on the press's own page: rejected stands out, whatever the make-up. */

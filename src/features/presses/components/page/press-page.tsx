@@ -4,7 +4,7 @@ import { loadPathOf } from '#shared/press/load-path'
 import { mayItBeUsed, tagToTakeOff } from '#shared/press/may-it-be-used'
 import { AttachmentStrip } from '../../../../components/attachments/attachment-strip'
 import { ButtonLink } from '../../../../components/button'
-import { drawnPress, jointState, looseParts } from '../../../../components/instruments/drawn-press'
+import { drawnPress, holeInUse, jointState, looseParts } from '../../../../components/instruments/drawn-press'
 import { PressPlate } from '../../../../components/instruments/press-plate'
 import { PageHeading, Section, inset } from '../../../../components/page'
 import { useFiles } from '../../../../lib/attachment-held'
@@ -12,7 +12,7 @@ import type { Placed } from '../../../../lib/attachment-places'
 import { classNames } from '../../../../lib/class-names'
 import { calendarDate } from '../../../../lib/dates'
 import { useCan, useShop } from '../../../../lib/here'
-import { useAnchor } from '../../../../lib/use-anchor'
+import { bringIntoView, useAnchor } from '../../../../lib/use-anchor'
 import { useTitle } from '../../../../lib/use-title'
 import { paths } from '../../../../paths'
 import { useAppendToPress } from '../../api/append-to-press'
@@ -27,7 +27,7 @@ import { LedgerFile } from './ledger-file'
 import { LoadPathSection } from './load-path-section'
 import { ofJoint, shownOf } from './press-photos'
 import { RepairOpenForm } from './repair-forms'
-import { pointedOut, Repairs } from './repairs'
+import { pointedOut, Repairs, toExamine } from './repairs'
 import { Softening } from './softening'
 import { TagPlate } from './tag-plate'
 import { Train } from './train'
@@ -40,6 +40,12 @@ type PressPageProps = { state: PressState; people: Readonly<Record<string, strin
 
 const part = 'mt-6 scroll-mt-4'
 const formPart = 'mt-6 border-t-2 border-ink pt-4'
+
+/** The bed hole that the press is, or was last, cleared with. */
+function holeCleared({ clearance }: PressState): number | null {
+  const given = clearance.is === 'none' ? null : clearance.is === 'withdrawn' ? clearance.last : clearance.clearance
+  return holeInUse(given?.bedHoles[0])
+}
 
 /** One press: may it be used, to what and until when; what it waits for, its joints, its train and what happened to it. */
 export function PressPage({ state, people, photos = [] }: PressPageProps) {
@@ -57,17 +63,24 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
   const answer = mayItBeUsed(state, today)
   const tagHangs = tagToTakeOff(state, today)
   const path = loadPathOf(description?.members ?? [], joints)
+  const drawn = useMemo(() => description && drawnPress(description, holeCleared(state)), [description, state])
   const loose = useMemo(() => looseParts(description, joints), [description, joints])
   const choose = (next: OpenForm) => {
     meant.clear()
     setOpen(next)
   }
   const sending = { send: append.mutate, busy: append.isPending }
-  const form = { ...sending, onDone: () => choose(null) }
+  const leave = () => choose(null)
+  const done = () => {
+    leave()
+    // What was entered may have changed the answer: that is read first.
+    bringIntoView('answer')
+  }
+  const form = { ...sending, onDone: done, onLeave: leave }
   const files = useFiles('presses', state.id, photos.length)
   const walk = usePressWalk(state.id, description?.kind ?? 'h-frame', joints)
   const { spotting, placing } = useSpotting()
-  const openRepairs = state.repairs.some((repair) => !repair.closed)
+  const repairsFirst = open === 'repair' || state.repairs.some((repair) => !repair.closed || toExamine(state, repair) !== null)
   const repairs = (
     <Repairs
       shown={{ state, people, photos, files }}
@@ -85,7 +98,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
   )
   return (
     <div className="grid grow grid-cols-[minmax(0,1fr)] content-start desktop:grid-cols-[minmax(22rem,37.5%)_minmax(0,1fr)] desktop:grid-rows-[auto_1fr]">
-      <div className={classNames(inset, 'pt-6 pb-4 desktop:col-start-2 desktop:px-8')}>
+      <div id="answer" tabIndex={-1} className={classNames(inset, 'pt-6 pb-4 desktop:col-start-2 desktop:px-8')}>
         {tagHangs && can('press:tag-off') && (
           <TagPlate why={answer.answer === 'do not use' ? answer.why : ''} send={append.mutate} busy={append.isPending} />
         )}
@@ -118,7 +131,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
       </div>
       <div className="ground-dye desktop:col-start-1 desktop:row-span-2 desktop:row-start-1">
         <PressPlate
-          press={description && drawnPress(description)}
+          press={drawn}
           joints={joints.map((joint) => ({
             id: joint.id,
             number: joint.number,
@@ -134,7 +147,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
               ? meant.chosen
               : pointedOut(
                   state,
-                  state.repairs.find((repair) => repair.id === meant.repairId),
+                  state.repairs.find((repair) => repair.id === meant.repairId && !repair.closed),
                 )
           }
           onSelect={meant.tap}
@@ -147,7 +160,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
         </PressPlate>
       </div>
       <div className={classNames(inset, 'pt-4 pb-8 desktop:col-start-2 desktop:px-8 desktop:pt-0')}>
-        {(openRepairs || open === 'repair') && <div className="mb-6">{repairs}</div>}
+        {repairsFirst && <div className="mb-6">{repairs}</div>}
         <div className="grid gap-x-6 gap-y-6 desktop:grid-cols-[minmax(0,500fr)_minmax(0,212fr)]">
           <div id="joints" tabIndex={-1} className="scroll-mt-4">
             <JointsPart {...{ state, joints, walk, spotting, ...sending }} selectedId={meant.selectedId} onSelect={meant.select}>
@@ -164,7 +177,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
             <ClearanceFacts clearance={answer.clearance} forceUnit={shop.forceUnit} />
           </Section>
         )}
-        {!openRepairs && open !== 'repair' && <div className={part}>{repairs}</div>}
+        {!repairsFirst && <div className={part}>{repairs}</div>}
         <Softening pressId={state.id} className={part} />
         {description && (
           <Section title="Frame and train" note={frameWords[description.kind]} className={part}>

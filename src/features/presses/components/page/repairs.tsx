@@ -34,7 +34,8 @@ export function pointedOut(state: PressState, repair: Repair | undefined): strin
 }
 
 /** "Examine joints 5 and 7 again", after a repair that is closed; null when they are accepted. */
-function toExamine(state: PressState, repair: Repair): string | null {
+export function toExamine(state: PressState, repair: Repair): string | null {
+  if (!repair.closed) return null
   const left = jointsOf(state, repair).filter((joint) => !isAccepted(joint))
   return left.length === 0 ? null : `Examine ${nameJoints(left.map((joint) => joint.number))} again.`
 }
@@ -214,7 +215,13 @@ export function Repairs({ shown, pointedId, onPoint, onOpen, children, ...sendin
         {open.length === 0 &&
           again.map((sentence) => (
             <p key={sentence} className="flex items-start gap-3 border-t border-hairline py-2 font-medium">
-              <Mark name="undecided" size={22} className="mt-0.5 shrink-0" />A repair is closed. {sentence}
+              <Mark name="undecided" size={22} className="mt-0.5 shrink-0" />
+              <span>
+                A repair is closed. {sentence}{' '}
+                <a href="#joints" className="font-normal underline underline-offset-[3px]">
+                  To the joints
+                </a>
+              </span>
             </p>
           ))}
         {children}
