@@ -10,3 +10,10 @@ export function shortName(name: string): string {
   const last = words.pop() ?? ''
   return [...words.map((word) => `${word.charAt(0)}.`), last].join(' ')
 }
+
+/** "3rd": a place in an order. */
+export function ordinal(count: number): string {
+  const teen = count % 100 >= 11 && count % 100 <= 13
+  const ending = teen ? 'th' : (['th', 'st', 'nd', 'rd'][count % 10] ?? 'th')
+  return `${count}${ending}`
+}

@@ -7,7 +7,7 @@ import { jointState } from '../../../../components/instruments/drawn-press'
 import { Section } from '../../../../components/page'
 import { clockTime } from '../../../../lib/dates'
 import { useCan } from '../../../../lib/here'
-import { capital } from '../../../../lib/words'
+import { capital, ordinal } from '../../../../lib/words'
 import { ExamineForm, JointActions, WorkForm } from './joint-actions'
 import { AddJointForm, type Spotting } from './joint-shape-forms'
 import { Joints } from './joints'
@@ -23,13 +23,6 @@ type JointsPartProps = Sending & {
   spotting: Spotting
   /** Under the joint that is chosen, over what can be done to it. */
   children: ReactNode
-}
-
-/** "3rd": the place in the order walked. */
-export function ordinal(count: number): string {
-  const teen = count % 100 >= 11 && count % 100 <= 13
-  const ending = teen ? 'th' : (['th', 'st', 'nd', 'rd'][count % 10] ?? 'th')
-  return `${count}${ending}`
 }
 
 type WalkProps = JointsPartProps & { walked: NonNullable<PressWalk['walked']> }
