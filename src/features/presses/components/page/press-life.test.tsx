@@ -169,8 +169,6 @@ describe('a press’s life on its page', { timeout: 30_000 }, () => {
 
   it('marks on the drawing the joints of a repair, and those on the members that it names', () => {
     show(pressAfter(...wentWrong))
-    const marked = () =>
-      screen.getAllByRole('button', { pressed: true }).map((button) => button.getAttribute('aria-label') ?? button.textContent)
     fireEvent.click(screen.getByText('Mark on the drawing'))
     const onBed = joints.filter((joint) => joint.id === jointId(7) || joint.between.includes(bed)).map((joint) => joint.number)
     expect(onBed.length).toBeGreaterThan(1)
