@@ -100,6 +100,23 @@ function band(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
   ]
 }
 
+/** The old line beside the new: thin, with hollow readings, and named under the title. */
+function earlier({ earlier: old, setting, width }: LineChartSpec, frame: LineFrame): DrawingItem[] {
+  if (old === undefined || old.points.length < 2) return []
+  const at = old.points.map((point) => ({ x: frame.x(point.x), y: frame.y(point.y) }))
+  const alone = setting === 'alone'
+  const left = alone ? 24 : frame.left + 8
+  const foot = alone ? 52 : frame.ceiling - 2
+  const reading = (point: Point): DrawingItem => ({ kind: 'path', d: circlePath(point, 3), stroke: 'faint-scribe', width: 1.2, fill: 'dye' })
+  return [
+    strokeItem(pathThrough(at), 'faint-scribe', 1),
+    ...at.slice(1).map(reading),
+    strokeItem(`M${left} ${foot - 5}h22`, 'faint-scribe', 1),
+    reading({ x: left + 11, y: foot - 5 }),
+    textItem(left + 30, foot, old.label, 'faint-scribe', { size: width < 300 ? 14 : 16, condensed: true, halo: 'dye' }),
+  ]
+}
+
 /** The line through the readings, and beyond them the fit, dashed. A step that calls for a stop is drawn in red. */
 function line(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
   const items: DrawingItem[] = []
@@ -258,7 +275,7 @@ export function lineDrawing(spec: LineChartSpec): Drawing {
       }),
     )
   items.push(...stageGuides(spec, frame), ...band(spec, frame), ...axes(spec, frame))
-  items.push(...line(spec, frame), ...prediction(spec, frame), ...readings(spec, frame), ...stopMarks(spec, frame))
+  items.push(...earlier(spec, frame), ...line(spec, frame), ...prediction(spec, frame), ...readings(spec, frame), ...stopMarks(spec, frame))
   items.push(...corrections(spec, frame))
   for (const note of layOutNotes(spec, frame)) items.push(...noteItems(note))
   return { width: spec.width, height: spec.height, items }
