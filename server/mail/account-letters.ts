@@ -21,7 +21,9 @@ export function memberInvited({ shopName, inviterName, expiresAt, role }: Invite
   return {
     subject: `Invitation to ${shopName}`,
     blocks: [
-      { say: `${inviterName} invites you to ${shopName} on Quarterload, where the shop keeps the records of its presses and their proof tests.` },
+      {
+        say: `${inviterName} invites you to ${shopName} on Quarterload, where the shop keeps the records of its presses and their proof tests.`,
+      },
       { say: `You would be ${roleWords[role]}.` },
       { go: 'Look at the invitation', to: '/invitation', secret: true },
       { say: atMost(expiresAt) },
@@ -37,7 +39,9 @@ export function witnessInvited({ shopName, inviterName, expiresAt, pressName }: 
       {
         say: `${inviterName} of ${shopName} asks you to witness the next proof test of ${pressName}, a press. A witness attends while the press is loaded step by step, can stop it at any time, reads the gauge independently, and signs or declines the record afterwards.`,
       },
-      { say: 'You would see this one test and nothing else of the shop. You need a telephone with a connection, and to stand where you can see the gauge, behind the shield.' },
+      {
+        say: 'You would see this one test and nothing else of the shop. You need a telephone with a connection, and to stand where you can see the gauge, behind the shield.',
+      },
       { go: 'Look at the invitation', to: '/invitation', secret: true },
       { say: `${atMost(expiresAt)} The test can be opened once you have accepted.` },
     ],
@@ -64,7 +68,9 @@ export function passwordChanged(name: string, at: Date, how: 'changed' | 'reset'
       {
         say: `The password of ${name}’s account was ${how === 'changed' ? 'changed on a device that was signed in' : 'set anew through a link sent to this address'}, on ${momentInWords(at)}. Other devices were signed out.`,
       },
-      { say: 'If that was you, there is nothing to do. If not, choose another one now and tell the owner of your shop: whoever has your password can sign in your name.' },
+      {
+        say: 'If that was you, there is nothing to do. If not, choose another one now and tell the owner of your shop: whoever has your password can sign in your name.',
+      },
       { go: 'Choose a new password', to: '/forgotten-password' },
     ],
     why: 'It came to you because a changed password is always told to the account’s address.',

@@ -11,8 +11,7 @@ function letterOf(before: PressState, after: PressState) {
     return { kind: 'clearance-given' as const, letter: clearanceGiven(after.id, pressName, is.clearance) }
   }
   const ended =
-    (is.is === 'withdrawn' && was.is !== 'withdrawn') ||
-    (is.is === 'suspended' && was.is === 'cleared' && is.until !== 'the test is over')
+    (is.is === 'withdrawn' && was.is !== 'withdrawn') || (is.is === 'suspended' && was.is === 'cleared' && is.until !== 'the test is over')
   const letter = ended ? clearanceEnded(after.id, pressName, after) : null
   return letter && { kind: 'clearance-ended' as const, letter }
 }

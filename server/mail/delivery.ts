@@ -36,8 +36,7 @@ interface SmtpError extends Error {
 }
 
 /** The mail server refuses this recipient or letter for good (RFC 5321 4.2.1, 5yz); a wrong password of ours is not that. */
-const isForGood = ({ code, responseCode = 0 }: SmtpError): boolean =>
-  responseCode >= 500 && (code === 'EENVELOPE' || code === 'EMESSAGE')
+const isForGood = ({ code, responseCode = 0 }: SmtpError): boolean => responseCode >= 500 && (code === 'EENVELOPE' || code === 'EMESSAGE')
 
 function smtp({ url, from }: NonNullable<Config['mail']>): Delivery {
   const transport = createTransport({ url, ...timeouts, disableFileAccess: true, disableUrlAccess: true })

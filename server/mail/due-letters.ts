@@ -55,8 +55,7 @@ export function dueThing(item: CalendarItem, today: string): DueThing | null {
     case 'retest': {
       // Shut since that day: whoever shut it knows; the letter is for the morning after.
       if (!late) return null
-      const wanted =
-        item.kind === 'examination' ? `an examination of ${item.joints}` : `a proof test that repeats ${item.number}`
+      const wanted = item.kind === 'examination' ? `an examination of ${item.joints}` : `a proof test that repeats ${item.number}`
       return {
         key: `${item.kind}:${item.pressId}:${item.on}`,
         kind,

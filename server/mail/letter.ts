@@ -38,8 +38,7 @@ function escaped(text: string): string {
   return plain(text).replace(/[&<>"']/g, (sign) => `&#${sign.charCodeAt(0)};`)
 }
 
-const addressOf = ({ to, secret = false }: { to: string; secret?: boolean }): string =>
-  `${ORIGIN}${plain(to)}${secret ? `/${SECRET}` : ''}`
+const addressOf = ({ to, secret = false }: { to: string; secret?: boolean }): string => `${ORIGIN}${plain(to)}${secret ? `/${SECRET}` : ''}`
 
 function blockText(block: Block): string {
   if ('say' in block) return plain(block.say)

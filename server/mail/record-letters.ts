@@ -45,7 +45,9 @@ export function countersignatureWanted(recorded: Recorded): Letter {
       {
         say: `${opened.people.lead.name} of ${opened.shop.name} has signed ${opened.number}, the proof test of ${opened.press.name} that you witnessed. It waits for you to countersign it, or to decline with a reason.`,
       },
-      { say: 'Read it first. Your name, the time and what your signature means are printed on it; after 24 hours the delay is printed too.' },
+      {
+        say: 'Read it first. Your name, the time and what your signature means are printed on it; after 24 hours the delay is printed too.',
+      },
       record(state.id),
       facts(recorded),
       ...howToCheck,
@@ -63,8 +65,12 @@ export function recordSealed(recorded: Recorded, by: 'lead' | 'witness'): Letter
   return {
     subject: `${opened.number}: ${verb} and sealed`,
     blocks: [
-      { say: `${name} ${verb} ${opened.number}, a proof test of ${opened.press.name} at ${opened.shop.name}. The seal below covers every entry of it up to then.` },
-      { say: 'The seal says that nothing was altered since. It does not say that the press may be used: that stands on the press’s own page.' },
+      {
+        say: `${name} ${verb} ${opened.number}, a proof test of ${opened.press.name} at ${opened.shop.name}. The seal below covers every entry of it up to then.`,
+      },
+      {
+        say: 'The seal says that nothing was altered since. It does not say that the press may be used: that stands on the press’s own page.',
+      },
       facts(recorded),
       record(state.id),
       ...howToCheck,

@@ -173,7 +173,11 @@ export async function revokeInvitation({ transaction, actor, now }: Work, id: st
 }
 
 /** What an accepted invitation makes of its person: a member, or the guest of a test. */
-export async function admit({ transaction, now }: Pick<Work, 'transaction' | 'now'>, invitation: Invitation, userId: string): Promise<void> {
+export async function admit(
+  { transaction, now }: Pick<Work, 'transaction' | 'now'>,
+  invitation: Invitation,
+  userId: string,
+): Promise<void> {
   const { shopId, id: invitationId, pressId } = invitation
   if (invitation.kind === 'witness' && pressId !== null) {
     await TestGuest.create({ id: newId(), shopId, invitationId, userId, pressId, proofTestId: null, createdAt: now }, { transaction })

@@ -46,12 +46,7 @@ export interface LedgerFile {
 }
 
 /** A ledger as a file, exactly as stored, signed with today's key. 404 for another shop's, 403 where the role may not export. */
-export async function ledgerFile(
-  { config, database }: AppContext,
-  work: Work,
-  subject: LedgerSubject,
-  id: string,
-): Promise<LedgerFile> {
+export async function ledgerFile({ config, database }: AppContext, work: Work, subject: LedgerSubject, id: string): Promise<LedgerFile> {
   const { transaction, actor, now } = work
   const named = await nameOf(subject, work, id)
   const head = await readHead(database, transaction, id)

@@ -8,7 +8,9 @@ export const INVITATION_DAYS = 7
 export const RESET_MINUTES = 60
 
 /** What stands behind the slash of a link in a letter. Sent in bodies only: addresses end up in logs. */
-export const linkTokenSchema = z.string('This link is not whole.').regex(/^[\w-]{43}$/, 'This link is not whole. Copy all of it from the letter.')
+export const linkTokenSchema = z
+  .string('This link is not whole.')
+  .regex(/^[\w-]{43}$/, 'This link is not whole. Copy all of it from the letter.')
 
 /**
  * POST /api/invitations?shop= — invites by mail: a member with a role (the owner may), or an outside witness to the next

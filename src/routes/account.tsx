@@ -18,7 +18,9 @@ export function Component() {
                 ['Name on records', user.name],
                 ['E-mail', user.email],
                 ...shops.map((shop) => [shop.name, shop.role] as const),
-                ...guestOf.map(({ shopName, pressName, test }) => [shopName, `witness of ${test?.number ?? `the next test of ${pressName}`}`] as const),
+                ...guestOf.map(
+                  ({ shopName, pressName, test }) => [shopName, `witness of ${test?.number ?? `the next test of ${pressName}`}`] as const,
+                ),
               ]}
             />
           </Section>

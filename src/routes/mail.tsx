@@ -34,7 +34,10 @@ export function Component() {
   if (list.error && list.data === undefined) throw list.error
   const to = (query: Record<string, string | undefined>) => paths.mail.href({ shop: shop.id, state, ...query })
   return (
-    <Page title="Mail" note={list.data && (list.data.isTray ? 'No mail server is set up: letters stay here' : 'Letters that were sent, and those that wait')}>
+    <Page
+      title="Mail"
+      note={list.data && (list.data.isTray ? 'No mail server is set up: letters stay here' : 'Letters that were sent, and those that wait')}
+    >
       <RadioRow
         label="Which letters"
         name="state"
@@ -46,7 +49,10 @@ export function Component() {
       {list.data === undefined ? (
         <SkeletonRows />
       ) : list.data.mail.length === 0 ? (
-        <NothingHere what="No letter here." next="Letters are written by what happens: an invitation, a signature, a clearance, a date that comes near." />
+        <NothingHere
+          what="No letter here."
+          next="Letters are written by what happens: an invitation, a signature, a clearance, a date that comes near."
+        />
       ) : (
         <MailList mail={list.data.mail} isTray={list.data.isTray} />
       )}

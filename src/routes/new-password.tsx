@@ -17,7 +17,11 @@ export function Component() {
     <TitleBlock
       title="A new password"
       lead="Choose one that nobody else knows: it also signs records."
-      foot={<FootLink to={link.error ? paths.forgottenPassword.href() : paths.signIn.href()}>{link.error ? 'Ask for another link' : 'Back to signing in'}</FootLink>}
+      foot={
+        <FootLink to={link.error ? paths.forgottenPassword.href() : paths.signIn.href()}>
+          {link.error ? 'Ask for another link' : 'Back to signing in'}
+        </FootLink>
+      }
     >
       {link.isSuccess && <NewPasswordForm token={token} onSet={() => void navigate(paths.signIn.href(), { replace: true })} />}
       {link.error && <p className="text-18">{sayWhatFailed(link.error)}</p>}

@@ -31,7 +31,14 @@ describe('an invitation', () => {
     expect(letter?.text).toMatch(/Ida Marsh invites you to Kiln Lane Fabrication/)
     expect(letter?.html).toContain(token)
     const shown = invitationLookSchema.parse((await look(token).expect(200)).body)
-    expect(shown).toMatchObject({ kind: 'member', role: 'lead', email, shopName: 'Kiln Lane Fabrication', invitedBy: 'Ida Marsh', hasAccount: false })
+    expect(shown).toMatchObject({
+      kind: 'member',
+      role: 'lead',
+      email,
+      shopName: 'Kiln Lane Fabrication',
+      invitedBy: 'Ida Marsh',
+      hasAccount: false,
+    })
     const session = sessionResponseSchema.parse((await accept(token).expect(201)).body)
     expect(session.user).toMatchObject({ email, name: 'Lena Vogt' })
     expect(session.shops).toMatchObject([{ id: owner.shopId, role: 'lead' }])
@@ -42,7 +49,10 @@ describe('an invitation', () => {
     const owner = await openShop()
     const { token } = await inviteMember(owner)
     const answers = await Promise.all([accept(token), accept(token)])
-    expect(answers.map((answer) => answer.status).sort()).toEqual([201, expect.toSatisfy((status: number) => status === 410 || status === 422)])
+    expect(answers.map((answer) => answer.status).sort()).toEqual([
+      201,
+      expect.toSatisfy((status: number) => status === 410 || status === 422),
+    ])
     expect(codeOf(await accept(token).expect(410))).toBe('used')
     expect(codeOf(await look(token).expect(410))).toBe('used')
   })

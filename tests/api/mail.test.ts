@@ -17,7 +17,11 @@ import { startMailServer, type MailServer } from '../support/mail-server'
 const origin = 'https://press.example'
 const letter = {
   subject: 'Zürich: “Old Bess” – cleared',
-  blocks: [{ say: 'Grüße. Load 5 < 6 & more.' }, { facts: [['Record', 'PT-0001']] as const }, { go: 'Look', to: '/invitation', secret: true }],
+  blocks: [
+    { say: 'Grüße. Load 5 < 6 & more.' },
+    { facts: [['Record', 'PT-0001']] as const },
+    { go: 'Look', to: '/invitation', secret: true },
+  ],
   why: 'It came because of a test.',
 }
 
@@ -174,7 +178,10 @@ describe('a mail server', () => {
     await queued(owner, randomUUID(), 'the-secret-of-the-link')
     await work(delivery)
     const { database } = testServer().context
-    const rows = await database.query('SELECT * FROM mail_messages WHERE shop_id = ?', { replacements: [owner.shopId], type: QueryTypes.SELECT })
+    const rows = await database.query('SELECT * FROM mail_messages WHERE shop_id = ?', {
+      replacements: [owner.shopId],
+      type: QueryTypes.SELECT,
+    })
     expect(JSON.stringify(rows)).not.toContain('the-secret-of-the-link')
     delivery.close()
   })

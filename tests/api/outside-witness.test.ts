@@ -106,7 +106,12 @@ describe('a witness from outside', () => {
     const answers: [string, number][] = []
     for (const path of paths) answers.push([path, (await client.get(path)).status])
     expect(answers.filter(([, status]) => status !== 404)).toEqual([])
-    await client.post(`/api/proof-tests/${other.id}/entries`, { sentAt: new Date().toISOString(), entries: [other.witness.draft({ kind: 'observed', payload: { at: null, what: 'noise', note: 'x' } })] }).expect(404)
+    await client
+      .post(`/api/proof-tests/${other.id}/entries`, {
+        sentAt: new Date().toISOString(),
+        entries: [other.witness.draft({ kind: 'observed', payload: { at: null, what: 'noise', note: 'x' } })],
+      })
+      .expect(404)
     await client.post(`/api/proof-tests?shop=${shopId}`, await other.request()).expect(404)
     await client.post(`/api/invitations?shop=${shopId}`, { kind: 'witness', email: freshEmail(), pressId }).expect(404)
     await client.patch(`/api/people/${witness.userId}?shop=${shopId}`, { role: 'owner' }).expect(404)

@@ -8,12 +8,4 @@ import { mailAndInvitations } from './008-mail-and-invitations'
 import type { Migration } from './migration'
 
 /** In the order they run. */
-export const migrations: Migration[] = [
-  people,
-  ledgers,
-  instrumentsAndProtocols,
-  instrumentDue,
-  attachments,
-  pressLife,
-  mailAndInvitations,
-]
+export const migrations: Migration[] = [people, ledgers, instrumentsAndProtocols, instrumentDue, attachments, pressLife, mailAndInvitations]

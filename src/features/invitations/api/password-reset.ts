@@ -1,7 +1,8 @@
 import { useMutation, useQuery } from '@tanstack/react-query'
 import { api } from '../../../lib/api-client'
 
-export const useForgottenPassword = () => useMutation({ mutationFn: (email: string) => api.tell('POST', '/api/password-resets', { email }) })
+export const useForgottenPassword = () =>
+  useMutation({ mutationFn: (email: string) => api.tell('POST', '/api/password-resets', { email }) })
 
 /** Whether the link still holds. */
 export const useResetLink = (token: string) =>

@@ -38,7 +38,13 @@ export function ForgottenForm() {
         message={errors.email?.message}
         {...form.register('email')}
       />
-      <Button type="submit" kind="next" wide className="mt-1 min-h-16 text-20 desktop:min-h-16 desktop:text-20" busy={ask.isPending && 'Sending'}>
+      <Button
+        type="submit"
+        kind="next"
+        wide
+        className="mt-1 min-h-16 text-20 desktop:min-h-16 desktop:text-20"
+        busy={ask.isPending && 'Sending'}
+      >
         Send me a link
       </Button>
     </Form>

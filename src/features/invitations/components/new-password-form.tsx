@@ -25,7 +25,13 @@ export function NewPasswordForm({ token, onSet }: { token: string; onSet: () => 
         message={errors.newPassword?.message}
         {...form.register('newPassword')}
       />
-      <Button type="submit" kind="next" wide className="mt-1 min-h-16 text-20 desktop:min-h-16 desktop:text-20" busy={set.isPending && 'Setting it'}>
+      <Button
+        type="submit"
+        kind="next"
+        wide
+        className="mt-1 min-h-16 text-20 desktop:min-h-16 desktop:text-20"
+        busy={set.isPending && 'Setting it'}
+      >
         Set this password
       </Button>
     </Form>

@@ -28,7 +28,16 @@ export function LetterView({ letter: { mail, isTray } }: { letter: MailResponse 
             ...(mail.nextAt === null ? [] : ([['Tried next', whenWords(mail.nextAt)]] as const)),
             ['Tries', String(mail.attempts)],
             ...(mail.lastError === null ? [] : ([['Why it was not taken', mail.lastError]] as const)),
-            ...(mail.messageId === null ? [] : ([['Message-ID', <span key="id" className="font-mono text-14">{mail.messageId}</span>]] as const)),
+            ...(mail.messageId === null
+              ? []
+              : ([
+                  [
+                    'Message-ID',
+                    <span key="id" className="font-mono text-14">
+                      {mail.messageId}
+                    </span>,
+                  ],
+                ] as const)),
           ]}
         />
         <FormError message={retry.error && sayWhatFailed(retry.error)} attempt={retry.failureCount} />
@@ -46,10 +55,17 @@ export function LetterView({ letter: { mail, isTray } }: { letter: MailResponse 
       <div className="grid grid-cols-1 content-start gap-8">
         <Section title="As it is read">
           {/* No script, no form, no way out of the frame: what somebody typed into a name stays text. */}
-          <iframe title={`The letter “${mail.subject}”`} sandbox="" srcDoc={mail.html} className="h-[34rem] w-full border-2 border-rule bg-white" />
+          <iframe
+            title={`The letter “${mail.subject}”`}
+            sandbox=""
+            srcDoc={mail.html}
+            className="h-[34rem] w-full border-2 border-rule bg-white"
+          />
         </Section>
         <Section title="As plain text">
-          <pre className="ground-sheet overflow-x-auto border border-hairline p-4 text-14 wrap-anywhere whitespace-pre-wrap">{mail.text}</pre>
+          <pre className="ground-sheet overflow-x-auto border border-hairline p-4 text-14 wrap-anywhere whitespace-pre-wrap">
+            {mail.text}
+          </pre>
         </Section>
       </div>
     </div>

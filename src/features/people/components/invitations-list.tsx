@@ -7,7 +7,15 @@ import { shortDate } from '../../../lib/dates'
 import { sayWhatFailed } from '../../../lib/problem'
 import { useRevoke } from '../api/invitations'
 
-type RowProps = { mark: 'clock' | 'clock-late' | 'within'; title: string; note: string; word: string; act: string; busy: boolean; onAct: () => void }
+type RowProps = {
+  mark: 'clock' | 'clock-late' | 'within'
+  title: string
+  note: string
+  word: string
+  act: string
+  busy: boolean
+  onAct: () => void
+}
 
 function Row({ mark, title, note, word, act, busy, onAct }: RowProps) {
   return (
@@ -57,7 +65,11 @@ export function InvitationsList({ shopId, invitations, guests }: InvitationsList
             key={one.invitationId}
             mark="within"
             title={one.name}
-            note={one.test === null ? `accepted: can be named in the next test of ${one.pressName}` : `witness from outside of ${one.test.number}, ${one.pressName}`}
+            note={
+              one.test === null
+                ? `accepted: can be named in the next test of ${one.pressName}`
+                : `witness from outside of ${one.test.number}, ${one.pressName}`
+            }
             word="sees that test only"
             act="End it"
             busy={busy(one.invitationId)}

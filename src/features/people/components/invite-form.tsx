@@ -24,9 +24,7 @@ export function InviteForm({ shopId, onInvited, onLeave }: InviteFormProps) {
   return (
     <Form
       className="gap-x-8 desktop:grid-cols-2"
-      onSubmit={form.handleSubmit((request) =>
-        invite.mutate(request, { onSuccess: () => onInvited(request.email), onError: showProblem }),
-      )}
+      onSubmit={form.handleSubmit((request) => invite.mutate(request, { onSuccess: () => onInvited(request.email), onError: showProblem }))}
     >
       <div className="empty:hidden desktop:col-span-2">
         <FormError message={errors.root?.message} attempt={submitCount} />

@@ -49,7 +49,12 @@ export function OutsideWitness({ shopId, pressId, waiting }: OutsideWitnessProps
             send()
           }}
         />
-        <Button disabled={pressId === ''} note={pressId === '' ? 'choose the press first' : undefined} busy={invite.isPending && 'Sending'} onClick={send}>
+        <Button
+          disabled={pressId === ''}
+          note={pressId === '' ? 'choose the press first' : undefined}
+          busy={invite.isPending && 'Sending'}
+          onClick={send}
+        >
           Send the invitation
         </Button>
       </div>
