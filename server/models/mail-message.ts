@@ -1,5 +1,5 @@
 import { Model } from 'sequelize'
-import type { InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize'
+import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize'
 import type { MailKind, MailState } from '#shared/api/mail'
 import { countColumn, idColumn, optionalIdColumn, optionalTextColumn, optionalTimeColumn, textColumn, timeColumn } from './columns'
 
@@ -17,6 +17,9 @@ export class MailMessage extends Model<InferAttributes<MailMessage>, InferCreati
   declare messageId: string | null
   declare state: MailState
   declare attempts: number
+  /** The server that is sending it, and until when it is believed to be. */
+  declare leaseHolder: CreationOptional<string | null>
+  declare leaseUntil: CreationOptional<Date | null>
   declare nextAt: Date
   declare lastError: string | null
   declare createdAt: Date
@@ -39,6 +42,8 @@ export function initMailMessage(sequelize: Sequelize): void {
       messageId: optionalTextColumn(),
       state: textColumn(),
       attempts: countColumn(),
+      leaseHolder: optionalIdColumn(),
+      leaseUntil: optionalTimeColumn(),
       nextAt: timeColumn(),
       lastError: optionalTextColumn(),
       createdAt: timeColumn(),

@@ -58,7 +58,7 @@ export function Component() {
       )}
       <KeysetPages
         newer={cursor === undefined ? undefined : to({})}
-        older={list.data?.older == null ? undefined : to({ cursor: list.data.older })}
+        older={list.data?.older ? to({ cursor: list.data.older }) : undefined}
         words={{ newer: 'The newest', older: 'Older' }}
       />
     </Page>

@@ -14,7 +14,13 @@ export function MailList({ mail, isTray }: { mail: readonly MailRow[]; isTray: b
           to={paths.letter.href(letter.id)}
           mark={<Mark name={stateMarks[letter.state]} size={22} />}
           title={letter.subject}
-          note={<span className="wrap-anywhere">{`${kindWords[letter.kind]}, to ${letter.to}`}</span>}
+          note={
+            <>
+              <span className="block wrap-anywhere">{`${kindWords[letter.kind]}, to ${letter.to}`}</span>
+              <span className="block tablet:hidden">{`${stateWord(letter, isTray)}, ${whenWords(letter.createdAt)}`}</span>
+            </>
+          }
+          asideFrom="tablet"
           aside={stateWord(letter, isTray)}
           asideNote={whenWords(letter.createdAt)}
         />

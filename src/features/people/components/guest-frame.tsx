@@ -67,15 +67,15 @@ export function GuestFrame({ children }: { children: ReactNode }) {
             <ProductMark size={36} />
             <span className="min-w-0">
               <span className="block truncate font-semibold">{user.name}</span>
-              <span className="block text-14/[17px] text-faint-scribe">witness from outside</span>
+              <span className="block truncate text-14/[17px] text-faint-scribe">witness from outside</span>
             </span>
           </Link>
-          <Link to={paths.account.href()} className="flex items-center border-l border-ghost px-4 -outline-offset-4! hover:bg-dye">
+          <Link to={paths.account.href()} className="flex shrink-0 items-center border-l border-ghost px-4 -outline-offset-4! hover:bg-dye">
             Account
           </Link>
           <button
             type="button"
-            className="flex items-center border-l border-ghost px-4 -outline-offset-4! hover:bg-dye"
+            className="flex shrink-0 items-center border-l border-ghost px-4 whitespace-nowrap -outline-offset-4! hover:bg-dye"
             onClick={() => void leaveOrSay()}
           >
             {failed ? 'Still signed in' : 'Sign out'}

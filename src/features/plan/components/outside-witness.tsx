@@ -60,7 +60,7 @@ export function OutsideWitness({ shopId, pressId, waiting }: OutsideWitnessProps
       </div>
       <ul aria-live="polite" className="empty:hidden">
         {waiting.map((one) => (
-          <li key={one.id} className="flex items-center gap-2 text-graphite">
+          <li key={one.id} className="flex items-center gap-2 py-1 text-graphite">
             <Mark name="clock" size={20} />
             <span className="wrap-anywhere">{`${one.email} is invited and has not accepted yet; the link holds until ${shortDate(one.expiresAt)}.`}</span>
           </li>
