@@ -157,7 +157,7 @@ describe('the drawing of a press', () => {
       await settle(page)
       const here = await faults(page)
       if (here.length > 0) found[size.width] = here
-      const plate = page.locator('[data-joint]').first().locator('xpath=ancestor::*[contains(@class,"ground-dye")][1]')
+      const plate = page.locator('[data-joint]').first().locator('xpath=ancestor::*[contains(@class,"desktop:sticky")][1]')
       await plate.screenshot({ path: path.join(PICTURES, `drawing-${kind}-${size.width}.png`) })
     }
     expect(found).toEqual({})
@@ -165,6 +165,12 @@ describe('the drawing of a press', () => {
     const printed = page.locator('svg[role="img"]:visible').first()
     expect(await printed.locator('path').count()).toBeGreaterThan(30)
     expect(await page.locator('[data-joint]:visible').count()).toBe(0)
+    const ground = await printed.evaluate((element) => {
+      const colours: string[] = []
+      for (let one = element.parentElement; one; one = one.parentElement) colours.push(getComputedStyle(one).backgroundColor)
+      return colours.find((colour) => colour !== 'rgba(0, 0, 0, 0)')
+    })
+    expect(ground).toBe('rgb(255, 255, 255)')
     await printed.screenshot({ path: path.join(PICTURES, `drawing-${kind}-print.png`) })
   })
 

@@ -133,7 +133,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
           </Section>
         )}
       </div>
-      <div className="ground-dye desktop:col-start-1 desktop:row-span-2 desktop:row-start-1">
+      <div className="ground-dye desktop:col-start-1 desktop:row-span-2 desktop:row-start-1 print:bg-[#fff]">
         <PressPlate
           press={drawn}
           joints={joints.map((joint) => ({
