@@ -69,7 +69,8 @@ export function tagWords(clearance: TagClearance, noChangeSince: string | null, 
   const parsed = parseDecimal(load.text)
   return {
     load: parsed.ok ? groupDigits(parsed.canonical) : load.text,
-    unit: unitLabel(load.unit, { plural: !(parsed.ok && parsed.value === 1) }),
+    // "tons-force" is one word: on the tag it never breaks at its hyphen.
+    unit: unitLabel(load.unit, { plural: !(parsed.ok && parsed.value === 1) }).replace('-', '\u2011'),
     loadNote: [TON[load.unit], load.unit === 'kN' ? undefined : `${kilonewtons(clearance)} in all`].filter(Boolean).join(', '),
     gaugeLabel: `${gaugePressure ? 'Gauge' : 'Load cell'} ${gaugeCode} not past`,
     gaugeLimit: typedWords(gaugePressure ?? load),
