@@ -11,7 +11,7 @@ import { useFiles } from '../../../../lib/attachment-held'
 import type { Placed } from '../../../../lib/attachment-places'
 import { classNames } from '../../../../lib/class-names'
 import { calendarDate } from '../../../../lib/dates'
-import { useCan, useShop } from '../../../../lib/here'
+import { useCan, useShop, useUser } from '../../../../lib/here'
 import { bringIntoView, useAnchor } from '../../../../lib/use-anchor'
 import { useTitle } from '../../../../lib/use-title'
 import { paths } from '../../../../paths'
@@ -23,6 +23,7 @@ import { ChangeForm } from './change-form'
 import { ClearanceFacts } from './clearance-facts'
 import { gathered, History, toldUntil } from './history'
 import { JointsPart } from './joints-part'
+import { readKeptChange } from '../../kept-change'
 import { LedgerFile } from './ledger-file'
 import { LoadPathSection } from './load-path-section'
 import { ofJoint, shownOf } from './press-photos'
@@ -55,8 +56,10 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
   useAnchor()
   const can = useCan()
   const shop = useShop()
-  const [open, setOpen] = useState<OpenForm>(null)
-  const meant = useJointsMeant(open === 'change' || open === 'repair')
+  const user = useUser()
+  const [begun] = useState(() => (can('press:change-report') ? readKeptChange(state.id, user.id) : undefined))
+  const [open, setOpen] = useState<OpenForm>(begun ? 'change' : null)
+  const meant = useJointsMeant(open === 'change' || open === 'repair', begun?.jointIds)
   const append = useAppendToPress(state.id, state.headSeq, open ?? 'joint')
   const joints = state.joints.filter((joint) => !joint.retired).sort((a, b) => a.number - b.number)
   const today = calendarDate(new Date())
