@@ -105,7 +105,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
   )
   return (
     <div className="grid grow grid-cols-[minmax(0,1fr)] content-start desktop:grid-cols-[minmax(22rem,37.5%)_minmax(0,1fr)] desktop:grid-rows-[auto_1fr]">
-      <div id="answer" tabIndex={-1} className={classNames(inset, 'pt-6 pb-4 desktop:col-start-2 desktop:px-8')}>
+      <div id="answer" tabIndex={-1} className={classNames(inset, 'pt-6 pb-4 outline-none desktop:col-start-2 desktop:px-8')}>
         {tagHangs && can('press:tag-off') && (
           <TagPlate why={answer.answer === 'do not use' ? answer.why : ''} send={append.mutate} busy={append.isPending} />
         )}
@@ -169,7 +169,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
       <div className={classNames(inset, 'pt-4 pb-8 desktop:col-start-2 desktop:px-8 desktop:pt-0')}>
         {repairsFirst && <div className="mb-6">{repairs}</div>}
         <div className="grid gap-x-6 gap-y-6 desktop:grid-cols-[minmax(0,500fr)_minmax(0,212fr)]">
-          <div id="joints" tabIndex={-1} className="scroll-mt-4">
+          <div id="joints" tabIndex={-1} className="scroll-mt-4 outline-none">
             <JointsPart {...{ state, joints, walk, spotting, ...sending }} selectedId={meant.selectedId} onSelect={meant.select}>
               <AttachmentStrip className="mt-2" files={files} shown={shownOf(ofJoint(photos, meant.selectedId), state, people)} />
             </JointsPart>
