@@ -24,7 +24,10 @@ describe('the record as a spreadsheet', () => {
     const run = await ApiRun.open()
     await run.driveTo('release')
     const request = run.staff.witness.client.get(address(run.id))
-    const response = await request.buffer(true).parse(binary as never).expect(200)
+    const response = await request
+      .buffer(true)
+      .parse(binary as never)
+      .expect(200)
     expect(response.headers['content-type']).toContain('spreadsheetml.sheet')
     expect(response.headers['content-disposition']).toBe(`attachment; filename="${run.number} Press 2.xlsx"`)
     const workbook = await workbookOf(response)
@@ -39,7 +42,11 @@ describe('the record as a spreadsheet', () => {
     await run.sign('lead').expect(201)
     await run.refresh()
     await run.sign('witness').expect(201)
-    const response = await run.staff.owner.client.get(address(run.id)).buffer(true).parse(binary as never).expect(200)
+    const response = await run.staff.owner.client
+      .get(address(run.id))
+      .buffer(true)
+      .parse(binary as never)
+      .expect(200)
     const words: string[] = []
     ;(await workbookOf(response)).getWorksheet('People and signatures')?.eachRow((row) => row.eachCell((cell) => words.push(cell.text)))
     expect(words).toContain('I was present and read the gauge myself.')
