@@ -75,12 +75,14 @@ export function PrintTag({ pressId, made, tag, old }: PrintTagProps) {
             </Notice>
           )}
           {full && (
-            <Notice>Not every word goes onto this size. {size === 'small' ? 'Print it at A6.' : 'Give the press a shorter name.'}</Notice>
+            <Notice>
+              Not every word goes onto this size. {size === 'small' ? 'Print it at A6.' : 'The page behind the code has all of it.'}
+            </Notice>
           )}
           {old && (
             <Notice>Not connected to the server, so nobody knows whether this still holds. It can be printed when the link is back.</Notice>
           )}
-          <Button kind="next" wide disabled={old || full} onClick={() => window.print()}>
+          <Button kind="next" wide disabled={old || (full && size === 'small')} onClick={() => window.print()}>
             Print this tag
           </Button>
           <p className="text-graphite">In the print window choose no margins and a scale of 100 %, on paper or labels of that size.</p>
