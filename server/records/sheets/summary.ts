@@ -1,5 +1,5 @@
 import type { Workbook, Worksheet } from 'exceljs'
-import { cautionsOf, clearanceArithmetic, clearedLoad, criteriaHeading, energyText, frozenDifferences, headlineOf, inPrint, placesTested, staticLoadsText } from '#shared/proof-test/record'
+import { cautionsOf, clearanceArithmetic, clearedLoad, criteriaHeading, energyText, headlineOf, inPrint, placesTested, staticLoadsText } from '#shared/proof-test/record'
 import { momentText, type RecordOfTest } from '../record'
 import { FIRST_ROW, addSheet, colours, header, heading, put, putRow, type Column, type Content } from '../sheet'
 import { verdictContent } from './criteria'
@@ -81,12 +81,11 @@ export function summarySheet(workbook: Workbook, record: RecordOfTest): void {
   }
   row = criteria(sheet, row + 1, record)
   row = lines(sheet, row + 1, 'Against "accepted"', evaluation.against)
-  const differences = frozenDifferences(record.id, record.entries)
   row = lines(
     sheet,
     row,
     'Today’s arithmetic differs from the evaluation frozen at the conclusion',
-    differences.map(({ what, frozen, today }) => `${what}: frozen ${frozen}; today ${today}`),
+    record.differences.map(({ what, frozen, today }) => `${what}: frozen ${frozen}; today ${today}`),
   )
   row = lines(sheet, row, 'Irregular entries', state.irregular.map(({ seq, kind, rules }) => `Entry ${seq}, ${kind}: against ${rules.join(', ')}`))
   row = lines(sheet, row, 'Reasons given', state.reasons.map(({ seq, rule, reason, by }) => `Entry ${seq}, ${rule}: ${reason} (${record.nameOf(by)})`))
