@@ -1,4 +1,4 @@
-import { arrowHead, circlePath, hatch, pathThrough } from './drawing'
+import { arrowHead, circlePath, estimateTextWidth, hatch, pathThrough } from './drawing'
 import type { Drawing, DrawingItem, InkName, Point, TextItem } from './drawing'
 import { bandEdges, cutAtFrame, lineFrame } from './line-frame'
 import type { LineFrame } from './line-frame'
@@ -63,6 +63,17 @@ function axes(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
   return items
 }
 
+/** A load beside its stage, in one line where it has room before the axis, else with its unit below it. */
+function stageLoad(load: string, y: number, until: number): DrawingItem[] {
+  const style = { size: 14, condensed: true }
+  const [figure = '', ...unit] = load.split(' ')
+  if (unit.length === 0 || 104 + estimateTextWidth(load, 14, 400, true) <= until) return [textItem(104, y + 5, load, 'faint-scribe', style)]
+  return [
+    textItem(104, y + 5, figure, 'faint-scribe', style),
+    textItem(until - 3, y + 22, unit.join(' '), 'faint-scribe', { ...style, anchor: 'end' }),
+  ]
+}
+
 function stageGuides(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
   const items: DrawingItem[] = []
   for (const stage of spec.stages) {
@@ -71,8 +82,7 @@ function stageGuides(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
     if (stage.percent > 0) items.push(strokeItem(`M${from} ${y}H${frame.right}`, 'ghost', 1.6, { dash: '2 5', opacity: 0.8 }))
     if (spec.setting !== 'alone') continue
     items.push(textItem(47, y + 5, stage.label, 'scribe', { size: 16, weight: 600 }))
-    if (stage.load !== undefined)
-      items.push(textItem(104, y + 5, stage.load, 'faint-scribe', { size: 14, condensed: true }))
+    if (stage.load !== undefined) items.push(...stageLoad(stage.load, y, frame.left - 3))
   }
   return items
 }
@@ -87,6 +97,23 @@ function band(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
     strokeItem(hatch([origin, lowEnd, ...corner, highEnd], 10), 'ghost', 1, { opacity: 0.75 }),
     strokeItem(pathThrough(edges.low), 'faint-scribe', 1),
     strokeItem(pathThrough(edges.high), 'faint-scribe', 1),
+  ]
+}
+
+/** The old line beside the new: thin, with hollow readings, and named under the title. */
+function earlier({ earlier: old, setting, width }: LineChartSpec, frame: LineFrame): DrawingItem[] {
+  if (old === undefined || old.points.length < 2) return []
+  const at = old.points.map((point) => ({ x: frame.x(point.x), y: frame.y(point.y) }))
+  const alone = setting === 'alone'
+  const left = alone ? 24 : frame.left + 8
+  const foot = alone ? 52 : frame.ceiling - 2
+  const reading = (point: Point): DrawingItem => ({ kind: 'path', d: circlePath(point, 3), stroke: 'faint-scribe', width: 1.2, fill: 'dye' })
+  return [
+    strokeItem(pathThrough(at), 'faint-scribe', 1),
+    ...at.slice(1).map(reading),
+    strokeItem(`M${left} ${foot - 5}h22`, 'faint-scribe', 1),
+    reading({ x: left + 11, y: foot - 5 }),
+    textItem(left + 30, foot, old.label, 'faint-scribe', { size: width < 300 ? 14 : 16, condensed: true, halo: 'dye' }),
   ]
 }
 
@@ -248,7 +275,7 @@ export function lineDrawing(spec: LineChartSpec): Drawing {
       }),
     )
   items.push(...stageGuides(spec, frame), ...band(spec, frame), ...axes(spec, frame))
-  items.push(...line(spec, frame), ...prediction(spec, frame), ...readings(spec, frame), ...stopMarks(spec, frame))
+  items.push(...earlier(spec, frame), ...line(spec, frame), ...prediction(spec, frame), ...readings(spec, frame), ...stopMarks(spec, frame))
   items.push(...corrections(spec, frame))
   for (const note of layOutNotes(spec, frame)) items.push(...noteItems(note))
   return { width: spec.width, height: spec.height, items }

@@ -56,6 +56,8 @@ export interface LineChartSpec {
   setPoint?: { x: number; ux: number; corrected?: string }
   /** Readings on the way down or of a repeat climb, drawn as a dotted line. */
   comparison?: { x: number; y: number; corrected?: string }[]
+  /** The line of the test that is repeated, under the new one, and what it is called. */
+  earlier?: { label: string; points: { x: number; y: number }[] } | undefined
   xLabel: string
   xUnit: string
   /** Deflection the axis has to reach; rounded up to a labelled step. */

@@ -50,3 +50,13 @@ describe('a reading that was corrected', () => {
     expect(wordsOf(spec).some((text) => text.startsWith('Letter'))).toBe(false)
   })
 })
+
+describe('the load at the top stage', () => {
+  it('has its unit below it where the two would run over the axis', () => {
+    const wide = specOf([firstClimb, repeatClimb])
+    expect(wordsOf(wide)).toContain('12.00 short tons')
+    const narrow = wordsOf(specOf([firstClimb, repeatClimb], 370))
+    expect(narrow).toEqual(expect.arrayContaining(['12.00', 'short tons']))
+    expect(narrow).not.toContain('12.00 short tons')
+  })
+})

@@ -64,12 +64,17 @@ export function lowestLimit(description: Pick<PressDescription, 'rams' | 'train'
 /** How far above a component's rating still counts as at it: rounding of a converted mark, not a margin. */
 const SAME_RATING = 1.0005
 
+/** Whether a component of `rating` (N) carries less than `force` (N), apart from the rounding of a converted mark. */
+export function carriesLess(rating: number, force: number): boolean {
+  return force > rating * SAME_RATING
+}
+
 /** A sentence when the rated load passes the lowest rating in the train, else null. */
 export function ratedLoadRefusal(description: Pick<PressDescription, 'rams' | 'train' | 'ratedLoad'>): string | null {
   const lowest = description.rams.length > 0 ? lowestLimit(description) : null
   if (!lowest) return 'A press needs a ram before it can have a rated load.'
   const rated = toSI(description.ratedLoad)
   if (rated <= 0) return 'The rated load is more than zero.'
-  if (rated <= lowest.force * SAME_RATING) return null
+  if (!carriesLess(lowest.force, rated)) return null
   return `The rated load is ${(rated / 1000).toFixed(1)} kN, and ${lowest.name} carries no more than ${(lowest.force / 1000).toFixed(1)} kN. Rate the press no higher than that.`
 }

@@ -32,6 +32,17 @@ export function forceInstrumentText(instrument: FrozenInstrument, dates: PrintDa
   return `${details.code}, ${inPrint(details.fullScale)}, ±\u00a0${within}, ${due(instrument, dates)}`
 }
 
+/** "T-01 Flat nose, 20 short tons": the tooling of the train, each piece with what it carries. Null where there is none. */
+export function toolingText({ press }: Opened): string | null {
+  const pieces = press.train.filter(({ kind }) => kind === 'tooling')
+  if (pieces.length === 0) return null
+  return pieces
+    .map(({ name, ratedForce, ratedPressure }) =>
+      [name, ...[ratedForce, ratedPressure].flatMap((rating) => (rating ? [inPrint(rating)] : []))].join(', '),
+    )
+    .join('; ')
+}
+
 /** "I-04 to I-06, 0.01 ± 0.005 mm, due 7 Nov 2026": alike ones together, the earliest date due. */
 export function indicatorsText(opened: Opened, dates: PrintDates): string {
   const used = new Set(opened.points.map((point) => point.instrumentId))
@@ -67,6 +78,7 @@ export function recordFacts(record: RecordParts, dates: PrintDates): RecordFact[
     return instrument ? [[instrument.details.kind === 'load-cell' ? 'Load cell' : 'Gauge', forceInstrumentText(instrument, dates)]] : []
   })
   const indicators = indicatorsText(opened, dates)
+  const tooling = toolingText(opened)
   return [
     ...(arithmetic ? [['Load', arithmetic] as const] : []),
     ...(fullest && fullest.force.pressure !== null
@@ -86,6 +98,7 @@ export function recordFacts(record: RecordParts, dates: PrintDates): RecordFact[
     ['Pump hand', pumpHand.relation ? `${pumpHand.name}, ${pumpHand.relation}` : pumpHand.name],
     ...rams,
     ...read,
+    ...(tooling ? [['Tooling', tooling] as const] : []),
     ...(indicators ? [['Indicators', indicators] as const] : []),
     ['Relief', state.setUp?.reliefSet ? `Set to ${state.setUp.reliefSet.text} ${state.setUp.reliefSet.unit}` : 'No setting noted'],
     ['Rule', `${rule}, k\u00a0=\u00a02.${opened.repeats ? ` Repeats ${opened.repeats.number}` : ''}`],

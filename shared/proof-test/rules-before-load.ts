@@ -1,7 +1,7 @@
 import { calibrationState } from '../instruments/model'
 import { nameJoints } from '../press/joints'
 import { loadPathOf } from '../press/load-path'
-import { lowestLimit, ratedLoadRefusal } from '../press/ratings'
+import { carriesLess, lowestLimit, ratedLoadRefusal } from '../press/ratings'
 import { parseDecimal, toSI } from '../units'
 import { SET_UP_ITEMS, type Opened } from './entries'
 import { checkOf } from './expected'
@@ -49,7 +49,7 @@ export const OPENING_RULES: readonly ProofTestRule[] = [
     const highest = opened.protocol.content.stages.at(-1)?.percent ?? 100
     const lowest = lowestLimit(opened.press)
     const force = (highest / 100) * toSI(opened.press.ratedLoad)
-    if (!lowest || force <= lowest.force * 1.0005) return null
+    if (!lowest || !carriesLess(lowest.force, force)) return null
     return `The stage at ${highest} % is ${(force / 1000).toFixed(1)} kN, and ${lowest.name} carries no more than ${(lowest.force / 1000).toFixed(1)} kN. Choose a protocol that stays below it.`
   }),
   opening('R7', 'Every target lies on the scale of the gauge that reads it.', (opened) => {

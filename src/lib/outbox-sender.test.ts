@@ -112,6 +112,23 @@ describe('the outbox and a server that lacks something', () => {
     expect(notes(server)).toEqual(['one', 'two', 'three'])
   })
 
+  it('sends nothing again because of what is said about another ledger', async () => {
+    const server = new LedgerDouble(lead)
+    const box = open(server, 'mixed up')
+    box.sendAs(lead)
+    await send(box, 'one', 'two')
+    box.close()
+    const requests = server.requests.length
+    const elsewhere = new LedgerDouble(lead)
+    const read = async (_id: string, after: number) => ({ ...(await elsewhere.read(other, after)), ledgerId: other })
+    const again = new Outbox({ databaseName: 'mixed up', post: server.post, read, whoIsSignedIn: server.whoIsSignedIn, delay: () => 5 })
+    opened.push(again)
+    again.sendAs(lead)
+    await again.settled()
+    expect(server.requests).toHaveLength(requests)
+    expect((await again.contents()).sent).toHaveLength(2)
+  })
+
   it('asks for nothing again and again when a number will never come: a refused act’s', async () => {
     const server = new LedgerDouble(lead)
     server.refuse = (one) => (one.kind === 'concluded' ? problem(409, 'refused') : null)

@@ -27,7 +27,7 @@ export function Component() {
     <PlanForm
       key={shop.id}
       registers={registers.data}
-      askedPress={search.get('press') ?? ''}
+      asked={{ press: search.get('press') ?? '', repeats: search.get('repeats') ?? '' }}
       onOpened={(testId) => void navigate(paths.runProofTest.href(testId))}
     />
   )

@@ -49,11 +49,11 @@ export class LedgerDouble {
     }
   }
 
-  read = async (_testId: string, after: number): Promise<EntriesResponse> => {
+  read = async (testId: string, after: number): Promise<EntriesResponse> => {
     await new Promise((resolve) => setTimeout(resolve, 0))
     const sealed = this.sealedSeq > 0 ? [{ seq: this.sealedSeq, headHash: '', kid: '', signature: '', sealedAt: '' }] : []
     const entries = this.kept.slice(after)
-    return { ledgerId: this.kept[0]?.ledgerId ?? '', entries, headSeq: this.kept.length, headHash: '', people: {}, sealed }
+    return { ledgerId: testId, entries, headSeq: this.kept.length, headHash: '', people: {}, sealed }
   }
 
   whoIsSignedIn = (): Promise<string> =>

@@ -24,7 +24,9 @@ function inWords(spec: LineChartSpec): string {
   })
   const next = spec.prediction === null ? [] : [`${spec.prediction.caption ?? 'Expected'} ${spec.prediction.text}`]
   const notes = spec.notes.map((note) => note.lines.join(', '))
-  return [`${spec.xLabel} against load`, ...readings, ...next, ...notes].join('. ')
+  const old = spec.earlier?.points.map((point) => `${point.x.toFixed(2)} ${spec.xUnit} at ${Math.round(point.y)} percent`) ?? []
+  const earlier = spec.earlier ? [`${spec.earlier.label}: ${old.join(', ')}`] : []
+  return [`${spec.xLabel} against load`, ...readings, ...next, ...notes, ...earlier].join('. ')
 }
 
 /** Load up, deflection right: readings with their uncertainty, the line through them, and what comes next. */

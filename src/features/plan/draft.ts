@@ -38,13 +38,15 @@ export interface PlanDraft {
   /** The document itself, kept on this device until the test is open. */
   engineerFiles: Attachment[]
   repeatsId: string
+  /** Loose tooling of the register that the force passes through. */
+  toolingIds: string[]
   instrumentOverride: string
 }
 
 /** Stands in the list of pump hands for somebody without an account. */
 export const SOMEBODY_ELSE = 'somebody else'
 
-export function newPlan(nextId: () => string, pressId: string): PlanDraft {
+export function newPlan(nextId: () => string, pressId: string, repeatsId = ''): PlanDraft {
   return {
     id: nextId(),
     entryId: nextId(),
@@ -59,7 +61,8 @@ export function newPlan(nextId: () => string, pressId: string): PlanDraft {
     aboveRating: { percent: '', rule: '' },
     engineer: { name: '', document: '', on: '' },
     engineerFiles: [],
-    repeatsId: '',
+    repeatsId,
+    toolingIds: [],
     instrumentOverride: '',
   }
 }

@@ -42,6 +42,7 @@ const registers: PlanRegisters = {
   presses: [],
   protocols: [{ ...example.protocol, archived: false }],
   instruments: example.instruments.map((instrument) => ({ ...instrument, retired: false })),
+  tooling: [],
   people: Object.entries(names).map(([userId, name]) => ({ userId, name, role: 'lead' as const, addedAt: mark.at, endedAt: null })),
 }
 

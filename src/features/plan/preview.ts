@@ -2,6 +2,7 @@ import { gaugeCanTell, gaugeSuitability } from '#shared/hydraulics/gauge'
 import { typedWords } from '#shared/instruments/words'
 import type { FrozenInstrument } from '#shared/instruments/model'
 import { decideByRules, findingsOf, type Finding } from '#shared/ledger/rules'
+import { decidePress } from '#shared/press/decide'
 import { missingOf } from '#shared/press/may-it-be-used'
 import { loadPathOf } from '#shared/press/load-path'
 import type { PressState } from '#shared/press/state'
@@ -15,6 +16,7 @@ import { decimalsOfStep, formatQuantity, toSI } from '#shared/units'
 import type { PlanRegisters } from './api/get-plan-registers'
 import { typedNumber } from '../../lib/draft-resolver'
 import { netOf, SOMEBODY_ELSE, type PlanDraft } from './draft'
+import { withTooling } from './tooling'
 
 export interface Chosen {
   draft: PlanDraft
@@ -59,7 +61,7 @@ export function previewOpened({ draft, registers, press, shop, lead }: Chosen): 
     shop: { id: shop.id, name: shop.name },
     pressId: press.id,
     pressHeadSeq: Math.max(1, press.headSeq),
-    press: press.description,
+    press: withTooling(press.description, draft.toolingIds, registers),
     joints: press.joints.filter((joint) => !joint.retired),
     stoodStillDays: null,
     instruments,
@@ -105,6 +107,17 @@ export function wouldRefuse(testId: string, opened: Opened, mark: Mark): Finding
     mark,
   }
   return findingsOf(decideByRules(OPENING_RULES, question, []))
+}
+
+/**
+ * What the press's own ledger would refuse this plan by: a repair that is open (P21), and a test that went wrong and is
+ * not named as the one that is repeated (P22). A test under way is said elsewhere.
+ */
+export function pressRefuses(press: PressState, { id, repeatsId }: Pick<PlanDraft, 'id' | 'repeatsId'>) {
+  const payload = { proofTestId: id, number: UNNUMBERED, repeatsId: repeatsId || null }
+  const decision = decidePress(press, { kind: 'test-opened', payload, overrides: [], at: new Date(0).toISOString(), consequence: true })
+  const says = (rule: string): string | null => findingsOf(decision).find((finding) => finding.rule === rule)?.says ?? null
+  return { repair: says('P21'), repeats: says('P22') }
 }
 
 /** What stands between this press and its first load, though a test may be opened with it: the walk-down asks for each. */

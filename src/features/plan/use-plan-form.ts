@@ -9,16 +9,23 @@ import { useKeptDraft } from '../../lib/use-kept-draft'
 import { newPlan, toRequest, type PlanDraft, type PlanLookup, type Stamp } from './draft'
 
 /** Goes up when the form's fields change, so that an older draft isn't poured into it. */
-const VERSION = 4
+const VERSION = 5
 
 const stamp = (): Stamp => ({ deviceId: deviceId(), bootId, monotonicMs: monotonicMs(), observedAt: new Date().toISOString() })
 
-/** The plan's form: its draft outlives a reload. A press named by the address begins a plan for that press. */
-export function usePlanForm(shopId: string, askedPress: string, lookup: PlanLookup) {
+/** What the address asks a plan for: the press, and the test of it that is repeated. */
+export interface Asked {
+  press: string
+  repeats: string
+}
+
+/** The plan's form: its draft outlives a reload. A press or test named by the address begins a plan for it. */
+export function usePlanForm(shopId: string, asked: Asked, lookup: PlanLookup) {
   const name = `plan.${shopId}`
   const [initial] = useState(() => {
     const kept = readDraft<PlanDraft>(name, VERSION)
-    return kept && (askedPress === '' || kept.pressId === askedPress) ? kept : newPlan(newId, askedPress)
+    const fits = kept && (asked.press === '' || kept.pressId === asked.press) && (asked.repeats === '' || kept.repeatsId === asked.repeats)
+    return fits ? kept : newPlan(newId, asked.press, asked.repeats)
   })
   const form = useForm({
     resolver: draftResolver(openTestRequestSchema, (draft: PlanDraft) => toRequest(draft, stamp(), lookup)),

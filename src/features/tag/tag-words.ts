@@ -52,7 +52,7 @@ const where = ({ bedHoles, ramPositions }: TagClearance): string =>
   `Bed ${bedHoles.length === 1 ? 'hole' : 'holes'} ${all(bedHoles)}, ram ${all(ramPositions)}.`
 
 /** How many members without an indicator are named where room is short; the page behind the code names all. */
-const NAMED = 4
+const NAMED = 3
 
 function notMeasured(names: readonly string[], room: 'short' | 'ample'): string {
   if (names.length === 0) return 'no member without an indicator was named.'

@@ -59,7 +59,7 @@ function Rows({ rows, dated }: { rows: readonly DueRow[]; dated: boolean }) {
           to={row.to}
           mark={<Mark name={row.mark} size={26} />}
           title={row.title}
-          note={row.note}
+          note={<span className="max-tablet:hidden">{row.note}</span>}
           aside={
             <span className={row.late ? 'text-stop-ink' : undefined}>{dated ? weekday(row.on).replace(/ \p{L}+$/u, '') : row.due}</span>
           }
@@ -82,7 +82,7 @@ export function CalendarView({ late, months }: CalendarViewProps) {
       </div>
       <div className="mt-6 grid gap-x-10 gap-y-8">
         {late.length > 0 && (
-          <Section title="Late, or waiting for somebody" note={`${late.length} of them`}>
+          <Section title="Late, or waiting for somebody" note={late.length === 1 ? 'one thing' : `${late.length} things`}>
             <Rows rows={late} dated={false} />
           </Section>
         )}

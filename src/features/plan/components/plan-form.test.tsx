@@ -37,6 +37,7 @@ function registers(): PlanRegisters {
       { id: ABOVE, name: shipped.name, version: 1, archived: false, content: shipped.content },
     ],
     instruments: example.instruments.map((instrument) => ({ ...instrument, retired: false })),
+    tooling: [],
     people: Object.entries(names).map(([userId, name]) => ({ userId, name, role: 'lead' as const, addedAt: AT, endedAt: null })),
   }
 }
@@ -91,7 +92,7 @@ function show() {
     <MemoryRouter>
       <QueryClientProvider client={createQueryClient(() => undefined)}>
         <HereContext value={here}>
-          <PlanForm registers={registers()} askedPress={ids.press} onOpened={() => undefined} />
+          <PlanForm registers={registers()} asked={{ press: ids.press, repeats: '' }} onOpened={() => undefined} />
         </HereContext>
       </QueryClientProvider>
     </MemoryRouter>,
@@ -196,5 +197,66 @@ describe('the plan of a test whose estimate is over 100 %', { timeout: 20_000 },
     fireEvent.click(screen.getByText('Open this test'))
     await waitFor(() => expect(opened).toHaveLength(1))
     expect(opened[0]?.engineer).toEqual({ name: 'P. Lindqvist', document: 'Calculation 26-118, issue B', on: '2026-09-01' })
+  })
+})
+
+describe('the plan of a test that repeats one that went wrong', { timeout: 20_000 }, () => {
+  const [first] = ledger.entries
+  if (!first) throw new Error('The press is entered.')
+  const why = 'Softening, 50 to 75 %: 21 %, limit 15 %'
+  const stopped = { proofTestId: ids.test, number: 'PT-0041', jointIds: [], memberIds: [], why }
+  const later = (seq: number, kind: string, payload: object) => ({
+    ...first,
+    id: `01990000-0000-7000-8000-00000000000${seq}`,
+    seq,
+    kind,
+    payload,
+  })
+  const wrong = [
+    first,
+    later(2, 'test-opened', { proofTestId: ids.test, number: 'PT-0041' }),
+    later(3, 'test-stopped', stopped),
+    later(4, 'test-concluded', { proofTestId: ids.test, number: 'PT-0041', conclusion: 'rejected', jointIds: [] }),
+  ]
+  const repairId = wrong[2]?.id
+  const repaired = [...wrong, later(5, 'repair-closed', { repairId, done: 'Bed stiffeners welded out.', doneBy: 'Pell Navarre' })]
+  const serve = (entries: readonly object[]) =>
+    vi.stubGlobal(
+      'fetch',
+      vi.fn((url: string, init?: { method?: string; body?: string }) =>
+        init?.method !== 'POST' && url.includes('/entries') ? json({ ...ledger, entries }) : answer(url, init),
+      ),
+    )
+
+  beforeEach(() => {
+    localStorage.clear()
+    opened = []
+  })
+  afterEach(() => vi.unstubAllGlobals())
+
+  it('names that test by default, and says what went wrong and what was done since', async () => {
+    serve(repaired)
+    show()
+    await waitFor(() => expect(field('repeatsId').value).toBe(ids.test))
+    const repeats = (await screen.findByText('PT-0041', { selector: 'a' })).closest('div')
+    expect(repeats?.textContent).toContain(`PT-0041 was stopped. ${why}`)
+    expect(repeats?.textContent).toContain('Bed stiffeners welded out. Done by Pell Navarre.')
+  })
+
+  it('P22: says at the field that the test to be repeated is missing, and sends nothing', async () => {
+    serve(repaired)
+    show()
+    await waitFor(() => expect(field('repeatsId').value).toBe(ids.test))
+    enter('repeatsId', '')
+    expect(await screen.findByText(/PT-0041 did not end well on this press\. Plan this test as the one that repeats it/)).toBeVisible()
+    fireEvent.click(screen.getByText('Open this test'))
+    expect(opened).toEqual([])
+  })
+
+  it('P21: says at the press that a repair is open, and leads to it', async () => {
+    serve(wrong)
+    show()
+    expect(await screen.findByText(/^A repair is open: PT-0041 was stopped/)).toBeVisible()
+    expect(screen.getByText('To the open repair of this press')).toHaveAttribute('href', expect.stringContaining('#repairs'))
   })
 })

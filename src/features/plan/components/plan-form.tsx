@@ -18,8 +18,10 @@ import { usePlannedPress } from '../api/get-planned-press'
 import type { PlanRegisters } from '../api/get-plan-registers'
 import { useOpenTest } from '../api/open-test'
 import { legsOf, usualPoints, type PlanDraft } from '../draft'
-import { beforeLoad, previewOpened, wouldRefuse } from '../preview'
-import { usePlanForm } from '../use-plan-form'
+import { beforeLoad, pressRefuses, previewOpened, wouldRefuse } from '../preview'
+import { tooWeak } from '../tooling'
+import { usePlanForm, type Asked } from '../use-plan-form'
+import { useRepeated } from '../use-repeated'
 import { BeforeStep } from './before-step'
 import { CheckStep } from './check-step'
 import { ForceStep, instrumentChoices } from './force-step'
@@ -27,17 +29,20 @@ import { LegsStep } from './legs-step'
 import { PeopleStep } from './people-step'
 import { PointsStep } from './points-step'
 import { PressStep } from './press-step'
+import { ToolingStep } from './tooling-step'
 
-type PlanFormProps = { registers: PlanRegisters; askedPress: string; onOpened: (testId: string) => void }
+type PlanFormProps = { registers: PlanRegisters; asked: Asked; onOpened: (testId: string) => void }
+
+const NOT_REFUSED = { repair: null, repeats: null }
 
 /** The plan of a test: opening it freezes what it says and suspends the press's clearance. */
-export function PlanForm({ registers, askedPress, onOpened }: PlanFormProps) {
+export function PlanForm({ registers, asked, onOpened }: PlanFormProps) {
   useTitle('Plan a test')
   const shop = useShop()
   const user = useUser()
   const lead = { id: user.id, name: user.name }
   const today = calendarDate(new Date())
-  const { form, finish } = usePlanForm(shop.id, askedPress, {
+  const { form, finish } = usePlanForm(shop.id, asked, {
     nameOf: (userId) => registers.people.find((person) => person.userId === userId)?.name ?? '',
     contentOf: (protocolId) => registers.protocols.find((protocol) => protocol.id === protocolId)?.content,
   })
@@ -49,21 +54,33 @@ export function PlanForm({ registers, askedPress, onOpened }: PlanFormProps) {
   const planned = usePlannedPress(shop.id, draft.pressId)
   const press = planned.data?.state.id === draft.pressId ? planned.data.state : undefined
   const description = press?.description ?? null
-  const { getValues, setValue } = form
+  const { getValues, setFocus, setValue } = form
 
   useEffect(() => {
     // The usual points of the press come once it is here, unless the draft has points of this press already.
     if (description !== null && getValues('points').length === 0) setValue('points', usualPoints(description, newId))
   }, [description, getValues, setValue])
 
+  useRepeated(form, press)
+  const refused = press ? pressRefuses(press, draft) : NOT_REFUSED
+
   const opened = useMemo(
     () => (press ? previewOpened({ draft, registers, press, shop, lead: { id: user.id, name: user.name } }) : null),
     [draft, press, registers, shop, user.id, user.name],
   )
   const findings = opened ? wouldRefuse(draft.id, opened, { at: new Date().toISOString(), bootId, monotonicMs: monotonicMs() }) : []
+  const weak = tooWeak(draft.toolingIds, registers, opened)
   const taken = press?.underTest?.number ?? null
   const { errors, submitCount } = form.formState
   const submit = form.handleSubmit((request) => {
+    // What is refused stands at its field already: the server would answer the same.
+    if (refused.repair !== null) return setFocus('pressId')
+    if (refused.repeats !== null) return setFocus('repeatsId')
+    // A piece that carries too little is refused where it was chosen, before anything is sent.
+    if (weak.size > 0) {
+      setFocus('toolingIds')
+      return
+    }
     if (!taps.begin()) return
     open.mutate(request, {
       onSuccess: ({ id }) => {
@@ -107,6 +124,7 @@ export function PlanForm({ registers, askedPress, onOpened }: PlanFormProps) {
               number={1}
               registers={registers}
               planned={planned.data}
+              refused={refused}
               today={today}
               onPress={choosePress}
               onProtocol={chooseProtocol}
@@ -120,11 +138,12 @@ export function PlanForm({ registers, askedPress, onOpened }: PlanFormProps) {
               indicators={instrumentChoices(registers, today, ['indicator'])}
               opened={opened}
             />
-            <CheckStep form={form} number={5} opened={opened} engineer={draft.engineer} />
-            <PeopleStep form={form} number={6} registers={registers} shopId={shop.id} lead={lead} />
+            <ToolingStep form={form} number={5} registers={registers} weak={weak} />
+            <CheckStep form={form} number={6} opened={opened} engineer={draft.engineer} />
+            <PeopleStep form={form} number={7} registers={registers} shopId={shop.id} lead={lead} />
             <BeforeStep
               form={form}
-              number={7}
+              number={8}
               opened={opened}
               today={today}
               findings={findings}

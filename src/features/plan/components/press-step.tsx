@@ -5,20 +5,25 @@ import { SelectField } from '../../../components/select-field'
 import type { PlannedPress } from '../api/get-planned-press'
 import type { PlanRegisters } from '../api/get-plan-registers'
 import type { PlanForm } from '../use-plan-form'
+import type { pressRefuses } from '../preview'
+import { repeatableTests } from '../use-repeated'
 import { AboveRating } from './above-rating'
+import { Repeated } from './repeated'
 
 type PressStepProps = {
   form: PlanForm
   number: number
   registers: PlanRegisters
   planned: PlannedPress | undefined
+  /** What the press's own ledger has against this plan, at the field it is about. */
+  refused: ReturnType<typeof pressRefuses>
   today: string
   onPress: (pressId: string) => void
   onProtocol: (protocolId: string) => void
 }
 
 /** Which press, by which protocol, and which test it repeats. */
-export function PressStep({ form, number, registers, planned, today, onPress, onProtocol }: PressStepProps) {
+export function PressStep({ form, number, registers, planned, refused, today, onPress, onProtocol }: PressStepProps) {
   const { errors } = form.formState
   const presses = registers.presses.map((press) => {
     const tested = answerOfRow(press, today).answer === 'under test'
@@ -26,7 +31,7 @@ export function PressStep({ form, number, registers, planned, today, onPress, on
     return { value: press.id, label: tested ? `${label} (under test)` : label, disabled: tested }
   })
   const protocols = registers.protocols.map((protocol) => ({ value: protocol.id, label: `${protocol.name}, version ${protocol.version}` }))
-  const repeatable = planned?.tests.filter((test) => test.result === 'rejected' || test.result === 'abandoned') ?? []
+  const repeatable = repeatableTests(planned)
   const press = form.register('pressId')
   const protocol = form.register('protocolId')
   return (
@@ -35,7 +40,7 @@ export function PressStep({ form, number, registers, planned, today, onPress, on
         label="Press"
         nothing="Choose a press"
         choices={presses}
-        message={errors.pressId && 'Choose a press.'}
+        message={(errors.pressId && 'Choose a press.') ?? refused.repair ?? undefined}
         {...press}
         onChange={(event) => {
           void press.onChange(event)
@@ -57,13 +62,14 @@ export function PressStep({ form, number, registers, planned, today, onPress, on
       {repeatable.length > 0 && (
         <SelectField
           label="Repeats an earlier test"
-          optional
+          optional={planned?.state.toRepeat === null}
           nothing="None"
-          choices={repeatable.map((test) => ({ value: test.id, label: `${test.number}, ${test.result}` }))}
-          message={errors.repeatsId?.message}
+          choices={repeatable.map(({ id, label }) => ({ value: id, label }))}
+          message={errors.repeatsId?.message ?? refused.repeats ?? undefined}
           {...form.register('repeatsId')}
         />
       )}
+      <Repeated form={form} press={planned?.state} repairOpen={refused.repair !== null} />
     </FormStep>
   )
 }

@@ -6,7 +6,7 @@ import { readyAlarm } from '../../../lib/alarm'
 import { clockTime } from '../../../lib/dates'
 import { useTitle } from '../../../lib/use-title'
 import { useWakeLock } from '../../../lib/wake-lock'
-import { Notices } from '../run/notices'
+import { FaultNotice, Notices } from '../run/notices'
 import { ReasonPanel } from '../run/reason-panel'
 import { SlotFrame } from '../run/slots'
 import { useOthersAlarm } from '../use-others-alarm'
@@ -70,7 +70,7 @@ export function AttendScreen({ run, opened }: { run: Run; opened: Opened }): Rea
           }
           over={
             <>
-              {connected && <Notices run={run} />}
+              {connected ? <Notices run={run} device="phone" /> : <FaultNotice run={run} />}
               {over}
             </>
           }

@@ -6,6 +6,7 @@ import { ActionPlate } from '../../../components/run/plates'
 import { clockTime } from '../../../lib/dates'
 import { outbox } from '../../../lib/outbox'
 import { entriesKey } from '../api/get-entries'
+import { outboxWords } from '../outbox-words'
 import { Into } from '../run/slots'
 import type { Run } from '../use-run'
 import { whereItIs } from './attend-model'
@@ -70,9 +71,7 @@ export function Unconnected({ run, opened }: { run: Run; opened: Opened }): Reac
           </>
         )}
         <p className="mt-2 text-16 text-graphite">
-          {mine.length > 0
-            ? 'It is sent when the phone is back. The lead does not see it before.'
-            : 'This phone goes on by itself when the link is back.'}
+          {outboxWords(run, 'phone')} {mine.length > 0 && 'The lead does not see it before.'}
         </p>
       </Into>
       <Into slot="action">

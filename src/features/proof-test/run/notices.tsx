@@ -8,6 +8,7 @@ import { outbox } from '../../../lib/outbox'
 import type { Refused } from '../../../lib/outbox-database'
 import { readStorageState } from '../../../lib/storage-persistence'
 import { paths } from '../../../paths'
+import { outboxWords, type Device } from '../outbox-words'
 import type { Run } from '../use-run'
 
 function Notice({ mark, children, aside }: { mark: MarkName; children: ReactNode; aside?: ReactNode }): ReactElement {
@@ -26,16 +27,9 @@ const signInAgain = (
   </TextLink>
 )
 
-function sendingNotice(run: Run): ReactElement | null {
-  const waiting = run.counts.tablet
-  if (run.box.fault !== null && waiting > 0)
-    return (
-      <Notice mark="not-connected">The stop is not on the server yet. It stands on this page only: leave it open. Say it aloud.</Notice>
-    )
-  const kept =
-    waiting === 0
-      ? 'What is entered now stays on this tablet and is sent when there is a link.'
-      : `${waiting === 1 ? 'One entry is' : `${waiting} entries are`} on this tablet, sent when there is a link.`
+function sendingNotice(run: Run, device: Device): ReactElement | null {
+  const kept = outboxWords(run, device)
+  if (run.box.fault !== null && run.counts.tablet > 0) return <Notice mark="not-connected">{kept}</Notice>
   if (run.connection.signedOut) {
     return (
       <Notice mark="not-connected" aside={signInAgain}>
@@ -56,32 +50,41 @@ function sendingNotice(run: Run): ReactElement | null {
     const heard = run.connection.lastHeard ? ` Last heard ${clockTime(run.connection.lastHeard, { seconds: true })}.` : ''
     return (
       <Notice mark="not-connected">
-        Not connected.{heard} {kept} The test goes on here.
+        Not connected. The test goes on here. {kept}
+        {heard}
       </Notice>
     )
   }
   return null
 }
 
+/** This device can't keep entries: only a stop and a release are taken in. */
+export function FaultNotice({ run }: { run: Run }): ReactElement | null {
+  if (run.box.fault === null) return null
+  return (
+    <div role="alert" className="flex items-center gap-3 bg-stop px-4 py-3 text-18 font-semibold text-on-stop">
+      <Mark name="stop" tone="plate" size={32} />
+      <p>{run.box.fault} It is tried again by itself.</p>
+    </div>
+  )
+}
+
 /** What stands in the way of keeping or sending, and what was refused: over the bench, never over Stop. */
-export function Notices({ run }: { run: Run }): ReactElement {
+export function Notices({ run, device }: { run: Run; device: Device }): ReactElement {
   const others = run.box.pending.some((entry) => entry.authorId !== run.me.id)
   return (
     <>
-      {run.box.fault && (
-        <div role="alert" className="flex items-center gap-3 bg-stop px-4 py-3 text-18 font-semibold text-on-stop">
-          <Mark name="stop" tone="plate" size={32} />
-          <p>{run.box.fault} It is tried again by itself.</p>
-        </div>
-      )}
+      <FaultNotice run={run} />
       {run.box.backSince !== null && (
         <Notice mark="within">
           Entries are kept again since {clockTime(run.box.backSince, { seconds: true })}. What was not taken in before: enter it now.
         </Notice>
       )}
-      <StorageNotice run={run} />
-      {sendingNotice(run)}
-      {others && <Notice mark="wait">Entries of another person wait on this tablet. They are sent when that person signs in here.</Notice>}
+      <StorageNotice run={run} device={device} />
+      {sendingNotice(run, device)}
+      {others && (
+        <Notice mark="wait">Entries of another person wait on this {device}. They are sent when that person signs in here.</Notice>
+      )}
       {run.refused.map((finding) => (
         <Notice
           key={finding.rule}
@@ -96,14 +99,14 @@ export function Notices({ run }: { run: Run }): ReactElement {
         </Notice>
       ))}
       {run.attention.map((refused) => (
-        <RefusedNotice key={refused.entry.id} refused={refused} />
+        <RefusedNotice key={refused.entry.id} refused={refused} device={device} />
       ))}
     </>
   )
 }
 
 /** An act that was refused was not done: it is read, and gone. A fact has happened: it stays until the server takes it. */
-function RefusedNotice({ refused }: { refused: Refused }): ReactElement {
+function RefusedNotice({ refused, device }: { refused: Refused; device: Device }): ReactElement {
   const { entry, problem } = refused
   const isAct = PROOF_TEST_ACTS.has(entry.kind)
   return (
@@ -122,13 +125,13 @@ function RefusedNotice({ refused }: { refused: Refused }): ReactElement {
       }
     >
       The server refused what was entered at {clockTime(entry.observedAt)}: {problem.detail}
-      {!isAct && ' It is kept on this tablet, and counts here as entered.'}
+      {!isAct && ` It is kept on this ${device}, and counts here as entered.`}
     </Notice>
   )
 }
 
 /** Only where entries may have to wait long, and never while somebody stands beside a loaded press. */
-function StorageNotice({ run }: { run: Run }): ReactElement | null {
+function StorageNotice({ run, device }: { run: Run; device: Device }): ReactElement | null {
   const [mayClear, setMayClear] = useState(false)
   const stranded = !run.connection.connected && run.state.loaded === null && run.counts.tablet > 0
   useEffect(() => {
@@ -141,7 +144,7 @@ function StorageNotice({ run }: { run: Run }): ReactElement | null {
   if (!stranded || !mayClear) return null
   return (
     <Notice mark="undecided" aside={<TextLink to={paths.thisDevice.href()}>What to do</TextLink>}>
-      The browser may clear what is not sent, should this tablet run short of room.
+      The browser may clear what is not sent, should this {device} run short of room.
     </Notice>
   )
 }

@@ -1,4 +1,6 @@
 import type { ReactElement } from 'react'
+import { withEarlier } from '#shared/chart/earlier-line'
+import type { LineChartSpec } from '#shared/chart/line-spec'
 import type { Opened } from '#shared/proof-test/entries'
 import { evaluateClimb } from '#shared/proof-test/evaluate-climb'
 import { toSI, type TypedLength } from '#shared/units'
@@ -9,6 +11,7 @@ import { LoadLadder } from '../../../components/instruments/load-ladder'
 import type { Size } from '../../../components/fit'
 import { Mark } from '../../../components/marks'
 import type { RunShape } from '../../../components/run/run-frame'
+import { useEarlierLine } from '../../../lib/use-earlier-line'
 import { jointMark, type Occasion } from '../joint-words'
 import { ladderStages, levelPercent } from '../ladder-model'
 import { lineSpec } from '../line-model'
@@ -85,13 +88,21 @@ function WalkDownDrawing({ run, opened, size, shape }: DrawingProps): ReactEleme
   )
 }
 
+/** The line that is drawn, over that of the test it repeats where that is here: it is never asked for under load. */
+function RunLine({ opened, leg, unloaded, spec }: { opened: Opened; leg: number; unloaded: boolean; spec: LineChartSpec }): ReactElement {
+  const earlier = useEarlierLine(opened, leg, unloaded)
+  return <LineChart {...withEarlier(spec, earlier)} />
+}
+
 /** At the right of the bench, or over it: the line, or on a walk-down the drawing of the press. */
 export function RunPicture(props: DrawingProps & { covered: boolean }): ReactElement {
   const { run, opened, size, shape, covered } = props
   if (covered) return <Covered size={size} name={opened.people.witness.name} />
   if (run.step.name === 'walk-down' || run.step.name === 'after-walk-down') return <WalkDownDrawing {...props} />
   const place = run.state.position
+  const leg = place?.leg ?? 0
   const before = place && place.climb > 0 ? evaluateClimb(run.state, place.leg, place.climb - 1) : null
   const percent = 'percent' in run.step ? run.step.percent : null
-  return <LineChart {...lineSpec(opened, run.evaluation, { ...size, percent, alone: shape === 'phone', before, leg: place?.leg ?? 0 })} />
+  const spec = lineSpec(opened, run.evaluation, { ...size, percent, alone: shape === 'phone', before, leg })
+  return <RunLine opened={opened} leg={leg} unloaded={run.state.loaded === null} spec={spec} />
 }

@@ -14,7 +14,10 @@ import { createQueryClient } from '../../../lib/query-client'
 import { AttendPage } from '../attend/attend-page'
 import { RunPage } from './run-page'
 
-/** The ledger as a server would answer it, with a link that can be cut. Each test has a ledger of its own. */
+/**
+ * The ledger as a server would answer it, with a link that can be cut. Each test has a ledger of its own, and the outbox is
+ * the page's: what it asks late of an earlier test's ledger is not on this server.
+ */
 class FakeServer {
   entries: LedgerEntry[]
   readonly sent: EntryDraft[] = []
@@ -28,12 +31,16 @@ class FakeServer {
 
   fetch = (url: string, init?: RequestInit): Promise<Response> => {
     if (this.down) return Promise.reject(new TypeError('Failed to fetch'))
-    const json = (body: unknown) => Promise.resolve(new Response(JSON.stringify(body), { status: 200 }))
+    const json = (body: unknown, status = 200) => Promise.resolve(new Response(JSON.stringify(body), { status }))
+    const { pathname, searchParams } = new URL(url, 'http://shop.example')
+    if (pathname !== `/api/proof-tests/${this.testId}/entries`) {
+      return json({ type: 'about:blank', title: 'Not found', status: 404, code: 'not-found', detail: 'There is no such test.' }, 404)
+    }
     if (init?.method === 'POST') {
       const { entries } = JSON.parse(String(init.body)) as AppendRequest
       return json({ results: entries.map((draft) => this.keep(draft)), headSeq: this.entries.length, headHash: 'a', resendFrom: null })
     }
-    const after = Number(new URL(url, 'http://shop.example').searchParams.get('after'))
+    const after = Number(searchParams.get('after'))
     const entries = this.entries.filter((entry) => entry.seq > after)
     return json({ ledgerId: this.testId, entries, headSeq: this.entries.length, headHash: 'a', people: names, sealed: [] })
   }
@@ -49,7 +56,15 @@ class FakeServer {
 }
 
 let tests = 0
-const shop = { id: ids.shop, name: 'Hollin Bridge Fabricating', forceUnit: 'short-ton', pressureUnit: 'psi', lengthUnit: 'mm', buildPauseDays: 30, walkDownHours: 12 } as const
+const shop = {
+  id: ids.shop,
+  name: 'Hollin Bridge Fabricating',
+  forceUnit: 'short-ton',
+  pressureUnit: 'psi',
+  lengthUnit: 'mm',
+  buildPauseDays: 30,
+  walkDownHours: 12,
+} as const
 const here = (userId: string) => ({
   user: { id: userId, name: names[userId] ?? '', email: 'someone@shop.example' },
   shops: [{ ...shop, role: 'lead' as const }],
@@ -105,7 +120,11 @@ describe('a run', () => {
     await userEvent.click(await screen.findByRole('button', { name: /^Mark/ }))
     await userEvent.keyboard('5900{Enter}1,64{Enter}0.33{Enter}0.31{Enter}')
     await waitFor(() => expect(sentOf(server, 'row-read')).toHaveLength(1))
-    const { readings, typedAgain, occasion } = sentOf(server, 'row-read')[0]?.payload as { readings: { text: string }[]; typedAgain: string[]; occasion: string }
+    const { readings, typedAgain, occasion } = sentOf(server, 'row-read')[0]?.payload as {
+      readings: { text: string }[]
+      typedAgain: string[]
+      occasion: string
+    }
     expect(readings.map(({ text }) => text)).toEqual(['5900', '1,64', '0.33', '0.31'])
     expect({ typedAgain, occasion }).toEqual({ typedAgain: [], occasion: 'hold start' })
   })
@@ -169,7 +188,13 @@ describe('a run', () => {
     server.down = true
     await userEvent.click(stop)
     expect(await screen.findByText('Open the release valve slowly, now.')).toBeVisible()
-    expect(await screen.findByText(/Not connected\..*One entry waits on this tablet/, {}, { timeout: 4000 })).toBeVisible()
+    expect(
+      await screen.findByText(
+        /Not connected\. The test goes on here\. The stop has reached no other device: say it aloud\. One entry waits on this tablet/,
+        {},
+        { timeout: 4000 },
+      ),
+    ).toBeVisible()
     server.down = false
     window.dispatchEvent(new Event('online'))
     await waitFor(() => expect(sentOf(server, 'stopped')).toHaveLength(1), { timeout: 4000 })
@@ -177,7 +202,12 @@ describe('a run', () => {
 
   it('writes a stop that the readings call for by itself, and once', async () => {
     const bent = stoppedTest().entries
-    const { server } = open(bent.slice(0, bent.findIndex((entry) => entry.kind === 'decided' && entry.payload['decision'] === 'stop')))
+    const { server } = open(
+      bent.slice(
+        0,
+        bent.findIndex((entry) => entry.kind === 'decided' && entry.payload['decision'] === 'stop'),
+      ),
+    )
     expect(await screen.findByText('Open the release valve slowly, now.')).toBeVisible()
     await waitFor(() => expect(sentOf(server, 'decided')).toHaveLength(1))
     expect(sentOf(server, 'decided')[0]?.payload).toMatchObject({ decision: 'stop' })
@@ -201,7 +231,9 @@ describe('a run', () => {
 
 describe('the witness’s view', () => {
   it('hides the lead’s figures at full load until the own reading is in', async () => {
-    const full = upTo(whole, 'row-read', 8).filter((entry) => entry.kind !== 'independent-read').map((entry, index) => ({ ...entry, seq: index + 1 }))
+    const full = upTo(whole, 'row-read', 8)
+      .filter((entry) => entry.kind !== 'independent-read')
+      .map((entry, index) => ({ ...entry, seq: index + 1 }))
     const { server } = open(full, { as: ids.witness, attend: true })
     expect(await screen.findByRole('heading', { name: 'Read the gauge yourself' })).toBeVisible()
     expect(screen.queryByText(/7850|7750/)).toBeNull()
@@ -219,5 +251,11 @@ describe('the witness’s view', () => {
     expect(screen.getByRole('button', { name: /Shout stop/ })).toBeVisible()
     expect(screen.queryByText('5900')).toBeNull()
     expect(screen.queryByRole('timer')).toBeNull()
+    expect(screen.getByText(/What is entered now waits on this phone and is sent when there is a link\./)).toBeVisible()
+    await userEvent.click(screen.getByRole('button', { name: /Shout stop/ }))
+    expect(await screen.findByText(/The stop has reached no other device: say it aloud\. One entry waits on this phone/)).toBeVisible()
+    server.down = false
+    window.dispatchEvent(new Event('online'))
+    await waitFor(() => expect(sentOf(server, 'stopped')).toHaveLength(1), { timeout: 4000 })
   })
 })

@@ -89,7 +89,7 @@ export function RunScreen({ run, opened }: Props): ReactElement {
           line={(size, shape) => <RunPicture run={run} opened={opened} size={size} shape={shape} covered={covered} />}
           over={
             <>
-              <Notices run={run} />
+              <Notices run={run} device="tablet" />
               {overSlot}
             </>
           }

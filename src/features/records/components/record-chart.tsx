@@ -1,7 +1,9 @@
+import { withEarlier } from '#shared/chart/earlier-line'
 import { recordLine } from '#shared/chart/record-line'
 import { Fit } from '../../../components/fit'
 import { LineChart } from '../../../components/instruments/line-chart'
 import type { MarkName } from '../../../components/marks'
+import { useEarlierLine } from '../../../lib/use-earlier-line'
 import type { RecordView } from '../record-view'
 
 const DECISION_MARKS = { 'go-on': 'go-on', wait: 'wait', stop: 'stop' } as const
@@ -14,6 +16,7 @@ const ON_PAPER =
 export function RecordChart({ record, leg }: { record: RecordView; leg: number }) {
   const { opened, evaluation, state } = record
   const climbs = evaluation.climbs.filter((climb) => climb.leg === leg)
+  const earlier = useEarlierLine(opened, leg)
   const label = opened.legs[leg]?.label ?? ''
   if (recordLine(opened, climbs, { width: 640, height: 536 }, state) === null) {
     return (
@@ -38,7 +41,7 @@ export function RecordChart({ record, leg }: { record: RecordView; leg: number }
       >
         {(size) => {
           const spec = recordLine(opened, climbs, size, state)
-          return spec && <LineChart {...spec} stageMarks={[{ percent: 0, mark: 'datum' }, ...marks]} />
+          return spec && <LineChart {...withEarlier(spec, earlier)} stageMarks={[{ percent: 0, mark: 'datum' }, ...marks]} />
         }}
       </Fit>
     </figure>

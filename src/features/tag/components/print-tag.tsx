@@ -45,7 +45,7 @@ export function PrintTag({ pressId, made, tag }: PrintTagProps) {
         </p>
       </div>
       <div className="grid gap-x-10 gap-y-6 desktop:grid-cols-[auto_minmax(0,1fr)] print:block">
-        <div className="justify-self-start border border-rule print:border-0">
+        <div className="self-start justify-self-start border border-rule print:border-0">
           <TagPaper tag={tag} address={made.address} code={made.code} size={size} onFull={setFull} />
         </div>
         <div className="grid max-w-[34rem] content-start gap-4 print:hidden max-desktop:order-first">

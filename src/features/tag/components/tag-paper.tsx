@@ -94,24 +94,24 @@ function Load({ words, small }: { words: ReturnType<typeof tagWords>; small: boo
       <p
         className={classNames(
           'flex items-center font-semibold',
-          small ? 'gap-[2mm] text-[4.2mm] leading-[6mm]' : 'gap-[3mm] text-[6mm] leading-[9mm]',
+          small ? 'gap-[1.6mm] text-[3.9mm] leading-[5.4mm]' : 'gap-[3mm] text-[6mm] leading-[9mm]',
         )}
       >
-        <TickRing className={small ? 'size-[6mm]' : 'size-[9mm]'} />
+        <TickRing className={small ? 'size-[5.4mm]' : 'size-[9mm]'} />
         Cleared up to
       </p>
       <p className={classNames('flex items-center font-bold', small ? 'gap-[2mm]' : 'gap-[3mm]')}>
         <span
           className={classNames(
-            'leading-[1] tracking-[-0.02em]',
-            small ? (long ? 'text-[9mm]' : 'text-[15.5mm]') : long ? 'text-[14mm]' : 'text-[24mm]',
+            'leading-[0.84] tracking-[-0.02em]',
+            small ? (long ? 'text-[9mm]' : 'text-[15mm]') : long ? 'text-[14mm]' : 'text-[24mm]',
           )}
         >
           {words.load}
         </span>
         <span className={classNames('max-w-min leading-[1.02]', small ? 'text-[5.6mm]' : 'text-[9mm]')}>{words.unit}</span>
       </p>
-      {words.loadNote !== '' && <p className={small ? 'text-[2.7mm] leading-[1.1]' : 'mt-[1mm] text-[3.8mm]'}>{words.loadNote}.</p>}
+      {words.loadNote !== '' && <p className={small ? 'text-[2.6mm] leading-[1.1]' : 'mt-[1mm] text-[3.8mm]'}>{words.loadNote}.</p>}
     </div>
   )
 }
@@ -177,9 +177,9 @@ function Cleared({ tag, clearance, address, code, size, onFull }: Given & { clea
         <div className="shrink-0 px-[2.4mm] pt-[1.2mm]">
           <Head tag={tag} size={size} />
           <Edge />
-          <div className="flex justify-between gap-[2mm] pt-[0.8mm] pb-[0.6mm]">
+          <div className="flex justify-between gap-[2mm] pt-[0.8mm] pb-[0.4mm]">
             <Load words={words} small />
-            <Code address={address} code={code} className="-mt-[0.8mm] size-[25mm]" />
+            <Code address={address} code={code} className="-mt-[1.4mm] -mr-[1.4mm] size-[24mm]" />
           </div>
         </div>
         <div className="flex min-h-0 grow border-t-[0.4mm] border-black">

@@ -13,6 +13,7 @@ import { useTitle } from '../../../../lib/use-title'
 import { useAppendToPress } from '../../api/append-to-press'
 import type { FormUnits } from './draft'
 import { draftOfPress, editsOf } from './edits'
+import { EditsEffectNote } from './edits-effect'
 import { FrameStep } from './frame-step'
 import { JointsStep } from './joints-step'
 import { LivePlate } from './live-plate'
@@ -69,7 +70,10 @@ export function EditPressForm({ state, description, units, onDone }: EditPressFo
             <RatedLoadStep form={form} number={4} />
             <MembersStep form={form} number={5} units={units} />
             <JointsStep form={form} number={6} units={units} />
-            <FormStep number={7} title="Why" note="A clearance ends with this. Joints that are described anew are examined again.">
+            <FormStep number={7} title="Why" note="What was written down before stays in the history of the press.">
+              <WholeRow>
+                <EditsEffectNote form={form} state={state} />
+              </WholeRow>
               <WholeRow>
                 <TextArea label="Why it is changed" value={why} message={said} onChange={(event) => setWhy(event.target.value)} />
               </WholeRow>

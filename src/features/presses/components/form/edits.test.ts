@@ -3,7 +3,7 @@ import { foldPress } from '#shared/press/apply'
 import type { PressDraft } from '#shared/press/entries'
 import { openedPayload } from '../../../../../tests/factories/test-press'
 import { pressFormSchema, toPayload } from './draft'
-import { draftOfPress, editsOf } from './edits'
+import { draftOfPress, editsOf, effectOf } from './edits'
 
 const { press: description, joints } = openedPayload()
 const ID = '01990000-0000-7000-8000-000000000001'
@@ -89,7 +89,7 @@ describe('changing what is written down about a press', () => {
     expect(editsOf(known, asIs, 'Nothing.')).toEqual([])
     draft.joints = draft.joints.map((joint) => ({ ...joint, strength: null }))
     const taken = editsOf(known, pressFormSchema.parse(toPayload(draft)), 'It was wrong.')
-    expect(taken).toMatchObject([{ kind: 'joint-described', payload: { joint: { id: first.id, strength: null } } }])
+    expect(taken).toMatchObject([{ kind: 'strength-described', payload: { members: [], joints: [{ jointId: first.id, strength: null }] } }])
   })
 
   it('refuses a rated load above the lowest rating, at its field', () => {
@@ -107,5 +107,116 @@ describe('changing what is written down about a press', () => {
     if (!first || !second) throw new Error('The press has joints.')
     second.number = first.number
     expect(pressFormSchema.safeParse(toPayload(draft)).error?.issues).toMatchObject([{ path: ['joints', 1, 'number'] }])
+  })
+})
+
+describe('what changing it does, said before it is saved', () => {
+  const clearance = {
+    load: { text: '11.7', unit: 'short-ton' as const },
+    loadNewton: 104_088,
+    gaugePressure: null,
+    gaugeCode: 'G-02',
+    instrumentIds: [],
+    bedHoles: ['4'],
+    ramPositions: ['central'],
+    tooling: [],
+    until: '2999-01-01',
+    clearedOn: '2026-09-15',
+    clearedBy: 'Marit Sandoval',
+    proofTestId: ID,
+    number: 'PT-0043',
+    staticLoads: 1,
+    notMeasured: [],
+  }
+  const accepted = {
+    result: 'accepted' as const,
+    method: 'visual' as const,
+    by: ID,
+    at: '2026-09-15T08:00:00.000Z',
+    remark: '',
+    proofTestNumber: null,
+  }
+  const cleared = {
+    ...state,
+    joints: state.joints.map((joint) => ({ ...joint, examination: accepted })),
+    clearance: { is: 'cleared' as const, clearance },
+  }
+  const effect = (change: (draft: ReturnType<typeof draftOfPress>) => void) => {
+    const draft = draftOfPress(cleared, description, units)
+    change(draft)
+    const edits = editsOf(cleared, pressFormSchema.parse(toPayload(draft)), 'It was measured again.')
+    return { kinds: edits.map((one) => one.kind), ...effectOf(cleared, edits) }
+  }
+  const firstJoint = (draft: ReturnType<typeof draftOfPress>) => {
+    const [joint] = draft.joints
+    if (!joint) throw new Error('The press has joints.')
+    return joint
+  }
+
+  it('another name or purpose leaves clearance and joints as they are', () => {
+    const renamed = effect((draft) => {
+      draft.description.name = 'Old Hundred'
+      draft.description.whatFor = 'bending'
+    })
+    expect(renamed).toEqual({ kinds: ['described'], clearance: 'stands', toExamine: [] })
+  })
+
+  it('sizes and materials of members are written down by themselves and leave the clearance', () => {
+    const known = {
+      ...cleared,
+      description: {
+        ...description,
+        members: description.members.map((member) => (member.kind === 'bed-beam' ? { ...member, strength: undefined } : member)),
+      },
+    }
+    const bed = {
+      role: 'beam' as const,
+      section: {
+        shape: 'flat' as const,
+        height: { text: '80', unit: 'mm' as const },
+        width: { text: '20', unit: 'mm' as const },
+        sideBySide: 2,
+        plates: [],
+      },
+      material: { grade: 'S355JR' },
+      support: 'both ends' as const,
+      span: { text: '640', unit: 'mm' as const },
+      ramOffset: null,
+      hole: null,
+      loadShare: null,
+    }
+    const now = {
+      description: {
+        ...description,
+        members: description.members.map((member) => (member.kind === 'bed-beam' ? { ...member, strength: bed } : member)),
+      },
+      joints: pressFormSchema.parse(toPayload(draftOfPress(cleared, description, units))).joints,
+    }
+    const edits = editsOf(known, now, 'Measured.')
+    const bedId = description.members.find((member) => member.kind === 'bed-beam')?.id
+    expect(edits).toEqual([
+      { kind: 'strength-described', payload: { members: [{ memberId: bedId, strength: bed }], joints: [], why: 'Measured.' } },
+    ])
+    expect(effectOf(known, edits)).toEqual({ clearance: 'stands', toExamine: [] })
+  })
+
+  it('another measure of the frame ends it', () => {
+    const widened = effect((draft) => {
+      draft.description.dimensions.opening = { text: '900', unit: 'mm' }
+    })
+    expect(widened).toEqual({ kinds: ['described'], clearance: 'ends', toExamine: [] })
+  })
+
+  it('a joint that is described anew or added ends it, and is to be examined', () => {
+    const other = effect((draft) => {
+      firstJoint(draft).detail = 'fillet 10 mm'
+      draft.joints.push({ ...firstJoint(draft), id: '01990000-0000-7000-8000-0000000000bb', number: 9 })
+    })
+    expect(other).toEqual({ kinds: ['joint-described', 'joint-added'], clearance: 'ends', toExamine: [1, 9] })
+  })
+
+  it('where nothing was cleared, nothing ends', () => {
+    const edits = editsOf(state, { ...pressFormSchema.parse(toPayload(draftOfPress(state, description, units))), joints: [] }, 'Torn down.')
+    expect(effectOf(state, edits).clearance).toBe('none in force')
   })
 })

@@ -1,4 +1,5 @@
-import type { PressDraft } from '#shared/press/entries'
+import { applyPress } from '#shared/press/apply'
+import { PRESS_VERSION, type PressDraft } from '#shared/press/entries'
 import type { Joint, PressDescription } from '#shared/press/model'
 import type { PressJoint, PressState } from '#shared/press/state'
 import type { Typed, Unit } from '#shared/units'
@@ -82,22 +83,82 @@ function same(a: unknown, b: unknown): boolean {
   return [...keys].every((key) => same((a as Record<string, unknown>)[key], (b as Record<string, unknown>)[key]))
 }
 
+type StrengthOf<Kind extends 'memberId' | 'jointId', Part extends { strength?: unknown }> = Record<Kind, string> & {
+  strength: NonNullable<Part['strength']> | null
+}
+
+const withoutStrengths = (description: PressDescription | null) =>
+  description && { ...description, members: description.members.map(({ strength: _strength, ...member }) => member) }
+
+/** Members of which other sizes or another material are known now. */
+function strengthsOfMembers(state: PressState, now: PressDescription): StrengthOf<'memberId', PressDescription['members'][number]>[] {
+  return now.members.flatMap((member) => {
+    const earlier = state.description?.members.find((one) => one.id === member.id)
+    const changed = earlier !== undefined && !same(earlier.strength, member.strength)
+    return changed ? [{ memberId: member.id, strength: member.strength ?? null }] : []
+  })
+}
+
+const sameButStrength = ({ strength: _before, ...before }: Joint, { strength: _after, ...after }: Joint): boolean => same(before, after)
+
 /**
  * The entries that turn the press as it is written down into what the form says: joints that hold a new member
- * come after the description that names it, and joints that are gone before the one that forgets theirs.
+ * come after the description that names it, and joints that are gone before the one that forgets theirs. Sizes and
+ * materials that somebody looked up are written down by themselves: the press is what it was, and so is its clearance.
  */
 export function editsOf(state: PressState, now: { description: PressDescription; joints: Joint[] }, why: string): PressDraft[] {
   const before = inUse(state)
   const retired = before.filter((joint) => !now.joints.some((one) => one.id === joint.id))
   const added = now.joints.filter((joint) => !before.some((one) => one.id === joint.id))
-  const changed = now.joints.filter((joint) => {
+  const pairs = now.joints.flatMap((joint) => {
     const earlier = before.find((one) => one.id === joint.id)
-    return earlier !== undefined && !same(earlier, joint)
+    return earlier && !same(earlier, joint) ? [{ earlier, joint }] : []
   })
+  const changed = pairs.filter(({ earlier, joint }) => !sameButStrength(earlier, joint))
+  const sized = pairs.filter(({ earlier, joint }) => sameButStrength(earlier, joint))
+  const another = !same(withoutStrengths(state.description), withoutStrengths(now.description))
+  const strengths = {
+    // A description that is written anew says the sizes of its members along with it.
+    members: another ? [] : strengthsOfMembers(state, now.description),
+    joints: sized.map(({ joint }) => ({ jointId: joint.id, strength: joint.strength ?? null })),
+  }
+  const sizes = strengths.members.length + strengths.joints.length > 0
   return [
     ...retired.map((joint): PressDraft => ({ kind: 'joint-retired', payload: { jointId: joint.id, why } })),
-    ...(same(state.description, now.description) ? [] : [{ kind: 'described', payload: { description: now.description, why } } as const]),
-    ...changed.map((joint): PressDraft => ({ kind: 'joint-described', payload: { joint, why } })),
+    ...(another ? [{ kind: 'described', payload: { description: now.description, why } } as const] : []),
+    ...(sizes ? [{ kind: 'strength-described', payload: { ...strengths, why } } as const] : []),
+    ...changed.map(({ joint }): PressDraft => ({ kind: 'joint-described', payload: { joint, why } })),
     ...added.map((joint): PressDraft => ({ kind: 'joint-added', payload: { joint } })),
   ]
+}
+
+/** The press as it would be after entries that nobody has made yet, by the same fold that the ledger uses. */
+function afterEdits(state: PressState, edits: readonly PressDraft[]): PressState {
+  const at = new Date().toISOString()
+  return edits.reduce((before, { kind, payload }, index): PressState => {
+    const seq = before.headSeq + 1
+    const envelope = { id: `edit-${index}`, ledgerId: state.id, v: PRESS_VERSION, authorId: '', deviceId: '', deviceSeq: seq }
+    const moment = { basedOnSeq: before.headSeq, observedAt: at, bootId: '', monotonicMs: 0, receivedAt: at }
+    const rest = { attachments: [], overrides: [], irregular: [], prevHash: before.headHash, hash: before.headHash, seq }
+    return applyPress(before, { ...envelope, ...moment, ...rest, kind, payload })
+  }, state)
+}
+
+export interface EditsEffect {
+  clearance: 'ends' | 'stands' | 'none in force'
+  /** Numbers of joints that are examined and would not be any more, or that are new. */
+  toExamine: number[]
+}
+
+/** What edits do to clearance and joints, said before they are saved. */
+export function effectOf(state: PressState, edits: readonly PressDraft[]): EditsEffect {
+  const after = afterEdits(state, edits)
+  const wasExamined = new Set(state.joints.filter((joint) => joint.examination !== null).map((joint) => joint.id))
+  const known = new Set(state.joints.map((joint) => joint.id))
+  const toExamine = after.joints
+    .filter((joint) => !joint.retired && joint.examination === null && (wasExamined.has(joint.id) || !known.has(joint.id)))
+    .map((joint) => joint.number)
+  const inForce = state.clearance.is === 'cleared' || (state.clearance.is === 'suspended' && state.clearance.clearance !== null)
+  const clearance = !inForce ? 'none in force' : after.clearance.is === 'withdrawn' ? 'ends' : 'stands'
+  return { clearance, toExamine }
 }

@@ -115,9 +115,7 @@ export function Answer({ answer, state, today }: AnswerProps) {
         />
       )
     case 'do not use':
-      return (
-        <NotToBeUsed title="Do not use" why={answer.why} standing={standing(state.clearance, today)} missing={answer.missing} />
-      )
+      return <NotToBeUsed title="Do not use" why={answer.why} standing={standing(state.clearance, today)} missing={answer.missing} />
   }
 }
 

@@ -11,7 +11,8 @@ function clearanceLine({ clearance }: PressState, { rule }: ChangePreview): Line
   if (clearance.is !== 'cleared' && clearance.is !== 'suspended')
     return { mark: 'not-read', says: 'No clearance is in force, so none ends with it.' }
   if (rule.clearance === 'stands') return { mark: 'within', says: 'The clearance stands as it is.' }
-  if (rule.clearance === 'ends') return { mark: 'stop', says: 'The clearance ends with it. The press needs a proof test before it is used.' }
+  if (rule.clearance === 'ends')
+    return { mark: 'stop', says: 'The clearance ends with it. The press needs a proof test before it is used.' }
   return clearance.is === 'cleared'
     ? { mark: 'wait', says: 'The clearance waits: the press is not used until these joints are accepted again.' }
     : { mark: 'wait', says: 'The clearance stays suspended.' }
@@ -23,7 +24,10 @@ function jointsLine({ touched }: ChangePreview, all: number): Line {
   const names = nameJoints(touched.map((joint) => joint.number))
   return {
     mark: 'undecided',
-    says: touched.length === all && all > 1 ? `Every joint, ${names.replace('joints ', '')}, falls back to unexamined.` : `${capital(names)} ${falls}.`,
+    says:
+      touched.length === all && all > 1
+        ? `Every joint, ${names.replace('joints ', '')}, falls back to unexamined.`
+        : `${capital(names)} ${falls}.`,
   }
 }
 
@@ -32,7 +36,9 @@ type ChangeEffectProps = { state: PressState; change: PressChange['change'] | un
 /** What a change touches and what it does, by its numbered rule, before anybody enters it. */
 export function ChangeEffect({ state, change, jointIds }: ChangeEffectProps) {
   if (change === undefined) {
-    return <p className="border-y border-dashed border-rule py-3 text-graphite">What it does stands here as soon as you say what happened.</p>
+    return (
+      <p className="border-y border-dashed border-rule py-3 text-graphite">What it does stands here as soon as you say what happened.</p>
+    )
   }
   const preview = previewChange(state, { change, jointIds: [...jointIds] })
   const all = state.joints.filter((joint) => !joint.retired).length

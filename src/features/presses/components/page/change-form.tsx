@@ -38,7 +38,8 @@ export function ChangeForm({ state, chosen, onToggle, send, busy, onDone }: Chan
   const change = useWatch({ control: form.control, name: 'change' }) ?? undefined
   const joints = state.joints.filter((joint) => !joint.retired).sort((a, b) => a.number - b.number)
   const ends = change !== undefined && state.clearance.is === 'cleared' && changeRule(change).clearance
-  const note = ends === 'ends' ? 'the clearance ends with it' : ends === 'waits for the joints' ? 'the clearance waits from then on' : undefined
+  const note =
+    ends === 'ends' ? 'the clearance ends with it' : ends === 'waits for the joints' ? 'the clearance waits from then on' : undefined
   return (
     <Form
       onSubmit={form.handleSubmit((payload) =>

@@ -135,7 +135,9 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
           onSelect={meant.tap}
         >
           {!path.closed && <p>{path.gap}</p>}
-          {meant.choosing && <p role="status">{meant.chosen.length === 0 ? 'Tap the joints that are meant.' : `${meant.chosen.length} marked.`}</p>}
+          {meant.choosing && (
+            <p role="status">{meant.chosen.length === 0 ? 'Tap the joints that are meant.' : `${meant.chosen.length} marked.`}</p>
+          )}
         </PressPlate>
       </div>
       <div className={classNames(inset, 'pt-4 pb-8 desktop:col-start-2 desktop:px-8 desktop:pt-0')}>

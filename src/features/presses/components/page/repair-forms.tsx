@@ -60,7 +60,10 @@ export function RepairCloseForm({ pressId, repair, send, busy, onDone }: RepairF
     <Form
       className="mt-3"
       onSubmit={form.handleSubmit((payload) =>
-        send([{ kind: 'repair-closed', payload: { repairId: repair.id, ...payload }, attachments: photos }], { onSuccess: onDone, onError }),
+        send([{ kind: 'repair-closed', payload: { repairId: repair.id, ...payload }, attachments: photos }], {
+          onSuccess: onDone,
+          onError,
+        }),
       )}
     >
       <FormError message={errors.root?.message} attempt={submitCount} />
@@ -85,7 +88,14 @@ export function RepairCloseForm({ pressId, repair, send, busy, onDone }: RepairF
 const openSchema = PRESS_PAYLOADS['repair-opened'].pick({ why: true })
 
 /** Somebody saw something that has to be put right before the press is loaded again. */
-export function RepairOpenForm({ state, chosen, onToggle, send, busy, onDone }: Sending & Chosen & { state: PressState; onDone: () => void }) {
+export function RepairOpenForm({
+  state,
+  chosen,
+  onToggle,
+  send,
+  busy,
+  onDone,
+}: Sending & Chosen & { state: PressState; onDone: () => void }) {
   const form = useForm({ resolver: zodResolver(openSchema), defaultValues: { why: '' } })
   const [photos, setPhotos] = useState<Attachment[]>([])
   const [memberIds, setMemberIds] = useState<readonly string[]>([])

@@ -1,6 +1,7 @@
 import type { ReactElement } from 'react'
 import { CartesianGrid, ErrorBar, Line, LineChart, ReferenceLine, XAxis, YAxis } from 'recharts'
 import type { ClimbHistory } from '#shared/api/press-history'
+import { multiples, roundSteps, tidy } from '#shared/chart/ticks'
 import { formatNumber, toUnit, unitLabel, type LengthUnit } from '#shared/units'
 import { Fit } from '../../../../components/fit'
 import { MarkShape } from '../../../../components/marks'
@@ -60,10 +61,21 @@ function datesOf(climbs: readonly ClimbHistory[], [from, to]: [number, number], 
   return shown
 }
 
+/** A scale of round steps that takes in every figure, from zero where the distance from nothing is what counts. */
+function scaleOf(reach: readonly number[], fromZero: boolean): { domain: [number, number]; ticks: number[]; decimals: number } {
+  const low = fromZero ? Math.min(0, ...reach) : Math.min(...reach)
+  const high = Math.max(...reach)
+  const span = high - low || Math.abs(high) || 1
+  const [step = span] = roundSteps(span / 3, span * 2, [1, 2, 5])
+  const from = Math.floor(tidy(low / step)) * step
+  const to = Math.ceil(tidy(high / step)) * step
+  const end = to === from ? from + step : to
+  return { domain: [from, end], ticks: multiples(step, from, end), decimals: Math.max(0, -Math.floor(Math.log10(step) + 1e-9)) }
+}
+
 interface PanelProps {
   title: string
   unit: string
-  decimals: number
   points: Point[]
   span: [number, number]
   dates: number[]
@@ -81,12 +93,9 @@ const LEFT = 64
 const RIGHT = 24
 const TOP = 34
 
-function Panel({ title, unit, decimals, points, span, dates, width, height, foot, fromZero }: PanelProps): ReactElement {
+function Panel({ title, unit, points, span, dates, width, height, foot, fromZero }: PanelProps): ReactElement {
   const reach = points.flatMap(({ value, U, limit }) => [value - U, value + U, ...(limit === null ? [] : [limit])])
-  const low = fromZero ? Math.min(0, ...reach) : Math.min(...reach)
-  const high = Math.max(...reach)
-  const room = (high - low || Math.abs(high) || 1) * 0.15
-  const domain: [number, number] = [fromZero && low === 0 ? 0 : low - room, high + room]
+  const { domain, ticks, decimals } = scaleOf(reach, fromZero)
   return (
     <div className="relative">
       <p className="absolute top-1 left-4 z-10 font-semibold">
@@ -120,7 +129,8 @@ function Panel({ title, unit, decimals, points, span, dates, width, height, foot
           type="number"
           width={LEFT}
           domain={domain}
-          tickCount={4}
+          ticks={ticks}
+          interval={0}
           tickFormatter={(value: number) => formatNumber(value, decimals)}
           tick={words}
           tickLine={{ stroke: 'var(--scribe)' }}
@@ -129,8 +139,18 @@ function Panel({ title, unit, decimals, points, span, dates, width, height, foot
         {points.some(({ limit }) => limit !== null) && (
           <Line dataKey="limit" stroke="none" dot={<Limit />} activeDot={false} isAnimationActive={false} legendType="none" />
         )}
-        <Line dataKey="value" type="linear" stroke="var(--scribe)" strokeWidth={1.8} dot={<Reading />} activeDot={false} isAnimationActive={false}>
-          {points.some(({ U }) => U > 0) && <ErrorBar dataKey="U" width={6} strokeWidth={1.6} stroke="var(--scribe)" direction="y" />}
+        <Line
+          dataKey="value"
+          type="linear"
+          stroke="var(--scribe)"
+          strokeWidth={1.8}
+          dot={<Reading />}
+          activeDot={false}
+          isAnimationActive={false}
+        >
+          {points.some(({ U }) => U > 0) && (
+            <ErrorBar dataKey="U" width={6} strokeWidth={1.6} stroke="var(--scribe)" direction="y" isAnimationActive={false} />
+          )}
         </Line>
       </LineChart>
     </div>
@@ -160,7 +180,6 @@ export function SofteningCharts({ climbs, lengthUnit }: { climbs: readonly Climb
     {
       title: 'Stiffness',
       unit: stiffness.label,
-      decimals: stiffness.decimals,
       fromZero: false,
       points: pointsOf(climbs, ({ stiffness: value, stiffnessU: U }) => ({
         value: value === null ? null : stiffness.of(value),
@@ -170,14 +189,12 @@ export function SofteningCharts({ climbs, lengthUnit }: { climbs: readonly Climb
     {
       title: 'Permanent set',
       unit: unitLabel(lengthUnit),
-      decimals: lengthUnit === 'in' ? 4 : 2,
       fromZero: true,
       points: pointsOf(climbs, ({ set, setLimit }) => ({ value: length(set), limit: length(setLimit) })),
     },
     {
       title: 'Pressure loss',
       unit: '% in the hold at full load',
-      decimals: 1,
       fromZero: true,
       points: pointsOf(climbs, ({ pressureLoss, pressureLossLimit }) => ({ value: share(pressureLoss), limit: share(pressureLossLimit) })),
     },

@@ -49,7 +49,9 @@ export interface StiffnessChange {
  * (JCGM 100, 5.1.6). It is softer only when the difference is outside that; null with fewer than two lines.
  */
 export function stiffnessChange(climbs: readonly ClimbHistory[]): StiffnessChange | null {
-  const lines = climbs.filter(({ stiffness }) => stiffness !== null)
+  const read = climbs.filter(({ stiffness }) => stiffness !== null)
+  const known = read.filter(({ stiffnessU }) => stiffnessU !== null)
+  const lines = known.length > 1 ? known : read
   const from = lines[0]
   const to = lines.at(-1)
   if (!from?.stiffness || !to?.stiffness || from === to) return null
@@ -113,7 +115,10 @@ export function rowOf(climb: ClimbHistory, length: LengthUnit) {
       stiffness === null
         ? NONE
         : `${formatNumber(of(stiffness), decimals)}${stiffnessU === null ? '' : ` ± ${formatNumber(of(stiffnessU), decimals)}`} ${label}`,
-    set: set === null ? NONE : against(formatQuantity(set, length, places), setLimit === null ? null : formatQuantity(setLimit, length, places)),
+    set:
+      set === null
+        ? NONE
+        : against(formatQuantity(set, length, places), setLimit === null ? null : formatQuantity(setLimit, length, places)),
     loss: pressureLoss === null ? NONE : against(percent(pressureLoss), pressureLossLimit === null ? null : percent(pressureLossLimit)),
   }
 }

@@ -127,11 +127,13 @@ function Shown({ series }: { series: readonly Series[] }) {
         />
       )}
       <InWords climbs={climbs} />
-      <div className="ground-dye mt-3 max-tablet:-mx-4">
-        <Suspense fallback={<div className="h-[34rem]" />}>
-          <SofteningCharts climbs={climbs} lengthUnit={lengthUnit} />
-        </Suspense>
-      </div>
+      {climbs.length > 1 && (
+        <div className="ground-dye mt-3 max-tablet:-mx-4">
+          <Suspense fallback={<div className="h-[37rem]" />}>
+            <SofteningCharts climbs={climbs} lengthUnit={lengthUnit} />
+          </Suspense>
+        </div>
+      )}
       <Table series={shown} length={lengthUnit} />
     </>
   )
