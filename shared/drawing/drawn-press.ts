@@ -1,8 +1,8 @@
-import type { PressDescription } from '#shared/press/model'
-import type { PressJoint } from '#shared/press/state'
-import { parseDecimal, toSI, type LengthUnit } from '#shared/units'
-import type { JointMarkState } from '#shared/drawing/balloon-items'
-import type { DrawnPress } from '#shared/drawing/frame'
+import type { PressDescription } from '../press/model'
+import type { PressJoint } from '../press/state'
+import { parseDecimal, toSI, type LengthUnit } from '../units'
+import type { JointMarkState } from './balloon-items'
+import type { DrawnPress } from './frame'
 
 type Measure = { text: string; unit: LengthUnit | '' } | null
 
