@@ -10,18 +10,19 @@ export interface PrintDates {
   dateAndTime(value: string): string
 }
 
-function utc(value: string, options: Intl.DateTimeFormatOptions): string {
-  return new Intl.DateTimeFormat('en-GB', { ...options, timeZone: 'UTC' }).format(new Date(value))
-}
+const utc = (options: Intl.DateTimeFormatOptions): Intl.DateTimeFormat => new Intl.DateTimeFormat('en-GB', { ...options, timeZone: 'UTC' })
+const SHORT = utc({ day: 'numeric', month: 'short', year: 'numeric' })
+const LONG = utc({ day: 'numeric', month: 'long', year: 'numeric' })
+const CLOCK = utc({ hour: '2-digit', minute: '2-digit', hour12: false })
 
 // British English writes September with four letters; three keep columns even.
-const shortDate = (value: string): string => utc(value, { day: 'numeric', month: 'short', year: 'numeric' }).replace('Sept', 'Sep')
-const clockTime = (value: string): string => utc(value, { hour: '2-digit', minute: '2-digit', hour12: false })
+const shortDate = (value: string): string => SHORT.format(new Date(value)).replace('Sept', 'Sep')
+const clockTime = (value: string): string => CLOCK.format(new Date(value))
 
 /** Days and moments in UTC, the same wherever and whenever they are printed. Takes ISO days or moments. */
 export const UTC_DATES: PrintDates = {
   shortDate,
-  longDate: (value) => utc(value, { day: 'numeric', month: 'long', year: 'numeric' }),
+  longDate: (value) => LONG.format(new Date(value)),
   clockTime,
   dateAndTime: (value) => `${shortDate(value)}, ${clockTime(value)}`,
 }

@@ -1,6 +1,7 @@
 import { readFileSync } from 'node:fs'
 import { createRequire } from 'node:module'
 import { create, type Font } from 'fontkit'
+import { sfntOf } from './sfnt'
 
 /** Where the letters of a record come from: IBM Plex, embedded, with further subsets for names from anywhere. */
 export type Family = 'sans' | 'condensed' | 'mono'
@@ -22,15 +23,29 @@ export interface Face {
 const locate = createRequire(import.meta.url)
 const faces = new Map<string, Face>()
 
+/** Signs without ink: some subsets end with one, and fontkit then reads past the end of the file's outlines. */
+const BLANK = new Set([0x00, 0x0d, 0x20, 0xa0])
+
+function canBeSet(font: Font, codePoint: number): boolean {
+  if (!BLANK.has(codePoint)) return true
+  try {
+    font.layout(String.fromCodePoint(codePoint))
+    return true
+  } catch (error) {
+    if (error instanceof RangeError) return false
+    throw error
+  }
+}
+
 /** One file of letters, read once. */
 function face(family: Family, subset: string, weight: Weight): Face {
   const { name } = PACKAGES[family]
   const file = `@fontsource/${name}/files/${name}-${subset}-${weight}-normal.woff`
   const known = faces.get(file)
   if (known) return known
-  const bytes = readFileSync(locate.resolve(file))
+  const bytes = sfntOf(readFileSync(locate.resolve(file)))
   const font: Font = create(bytes) as Font
-  const covered = new Set(font.characterSet)
+  const covered = new Set(font.characterSet.filter((codePoint) => canBeSet(font, codePoint)))
   const made = { name: `${family} ${subset} ${weight}`, bytes, has: (codePoint: number) => covered.has(codePoint) }
   faces.set(file, made)
   return made

@@ -242,7 +242,8 @@ export class Paper {
     this.type.set(shown, this.left + (this.width - this.type.width(shown, quiet)) / 2, y, quiet)
     const shop = this.type.fit(right, quiet, third - 6)
     this.type.set(shop, this.right - this.type.width(shop, quiet), y, quiet)
-    this.rule(EDGE + BAND + HEAD, { from: EDGE + BAND, to: this.doc.page.width - EDGE - BAND, colour: RULE })
+    const [edge, top] = [EDGE + BAND, EDGE + BAND + HEAD]
+    this.doc.moveTo(edge, top).lineTo(this.doc.page.width - edge, top).lineWidth(0.5).strokeColor(RULE).stroke()
   }
 
   #foot(page: number, pages: number): void {

@@ -22,10 +22,6 @@ export interface TableSpec {
   columns: readonly TableColumn[]
   rows: readonly TableRow[]
   size?: number
-  /** Where the table stands and how wide it is; the whole width of the page if not said. */
-  at?: { x: number; width: number }
-  /** As wide as its words need, not more. */
-  narrow?: boolean
 }
 
 interface Layout {
@@ -38,6 +34,10 @@ interface Layout {
 }
 
 const SMALLEST = 5.5
+/** Wider gaps than this help nobody: what is left goes to the columns of words. */
+const WIDEST_GAP = 26
+/** A table that takes no more than this share of a page isn't broken over two. */
+const KEPT_WHOLE = 0.34
 const PAD = 2.2
 
 const headStyle = (size: number): Style => ({ size: size * 0.94, family: 'condensed', weight: 500, ink: GRAPHITE })
@@ -93,8 +93,20 @@ function shrink(wanted: readonly Wanted[], room: number): number[] {
   return wanted.map(({ natural, least }) => Math.max(least, Math.min(natural, low)))
 }
 
+/** Shares out what is left: to the gaps, then to the columns of words; returns the gap. */
+function spread(columns: readonly TableColumn[], widths: number[], gap: number, left: number): number {
+  const wordy = columns.filter(({ wrap }) => wrap === true).length
+  const gaps = columns.length - 1
+  const wider = wordy === 0 ? gap + left / gaps : Math.min(gap + left / gaps, WIDEST_GAP)
+  const rest = left - (wider - gap) * gaps
+  columns.forEach(({ wrap }, index) => {
+    if (wrap === true) widths[index] = (widths[index] ?? 0) + rest / wordy
+  })
+  return wider
+}
+
 function layOut(paper: Paper, spec: TableSpec): Layout {
-  const { x, width } = spec.at ?? { x: paper.left, width: paper.width }
+  const { left: x, width } = paper
   const { columns, rows } = spec
   let size = spec.size ?? 7.5
   let gap = 8
@@ -110,13 +122,16 @@ function layOut(paper: Paper, spec: TableSpec): Layout {
   // Where even the smallest letters don't fit, every column gives its share and words are broken.
   const widths = least > room ? wanted.map((one) => (one.least * room) / least) : shrink(wanted, room)
   const left = room - widths.reduce((sum, one) => sum + one, 0)
-  if (spec.narrow !== true && left > 0 && columns.length > 1) gap += left / (columns.length - 1)
+  if (left > 0 && columns.length > 1) gap = spread(columns, widths, gap, left)
   return {
     x,
     widths,
     size,
     gap,
-    heads: columns.map(({ head }, index) => paper.type.wrap(plain(head, headStyle(size)), (widths[index] ?? 0) + gap * 0.4)),
+    heads: columns.map(({ head, align = 'left' }, index) => {
+      const atEdge = align === 'left' ? index === columns.length - 1 : index === 0
+      return paper.type.wrap(plain(head, headStyle(size)), (widths[index] ?? 0) + (atEdge ? 0.1 : gap * 0.45))
+    }),
     rows: rows.map(({ cells, strong = false }) =>
       columns.map((_column, index) => paper.type.wrap(runsOf(cells[index] ?? null, size, strong), (widths[index] ?? 0) + 0.1)),
     ),
@@ -181,19 +196,14 @@ function parts(cells: readonly Line[][], size: number, most: number): Line[][][]
   return Array.from({ length: Math.ceil(longest / fits) }, (_part, index) => cells.map((lines) => lines.slice(index * fits, (index + 1) * fits)))
 }
 
-/** Height a table takes where it isn't broken, pt. */
-export function tableHeight(paper: Paper, spec: TableSpec): number {
-  const layout = layOut(paper, spec)
-  return headHeight(layout) + layout.rows.reduce((sum, cells) => sum + rowHeight(cells, layout.size), 0)
-}
-
 /** Sets a table where the pen is. Heads are repeated on every page it goes on to; a row is kept whole where a page can hold it. */
 export function table(paper: Paper, spec: TableSpec): void {
   const layout = layOut(paper, spec)
   const drawing = { paper, spec, layout }
   const head = headHeight(layout)
-  const first = layout.rows[0]
-  paper.need(head + (first ? Math.min(rowHeight(first, layout.size), paper.whole - head) : 0))
+  const [first = 0] = layout.rows.map((cells) => rowHeight(cells, layout.size))
+  const whole = head + layout.rows.reduce((sum, cells) => sum + rowHeight(cells, layout.size), 0)
+  paper.need(whole <= paper.whole * KEPT_WHOLE ? whole : head + Math.min(first, paper.whole - head))
   paper.within('Table', () => {
     drawHead(drawing, false)
     for (const cells of layout.rows) {

@@ -47,8 +47,8 @@ export const SOUND = '#085039'
 
 /** Signs that IBM Plex's web subsets lack, drawn from one they have. */
 const SIGNS: Record<string, Sign> = { '≤': { actual: '≤', base: '<' }, '≥': { actual: '≥', base: '>' } }
-/** The narrow space of "75 %" is missing too; the thin one is as narrow and breaks as little. */
-const SPACES: Record<string, string> = { '\u202f': '\u2009', '\t': ' ', '→': '–', '\u2011': '-' }
+/** What stands for signs that are missing or blank in some subsets; lines have been broken before, so no space breaks here. */
+const SPACES: Record<string, string> = { '\u00a0': ' ', '\u202f': '\u2009', '\t': ' ', '→': '–', '\u2011': '-' }
 const MISSING = '\ufffd'
 
 const weightOf = ({ weight = 400 }: Style): Weight => weight

@@ -38,7 +38,8 @@ const pointColumns: Column[] = [
   { header: 'Increment\nm', width: 10, align: 'right' },
 ]
 
-const STATES = { 'in-date': 'in date', 'out-of-date': 'out of date', 'out-of-tolerance': 'out of tolerance', never: 'never calibrated' } as const
+/** How a calibration stood on the day of the test, in words. */
+export const CALIBRATION_STATES = { 'in-date': 'in date', 'out-of-date': 'out of date', 'out-of-tolerance': 'out of tolerance', never: 'never calibrated' } as const
 
 /** The named cell that turns a point's reading into the direction of loading. */
 export function pointDirectionName(index: number): string {
@@ -54,7 +55,8 @@ export function accuracyText(accuracy: GaugeAccuracy): string {
   return `ASME B40.100 grade ${accuracy.grade}, ${zones}`
 }
 
-function detailCells({ details }: FrozenInstrument): Content[] {
+/** Kind, description, range with its unit, increment with its unit, accuracy. */
+export function detailCells({ details }: FrozenInstrument): Content[] {
   switch (details.kind) {
     case 'gauge':
       return [`gauge, ${details.style}`, details.description, asTyped(details.fullScale), unitText(details.fullScale), asTyped(details.increment), unitText(details.increment), accuracyText(details.accuracy)]
@@ -83,7 +85,7 @@ export function instrumentsSheet(workbook: Workbook, record: RecordOfTest): void
       ...detailCells(instrument),
       calibration?.calibratedOn ?? null,
       calibration?.dueOn ?? null,
-      STATES[calibrationState(calibration, day)],
+      CALIBRATION_STATES[calibrationState(calibration, day)],
       calibration?.certificate ?? null,
       calibration?.comparedWith ?? null,
       asTyped(uncertainty?.value ?? null),
