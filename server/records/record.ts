@@ -62,6 +62,6 @@ export function momentText(iso: string): string {
 }
 
 /** Name of the file that a record is saved as: number and press, without what a file name can't hold. */
-export function recordFileName(opened: Pick<Opened, 'number' | 'press'>): string {
-  return fileName([opened.number, opened.press.name], 'xlsx')
+export function recordFileName(opened: Pick<Opened, 'number' | 'press'>, extension: 'xlsx' | 'pdf' = 'xlsx'): string {
+  return fileName([opened.number, opened.press.name], extension)
 }

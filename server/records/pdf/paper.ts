@@ -1,10 +1,11 @@
 import PDFDocument from 'pdfkit'
+import type { PaperSize } from '#shared/api/records'
+import { drawMark, type PaperMark } from './marks'
 import { GRAPHITE, HAIRLINE, INK, RULE, Typesetter, plain, type Line, type Run, type Style } from './typesetter'
 
 /** The sheets a record is printed on: a zoned frame, a head and a foot that repeat, and a pen that goes down the page. */
 
-export const PAPERS = { a4: 'A4', letter: 'LETTER' } as const
-export type PaperSize = keyof typeof PAPERS
+const PAPERS: Record<PaperSize, string> = { a4: 'A4', letter: 'LETTER' }
 
 export interface PaperWords {
   size: PaperSize
@@ -193,13 +194,15 @@ export class Paper {
     }
   }
 
-  /** A smaller heading, kept together with `keep` pt of what follows. */
-  subheading(words: string, keep = 40): void {
+  /** A smaller heading, a mark before it where it has one, kept together with `keep` pt of what follows. */
+  subheading(words: string, keep = 40, mark: PaperMark | null = null): void {
     const style: Style = { size: 9.5, weight: 600 }
-    const lines = this.type.wrap(plain(words, style), this.width)
+    const indent = mark === null ? 0 : 15
+    const lines = this.type.wrap(plain(words, style), this.width - indent)
     if (!this.#fresh) this.y += 7
     this.need(lines.length * leading(9.5) + keep)
-    this.tag('H3', () => this.lines(lines, this.left, this.y, style.size))
+    if (mark !== null) this.artifact(() => drawMark(this.doc, mark, this.left, this.y + 1.4, 9.5))
+    this.tag('H3', () => this.lines(lines, this.left + indent, this.y, style.size))
     this.down(lines.length * leading(9.5) + 2)
   }
 

@@ -6,10 +6,9 @@ import { momentText, type RecordOfTest } from '../record'
 import { aboutEntry, whereItIs } from '../sheets/photos'
 import { mono, normal, stopped, strong } from './cells'
 import { contentText } from './content-text'
-import { drawMark } from './marks'
 import { BODY, SMALL, leading, type Paper } from './paper'
 import { table, type TableRow } from './table'
-import { GRAPHITE, plain } from './typesetter'
+import { GRAPHITE, plain, type Line } from './typesetter'
 
 /** What the lead concluded and why, and everything that stands beside the figures. */
 export function conclusion(paper: Paper, record: RecordOfTest): void {
@@ -23,12 +22,7 @@ export function conclusion(paper: Paper, record: RecordOfTest): void {
     ])
   } else paper.paragraph('Not concluded.')
   for (const { title, mark, lines } of noticesOf(record, UTC_DATES)) {
-    paper.need(36)
-    const top = paper.y
-    paper.subheading(title)
-    // Beside the heading, wherever its page has put it.
-    const at = Math.max(paper.y - leading(9.5) - 1, top)
-    paper.artifact(() => drawMark(paper.doc, mark, paper.right - 11, at, 9))
+    paper.subheading(title, 14, mark)
     for (const line of lines) paper.paragraph(line, BODY, 1)
   }
 }
@@ -120,6 +114,15 @@ const COLUMNS = 3
 const GAP = 10
 const HIGHEST = 150
 
+/** A caption of three lines at most; the table under the pictures has the whole of it. */
+function captionLines(paper: Paper, text: string, width: number): Line[] {
+  const lines = paper.type.wrap(plain(text, SMALL), width)
+  if (lines.length <= 3) return lines
+  const rest = lines.slice(2).flatMap(({ runs }) => runs.map((run) => run.text))
+  const last = paper.type.fit(rest.join(' '), SMALL, width)
+  return [...lines.slice(0, 2), { runs: plain(last, SMALL), width: paper.type.width(last, SMALL) }]
+}
+
 /** Every photo and document that an entry names: the pictures, then what became of each file. */
 export function photos(paper: Paper, record: RecordOfTest, files: RecordFiles): void {
   const { attachments } = record.state
@@ -136,7 +139,7 @@ export function photos(paper: Paper, record: RecordOfTest, files: RecordFiles): 
   for (let from = 0; from < shown.length; from += COLUMNS) {
     const row = shown.slice(from, from + COLUMNS).map(({ file, picture, number }) => {
       const scale = Math.min(width / picture.width, HIGHEST / picture.height)
-      const words = paper.type.wrap(plain(`${number}. Entry ${file.seq}: ${aboutEntry(record, file.seq)}`, SMALL), width).slice(0, 4)
+      const words = captionLines(paper, `${number}. Entry ${file.seq}: ${aboutEntry(record, file.seq)}`, width)
       return { picture, words, size: { width: picture.width * scale, height: picture.height * scale }, alt: `Photo of entry ${file.seq}` }
     })
     const tallest = Math.max(...row.map(({ size }) => size.height))

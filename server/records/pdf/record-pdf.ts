@@ -1,12 +1,15 @@
+import type { PaperSize } from '#shared/api/records'
 import { headlineOf } from '#shared/proof-test/record'
 import { hashLines } from '#shared/proof-test/record-words'
 import { NO_FILES, type RecordFiles } from '../files'
 import { recordOf, type RecordOfTest, type RecordSource } from '../record'
 import { legDrawing, paintLeg } from './drawings'
-import { Paper, type PaperSize } from './paper'
+import { Paper } from './paper'
 import { cautions, conclusion, photos, seals, signatures } from './people-sections'
 import { drawing, instruments, joints, loadPathCheck, protocol, train } from './press-sections'
-import { summaryPage } from './summary-page'
+import { strong, verdictCell } from './cells'
+import { summaryPage, type LeftOver } from './summary-page'
+import { table } from './table'
 import { corrections, criteria, readings, stages } from './test-sections'
 
 export interface PdfOptions {
@@ -20,6 +23,20 @@ export interface PdfOptions {
 function asOf({ entries, seals: sealed, writtenAt }: RecordOfTest): string {
   const moments = [...entries.map(({ receivedAt }) => receivedAt), ...sealed.map(({ sealedAt }) => sealedAt)].sort()
   return moments.at(-1) ?? writtenAt
+}
+
+/** What belongs on page one and has no room there. */
+function further(paper: Paper, { criteria: more, facts }: LeftOver): void {
+  if (more.length > 0) {
+    paper.heading('Further criteria at their worst')
+    table(paper, {
+      columns: [{ head: 'Criterion', wrap: true }, { head: 'Read', align: 'right', wrap: true }, { head: 'Limit', align: 'right', wrap: true }, { head: 'Verdict' }],
+      rows: more.map(({ label, reading, limitText, verdict }) => ({ cells: [label, strong(reading), limitText, verdictCell(verdict)] })),
+    })
+  }
+  if (facts.length === 0) return
+  paper.heading('What the figures rest on')
+  table(paper, { columns: [{ head: 'What' }, { head: 'As recorded', wrap: true }], rows: facts.map(([name, value]) => ({ cells: [name, value] })) })
 }
 
 function furtherCharts(paper: Paper, record: RecordOfTest, legs: readonly number[]): void {
@@ -53,8 +70,9 @@ export function recordPdf(source: RecordSource, { paper: size, checkAddress, fil
     head: { left: `Record of ${record.title}`, middle: headline, right: opened.shop.name },
     foot: { left: record.title, middle: `last hash ${hash}` },
   })
-  const { legs } = summaryPage(paper, record, checkAddress)
-  furtherCharts(paper, record, legs)
+  const rest = summaryPage(paper, record, checkAddress)
+  further(paper, rest)
+  furtherCharts(paper, record, rest.legs)
   stages(paper, record)
   corrections(paper, record)
   conclusion(paper, record)

@@ -3,7 +3,6 @@ import type { Signature } from '#shared/proof-test/entries'
 import { UTC_DATES } from '#shared/proof-test/print-dates'
 import { hashLines, lateness } from '#shared/proof-test/record-words'
 import type { RecordOfTest } from '../record'
-import { drawMark } from './marks'
 import { leading, type Paper } from './paper'
 import { GRAPHITE, INK, STOP, plain, type Run, type Style } from './typesetter'
 
@@ -48,12 +47,15 @@ function signedRows({ title, name, relation, signature, waiting, late }: Signed)
   ]
 }
 
-function sealRows({ state, seals }: RecordOfTest): Row[] {
+function sealRows({ state, seals, chain }: RecordOfTest): Row[] {
   const seal = seals.at(-1)
   const row = (text: string, style: Style): Row => ({ runs: plain(text, style), size: style.size })
   return [
     row(seal ? `Seal over ${seal.seq} entries` : `No seal yet; ${state.headSeq} entries`, TITLE),
     ...hashLines(seal?.headHash ?? state.headHash).map((line) => row(line, MONO)),
+    chain.whole
+      ? row(`Chain whole over ${chain.entries} entries`, WORDS)
+      : row(`BROKEN at entry ${chain.brokenAt}: ${chain.why}`, { ...WORDS, weight: 600, ink: STOP }),
     ...(seal ? [row(`Sealed ${UTC_DATES.dateAndTime(seal.sealedAt)} UTC`, WORDS), row(`key ${seal.kid}`, MONO)] : []),
   ]
 }
@@ -141,5 +143,4 @@ export function signatureStrip(paper: Paper, record: RecordOfTest, { top, height
   paintQr(paper, checkAddress, x - 3, top + 3, QR)
   const words = paper.type.wrap(plain('Check the ledger file', WORDS), QR + PAD)
   paper.tag('P', () => paper.lines(words, x, top + 3 + QR, WORDS.size))
-  if (!record.chain.whole) paper.artifact(() => drawMark(paper.doc, 'stop', paper.right - 10, top + 4, 8))
 }

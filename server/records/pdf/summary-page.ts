@@ -1,7 +1,7 @@
 import type { Criterion } from '#shared/proof-test/evaluate-climb'
 import { UTC_DATES } from '#shared/proof-test/print-dates'
 import { cautionsOf, criteriaHeading, headlineOf, standingOf, verdictWord } from '#shared/proof-test/record'
-import { recordFacts } from '#shared/proof-test/record-facts'
+import { recordFacts, type RecordFact } from '#shared/proof-test/record-facts'
 import { courseText, notMeasuredText, resultLines, standingMark, verdictMark } from '#shared/proof-test/record-words'
 import type { RecordOfTest } from '../record'
 import { legDrawing, legsRead, paintLeg } from './drawings'
@@ -30,12 +30,14 @@ function head(paper: Paper, { opened, state }: RecordOfTest): void {
   const date = day === null ? '' : UTC_DATES.longDate(day)
   const dated: Style = { size: 10.5, weight: 500 }
   const dateWidth = paper.type.width(date, dated)
-  const large: Style = { size: 21, weight: 600 }
   const name = `${opened.press.name}${opened.press.whatFor ? `, ${opened.press.whatFor}` : ''}`
-  const lines = paper.type.wrap(plain(`${opened.number}\u2002${name}`, large), paper.width - dateWidth - 18)
+  const titled = (size: number): Line[] => paper.type.wrap(plain(`${opened.number}\u2002${name}`, { size, weight: 600 }), paper.width - dateWidth - 18)
+  // A long name is set smaller, so that the page keeps room for what it is about.
+  const size = titled(21).length <= 2 ? 21 : 14
+  const lines = titled(size)
   paper.y += 13
-  paper.tag('H1', () => paper.lines(lines, paper.left, paper.y, 21))
-  paper.down(lines.length * leading(21))
+  paper.tag('H1', () => paper.lines(lines, paper.left, paper.y, size))
+  paper.down(lines.length * leading(size))
   paper.tag('P', () => paper.type.set(date, paper.right - dateWidth, paper.y - 7, dated))
   paper.down(3)
   paper.rule(paper.y, { width: 1.1, colour: INK })
@@ -72,40 +74,68 @@ interface CriterionLine {
 
 const CRITERION: Style = { size: 8, family: 'condensed' }
 
-function criterionLine(paper: Paper, { verdict, label, reading, limitText }: Criterion, width: number): CriterionLine {
+interface Shares {
+  label: number
+  read: number
+  limit: number
+}
+
+const GAP = 6
+/** Room for a mark before each criterion. */
+const MARKED = 14
+
+/** The figures take what they need up to a share; the names of the criteria have the rest. */
+function sharesOf(paper: Paper, criteria: readonly Criterion[], width: number): Shares {
+  const widest = (text: (criterion: Criterion) => string, style: Style, most: number): number =>
+    Math.min(most, Math.max(24, ...criteria.map((criterion) => paper.type.width(text(criterion), style))) + 0.2)
+  const read = widest(({ reading }) => reading, { ...CRITERION, weight: 600 }, width * 0.34)
+  const limit = widest(({ limitText }) => limitText, CRITERION, width * 0.27)
+  return { label: width - MARKED - read - limit - 2 * GAP, read, limit }
+}
+
+function criterionLine(paper: Paper, { verdict, label, reading, limitText }: Criterion, shares: Shares): CriterionLine {
   const away: Run[] =
     verdict === 'within' ? [] : plain(`, ${verdictWord(verdict)}`, { ...CRITERION, weight: 500, ink: verdict === 'beyond' ? STOP : GRAPHITE })
   return {
     mark: verdictMark(verdict),
     word: verdictWord(verdict),
-    label: paper.type.wrap([...plain(label, CRITERION), ...away], width * 0.4 - 14),
-    read: paper.type.wrap(plain(reading, { ...CRITERION, weight: 600 }), width * 0.32 - 4),
-    limit: paper.type.wrap(plain(limitText, { ...CRITERION, ink: GRAPHITE }), width * 0.28 - 2),
+    label: paper.type.wrap([...plain(label, CRITERION), ...away], shares.label),
+    read: paper.type.wrap(plain(reading, { ...CRITERION, weight: 600 }), shares.read),
+    limit: paper.type.wrap(plain(limitText, { ...CRITERION, ink: GRAPHITE }), shares.limit),
   }
 }
 
-function criteria(paper: Paper, record: RecordOfTest, column: Column): void {
+/** The criteria at their worst, and what nobody measured; those that don't fit above `bottom` are given back. */
+function criteria(paper: Paper, record: RecordOfTest, column: Column, bottom: number): Criterion[] {
   const { evaluation, opened } = record
   const { x, width } = column
   column.y += paper.textAt(criteriaHeading(evaluation), x, column.y, width, { size: 10.5, weight: 600 }, 'H2') + 2
   const right = (edge: number, lines: Line[], y: number): void => void paper.lines(lines, x, y, CRITERION.size, { to: 'right', width: edge })
-  const ends = { read: width * 0.72, limit: width }
+  const shares = sharesOf(paper, evaluation.criteria, width)
+  const ends = { read: width - shares.limit - GAP, limit: width }
+  const rest: Criterion[] = []
+  const unmeasured = notMeasuredText(opened)
+  const measuring = unmeasured === '' ? 0 : 18
   const heads: Style = { size: 7, family: 'condensed', weight: 500, ink: GRAPHITE }
   paper.within('Table', () => {
     paper.within('TR', () => {
-      paper.tag('TH', () => paper.type.set('Criterion', x + 14, column.y + 7, heads))
+      paper.tag('TH', () => paper.type.set('Criterion', x + MARKED, column.y + 7, heads))
       paper.tag('TH', () => paper.type.set('Read', x + ends.read - paper.type.width('Read', heads), column.y + 7, heads))
       paper.tag('TH', () => paper.type.set('Limit', x + ends.limit - paper.type.width('Limit', heads), column.y + 7, heads))
     })
     column.y += 10
     paper.rule(column.y, { from: x, to: x + width, colour: RULE, width: 0.7 })
     for (const criterion of evaluation.criteria) {
-      const line = criterionLine(paper, criterion, width)
+      const line = criterionLine(paper, criterion, shares)
       const rows = Math.max(line.label.length, line.read.length, line.limit.length)
+      if (rest.length > 0 || column.y + rows * leading(CRITERION.size) + 4.8 + measuring > bottom) {
+        rest.push(criterion)
+        continue
+      }
       const y = column.y + 2.4
       paper.artifact(() => drawMark(paper.doc, line.mark, x, y + 0.6, 8.6))
       paper.within('TR', () => {
-        paper.tag('TD', () => paper.lines(line.label, x + 14, y, CRITERION.size), { alt: '' })
+        paper.tag('TD', () => paper.lines(line.label, x + MARKED, y, CRITERION.size))
         paper.tag('TD', () => right(ends.read, line.read, y))
         paper.tag('TD', () => right(ends.limit, line.limit, y))
       })
@@ -113,14 +143,14 @@ function criteria(paper: Paper, record: RecordOfTest, column: Column): void {
       paper.rule(column.y, { from: x, to: x + width, width: 0.4 })
     }
   })
-  const unmeasured = notMeasuredText(opened)
   if (unmeasured !== '') {
     paper.artifact(() => drawMark(paper.doc, 'not-read', x, column.y + 3, 8.6))
     column.y += 2.4
-    column.y += paper.textAt(unmeasured, x + 14, column.y, width - 14, { ...CRITERION, weight: 600 }) + 2.4
+    column.y += paper.textAt(unmeasured, x + MARKED, column.y, width - MARKED, { ...CRITERION, weight: 600 }) + 2.4
     paper.rule(column.y, { from: x, to: x + width, width: 0.4 })
   }
   column.y += 8
+  return rest
 }
 
 const FACT: Style = { size: 7.5, family: 'condensed' }
@@ -172,16 +202,19 @@ function cautionsFit(paper: Paper, record: RecordOfTest, column: Column, bottom:
   column.y += paper.textAt(cautionWords(record), column.x, column.y, column.width, QUIET)
 }
 
-/** Charts that page one has no room for. */
+/** What page one has no room for. */
 export interface LeftOver {
+  /** Whose charts are still to come. */
   legs: number[]
+  criteria: Criterion[]
+  facts: readonly RecordFact[]
 }
 
 const MOST_CHARTS = 2
 /** px of a chart's width, which its letters are measured in. */
 const CHART = 500
 
-/** The first page, from its title to the signatures at its foot; says which legs' charts are still to come. */
+/** The first page, from its title to the signatures at its foot; says what is still to come. */
 export function summaryPage(paper: Paper, record: RecordOfTest, checkAddress: string): LeftOver {
   paper.doc.outline.addItem('Summary')
   head(paper, record)
@@ -193,19 +226,20 @@ export function summaryPage(paper: Paper, record: RecordOfTest, checkAddress: st
   const leftColumn: Column = { x: paper.left, width: paper.width * share - 9, y: paper.y }
   const rightColumn: Column = { x: paper.left + paper.width * share + 9, width: paper.width * (1 - share) - 9, y: paper.y }
   const placed = paintCharts(paper, record, drawn, leftColumn, bottom)
-  criteria(paper, record, rightColumn)
+  const furtherCriteria = criteria(paper, record, rightColumn, bottom)
   const rest = facts(paper, factLines(paper, record, rightColumn.width), rightColumn, bottom)
-  if (rest.length > 0) {
-    const again = factLines(paper, record, leftColumn.width).filter(({ name }) => rest.some((one) => one.name === name))
-    const lost = facts(paper, again, leftColumn, bottom)
-    leftColumn.y += 6
-    if (lost.length > 0) throw new RangeError(`Page one has no room for ${lost.map(({ name }) => name).join(', ')}.`)
-  }
+  const again = factLines(paper, record, leftColumn.width).filter(({ name }) => rest.some((one) => one.name === name))
+  const lost = facts(paper, again, leftColumn, bottom)
+  if (again.length > lost.length) leftColumn.y += 6
   cautionsFit(paper, record, leftColumn, bottom)
   signatureStrip(paper, record, { top: paper.bottom + 8 - strip, height: strip, checkAddress })
   paper.y = paper.bottom
   paper.down(0)
-  return { legs: drawn.filter((leg) => !placed.includes(leg)) }
+  return {
+    legs: drawn.filter((leg) => !placed.includes(leg)),
+    criteria: furtherCriteria,
+    facts: recordFacts(record, UTC_DATES).filter(([name]) => lost.some((one) => one.name === name)),
+  }
 }
 
 /** Charts as high as the column has room for beside the cautions, two at most. */

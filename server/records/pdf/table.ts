@@ -206,14 +206,17 @@ export function table(paper: Paper, spec: TableSpec): void {
   paper.need(whole <= paper.whole * KEPT_WHOLE ? whole : head + Math.min(first, paper.whole - head))
   paper.within('Table', () => {
     drawHead(drawing, false)
-    for (const cells of layout.rows) {
+    layout.rows.forEach((cells, index) => {
+      // The last row never stands on a page alone.
+      const last = layout.rows.length > 2 && index === layout.rows.length - 2 ? layout.rows[index + 1] : undefined
       for (const part of parts(cells, layout.size, paper.whole - head - 1)) {
-        if (paper.y + rowHeight(part, layout.size) > paper.bottom) {
+        const next = last ? Math.min(rowHeight(last, layout.size), paper.whole / 2) : 0
+        if (paper.y + rowHeight(part, layout.size) + next > paper.bottom) {
           paper.newPage()
           drawHead(drawing, true)
         }
         drawRow(drawing, part)
       }
-    }
+    })
   })
 }

@@ -97,7 +97,7 @@ export function corrections(paper: Paper, record: RecordOfTest): void {
         [...plain(first, { size: 0, family: 'condensed', struck: true }), ...normal(` ${counts} ${unit}`)],
         correction.why,
         again,
-        `${record.nameOf(correction.by)}, ${UTC_DATES.dateAndTime(correction.at)}`,
+        `${record.nameOf(correction.by)}\n${UTC_DATES.dateAndTime(correction.at)}`,
       ],
     }
   })
