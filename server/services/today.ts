@@ -123,8 +123,11 @@ function foldEachInUse(work: Work, presses: readonly PressRecord[]): Promise<Map
   )
 }
 
-const since = (state: PressState): string | null =>
-  state.clearance.is === 'withdrawn' ? state.clearance.at : (state.history.at(-1)?.at ?? null)
+/** Since when a press is as it is; one whose clearance has run out, since the end of its last day. */
+function since({ clearance, history }: PressState): string | null {
+  if (clearance.is === 'cleared') return `${clearance.clearance.until}T23:59:59.000Z`
+  return clearance.is === 'withdrawn' ? clearance.at : (history.at(-1)?.at ?? null)
+}
 
 /** What a press that may not be used waits for, the first thing first: one row for it, not one for each that is missing. */
 function shutNeed(state: PressState, named: { pressId: string; pressName: string }, why: string): Need {

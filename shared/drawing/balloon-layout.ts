@@ -150,12 +150,9 @@ export function placeBalloons(joints: readonly { id: string; place: string | nul
   const placed = new Map<string, PlacedBalloon>()
   lanes.forEach((lane, rank) => {
     const here = shared.get(lane) ?? []
-    const ys = spread(
-      here.map(({ y }) => y),
-      elevation.from,
-      elevation.to,
-      apart,
-    )
+    const wishes = here.map(({ y }) => y)
+    const under = lane.startsWith('inner') && (here.length - 1) * apart <= elevation.to - elevation.innerFrom
+    const ys = spread(wishes, under ? elevation.innerFrom : elevation.from, elevation.to, apart)
     here.forEach(({ id, anchor }, index) => {
       const centre = { x: xs[rank] ?? elevation.lanes[lane], y: ys[index] ?? elevation.to }
       placed.set(id, { id, lane, centre, tip: anchor?.tip ?? null })

@@ -76,6 +76,7 @@ export function cFrameElevation(frame: CFrame): Elevation {
       'foot-left': { x: (nose + back) / 2, y: floor - 8 },
     },
     from: 30,
+    innerFrom: headBottom + 48,
     to: floor - 26,
     anchors: {
       'head-left': { tip: { x: nose + 2, y: top + 24 }, lane: 'outer-left', y: top + 8 },

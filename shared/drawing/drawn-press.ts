@@ -1,8 +1,10 @@
-import type { PressDescription } from '../press/model'
+import { looseMembers } from '../press/load-path'
+import type { Joint, PressDescription } from '../press/model'
 import type { PressJoint } from '../press/state'
 import { parseDecimal, toSI, type LengthUnit } from '../units'
 import type { JointMarkState } from './balloon-items'
-import type { DrawnPress } from './frame'
+import type { DrawnPress, FramePart } from './frame'
+import { partsOf } from './member-parts'
 
 type Measure = { text: string; unit: LengthUnit | '' } | null
 
@@ -19,7 +21,7 @@ type Described = {
 }
 
 /** A press as its drawing takes it: what nobody measured is drawn in proportion and bears no figure. */
-export function drawnPress({ kind, dimensions }: Described): DrawnPress {
+export function drawnPress({ kind, dimensions }: Described, bedHole: number | null = null): DrawnPress {
   return {
     kind,
     dimensions: {
@@ -28,8 +30,15 @@ export function drawnPress({ kind, dimensions }: Described): DrawnPress {
       throat: metres(dimensions.throat),
       holePitch: metres(dimensions.holePitch),
       holes: dimensions.holes,
+      bedHole,
     },
   }
+}
+
+/** The hole the bed is pinned in, where it is named by its number from the top; other names are not drawn. */
+export function holeInUse(name: string | undefined): number | null {
+  const number = /^(?:hole )?(\d{1,2})$/i.exec(name?.trim() ?? '')?.[1]
+  return number === undefined ? null : Number(number)
 }
 
 /** How a joint's balloon is drawn on the press's own page: rejected stands out, whatever the make-up. */
@@ -37,4 +46,18 @@ export function jointState(joint: Pick<PressJoint, 'makeUp' | 'examination'>): J
   if (joint.examination?.result === 'rejected') return 'rejected'
   if (joint.makeUp !== 'finished') return joint.makeUp
   return joint.examination?.result ?? 'finished'
+}
+
+/** The parts of the drawing whose member hangs on no joint that leads to the rest. */
+export function looseParts(
+  description: Pick<PressDescription, 'kind' | 'members'> | null,
+  joints: readonly Pick<Joint, 'between'>[],
+): ReadonlySet<FramePart> {
+  if (description === null) return new Set()
+  const { kind, members } = description
+  return partsOf(
+    kind,
+    members,
+    looseMembers(members, joints).map(({ id }) => id),
+  )
 }

@@ -58,6 +58,8 @@ export interface Elevation {
   /** First and last px from the top that a balloon's centre may have. */
   from: number
   to: number
+  /** The same for the lanes between the uprights while they aren't full: under the head, off what they point at. */
+  innerFrom: number
 }
 
 /** Heights of ram, adaptor and stack between head and bed (px). */

@@ -133,6 +133,7 @@ export function portalElevation(portal: Portal): Elevation {
       'foot-right': { x: right, y: floor - 10 },
     },
     from: 30,
+    innerFrom: headBottom + 48,
     to: floor - 26,
     anchors: {
       ...both('head', 'outer', postX + post * 0.55, headBottom - 1, headBottom - 28),

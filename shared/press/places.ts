@@ -66,3 +66,10 @@ export const measuringPlaces: readonly Spot[] = [
   { place: 'head-left', label: 'Head beam, left' },
   { place: 'head-right', label: 'Head beam, right' },
 ]
+
+/** The order joints are walked in: round the frame as its spots are listed, then what has none, by number. */
+export function walkingOrder<J extends { number: number; place: string | null }>(kind: FrameKind, joints: readonly J[]): J[] {
+  const rank = new Map(jointPlaces[kind].map(({ place }, index) => [place, index]))
+  const of = ({ place }: J): number => (place === null ? Infinity : (rank.get(place) ?? Infinity))
+  return [...joints].sort((a, b) => (of(a) === of(b) ? a.number - b.number : of(a) - of(b)))
+}

@@ -5,6 +5,7 @@ import type { LedgerEntry } from '#shared/ledger/envelope'
 import { recordedTest } from '../../tests/factories/recorded-test'
 import { names } from '../../tests/factories/test-press'
 import { isAtRest } from './at-rest'
+import { files } from './attachments'
 import { forgetSession } from './kept-session'
 import { ledgerCache } from './ledger-cache'
 import { outbox } from './outbox'
@@ -55,6 +56,20 @@ it('a device that knows of a load may not, when the server says so too, or says 
 it('a load that came off on another device meanwhile is none', async () => {
   await keep(underLoad)
   serve(released)
+  expect(await isAtRest(now)).toBe(true)
+})
+
+it('a device with a photo that the server waits for may not, until the server has it', async () => {
+  const bytes = new TextEncoder().encode('a photo')
+  const attachment = { sha256: 'd'.repeat(64), type: 'image/jpeg' as const, size: bytes.length }
+  serve(null)
+  await files.keep(`ledger:${testId}`, { attachment, bytes })
+  expect(await isAtRest(now)).toBe(true)
+  await files.named(`ledger:${testId}`, [attachment.sha256])
+  expect(await isAtRest(now)).toBe(false)
+  serve([])
+  files.sendNow()
+  await files.settled()
   expect(await isAtRest(now)).toBe(true)
 })
 

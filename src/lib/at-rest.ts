@@ -1,4 +1,5 @@
 import { foldProofTest } from '#shared/proof-test/apply'
+import { files } from './attachments'
 import { fetchLedger } from './fetch-ledger'
 import { ledgerCache, type KeptLedger } from './ledger-cache'
 import { outbox } from './outbox'
@@ -17,12 +18,12 @@ async function underLoad(kept: KeptLedger): Promise<boolean> {
 }
 
 /**
- * Whether this device may be disturbed: no test that was opened on it is under load as far as it can know, and no entry
- * waits to be sent.
+ * Whether this device may be disturbed: no test that was opened on it is under load as far as it can know, and no entry and
+ * no photo of one waits to be sent. Where that can't be read, it may not.
  */
 export async function isAtRest(now: Date): Promise<boolean> {
   const { loaded: read, unsent } = outbox.summary()
-  if (!read || unsent > 0) return false
+  if (!read || unsent > 0 || (await files.wait().catch(() => true))) return false
   for (const kept of await ledgerCache.readAll(now)) {
     if (await underLoad(kept)) return false
   }

@@ -146,6 +146,43 @@ describe('photos on this device', () => {
     expect(await listed(files, 'draft:calibration')).toEqual([])
   })
 
+  it('that were chosen and never entered are let go after thirty days, unless something here still speaks of them', async () => {
+    const server = new Server()
+    const draft: Owner = 'draft:calibration'
+    let now = Date.now()
+    let down = true
+    const spokenOf = new Set(['b'.repeat(64)])
+    const files = new KeptFiles({
+      databaseName: 'files-abandoned',
+      put: (...asked) => (down ? Promise.reject(new Disconnected()) : server.put(...asked)),
+      delay: () => 60_000,
+      now: () => now,
+      speaksOf: () => Promise.resolve((sha256) => spokenOf.has(sha256)),
+    })
+    opened.push(files)
+    for (const letter of ['a', 'b', 'c', 'e']) await files.keep(ledger, photo(letter))
+    for (const letter of ['b', 'd']) await files.keep(draft, photo(letter))
+    await files.named(ledger, ['c'.repeat(64)])
+    server.named.add('e'.repeat(64))
+    const look = async () => {
+      files.sendNow({ everything: true })
+      await files.settled()
+      const all = [...(await listed(files)), ...(await listed(files, draft))]
+      return all.map(({ name }) => name)
+    }
+    now += 31 * 86_400_000
+    // Nothing is let go on a guess: the server may have the entry, and its answer was lost.
+    expect(await look()).toEqual(['a.jpg', 'b.jpg', 'c.jpg', 'e.jpg', 'b.jpg', 'd.jpg'])
+    down = false
+    now -= 2 * 86_400_000
+    expect(await look()).toEqual(['a.jpg', 'b.jpg', 'c.jpg', 'b.jpg', 'd.jpg'])
+    now += 2 * 86_400_000
+    expect(await look()).toEqual(['b.jpg', 'c.jpg', 'b.jpg'])
+    expect([...server.kept.keys()]).toEqual([`${ledger} e`])
+    spokenOf.clear()
+    expect(await look()).toEqual(['c.jpg'])
+  })
+
   it('can be left out again, and a disk that takes nothing says so', async () => {
     const server = new Server()
     const files = open(server)

@@ -14,6 +14,9 @@ export interface FilesParts {
   put: (owner: Owner, attachment: Attachment, bytes: ArrayBuffer) => Promise<void>
   /** How long to wait before trying again, by how often it has failed (ms). */
   delay?: (failures: number) => number
+  /** Tells whether anything else on this device still speaks of a file: an entry that waits, a form half filled in. */
+  speaksOf?: () => Promise<(sha256: string) => boolean>
+  now?: () => number
 }
 
 type SentListener = (owner: Owner, attachment: Attachment) => void
@@ -21,6 +24,8 @@ type SentListener = (owner: Owner, attachment: Attachment) => void
 const LOCK = 'quarterload-files'
 /** What the server may answer of bytes that it will not take at another time either. */
 const NEVER = new Set([400, 413, 415, 422])
+/** How long what was chosen for a form and never entered is kept (ms): somebody may come back to the form. */
+const KEEP_CHOSEN = 30 * 86_400_000
 const EMPTY: OwnFiles = { loaded: false, files: [] }
 
 /** Grows to half a minute; a random part, so that tablets that lost one link don't come back all at once. */
@@ -92,6 +97,12 @@ export class KeptFiles {
       })
     }
     await this.changed()
+  }
+
+  /** Whether bytes that the server waits for are still here; what it will never take does not count. */
+  async wait(): Promise<boolean> {
+    const all = await (await this.opened()).getAll('files')
+    return all.some(({ named, refused }) => named && refused === null)
   }
 
   /** Takes back what no entry names. */
@@ -225,7 +236,9 @@ export class KeptFiles {
   private async sendAll(): Promise<void> {
     const { everything } = this
     const all = await (await this.opened()).getAll('files')
-    const due = all.filter((file) => !file.owner.startsWith('draft:') && file.refused === null && (everything || file.named))
+    const isDraft = ({ owner }: KeptFile): boolean => owner.startsWith('draft:')
+    const due = all.filter((file) => !isDraft(file) && file.refused === null && (everything || file.named))
+    const unnamed = everything ? all.filter(isDraft) : []
     let left: unknown
     for (const file of due) {
       try {
@@ -242,10 +255,21 @@ export class KeptFiles {
           throw failure
         if (NEVER.has(failure.status)) await this.setRefused(file, failure.detail)
         else if (file.named) left = failure
+        else if (failure.code === 'not-named-yet') unnamed.push(file)
       }
     }
     this.everything = false
+    await this.letGo(unnamed)
     if (left !== undefined) throw left
+  }
+
+  /** Of what no entry names, as the server has just said, what was chosen long ago and nothing here speaks of. */
+  private async letGo(unnamed: readonly KeptFile[]): Promise<void> {
+    const now = (this.parts.now ?? Date.now)()
+    const old = unnamed.filter(({ named, keptAt }) => !named && now - Date.parse(keptAt) > KEEP_CHOSEN)
+    if (old.length === 0 || !this.parts.speaksOf) return
+    const isSpokenOf = await this.parts.speaksOf()
+    for (const { owner, attachment } of old) if (!isSpokenOf(attachment.sha256)) await this.remove(owner, attachment.sha256)
   }
 
   private async sendOne(file: KeptFile): Promise<void> {

@@ -40,8 +40,16 @@ async function putBytes(owner: Owner, { sha256, type }: Attachment, bytes: Array
   if (!response.ok) throw await problemOf(response)
 }
 
+/** What the entries of this device name, on their way or sent, and what stands in its drafts. Throws where that can't be read. */
+async function speaksOf(): Promise<(sha256: string) => boolean> {
+  const { waiting, attention, sent } = await outbox.contents()
+  const named = new Set([...waiting, ...attention, ...sent].flatMap(({ entry }) => entry.attachments.map(({ sha256 }) => sha256)))
+  const drafts = Object.keys(localStorage).map((key) => localStorage.getItem(key) ?? '')
+  return (sha256) => named.has(sha256) || drafts.some((text) => text.includes(sha256))
+}
+
 /** The photos and documents of this browser. */
-export const files = new KeptFiles({ databaseName: 'quarterload-files', put: putBytes })
+export const files = new KeptFiles({ databaseName: 'quarterload-files', put: putBytes, speaksOf })
 
 /** The entry first, its bytes after: what the server has kept may be followed by what it names. */
 outbox.onKept((_testId, entries) => {

@@ -30,14 +30,24 @@ function write(key: string, text: string): void {
   }
 }
 
-/** This browser's own id, made once and kept. */
-export function deviceId(): string {
+/** The id that stands beside the counts of the forms: browsers write it late, and it is lost with them. */
+function ownId(): string {
   const kept = read(DEVICE)
   if (kept !== undefined) return kept
   const made = newId()
   write(DEVICE, made)
   return made
 }
+
+let adopted: string | null = null
+
+/** Takes the id under which this browser's outbox counts: it is on the disk when anything of the outbox is. */
+export function adoptDeviceId(kept: string): void {
+  adopted = kept
+}
+
+/** This browser's own id, made once and kept: the outbox's, as soon as that has been read. */
+export const deviceId = (): string => adopted ?? ownId()
 
 const count = (ledgerId: string): number => Number(read(COUNT + ledgerId) ?? 0)
 
@@ -68,6 +78,8 @@ export interface EntryParts {
   /** Made earlier, so that a second tap writes the same entry again. */
   id?: string
   deviceSeq?: number
+  /** Whose number it is, if not this device's as it is named now. */
+  deviceId?: string
   /** When it happened, if not just now. */
   observedAt?: string
 }
@@ -81,7 +93,8 @@ export function makeEntry(parts: EntryParts): EntryDraft {
     v: parts.v ?? 1,
     payload: { ...parts.payload },
     authorId: parts.authorId,
-    deviceId: deviceId(),
+    // Who counts is who is named: a form's count may have been lost when the outbox's was not.
+    deviceId: parts.deviceId ?? (parts.deviceSeq === undefined ? ownId() : deviceId()),
     deviceSeq: parts.deviceSeq ?? takeDeviceSeq(parts.ledgerId),
     basedOnSeq: parts.basedOnSeq,
     observedAt: parts.observedAt ?? new Date().toISOString(),

@@ -2,10 +2,10 @@ import type { DBSchema, IDBPDatabase, IDBPTransaction, StoreNames } from 'idb'
 import { openDB } from 'idb'
 import type { ProblemBody } from '#shared/api/problem'
 import type { EntryDraft } from '#shared/ledger/envelope'
-import { deviceId, type EntryParts } from './entry'
+import { adoptDeviceId, deviceId, type EntryParts } from './entry'
 
 /** What a screen gives the outbox; the outbox numbers it. */
-export type NewEntry = Omit<EntryParts, 'deviceSeq' | 'id'> & { id?: string }
+export type NewEntry = Omit<EntryParts, 'deviceSeq' | 'deviceId' | 'id'> & { id?: string }
 
 /** What waits to be sent: the entry, and the test whose ledger it belongs to. */
 export interface Waiting {
@@ -40,6 +40,8 @@ export interface OutboxSchema extends DBSchema {
   attention: { key: string; value: Refused }
   counts: { key: string; value: number }
   sent: { key: EntryKey; value: Sent; indexes: { id: string } }
+  /** Under `device`, the id that the counts are kept under. */
+  about: { key: string; value: string }
 }
 
 export const keyOf = ({ ledgerId, deviceId: device, deviceSeq, id }: EntryDraft): EntryKey => [ledgerId, device, deviceSeq, id]
@@ -69,7 +71,8 @@ export interface ConnectionListener {
   onLost: (why: 'newer' | 'closed') => void
 }
 
-const VERSION = 2
+const VERSION = 3
+const DEVICE = 'device'
 
 /** What this browser keeps: what waits, what was refused, what was sent, and how far each ledger is numbered. */
 export async function openOutbox(name: string, { onBlocked, onLost }: ConnectionListener): Promise<IDBPDatabase<OutboxSchema>> {
@@ -79,8 +82,10 @@ export async function openOutbox(name: string, { onBlocked, onLost }: Connection
         opening.createObjectStore('pending').createIndex('id', 'entry.id', { unique: true })
         opening.createObjectStore('attention')
         opening.createObjectStore('counts')
-      } else await carryOver(opening, upgrade)
-      opening.createObjectStore('sent').createIndex('id', 'entry.id', { unique: true })
+      }
+      if (from === 1) await carryOver(opening, upgrade)
+      if (from < 2) opening.createObjectStore('sent').createIndex('id', 'entry.id', { unique: true })
+      await opening.createObjectStore('about').put(deviceId(), DEVICE)
     },
     blocked: onBlocked,
     blocking: (_current, _blocked, event) => {
@@ -90,5 +95,7 @@ export async function openOutbox(name: string, { onBlocked, onLost }: Connection
     },
     terminated: () => onLost('closed'),
   })
+  const device = await database.get('about', DEVICE)
+  if (device !== undefined) adoptDeviceId(device)
   return database
 }

@@ -214,9 +214,10 @@ export class OutboxStore {
       return kept.entry
     }
     const counts = tx.objectStore('counts')
-    const counter = countKey(parts.ledgerId, deviceId())
+    const device = deviceId()
+    const counter = countKey(parts.ledgerId, device)
     const deviceSeq = Math.max((await counts.get(counter)) ?? 0, knownSeq) + 1
-    const entry = makeEntry({ ...parts, deviceSeq })
+    const entry = makeEntry({ ...parts, deviceId: device, deviceSeq })
     await Promise.all([pending.put({ testId, entry }, keyOf(entry)), counts.put(deviceSeq, counter), tx.done])
     return entry
   }

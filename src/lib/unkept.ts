@@ -49,10 +49,10 @@ export class UnkeptEntries {
     for (const ledgerId of new Set(taken.map(({ entry }) => entry.ledgerId))) this.parts.onChange(ledgerId, null)
   }
 
-  add(testId: string, parts: Omit<EntryParts, 'id' | 'deviceSeq'>): EntryDraft {
+  add(testId: string, parts: Omit<EntryParts, 'id' | 'deviceSeq' | 'deviceId'>): EntryDraft {
     const deviceSeq = (this.counts.get(parts.ledgerId) ?? 0) + 1
     this.counts.set(parts.ledgerId, deviceSeq)
-    const entry = { ...makeEntry({ ...parts, id: newId(), deviceSeq }), deviceId: this.deviceId }
+    const entry = makeEntry({ ...parts, id: newId(), deviceId: this.deviceId, deviceSeq })
     this.waiting = [...this.waiting, { testId, entry }]
     this.parts.onChange(entry.ledgerId, null)
     void this.send()

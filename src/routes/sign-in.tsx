@@ -1,7 +1,8 @@
 import { useNavigate, useSearchParams } from 'react-router-dom'
+import { VersionPlate } from '../components/version-plate'
+import { FootLink } from '../features/people/components/foot-link'
 import { SignInForm } from '../features/people/components/sign-in-form'
 import { TitleBlock } from '../features/people/components/title-block'
-import { FootLink } from '../features/people/components/foot-link'
 import { ownPath } from '../lib/own-path'
 import { useTitle } from '../lib/use-title'
 import { paths } from '../paths'
@@ -12,6 +13,7 @@ export function Component() {
   const [search] = useSearchParams()
   return (
     <TitleBlock
+      over={<VersionPlate />}
       title={
         <>
           First load

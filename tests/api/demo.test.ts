@@ -19,6 +19,7 @@ import { checkChain } from '#shared/ledger/chain'
 import type { LedgerEntry } from '#shared/ledger/envelope'
 import { checkSeal, type Seal } from '#shared/ledger/seal'
 import { applyPress, emptyPress } from '#shared/press/apply'
+import { toSI } from '#shared/units'
 import { mayItBeUsed } from '#shared/press/may-it-be-used'
 import type { PressState } from '#shared/press/state'
 import { foldProofTest } from '#shared/proof-test/apply'
@@ -319,6 +320,28 @@ describe('its presses', () => {
     expect(passed?.corrections).toMatchObject([{ underLoad: true, readAgainByBoth: true }])
     expect(passed && evaluateTest(passed).against).toEqual([])
     expect(mayItBeUsed(press('Wren'), today())).toMatchObject({ answer: 'cleared', clearance: { gaugePressure: null, gaugeCode: 'LC-1' } })
+  })
+})
+
+describe('its tooling', () => {
+  it('stands on the test that used it and on the clearance, never weaker than the load, and one piece is out of use', async () => {
+    const register = await select<{ code: string; retired: number }>(
+      'SELECT code, retired_at IS NOT NULL AS retired FROM tooling ORDER BY code',
+    )
+    expect(register.map(({ code, retired }) => [code, Number(retired)])).toEqual([
+      ['T-01', 0],
+      ['T-02', 0],
+      ['T-03', 0],
+      ['T-04', 1],
+    ])
+    const { opened } = only(testsOf('Ox'))
+    const pieces = opened?.press.train.filter(({ name }) => /^T-0/.test(name)) ?? []
+    expect(pieces.map(({ name }) => name.slice(0, 4))).toEqual(['T-01', 'T-02'])
+    for (const { ratedForce } of pieces)
+      expect(ratedForce && toSI(ratedForce)).toBeGreaterThan(toSI(opened?.press.ratedLoad ?? { text: '', unit: 'N' }))
+    const answer = mayItBeUsed(press('Ox'), today())
+    expect(answer.answer === 'cleared' && answer.clearance.tooling.join()).toMatch(/T-01.*T-02/)
+    expect(await select('SELECT code FROM tags')).toHaveLength(1)
   })
 })
 

@@ -3,6 +3,7 @@ import type { MeasuringPoint } from '#shared/proof-test/entries'
 import type { TypedPressure } from '#shared/units'
 import { daysBefore, minutesBefore, type Desk } from './desk'
 import type { DemoInstruments, DemoProtocols, InstrumentKey } from './demo-instruments'
+import type { DemoTooling, ToolingKey } from './demo-tooling'
 import { nameOf, type DemoShops, type PersonKey } from './demo-people'
 import type { FrameBehaviour, PointBehaviour } from './frame-behaviour'
 import type { PressBook } from './press-book'
@@ -13,6 +14,7 @@ export interface DemoRegisters {
   shops: DemoShops
   instruments: DemoInstruments
   protocols: DemoProtocols
+  tooling: DemoTooling | null
 }
 
 type Opening = Pick<RunScript, 'at' | 'frames' | 'strokePercent' | 'temperature' | 'slips' | 'remarks' | 'conclusion' | 'repeatsId'> & {
@@ -26,10 +28,11 @@ type Opening = Pick<RunScript, 'at' | 'frames' | 'strokePercent' | 'temperature'
   net: RunScript['request']['net']
   legs: RunScript['request']['legs']
   reliefSet: TypedPressure
+  uses?: readonly ToolingKey[]
 }
 
-function open(desk: Desk, { shops, instruments, protocols }: DemoRegisters, opening: Opening): Promise<ScriptedRun> {
-  const { press, protocol, lead, pumpHand, witness, force, points, net, legs, ...script } = opening
+function open(desk: Desk, { shops, instruments, protocols, tooling }: DemoRegisters, opening: Opening): Promise<ScriptedRun> {
+  const { press, protocol, lead, pumpHand, witness, force, points, net, legs, uses = [], ...script } = opening
   return ScriptedRun.open(desk, {
     ...script,
     shopId: shops.main,
@@ -43,6 +46,7 @@ function open(desk: Desk, { shops, instruments, protocols }: DemoRegisters, open
       legs,
       pumpHand: { id: shops.people[pumpHand], name: nameOf(pumpHand) },
       witness: { id: shops.people[witness.who], relation: witness.relation },
+      toolingIds: uses.flatMap((key) => tooling?.[key] ?? []),
     },
   })
 }
@@ -199,6 +203,7 @@ export async function testOx(desk: Desk, registers: DemoRegisters, press: PressB
     force: 'dialGauge',
     ...bedPoints(press, dials(registers.instruments)),
     legs: central('4'),
+    uses: ['bearingPlate', 'steppedNose'],
     frames: [{ points: [behaves(1, 0.0071, 0.034, 0.02), behaves(0.5, 0.0024, 0.006), behaves(0.5, 0.0022, 0.005)], leak: 0.002, creep: 0.001 }],
     reliefSet: psi('8400'),
     strokePercent: '40',

@@ -3,9 +3,11 @@ import type { AppContext } from '../../context'
 import { inRetriedTransaction } from '../../ledger/retry'
 import { Shop } from '../../models'
 import { hashPassword } from '../../services/passwords'
+import { tagOf } from '../../services/tags'
 import { keepDemoPhoto } from './demo-files'
-import { daysBefore, type Desk } from './desk'
+import { daysBefore, workAt, type Desk } from './desk'
 import { enterCalibrations, enterInstruments, shortenHolds, writeProtocols } from './demo-instruments'
+import { enterTooling } from './demo-tooling'
 import { DEMO_PASSWORD, foundDemoShops, standingSignIns, type DemoShops, type DemoSignIn } from './demo-people'
 import {
   buildMule,
@@ -43,6 +45,12 @@ async function changeCoupler(desk: Desk, { people }: DemoShops, press: PressBook
   await press.closeRepair(said, people.lead, daysBefore(desk, 97, '16:30'))
 }
 
+/** The press that is cleared has its tag: the code that its paper carries. */
+async function hangTag(desk: Desk, { main, people }: DemoShops, press: PressBook): Promise<void> {
+  const work = await workAt(desk, main, people.lead, daysBefore(desk, 11, '08:10'))
+  await tagOf(work, press.id, '')
+}
+
 /** The shop's story, the oldest first: what a test freezes is what the registers said on its day. */
 async function tell(desk: Desk, passwordHash: string): Promise<void> {
   const shops = await foundDemoShops(desk, passwordHash)
@@ -50,7 +58,7 @@ async function tell(desk: Desk, passwordHash: string): Promise<void> {
   await enterCalibrations(desk, shops, instruments, 420, 250)
   const ferry = await registerFerry(desk, shops)
   const protocols = await writeProtocols(desk, shops)
-  const registers = { shops, instruments, protocols }
+  const registers = { shops, instruments, protocols, tooling: null }
   await testFerry(desk, registers, ferry)
   await enterCalibrations(desk, shops, instruments, 250, 180)
   const badger = await registerBadger(desk, shops)
@@ -66,7 +74,9 @@ async function tell(desk: Desk, passwordHash: string): Promise<void> {
   await testWrenAgain(desk, registers, wren, abandoned.id)
   await buildMule(desk, shops)
   const ox = await registerOx(desk, shops)
-  await testOx(desk, registers, ox)
+  const tooling = await enterTooling(desk, shops)
+  await testOx(desk, { ...registers, tooling }, ox)
+  await hangTag(desk, shops, ox)
   await buildSecondShopsPress(desk, shops)
   const longMeg = await registerLongMeg(desk, shops)
   await testLongMeg(desk, registers, longMeg)

@@ -1,7 +1,7 @@
 import type { Drawing } from '#shared/chart/drawing'
 import { lineDrawing } from '#shared/chart/line-geometry'
 import { recordLine } from '#shared/chart/record-line'
-import { drawnPress } from '#shared/drawing/drawn-press'
+import { drawnPress, holeInUse, looseParts } from '#shared/drawing/drawn-press'
 import { elevationDrawing, elevationLabel } from '#shared/drawing/elevation'
 import { PAPER_INKS } from '#shared/drawing/inks'
 import type { JointMarkState } from '#shared/drawing/balloon-items'
@@ -55,10 +55,9 @@ export function paintElevation(paper: Paper, { opened, state }: RecordOfTest, pl
     place: one.joint.place,
   }))
   const points = opened.points.map(({ letter, place: at }) => ({ letter, place: at }))
-  const press = drawnPress(opened.press)
-  const hole = Number.parseInt(opened.legs[0]?.bedHole ?? '', 10)
-  const dimensions = { ...press.dimensions, bedHole: Number.isNaN(hole) ? null : hole }
-  const drawing = elevationDrawing({ press: { ...press, dimensions }, joints, points, size: ELEVATION })
+  const press = drawnPress(opened.press, holeInUse(opened.legs[0]?.bedHole))
+  const loose = looseParts(opened.press, opened.joints)
+  const drawing = elevationDrawing({ press, joints, points, loose, size: ELEVATION })
   const alt = `${elevationLabel(press.kind, joints.length)}; their examinations are in the table of joints.`
   paintDrawing(paper, drawing, { x: place.x, y: place.y, scale: place.width / ELEVATION.width }, PAPER_INKS, alt)
 }

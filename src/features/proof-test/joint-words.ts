@@ -1,8 +1,10 @@
 import { nameJoints, neighboursOf } from '#shared/press/joints'
-import type { ExaminationMethod } from '#shared/press/model'
+import type { ExaminationMethod, FrameKind } from '#shared/press/model'
+import { walkingOrder } from '#shared/press/places'
 import type { JointState } from '#shared/proof-test/state'
 import type { JointMarkState } from '../../components/marks'
-import { capital } from '../../lib/words'
+import { clockTime } from '../../lib/dates'
+import { capital, ordinal } from '../../lib/words'
 
 export type Occasion = 'before load' | 'after load'
 
@@ -64,3 +66,38 @@ export function workSentence(joint: JointState, joints: readonly JointState[]): 
     }
   return { title: `Not ready to load: joint ${number} was rejected.`, body: `Repair the ${here}. ${after}` }
 }
+
+const needsExamining = (joint: JointState, occasion: Occasion): boolean => !examinationOf(joint, occasion)
+
+/** The joint at hand: the one that was tapped, else the first that needs work, else the first to examine, round the frame. */
+export function jointAtHand(kind: FrameKind, joints: readonly JointState[], occasion: Occasion, tapped: string | null): JointState | null {
+  const chosen = joints.find(({ joint }) => joint.id === tapped)
+  if (chosen) return chosen
+  const ways = new Map(joints.map((joint) => [joint.joint.id, joint]))
+  const round = walkingOrder(
+    kind,
+    joints.map(({ joint }) => joint),
+  ).flatMap(({ id }) => ways.get(id) ?? [])
+  return round.find((joint) => needsWork(joint, occasion)) ?? round.find((joint) => needsExamining(joint, occasion)) ?? null
+}
+
+export interface Walked {
+  joint: JointState
+  /** From 1, in the order the joints were examined. */
+  rank: number
+  at: string
+}
+
+/** The joints in the order they were walked; it follows from the ledger, so it is there again after a reload. */
+export function orderWalked(joints: readonly JointState[], occasion: Occasion): Walked[] {
+  return joints
+    .flatMap((joint) => {
+      const examined = examinationOf(joint, occasion)
+      return examined ? [{ joint, at: examined.at }] : []
+    })
+    .sort((a, b) => (a.at === b.at ? 0 : a.at < b.at ? -1 : 1))
+    .map((one, index) => ({ ...one, rank: index + 1 }))
+}
+
+/** "3rd of 11, 14:02". */
+export const walkedWords = ({ rank, at }: Walked, of: number): string => `${ordinal(rank)} of ${of}, ${clockTime(at)}`

@@ -4,6 +4,7 @@ import { typedWords } from '#shared/instruments/words'
 import { HELD_BY, VOIDED_BY } from '#shared/press/clearance-words'
 import { formatNumber, groupDigits, parseDecimal, roundDownTo, toSI, unitLabel, type ForceUnit } from '#shared/units'
 import { dateAndTime, longDate, shortDate } from '../../lib/dates'
+import { asSentence } from '../../lib/words'
 
 export type TagClearance = Extract<PublicTag['answer'], { is: 'cleared' }>['clearance']
 
@@ -35,6 +36,8 @@ export interface TagWords {
   until: string
   smallPrint: SmallPrint[]
   clearedBy: string
+  /** The number of the test behind it. */
+  test: string
   changes: string
 }
 
@@ -85,16 +88,14 @@ export function tagWords(clearance: TagClearance, noChangeSince: string | null, 
       { lead: 'Not before its joints are examined again', rest: `after ${either(HELD_BY)}.` },
       { lead: '', rest: SHORT_CAUTIONS.join(' ') },
     ],
-    clearedBy: `Cleared by ${clearance.clearedBy} on ${shortDate(clearance.clearedOn)} after ${staticLoads(clearance.staticLoads)}. Test ${clearance.number}.`,
+    clearedBy: `Cleared by ${clearance.clearedBy} on ${shortDate(clearance.clearedOn)} after ${staticLoads(clearance.staticLoads)}.`,
+    test: clearance.number,
     changes:
       noChangeSince === null
         ? 'A change was reported since, and the clearance still stands: ask the shop what it was.'
         : `No change reported since ${shortDate(noChangeSince)}.`,
   }
 }
-
-/** A sentence ends in a point, whoever wrote it. */
-export const asSentence = (text: string): string => (/[.!?]$/.test(text.trim()) ? text.trim() : `${text.trim()}.`)
 
 /** Why a press may not be used, and since when, as far as it is known. */
 export function shutWords(answer: Exclude<PublicTag['answer'], { is: 'cleared' }>): { why: string; since: string | null } {

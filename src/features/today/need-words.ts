@@ -1,5 +1,6 @@
 import type { Need as NeedData } from '#shared/api/today'
 import { calendarDate, daysBetween, longDate } from '../../lib/dates'
+import { asSentence } from '../../lib/words'
 import { paths } from '../../paths'
 import type { Need } from './components/today-view'
 
@@ -79,7 +80,7 @@ function instrumentOut(need: Extract<NeedData, { kind: 'instrument-out' }>, toda
         note: `Due ${need.dueOn === null ? '' : dayAndMonth(need.dueOn, today)}. It blocks any new test.`,
         due: `${days(late)} late`,
         urgency: 'late',
-        to,
+        to: `${to}#calibration`,
       }
     case 'out-of-tolerance':
       return {
@@ -97,7 +98,7 @@ function instrumentOut(need: Extract<NeedData, { kind: 'instrument-out' }>, toda
         note: 'It blocks any new test. Enter its certificate.',
         due: 'Now',
         urgency: 'late',
-        to,
+        to: `${to}#calibration`,
       }
   }
 }
@@ -113,7 +114,7 @@ function shutWords(need: PressNeed, today: string): Words {
       return {
         mark: 'stop',
         title: `Take the tag off ${need.pressName}`,
-        note: `${need.why} Say so when it is off.`,
+        note: `${asSentence(need.why)} Say so when it is off.`,
         due,
         urgency: 'now',
         to: `${to}#tag`,
@@ -122,7 +123,7 @@ function shutWords(need: PressNeed, today: string): Words {
       return {
         mark: 'stop',
         title: `${need.pressName} waits for a repair`,
-        note: `${need.why} Say what was done.`,
+        note: `${asSentence(need.why)} Say what was done.`,
         due,
         urgency: 'now',
         to: `${to}#repairs`,
@@ -149,10 +150,10 @@ function shutWords(need: PressNeed, today: string): Words {
       return {
         mark: 'stop',
         title: `${need.pressName} may not be used`,
-        note: `${need.why} Plan a proof test.`,
+        note: `${asSentence(need.why)} Plan a proof test.`,
         due: 'Now',
         urgency: 'now',
-        to,
+        to: paths.planProofTest.href({ press: need.pressId }),
       }
   }
 }
@@ -169,10 +170,10 @@ function words(need: NeedData, today: string): Words {
       return {
         mark: 'clock-late',
         title: `${need.pressName} is overdue`,
-        note: `Its clearance ran until ${dayAndMonth(need.until, today)}. It may not be used.`,
+        note: `Its clearance ran until ${dayAndMonth(need.until, today)}. Plan a proof test.`,
         due: `${days(daysBetween(need.until, today))} late`,
         urgency: 'late',
-        to: paths.press.href(need.pressId),
+        to: paths.planProofTest.href({ press: need.pressId }),
       }
     case 'press-due':
       return {

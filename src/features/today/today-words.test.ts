@@ -35,6 +35,25 @@ describe('what needs somebody', () => {
     })
   })
 
+  it('leads from what a press waits for to where it is done', () => {
+    const named = { pressId: id(1), pressName: 'Press 4', since: null }
+    const to = (need: Need) => say(need).to
+    expect(say({ kind: 'tag-hangs', ...named, why: 'The bed looks bent' })).toMatchObject({
+      title: 'Take the tag off Press 4',
+      note: 'The bed looks bent. Say so when it is off.',
+      to: `/presses/${id(1)}#tag`,
+    })
+    expect(to({ kind: 'repair-open', ...named, repairId: id(9), why: 'Stopped.', since: '2026-09-20T12:00:00.000Z' })).toBe(
+      `/presses/${id(1)}#repairs`,
+    )
+    expect(to({ kind: 'joints-to-examine', ...named, joints: 'joints 5 and 6' })).toBe(`/presses/${id(1)}#joints`)
+    expect(to({ kind: 'retest', ...named, repeatsId: id(8), number: 'PT-0041' })).toBe(`/proof-tests/new?press=${id(1)}&repeats=${id(8)}`)
+    expect(to({ kind: 'press-shut', ...named, why: 'Hose changed.' })).toBe(`/proof-tests/new?press=${id(1)}`)
+    expect(to({ kind: 'press-overdue', pressId: id(1), pressName: 'Press 4', until: '2026-09-01' })).toBe(`/proof-tests/new?press=${id(1)}`)
+    const gauge = { instrumentId: id(3), code: 'G-02', instrumentKind: 'gauge' as const }
+    expect(to({ kind: 'instrument-out', ...gauge, is: 'out-of-date', dueOn: '2026-09-19' })).toBe(`/instruments/${id(3)}#calibration`)
+  })
+
   it('says how late an instrument is, and when one falls due', () => {
     const named = { instrumentId: id(3), code: 'I-02', instrumentKind: 'indicator' as const }
     expect(say({ kind: 'instrument-out', ...named, is: 'out-of-date', dueOn: '2026-09-19' })).toMatchObject({

@@ -1,4 +1,5 @@
 import { useState } from 'react'
+import { useLocation } from 'react-router-dom'
 import type { InstrumentResponse } from '#shared/api/instruments'
 import { instrumentWords } from '#shared/instruments/words'
 import { PhotoField } from '../../../components/attachments/photo-field'
@@ -40,7 +41,9 @@ type InstrumentPageProps = { answer: InstrumentResponse; today: string; mayWrite
 export function InstrumentPage({ answer, today, mayWrite, mayCalibrate }: InstrumentPageProps) {
   const { instrument, calibrations } = answer
   const { id, details, retired } = instrument
-  const [entering, setEntering] = useState(false)
+  // Whoever is sent here to enter a certificate finds the form open.
+  const { hash } = useLocation()
+  const [entering, setEntering] = useState(hash === '#calibration' && mayCalibrate && !retired)
   const add = useAddCalibration(id)
   const certificate = useCertificate(id, calibrations, entering)
   const actions = mayWrite && !retired && (

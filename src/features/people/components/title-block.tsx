@@ -13,12 +13,15 @@ type TitleBlockProps = {
   foot: ReactNode
   /** Longer forms take more of the sheet; the drawing of the quarters gives way. */
   wide?: boolean
+  /** What is said over the sheet. */
+  over?: ReactNode
 }
 
 /** The drawing sheet that greets who isn't signed in: the press, its quarters, and a form for a title block. */
-export function TitleBlock({ title, lead, children, foot, wide = false }: TitleBlockProps) {
+export function TitleBlock({ title, lead, children, foot, wide = false, over }: TitleBlockProps) {
   return (
     <main className="ground-dye flex min-h-dvh flex-col desktop:p-5">
+      {over}
       <ZonedSheet columns={8} rows={4} className="grow">
         <div
           className={classNames(

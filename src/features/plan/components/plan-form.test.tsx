@@ -13,6 +13,7 @@ import { PlanForm } from './plan-form'
 
 const example = openedPayload()
 const AT = '2026-09-15T10:00:00.000Z'
+const WEAK = '01990000-0000-7000-8000-0000000000ab'
 const ABOVE = '01990000-0000-7000-8000-0000000000aa'
 
 const shop: Here['shop'] = {
@@ -37,7 +38,22 @@ function registers(): PlanRegisters {
       { id: ABOVE, name: shipped.name, version: 1, archived: false, content: shipped.content },
     ],
     instruments: example.instruments.map((instrument) => ({ ...instrument, retired: false })),
-    tooling: [],
+    tooling: [
+      {
+        id: WEAK,
+        retired: false,
+        details: {
+          code: 'T-09',
+          name: 'Old die',
+          kind: 'die',
+          ratedLoad: { text: '8', unit: 'short-ton' },
+          ratingFrom: 'Stamped',
+          fit: 'On the bed',
+          height: null,
+          remark: '',
+        },
+      },
+    ],
     people: Object.entries(names).map(([userId, name]) => ({ userId, name, role: 'lead' as const, addedAt: AT, endedAt: null })),
   }
 }
@@ -144,6 +160,45 @@ describe('the plan of a test above rating', { timeout: 20_000 }, () => {
   })
 })
 
+describe('the plan of a test with loose tooling', { timeout: 20_000 }, () => {
+  beforeEach(() => {
+    localStorage.clear()
+    opened = []
+    vi.stubGlobal(
+      'fetch',
+      vi.fn((url: string, init?: { method?: string; body?: string }) => {
+        if (init?.method !== 'POST') return answer(url, init)
+        opened.push(JSON.parse(init.body ?? '') as OpenTestRequest)
+        return json({ id: ids.test, number: 'PT-0001' }, 201)
+      }),
+    )
+  })
+  afterEach(() => vi.unstubAllGlobals())
+
+  it('refuses a piece that carries less than the highest load at the piece, before anything is sent', async () => {
+    show()
+    await waitFor(() => field('points.0.instrumentId'))
+    enter('protocolId', ids.protocol)
+    enter('forceInstrumentIds.0', ids.gauge)
+    for (const [index, id] of ids.indicators.entries()) enter(`points.${index}.instrumentId`, id)
+    enter('legs.0.bedHole', '4')
+    enter('pumpHand.id', ids.pumpHand)
+    enter('witness.id', ids.witness)
+    enter('witness.relation', 'works next door')
+    fireEvent.click(field(`tooling.${WEAK}`))
+    expect(await screen.findByText(/^T-09 carries no more than 8\sshort tons, and this test goes to/)).toBeVisible()
+    fireEvent.click(screen.getByText('Open this test'))
+    await waitFor(() => expect(field(`tooling.${WEAK}`)).toHaveFocus())
+    expect(opened).toEqual([])
+
+    fireEvent.click(field(`tooling.${WEAK}`))
+    await waitFor(() => expect(screen.queryByText(/^T-09 carries no more than/)).toBeNull())
+    fireEvent.click(screen.getByText('Open this test'))
+    await waitFor(() => expect(opened).toHaveLength(1))
+    expect(opened[0]?.toolingIds).toEqual([])
+  })
+})
+
 describe('the plan of a test whose estimate is over 100 %', { timeout: 20_000 }, () => {
   const mm = (text: string) => ({ text, unit: 'mm' as const })
   const weakBed: MemberStrength = {
@@ -239,7 +294,7 @@ describe('the plan of a test that repeats one that went wrong', { timeout: 20_00
     show()
     await waitFor(() => expect(field('repeatsId').value).toBe(ids.test))
     const repeats = (await screen.findByText('PT-0041', { selector: 'a' })).closest('div')
-    expect(repeats?.textContent).toContain(`PT-0041 was stopped. ${why}`)
+    expect(repeats?.textContent?.replaceAll('\u202f', ' ')).toContain(`PT-0041 was stopped. ${why}`)
     expect(repeats?.textContent).toContain('Bed stiffeners welded out. Done by Pell Navarre.')
   })
 

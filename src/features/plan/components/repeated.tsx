@@ -3,6 +3,7 @@ import type { PressState } from '#shared/press/state'
 import { WholeRow } from '../../../components/form-steps'
 import { TextLink } from '../../../components/button'
 import { Mark } from '../../../components/marks'
+import { setPercent } from '../../../components/typeset'
 import { shortDate } from '../../../lib/dates'
 import { paths } from '../../../paths'
 import type { PlanForm } from '../use-plan-form'
@@ -32,14 +33,16 @@ export function Repeated({ form, press, repairOpen }: RepeatedProps) {
               <p className="font-semibold">
                 Repeats <TextLink to={paths.proofTest.href(repeatsId)}>{told.number}</TextLink>
               </p>
-              {told.why !== null && <p>{told.why}</p>}
+              {told.why !== null && <p>{setPercent(told.why)}</p>}
               {told.closed && (
                 <p>
                   Repaired on {shortDate(told.closed.at)}: {told.closed.done}
                   {told.closed.doneBy !== '' && ` Done by ${told.closed.doneBy}.`}
                 </p>
               )}
-              <p className="text-graphite">Its line is drawn beside the new one, in the run and on the record.</p>
+              <p className="text-graphite">
+                Its line is drawn beside the new one where the same is measured, in the run and on the record.
+              </p>
             </div>
           </div>
         )}

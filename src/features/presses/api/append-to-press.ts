@@ -1,6 +1,6 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query'
 import { appendResponseSchema } from '#shared/api/ledger'
-import type { Attachment } from '#shared/ledger/envelope'
+import type { Attachment, Override } from '#shared/ledger/envelope'
 import { PRESS_VERSION, type PressDraft } from '#shared/press/entries'
 import { api } from '../../../lib/api-client'
 import { files } from '../../../lib/attachments'
@@ -8,8 +8,8 @@ import { useUser } from '../../../lib/here'
 import { sendOnce } from '../../../lib/send-once'
 import { pressQuery } from './get-press'
 
-/** What somebody did to a press, and the photos of it. */
-export type PressWriting = PressDraft & { attachments?: Attachment[] }
+/** What somebody did to a press, the photos of it, and reasons where a rule asks for one. */
+export type PressWriting = PressDraft & { attachments?: Attachment[]; overrides?: Override[] }
 
 /** Adds to a press's ledger what somebody did to it, in the order given. `form` names what is being filled in. */
 export function useAppendToPress(pressId: string, headSeq: number, form: string) {

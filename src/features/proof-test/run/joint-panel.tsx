@@ -14,11 +14,13 @@ import { jointMark, jointSays, type Occasion } from '../joint-words'
 import type { Run } from '../use-run'
 import { EntryPhotos, JointPhotos, photosToEnter } from './entry-photos'
 import { Into } from './slots'
+import { RejectedJoint } from './walk-down-notes'
 
 interface JointPanelProps {
   run: Run
   joint: JointState
   occasion: Occasion
+  pressId: string
   onDone: () => void
 }
 
@@ -32,7 +34,7 @@ interface Looked {
 const LOOKED: Looked = { method: '', remark: '', cold: false, photos: [] }
 
 /** One joint being examined: how, what was found, and what to say about it. */
-export function JointPanel({ run, joint, occasion, onDone }: JointPanelProps): ReactElement {
+export function JointPanel({ run, joint, occasion, pressId, onDone }: JointPanelProps): ReactElement {
   const { id, number, name, kind, detail } = joint.joint
   const [looked, change] = useDraft<Looked>(`${run.testId}.examined.${occasion}.${id}`, LOOKED)
   const [asked, setAsked] = useState(false)
@@ -59,6 +61,7 @@ export function JointPanel({ run, joint, occasion, onDone }: JointPanelProps): R
           <p className="text-graphite">
             {[capital(kind), detail].filter((part) => part !== '').join(', ')}. {jointSays(joint, occasion)}.
           </p>
+          <RejectedJoint joint={joint} occasion={occasion} pressId={pressId} />
         </div>
       </div>
       <RadioRow
@@ -88,7 +91,7 @@ export function JointPanel({ run, joint, occasion, onDone }: JointPanelProps): R
           maxLength={500}
           onChange={(event) => change({ remark: event.target.value })}
         />
-        <Button className="desktop:min-h-14" onClick={() => write('rejected')}>
+        <Button className="desktop:min-h-14" note="opens a repair" onClick={() => write('rejected')}>
           Joint {number} is rejected
         </Button>
       </div>

@@ -5,18 +5,21 @@ import type { Opened } from '#shared/proof-test/entries'
 import { evaluateClimb } from '#shared/proof-test/evaluate-climb'
 import { toSI, type TypedLength } from '#shared/units'
 import type { DrawnPress } from '#shared/drawing/frame'
+import { holeInUse } from '#shared/drawing/drawn-press'
 import { JointDrawing } from '../../../components/instruments/joint-drawing'
 import { LineChart } from '../../../components/instruments/line-chart'
 import { LoadLadder } from '../../../components/instruments/load-ladder'
+import { usePanZoom } from '../../../components/instruments/use-pan-zoom'
+import { ZoomKeys, ZoomWindow } from '../../../components/instruments/zoom-window'
 import type { Size } from '../../../components/fit'
 import { Mark } from '../../../components/marks'
 import type { RunShape } from '../../../components/run/run-frame'
 import { useEarlierLine } from '../../../lib/use-earlier-line'
-import { jointMark, type Occasion } from '../joint-words'
+import { jointAtHand, jointMark, orderWalked, walkedWords, type Occasion } from '../joint-words'
 import { ladderStages, levelPercent } from '../ladder-model'
 import { lineSpec } from '../line-model'
 import type { Run } from '../use-run'
-import { jointAtHand, useChosenJoint } from './step-walk-down'
+import { useChosenJoint } from './step-walk-down'
 import { WalkDownLegend } from './walk-down-legend'
 
 interface DrawingProps {
@@ -56,33 +59,58 @@ export function drawnPress(opened: Opened): DrawnPress {
   const { height, opening, throat, holePitch, holes } = dimensions
   return {
     kind,
-    dimensions: { height: metres(height), width: metres(opening), throat: metres(throat), holes, holePitch: metres(holePitch) },
+    dimensions: {
+      height: metres(height),
+      width: metres(opening),
+      throat: metres(throat),
+      holes,
+      holePitch: metres(holePitch),
+      bedHole: holeInUse(opened.legs[0]?.bedHole),
+    },
   }
 }
+
+/** Under the drawing: how far the walk came, and keys to enlarge it. */
+const STRIP = 56
 
 /** The drawing of the walk-down: every balloon a button. */
 function WalkDownDrawing({ run, opened, size, shape }: DrawingProps): ReactElement {
   const occasion: Occasion = run.step.name === 'after-walk-down' ? 'after load' : 'before load'
   const [{ jointId }, choose] = useChosenJoint(run.testId)
+  const zoom = usePanZoom()
   const { joints } = run.state
   const legend = shape === 'portrait' && size.width >= 700
   const width = legend ? Math.round(size.width * 0.65) : size.width
+  const height = Math.max(STRIP, size.height - STRIP)
+  const last = orderWalked(joints, occasion).at(-1)
   return (
     <div className={legend ? 'grid grid-cols-[65%_35%]' : ''}>
-      <JointDrawing
-        press={drawnPress(opened)}
-        joints={joints.map((joint) => ({
-          id: joint.joint.id,
-          number: joint.joint.number,
-          name: joint.joint.name,
-          place: joint.joint.place,
-          state: jointMark(joint, occasion),
-        }))}
-        points={opened.points.map(({ letter, place }) => ({ letter, place }))}
-        selectedId={jointAtHand(joints, occasion, jointId)?.joint.id ?? null}
-        onSelect={(id) => choose({ jointId: id })}
-        size={{ width, height: size.height }}
-      />
+      <div style={{ width }}>
+        <div style={{ width, height }}>
+          <ZoomWindow zoom={zoom}>
+            <JointDrawing
+              press={drawnPress(opened)}
+              joints={joints.map((joint) => ({
+                id: joint.joint.id,
+                number: joint.joint.number,
+                name: joint.joint.name,
+                place: joint.joint.place,
+                state: jointMark(joint, occasion),
+              }))}
+              points={opened.points.map(({ letter, place }) => ({ letter, place }))}
+              selectedId={jointAtHand(opened.press.kind, joints, occasion, jointId)?.joint.id ?? null}
+              onSelect={(id) => choose({ jointId: id })}
+              size={{ width, height }}
+            />
+          </ZoomWindow>
+        </div>
+        <div className="flex items-center justify-between gap-3 pl-4" style={{ height: STRIP }}>
+          <p className="min-w-0 font-condensed text-16 text-faint-scribe">
+            {last && `Last: joint ${last.joint.joint.number}, ${walkedWords(last, joints.length)}`}
+          </p>
+          <ZoomKeys zoom={zoom} />
+        </div>
+      </div>
       {legend && <WalkDownLegend opened={opened} height={size.height} />}
     </div>
   )

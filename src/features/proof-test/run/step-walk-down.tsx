@@ -4,23 +4,29 @@ import type { JointState } from '#shared/proof-test/state'
 import { JointBalloon, Mark } from '../../../components/marks'
 import { ActionPlate } from '../../../components/run/plates'
 import { useDraft } from '../drafts'
-import { examinationOf, jointMark, jointSays, madeUpWord, needsWork, toExamineAfter, workSentence, type Occasion } from '../joint-words'
+import {
+  jointAtHand,
+  jointMark,
+  jointSays,
+  madeUpWord,
+  needsWork,
+  orderWalked,
+  toExamineAfter,
+  walkedWords,
+  workSentence,
+  type Occasion,
+} from '../joint-words'
 import type { Run } from '../use-run'
 import { ConfirmLoadPath } from './confirm-load-path'
 import { EntryPhotos, JointPhotos, photosToEnter } from './entry-photos'
 import { BenchScroll, HeadBand } from './head-band'
+import { RejectedJoint, StoodStill } from './walk-down-notes'
 import { JointPanel } from './joint-panel'
 import { Into } from './slots'
 import type { StepProps } from './step-props'
 
 /** Which joint is looked at; the drawing and the list share it. */
 export const useChosenJoint = (testId: string) => useDraft<{ jointId: string | null }>(`${testId}.joint`, { jointId: null })
-
-/** The joint at hand: the one that was tapped, else the first that needs work, else the first to examine. */
-export function jointAtHand(joints: readonly JointState[], occasion: Occasion, tapped: string | null): JointState | null {
-  const chosen = joints.find(({ joint }) => joint.id === tapped)
-  return chosen ?? joints.find((joint) => needsWork(joint, occasion)) ?? joints.find((joint) => !examinationOf(joint, occasion)) ?? null
-}
 
 interface JointListProps {
   joints: readonly JointState[]
@@ -30,6 +36,7 @@ interface JointListProps {
 }
 
 function JointList({ joints, occasion, chosen, onChoose }: JointListProps): ReactElement {
+  const walked = new Map(orderWalked(joints, occasion).map((one) => [one.joint, walkedWords(one, joints.length)]))
   return (
     <ul aria-label="Joints of the load path" className="mt-3 grid auto-rows-fr gap-x-6 tablet:grid-flow-col tablet:grid-cols-2" style={{ gridTemplateRows: `repeat(${Math.ceil(joints.length / 2)}, auto)` }}>
       {joints.map((joint) => {
@@ -48,7 +55,7 @@ function JointList({ joints, occasion, chosen, onChoose }: JointListProps): Reac
                   <span className="sr-only">Joint {joint.joint.number}, </span>
                   {joint.joint.name}
                 </span>
-                <span className={`block font-condensed text-16 leading-[20px] ${here ? 'font-semibold' : 'text-graphite'}`}>{jointSays(joint, occasion)}</span>
+                <span className={`block font-condensed text-16 leading-[20px] ${here ? 'font-semibold' : 'text-graphite'}`}>{[jointSays(joint, occasion), walked.get(joint)].filter(Boolean).join('. ')}</span>
               </span>
             </button>
           </li>
@@ -58,7 +65,7 @@ function JointList({ joints, occasion, chosen, onChoose }: JointListProps): Reac
   )
 }
 
-function Work({ run, joint, occasion }: { run: Run; joint: JointState; occasion: Occasion }): ReactElement {
+function Work({ run, joint, occasion, pressId }: { run: Run; joint: JointState; occasion: Occasion; pressId: string }): ReactElement {
   const { title, body } = workSentence(joint, run.state.joints)
   const { id, number } = joint.joint
   const [{ photos }, change] = useDraft<{ photos: Attachment[] }>(`${run.testId}.worked.${id}`, { photos: [] })
@@ -75,6 +82,7 @@ function Work({ run, joint, occasion }: { run: Run; joint: JointState; occasion:
         <div className="min-w-0">
           <h2 className="text-22 tablet:text-26">{title}</h2>
           <p className="mt-1 text-18">{body}</p>
+          <RejectedJoint joint={joint} occasion={occasion} pressId={pressId} />
           {joint.joint.kind === 'weld' && (
             <p className="mt-2 flex items-center gap-3 text-18">
               <Mark name="not-read" size={22} />
@@ -103,7 +111,7 @@ export function WalkDownStep({ run, opened, step }: StepProps<'walk-down'> | Ste
   const occasion: Occasion = step.name === 'walk-down' ? 'before load' : 'after load'
   const [{ jointId }, choose] = useChosenJoint(run.testId)
   const { joints } = run.state
-  const chosen = jointAtHand(joints, occasion, jointId)
+  const chosen = jointAtHand(opened.press.kind, joints, occasion, jointId)
   const done = (): void => choose({ jointId: null })
   return (
     <>
@@ -111,9 +119,10 @@ export function WalkDownStep({ run, opened, step }: StepProps<'walk-down'> | Ste
         {counted(joints, occasion)}
       </HeadBand>
       <BenchScroll>
-        {chosen && needsWork(chosen, occasion) && occasion === 'before load' && <Work run={run} joint={chosen} occasion={occasion} />}
+        {occasion === 'before load' && <StoodStill days={opened.stoodStillDays} />}
+        {chosen && needsWork(chosen, occasion) && occasion === 'before load' && <Work run={run} joint={chosen} occasion={occasion} pressId={opened.pressId} />}
         {chosen && !(needsWork(chosen, occasion) && occasion === 'before load') && (
-          <JointPanel key={chosen.joint.id} run={run} joint={chosen} occasion={occasion} onDone={done} />
+          <JointPanel key={chosen.joint.id} run={run} joint={chosen} occasion={occasion} pressId={opened.pressId} onDone={done} />
         )}
         {!chosen && occasion === 'before load' && <ConfirmLoadPath run={run} opened={opened} />}
         <JointList joints={joints} occasion={occasion} chosen={chosen} onChoose={(id) => choose({ jointId: id })} />

@@ -44,12 +44,12 @@ export function PrintTag({ pressId, made, tag }: PrintTagProps) {
             : 'The press is not cleared. Hang this over the gauge until it is, and take an older tag off.'}
         </p>
       </div>
-      <div className="grid gap-x-10 gap-y-6 desktop:grid-cols-[auto_minmax(0,1fr)] print:block">
+      <div className="grid gap-x-6 gap-y-6 desktop:gap-x-10 tablet:grid-cols-[auto_minmax(0,1fr)] print:block">
         <div className="self-start justify-self-start border border-rule print:border-0">
           <TagPaper tag={tag} address={made.address} code={made.code} size={size} onFull={setFull} />
         </div>
-        <div className="grid max-w-[34rem] content-start gap-4 print:hidden max-desktop:order-first">
-          <div role="group" aria-label="Size of the paper" className="grid gap-3 tablet:grid-cols-2">
+        <div className="grid max-w-[34rem] content-start gap-4 print:hidden max-tablet:order-first">
+          <div role="group" aria-label="Size of the paper" className="grid gap-3 desktop:grid-cols-2">
             {SIZES.map(({ value, label, note }) => (
               <Button
                 key={value}

@@ -56,10 +56,10 @@ function Head({ tag, size }: { tag: PublicTag; size: TagSize }) {
   const small = size === 'small'
   return (
     <div className={classNames('flex shrink-0 justify-between gap-x-[3mm]', small ? 'items-baseline' : 'flex-col')}>
-      <p className={classNames('min-w-0 leading-[1.15] font-semibold', small ? 'line-clamp-1 text-[3.7mm]' : 'line-clamp-2 text-[5.4mm]')}>
+      <p className={classNames('min-w-0 leading-[1.15] font-semibold', small ? 'line-clamp-1 text-[3.7mm]' : 'line-clamp-2 text-[5mm]')}>
         {pressWords(tag)}
       </p>
-      <p className={classNames('leading-[1.2]', small ? 'line-clamp-1 max-w-[40mm] shrink-0 text-right text-[2.9mm]' : 'text-[3.6mm]')}>
+      <p className={classNames('leading-[1.2]', small ? 'line-clamp-1 max-w-[40mm] shrink-0 text-right text-[2.9mm]' : 'text-[3.4mm]')}>
         {tag.shopName}
       </p>
     </div>
@@ -94,24 +94,26 @@ function Load({ words, small }: { words: ReturnType<typeof tagWords>; small: boo
       <p
         className={classNames(
           'flex items-center font-semibold',
-          small ? 'gap-[1.6mm] text-[3.9mm] leading-[5.4mm]' : 'gap-[3mm] text-[6mm] leading-[9mm]',
+          small ? 'gap-[1.6mm] text-[3.9mm] leading-[5.4mm]' : 'gap-[2.4mm] text-[5.2mm] leading-[7.6mm]',
         )}
       >
-        <TickRing className={small ? 'size-[5.4mm]' : 'size-[9mm]'} />
+        <TickRing className={small ? 'size-[5.4mm]' : 'size-[7.6mm]'} />
         Cleared up to
       </p>
       <p className={classNames('flex items-center font-bold', small ? 'gap-[2mm]' : 'gap-[3mm]')}>
         <span
           className={classNames(
             'leading-[0.84] tracking-[-0.02em]',
-            small ? (long ? 'text-[9mm]' : 'text-[15mm]') : long ? 'text-[14mm]' : 'text-[24mm]',
+            small ? (long ? 'text-[9mm]' : 'text-[15mm]') : long ? 'text-[13mm]' : 'text-[21mm]',
           )}
         >
           {words.load}
         </span>
-        <span className={classNames('max-w-min leading-[1.02]', small ? 'text-[5.6mm]' : 'text-[9mm]')}>{words.unit}</span>
+        <span className={classNames('max-w-min leading-[1.02]', small ? 'text-[5.6mm]' : 'text-[8mm]')}>{words.unit}</span>
       </p>
-      {words.loadNote !== '' && <p className={small ? 'text-[2.6mm] leading-[1.1]' : 'mt-[1mm] text-[3.8mm]'}>{words.loadNote}.</p>}
+      {words.loadNote !== '' && (
+        <p className={small ? 'text-[2.6mm] leading-[1.1]' : 'mt-[0.6mm] text-[3.5mm] leading-[1.2]'}>{words.loadNote}.</p>
+      )}
     </div>
   )
 }
@@ -139,7 +141,7 @@ function Foot({ children, size }: { children: ReactNode; size: TagSize }) {
     <div
       className={classNames(
         'shrink-0 border-t-[0.4mm] border-black font-condensed font-medium',
-        size === 'small' ? 'px-[2.4mm] py-[0.7mm] text-[2.2mm] leading-[1.2]' : 'px-[4mm] py-[1.6mm] text-[3mm] leading-[1.25]',
+        size === 'small' ? 'px-[2.4mm] py-[0.7mm] text-[2.2mm] leading-[1.2]' : 'px-[4mm] py-[1.2mm] text-[2.7mm] leading-[1.22]',
       )}
     >
       {children}
@@ -154,7 +156,9 @@ function Cleared({ tag, clearance, address, code, size, onFull }: Given & { clea
   useEffect(() => onFull(full), [full, onFull])
   const foot = (
     <Foot size={size}>
-      <p>{words.clearedBy}</p>
+      <p>
+        {words.clearedBy} <span className="whitespace-nowrap">Test {words.test}.</span>
+      </p>
       <p>
         {words.changes} Printed {dateAndTime(tag.asOf)}; the code says how it stands now.
       </p>
@@ -165,7 +169,7 @@ function Cleared({ tag, clearance, address, code, size, onFull }: Given & { clea
       ref={box}
       className={classNames(
         'tag-small-print min-h-0 min-w-0 grow overflow-hidden font-condensed',
-        small ? '[--tag-print:2.5mm]' : 'space-y-[0.9mm] [--tag-print:3.5mm]',
+        small ? '[--tag-print:2.5mm]' : 'space-y-[0.7mm] [--tag-print:3.3mm]',
       )}
     >
       <Paragraphs paragraphs={words.smallPrint} />
@@ -179,7 +183,7 @@ function Cleared({ tag, clearance, address, code, size, onFull }: Given & { clea
           <Edge />
           <div className="flex justify-between gap-[2mm] pt-[0.8mm] pb-[0.4mm]">
             <Load words={words} small />
-            <Code address={address} code={code} className="-mt-[1.4mm] -mr-[1.4mm] size-[24mm]" />
+            <Code address={address} code={code} className="-mr-[1.2mm] size-[21.5mm]" />
           </div>
         </div>
         <div className="flex min-h-0 grow border-t-[0.4mm] border-black">
@@ -196,10 +200,10 @@ function Cleared({ tag, clearance, address, code, size, onFull }: Given & { clea
     <>
       <div className="shrink-0 px-[4mm] pt-[3mm]">
         <Head tag={tag} size={size} />
-        <div className="pt-[1mm]">
+        <div className="pt-[0.4mm]">
           <Edge />
         </div>
-        <div className="pt-[2mm] pb-[2mm]">
+        <div className="pt-[1.4mm] pb-[1.4mm]">
           <Load words={words} small={false} />
         </div>
       </div>
@@ -207,11 +211,11 @@ function Cleared({ tag, clearance, address, code, size, onFull }: Given & { clea
         <div className="flex grow flex-col justify-evenly border-r-[0.3mm] border-black px-[4mm] py-[1mm]">
           <Limits words={words} small={false} />
         </div>
-        <div className="p-[1mm]">
-          <Code address={address} code={code} className="size-[33mm]" />
+        <div className="p-[0.6mm]">
+          <Code address={address} code={code} className="size-[29mm]" />
         </div>
       </div>
-      <div className="flex min-h-0 grow border-t-[0.4mm] border-black px-[4mm] py-[1.6mm]">{print}</div>
+      <div className="flex min-h-0 grow border-t-[0.4mm] border-black px-[4mm] py-[1.2mm]">{print}</div>
       {foot}
     </>
   )
@@ -259,7 +263,7 @@ function Shut({ tag, answer, address, code, size, onFull }: Given & { answer: Ex
         </div>
       </div>
       <Foot size={size}>
-        Printed {dateAndTime(tag.asOf)}. {small && 'It comes off when the press is cleared again; the code says how it stands now.'}
+        Printed {dateAndTime(tag.asOf)}. {small && 'It comes off when the press is cleared again.'}
       </Foot>
       <Stripes className={small ? 'h-[5mm]' : 'h-[8mm]'} />
     </>

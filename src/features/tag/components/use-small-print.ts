@@ -15,9 +15,7 @@ export function useSmallPrint(words: string) {
   useLayoutEffect(() => {
     const { current } = box
     if (!current) return
-    let left = false
     const fit = () => {
-      if (left) return
       let share = 1
       current.style.setProperty('--tag-fit', String(share))
       while (overflows(current) && share > LEAST) {
@@ -28,9 +26,9 @@ export function useSmallPrint(words: string) {
     }
     fit()
     // The letters may come later than the words, and are not as wide as those that stood in for them.
-    void document.fonts?.ready.then(fit)
+    document.fonts?.addEventListener('loadingdone', fit)
     return () => {
-      left = true
+      document.fonts?.removeEventListener('loadingdone', fit)
     }
   }, [words])
   return { box, full }

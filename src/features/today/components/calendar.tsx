@@ -3,6 +3,7 @@ import { estimateTextWidth } from '#shared/chart/drawing'
 import { Fit } from '../../../components/fit'
 import { CONDENSED } from '../../../components/typeset'
 import { daysBetween, longDate, shortDate } from '../../../lib/dates'
+import { paths } from '../../../paths'
 import { layOutEvents, WEEKS, type CalendarEvent } from '../lay-out-events'
 
 export type { CalendarEvent }
@@ -72,7 +73,12 @@ export function Calendar({ calendar }: CalendarProps) {
   })
   return (
     <section className="ground-dye px-4 pt-3 pb-4 tablet:px-6 tablet:pb-2 desktop:min-h-[158px]">
-      <h2 className="text-20">The next {WEEKS} weeks</h2>
+      <div className="flex flex-wrap items-baseline justify-between gap-x-6">
+        <h2 className="text-20">The next {WEEKS} weeks</h2>
+        <Link to={paths.calendar.href()} className="inline-block min-h-12 content-center underline underline-offset-[3px] desktop:min-h-6">
+          The whole calendar
+        </Link>
+      </div>
       {calendar === undefined || coming === undefined ? (
         <div role="status" aria-label="Being fetched" className="h-[110px]" />
       ) : (

@@ -21,7 +21,7 @@ const columns: Column<ToolingRow>[] = [
     header: 'Kind',
     className: 'whitespace-nowrap',
     cell: ({ details }) => (
-      <span className="inline-flex items-center gap-2">
+      <span className="inline-flex items-center gap-2 align-middle">
         <PieceMark kind={details.kind} />
         {TOOLING_WORDS[details.kind].name}
       </span>

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { foldPress } from '#shared/press/apply'
 import type { PressDraft } from '#shared/press/entries'
+import type { MemberStrength } from '#shared/structure/member-data'
 import { openedPayload } from '../../../../../tests/factories/test-press'
 import { pressFormSchema, toPayload } from './draft'
 import { draftOfPress, editsOf, effectOf } from './edits'
@@ -169,18 +170,18 @@ describe('what changing it does, said before it is saved', () => {
         members: description.members.map((member) => (member.kind === 'bed-beam' ? { ...member, strength: undefined } : member)),
       },
     }
-    const bed = {
-      role: 'beam' as const,
+    const bed: MemberStrength = {
+      role: 'beam',
       section: {
-        shape: 'flat' as const,
-        height: { text: '80', unit: 'mm' as const },
-        width: { text: '20', unit: 'mm' as const },
+        shape: 'flat',
+        height: { text: '80', unit: 'mm' },
+        width: { text: '20', unit: 'mm' },
         sideBySide: 2,
         plates: [],
       },
       material: { grade: 'S355JR' },
-      support: 'both ends' as const,
-      span: { text: '640', unit: 'mm' as const },
+      support: 'both ends',
+      span: { text: '640', unit: 'mm' },
       ramOffset: null,
       hole: null,
       loadShare: null,

@@ -79,11 +79,9 @@ export function Actions({ state, mayUse, tagHangs, open, onOpen }: ActionsProps)
           Report a change
         </Button>
       )}
-      {mayUse && (
-        <ButtonLink wide to={paths.pressTag.href(state.id)}>
-          Print the tag
-        </ButtonLink>
-      )}
+      <ButtonLink wide to={paths.pressTag.href(state.id)}>
+        {mayUse ? 'Print the tag' : 'Print a do-not-use tag'}
+      </ButtonLink>
       {plan && mayUse && <PlanButton state={state} chalk={false} />}
       {holds && !test && open === null && can('press:withdraw') && (
         <Button wide onClick={() => onOpen('withdraw')}>

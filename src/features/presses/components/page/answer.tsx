@@ -5,6 +5,7 @@ import { typedWords } from '#shared/instruments/words'
 import { formatForce, groupDigits, unitLabel, type TypedForce } from '#shared/units'
 import { HowLink } from '../../../../components/how-link'
 import { Mark } from '../../../../components/marks'
+import { setPercent } from '../../../../components/typeset'
 import { longDate } from '../../../../lib/dates'
 import { Dashes } from './dashes'
 
@@ -85,12 +86,12 @@ function NotToBeUsed({ title, why, standing: stands, missing }: NotToBeUsedProps
       <Mark name={title === 'Under test' ? 'under-way' : 'stop'} size={70} className="mt-1 shrink-0 max-tablet:size-14" />
       <div className="min-w-0">
         <p className="text-46 font-semibold tablet:text-54">{title}</p>
-        <p className="text-20 font-semibold">{why}</p>
+        <p className="text-20 font-semibold">{setPercent(why)}</p>
         {stands !== null && <p className="mt-1 text-graphite">{stands}</p>}
         {missing.length > 0 && (
           <>
             <p className="mt-3 font-semibold">What is missing</p>
-            <Dashes sentences={missing} />
+            <Dashes sentences={missing.map(setPercent)} />
           </>
         )}
       </div>

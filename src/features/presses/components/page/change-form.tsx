@@ -27,10 +27,10 @@ const HINTS: Record<Touches, string> = {
 
 const schema = PRESS_PAYLOADS.changed.omit({ jointIds: true })
 
-type ChangeFormProps = Sending & Chosen & { state: PressState; onDone: () => void }
+type ChangeFormProps = Sending & Chosen & { state: PressState; onDone: () => void; onLeave: () => void }
 
 /** What was done to the press, or befell it, and before it is entered what that does. */
-export function ChangeForm({ state, chosen, onToggle, send, busy, onDone }: ChangeFormProps) {
+export function ChangeForm({ state, chosen, onToggle, send, busy, onDone, onLeave }: ChangeFormProps) {
   const form = useForm({ resolver: zodResolver(schema), defaultValues: { change: undefined, why: '' } })
   const [photos, setPhotos] = useState<Attachment[]>([])
   const { errors, submitCount } = form.formState
@@ -72,7 +72,7 @@ export function ChangeForm({ state, chosen, onToggle, send, busy, onDone }: Chan
         <Button type="submit" kind="next" busy={busy && 'Reporting it'} note={note}>
           Report this change
         </Button>
-        <Button onClick={onDone}>Leave it</Button>
+        <Button onClick={onLeave}>Leave it</Button>
       </FormActions>
     </Form>
   )

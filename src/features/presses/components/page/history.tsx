@@ -3,6 +3,7 @@ import type { PressEvent, PressState } from '#shared/press/state'
 import { AttachmentStrip } from '../../../../components/attachments/attachment-strip'
 import { TextLink } from '../../../../components/button'
 import { Mark } from '../../../../components/marks'
+import { setPercent } from '../../../../components/typeset'
 import type { Files } from '../../../../lib/attachment-held'
 import type { Placed } from '../../../../lib/attachment-places'
 import { dateAndTime, shortDate } from '../../../../lib/dates'
@@ -41,7 +42,11 @@ export function History({ events, people, photos, files }: HistoryProps) {
           <Dot event={event} />
           <div className="min-w-0">
             <p className="font-semibold">
-              {event.proofTestId === null ? event.text : <TextLink to={paths.proofTest.href(event.proofTestId)}>{event.text}</TextLink>}
+              {event.proofTestId === null ? (
+                setPercent(event.text)
+              ) : (
+                <TextLink to={paths.proofTest.href(event.proofTestId)}>{setPercent(event.text)}</TextLink>
+              )}
             </p>
             <p className="text-14 text-graphite max-desktop:text-16">
               {shortDate(event.at)}

@@ -5,7 +5,7 @@ import { z } from 'zod'
 import type { Attachment } from '#shared/ledger/envelope'
 import { PRESS_PAYLOADS } from '#shared/press/entries'
 import { nameJoints, neighboursOf } from '#shared/press/joints'
-import type { PressJoint } from '#shared/press/state'
+import type { PressJoint, PressState } from '#shared/press/state'
 import { PhotoField } from '../../../../components/attachments/photo-field'
 import { Button } from '../../../../components/button'
 import { TextField } from '../../../../components/field'
@@ -13,11 +13,12 @@ import { Form, FormActions, FormError } from '../../../../components/form'
 import { RadioRow } from '../../../../components/radio-row'
 import { SelectField } from '../../../../components/select-field'
 import { useProblemFields } from '../../../../lib/use-problem-fields'
-import type { PressWriting } from '../../api/append-to-press'
+import { useCan } from '../../../../lib/here'
 import { makeUpChoices, methodChoices } from '../words'
+import { DescribeJointForm, PlaceJointForm, RetireJointForm, SplitJointForm, type Spotting } from './joint-shape-forms'
+import type { Sending } from './sending'
 
-type Send = (drafts: PressWriting[], answers: { onSuccess: () => void; onError: (error: unknown) => void }) => void
-type ActionProps = { pressId: string; joint: PressJoint; joints: readonly PressJoint[]; send: Send; busy: boolean; onDone: () => void }
+type ActionProps = Sending & { pressId: string; joint: PressJoint; joints: readonly PressJoint[]; onDone: () => void }
 
 /** "2026-09-14T10:30" as the browser's own field writes it, where the reader is. */
 function localMoment(moment: Date): string {
@@ -30,7 +31,8 @@ const workSchema = z.object({
   workedAt: z.string().min(1, 'Say when the work was done: a weld is examined 12 hours after it.'),
 })
 
-function WorkForm({ pressId, joint, joints, send, busy, onDone }: ActionProps) {
+/** What was done to a joint, and how far it is made up now. */
+export function WorkForm({ pressId, joint, joints, send, busy, onDone }: ActionProps) {
   const form = useForm({
     resolver: zodResolver(workSchema),
     defaultValues: { makeUp: 'finished' as const, how: '', workedAt: localMoment(new Date()) },
@@ -85,24 +87,49 @@ function WorkForm({ pressId, joint, joints, send, busy, onDone }: ActionProps) {
   )
 }
 
-const examinedSchema = PRESS_PAYLOADS['joint-examined'].pick({ method: true, result: true, remark: true })
+const examinedSchema = PRESS_PAYLOADS['joint-examined']
+  .pick({ method: true, result: true, remark: true })
+  .extend({ early: z.string().trim().max(500) })
 
-function ExamineForm({ pressId, joint, send, busy, onDone }: ActionProps) {
+const HOURS_AFTER_WELDING = 12
+
+/** Hours since a weld was made, while it is too fresh to be examined without a reason (rule P8); null otherwise. */
+function hoursFresh({ kind, workedAt }: PressJoint, now: Date): number | null {
+  if (kind !== 'weld' || workedAt === null) return null
+  const hours = (now.getTime() - Date.parse(workedAt)) / 3_600_000
+  return hours < HOURS_AFTER_WELDING ? Math.max(0, hours) : null
+}
+
+/** How a joint was looked at and what was found. */
+export function ExamineForm({ pressId, joint, send, busy, onDone }: ActionProps) {
   const form = useForm({
     resolver: zodResolver(examinedSchema),
-    defaultValues: { method: 'visual' as const, result: undefined, remark: '' },
+    defaultValues: { method: 'visual' as const, result: undefined, remark: '', early: '' },
   })
   const [photos, setPhotos] = useState<Attachment[]>([])
   const { errors, submitCount } = form.formState
   const onError = useProblemFields(form)
+  const fresh = hoursFresh(joint, new Date())
   return (
     <Form
-      onSubmit={form.handleSubmit((payload) =>
-        send([{ kind: 'joint-examined', payload: { jointId: joint.id, ...payload, test: null }, attachments: photos }], {
-          onSuccess: onDone,
-          onError,
-        }),
-      )}
+      onSubmit={form.handleSubmit(({ early, ...payload }) => {
+        const asked = fresh !== null && payload.result === 'accepted'
+        if (asked && early.length < 3) {
+          form.setError('early', { message: 'Say why in a few words, or wait until the 12 hours are over.' }, { shouldFocus: true })
+          return
+        }
+        send(
+          [
+            {
+              kind: 'joint-examined',
+              payload: { jointId: joint.id, ...payload, test: null },
+              attachments: photos,
+              overrides: asked ? [{ rule: 'P8', reason: early }] : [],
+            },
+          ],
+          { onSuccess: onDone, onError },
+        )
+      })}
     >
       <FormError message={errors.root?.message} attempt={submitCount} />
       <div className="grid items-start gap-4">
@@ -111,12 +138,20 @@ function ExamineForm({ pressId, joint, send, busy, onDone }: ActionProps) {
           label={`Joint ${joint.number} was`}
           choices={[
             { value: 'accepted', label: 'Accepted' },
-            { value: 'rejected', label: 'Rejected' },
+            { value: 'rejected', label: 'Rejected', note: 'it opens a repair' },
           ]}
           message={errors.result && 'Say what was found.'}
           {...form.register('result')}
         />
       </div>
+      {fresh !== null && (
+        <TextField
+          label={`Why it is examined now, ${fresh.toFixed(1)} hours after welding`}
+          hint="A weld is examined 12 hours after it: a crack may come later than the weld."
+          message={errors.early?.message}
+          {...form.register('early')}
+        />
+      )}
       <TextField label="What was seen" optional message={errors.remark?.message} {...form.register('remark')} />
       <PhotoField label="Photos" owner={`ledger:${pressId}`} chosen={photos} onChange={setPhotos} />
       <FormActions>
@@ -129,23 +164,60 @@ function ExamineForm({ pressId, joint, send, busy, onDone }: ActionProps) {
   )
 }
 
-/** Work on one joint, and its examination. A test walks every joint down again in any case. */
-export function JointActions(props: Omit<ActionProps, 'onDone'>) {
-  const [open, setOpen] = useState<'work' | 'examine' | null>(null)
-  const done = () => setOpen(null)
-  const { joint } = props
-  if (open === 'work') return <WorkForm {...props} onDone={done} />
-  if (open === 'examine') return <ExamineForm {...props} onDone={done} />
-  return (
-    <div className="mt-2 flex flex-wrap gap-3">
-      <Button size="line" onClick={() => setOpen('work')}>
-        {joint.makeUp === 'finished' ? 'It was worked on' : joint.kind === 'weld' ? 'It is welded out' : 'It is made up'}
-      </Button>
-      {joint.makeUp === 'finished' && (
-        <Button size="line" onClick={() => setOpen('examine')}>
-          It was examined
-        </Button>
-      )}
-    </div>
-  )
+type Open = 'work' | 'examine' | 'describe' | 'split' | 'retire' | 'place' | null
+
+type JointActionsProps = Sending & { state: PressState; joint: PressJoint; joints: readonly PressJoint[]; spotting: Spotting }
+
+/** What can be done to one joint. A test walks every joint down again in any case. */
+export function JointActions({ state, joint, joints, spotting, send, busy }: JointActionsProps) {
+  const can = useCan()
+  const [open, setOpen] = useState<Open>(null)
+  const onDone = () => setOpen(null)
+  const shape = { state, joint, spotting, send, busy, onDone }
+  const work = { pressId: state.id, joint, joints, send, busy, onDone }
+  switch (open) {
+    case 'work':
+      return <WorkForm {...work} />
+    case 'examine':
+      return <ExamineForm {...work} />
+    case 'describe':
+      return <DescribeJointForm {...shape} />
+    case 'split':
+      return <SplitJointForm {...shape} />
+    case 'retire':
+      return <RetireJointForm {...shape} />
+    case 'place':
+      return <PlaceJointForm {...shape} />
+    case null:
+      return (
+        <div className="mt-2 flex flex-wrap gap-3">
+          {can('press:record') && (
+            <Button size="line" onClick={() => setOpen('work')}>
+              {joint.makeUp === 'finished' ? 'It was worked on' : joint.kind === 'weld' ? 'It is welded out' : 'It is made up'}
+            </Button>
+          )}
+          {can('press:record') && joint.makeUp === 'finished' && (
+            <Button size="line" onClick={() => setOpen('examine')}>
+              It was examined
+            </Button>
+          )}
+          {can('press:describe') && (
+            <>
+              <Button size="line" onClick={() => setOpen('describe')}>
+                Describe it
+              </Button>
+              <Button size="line" onClick={() => setOpen('place')}>
+                Place it on the drawing
+              </Button>
+              <Button size="line" onClick={() => setOpen('split')}>
+                Split it
+              </Button>
+              <Button size="line" onClick={() => setOpen('retire')}>
+                Retire it
+              </Button>
+            </>
+          )}
+        </div>
+      )
+  }
 }

@@ -31,6 +31,7 @@ export function JointChoice({ legend, hint, joints, chosen, onToggle }: JointCho
                 </span>
               </span>
             }
+            value={joint.id}
             checked={chosen.includes(joint.id)}
             onChange={() => onToggle(joint.id)}
           />

@@ -4,6 +4,7 @@ import { jointState } from '#shared/drawing/drawn-press'
 import { JointBalloon } from '../../../../components/marks'
 import { classNames } from '../../../../lib/class-names'
 import { shortDate } from '../../../../lib/dates'
+import { capital } from '../../../../lib/words'
 
 /** What was last found out about a joint, in a few words. */
 function found(joint: PressJoint): string {
@@ -14,16 +15,29 @@ function found(joint: PressJoint): string {
   return fellBackBecause === null ? 'not examined' : `examine again: ${fellBackBecause}`
 }
 
+/** Who made it, with what, and when, as far as anybody has said. */
+function Made({ joint }: { joint: PressJoint }) {
+  const { kind, madeBy, filler, madeOn } = joint
+  const said = [
+    madeBy && `made by ${madeBy}`,
+    filler && `${kind === 'weld' ? 'filler' : 'fastener'} ${filler}`,
+    madeOn && shortDate(madeOn),
+  ].filter(Boolean)
+  return said.length > 0 ? <p className="text-graphite">{capital(said.join(', '))}.</p> : null
+}
+
 type JointsProps = {
   joints: readonly PressJoint[]
   selectedId: string | null
   onSelect: (id: string | null) => void
+  /** What stands beside a joint for now, as its place in the order walked. */
+  notes?: ReadonlyMap<string, string>
   /** Under the joint that is chosen: what can be done to it. */
   children: ReactNode
 }
 
 /** The joints in their order, each with its balloon; choosing one shows what was found and what can be done. */
-export function Joints({ joints, selectedId, onSelect, children }: JointsProps) {
+export function Joints({ joints, selectedId, onSelect, notes, children }: JointsProps) {
   return (
     <ul className="border-t border-hairline">
       {joints.map((joint) => {
@@ -40,7 +54,12 @@ export function Joints({ joints, selectedId, onSelect, children }: JointsProps) 
               <span className="flex justify-center">
                 <JointBalloon number={joint.number} state={jointState(joint)} size={24} />
               </span>
-              <span className="font-medium">{joint.name}</span>
+              <span className="font-medium">
+                {joint.name}
+                {notes?.has(joint.id) && (
+                  <span className="block font-condensed text-16 font-normal text-graphite">{notes.get(joint.id)}</span>
+                )}
+              </span>
               <span className="text-graphite max-tablet:col-start-2 desktop:font-condensed">{joint.detail || joint.kind}</span>
               <span
                 className={classNames(
@@ -54,6 +73,7 @@ export function Joints({ joints, selectedId, onSelect, children }: JointsProps) 
             </button>
             {selected && (
               <div className="px-4 pt-1 pb-4 tablet:pl-12">
+                <Made joint={joint} />
                 {examination && (
                   <p className="text-graphite">
                     {examination.result === 'accepted' ? 'Accepted' : 'Rejected'} on {shortDate(examination.at)}, {examination.method}

@@ -1,10 +1,10 @@
-import { useState } from 'react'
+import { useMemo, useState } from 'react'
 import type { PressState } from '#shared/press/state'
 import { loadPathOf } from '#shared/press/load-path'
 import { mayItBeUsed, tagToTakeOff } from '#shared/press/may-it-be-used'
 import { AttachmentStrip } from '../../../../components/attachments/attachment-strip'
 import { ButtonLink } from '../../../../components/button'
-import { drawnPress, jointState } from '#shared/drawing/drawn-press'
+import { drawnPress, holeInUse, jointState, looseParts } from '#shared/drawing/drawn-press'
 import { PressPlate } from '../../../../components/instruments/press-plate'
 import { PageHeading, Section, inset } from '../../../../components/page'
 import { useFiles } from '../../../../lib/attachment-held'
@@ -12,7 +12,7 @@ import type { Placed } from '../../../../lib/attachment-places'
 import { classNames } from '../../../../lib/class-names'
 import { calendarDate } from '../../../../lib/dates'
 import { useCan, useShop } from '../../../../lib/here'
-import { useAnchor } from '../../../../lib/use-anchor'
+import { bringIntoView, useAnchor } from '../../../../lib/use-anchor'
 import { useTitle } from '../../../../lib/use-title'
 import { paths } from '../../../../paths'
 import { useAppendToPress } from '../../api/append-to-press'
@@ -22,23 +22,30 @@ import { Answer, EndsAtOnce } from './answer'
 import { ChangeForm } from './change-form'
 import { ClearanceFacts } from './clearance-facts'
 import { gathered, History, toldUntil } from './history'
-import { JointActions } from './joint-actions'
-import { Joints } from './joints'
+import { JointsPart } from './joints-part'
 import { LedgerFile } from './ledger-file'
 import { LoadPathSection } from './load-path-section'
 import { ofJoint, shownOf } from './press-photos'
 import { RepairOpenForm } from './repair-forms'
-import { pointedOut, Repairs } from './repairs'
+import { pointedOut, Repairs, toExamine } from './repairs'
 import { Softening } from './softening'
 import { TagPlate } from './tag-plate'
 import { Train } from './train'
 import { useJointsMeant } from './use-joints-meant'
+import { usePressWalk } from './use-press-walk'
+import { useSpotting } from './use-spotting'
 import { WithdrawForm } from './withdraw-form'
 
 type PressPageProps = { state: PressState; people: Readonly<Record<string, string>>; photos?: readonly Placed[] }
 
 const part = 'mt-6 scroll-mt-4'
 const formPart = 'mt-6 border-t-2 border-ink pt-4'
+
+/** The bed hole that the press is, or was last, cleared with. */
+function holeCleared({ clearance }: PressState): number | null {
+  const given = clearance.is === 'none' ? null : clearance.is === 'withdrawn' ? clearance.last : clearance.clearance
+  return holeInUse(given?.bedHoles[0])
+}
 
 /** One press: may it be used, to what and until when; what it waits for, its joints, its train and what happened to it. */
 export function PressPage({ state, people, photos = [] }: PressPageProps) {
@@ -56,15 +63,24 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
   const answer = mayItBeUsed(state, today)
   const tagHangs = tagToTakeOff(state, today)
   const path = loadPathOf(description?.members ?? [], joints)
+  const drawn = useMemo(() => description && drawnPress(description, holeCleared(state)), [description, state])
+  const loose = useMemo(() => looseParts(description, joints), [description, joints])
   const choose = (next: OpenForm) => {
     meant.clear()
     setOpen(next)
   }
   const sending = { send: append.mutate, busy: append.isPending }
-  const form = { ...sending, onDone: () => choose(null) }
+  const leave = () => choose(null)
+  const done = () => {
+    leave()
+    // What was entered may have changed the answer: that is read first.
+    bringIntoView('answer')
+  }
+  const form = { ...sending, onDone: done, onLeave: leave }
   const files = useFiles('presses', state.id, photos.length)
-  const selected = joints.find((joint) => joint.id === meant.selectedId)
-  const openRepairs = state.repairs.some((repair) => !repair.closed)
+  const walk = usePressWalk(state.id, description?.kind ?? 'h-frame', joints)
+  const { spotting, placing } = useSpotting()
+  const repairsFirst = open === 'repair' || state.repairs.some((repair) => !repair.closed || toExamine(state, repair) !== null)
   const repairs = (
     <Repairs
       shown={{ state, people, photos, files }}
@@ -81,8 +97,8 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
     </Repairs>
   )
   return (
-    <div className="grid grow content-start desktop:grid-cols-[minmax(22rem,37.5%)_minmax(0,1fr)] desktop:grid-rows-[auto_1fr]">
-      <div className={classNames(inset, 'pt-6 pb-4 desktop:col-start-2 desktop:px-8')}>
+    <div className="grid grow grid-cols-[minmax(0,1fr)] content-start desktop:grid-cols-[minmax(22rem,37.5%)_minmax(0,1fr)] desktop:grid-rows-[auto_1fr]">
+      <div id="answer" tabIndex={-1} className={classNames(inset, 'pt-6 pb-4 desktop:col-start-2 desktop:px-8')}>
         {tagHangs && can('press:tag-off') && (
           <TagPlate why={answer.answer === 'do not use' ? answer.why : ''} send={append.mutate} busy={append.isPending} />
         )}
@@ -115,7 +131,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
       </div>
       <div className="ground-dye desktop:col-start-1 desktop:row-span-2 desktop:row-start-1">
         <PressPlate
-          press={description && drawnPress(description)}
+          press={drawn}
           joints={joints.map((joint) => ({
             id: joint.id,
             number: joint.number,
@@ -123,45 +139,33 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
             state: jointState(joint),
             place: joint.place,
           }))}
-          selectedId={meant.selectedId}
+          loose={loose}
+          placing={placing}
+          selectedId={meant.selectedId ?? (meant.choosing ? null : (walk.walked?.toCome[0]?.id ?? null))}
           markedIds={
             meant.choosing
               ? meant.chosen
               : pointedOut(
                   state,
-                  state.repairs.find((repair) => repair.id === meant.repairId),
+                  state.repairs.find((repair) => repair.id === meant.repairId && !repair.closed),
                 )
           }
           onSelect={meant.tap}
         >
           {!path.closed && <p>{path.gap}</p>}
+          {placing && <p role="status">Tap the cross where the joint stands.</p>}
           {meant.choosing && (
             <p role="status">{meant.chosen.length === 0 ? 'Tap the joints that are meant.' : `${meant.chosen.length} marked.`}</p>
           )}
         </PressPlate>
       </div>
       <div className={classNames(inset, 'pt-4 pb-8 desktop:col-start-2 desktop:px-8 desktop:pt-0')}>
-        {(openRepairs || open === 'repair') && <div className="mb-6">{repairs}</div>}
+        {repairsFirst && <div className="mb-6">{repairs}</div>}
         <div className="grid gap-x-6 gap-y-6 desktop:grid-cols-[minmax(0,500fr)_minmax(0,212fr)]">
           <div id="joints" tabIndex={-1} className="scroll-mt-4">
-            <Section title="Joints">
-              <Joints joints={joints} selectedId={meant.selectedId} onSelect={meant.select}>
-                <AttachmentStrip className="mt-2" files={files} shown={shownOf(ofJoint(photos, meant.selectedId), state, people)} />
-                {selected && can('press:record') && !state.underTest && (
-                  <JointActions
-                    key={selected.id}
-                    pressId={state.id}
-                    joint={selected}
-                    joints={joints}
-                    send={append.mutate}
-                    busy={append.isPending}
-                  />
-                )}
-                {selected && state.underTest && (
-                  <p>It is walked down in {state.underTest.number}: work and examinations are entered there.</p>
-                )}
-              </Joints>
-            </Section>
+            <JointsPart {...{ state, joints, walk, spotting, ...sending }} selectedId={meant.selectedId} onSelect={meant.select}>
+              <AttachmentStrip className="mt-2" files={files} shown={shownOf(ofJoint(photos, meant.selectedId), state, people)} />
+            </JointsPart>
           </div>
           <Section title="What happened">
             <History events={gathered(toldUntil(state, today))} people={people} photos={photos} files={files} />
@@ -173,7 +177,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
             <ClearanceFacts clearance={answer.clearance} forceUnit={shop.forceUnit} />
           </Section>
         )}
-        {!openRepairs && open !== 'repair' && <div className={part}>{repairs}</div>}
+        {!repairsFirst && <div className={part}>{repairs}</div>}
         <Softening pressId={state.id} className={part} />
         {description && (
           <Section title="Frame and train" note={frameWords[description.kind]} className={part}>

@@ -95,7 +95,8 @@ export function RepairOpenForm({
   send,
   busy,
   onDone,
-}: Sending & Chosen & { state: PressState; onDone: () => void }) {
+  onLeave,
+}: Sending & Chosen & { state: PressState; onDone: () => void; onLeave: () => void }) {
   const form = useForm({ resolver: zodResolver(openSchema), defaultValues: { why: '' } })
   const [photos, setPhotos] = useState<Attachment[]>([])
   const [memberIds, setMemberIds] = useState<readonly string[]>([])
@@ -136,6 +137,7 @@ export function RepairOpenForm({
                 key={member.id}
                 className="border-b border-hairline"
                 label={member.name}
+                value={member.id}
                 checked={memberIds.includes(member.id)}
                 onChange={() => toggleMember(member.id)}
               />
@@ -153,7 +155,7 @@ export function RepairOpenForm({
         >
           A repair is wanted
         </Button>
-        <Button onClick={onDone}>Leave it</Button>
+        <Button onClick={onLeave}>Leave it</Button>
       </FormActions>
     </Form>
   )

@@ -7,6 +7,7 @@ import { Button, TextLink } from '../../../../components/button'
 import { jointState } from '#shared/drawing/drawn-press'
 import { JointBalloon, Mark } from '../../../../components/marks'
 import { Section } from '../../../../components/page'
+import { setPercent } from '../../../../components/typeset'
 import type { Files } from '../../../../lib/attachment-held'
 import type { Placed } from '../../../../lib/attachment-places'
 import { longDate, shortDate } from '../../../../lib/dates'
@@ -33,7 +34,8 @@ export function pointedOut(state: PressState, repair: Repair | undefined): strin
 }
 
 /** "Examine joints 5 and 7 again", after a repair that is closed; null when they are accepted. */
-function toExamine(state: PressState, repair: Repair): string | null {
+export function toExamine(state: PressState, repair: Repair): string | null {
+  if (!repair.closed) return null
   const left = jointsOf(state, repair).filter((joint) => !isAccepted(joint))
   return left.length === 0 ? null : `Examine ${nameJoints(left.map((joint) => joint.number))} again.`
 }
@@ -121,7 +123,7 @@ function OpenRepair({ shown, repair, pointed, onPoint, send, busy }: OpenRepairP
       <div className="flex items-start gap-3">
         <Mark name="stop" size={22} className="mt-1 shrink-0" />
         <div className="min-w-0 grow">
-          <h3 className="text-18">{repair.why}</h3>
+          <h3 className="text-18">{setPercent(repair.why)}</h3>
           <Origin repair={repair} people={people} />
           <div className="mt-2">
             <Concerned state={state} repair={repair} />
@@ -162,7 +164,7 @@ function ClosedRepair({ shown, repair }: { shown: Shown; repair: Repair }) {
   const left = toExamine(shown.state, repair)
   return (
     <li className="border-b border-hairline py-3">
-      <p className="font-semibold">{repair.why}</p>
+      <p className="font-semibold">{setPercent(repair.why)}</p>
       <Origin repair={repair} people={shown.people} />
       <p className="mt-1">
         {closed.done}{' '}
@@ -213,7 +215,13 @@ export function Repairs({ shown, pointedId, onPoint, onOpen, children, ...sendin
         {open.length === 0 &&
           again.map((sentence) => (
             <p key={sentence} className="flex items-start gap-3 border-t border-hairline py-2 font-medium">
-              <Mark name="undecided" size={22} className="mt-0.5 shrink-0" />A repair is closed. {sentence}
+              <Mark name="undecided" size={22} className="mt-0.5 shrink-0" />
+              <span>
+                A repair is closed. {sentence}{' '}
+                <a href="#joints" className="font-normal underline underline-offset-[3px]">
+                  To the joints
+                </a>
+              </span>
             </p>
           ))}
         {children}

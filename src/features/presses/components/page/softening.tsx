@@ -20,14 +20,24 @@ const SofteningCharts = lazy(() => import('./softening-charts').then((module) =>
 
 const RESULT: Record<NonNullable<ClimbHistory['result']>, string> = { accepted: 'accepted', rejected: 'rejected', abandoned: 'abandoned' }
 
+/** On the phone each figure says what it is; from the tablet on its column does. */
+function Cell({ name, children }: { name: string; children: string }) {
+  return (
+    <td className="max-tablet:grid max-tablet:grid-cols-[8.5rem_minmax(0,1fr)] tablet:py-2 tablet:pr-3">
+      <span className="text-graphite tablet:hidden">{name}</span>
+      <span>{children}</span>
+    </td>
+  )
+}
+
 function Table({ series, length }: { series: Series; length: LengthUnit }) {
   return (
-    <div className="mt-3 overflow-x-auto">
-      <table className="w-full min-w-[36rem] text-left">
+    <div className="mt-3">
+      <table className="w-full text-left max-tablet:block">
         <caption className="sr-only">
           {series.label}: {series.climbs[0]?.of}
         </caption>
-        <thead>
+        <thead className="max-tablet:hidden">
           <tr className="border-y border-ink text-14 text-graphite max-desktop:text-16">
             <th scope="col" className="py-1.5 pr-3 font-normal">
               Test
@@ -43,12 +53,12 @@ function Table({ series, length }: { series: Series; length: LengthUnit }) {
             </th>
           </tr>
         </thead>
-        <tbody>
+        <tbody className="max-tablet:block max-tablet:border-t max-tablet:border-ink">
           {series.climbs.map((climb) => {
             const row = rowOf(climb, length)
             return (
-              <tr key={`${climb.proofTestId} ${climb.climb}`} className="border-b border-hairline align-top">
-                <th scope="row" className="py-2 pr-3 font-medium">
+              <tr key={`${climb.proofTestId} ${climb.climb}`} className="border-b border-hairline align-top max-tablet:block max-tablet:py-2">
+                <th scope="row" className="font-medium max-tablet:block tablet:py-2 tablet:pr-3">
                   <TextLink to={paths.proofTest.href(climb.proofTestId)}>{climb.number}</TextLink>
                   {climb.climb > 0 && <span className="font-normal">, repeat climb</span>}
                   <span className="block font-normal text-graphite">
@@ -57,9 +67,9 @@ function Table({ series, length }: { series: Series; length: LengthUnit }) {
                     {climb.repeats !== null && `, repeats ${climb.repeats}`}
                   </span>
                 </th>
-                <td className="py-2 pr-3">{row.stiffness}</td>
-                <td className="py-2 pr-3">{row.set}</td>
-                <td className="py-2">{row.loss}</td>
+                <Cell name="Stiffness">{row.stiffness}</Cell>
+                <Cell name="Permanent set">{row.set}</Cell>
+                <Cell name="Pressure loss">{row.loss}</Cell>
               </tr>
             )
           })}
@@ -74,7 +84,7 @@ function InWords({ climbs }: { climbs: readonly ClimbHistory[] }) {
   return (
     <div className="flex items-start gap-3">
       <Mark
-        name={change === null ? 'not-read' : change.says === 'softer' ? 'beyond' : change.says === 'stiffer' ? 'within' : 'undecided'}
+        name={change === null ? 'not-read' : change.says === 'softer' ? 'wait' : change.says === 'stiffer' ? 'within' : 'undecided'}
         size={26}
         className="mt-0.5 shrink-0"
       />
@@ -83,6 +93,7 @@ function InWords({ climbs }: { climbs: readonly ClimbHistory[] }) {
           {change === null ? 'One line only: the next test tells whether it is getting softer.' : changeWords(change)}
         </p>
         <p className="text-graphite">
+          {change?.says === 'softer' && 'Look for what has given at the next walk-down: pins, welds and bed first. '}
           {limitWords(climbs).join(' ')} The ± tells how the readings scatter about their lines; another gauge or ram adds its own.
         </p>
       </div>

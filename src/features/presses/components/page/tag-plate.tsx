@@ -3,6 +3,7 @@ import type { PressDraft } from '#shared/press/entries'
 import { Button } from '../../../../components/button'
 import { FormError } from '../../../../components/form'
 import { Mark } from '../../../../components/marks'
+import { setPercent } from '../../../../components/typeset'
 import { sayWhatFailed } from '../../../../lib/problem'
 
 type TagPlateProps = {
@@ -28,7 +29,7 @@ export function TagPlate({ why, busy, send }: TagPlateProps) {
             <h2 id="tag-title" className="text-20">
               Take the tag off the press
             </h2>
-            <p>The paper still names a load. {why} Take it off, then say so here.</p>
+            <p>The paper still names a load. {setPercent(why)} Take it off, then say so here.</p>
           </div>
         </div>
         <Button

@@ -8,7 +8,7 @@ import { useProblemFields } from '../../../../lib/use-problem-fields'
 import type { Sending } from './sending'
 
 /** Takes the clearance away, with the reason. */
-export function WithdrawForm({ send, busy, onDone }: Sending & { onDone: () => void }) {
+export function WithdrawForm({ send, busy, onDone, onLeave }: Sending & { onDone: () => void; onLeave: () => void }) {
   const form = useForm({ resolver: zodResolver(PRESS_PAYLOADS.withdrawn), defaultValues: { why: '' } })
   const { errors, submitCount } = form.formState
   const onError = useProblemFields(form)
@@ -25,7 +25,7 @@ export function WithdrawForm({ send, busy, onDone }: Sending & { onDone: () => v
         <Button type="submit" kind="stop" busy={busy && 'Withdrawing it'}>
           Withdraw it from use
         </Button>
-        <Button onClick={onDone}>Leave it</Button>
+        <Button onClick={onLeave}>Leave it</Button>
       </FormActions>
     </Form>
   )
