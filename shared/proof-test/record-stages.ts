@@ -91,9 +91,7 @@ function stiffness(record: StageParts, stage: StageEvaluation): string | null {
   if (!step) return null
   if (step.stuck) return 'stuck'
   if (!Number.isFinite(step.stiffness)) return null
-  return record.opened.lengthUnit === 'in'
-    ? formatNumber(toUnit(step.stiffness, 'lbf') * 0.0254, 0)
-    : formatNumber(step.stiffness / 1e6, 1)
+  return record.opened.lengthUnit === 'in' ? formatNumber(toUnit(step.stiffness, 'lbf') * 0.0254, 0) : formatNumber(step.stiffness / 1e6, 1)
 }
 
 function shownStage(record: StageParts, stage: StageEvaluation, last: boolean): ShownStage {
@@ -109,7 +107,11 @@ function shownStage(record: StageParts, stage: StageEvaluation, last: boolean): 
     end: end && gauge ? grouped(shownReading(end.row, gauge.id, state.corrections)) : null,
     step: stiffness(record, stage),
     softening:
-      step === null ? null : step.softening === null || step.U === null ? 'first step' : `${formatNumber(step.softening * 100, 0)}\u202f% ± ${(step.U * 100).toFixed(0)}`,
+      step === null
+        ? null
+        : step.softening === null || step.U === null
+          ? 'first step'
+          : `${formatNumber(step.softening * 100, 0)}\u202f% ± ${(step.U * 100).toFixed(0)}`,
     creep: creep?.value === undefined || creep.value === null ? null : lengthText(opened, creep.value, { unit: false }),
     decision: decisionOf(stage, last),
   }

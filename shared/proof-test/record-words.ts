@@ -176,7 +176,9 @@ export function noticesOf(record: RecordParts, dates: PrintDates): Notice[] {
     {
       title: 'Observed',
       mark: 'now',
-      lines: state.observations.map(({ seq, what, note, by, at }) => `Entry ${seq}, ${what}: ${note} ${nameOf(by)}, ${dates.dateAndTime(at)}.`),
+      lines: state.observations.map(
+        ({ seq, what, note, by, at }) => `Entry ${seq}, ${what}: ${note} ${nameOf(by)}, ${dates.dateAndTime(at)}.`,
+      ),
     },
     {
       title: 'Declined to countersign',

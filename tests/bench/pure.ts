@@ -39,5 +39,9 @@ export async function pureLines(): Promise<Line[]> {
     for await (const _part of recordPdf(source, { paper: 'a4', checkAddress: 'https://press.example/check' })) continue
   }
   const [set = []] = await inTurn([printed], 15)
-  return [medianLine('apply over 10,000 entries', folded, 20), medianLine('one record.xlsx', written, 300), medianLine('one record.pdf', set, 1000)]
+  return [
+    medianLine('apply over 10,000 entries', folded, 20),
+    medianLine('one record.xlsx', written, 300),
+    medianLine('one record.pdf', set, 1000),
+  ]
 }

@@ -11,7 +11,11 @@ import { paintDrawing } from './painter'
 import type { Paper } from './paper'
 
 /** The line of one leg as it is drawn on a sheet of so many px; null before a stage was read. */
-export function legDrawing({ opened, evaluation, state }: RecordOfTest, leg: number, size: { width: number; height: number }): Drawing | null {
+export function legDrawing(
+  { opened, evaluation, state }: RecordOfTest,
+  leg: number,
+  size: { width: number; height: number },
+): Drawing | null {
   const climbs = evaluation.climbs.filter((climb) => climb.leg === leg)
   const spec = recordLine(opened, climbs, size, state)
   return spec === null ? null : lineDrawing(spec)
@@ -20,15 +24,29 @@ export function legDrawing({ opened, evaluation, state }: RecordOfTest, leg: num
 /** The legs of which some stage was read. */
 export function legsRead({ opened, evaluation }: RecordOfTest): number[] {
   const read = (leg: number): boolean =>
-    evaluation.climbs.some((climb) => climb.leg === leg && climb.climb === 0 && climb.stages.some(({ start }) => start?.lead && start.force))
+    evaluation.climbs.some(
+      (climb) => climb.leg === leg && climb.climb === 0 && climb.stages.some(({ start }) => start?.lead && start.force),
+    )
   return opened.legs.flatMap((_leg, leg) => (read(leg) ? [leg] : []))
 }
 
 /** Paints a leg's line `width` pt wide with its top left corner at x, y; returns its height. */
-export function paintLeg(paper: Paper, record: RecordOfTest, leg: number, drawing: Drawing, place: { x: number; y: number; width: number }): number {
+export function paintLeg(
+  paper: Paper,
+  record: RecordOfTest,
+  leg: number,
+  drawing: Drawing,
+  place: { x: number; y: number; width: number },
+): number {
   const scale = place.width / drawing.width
   const label = record.opened.legs[leg]?.label ?? `Leg ${leg + 1}`
-  paintDrawing(paper, drawing, { x: place.x, y: place.y, scale }, PAPER_INKS, `Deflection against load, ${label}. Every figure of it is in the table of stages.`)
+  paintDrawing(
+    paper,
+    drawing,
+    { x: place.x, y: place.y, scale },
+    PAPER_INKS,
+    `Deflection against load, ${label}. Every figure of it is in the table of stages.`,
+  )
   return drawing.height * scale
 }
 

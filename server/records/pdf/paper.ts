@@ -139,7 +139,13 @@ export class Paper {
   }
 
   /** Sets lines one under the other from `x`, their tops at `y`; returns the height they take. */
-  lines(lines: readonly Line[], x: number, y: number, size: number, align: { to: 'left' | 'right'; width: number } = { to: 'left', width: 0 }): number {
+  lines(
+    lines: readonly Line[],
+    x: number,
+    y: number,
+    size: number,
+    align: { to: 'left' | 'right'; width: number } = { to: 'left', width: 0 },
+  ): number {
     lines.forEach((line, index) => {
       const at = align.to === 'right' ? x + align.width - line.width : x
       this.type.setLine(line, at, y + size * 0.98 + index * leading(size))
@@ -246,14 +252,24 @@ export class Paper {
     const shop = this.type.fit(right, quiet, third - 6)
     this.type.set(shop, this.right - this.type.width(shop, quiet), y, quiet)
     const [edge, top] = [EDGE + BAND, EDGE + BAND + HEAD]
-    this.doc.moveTo(edge, top).lineTo(this.doc.page.width - edge, top).lineWidth(0.5).strokeColor(RULE).stroke()
+    this.doc
+      .moveTo(edge, top)
+      .lineTo(this.doc.page.width - edge, top)
+      .lineWidth(0.5)
+      .strokeColor(RULE)
+      .stroke()
   }
 
   #foot(page: number, pages: number): void {
     const { left, middle } = this.words.foot
     const { width, height } = this.doc.page
     const top = height - EDGE - BAND - FOOT
-    this.doc.moveTo(EDGE + BAND, top).lineTo(width - EDGE - BAND, top).lineWidth(0.5).strokeColor(RULE).stroke()
+    this.doc
+      .moveTo(EDGE + BAND, top)
+      .lineTo(width - EDGE - BAND, top)
+      .lineWidth(0.5)
+      .strokeColor(RULE)
+      .stroke()
     const y = top + 13
     const quiet: Style = { ...SMALL, ink: GRAPHITE }
     const strong: Style = { ...SMALL, weight: 600 }

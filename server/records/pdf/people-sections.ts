@@ -101,7 +101,11 @@ export function seals(paper: Paper, record: RecordOfTest, checkAddress: string):
   ].entries()) {
     paper.paragraph(`${index + 1}. ${step}`, BODY, 1)
   }
-  paper.paragraph('A paper can be changed; the ledger file can’t without its seal breaking. Where the two differ, the file stands.', { ...BODY, ink: GRAPHITE }, 3)
+  paper.paragraph(
+    'A paper can be changed; the ledger file can’t without its seal breaking. Where the two differ, the file stands.',
+    { ...BODY, ink: GRAPHITE },
+    3,
+  )
 }
 
 /** What these figures are not. */

@@ -116,14 +116,20 @@ export function loadPathCheck(paper: Paper, record: RecordOfTest): void {
       ? `Expected opening: ${(band.low * 1000).toFixed(2)} to ${(band.high * 1000).toFixed(2)} mm at ${(check.load / 1000).toFixed(1)} kN.`
       : `Expected opening not estimated: ${missing}`,
   )
-  paper.paragraph(`Allowed: ${factorWords().map(([name, value]) => `${name.toLowerCase()} ${value}`).join('; ')}.`)
+  paper.paragraph(
+    `Allowed: ${factorWords()
+      .map(([name, value]) => `${name.toLowerCase()} ${value}`)
+      .join('; ')}.`,
+  )
   paper.paragraph(CHECK_CAUTIONS.join(' '))
 }
 
 /** Rams, and what each part that the force or its pressure passes through may carry. */
 export function train(paper: Paper, record: RecordOfTest): void {
   const { press, forceUnit } = record.opened
-  paper.heading('Train', { note: 'Force = pressure × area − springs + weight. A rated pressure counts as the force that the rams make at it.' })
+  paper.heading('Train', {
+    note: 'Force = pressure × area − springs + weight. A rated pressure counts as the force that the rams make at it.',
+  })
   const rows = ratingsOf(record).map(({ name, typed, newton }): TableRow => ({
     cells: [name, inPrint(typed), `${(newton / 1000).toFixed(1)} kN`, formatForce(newton, forceUnit)],
   }))
@@ -136,7 +142,12 @@ export function train(paper: Paper, record: RecordOfTest): void {
         ? [
             {
               strong: true,
-              cells: [`Lowest rating in the train: ${lowest.name}`, null, `${(lowest.force / 1000).toFixed(1)} kN`, formatForce(lowest.force, forceUnit)],
+              cells: [
+                `Lowest rating in the train: ${lowest.name}`,
+                null,
+                `${(lowest.force / 1000).toFixed(1)} kN`,
+                formatForce(lowest.force, forceUnit),
+              ],
             },
           ]
         : []),
@@ -149,7 +160,9 @@ export function train(paper: Paper, record: RecordOfTest): void {
       `stroke ${inPrint(ram.stroke)}`,
       `${ram.acting}-acting`,
       ...(ram.springReturn ? [`springs pull ${inPrint(ram.springReturn)}`] : []),
-      ...(ram.carriedMass ? [`carries ${inPrint(ram.carriedMass)}, which ${ram.carriedComesDown ? 'comes down with it' : 'it lifts'}`] : []),
+      ...(ram.carriedMass
+        ? [`carries ${inPrint(ram.carriedMass)}, which ${ram.carriedComesDown ? 'comes down with it' : 'it lifts'}`]
+        : []),
     ]
     paper.paragraph(`${ram.name}: ${ramText(ram)}, ${more.join(', ')}.`)
   }
@@ -204,7 +217,13 @@ function points(paper: Paper, { opened }: RecordOfTest): void {
   const lead = leadPoints(opened)
   paper.subheading('Measuring points')
   table(paper, {
-    columns: [{ head: 'Letter' }, { head: 'Point', wrap: true }, { head: 'Read by' }, { head: 'With load it' }, { head: 'In the net figure' }],
+    columns: [
+      { head: 'Letter' },
+      { head: 'Point', wrap: true },
+      { head: 'Read by' },
+      { head: 'With load it' },
+      { head: 'In the net figure' },
+    ],
     rows: opened.points.map((point) => ({
       cells: [
         strong(point.letter),
@@ -216,7 +235,9 @@ function points(paper: Paper, { opened }: RecordOfTest): void {
     })),
   })
   paper.down(4)
-  paper.paragraph([{ text: opened.notMeasured.length > 0 ? `${notMeasuredText(opened)}.` : 'Every member has a point.', style: { ...BODY, weight: 600 } }])
+  paper.paragraph([
+    { text: opened.notMeasured.length > 0 ? `${notMeasuredText(opened)}.` : 'Every member has a point.', style: { ...BODY, weight: 600 } },
+  ])
 }
 
 function budget(paper: Paper, { evaluation }: RecordOfTest): void {
@@ -229,7 +250,9 @@ function budget(paper: Paper, { evaluation }: RecordOfTest): void {
     rows: budgetTexts(force).map((line) => ({ cells: [capital(line.name), line.value, line.distribution, strong(line.u), line.share] })),
   })
   paper.down(3)
-  paper.paragraph('JCGM 100 (GUM) 5: standard uncertainties add as squares; U = 2u. A certificate’s U/k stands in place of the class where there is one. The spreadsheet has the budget of every row.')
+  paper.paragraph(
+    'JCGM 100 (GUM) 5: standard uncertainties add as squares; U = 2u. A certificate’s U/k stands in place of the class where there is one. The spreadsheet has the budget of every row.',
+  )
 }
 
 /** "60 s hold in the first climb", "simple acceptance, k = 2": a value with what it is of. */

@@ -30,13 +30,21 @@ function further(paper: Paper, { criteria: more, facts }: LeftOver): void {
   if (more.length > 0) {
     paper.heading('Further criteria at their worst')
     table(paper, {
-      columns: [{ head: 'Criterion', wrap: true }, { head: 'Read', align: 'right', wrap: true }, { head: 'Limit', align: 'right', wrap: true }, { head: 'Verdict' }],
+      columns: [
+        { head: 'Criterion', wrap: true },
+        { head: 'Read', align: 'right', wrap: true },
+        { head: 'Limit', align: 'right', wrap: true },
+        { head: 'Verdict' },
+      ],
       rows: more.map(({ label, reading, limitText, verdict }) => ({ cells: [label, strong(reading), limitText, verdictCell(verdict)] })),
     })
   }
   if (facts.length === 0) return
   paper.heading('What the figures rest on')
-  table(paper, { columns: [{ head: 'What' }, { head: 'As recorded', wrap: true }], rows: facts.map(([name, value]) => ({ cells: [name, value] })) })
+  table(paper, {
+    columns: [{ head: 'What' }, { head: 'As recorded', wrap: true }],
+    rows: facts.map(([name, value]) => ({ cells: [name, value] })),
+  })
 }
 
 function furtherCharts(paper: Paper, record: RecordOfTest, legs: readonly number[]): void {

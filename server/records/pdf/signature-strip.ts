@@ -130,7 +130,15 @@ export function signatureStrip(paper: Paper, record: RecordOfTest, { top, height
   let x = paper.left
   blocks(record).forEach((rows, index) => {
     const width = room[index] ?? 0
-    if (index > 0) paper.artifact(() => paper.doc.moveTo(x - PAD, top).lineTo(x - PAD, top + height).lineWidth(0.6).strokeColor(INK).stroke())
+    if (index > 0)
+      paper.artifact(() =>
+        paper.doc
+          .moveTo(x - PAD, top)
+          .lineTo(x - PAD, top + height)
+          .lineWidth(0.6)
+          .strokeColor(INK)
+          .stroke(),
+      )
     let y = top + PAD
     for (const { runs, size } of rows) {
       const lines = paper.type.wrap(runs, width - PAD)
@@ -139,7 +147,14 @@ export function signatureStrip(paper: Paper, record: RecordOfTest, { top, height
     }
     x += width + PAD
   })
-  paper.artifact(() => paper.doc.moveTo(x - PAD, top).lineTo(x - PAD, top + height).lineWidth(0.6).strokeColor(INK).stroke())
+  paper.artifact(() =>
+    paper.doc
+      .moveTo(x - PAD, top)
+      .lineTo(x - PAD, top + height)
+      .lineWidth(0.6)
+      .strokeColor(INK)
+      .stroke(),
+  )
   paintQr(paper, checkAddress, x - 3, top + 3, QR)
   const words = paper.type.wrap(plain('Check the ledger file', WORDS), QR + PAD)
   paper.tag('P', () => paper.lines(words, x, top + 3 + QR, WORDS.size))

@@ -31,7 +31,8 @@ function head(paper: Paper, { opened, state }: RecordOfTest): void {
   const dated: Style = { size: 10.5, weight: 500 }
   const dateWidth = paper.type.width(date, dated)
   const name = `${opened.press.name}${opened.press.whatFor ? `, ${opened.press.whatFor}` : ''}`
-  const titled = (size: number): Line[] => paper.type.wrap(plain(`${opened.number}\u2002${name}`, { size, weight: 600 }), paper.width - dateWidth - 18)
+  const titled = (size: number): Line[] =>
+    paper.type.wrap(plain(`${opened.number}\u2002${name}`, { size, weight: 600 }), paper.width - dateWidth - 18)
   // A long name is set smaller, so that the page keeps room for what it is about.
   const size = titled(21).length <= 2 ? 21 : 14
   const lines = titled(size)
@@ -95,7 +96,9 @@ function sharesOf(paper: Paper, criteria: readonly Criterion[], width: number): 
 
 function criterionLine(paper: Paper, { verdict, label, reading, limitText }: Criterion, shares: Shares): CriterionLine {
   const away: Run[] =
-    verdict === 'within' ? [] : plain(`, ${verdictWord(verdict)}`, { ...CRITERION, weight: 500, ink: verdict === 'beyond' ? STOP : GRAPHITE })
+    verdict === 'within'
+      ? []
+      : plain(`, ${verdictWord(verdict)}`, { ...CRITERION, weight: 500, ink: verdict === 'beyond' ? STOP : GRAPHITE })
   return {
     mark: verdictMark(verdict),
     word: verdictWord(verdict),
@@ -110,7 +113,8 @@ function criteria(paper: Paper, record: RecordOfTest, column: Column, bottom: nu
   const { evaluation, opened } = record
   const { x, width } = column
   column.y += paper.textAt(criteriaHeading(evaluation), x, column.y, width, { size: 10.5, weight: 600 }, 'H2') + 2
-  const right = (edge: number, lines: Line[], y: number): void => void paper.lines(lines, x, y, CRITERION.size, { to: 'right', width: edge })
+  const right = (edge: number, lines: Line[], y: number): void =>
+    void paper.lines(lines, x, y, CRITERION.size, { to: 'right', width: edge })
   const shares = sharesOf(paper, evaluation.criteria, width)
   const ends = { read: width - shares.limit - GAP, limit: width }
   const rest: Criterion[] = []
@@ -194,7 +198,8 @@ function facts(paper: Paper, lines: readonly FactLine[], column: Column, bottom:
 
 const QUIET: Style = { ...FACT, ink: GRAPHITE }
 const cautionWords = (record: RecordOfTest): string => cautionsOf(record.state, record.evaluation).join(' ')
-const cautionsHeight = (paper: Paper, record: RecordOfTest, width: number): number => paper.heightOf(plain(cautionWords(record), QUIET), width, QUIET.size)
+const cautionsHeight = (paper: Paper, record: RecordOfTest, width: number): number =>
+  paper.heightOf(plain(cautionWords(record), QUIET), width, QUIET.size)
 
 /** The cautions where there is room for them; they stand in full at the end too. */
 function cautionsFit(paper: Paper, record: RecordOfTest, column: Column, bottom: number): void {
@@ -254,7 +259,8 @@ function paintCharts(paper: Paper, record: RecordOfTest, legs: readonly number[]
   for (const leg of shown) {
     const drawing = legDrawing(record, leg, { width: CHART, height: Math.floor((height * CHART) / column.width) })
     if (drawing === null || column.y + height + label > bottom) break
-    if (several) column.y += paper.textAt(record.opened.legs[leg]?.label ?? '', column.x, column.y, column.width, { ...BODY, weight: 600 }, 'H3')
+    if (several)
+      column.y += paper.textAt(record.opened.legs[leg]?.label ?? '', column.x, column.y, column.width, { ...BODY, weight: 600 }, 'H3')
     column.y += paintLeg(paper, record, leg, drawing, { x: column.x, y: column.y, width: column.width }) + 8
     placed.push(leg)
   }

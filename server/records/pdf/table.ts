@@ -72,7 +72,10 @@ function wantedWidths(paper: Paper, { columns, rows }: TableSpec, size: number):
     const cells = rows.map(({ cells, strong = false }) => runsOf(cells[column] ?? null, size, strong))
     const natural = Math.max(headWidth, ...cells.map((runs) => linesWidth(paper, runs)))
     if (!wrap) return { natural, least: natural }
-    return { natural, least: Math.min(natural, Math.max(headWidth, 34, ...cells.map((runs) => Math.min(paper.type.longestWord(runs), 90)))) }
+    return {
+      natural,
+      least: Math.min(natural, Math.max(headWidth, 34, ...cells.map((runs) => Math.min(paper.type.longestWord(runs), 90)))),
+    }
   })
 }
 
@@ -146,7 +149,8 @@ function headHeight({ heads, size }: Layout): number {
   return Math.max(1, ...heads.map((lines) => lines.length)) * leading(size * 0.94) + 3
 }
 
-const rowHeight = (lines: readonly (readonly Line[])[], size: number): number => Math.max(1, ...lines.map((one) => one.length)) * leading(size) + 2 * PAD
+const rowHeight = (lines: readonly (readonly Line[])[], size: number): number =>
+  Math.max(1, ...lines.map((one) => one.length)) * leading(size) + 2 * PAD
 
 interface Drawing {
   paper: Paper
@@ -183,7 +187,9 @@ function drawRow(drawing: Drawing, cells: readonly (readonly Line[])[]): void {
   const { paper, layout } = drawing
   const { size } = layout
   paper.within('TR', () =>
-    eachColumn(drawing, (index, x, width, align) => paper.tag('TD', () => paper.lines(cells[index] ?? [], x, paper.y + PAD, size, { to: align, width }))),
+    eachColumn(drawing, (index, x, width, align) =>
+      paper.tag('TD', () => paper.lines(cells[index] ?? [], x, paper.y + PAD, size, { to: align, width })),
+    ),
   )
   paper.down(rowHeight(cells, size))
   paper.rule(paper.y, { from: layout.x, to: layout.x + tableWidth(layout), colour: HAIRLINE, width: 0.4 })
@@ -193,7 +199,9 @@ function drawRow(drawing: Drawing, cells: readonly (readonly Line[])[]): void {
 function parts(cells: readonly Line[][], size: number, most: number): Line[][][] {
   const fits = Math.max(1, Math.floor((most - 2 * PAD) / leading(size)))
   const longest = Math.max(1, ...cells.map((lines) => lines.length))
-  return Array.from({ length: Math.ceil(longest / fits) }, (_part, index) => cells.map((lines) => lines.slice(index * fits, (index + 1) * fits)))
+  return Array.from({ length: Math.ceil(longest / fits) }, (_part, index) =>
+    cells.map((lines) => lines.slice(index * fits, (index + 1) * fits)),
+  )
 }
 
 /** Sets a table where the pen is. Heads are repeated on every page it goes on to; a row is kept whole where a page can hold it. */

@@ -66,7 +66,9 @@ function climbHeading(record: RecordOfTest, climb: ClimbEvaluation): string {
 /** Every stage as it was read, each leg and climb under its own heading. */
 export function stages(paper: Paper, record: RecordOfTest): void {
   const { climbs } = record.evaluation
-  paper.heading('Stages as read', { note: 'Times are UTC. ± is U, k = 2. Struck: typed first, and corrected by the entry with that letter.' })
+  paper.heading('Stages as read', {
+    note: 'Times are UTC. ± is U, k = 2. Struck: typed first, and corrected by the entry with that letter.',
+  })
   if (climbs.length === 0) paper.paragraph('No load was put on.')
   for (const climb of climbs) {
     const words = climbHeading(record, climb)

@@ -189,7 +189,12 @@ export class Typesetter {
     }
     if (style.struck === true) {
       const middle = base - sizeOf(style) * 0.3
-      doc.moveTo(x - 0.5, middle).lineTo(pen + 0.5, middle).lineWidth(0.8).strokeColor(STOP).stroke()
+      doc
+        .moveTo(x - 0.5, middle)
+        .lineTo(pen + 0.5, middle)
+        .lineWidth(0.8)
+        .strokeColor(STOP)
+        .stroke()
     }
     return pen
   }

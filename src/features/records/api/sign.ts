@@ -17,7 +17,10 @@ export function useSign(testId: string) {
   const refresh = () => client.invalidateQueries({ queryKey: ledgerQuery(testId).queryKey })
   return useMutation({
     mutationFn: (signing: Signing) =>
-      api.send('POST', signatureResponseSchema, `/api/proof-tests/${encodeURIComponent(testId)}/signatures`, { ...signing, entryId: newId() }),
+      api.send('POST', signatureResponseSchema, `/api/proof-tests/${encodeURIComponent(testId)}/signatures`, {
+        ...signing,
+        entryId: newId(),
+      }),
     onSuccess: refresh,
     onError: (error) => (hasMovedOn(error) ? refresh() : undefined),
   })

@@ -46,7 +46,10 @@ export function RecordResult({ record }: { record: RecordView }) {
         <p className={`text-26 font-semibold tablet:text-34 desktop:text-46 ${isRed ? 'text-stop-ink' : 'text-ink'}`} data-part="headline">
           {broken === null ? headline : <del className="decoration-2">{headline}</del>}
         </p>
-        {(broken === null ? resultLines(record, LOCAL_DATES) : ['This is worked out from entries that were altered: don’t load the press by it.'])
+        {(broken === null
+          ? resultLines(record, LOCAL_DATES)
+          : ['This is worked out from entries that were altered: don’t load the press by it.']
+        )
           .filter((line) => line !== '')
           .map((line) => (
             <p key={line} className="mt-0.5 text-18">
