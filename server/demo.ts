@@ -12,7 +12,12 @@ async function main(): Promise<void> {
   try {
     initModels(database.sequelize)
     await migrateUp(database.sequelize)
-    const signIns = await loadDemoShop({ config, database: database.sequelize, storage: await openStorage(config, new Date()), now: () => new Date() })
+    const signIns = await loadDemoShop({
+      config,
+      database: database.sequelize,
+      storage: await openStorage(config, new Date()),
+      now: () => new Date(),
+    })
     process.stdout.write(signInLines(signIns) || 'There are shops in this database already: nothing was loaded.\n')
   } finally {
     await database.close()

@@ -114,10 +114,23 @@ function filesUnder(place) {
 }
 
 function sourceHash() {
-  const single = ['index.html', 'package-lock.json', 'package.json', 'tsconfig.json', 'vite.config.ts', 'tailwind.config.ts', 'server/bootstrap/client-plugins.ts']
+  const single = [
+    'index.html',
+    'package-lock.json',
+    'package.json',
+    'tsconfig.json',
+    'vite.config.ts',
+    'tailwind.config.ts',
+    'server/bootstrap/client-plugins.ts',
+  ]
   const files = [...filesUnder('src'), ...filesUnder('shared'), ...single.filter((file) => existsSync(path.join(root, file)))].sort()
   const hash = createHash('sha256')
-  for (const file of files) hash.update(file).update('\0').update(readFileSync(path.join(root, file))).update('\0')
+  for (const file of files)
+    hash
+      .update(file)
+      .update('\0')
+      .update(readFileSync(path.join(root, file)))
+      .update('\0')
   return hash.digest('hex')
 }
 

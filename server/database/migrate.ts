@@ -12,7 +12,8 @@ async function main(): Promise<number> {
   }
   const database = await openDatabase(readConfig(process.env), { shareRunning: true })
   try {
-    const names = direction === 'up' ? await migrateUp(database.sequelize) : await migrateDown(database.sequelize, extent === 'all' ? 'all' : 'one')
+    const names =
+      direction === 'up' ? await migrateUp(database.sequelize) : await migrateDown(database.sequelize, extent === 'all' ? 'all' : 'one')
     process.stdout.write(names.length === 0 ? 'Nothing to do.\n' : `${names.join('\n')}\n`)
   } finally {
     await database.close()

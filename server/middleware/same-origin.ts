@@ -28,6 +28,10 @@ export function sameOrigin(config: Config): RequestHandler {
         ? site === 'same-origin'
         : originHost !== undefined && (originHost === request.get('host') || originHost === publicHost)
     if (isOurs && (site === undefined || site === 'same-origin')) return next()
-    throw new Problem(403, 'cross-origin', 'This came from another site and was refused. Open Quarterload at its own address and try again.')
+    throw new Problem(
+      403,
+      'cross-origin',
+      'This came from another site and was refused. Open Quarterload at its own address and try again.',
+    )
   }
 }

@@ -1,6 +1,15 @@
 import { Model } from 'sequelize'
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize'
-import { countColumn, idColumn, numberColumn, optionalNumberColumn, optionalTextColumn, optionalTimeColumn, textColumn, timeColumn } from './columns'
+import {
+  countColumn,
+  idColumn,
+  numberColumn,
+  optionalNumberColumn,
+  optionalTextColumn,
+  optionalTimeColumn,
+  textColumn,
+  timeColumn,
+} from './columns'
 
 export class ProofTest extends Model<InferAttributes<ProofTest>, InferCreationAttributes<ProofTest>> {
   declare id: string

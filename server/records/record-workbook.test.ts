@@ -281,6 +281,30 @@ describe('what begins like a formula', () => {
   )
 })
 
+test('tooling of the register stands in the train with its rating, beside the force that its formula makes of it', async () => {
+  const { opened } = recordedTest({ until: 'opened' }).state
+  const [part] = opened?.press.train ?? []
+  if (!opened || !part) throw new Error('The test was opened with a train.')
+  const nose = {
+    ...part,
+    kind: 'tooling' as const,
+    name: 'T-01 Flat nose',
+    ratedForce: { text: '20', unit: 'short-ton' as const },
+    ratedPressure: null,
+  }
+  const workbook = await open(
+    recordedTest({ until: 'opened', opened: { press: { ...opened.press, train: [...opened.press.train, nose] } } }),
+  )
+  const cells: ExcelJS.Cell[] = []
+  sheetOf(workbook, 'Train').eachRow((row) => row.eachCell((cell) => cells.push(cell)))
+  const named = cells.find((cell) => cell.text === 'T-01 Flat nose')
+  if (!named) throw new Error('The piece is not in the train.')
+  const beside = cells.filter((cell) => cell.row === named.row)
+  expect(beside.map((cell) => cell.text)).toContain('20')
+  const newton = beside.flatMap((cell) => (cell.type === ExcelJS.ValueType.Formula ? [live(cell).result] : []))
+  expect(newton).toContainEqual(expect.closeTo(20 * SHORT_TON, 3))
+})
+
 test('a stopped test says so, and its softening is beyond', async () => {
   const workbook = await open(stoppedTest())
   expect(textOf(sheetOf(workbook, 'Summary'))).toContain('Rejected. Stopped at 75\u202f%')

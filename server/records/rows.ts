@@ -68,7 +68,17 @@ export function recordRows(record: RecordOfTest): RecordRow[] {
   return state.legs.flatMap((leg, legIndex): RecordRow[] => {
     const label = opened.legs[legIndex]?.label ?? `Leg ${legIndex + 1}`
     const seated = leg.seated
-      ? [{ ...plain(leg.seated), leg: label, climb: null, what: 'Seating', attempt: null, datum: null, figures: figuresOf(opened, leg.seated, null) }]
+      ? [
+          {
+            ...plain(leg.seated),
+            leg: label,
+            climb: null,
+            what: 'Seating',
+            attempt: null,
+            datum: null,
+            figures: figuresOf(opened, leg.seated, null),
+          },
+        ]
       : []
     const climbs = leg.climbs.flatMap((climb, climbIndex): RecordRow[] => {
       const zero = climb.datum.at(-1) ?? null

@@ -85,7 +85,11 @@ export function header(sheet: Worksheet, row: number, columns: readonly Column[]
     cell.border = { bottom: EDGE, top: HAIRLINE }
     cell.alignment = { wrapText: true, vertical: 'bottom', horizontal: align ?? 'left', ...indent(index, align) }
   })
-  const lines = Math.max(...columns.map(({ header: words, width }) => words.split('\n').reduce((sum, line) => sum + Math.max(1, Math.ceil(line.length / width)), 0)))
+  const lines = Math.max(
+    ...columns.map(({ header: words, width }) =>
+      words.split('\n').reduce((sum, line) => sum + Math.max(1, Math.ceil(line.length / width)), 0),
+    ),
+  )
   sheet.getRow(row).height = 5 + 12.5 * lines
 }
 
@@ -128,7 +132,13 @@ export function put(cell: Cell, content: Content): void {
   if (typeof content === 'string') return setText(cell, content)
   if ('words' in content) {
     setText(cell, content.words)
-    cell.font = { name: FONT, size: 10, bold: content.bold ?? false, strike: content.strike ?? false, color: { argb: content.colour ?? INK } }
+    cell.font = {
+      name: FONT,
+      size: 10,
+      bold: content.bold ?? false,
+      strike: content.strike ?? false,
+      color: { argb: content.colour ?? INK },
+    }
     return
   }
   if ('moment' in content) {
@@ -153,7 +163,13 @@ export function putRow(sheet: Worksheet, row: number, columns: readonly Column[]
     const cell = sheet.getCell(row, index + 1)
     put(cell, contents[index] ?? null)
     cell.border = { bottom: HAIRLINE }
-    cell.alignment = { ...cell.alignment, horizontal: align ?? 'left', ...indent(index, align), ...(wrap ? { wrapText: true } : {}), vertical: 'middle' }
+    cell.alignment = {
+      ...cell.alignment,
+      horizontal: align ?? 'left',
+      ...indent(index, align),
+      ...(wrap ? { wrapText: true } : {}),
+      vertical: 'middle',
+    }
   })
 }
 

@@ -6,14 +6,7 @@ import { openTestRequestSchema, signatureRequestSchema } from '#shared/api/proof
 import type { AppContext } from '../context'
 import { authenticate, personOf } from '../middleware/authenticate'
 import { idParam, parseBody, parseQuery, shopOf } from '../middleware/validate'
-import {
-  appendPressEntries,
-  appendTestEntries,
-  openProofTest,
-  registerPress,
-  signProofTest,
-  type Asking,
-} from '../services/ledgers'
+import { appendPressEntries, appendTestEntries, openProofTest, registerPress, signProofTest, type Asking } from '../services/ledgers'
 import { readLedger } from '../services/read-ledger'
 import { clientOf } from './session'
 

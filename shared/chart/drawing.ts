@@ -86,11 +86,7 @@ export function arrowHead(from: Point, tip: Point, length = 10, halfWidth = 3.4)
   const uy = (tip.y - from.y) / distance
   const base = { x: tip.x - ux * length, y: tip.y - uy * length }
   return pathThrough(
-    [
-      tip,
-      { x: base.x - uy * halfWidth, y: base.y + ux * halfWidth },
-      { x: base.x + uy * halfWidth, y: base.y - ux * halfWidth },
-    ],
+    [tip, { x: base.x - uy * halfWidth, y: base.y + ux * halfWidth }, { x: base.x + uy * halfWidth, y: base.y - ux * halfWidth }],
     true,
   )
 }

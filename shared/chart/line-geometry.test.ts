@@ -145,8 +145,7 @@ describe('notes on the line', () => {
       const at = many.notes[index]?.at
       expect(tip).toBeDefined()
       expect(at).toBeDefined()
-      if (tip !== undefined && at !== undefined)
-        expect(Math.hypot(tip.x - frame.x(at.x), tip.y - frame.y(at.y))).toBeLessThan(10)
+      if (tip !== undefined && at !== undefined) expect(Math.hypot(tip.x - frame.x(at.x), tip.y - frame.y(at.y))).toBeLessThan(10)
     })
   })
 })

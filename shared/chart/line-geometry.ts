@@ -107,7 +107,13 @@ function earlier({ earlier: old, setting, width }: LineChartSpec, frame: LineFra
   const alone = setting === 'alone'
   const left = alone ? 24 : frame.left + 8
   const foot = alone ? 52 : frame.ceiling - 2
-  const reading = (point: Point): DrawingItem => ({ kind: 'path', d: circlePath(point, 3), stroke: 'faint-scribe', width: 1.2, fill: 'dye' })
+  const reading = (point: Point): DrawingItem => ({
+    kind: 'path',
+    d: circlePath(point, 3),
+    stroke: 'faint-scribe',
+    width: 1.2,
+    fill: 'dye',
+  })
   return [
     strokeItem(pathThrough(at), 'faint-scribe', 1),
     ...at.slice(1).map(reading),
@@ -207,8 +213,7 @@ function prediction(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
   const from = frame.x(next.from)
   const to = frame.x(next.to)
   const items: DrawingItem[] = [strokeItem(`M${from} ${y - 10}v20M${to} ${y - 10}v20M${from} ${y}H${to}`, ink, 2)]
-  if (ink === 'chalk')
-    items.push({ kind: 'path', d: circlePath({ x: (from + to) / 2, y }, 4.6), stroke: 'chalk', width: 2, fill: 'dye' })
+  if (ink === 'chalk') items.push({ kind: 'path', d: circlePath({ x: (from + to) / 2, y }, 4.6), stroke: 'chalk', width: 2, fill: 'dye' })
   return items
 }
 
@@ -263,9 +268,7 @@ export function lineDrawing(spec: LineChartSpec): Drawing {
   const alone = spec.setting === 'alone'
   const items: DrawingItem[] = []
   if (spec.title !== undefined)
-    items.push(
-      textItem(alone ? 24 : frame.left, alone ? 30 : 36, spec.title, 'scribe', { size: alone ? 18 : 20, weight: 600 }),
-    )
+    items.push(textItem(alone ? 24 : frame.left, alone ? 30 : 36, spec.title, 'scribe', { size: alone ? 18 : 20, weight: 600 }))
   if (spec.aside !== undefined && spec.width >= 300)
     items.push(
       textItem(spec.width - (alone ? 24 : 33), alone ? 30 : 36, spec.aside, 'faint-scribe', {

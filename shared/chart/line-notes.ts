@@ -58,11 +58,9 @@ function sizes(wanted: Wanted, small: boolean): Sized[] {
   })
 }
 
-const overlap = (a: Box, b: Box): boolean =>
-  a.left < b.right && b.left < a.right && a.top < b.bottom && b.top < a.bottom
+const overlap = (a: Box, b: Box): boolean => a.left < b.right && b.left < a.right && a.top < b.bottom && b.top < a.bottom
 
-const holds = (box: Box, point: Point): boolean =>
-  box.left < point.x && point.x < box.right && box.top < point.y && point.y < box.bottom
+const holds = (box: Box, point: Point): boolean => box.left < point.x && point.x < box.right && box.top < point.y && point.y < box.bottom
 
 /** True when the straight stroke a–b passes through the box. */
 function crosses(box: Box, a: Point, b: Point): boolean {
@@ -185,8 +183,7 @@ function place(wanted: Wanted, spec: LineChartSpec, frame: LineFrame, obstacles:
   const mark = wanted.note.mark
   const widest = Math.max(
     ...rows.map(
-      (row, index) =>
-        estimateTextWidth(row.text, row.size, row.weight, true) + (mark !== undefined && index === 0 ? MARK_WIDTH : 0),
+      (row, index) => estimateTextWidth(row.text, row.size, row.weight, true) + (mark !== undefined && index === 0 ? MARK_WIDTH : 0),
     ),
   )
   const height = rows.reduce((sum, row) => sum + row.step, 0)
@@ -258,8 +255,7 @@ export function layOutNotes(spec: LineChartSpec, frame: LineFrame): PlacedNote[]
       },
     })
   }
-  for (const note of spec.notes)
-    wanted.push({ note, captioned: false, at: { x: frame.x(note.at.x), y: frame.y(note.at.y) } })
+  for (const note of spec.notes) wanted.push({ note, captioned: false, at: { x: frame.x(note.at.x), y: frame.y(note.at.y) } })
   const kept = wanted.slice(0, MOST_NOTES)
   let best: { notes: PlacedNote[]; cost: number } | null = null
   // Each note takes the best place that is left, so the order decides; three notes have six orders.
@@ -270,12 +266,7 @@ export function layOutNotes(spec: LineChartSpec, frame: LineFrame): PlacedNote[]
   return best?.notes ?? []
 }
 
-function placeInOrder(
-  wanted: Wanted[],
-  order: number[],
-  spec: LineChartSpec,
-  frame: LineFrame,
-): { notes: PlacedNote[]; cost: number } {
+function placeInOrder(wanted: Wanted[], order: number[], spec: LineChartSpec, frame: LineFrame): { notes: PlacedNote[]; cost: number } {
   const obstacles: Obstacles = {
     strokes: strokes(spec, frame),
     points: spec.points.map((point) => {
@@ -303,7 +294,5 @@ function placeInOrder(
 
 function permutations(items: readonly number[]): number[][] {
   if (items.length < 2) return [[...items]]
-  return items.flatMap((item, index) =>
-    permutations([...items.slice(0, index), ...items.slice(index + 1)]).map((rest) => [item, ...rest]),
-  )
+  return items.flatMap((item, index) => permutations([...items.slice(0, index), ...items.slice(index + 1)]).map((rest) => [item, ...rest]))
 }

@@ -125,14 +125,24 @@ function shareOut(wanted: readonly Wanted[], elevation: Elevation, lanes: readon
   return shared
 }
 
+/** A second joint at the ram points at it from the other side, so that no leader runs behind the first one's balloon. */
+function acrossTheRam(anchor: Anchor, place: string, { lanes }: Elevation): Anchor {
+  if (!place.startsWith('ram-') || !anchor.lane.startsWith('inner')) return anchor
+  const lane = anchor.lane === 'inner-left' ? 'inner-right' : 'inner-left'
+  return { ...anchor, lane, tip: { x: lanes['inner-left'] + lanes['inner-right'] - anchor.tip.x, y: anchor.tip.y } }
+}
+
 /**
  * Gives every joint a balloon that touches no other and stands whole on the sheet, in the largest size that has
  * room for all. Those without a known place go down the right side, without a leader. The layout doesn't depend on
  * what state a joint is in, so nothing moves while joints are examined.
  */
 export function placeBalloons(joints: readonly { id: string; place: string | null }[], elevation: Elevation): BalloonLayout {
+  const seen = new Set<string>()
   const wanted = joints.map(({ id, place }): Wanted => {
-    const anchor = anchorFor(elevation, place)
+    const found = anchorFor(elevation, place)
+    const anchor = found !== null && place !== null && seen.has(place) ? acrossTheRam(found, place, elevation) : found
+    if (place !== null) seen.add(place)
     return { id, anchor, lane: anchor?.lane ?? 'outer-right', y: anchor?.y ?? elevation.to }
   })
   const lanes = lanesOf(elevation)

@@ -42,7 +42,11 @@ export const tell: Tellers = {
   }),
   'test-late-fact': (payload) => ({ text: `${payload.number}: ${payload.why}`, mark: 'stop', proofTestId: payload.proofTestId }),
   'test-ended': (payload) => ({ text: `${payload.number}: ${payload.why}`, mark: 'stop', proofTestId: payload.proofTestId }),
-  'instrument-recalled': (payload) => ({ text: `${payload.code} was found out of tolerance on ${payload.calibratedOn}`, mark: 'stop', proofTestId: null }),
+  'instrument-recalled': (payload) => ({
+    text: `${payload.code} was found out of tolerance on ${payload.calibratedOn}`,
+    mark: 'stop',
+    proofTestId: null,
+  }),
   'clearance-given': (payload) => ({
     text: `Cleared up to ${payload.load.text} ${unitLabel(payload.load.unit, { plural: true })}`,
     mark: 'within',

@@ -8,12 +8,19 @@ import type { ProofTestState } from './state'
 const leading = (criteria: readonly Criterion[], id: string): Criterion | undefined =>
   criteria.find((criterion) => criterion.id === id && criterion.leads)
 
-/** Stiffness (N/m) of the line with its expanded uncertainty at 95 %, from the slope's standard error (DOMAIN 3.5). */
+/** Below this a line's scatter says nothing of how well it is known (DOMAIN 3.5). */
+const LEAST_DEGREES_OF_FREEDOM = 3
+
+/**
+ * Stiffness (N/m) of the line with its expanded uncertainty at 95 %, from the slope's standard error (DOMAIN 3.5); no
+ * uncertainty below three degrees of freedom, where the fit's own scatter can be nothing by chance.
+ */
 function stiffnessOf({ fit }: ClimbEvaluation): { stiffness: number | null; stiffnessU: number | null } {
   if (!fit || !(fit.slope > 0)) return { stiffness: null, stiffnessU: null }
   const stiffness = 1 / fit.slope
   // u(1/b) = u(b)/b² (JCGM 100, 5.1.2).
-  const stiffnessU = fit.seSlope === null || fit.dof < 1 ? null : (studentTQuantile(0.975, fit.dof) * fit.seSlope) / fit.slope ** 2
+  const stiffnessU =
+    fit.seSlope === null || fit.dof < LEAST_DEGREES_OF_FREEDOM ? null : (studentTQuantile(0.975, fit.dof) * fit.seSlope) / fit.slope ** 2
   return { stiffness, stiffnessU }
 }
 

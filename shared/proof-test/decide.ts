@@ -138,7 +138,8 @@ const WHOLE_RULES: readonly ProofTestRule[] = [
     ['attachment-lost'],
     ({ payload }, state, opened, { authorId }) => {
       const { lead, witness } = opened.people
-      if (authorId !== lead.id && authorId !== witness.id) return `Only the lead, ${lead.name}, or the witness, ${witness.name}, declares it lost.`
+      if (authorId !== lead.id && authorId !== witness.id)
+        return `Only the lead, ${lead.name}, or the witness, ${witness.name}, declares it lost.`
       return state.attachments.some((one) => one.sha256 === payload.sha256) ? null : 'No entry of this test names such a photo or document.'
     },
   ),

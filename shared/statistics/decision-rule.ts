@@ -1,18 +1,18 @@
-import { normalCdf } from './student-t';
+import { normalCdf } from './student-t'
 
-export type Verdict = 'within' | 'beyond' | 'undecided';
-export type DecisionRule = 'simple' | 'guard-band';
+export type Verdict = 'within' | 'beyond' | 'undecided'
+export type DecisionRule = 'simple' | 'guard-band'
 /** Limits in the unit of the value; at least one. */
-export type Limit = { max?: number | undefined; min?: number | undefined };
+export type Limit = { max?: number | undefined; min?: number | undefined }
 
 /** A value on the limit but for rounding in the last digits counts as on it. */
-const LIMIT_SLACK = 1e-9;
+const LIMIT_SLACK = 1e-9
 
 function judgeUpper(value: number, U: number, max: number, rule: DecisionRule): Verdict {
-  const edge = max + LIMIT_SLACK * Math.abs(max);
-  if (value - U > edge) return 'beyond';
-  if (rule === 'simple' ? value <= edge : value + U <= edge) return 'within';
-  return 'undecided';
+  const edge = max + LIMIT_SLACK * Math.abs(max)
+  if (value - U > edge) return 'beyond'
+  if (rule === 'simple' ? value <= edge : value + U <= edge) return 'within'
+  return 'undecided'
 }
 
 /**
@@ -24,15 +24,15 @@ function judgeUpper(value: number, U: number, max: number, rule: DecisionRule): 
  * @throws RangeError when there is no limit, U is below zero or not a number, or the value isn't one.
  */
 export function judge(input: { value: number; U: number; limit: Limit; rule: DecisionRule }): Verdict {
-  const { value, U, limit, rule } = input;
-  if (Number.isNaN(value)) throw new RangeError('The value to judge isn’t a number.');
-  if (!(U >= 0)) throw new RangeError('An uncertainty can’t be below zero.');
-  if (limit.max === undefined && limit.min === undefined) throw new RangeError('There is no limit to judge by.');
-  const verdicts: Verdict[] = [];
-  if (limit.max !== undefined) verdicts.push(judgeUpper(value, U, limit.max, rule));
-  if (limit.min !== undefined) verdicts.push(judgeUpper(-value, U, -limit.min, rule));
-  if (verdicts.includes('beyond')) return 'beyond';
-  return verdicts.includes('undecided') ? 'undecided' : 'within';
+  const { value, U, limit, rule } = input
+  if (Number.isNaN(value)) throw new RangeError('The value to judge isn’t a number.')
+  if (!(U >= 0)) throw new RangeError('An uncertainty can’t be below zero.')
+  if (limit.max === undefined && limit.min === undefined) throw new RangeError('There is no limit to judge by.')
+  const verdicts: Verdict[] = []
+  if (limit.max !== undefined) verdicts.push(judgeUpper(value, U, limit.max, rule))
+  if (limit.min !== undefined) verdicts.push(judgeUpper(-value, U, -limit.min, rule))
+  if (verdicts.includes('beyond')) return 'beyond'
+  return verdicts.includes('undecided') ? 'undecided' : 'within'
 }
 
 /**
@@ -42,9 +42,9 @@ export function judge(input: { value: number; U: number; limit: Limit; rule: Dec
  * @throws RangeError when u is not above zero.
  */
 export function conformanceProbability(input: { value: number; u: number; limit: Limit }): number {
-  const { value, u, limit } = input;
-  if (!(u > 0)) throw new RangeError('The standard uncertainty must be above zero.');
-  const below = limit.max === undefined ? 1 : normalCdf((limit.max - value) / u);
-  const under = limit.min === undefined ? 0 : normalCdf((limit.min - value) / u);
-  return below - under;
+  const { value, u, limit } = input
+  if (!(u > 0)) throw new RangeError('The standard uncertainty must be above zero.')
+  const below = limit.max === undefined ? 1 : normalCdf((limit.max - value) / u)
+  const under = limit.min === undefined ? 0 : normalCdf((limit.min - value) / u)
+  return below - under
 }

@@ -1,28 +1,28 @@
 /** A gauge reading of a hold, Pa; `toppedUp` when the pump was worked between it and the one before. */
-export type HoldReading = { pressure: number; toppedUp: boolean };
+export type HoldReading = { pressure: number; toppedUp: boolean }
 
 /**
  * Hold at full load with the ram at its extreme offset, s: ASME ASP-2010, 3-4.1.1 (1 min).
  */
-export const ASP_OFF_CENTRE_HOLD = 60;
+export const ASP_OFF_CENTRE_HOLD = 60
 /** Hold of a proof load above the rating, s: ASME ASP-2010, 3-4.1.3 (10 min). */
-export const ASP_PROOF_HOLD = 600;
+export const ASP_PROOF_HOLD = 600
 
 /** First and last reading of every stretch between top-ups. */
 function stretches(readings: readonly HoldReading[]): { first: number; last: number }[] {
-  const found: { first: number; last: number }[] = [];
+  const found: { first: number; last: number }[] = []
   for (const { pressure, toppedUp } of readings) {
-    const current = found.at(-1);
-    if (!current || toppedUp) found.push({ first: pressure, last: pressure });
-    else current.last = pressure;
+    const current = found.at(-1)
+    if (!current || toppedUp) found.push({ first: pressure, last: pressure })
+    else current.last = pressure
   }
-  return found;
+  return found
 }
 
 function startPressure(readings: readonly HoldReading[]): number {
-  const start = readings[0]?.pressure ?? Number.NaN;
-  if (!(start > 0)) throw new RangeError('A hold starts with a gauge reading above zero.');
-  return start;
+  const start = readings[0]?.pressure ?? Number.NaN
+  if (!(start > 0)) throw new RangeError('A hold starts with a gauge reading above zero.')
+  return start
 }
 
 /**
@@ -32,9 +32,9 @@ function startPressure(readings: readonly HoldReading[]): number {
  * @throws RangeError when the hold has no first reading above zero.
  */
 export function pressureLoss(readings: readonly HoldReading[]): number {
-  const start = startPressure(readings);
-  const lost = stretches(readings).reduce((sum, { first, last }) => sum + Math.max(0, first - last), 0);
-  return lost / start;
+  const start = startPressure(readings)
+  const lost = stretches(readings).reduce((sum, { first, last }) => sum + Math.max(0, first - last), 0)
+  return lost / start
 }
 
 /**
@@ -44,14 +44,14 @@ export function pressureLoss(readings: readonly HoldReading[]): number {
  * @throws RangeError when the hold has no first reading above zero.
  */
 export function pressureLossUncertainty(readings: readonly HoldReading[], increment: number): number {
-  const start = startPressure(readings);
-  const lengths: number[] = [];
+  const start = startPressure(readings)
+  const lengths: number[] = []
   for (const { toppedUp } of readings) {
-    if (lengths.length === 0 || toppedUp) lengths.push(1);
-    else lengths.push((lengths.pop() ?? 0) + 1);
+    if (lengths.length === 0 || toppedUp) lengths.push(1)
+    else lengths.push((lengths.pop() ?? 0) + 1)
   }
-  const differences = lengths.filter((length) => length > 1).length;
-  return (2 * Math.sqrt(2 * differences) * (increment / Math.sqrt(12))) / start;
+  const differences = lengths.filter((length) => length > 1).length
+  return (2 * Math.sqrt(2 * differences) * (increment / Math.sqrt(12))) / start
 }
 
 /**
@@ -61,15 +61,15 @@ export function pressureLossUncertainty(readings: readonly HoldReading[], increm
  * @throws RangeError when the stiffness is not above zero.
  */
 export function creep(input: {
-  deflectionStart: number;
-  deflectionEnd: number;
-  forceStart: number;
-  forceEnd: number;
-  stiffness: number;
+  deflectionStart: number
+  deflectionEnd: number
+  forceStart: number
+  forceEnd: number
+  stiffness: number
 }): number {
-  if (!(input.stiffness > 0)) throw new RangeError('The stiffness must be above zero.');
-  const moved = input.deflectionEnd - input.deflectionStart;
-  return moved + (input.forceStart - input.forceEnd) / input.stiffness;
+  if (!(input.stiffness > 0)) throw new RangeError('The stiffness must be above zero.')
+  const moved = input.deflectionEnd - input.deflectionStart
+  return moved + (input.forceStart - input.forceEnd) / input.stiffness
 }
 
 /**
@@ -79,8 +79,8 @@ export function creep(input: {
  * @throws RangeError when the stiffness is not above zero.
  */
 export function creepUncertainty(input: { uDeflection: number; uForce: number; stiffness: number }): number {
-  if (!(input.stiffness > 0)) throw new RangeError('The stiffness must be above zero.');
-  return 2 * Math.SQRT2 * Math.hypot(input.uDeflection, input.uForce / input.stiffness);
+  if (!(input.stiffness > 0)) throw new RangeError('The stiffness must be above zero.')
+  return 2 * Math.SQRT2 * Math.hypot(input.uDeflection, input.uForce / input.stiffness)
 }
 
 /**
@@ -88,5 +88,5 @@ export function creepUncertainty(input: { uDeflection: number; uForce: number; s
  * readable increments (m). Common practice, from memory, no source.
  */
 export function creepLimit(input: { fraction: number; stageDeflection: number; increment: number }): number {
-  return Math.max(input.fraction * input.stageDeflection, 2 * input.increment);
+  return Math.max(input.fraction * input.stageDeflection, 2 * input.increment)
 }

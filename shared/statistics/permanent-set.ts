@@ -2,14 +2,14 @@
  * The permanent increase in opening that ASME ASP-2010, 3-4.1.1 and 3-4.1.3, allows a shop press
  * after its off-centre and proof loads, m: 0.125 in (the standard prints 3.18 mm).
  */
-export const ASP_PERMANENT_INCREASE_LIMIT = 0.003175;
+export const ASP_PERMANENT_INCREASE_LIMIT = 0.003175
 
 /**
  * How much of the full-load deflection may stay after release, m: a fraction of it (m), but no less
  * than two readable increments (m). Common practice, from memory, no source.
  */
 export function setLimit(input: { fraction: number; fullDeflection: number; increment: number }): number {
-  return Math.max(input.fraction * input.fullDeflection, 2 * input.increment);
+  return Math.max(input.fraction * input.fullDeflection, 2 * input.increment)
 }
 
 /**
@@ -18,7 +18,7 @@ export function setLimit(input: { fraction: number; fullDeflection: number; incr
  * Common practice, no source.
  */
 export function indicatorTooCoarse(input: { fraction: number; fullDeflection: number; increment: number }): boolean {
-  return 2 * input.increment > input.fraction * input.fullDeflection * (1 + 1e-9);
+  return 2 * input.increment > input.fraction * input.fullDeflection * (1 + 1e-9)
 }
 
 /**
@@ -28,7 +28,7 @@ export function indicatorTooCoarse(input: { fraction: number; fullDeflection: nu
  * Source: JCGM 106:2012, clause 8; the repeat climb is common practice.
  */
 export function setIsResolved(input: { set: number; U: number }): boolean {
-  return Math.abs(input.set) > input.U * (1 + 1e-9);
+  return Math.abs(input.set) > input.U * (1 + 1e-9)
 }
 
 /**
@@ -37,5 +37,5 @@ export function setIsResolved(input: { set: number; U: number }): boolean {
  * Common practice, from memory, no source.
  */
 export function secondSetVanishes(input: { set: number; U: number }): boolean {
-  return !setIsResolved(input);
+  return !setIsResolved(input)
 }

@@ -7,8 +7,7 @@ export type ButtonKind = 'next' | 'plain' | 'scribed' | 'stop'
 /** `line` sits in a row of text; `run` is the 112 px key that a glove finds. */
 export type ButtonSize = 'normal' | 'line' | 'run'
 
-const base =
-  'inline-flex flex-col items-center justify-center rounded-key border-2 text-center font-semibold select-none no-underline'
+const base = 'inline-flex flex-col items-center justify-center rounded-key border-2 text-center font-semibold select-none no-underline'
 
 const sizes: Record<ButtonSize, string> = {
   normal: 'min-h-14 desktop:min-h-12 px-5 py-1 text-18 desktop:text-16',
@@ -56,7 +55,18 @@ function Note({ children }: { children: ReactNode }) {
 }
 
 /** A button. Its words say what is then true. */
-export function Button({ kind = 'plain', size = 'normal', wide = false, note, busy, className, children, type = 'button', disabled, ...rest }: ButtonProps) {
+export function Button({
+  kind = 'plain',
+  size = 'normal',
+  wide = false,
+  note,
+  busy,
+  className,
+  children,
+  type = 'button',
+  disabled,
+  ...rest
+}: ButtonProps) {
   const waiting = Boolean(busy)
   return (
     <button

@@ -20,25 +20,41 @@ function useMessage<V extends FieldValues, C, T>({ control, name }: Held<V, C, T
   return messageAt(`${name}.text`) ?? messageAt(`${name}.unit`) ?? messageAt(name)
 }
 
-export function ControlledDecimal<V extends FieldValues, C, T>({ control, name, ...rest }: Held<V, C, T> & Omit<ComponentProps<typeof DecimalField>, Given>) {
+export function ControlledDecimal<V extends FieldValues, C, T>({
+  control,
+  name,
+  ...rest
+}: Held<V, C, T> & Omit<ComponentProps<typeof DecimalField>, Given>) {
   const { field } = useController({ control, name })
   const message = useMessage({ control, name })
   return <DecimalField {...rest} {...field} value={field.value ?? ''} message={message} />
 }
 
-export function ControlledQuantity<V extends FieldValues, C, T, U extends Unit>({ control, name, ...rest }: Held<V, C, T> & Omit<ComponentProps<typeof QuantityField<U>>, Given>) {
+export function ControlledQuantity<V extends FieldValues, C, T, U extends Unit>({
+  control,
+  name,
+  ...rest
+}: Held<V, C, T> & Omit<ComponentProps<typeof QuantityField<U>>, Given>) {
   const { field } = useController({ control, name })
   const message = useMessage({ control, name })
   return <QuantityField<U> {...rest} {...field} value={field.value ?? { text: '', unit: '' }} message={message} />
 }
 
-export function ControlledRadios<V extends FieldValues, C, T>({ control, name, ...rest }: Held<V, C, T> & Omit<ComponentProps<typeof RadioRow>, Given>) {
+export function ControlledRadios<V extends FieldValues, C, T>({
+  control,
+  name,
+  ...rest
+}: Held<V, C, T> & Omit<ComponentProps<typeof RadioRow>, Given>) {
   const { field } = useController({ control, name })
   const message = useMessage({ control, name })
   return <RadioRow {...rest} {...field} value={field.value ?? ''} message={message} />
 }
 
-export function ControlledSelect<V extends FieldValues, C, T>({ control, name, ...rest }: Held<V, C, T> & Omit<ComponentProps<typeof SelectField>, Given>) {
+export function ControlledSelect<V extends FieldValues, C, T>({
+  control,
+  name,
+  ...rest
+}: Held<V, C, T> & Omit<ComponentProps<typeof SelectField>, Given>) {
   const { field } = useController({ control, name })
   const message = useMessage({ control, name })
   return <SelectField {...rest} {...field} value={field.value ?? ''} message={message} />

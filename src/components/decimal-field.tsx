@@ -53,7 +53,20 @@ function Echo({ id, number, unit }: { id: string; number: string | undefined; un
  * A number as text: comma or point as the decimal sign, nothing coerced. What the program understood is
  * written beneath; what it can't read stays as typed, with the reason.
  */
-export function DecimalField({ label, hint, message, optional, className, value, onChange, onBlur, signed = false, unit = '', id: given, ...input }: DecimalProps) {
+export function DecimalField({
+  label,
+  hint,
+  message,
+  optional,
+  className,
+  value,
+  onChange,
+  onBlur,
+  signed = false,
+  unit = '',
+  id: given,
+  ...input
+}: DecimalProps) {
   const made = useId()
   const id = given ?? made
   const understood = useUnderstood(value, signed)
@@ -95,7 +108,23 @@ type QuantityProps<U extends Unit> = Omit<DecimalProps, 'value' | 'onChange' | '
 }
 
 /** A number with its unit. The unit is chosen beside it and both are kept as given. */
-export function QuantityField<U extends Unit>({ label, hint, message, optional, className, value, onChange, units, askUnit, signed = false, id: given, name, disabled, onBlur, ...input }: QuantityProps<U>) {
+export function QuantityField<U extends Unit>({
+  label,
+  hint,
+  message,
+  optional,
+  className,
+  value,
+  onChange,
+  units,
+  askUnit,
+  signed = false,
+  id: given,
+  name,
+  disabled,
+  onBlur,
+  ...input
+}: QuantityProps<U>) {
   const made = useId()
   const id = given ?? made
   const understood = useUnderstood(value.text, signed)

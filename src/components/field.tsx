@@ -74,8 +74,7 @@ export function FieldFrame({ id, label, hint, message, optional, aside, echo, cl
   )
 }
 
-type TextFieldProps = FieldWords &
-  InputHTMLAttributes<HTMLInputElement> & { ref?: Ref<HTMLInputElement>; aside?: ReactNode }
+type TextFieldProps = FieldWords & InputHTMLAttributes<HTMLInputElement> & { ref?: Ref<HTMLInputElement>; aside?: ReactNode }
 
 /** One line of text. Takes what `register` returns. */
 export function TextField({ label, hint, message, optional, aside, className, id: given, ...input }: TextFieldProps) {

@@ -7,11 +7,7 @@ import type { Choice } from './select-field'
 /** Ruled cells in one row that narrow a list; two to a row on the phone, the search over both. The last row fills. */
 export function FilterBar({ label, children }: { label: string; children: ReactNode }) {
   return (
-    <div
-      role="search"
-      aria-label={label}
-      className="mb-5 flex flex-wrap pt-px pl-px desktop:flex-nowrap"
-    >
+    <div role="search" aria-label={label} className="mb-5 flex flex-wrap pt-px pl-px desktop:flex-nowrap">
       {children}
     </div>
   )
@@ -146,7 +142,10 @@ export function FilterDate({ label, value, onChange, any, min, max }: FilterDate
         onClick={() => input.current?.showPicker?.()}
         className={classNames(inside, 'peer opacity-0 focus:opacity-100', value !== '' && 'font-semibold')}
       />
-      <span aria-hidden="true" className="pointer-events-none absolute inset-0 flex items-center justify-between px-3.5 pt-5 peer-focus:hidden">
+      <span
+        aria-hidden="true"
+        className="pointer-events-none absolute inset-0 flex items-center justify-between px-3.5 pt-5 peer-focus:hidden"
+      >
         <span className={classNames('truncate', value !== '' && 'font-semibold')}>{value === '' ? any : longDate(value)}</span>
       </span>
       <span className="pointer-events-none absolute right-3 bottom-3 peer-focus:hidden">

@@ -170,14 +170,7 @@ export function pictureRole(label: string | undefined): SVGProps<SVGSVGElement> 
 export function Mark({ name, size = 24, tone = 'steel', label, className }: MarkProps): ReactElement {
   const weight = size >= 60 ? 0.95 : size >= 36 ? 1.7 : 2
   return (
-    <svg
-      viewBox="0 0 24 24"
-      width={size}
-      height={size}
-      overflow="visible"
-      className={className ?? 'shrink-0'}
-      {...pictureRole(label)}
-    >
+    <svg viewBox="0 0 24 24" width={size} height={size} overflow="visible" className={className ?? 'shrink-0'} {...pictureRole(label)}>
       {shape(name, tone, weight)}
     </svg>
   )

@@ -17,7 +17,8 @@ type RadioRowProps = FieldWords &
 
 /** The chosen cell carries an edge of ink: at its left where cells lie under each other, at its foot side by side. */
 const downEdge = 'has-checked:before:inset-y-0 has-checked:before:left-0 has-checked:before:w-1'
-const acrossEdge = 'tablet:has-checked:before:inset-x-0 tablet:has-checked:before:top-auto tablet:has-checked:before:h-[3px] tablet:has-checked:before:w-auto'
+const acrossEdge =
+  'tablet:has-checked:before:inset-x-0 tablet:has-checked:before:top-auto tablet:has-checked:before:h-[3px] tablet:has-checked:before:w-auto'
 
 /** A few answers to one question, as native radios in ruled cells. Takes what `register` returns. */
 export function RadioRow({ label, hint, message, optional, className, choices, value, stacked = false, ...radio }: RadioRowProps) {
@@ -63,7 +64,9 @@ export function RadioRow({ label, hint, message, optional, className, choices, v
             />
             <span className="min-w-0">
               {choice.label}
-              {choice.note !== undefined && <span className="block text-14 font-normal text-graphite max-desktop:text-16">{choice.note}</span>}
+              {choice.note !== undefined && (
+                <span className="block text-14 font-normal text-graphite max-desktop:text-16">{choice.note}</span>
+              )}
             </span>
           </label>
         ))}

@@ -64,9 +64,20 @@ export function RouteError() {
   }
   if (error instanceof Disconnected) {
     return (
-      <PlainScreen mark="not-connected" title="Not connected to the server" actions={<>{again}{today}</>}>
+      <PlainScreen
+        mark="not-connected"
+        title="Not connected to the server"
+        actions={
+          <>
+            {again}
+            {today}
+          </>
+        }
+      >
         <p>Nothing old is shown in its place. Look at the network of this device, then load the page again.</p>
-        <p className="mt-2">Readings that were entered on this device are still kept on it. A test that was opened on it goes on from Today.</p>
+        <p className="mt-2">
+          Readings that were entered on this device are still kept on it. A test that was opened on it goes on from Today.
+        </p>
       </PlainScreen>
     )
   }

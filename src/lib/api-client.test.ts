@@ -18,7 +18,11 @@ describe('a request to the server', () => {
   })
 
   it('throws a refusal with its code, fields and rules', async () => {
-    answer(409, JSON.stringify({ type: 'about:blank', title: 'No', status: 409, code: 'rule', detail: 'Joint 7 is only tacked.', rules: ['R7'] }), 'application/problem+json')
+    answer(
+      409,
+      JSON.stringify({ type: 'about:blank', title: 'No', status: 409, code: 'rule', detail: 'Joint 7 is only tacked.', rules: ['R7'] }),
+      'application/problem+json',
+    )
     const refused = await api.send('POST', schema, '/api/presses', {}).catch((error: unknown) => error)
     expect(refused).toBeInstanceOf(ProblemError)
     expect(refused).toMatchObject({ status: 409, code: 'rule', detail: 'Joint 7 is only tacked.', rules: ['R7'], fields: {} })

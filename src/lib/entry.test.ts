@@ -6,7 +6,8 @@ import { deviceId, giveBackDeviceSeq, makeEntry } from './entry'
 const ledgerId = '01990000-0000-7000-8000-000000000001'
 const other = '01990000-0000-7000-8000-000000000002'
 const authorId = '01990000-0000-7000-8000-000000000003'
-const make = (ledger = ledgerId) => makeEntry({ ledgerId: ledger, kind: 'observed', payload: { note: 'it creaked' }, authorId, basedOnSeq: 4 })
+const make = (ledger = ledgerId) =>
+  makeEntry({ ledgerId: ledger, kind: 'observed', payload: { note: 'it creaked' }, authorId, basedOnSeq: 4 })
 
 describe('entries that this device makes', () => {
   it('have the agreed shape', () => {

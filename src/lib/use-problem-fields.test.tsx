@@ -19,7 +19,14 @@ function formWithProblem(error: unknown) {
 }
 
 const refusal = (fields?: Record<string, string>) =>
-  readProblem(422, { type: 'about:blank', title: 'Not taken', status: 422, code: 'fields', detail: 'Two fields have to be put right.', fields })
+  readProblem(422, {
+    type: 'about:blank',
+    title: 'Not taken',
+    status: 422,
+    code: 'fields',
+    detail: 'Two fields have to be put right.',
+    fields,
+  })
 
 describe('a refusal of the server on a form', () => {
   it('stands at the fields it names, down to a part of a quantity, and not above the form as well', () => {

@@ -12,11 +12,7 @@ export function Component() {
         <div className="grid content-start gap-8">
           <Section title="Who you are">
             <Facts
-              facts={[
-                ['Name on records', user.name],
-                ['E-mail', user.email],
-                ...shops.map((shop) => [shop.name, shop.role] as const),
-              ]}
+              facts={[['Name on records', user.name], ['E-mail', user.email], ...shops.map((shop) => [shop.name, shop.role] as const)]}
             />
           </Section>
           <Section title="Light or dark">

@@ -10,5 +10,5 @@ export function Component() {
   const error = made.error ?? (tag.data === undefined ? tag.error : null)
   if (error && (made.data === undefined || tag.data === undefined)) throw error
   if (made.data === undefined || tag.data === undefined) return <SkeletonPage />
-  return <PrintTag key={pressId} pressId={pressId} made={made.data} tag={tag.data} />
+  return <PrintTag key={pressId} pressId={pressId} made={made.data} tag={tag.data} old={tag.error !== null} />
 }

@@ -22,7 +22,8 @@ export function Component() {
   const view = useRegister({ sorts: TEST_SORTS, fallback: '-opened', href: paths.proofTests.href })
   const { asked, note, narrowed } = testsAsked(shop.id, view)
   const list = useProofTests(asked)
-  const underWay = list.data?.proofTests.filter((test) => test.status === 'under way' && [test.leadId, test.witnessId].includes(user.id)) ?? []
+  const underWay =
+    list.data?.proofTests.filter((test) => test.status === 'under way' && [test.leadId, test.witnessId].includes(user.id)) ?? []
   useKeptOnDevice(underWay.map(({ id }) => id))
   if (list.error && list.data === undefined) throw list.error
   const plan = can('proof-test:open') && (
@@ -33,7 +34,10 @@ export function Component() {
   const nothing = narrowed ? (
     <NothingHere what="No proof test fits." next="Take out a word, or show more days." />
   ) : (
-    <NothingHere what="No proof test was opened yet." next="A test begins with its plan: press, gauge, indicators, lead, pump hand and witness." />
+    <NothingHere
+      what="No proof test was opened yet."
+      next="A test begins with its plan: press, gauge, indicators, lead, pump hand and witness."
+    />
   )
   return (
     <Page title="Proof tests" note={note} actions={plan || undefined}>
@@ -42,7 +46,13 @@ export function Component() {
         <SkeletonRows />
       ) : (
         <>
-          <TestTable tests={list.data.proofTests} userId={user.id} sort={view.sort} onSort={(sort) => view.change(view.sortBy(sort, 'descending'))} nothing={nothing} />
+          <TestTable
+            tests={list.data.proofTests}
+            userId={user.id}
+            sort={view.sort}
+            onSort={(sort) => view.change(view.sortBy(sort, 'descending'))}
+            nothing={nothing}
+          />
           <KeysetPages
             newer={view.pageAt(list.data.newer)}
             older={view.pageAt(list.data.older)}

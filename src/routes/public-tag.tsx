@@ -10,9 +10,11 @@ export function Component() {
       key={code}
       code={code}
       head={(shopName) => (
-        <header className="ground-deep-dye print:bg-white print:text-black">
+        <header className="ground-deep-dye print:bg-white! print:text-black!">
           <div className="mx-auto flex min-h-14 w-full max-w-[880px] items-center gap-3 px-4 tablet:px-6">
-            <ProductMark size={34} />
+            <span className="print:hidden">
+              <ProductMark size={34} />
+            </span>
             <p className="min-w-0 font-semibold">{shopName ?? 'The tag of a press'}</p>
           </div>
           <div className="print:hidden">

@@ -40,7 +40,9 @@ describe('opening a shop', () => {
   })
 
   it('says for each field what is wrong', async () => {
-    const response = await new ApiClient().post('/api/shops', { shopName: ' ', ownerName: 'Ida', email: 'x', password: 'short', forceUnit: 'ton' }).expect(422)
+    const response = await new ApiClient()
+      .post('/api/shops', { shopName: ' ', ownerName: 'Ida', email: 'x', password: 'short', forceUnit: 'ton' })
+      .expect(422)
     expect(problemOf(response).fields).toMatchObject({
       shopName: 'Enter the name of the shop.',
       email: 'Enter a whole e-mail address, such as name@shop.example.',
@@ -138,7 +140,10 @@ describe('the people of a shop', () => {
       .expect(201)
     expect(personSchema.parse(response.body)).toMatchObject({ userId: witness.userId, name: 'Wim Faber', role: 'crew' })
     const session = sessionResponseSchema.parse((await witness.client.get('/api/session').expect(200)).body)
-    expect(session.shops.map(({ name, role }) => [name, role])).toEqual([['One', 'witness'], ['Two', 'crew']])
+    expect(session.shops.map(({ name, role }) => [name, role])).toEqual([
+      ['One', 'witness'],
+      ['Two', 'crew'],
+    ])
     await new ApiClient().post('/api/session', { email: witness.email, password: 'not used at all' }).expect(401)
   })
 
@@ -160,7 +165,10 @@ describe('the people of a shop', () => {
     await lead.client.get(`/api/shops/${owner.shopId}`).expect(404)
     expect(sessionResponseSchema.parse((await lead.client.get('/api/session').expect(200)).body).shops).toEqual([])
     const { people } = peopleResponseSchema.parse((await owner.client.get(`/api/people?shop=${owner.shopId}`)).body)
-    expect(people.map((person) => [person.userId, person.endedAt !== null])).toEqual([[owner.userId, false], [lead.userId, true]])
+    expect(people.map((person) => [person.userId, person.endedAt !== null])).toEqual([
+      [owner.userId, false],
+      [lead.userId, true],
+    ])
   })
 
   it('change roles, and what they may do changes with them', async () => {

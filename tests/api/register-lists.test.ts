@@ -10,12 +10,20 @@ type Staff = Awaited<ReturnType<typeof openStaffedShop>>
 
 describe('the register of presses', () => {
   let owner: SignedInPerson
-  const get = async (query: string) => pressListSchema.parse((await owner.client.get(`/api/presses?shop=${owner.shopId}${query}`).expect(200)).body)
+  const get = async (query: string) =>
+    pressListSchema.parse((await owner.client.get(`/api/presses?shop=${owner.shopId}${query}`).expect(200)).body)
   const names = async (query: string) => (await get(query)).presses.map((press) => press.name)
 
   beforeAll(async () => {
     owner = await openShop()
-    await makePressRow(owner.shopId, { name: 'Press 2', whatFor: 'straightening press', ratedTons: 12, status: 'cleared', clearedTons: 11.7, clearedUntil: '2027-03-15' })
+    await makePressRow(owner.shopId, {
+      name: 'Press 2',
+      whatFor: 'straightening press',
+      ratedTons: 12,
+      status: 'cleared',
+      clearedTons: 11.7,
+      clearedUntil: '2027-03-15',
+    })
     await makePressRow(owner.shopId, { name: 'Press 1', whatFor: 'forming press', ratedTons: 30, status: 'under test' })
     await makePressRow(owner.shopId, { name: 'Press 3', whatFor: 'bearing press', ratedTons: 25, status: 'withdrawn' })
   })
@@ -94,8 +102,18 @@ describe('the register of proof tests', () => {
     const swapped = { lead: staff.owner, witness: staff.lead }
     await makeTestRow(shopId, press, people, { number: 41, result: 'rejected', openedAt: new Date('2026-09-08T09:00:00Z') })
     await makeTestRow(shopId, press, people, { number: 43, result: 'accepted', openedAt: new Date('2026-09-14T15:20:00Z') })
-    await makeTestRow(shopId, other, swapped, { number: 42, status: 'to countersign', pressName: 'Press 5', openedAt: new Date('2026-09-12T23:30:00Z') })
-    await makeTestRow(shopId, other, people, { number: 44, status: 'under way', pressName: 'Press 5', openedAt: new Date('2026-09-21T08:00:00Z') })
+    await makeTestRow(shopId, other, swapped, {
+      number: 42,
+      status: 'to countersign',
+      pressName: 'Press 5',
+      openedAt: new Date('2026-09-12T23:30:00Z'),
+    })
+    await makeTestRow(shopId, other, people, {
+      number: 44,
+      status: 'under way',
+      pressName: 'Press 5',
+      openedAt: new Date('2026-09-21T08:00:00Z'),
+    })
   })
 
   it('runs newest first, and by number and press', async () => {
@@ -106,7 +124,13 @@ describe('the register of proof tests', () => {
 
   it('says how far a test climbed and where it was stopped', async () => {
     const [stopped] = (await get('&search=PT-0041')).proofTests
-    expect(stopped).toMatchObject({ result: 'rejected', reachedPercent: 75, stoppedAtPercent: 75, ratedLoad: { text: '12', unit: 'short-ton' }, sealedAt: null })
+    expect(stopped).toMatchObject({
+      result: 'rejected',
+      reachedPercent: 75,
+      stoppedAtPercent: 75,
+      ratedLoad: { text: '12', unit: 'short-ton' },
+      sealedAt: null,
+    })
   })
 
   it('finds number, press, lead and witness', async () => {
@@ -141,7 +165,12 @@ describe('the register of proof tests', () => {
   })
 
   it('opens one test by its id, and not to another shop', async () => {
-    const id = await makeTestRow(staff.owner.shopId, press, { lead: staff.lead, witness: staff.witness }, { number: 39, openedAt: new Date('2020-01-01') })
+    const id = await makeTestRow(
+      staff.owner.shopId,
+      press,
+      { lead: staff.lead, witness: staff.witness },
+      { number: 39, openedAt: new Date('2020-01-01') },
+    )
     const answer = testResponseSchema.parse((await staff.witness.client.get(`/api/proof-tests/${id}`).expect(200)).body)
     expect(answer).toMatchObject({ shopId: staff.owner.shopId, proofTest: { number: 'PT-0039', leadName: staff.lead.name } })
     const stranger = await openShop()

@@ -39,7 +39,9 @@ describe('today', () => {
     const staff = await openStaffedShop()
     const press = await changedPress(staff.owner, 'Press 4')
     const answer = await today(staff.lead)
-    expect(answer.needs).toEqual([{ kind: 'press-shut', pressId: press, pressName: 'Press 4', why: 'Hose changed.', since: '2026-09-18T10:00:00.000Z' }])
+    expect(answer.needs).toEqual([
+      { kind: 'press-shut', pressId: press, pressName: 'Press 4', why: 'Hose changed.', since: '2026-09-18T10:00:00.000Z' },
+    ])
     expect(answer.presses).toMatchObject([{ press: { name: 'Press 4', status: 'withdrawn' }, why: 'Hose changed.', test: null }])
     const crew = await today(staff.crew)
     expect(crew.needs).toEqual([])
@@ -52,7 +54,13 @@ describe('today', () => {
     const press = await makePressRow(shopId, { name: 'Press 5', status: 'under test' })
     const people = { lead: staff.lead, witness: staff.witness }
     const concludedAt = new Date('2026-09-12T14:00:00Z')
-    const test = await makeTestRow(shopId, press, people, { number: 42, status: 'to countersign', result: 'accepted', pressName: 'Press 5', concludedAt })
+    const test = await makeTestRow(shopId, press, people, {
+      number: 42,
+      status: 'to countersign',
+      result: 'accepted',
+      pressName: 'Press 5',
+      concludedAt,
+    })
     const witness = await today(staff.witness)
     expect(witness.needs).toEqual([
       {
@@ -73,7 +81,12 @@ describe('today', () => {
     const staff = await openStaffedShop()
     const { shopId } = staff.owner
     const people = { lead: staff.lead, witness: staff.witness }
-    for (const [number, status] of [[1, 'stopped'], [2, 'concluded'], [3, 'declined'], [4, 'signed']] as const) {
+    for (const [number, status] of [
+      [1, 'stopped'],
+      [2, 'concluded'],
+      [3, 'declined'],
+      [4, 'signed'],
+    ] as const) {
       const press = await makePressRow(shopId, { name: `Press ${number}` })
       await makeTestRow(shopId, press, people, { number, status })
     }
@@ -108,12 +121,18 @@ describe('today', () => {
     const press = await makePressRow(shopId, { name: 'Press 1', whatFor: 'forming press', status: 'under test' })
     const id = await makeTestRow(shopId, press, { lead: staff.lead, witness: staff.witness }, { status: 'under way', pressName: 'Press 1' })
     const { entries } = recordedTest()
-    const second = entries.findIndex((entry, index) => entry.kind === 'decided' && entries.slice(0, index).some((one) => one.kind === 'decided'))
+    const second = entries.findIndex(
+      (entry, index) => entry.kind === 'decided' && entries.slice(0, index).some((one) => one.kind === 'decided'),
+    )
     // The recorded people aren't of this shop's database: its lead wrote everything here.
     const own = entries.slice(0, second).map((entry) => ({ ...entry, ledgerId: id, authorId: staff.lead.userId }))
     await storeEntries(shopId, own)
     const [underWay] = (await today(staff.crew)).underWay
-    expect(underWay).toMatchObject({ whatFor: 'forming press', test: { pressName: 'Press 1', status: 'under way' }, climb: { levelPercent: 50, loaded: true } })
+    expect(underWay).toMatchObject({
+      whatFor: 'forming press',
+      test: { pressName: 'Press 1', status: 'under way' },
+      climb: { levelPercent: 50, loaded: true },
+    })
     expect(underWay?.climb.rungs.map((rung) => rung.state)).toEqual(['went-on', 'now', 'to-come', 'to-come'])
   })
 

@@ -18,7 +18,8 @@ describe('migrations', () => {
 })
 
 describe('ledger entries', () => {
-  const writes = /LedgerEntry\.(create|bulkCreate|update|upsert|destroy|truncate|build)\b|(INTO|UPDATE|DELETE FROM|REPLACE)\s+`?ledger_entries/i
+  const writes =
+    /LedgerEntry\.(create|bulkCreate|update|upsert|destroy|truncate|build)\b|(INTO|UPDATE|DELETE FROM|REPLACE)\s+`?ledger_entries/i
 
   it('are written by server/ledger only', () => {
     const writers = sources('server').filter((file) => writes.test(readFileSync(path.join(projectRoot, file), 'utf8')))

@@ -52,15 +52,33 @@ async function screensOf(page: Page): Promise<string[]> {
   const answerOf = async (address: string): Promise<unknown> => (await page.request.get(address)).json()
   const { shops } = sessionResponseSchema.parse(await answerOf('/api/session'))
   const shop = shops[0]?.id ?? ''
-  const idsOf = async (what: 'presses' | 'instruments' | 'protocols') =>
+  const idsOf = async (what: 'presses' | 'instruments' | 'protocols' | 'tooling') =>
     rowsSchema.parse(z.object({ [what]: z.unknown() }).parse(await answerOf(`/api/${what}?shop=${shop}`))[what]).map(({ id }) => id)
   const { proofTests } = testListSchema.parse(await answerOf(`/api/proof-tests?shop=${shop}`))
-  const [presses, instruments, protocols] = await Promise.all([idsOf('presses'), idsOf('instruments'), idsOf('protocols')])
+  const [presses, instruments, protocols, tooling] = await Promise.all([
+    idsOf('presses'),
+    idsOf('instruments'),
+    idsOf('protocols'),
+    idsOf('tooling'),
+  ])
   const underWay = proofTests.filter(({ status }) => status === 'under way')
   return [
-    ...['/', '/presses', '/instruments', '/protocols', '/people', '/proof-tests', '/more', '/account', '/settings'],
-    ...['/presses/new', '/instruments/new', '/protocols/new', '/proof-tests/new'],
-    ...presses.map((id) => `/presses/${id}`),
+    ...[
+      '/',
+      '/presses',
+      '/instruments',
+      '/protocols',
+      '/people',
+      '/proof-tests',
+      '/more',
+      '/account',
+      '/settings',
+      '/tooling',
+      '/calendar',
+    ],
+    ...['/presses/new', '/instruments/new', '/tooling/new', '/protocols/new', '/proof-tests/new'],
+    ...presses.flatMap((id) => [`/presses/${id}`, `/presses/${id}/tag`]),
+    ...tooling.slice(0, 1).map((id) => `/tooling/${id}`),
     ...presses.slice(0, 1).map((id) => `/presses/${id}/edit`),
     ...instruments.slice(0, 1).map((id) => `/instruments/${id}`),
     ...protocols.map((id) => `/protocols/${id}`),

@@ -14,7 +14,13 @@ beforeAll(async () => {
 afterAll(() => libreOffice.close())
 
 async function workbookOf(recorded: RecordedTest): Promise<Workbook> {
-  const source = { id: recorded.id, stored: storedEntries(recorded.entries), people: recorded.people, seals: [], writtenAt: '2026-09-21T08:00:00.000Z' }
+  const source = {
+    id: recorded.id,
+    stored: storedEntries(recorded.entries),
+    people: recorded.people,
+    seals: [],
+    writtenAt: '2026-09-21T08:00:00.000Z',
+  }
   return workbookFrom(await recordWorkbook(source))
 }
 

@@ -4,7 +4,9 @@ import type { Migration } from './migration'
 export const instrumentDue: Migration = {
   name: '004-instrument-due',
   async up(database) {
-    await database.query('ALTER TABLE instruments ADD COLUMN IF NOT EXISTS due_on DATE NULL, ADD KEY IF NOT EXISTS instruments_due (shop_id, due_on, id)')
+    await database.query(
+      'ALTER TABLE instruments ADD COLUMN IF NOT EXISTS due_on DATE NULL, ADD KEY IF NOT EXISTS instruments_due (shop_id, due_on, id)',
+    )
     await database.query(
       `UPDATE instruments SET due_on = (
          SELECT due_on FROM calibrations

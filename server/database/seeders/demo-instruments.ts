@@ -149,7 +149,13 @@ const CALIBRATIONS: readonly Compared[] = [
 const COMPARED_WITH = { gauge: 'dead-weight tester DT-2', 'load-cell': 'proving ring PR-7', indicator: 'gauge blocks, set B' } as const
 
 /** Enters the comparisons made from one day to another, counted back from today. */
-export async function enterCalibrations(desk: Desk, { main, people }: DemoShops, ids: DemoInstruments, from: number, to: number): Promise<void> {
+export async function enterCalibrations(
+  desk: Desk,
+  { main, people }: DemoShops,
+  ids: DemoInstruments,
+  from: number,
+  to: number,
+): Promise<void> {
   for (const { instrument, daysAgo, lasts = 365, result = 'in tolerance', uncertainty = null, filed = false } of CALIBRATIONS) {
     if (daysAgo > from || daysAgo <= to) continue
     const at = daysBefore(desk, daysAgo, '19:15')

@@ -59,7 +59,12 @@ export async function foundDemoShops(desk: Desk, passwordHash: string): Promise<
   const owner = await accountFor(founding, PEOPLE.owner, passwordHash)
   const main = await foundShop(founding, owner.id, { shopName: SHOPS.main, forceUnit: 'short-ton', pressureUnit: 'psi', lengthUnit: 'mm' })
   const later = { transaction, now: new Date(daysBefore(desk, 88, '15:40')) }
-  const second = await foundShop(later, owner.id, { shopName: SHOPS.second, forceUnit: 'metric-ton-force', pressureUnit: 'bar', lengthUnit: 'mm' })
+  const second = await foundShop(later, owner.id, {
+    shopName: SHOPS.second,
+    forceUnit: 'metric-ton-force',
+    pressureUnit: 'bar',
+    lengthUnit: 'mm',
+  })
   const people = { owner: owner.id } as Record<PersonKey, string>
   const ids = { main, second }
   const dayOfAdding = { main: 419, second: 87 }
@@ -77,7 +82,11 @@ export async function foundDemoShops(desk: Desk, passwordHash: string): Promise<
 
 /** Those of the demo who can still sign in with the printed password: nothing is said that no longer holds. */
 export async function standingSignIns({ config }: Pick<AppContext, 'config'>): Promise<DemoSignIn[]> {
-  const users = await User.findAll({ where: { email: keys.map((key) => PEOPLE[key].email) }, attributes: ['email', 'passwordHash'], raw: true })
+  const users = await User.findAll({
+    where: { email: keys.map((key) => PEOPLE[key].email) },
+    attributes: ['email', 'passwordHash'],
+    raw: true,
+  })
   const open = new Map<string, boolean>()
   for (const hash of new Set(users.map((user) => user.passwordHash))) {
     open.set(hash, await comparePassword(DEMO_PASSWORD, hash, config.bcryptCost))
@@ -86,7 +95,9 @@ export async function standingSignIns({ config }: Pick<AppContext, 'config'>): P
     const person = PEOPLE[key]
     const hash = users.find((user) => user.email === person.email)?.passwordHash
     if (hash === undefined || open.get(hash) !== true) return []
-    const role = rolesOf(person).map((one) => `${one.role} of ${SHOPS[one.shop]}`).join(', ')
+    const role = rolesOf(person)
+      .map((one) => `${one.role} of ${SHOPS[one.shop]}`)
+      .join(', ')
     return [{ name: person.name, email: person.email, password: DEMO_PASSWORD, role }]
   })
 }

@@ -93,17 +93,15 @@ function built(press: Built): { description: PressDescription; joints: Joint[]; 
   const frame = startingFrame(press.kind, () => newId())
   const { makeUp, madeOn, strengths } = press
   const made = makeUp === 'open' ? null : madeOn
-  const joints = frame.joints.map(
-    (joint): Joint => ({
-      ...joint,
-      makeUp,
-      detail: DETAILS[joint.kind],
-      madeBy: joint.kind === 'weld' && made !== null ? 'Noor Hassett' : '',
-      filler: joint.kind === 'weld' ? 'E7018, 3.2 mm' : '',
-      madeOn: made,
-      strength: strengths?.joint(joint) ?? null,
-    }),
-  )
+  const joints = frame.joints.map((joint): Joint => ({
+    ...joint,
+    makeUp,
+    detail: DETAILS[joint.kind],
+    madeBy: joint.kind === 'weld' && made !== null ? 'Noor Hassett' : '',
+    filler: joint.kind === 'weld' ? 'E7018, 3.2 mm' : '',
+    madeOn: made,
+    strength: strengths?.joint(joint) ?? null,
+  }))
   return {
     description: {
       name: press.name,
@@ -241,8 +239,17 @@ export async function buildMule(desk: Desk, { main, people }: DemoShops): Promis
   }
   await work('Head beam to left upright', 24, '15:10')
   await work('Head beam to right upright', 24, '17:35')
-  for (const [name, clock] of [['Head beam to left upright', '13:20'], ['Head beam to right upright', '13:45']] as const) {
-    const payload = { jointId: book.joint(name).id, method: 'dye penetrant' as const, result: 'accepted' as const, remark: 'No indication.', test: null }
+  for (const [name, clock] of [
+    ['Head beam to left upright', '13:20'],
+    ['Head beam to right upright', '13:45'],
+  ] as const) {
+    const payload = {
+      jointId: book.joint(name).id,
+      method: 'dye penetrant' as const,
+      result: 'accepted' as const,
+      remark: 'No indication.',
+      test: null,
+    }
     await book.write({ kind: 'joint-examined', payload }, by, daysBefore(desk, 22, clock))
   }
   await work('Ram seat to head beam', 15, '16:05')
@@ -273,9 +280,18 @@ export async function buildSecondShopsPress(desk: Desk, { second, people }: Demo
     madeOn: null,
   })
   const book = await PressBook.register(desk, second, people.owner, daysBefore(desk, 13, '16:45'), press)
-  for (const [name, clock] of [['Head beam to left rod', '14:10'], ['Head beam to right rod', '14:30']] as const) {
+  for (const [name, clock] of [
+    ['Head beam to left rod', '14:10'],
+    ['Head beam to right rod', '14:30'],
+  ] as const) {
     const at = daysBefore(desk, 6, clock)
-    const payload = { jointId: book.joint(name).id, makeUp: 'finished' as const, how: 'M24, locked', workedAt: new Date(at).toISOString(), test: null }
+    const payload = {
+      jointId: book.joint(name).id,
+      makeUp: 'finished' as const,
+      how: 'M24, locked',
+      workedAt: new Date(at).toISOString(),
+      test: null,
+    }
     await book.write({ kind: 'joint-worked', payload }, people.owner, at)
   }
   return book

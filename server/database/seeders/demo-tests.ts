@@ -181,7 +181,9 @@ export async function testHeron(desk: Desk, registers: DemoRegisters, press: Pre
     ],
     net: null,
     legs: central('fixed bed'),
-    frames: [{ points: [behaves(1, 0.0218, 0, 0.015), behaves(0.5, 0.0079)], givesWay: { above: 47, times: 1.65 }, leak: 0.002, creep: 0.001 }],
+    frames: [
+      { points: [behaves(1, 0.0218, 0, 0.015), behaves(0.5, 0.0079)], givesWay: { above: 47, times: 1.65 }, leak: 0.002, creep: 0.001 },
+    ],
     reliefSet: psi('7200'),
     strokePercent: '50',
     temperature: '18',
@@ -204,7 +206,9 @@ export async function testOx(desk: Desk, registers: DemoRegisters, press: PressB
     ...bedPoints(press, dials(registers.instruments)),
     legs: central('4'),
     uses: ['bearingPlate', 'steppedNose'],
-    frames: [{ points: [behaves(1, 0.0071, 0.034, 0.02), behaves(0.5, 0.0024, 0.006), behaves(0.5, 0.0022, 0.005)], leak: 0.002, creep: 0.001 }],
+    frames: [
+      { points: [behaves(1, 0.0071, 0.034, 0.02), behaves(0.5, 0.0024, 0.006), behaves(0.5, 0.0022, 0.005)], leak: 0.002, creep: 0.001 },
+    ],
     reliefSet: psi('8400'),
     strokePercent: '40',
     temperature: '19',

@@ -2,7 +2,16 @@ import { v7 as newId } from 'uuid'
 import { openTestRequestSchema, type OpenTestRequest } from '#shared/api/proof-tests'
 import { surprising } from '#shared/proof-test/rules-under-load'
 import { snapshotsOf } from '#shared/proof-test/decide'
-import { PROOF_TEST_VERSION, SET_UP_ITEMS, type Conclusion, type Opened, type Position, type ProofTestDraft, type ProofTestPayload, type Reading } from '#shared/proof-test/entries'
+import {
+  PROOF_TEST_VERSION,
+  SET_UP_ITEMS,
+  type Conclusion,
+  type Opened,
+  type Position,
+  type ProofTestDraft,
+  type ProofTestPayload,
+  type Reading,
+} from '#shared/proof-test/entries'
 import { CORE_VERSION, evaluateTest, freezeEvaluation } from '#shared/proof-test/evaluate'
 import { forceOf, leadInstrument, stageTarget } from '#shared/proof-test/force'
 import type { JointState, ProofTestState } from '#shared/proof-test/state'
@@ -40,7 +49,10 @@ export interface RunScript {
   leadId: string
   /** When the test is opened, in ms. */
   at: number
-  request: Omit<OpenTestRequest, 'id' | 'entryId' | 'deviceId' | 'bootId' | 'monotonicMs' | 'observedAt' | 'repeatsId' | 'instrumentOverride'>
+  request: Omit<
+    OpenTestRequest,
+    'id' | 'entryId' | 'deviceId' | 'bootId' | 'monotonicMs' | 'observedAt' | 'repeatsId' | 'instrumentOverride'
+  >
   repeatsId?: string
   /** One for each leg. */
   frames: readonly FrameBehaviour[]

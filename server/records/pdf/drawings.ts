@@ -4,8 +4,7 @@ import { recordLine } from '#shared/chart/record-line'
 import { drawnPress, holeInUse, looseParts } from '#shared/drawing/drawn-press'
 import { elevationDrawing, elevationLabel } from '#shared/drawing/elevation'
 import { PAPER_INKS } from '#shared/drawing/inks'
-import type { JointMarkState } from '#shared/drawing/balloon-items'
-import type { JointState } from '#shared/proof-test/state'
+import { jointMark } from '#shared/proof-test/walked'
 import type { RecordOfTest } from '../record'
 import { paintDrawing } from './painter'
 import type { Paper } from './paper'
@@ -50,14 +49,6 @@ export function paintLeg(
   return drawing.height * scale
 }
 
-/** How a joint stands at the end of a test: by its last examination in it. */
-function markOf({ makeUp, before, after }: JointState): JointMarkState {
-  const last = after ?? before
-  if (last?.result === 'rejected') return 'rejected'
-  if (makeUp !== 'finished') return makeUp
-  return last?.result ?? 'finished'
-}
-
 const ELEVATION = { width: 620, height: 560 }
 
 /** Height of the elevation when it is `width` pt wide. */
@@ -69,7 +60,8 @@ export function paintElevation(paper: Paper, { opened, state }: RecordOfTest, pl
     id: one.joint.id,
     number: one.joint.number,
     name: one.joint.name,
-    state: markOf(one),
+    // The last that was found of it: after load where it was looked at again.
+    state: jointMark(one, one.after ? 'after load' : 'before load'),
     place: one.joint.place,
   }))
   const points = opened.points.map(({ letter, place: at }) => ({ letter, place: at }))

@@ -10,7 +10,8 @@ const ROW_HEIGHT = 20
 /** Deflection against load, one picture a leg: solid the first climb, dotted its repeat. */
 export function chartSheet(workbook: Workbook, record: RecordOfTest): void {
   const { opened, evaluation, state } = record
-  const note = 'Bars are U (k = 2), at least as wide as the line. Solid: first climb. Dotted: repeat climb. Ring: what stayed after release. Letter: corrected, see the sheet Corrections.'
+  const note =
+    'Bars are U (k = 2), at least as wide as the line. Solid: first climb. Dotted: repeat climb. Ring: what stayed after release. Letter: corrected, see the sheet Corrections.'
   const sheet = addSheet(workbook, CHART_SHEET, { title: 'Deflection against load', note, record: record.title }, [
     { header: 'Figures are on the sheet Stages', width: 100 },
   ])

@@ -39,7 +39,12 @@ const pointColumns: Column[] = [
 ]
 
 /** How a calibration stood on the day of the test, in words. */
-export const CALIBRATION_STATES = { 'in-date': 'in date', 'out-of-date': 'out of date', 'out-of-tolerance': 'out of tolerance', never: 'never calibrated' } as const
+export const CALIBRATION_STATES = {
+  'in-date': 'in date',
+  'out-of-date': 'out of date',
+  'out-of-tolerance': 'out of tolerance',
+  never: 'never calibrated',
+} as const
 
 /** The named cell that turns a point's reading into the direction of loading. */
 export function pointDirectionName(index: number): string {
@@ -59,12 +64,36 @@ export function accuracyText(accuracy: GaugeAccuracy): string {
 export function detailCells({ details }: FrozenInstrument): Content[] {
   switch (details.kind) {
     case 'gauge':
-      return [`gauge, ${details.style}`, details.description, asTyped(details.fullScale), unitText(details.fullScale), asTyped(details.increment), unitText(details.increment), accuracyText(details.accuracy)]
+      return [
+        `gauge, ${details.style}`,
+        details.description,
+        asTyped(details.fullScale),
+        unitText(details.fullScale),
+        asTyped(details.increment),
+        unitText(details.increment),
+        accuracyText(details.accuracy),
+      ]
     case 'load-cell':
-      return ['load cell', details.description, asTyped(details.fullScale), unitText(details.fullScale), asTyped(details.increment), unitText(details.increment), `${details.errorPercentOfSpan} % of span`]
+      return [
+        'load cell',
+        details.description,
+        asTyped(details.fullScale),
+        unitText(details.fullScale),
+        asTyped(details.increment),
+        unitText(details.increment),
+        `${details.errorPercentOfSpan} % of span`,
+      ]
     case 'indicator': {
       const limit = details.errorLimit ? `± ${details.errorLimit.text} ${unitLabel(details.errorLimit.unit)}` : 'one increment'
-      return [`indicator, ${details.style}`, details.description, asTyped(details.range), unitText(details.range), asTyped(details.increment), unitText(details.increment), limit]
+      return [
+        `indicator, ${details.style}`,
+        details.description,
+        asTyped(details.range),
+        unitText(details.range),
+        asTyped(details.increment),
+        unitText(details.increment),
+        limit,
+      ]
     }
   }
 }
@@ -109,10 +138,21 @@ function pointsTable(sheet: ReturnType<typeof addSheet>, top: number, record: Re
     const details = instrument?.details.kind === 'indicator' ? instrument.details : null
     if (details && leading.includes(point)) rows.push(row)
     const increment: Content = details
-      ? { formula: `${details.increment.text.replace(',', '.')}*${factorName(details.increment.unit)}`, result: toSI(details.increment), format: '0.000000' }
+      ? {
+          formula: `${details.increment.text.replace(',', '.')}*${factorName(details.increment.unit)}`,
+          result: toSI(details.increment),
+          format: '0.000000',
+        }
       : null
     const part = !lead ? '' : point === lead.plus ? 'plus' : lead.minus.includes(point) ? 'less the mean' : ''
-    putRow(sheet, row, pointColumns, [point.letter, point.label, instrument?.details.code ?? '', { number: point.risesWithLoad ? 1 : -1, format: '0' }, part, increment])
+    putRow(sheet, row, pointColumns, [
+      point.letter,
+      point.label,
+      instrument?.details.code ?? '',
+      { number: point.risesWithLoad ? 1 : -1, format: '0' },
+      part,
+      increment,
+    ])
     sheet.getCell(row, 4).names = [pointDirectionName(index)]
   })
   const last = top + 2 + opened.points.length
@@ -122,10 +162,16 @@ function pointsTable(sheet: ReturnType<typeof addSheet>, top: number, record: Re
     null,
     null,
     null,
-    { formula: rows.length > 0 ? `MAX(${rows.map((row) => address(6, row)).join(',')})` : '0', result: leadFigureIncrement(opened), format: '0.000000' },
+    {
+      formula: rows.length > 0 ? `MAX(${rows.map((row) => address(6, row)).join(',')})` : '0',
+      result: leadFigureIncrement(opened),
+      format: '0.000000',
+    },
   ])
   sheet.getCell(last, 6).names = ['lead_increment']
   if (opened.notMeasured.length > 0) {
-    sheet.getCell(last + 1, 1).value = { richText: [{ text: `Not measured: ${opened.notMeasured.join(', ')}`, font: { name: 'Arial', size: 10, bold: true } }] }
+    sheet.getCell(last + 1, 1).value = {
+      richText: [{ text: `Not measured: ${opened.notMeasured.join(', ')}`, font: { name: 'Arial', size: 10, bold: true } }],
+    }
   }
 }

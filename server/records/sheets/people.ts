@@ -33,7 +33,9 @@ export function peopleSheet(workbook: Workbook, record: RecordOfTest): void {
     ['Pump hand', pumpHand],
     ['Witness, who was there', witness],
   ] as const
-  parts.forEach(([part, person], index) => putRow(sheet, FIRST_ROW + index, columns, [part, { words: person.name, bold: true }, person.relation]))
+  parts.forEach(([part, person], index) =>
+    putRow(sheet, FIRST_ROW + index, columns, [part, { words: person.name, bold: true }, person.relation]),
+  )
 
   let row = FIRST_ROW + parts.length + 1
   heading(sheet, row, 'Signatures')
@@ -57,11 +59,24 @@ export function peopleSheet(workbook: Workbook, record: RecordOfTest): void {
     row += 1
   }
   for (const declined of state.declined) {
-    putRow(sheet, row, signatureColumns, ['Declined', { words: declined.printedName, bold: true }, declined.why, momentText(declined.at), 'signed with password'])
+    putRow(sheet, row, signatureColumns, [
+      'Declined',
+      { words: declined.printedName, bold: true },
+      declined.why,
+      momentText(declined.at),
+      'signed with password',
+    ])
     row += 1
   }
   for (const seal of record.seals) {
-    putRow(sheet, row, signatureColumns, [`Seal over entry ${seal.seq}`, `key ${seal.kid}`, 'Ed25519 of this server over the hash beside it', momentText(seal.sealedAt), '', seal.headHash])
+    putRow(sheet, row, signatureColumns, [
+      `Seal over entry ${seal.seq}`,
+      `key ${seal.kid}`,
+      'Ed25519 of this server over the hash beside it',
+      momentText(seal.sealedAt),
+      '',
+      seal.headHash,
+    ])
     putRow(sheet, row + 1, signatureColumns, ['', '', 'signature of the seal', '', '', seal.signature])
     row += 2
   }

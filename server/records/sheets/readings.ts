@@ -35,7 +35,12 @@ const BEFORE = 7
 function sourcesOf(record: RecordOfTest): Source[] {
   const { opened } = record
   return [
-    ...forceInstruments(opened).map(({ id, details }) => ({ id, name: details.code, si: details.kind === 'gauge' ? 'Pa' : 'N', point: false })),
+    ...forceInstruments(opened).map(({ id, details }) => ({
+      id,
+      name: details.code,
+      si: details.kind === 'gauge' ? 'Pa' : 'N',
+      point: false,
+    })),
     ...opened.points.map(({ id, label }) => ({ id, name: label, si: 'm', point: true })),
   ]
 }
@@ -127,7 +132,11 @@ function derivedCells(record: RecordOfTest, layout: Layout, row: RecordRow, shee
     if (!figure || datumRow === null) return null
     const column = layout.si.get(point.id)
     const difference = `(${place(column, sheetRow)}-${place(column, datumRow)})`
-    return { formula: `${difference}*${pointDirectionName(index)}/${factorName(unit)}`, result: toUnit(figure.deflection, unit), format: digits }
+    return {
+      formula: `${difference}*${pointDirectionName(index)}/${factorName(unit)}`,
+      result: toUnit(figure.deflection, unit),
+      format: digits,
+    }
   })
   const points = leadPoints(opened)
   const leadId = opened.net && figures?.deflections[0]?.id === NET ? NET : null
@@ -142,7 +151,9 @@ function derivedCells(record: RecordOfTest, layout: Layout, row: RecordRow, shee
   const force = figures?.force ?? null
   const pressures = forceInstruments(opened).map(({ id }) => place(layout.si.get(id), sheetRow))
   const pressure: Content =
-    force?.pressure === null || !force ? null : { formula: pressures.length > 1 ? `MAX(${pressures.join(',')})` : (pressures[0] ?? ''), result: force.pressure, format: '0' }
+    force?.pressure === null || !force
+      ? null
+      : { formula: pressures.length > 1 ? `MAX(${pressures.join(',')})` : (pressures[0] ?? ''), result: force.pressure, format: '0' }
   return [
     ...deflections,
     net,
@@ -185,7 +196,8 @@ export function placesOfReadings(record: RecordOfTest): ReadingsPlaces {
 export function readingsSheet(workbook: Workbook, record: RecordOfTest): void {
   const layout = layOut(record)
   const rows = recordRows(record)
-  const note = 'A correction stands beside what was typed first; formulas take it where there is one. Deflection is measured from the climb’s last datum, in the direction of loading.'
+  const note =
+    'A correction stands beside what was typed first; formulas take it where there is one. Deflection is measured from the climb’s last datum, in the direction of loading.'
   const sheet = addSheet(workbook, READINGS_SHEET, { title: 'Readings', note, record: record.title, paper: 'A3' }, layout.columns)
   sheet.views = [{ state: 'frozen', xSplit: 4, ySplit: FIRST_ROW - 1, showGridLines: false }]
   const rowOf = sheetRows(rows)

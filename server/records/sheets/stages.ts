@@ -110,7 +110,11 @@ function gaugeCell({ record, readings }: Drawing, figures: RowFigures | null): C
   const typed = figures.row.readings.find((reading) => reading.sourceId === id)
   const from = readings.at(readings.si.get(id) ?? 0, figures.row.entryId)
   if (!typed || from === null) return null
-  return { formula: `${from}/${factorName(target.unit)}`, result: toUnit(toSI(typed), target.unit), format: decimals(decimalsOfText(target.text)) }
+  return {
+    formula: `${from}/${factorName(target.unit)}`,
+    result: toUnit(toSI(typed), target.unit),
+    format: decimals(decimalsOfText(target.text)),
+  }
 }
 
 const decimalsOfText = (text: string): number => text.split('.')[1]?.length ?? 0
@@ -136,10 +140,18 @@ function stiffnessCells({ record, layout }: Drawing, row: number, stage: StageEv
   const finite = Number.isFinite(step.stiffness)
   const stiffest = bestBefore(record, stage)
   return [
-    { formula: `IF(${travel}>0,(${rise})/(${travel}),IF(${rise}>0,"stuck",""))`, result: finite ? step.stiffness / 1e6 : step.stuck ? 'stuck' : '', format: '0.0' },
+    {
+      formula: `IF(${travel}>0,(${rise})/(${travel}),IF(${rise}>0,"stuck",""))`,
+      result: finite ? step.stiffness / 1e6 : step.stuck ? 'stuck' : '',
+      format: '0.0',
+    },
     reference === null
       ? null
-      : { formula: `IF(COUNTIF(${reference},">0")>0,MAX(${reference}),"")`, result: stiffest === null ? '' : stiffest / 1e6, format: '0.0' },
+      : {
+          formula: `IF(COUNTIF(${reference},">0")>0,MAX(${reference}),"")`,
+          result: stiffest === null ? '' : stiffest / 1e6,
+          format: '0.0',
+        },
     reference === null
       ? { words: 'first step', colour: colours.graphite }
       : { formula: `IF(AND(ISNUMBER(${own}),ISNUMBER(${best})),1-${own}/${best},"")`, result: step.softening ?? '', format: '0.0%' },
@@ -172,7 +184,9 @@ function holdCells({ record, layout, readings }: Drawing, row: number, stage: St
   }
   const lost = stretches.map(({ first, last }) => `MAX(0,${first}-${last})`).join('+')
   const base = stretches[0]?.first ?? ''
-  const held = rows.flatMap(({ row: read, force }) => (force ? [{ pressure: force.pressure ?? force.force, toppedUp: (read as StageRow).toppedUp }] : []))
+  const held = rows.flatMap(({ row: read, force }) =>
+    force ? [{ pressure: force.pressure ?? force.force, toppedUp: (read as StageRow).toppedUp }] : [],
+  )
   const start = holdStart(stage)
   const result = held[0] && held[0].pressure > 0 ? pressureLoss(held) : null
   return [
@@ -204,7 +218,8 @@ function creepContent({ record, readings, own, start, end, stage }: CreepInput):
   const forceFrom = readings.at(readings.force, start.row.entryId)
   const forceTo = readings.at(readings.force, end.row.entryId)
   if (!from || !to || !forceFrom || !forceTo || !start.lead || !end.lead || !start.force || !end.force) return null
-  const stiffness = stage.step && Number.isFinite(stage.step.stiffness) && stage.step.stiffness > 0 ? stage.step.stiffness : Number.POSITIVE_INFINITY
+  const stiffness =
+    stage.step && Number.isFinite(stage.step.stiffness) && stage.step.stiffness > 0 ? stage.step.stiffness : Number.POSITIVE_INFINITY
   const result = creep({
     deflectionStart: start.lead.deflection,
     deflectionEnd: end.lead.deflection,
@@ -274,7 +289,12 @@ function setRow(drawing: Drawing, row: number, climb: ClimbEvaluation, places: C
     null,
     ...figureCells(drawing, row, set.row),
     ...blanks,
-    setLimitContent({ record, criterion, increment: set.row.lead?.increment ?? 0, full: places.full === null ? null : address(layout.place.net, places.full) }),
+    setLimitContent({
+      record,
+      criterion,
+      increment: set.row.lead?.increment ?? 0,
+      full: places.full === null ? null : address(layout.place.net, places.full),
+    }),
     verdictContent(criterion),
     null,
     correctedContent(record, [set.row]),
@@ -316,7 +336,8 @@ function climbRows(drawing: Drawing, top: number, climb: ClimbEvaluation): numbe
 /** Stage by stage what was read and what it came to. */
 export function stagesSheet(workbook: Workbook, record: RecordOfTest, readings: ReadingsPlaces): void {
   const layout = layOut(record)
-  const note = 'Formulas run from the sheet Readings and the bore on the sheet Train. U and verdicts are the program’s, computed with the same readings.'
+  const note =
+    'Formulas run from the sheet Readings and the bore on the sheet Train. U and verdicts are the program’s, computed with the same readings.'
   const sheet = addSheet(workbook, STAGES_SHEET, { title: 'Stages', note, record: record.title, paper: 'A3' }, layout.columns)
   sheet.views = [{ state: 'frozen', xSplit: 3, ySplit: FIRST_ROW - 1, showGridLines: false }]
   const drawing = { sheet, record, layout, readings }

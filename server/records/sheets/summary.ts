@@ -1,5 +1,15 @@
 import type { Workbook, Worksheet } from 'exceljs'
-import { cautionsOf, clearanceArithmetic, clearedLoad, criteriaHeading, energyText, headlineOf, inPrint, placesTested, staticLoadsText } from '#shared/proof-test/record'
+import {
+  cautionsOf,
+  clearanceArithmetic,
+  clearedLoad,
+  criteriaHeading,
+  energyText,
+  headlineOf,
+  inPrint,
+  placesTested,
+  staticLoadsText,
+} from '#shared/proof-test/record'
 import { momentText, type RecordOfTest } from '../record'
 import { FIRST_ROW, addSheet, colours, header, heading, put, putRow, type Column, type Content } from '../sheet'
 import { verdictContent } from './criteria'
@@ -26,7 +36,14 @@ function facts(record: RecordOfTest): [string, Content][] {
   const cleared = clearedLoad(state, evaluation)
   const { stopped, conclusion } = state
   return [
-    ['Result', { words: headlineOf(state, evaluation), bold: true, colour: conclusion?.conclusion === 'accepted' ? colours.sound : stopped ? colours.stop : colours.ink }],
+    [
+      'Result',
+      {
+        words: headlineOf(state, evaluation),
+        bold: true,
+        colour: conclusion?.conclusion === 'accepted' ? colours.sound : stopped ? colours.stop : colours.ink,
+      },
+    ],
     ['Shop', opened.shop.name],
     ['Press', `${opened.press.name}${opened.press.whatFor ? `, ${opened.press.whatFor}` : ''}; rated ${inPrint(opened.press.ratedLoad)}`],
     ['Protocol', `${opened.protocol.name}, version ${opened.protocol.version}`],
@@ -39,15 +56,34 @@ function facts(record: RecordOfTest): [string, Content][] {
           ['Arithmetic of the load', clearanceArithmetic(opened, evaluation) ?? ''],
         ] satisfies [string, Content][])
       : []),
-    ...(stopped ? ([['Stopped', { words: `${momentText(stopped.at)} by ${record.nameOf(stopped.by)}: ${stopped.why}`, colour: colours.stop }]] satisfies [string, Content][]) : []),
+    ...(stopped
+      ? ([
+          ['Stopped', { words: `${momentText(stopped.at)} by ${record.nameOf(stopped.by)}: ${stopped.why}`, colour: colours.stop }],
+        ] satisfies [string, Content][])
+      : []),
     ['Opened', state.openedAt ? momentText(state.openedAt) : ''],
-    ['Concluded', conclusion ? `${momentText(conclusion.at)}: ${conclusion.conclusion}${conclusion.why ? `. ${conclusion.why}` : ''}` : 'not concluded'],
+    [
+      'Concluded',
+      conclusion ? `${momentText(conclusion.at)}: ${conclusion.conclusion}${conclusion.why ? `. ${conclusion.why}` : ''}` : 'not concluded',
+    ],
     ...(opened.repeats ? ([['Repeats', opened.repeats.number]] satisfies [string, Content][]) : []),
     ['Not measured', opened.notMeasured.length > 0 ? opened.notMeasured.join(', ') : 'every member has a point'],
     ...(evaluation.energy ? ([['Energy', energyText(evaluation.energy)]] satisfies [string, Content][]) : []),
-    ['Ledger', record.chain.whole ? `Chain whole over ${record.chain.entries} entries, checked ${momentText(record.writtenAt)}` : { words: `BROKEN at entry ${record.chain.brokenAt}: ${record.chain.why}`, colour: colours.stop, bold: true }],
+    [
+      'Ledger',
+      record.chain.whole
+        ? `Chain whole over ${record.chain.entries} entries, checked ${momentText(record.writtenAt)}`
+        : { words: `BROKEN at entry ${record.chain.brokenAt}: ${record.chain.why}`, colour: colours.stop, bold: true },
+    ],
     ['Last hash', state.headHash],
-    ...(state.lateFacts > 0 ? ([['After the seal', { words: `${state.lateFacts} entries arrived after the countersignature. Read the ledger.`, colour: colours.stop }]] satisfies [string, Content][]) : []),
+    ...(state.lateFacts > 0
+      ? ([
+          [
+            'After the seal',
+            { words: `${state.lateFacts} entries arrived after the countersignature. Read the ledger.`, colour: colours.stop },
+          ],
+        ] satisfies [string, Content][])
+      : []),
   ]
 }
 
@@ -87,9 +123,26 @@ export function summarySheet(workbook: Workbook, record: RecordOfTest): void {
     'Today’s arithmetic differs from the evaluation frozen at the conclusion',
     record.differences.map(({ what, frozen, today }) => `${what}: frozen ${frozen}; today ${today}`),
   )
-  row = lines(sheet, row, 'Irregular entries', state.irregular.map(({ seq, kind, rules }) => `Entry ${seq}, ${kind}: against ${rules.join(', ')}`))
-  row = lines(sheet, row, 'Reasons given', state.reasons.map(({ seq, rule, reason, by }) => `Entry ${seq}, ${rule}: ${reason} (${record.nameOf(by)})`))
-  row = lines(sheet, row, 'Observations', state.observations.map(({ seq, what, note: said, by, at }) => `Entry ${seq}, ${what}: ${said} (${record.nameOf(by)}, ${momentText(at)})`))
+  row = lines(
+    sheet,
+    row,
+    'Irregular entries',
+    state.irregular.map(({ seq, kind, rules }) => `Entry ${seq}, ${kind}: against ${rules.join(', ')}`),
+  )
+  row = lines(
+    sheet,
+    row,
+    'Reasons given',
+    state.reasons.map(({ seq, rule, reason, by }) => `Entry ${seq}, ${rule}: ${reason} (${record.nameOf(by)})`),
+  )
+  row = lines(
+    sheet,
+    row,
+    'Observations',
+    state.observations.map(
+      ({ seq, what, note: said, by, at }) => `Entry ${seq}, ${what}: ${said} (${record.nameOf(by)}, ${momentText(at)})`,
+    ),
+  )
   lines(sheet, row, 'Cautions', cautionsOf(state, evaluation))
 }
 

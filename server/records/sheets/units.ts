@@ -1,5 +1,15 @@
 import type { Workbook } from 'exceljs'
-import { AREA_UNITS, FORCE_UNITS, LENGTH_UNITS, MASS_UNITS, PRESSURE_UNITS, STANDARD_GRAVITY, toSI, unitLabel, type Unit } from '#shared/units'
+import {
+  AREA_UNITS,
+  FORCE_UNITS,
+  LENGTH_UNITS,
+  MASS_UNITS,
+  PRESSURE_UNITS,
+  STANDARD_GRAVITY,
+  toSI,
+  unitLabel,
+  type Unit,
+} from '#shared/units'
 import type { RecordOfTest } from '../record'
 import { FIRST_ROW, addSheet, putRow, type Column } from '../sheet'
 

@@ -65,19 +65,25 @@ interface FaceProps {
 
 function Face({ at, fullScale, steps, limit }: FaceProps): ReactElement {
   const free = (value: number): boolean => limit === null || value < limit
-  const has = (step: number | null, value: number): boolean =>
-    step !== null && Math.abs(value / step - Math.round(value / step)) < 1e-6
+  const has = (step: number | null, value: number): boolean => step !== null && Math.abs(value / step - Math.round(value / step)) < 1e-6
   const majors = multiples(steps.major, 0, fullScale)
   const minors = multiples(steps.minor, 0, fullScale).filter((value) => !has(steps.major, value) && free(value))
   const mediums = minors.filter((value) => has(steps.medium, value))
-  const rays = (values: number[], inner: number, outer: number): string =>
-    values.map((value) => ray(at(value), inner, outer)).join('')
+  const rays = (values: number[], inner: number, outer: number): string => values.map((value) => ray(at(value), inner, outer)).join('')
   return (
     <g fill="none" stroke="var(--scribe)">
       <path d={rays(minors, 84, 90)} strokeWidth={1} opacity={0.75} />
       <path d={rays(mediums, 80, 90)} strokeWidth={1.6} opacity={0.8} />
       <path d={rays(majors.filter(free), 75, 90)} strokeWidth={1.8} />
-      <path d={rays(majors.filter((value) => !free(value)), 71, 76)} strokeWidth={1} opacity={0.8} />
+      <path
+        d={rays(
+          majors.filter((value) => !free(value)),
+          71,
+          76,
+        )}
+        strokeWidth={1}
+        opacity={0.8}
+      />
     </g>
   )
 }
@@ -157,18 +163,10 @@ export function Dial(props: DialProps): ReactElement {
   const { code, fullScale, unit, value, target, window, limitFrom, past = [], width = 288 } = props
   const drawn = dialTicks(fullScale, props.minor)
   const steps = { ...drawn, major: props.major ?? drawn.major }
-  const at = (reading: number): number =>
-    -SWEEP / 2 + (SWEEP * Math.min(Math.max(reading, 0), fullScale * 1.02)) / fullScale
+  const at = (reading: number): number => -SWEEP / 2 + (SWEEP * Math.min(Math.max(reading, 0), fullScale * 1.02)) / fullScale
   const limit = limitFrom !== null && limitFrom.value < fullScale ? limitFrom.value : null
   return (
-    <svg
-      viewBox="0 0 288 208"
-      width={width}
-      height={(width * 208) / 288}
-      role="img"
-      aria-label={inWords(props)}
-      className="block bg-dye"
-    >
+    <svg viewBox="0 0 288 208" width={width} height={(width * 208) / 288} role="img" aria-label={inWords(props)} className="block bg-dye">
       <Rim />
       <Face at={at} fullScale={fullScale} steps={steps} limit={limit} />
       {limit !== null && <Forbidden from={at(limit)} to={at(fullScale)} />}

@@ -75,17 +75,9 @@ function Ram({ lie, percent }: { lie: Lie; percent: number }): ReactElement {
   const half = (lie.lower - lie.upper) / 2 - 2
   const long = lie.end - lie.zero + 40
   return (
-    <g
-      className="transition-transform duration-[400ms] ease-out"
-      style={{ transform: `translateX(${lie.at(percent) - 2}px)` }}
-    >
+    <g className="transition-transform duration-[400ms] ease-out" style={{ transform: `translateX(${lie.at(percent) - 2}px)` }}>
       <rect x={-long} y={middle - 6} width={long - 8} height={12} fill="var(--thin-dye)" />
-      <path
-        d={`M${-long} ${middle - 6}H-10M${-long} ${middle + 6}H-10`}
-        stroke="var(--scribe)"
-        strokeWidth={1.8}
-        opacity={0.85}
-      />
+      <path d={`M${-long} ${middle - 6}H-10M${-long} ${middle + 6}H-10`} stroke="var(--scribe)" strokeWidth={1.8} opacity={0.85} />
       <path
         d={`M0 ${middle - half}H-6.5L-11.5 ${middle - half * 0.4}V${middle + half * 0.4}L-6.5 ${middle + half}H0Z`}
         fill="var(--scribe)"
@@ -146,12 +138,7 @@ export function LadderStrip(props: LadderProps & { words: boolean }): ReactEleme
       <g fill="none" stroke="var(--faint-scribe)" strokeWidth={1.6}>
         <path d={`M${lie.zero} ${lie.upper}H${lie.end + 14}M${lie.zero} ${lie.lower}H${lie.end + 14}`} opacity={0.7} />
         <path d={ticks.map((percent) => `M${lie.at(percent)} ${lie.lower}v6`).join('')} opacity={0.7} />
-        <path
-          d={`M${lie.zero - box - 1} ${middle}H${lie.end + 20}`}
-          stroke="var(--ghost)"
-          strokeDasharray="14 4 3 4"
-          opacity={0.75}
-        />
+        <path d={`M${lie.zero - box - 1} ${middle}H${lie.end + 20}`} stroke="var(--ghost)" strokeDasharray="14 4 3 4" opacity={0.75} />
       </g>
       {levelPercent !== null && (
         <svg x={lie.zero} y={0} width={Math.max(0, width - lie.zero)} height={height}>

@@ -39,13 +39,7 @@ function Cylinder({ scale }: { scale: LoadScale }): ReactElement {
         strokeWidth={1.6}
         opacity={0.75}
       />
-      <path
-        d={`M${MIDDLE} ${scale.top - 29}V${foot}`}
-        stroke="var(--ghost)"
-        strokeWidth={1.4}
-        strokeDasharray="14 4 3 4"
-        opacity={0.75}
-      />
+      <path d={`M${MIDDLE} ${scale.top - 29}V${foot}`} stroke="var(--ghost)" strokeWidth={1.4} strokeDasharray="14 4 3 4" opacity={0.75} />
     </g>
   )
 }
@@ -94,13 +88,7 @@ function Rung({ stage, y, room, right, shut }: RungProps): ReactElement {
   const loadInk = stage.state === 'to-come' ? 'var(--faint-scribe)' : 'var(--scribe)'
   return (
     <g>
-      <path
-        d={`M${RIGHT} ${y}H${right}`}
-        stroke={ink.line}
-        strokeWidth={ink.weight}
-        strokeDasharray={ink.dash}
-        fill="none"
-      />
+      <path d={`M${RIGHT} ${y}H${right}`} stroke={ink.line} strokeWidth={ink.weight} strokeDasharray={ink.dash} fill="none" />
       {live && <rect x={RIGHT - 3} y={y - 18} width={6} height={25} fill="var(--chalk)" />}
       <text x={WORDS} y={y - 9} fontSize={figures} fontWeight={600} fill={ink.label}>
         {stage.label}
@@ -118,14 +106,7 @@ function Rung({ stage, y, room, right, shut }: RungProps): ReactElement {
         </text>
       )}
       {(roomy || noteFirst) && (
-        <text
-          x={WORDS}
-          y={noteFirst ? first : first + 20}
-          fontSize={16}
-          fontWeight={ink.noteWeight}
-          fill={ink.note}
-          fontFamily={CONDENSED}
-        >
+        <text x={WORDS} y={noteFirst ? first : first + 20} fontSize={16} fontWeight={ink.noteWeight} fill={ink.note} fontFamily={CONDENSED}>
           {stage.note}
         </text>
       )}

@@ -44,9 +44,7 @@ interface LoadLadderProps extends Omit<LadderProps, 'height'> {
 
 /** The rungs of load with a ram that stands where the load stands. */
 export function LoadLadder({ scale, words = true, height, ...ladder }: LoadLadderProps): ReactElement {
-  const stages = [...ladder.stages]
-    .sort((a, b) => a.percent - b.percent)
-    .map((stage) => ({ ...stage, label: setPercent(stage.label) }))
+  const stages = [...ladder.stages].sort((a, b) => a.percent - b.percent).map((stage) => ({ ...stage, label: setPercent(stage.label) }))
   return (
     <div className="relative">
       {scale === 'vertical' ? (
@@ -56,10 +54,7 @@ export function LoadLadder({ scale, words = true, height, ...ladder }: LoadLadde
       )}
       <ol aria-label="Stages of load" className="sr-only">
         {stages.map((stage) => (
-          <li
-            key={stage.percent}
-            aria-current={stage.state === 'now' || stage.state === 'waiting' ? 'step' : undefined}
-          >
+          <li key={stage.percent} aria-current={stage.state === 'now' || stage.state === 'waiting' ? 'step' : undefined}>
             {[stage.label, stage.load, stage.note, stageStateWord[stage.state]].filter((part) => part !== '').join(', ')}
           </li>
         ))}

@@ -60,6 +60,25 @@ function followTouches(element: HTMLElement, change: (next: (view: View) => View
 
 const windowOf = (element: HTMLElement) => ({ width: element.clientWidth, height: element.clientHeight })
 
+const within = (target: Element, element: HTMLElement) => {
+  const [box, outer] = [target.getBoundingClientRect(), element.getBoundingClientRect()]
+  return { left: box.left - outer.left, right: box.right - outer.left, top: box.top - outer.top, bottom: box.bottom - outer.top }
+}
+
+/** Enlarges about the joint that has the focus, which stays in sight, else about the middle. */
+function zoomedOn(view: View, factor: number, element: HTMLElement): View {
+  const window = windowOf(element)
+  const focused = document.activeElement
+  if (!focused || focused === element || !element.contains(focused))
+    return zoomedAt(view, factor, { x: window.width / 2, y: window.height / 2 }, window)
+  const { left, right, top, bottom } = within(focused, element)
+  const at = { x: (left + right) / 2, y: (top + bottom) / 2 }
+  const next = zoomedAt(view, factor, at, window)
+  const by = next.k / view.k / 2
+  const [x, y] = [(right - left) * by, (bottom - top) * by]
+  return broughtIn(next, { left: at.x - x, right: at.x + x, top: at.y - y, bottom: at.y + y }, window)
+}
+
 /** Pan and zoom of one drawing: by finger, mouse, wheel, keys and buttons. */
 export function usePanZoom() {
   const [view, setView] = useState<View>(FITTED)
@@ -92,9 +111,8 @@ export function usePanZoom() {
   const zoom = useCallback(
     (factor: number) => {
       if (element === null) return
-      const window = windowOf(element)
       setHeld(true)
-      setView((before) => zoomedAt(before, factor, { x: window.width / 2, y: window.height / 2 }, window))
+      setView((before) => zoomedOn(before, factor, element))
     },
     [element],
   )
@@ -131,9 +149,8 @@ export function usePanZoom() {
   }
   const onFocus = ({ target }: FocusEvent): void => {
     if (!element || view.k === 1 || target === element) return
-    const [box, outer] = [target.getBoundingClientRect(), element.getBoundingClientRect()]
-    const inside = { left: box.left - outer.left, right: box.right - outer.left, top: box.top - outer.top, bottom: box.bottom - outer.top }
-    setView((before) => broughtIn(before, inside, windowOf(element)))
+    const box = within(target, element)
+    setView((before) => broughtIn(before, box, windowOf(element)))
   }
   return {
     view,

@@ -2,20 +2,11 @@ import { nameJoints, neighboursOf } from '#shared/press/joints'
 import type { ExaminationMethod, FrameKind } from '#shared/press/model'
 import { walkingOrder } from '#shared/press/places'
 import type { JointState } from '#shared/proof-test/state'
-import type { JointMarkState } from '../../components/marks'
+import { examinationOf, jointMark, orderWalked, type Occasion, type Walked } from '#shared/proof-test/walked'
 import { clockTime } from '../../lib/dates'
 import { capital, ordinal } from '../../lib/words'
 
-export type Occasion = 'before load' | 'after load'
-
-export const examinationOf = (joint: JointState, occasion: Occasion) => (occasion === 'before load' ? joint.before : joint.after)
-
-/** How a joint's balloon is drawn. */
-export function jointMark(joint: JointState, occasion: Occasion): JointMarkState {
-  const examined = examinationOf(joint, occasion)
-  if (joint.makeUp !== 'finished') return joint.makeUp
-  return examined?.result ?? 'finished'
-}
+export { examinationOf, jointMark, orderWalked, type Occasion }
 
 const BY: Record<ExaminationMethod, string> = {
   visual: 'by eye',
@@ -79,24 +70,6 @@ export function jointAtHand(kind: FrameKind, joints: readonly JointState[], occa
     joints.map(({ joint }) => joint),
   ).flatMap(({ id }) => ways.get(id) ?? [])
   return round.find((joint) => needsWork(joint, occasion)) ?? round.find((joint) => needsExamining(joint, occasion)) ?? null
-}
-
-export interface Walked {
-  joint: JointState
-  /** From 1, in the order the joints were examined. */
-  rank: number
-  at: string
-}
-
-/** The joints in the order they were walked; it follows from the ledger, so it is there again after a reload. */
-export function orderWalked(joints: readonly JointState[], occasion: Occasion): Walked[] {
-  return joints
-    .flatMap((joint) => {
-      const examined = examinationOf(joint, occasion)
-      return examined ? [{ joint, at: examined.at }] : []
-    })
-    .sort((a, b) => (a.at === b.at ? 0 : a.at < b.at ? -1 : 1))
-    .map((one, index) => ({ ...one, rank: index + 1 }))
 }
 
 /** "3rd of 11, 14:02". */

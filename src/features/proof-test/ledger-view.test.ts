@@ -7,8 +7,12 @@ import { mergeEntries, wholeUpTo } from '../../lib/known-ledger'
 import { irregularUnderLoad, LedgerFold } from './ledger-view'
 
 const { entries } = recordedTest()
-const draftOf = ({ seq: _seq, receivedAt: _at, irregular: _irregular, prevHash: _prev, hash: _hash, ...draft }: LedgerEntry): EntryDraft => draft
-const underLoad = entries.slice(0, entries.findLastIndex((entry) => entry.kind === 'stage-begun' && entry.observedAt < '2026-09-15T10:41') + 1)
+const draftOf = ({ seq: _seq, receivedAt: _at, irregular: _irregular, prevHash: _prev, hash: _hash, ...draft }: LedgerEntry): EntryDraft =>
+  draft
+const underLoad = entries.slice(
+  0,
+  entries.findLastIndex((entry) => entry.kind === 'stage-begun' && entry.observedAt < '2026-09-15T10:41') + 1,
+)
 
 describe('a test’s ledger as a device sees it', () => {
   it('takes each entry once, in order, and asks on from the first gap', () => {
@@ -49,7 +53,14 @@ describe('a test’s ledger as a device sees it', () => {
     const row = entries[underLoad.length]
     if (!last || !row) throw new Error('The recorded test has a row after its stage.')
     expect(row.kind).toBe('row-read')
-    const stopped: LedgerEntry = { ...last, id: '01994a00-00ff-7000-8000-000000000001', seq: last.seq + 1, kind: 'stopped', payload: { cause: 'called', why: 'Called by the witness' }, hash: 'f'.repeat(64) }
+    const stopped: LedgerEntry = {
+      ...last,
+      id: '01994a00-00ff-7000-8000-000000000001',
+      seq: last.seq + 1,
+      kind: 'stopped',
+      payload: { cause: 'called', why: 'Called by the witness' },
+      hash: 'f'.repeat(64),
+    }
     const before = fold.fold(underLoad, [draftOf(row)])
     expect(irregularUnderLoad(before.state, before.entries)).toEqual([])
     const after = fold.fold([...underLoad, stopped], [draftOf(row)])

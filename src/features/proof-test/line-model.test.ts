@@ -54,7 +54,9 @@ describe('the expected band on the line', () => {
   })
 
   it('stands on the record as on the run', () => {
-    expect(recordLine(withBed(), climb ? [climb] : [], { width: 640, height: 536 }, { corrections: [] })?.band).toEqual(lineSpec(withBed(), climb, size).band)
+    expect(recordLine(withBed(), climb ? [climb] : [], { width: 640, height: 536 }, { corrections: [] })?.band).toEqual(
+      lineSpec(withBed(), climb, size).band,
+    )
   })
 
   it('says what to expect of the first stage, before there is a line', () => {

@@ -35,7 +35,11 @@ function Failed({ error }: { error: unknown }): ReactElement {
         </Button>
       }
     >
-      <p>{lost ? 'This test is not on this device yet. If the press is loaded: open the release valve slowly, then come back.' : 'Load the page again. If the press is loaded: open the release valve slowly first.'}</p>
+      <p>
+        {lost
+          ? 'This test is not on this device yet. If the press is loaded: open the release valve slowly, then come back.'
+          : 'Load the page again. If the press is loaded: open the release valve slowly first.'}
+      </p>
     </PlainScreen>
   )
 }
@@ -65,7 +69,10 @@ export function WithRun(props: WithRunProps): ReactNode {
   if (window.isSecureContext === false) {
     return (
       <PlainScreen mark="stop" title="No test is run over an open connection">
-        <p>This address is neither https nor this machine, so the browser keeps no entries safely and gives no lock on the screen. Open the shop’s https address, or run it on the machine that serves it.</p>
+        <p>
+          This address is neither https nor this machine, so the browser keeps no entries safely and gives no lock on the screen. Open the
+          shop’s https address, or run it on the machine that serves it.
+        </p>
       </PlainScreen>
     )
   }

@@ -21,7 +21,10 @@ describe('a row that is being typed', () => {
   })
 
   it('refuses what cannot be read, and a gauge below zero', () => {
-    expect(commitField(typeInto(EMPTY_ROW, 'm', '.5'), sources, 'm', never)).toMatchObject({ ok: false, draft: { texts: { m: '.5' }, errors: { m: 'Put a digit before the decimal sign, as in 0.5.' } } })
+    expect(commitField(typeInto(EMPTY_ROW, 'm', '.5'), sources, 'm', never)).toMatchObject({
+      ok: false,
+      draft: { texts: { m: '.5' }, errors: { m: 'Put a digit before the decimal sign, as in 0.5.' } },
+    })
     expect(commitField(typeInto(EMPTY_ROW, 'g', '-50'), sources, 'g', never).ok).toBe(false)
     expect(commitField(typeInto(EMPTY_ROW, 'm', '-0.02'), sources, 'm', never).ok).toBe(true)
   })

@@ -63,7 +63,11 @@ const sameNumber = (a: string, b: string): boolean => {
   return one.ok && two.ok && one.value === two.value
 }
 
-function withField(draft: RowDraft, id: string, change: { text?: string; error?: string | null; first?: string; again?: boolean }): RowDraft {
+function withField(
+  draft: RowDraft,
+  id: string,
+  change: { text?: string; error?: string | null; first?: string; again?: boolean },
+): RowDraft {
   const { [id]: _was, ...errors } = draft.errors
   return {
     ...draft,
@@ -77,14 +81,22 @@ function withField(draft: RowDraft, id: string, change: { text?: string; error?:
 /** Empties a field and asks for it once more. What was typed is kept aside, to be compared and never shown. */
 export function askAgain(draft: RowDraft, source: RowSource, why: string): RowDraft {
   const text = draft.texts[source.id] ?? ''
-  return { ...withField(draft, source.id, { text: '', first: text, error: `${why} Look again and type it once more.` }), focused: source.id }
+  return {
+    ...withField(draft, source.id, { text: '', first: text, error: `${why} Look again and type it once more.` }),
+    focused: source.id,
+  }
 }
 
 /**
  * Enter in one field. What can't be read keeps its text and says why; what surprises is emptied and asked
  * again, and stands only when it was typed the same twice.
  */
-export function commitField(draft: RowDraft, sources: readonly RowSource[], id: string, surprise: Surprise): { draft: RowDraft; ok: boolean } {
+export function commitField(
+  draft: RowDraft,
+  sources: readonly RowSource[],
+  id: string,
+  surprise: Surprise,
+): { draft: RowDraft; ok: boolean } {
   const source = sources.find((candidate) => candidate.id === id)
   if (!source) return { draft, ok: false }
   const text = (draft.texts[id] ?? '').trim()
@@ -92,7 +104,8 @@ export function commitField(draft: RowDraft, sources: readonly RowSource[], id: 
   if (!parsed.ok) return { draft: { ...withField(draft, id, { error: parsed.message }), focused: id }, ok: false }
   const first = draft.first[id]
   const says = surprise(source, readingsOf(sources, draft))
-  if (says === null || draft.typedAgain.includes(id)) return { draft: withField(draft, id, { error: null, again: first !== undefined }), ok: true }
+  if (says === null || draft.typedAgain.includes(id))
+    return { draft: withField(draft, id, { error: null, again: first !== undefined }), ok: true }
   if (first !== undefined && sameNumber(first, text)) return { draft: withField(draft, id, { error: null, again: true }), ok: true }
   return { draft: askAgain(draft, source, first === undefined ? says : `The two you typed differ. ${says}`), ok: false }
 }

@@ -13,7 +13,10 @@ export function useElapsed(mark: Mark | null): number | null {
   useEffect(() => {
     if (!running) return undefined
     setNow(markNow())
-    const timer = setInterval(() => setNow((was) => (Math.floor(was.monotonicMs / TICK) === Math.floor(markNow().monotonicMs / TICK) ? was : markNow())), TICK)
+    const timer = setInterval(
+      () => setNow((was) => (Math.floor(was.monotonicMs / TICK) === Math.floor(markNow().monotonicMs / TICK) ? was : markNow())),
+      TICK,
+    )
     return () => clearInterval(timer)
   }, [running])
   return mark === null ? null : Math.max(0, elapsedBetween(mark, now).seconds)

@@ -1,7 +1,18 @@
 import { useCallback, useRef } from 'react'
 import type { Reading } from '#shared/proof-test/entries'
 import { dropDraft, useDraft } from './drafts'
-import { commitField, EMPTY_ROW, firstOpen, pressBackspace, pressKey, readingsOf, typeInto, type RowDraft, type RowSource, type Surprise } from './row-model'
+import {
+  commitField,
+  EMPTY_ROW,
+  firstOpen,
+  pressBackspace,
+  pressKey,
+  readingsOf,
+  typeInto,
+  type RowDraft,
+  type RowSource,
+  type Surprise,
+} from './row-model'
 import { markNow } from './use-run'
 
 /** A row as it is entered. */

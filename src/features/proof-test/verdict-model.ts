@@ -18,7 +18,10 @@ const percent = (fraction: number): string => `${Math.round(fraction * 100)} %`
 function softeningSentence(criterion: Criterion): string[] {
   const { value, U, limit, verdict } = criterion
   if (value === null || U === null || limit === null) return []
-  const said = value < 0 ? `This step is ${percent(-value)} stiffer than the stiffest step.` : `This step is ${percent(value)} softer than the stiffest step.`
+  const said =
+    value < 0
+      ? `This step is ${percent(-value)} stiffer than the stiffest step.`
+      : `This step is ${percent(value)} softer than the stiffest step.`
   if (verdict === 'beyond') {
     const kindest = value - U
     return [said, kindest > limit ? `Even the kindest reading, ${percent(kindest)}, is past the limit.` : `The limit is ${percent(limit)}.`]
@@ -51,7 +54,9 @@ function stiffSide(criterion: Criterion): string[] {
 export function evidence(stage: StageEvaluation): string[] {
   const order = ['beyond', 'undecided', 'wait'] as const
   for (const verdict of order) {
-    const found = stage.criteria.find((criterion) => criterion.verdict === verdict && (criterion.leads || (verdict === 'beyond' && criterion.stops)))
+    const found = stage.criteria.find(
+      (criterion) => criterion.verdict === verdict && (criterion.leads || (verdict === 'beyond' && criterion.stops)),
+    )
     if (found) return sentenceOf(found)
   }
   if (stage.suggestion === 'stop') return ['It was topped up twice at full load: the press does not hold its pressure.']

@@ -50,7 +50,7 @@ export function ToolingStep({ form, number, registers, weak }: ToolingStepProps)
                   <CheckRow
                     key={id}
                     ref={id === first?.id ? field.ref : undefined}
-                    className="border-b border-hairline"
+                    className="border-b border-hairline pb-1"
                     name={`tooling.${id}`}
                     label={`${details.code}, ${details.name}`}
                     note={`Carries ${typedWords(details.ratedLoad)}. ${details.fit}`}

@@ -21,7 +21,6 @@ export function useRegisterPress(shopId: string) {
         [{ ledgerId: pressId, kind: 'registered', payload, v: PRESS_VERSION, authorId: user.id, basedOnSeq: 0 }],
         (request) => api.send('POST', registerPressResponseSchema, '/api/presses', request, { query: { shop: shopId } }),
       ),
-    onSuccess: () =>
-      Promise.all([client.invalidateQueries({ queryKey: ['presses'] }), client.invalidateQueries({ queryKey: ['today'] })]),
+    onSuccess: () => Promise.all([client.invalidateQueries({ queryKey: ['presses'] }), client.invalidateQueries({ queryKey: ['today'] })]),
   })
 }

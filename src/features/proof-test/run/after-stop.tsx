@@ -35,7 +35,13 @@ export function AfterStop({ run }: { run: Run }): ReactElement | null {
       <h2 id="after-stop" className="text-20">
         What was found after the stop
       </h2>
-      <EntryPhotos className="mt-2" run={run} label="Photos of it" chosen={draft.photos} onChange={(chosen) => change({ photos: chosen })} />
+      <EntryPhotos
+        className="mt-2"
+        run={run}
+        label="Photos of it"
+        chosen={draft.photos}
+        onChange={(chosen) => change({ photos: chosen })}
+      />
       <EnteredPhotos run={run} className="mt-3" shown={shownOf(run, since, () => 'Found after the stop')} />
       <div className="mt-3 grid items-start gap-3 tablet:grid-cols-[minmax(0,1fr)_auto]">
         <TextField

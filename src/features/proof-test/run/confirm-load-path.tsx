@@ -29,7 +29,11 @@ export function ConfirmLoadPath({ run, opened }: { run: Run; opened: Opened }): 
         {witness ? (
           <ActionPlate title="No joint is missing" note={`${run.state.joints.length} joints in the load path`} onPress={confirm} />
         ) : (
-          <ActionPlate title={`Told to me by ${name}: no joint is missing`} note="needs a reason why it is not confirmed in person" onPress={confirm} />
+          <ActionPlate
+            title={`Told to me by ${name}: no joint is missing`}
+            note="needs a reason why it is not confirmed in person"
+            onPress={confirm}
+          />
         )}
       </Into>
     </div>

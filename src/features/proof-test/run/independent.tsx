@@ -127,7 +127,10 @@ export function IndependentParts(props: IndependentProps): ReactElement {
         <>
           <BenchScroll>
             <h2 className="text-22 tablet:text-26">Hand the tablet to {name}.</h2>
-            <p className="mt-1 text-18">The screen then covers target, load and your own figure. {name} can also enter it on a phone; this goes on by itself when it is in.</p>
+            <p className="mt-1 text-18">
+              The screen then covers target, load and your own figure. {name} can also enter it on a phone; this goes on by itself when it
+              is in.
+            </p>
             <p className="mt-3 text-18">The reading never keeps the press loaded. If it cannot be taken, write down why and release.</p>
             <Button className="mt-4 min-h-14" onClick={() => change({ refusing: true })}>
               It is not taken

@@ -11,7 +11,12 @@ export function IrregularPanel({ run }: { run: Run }): ReactElement {
   return (
     <>
       <Into slot="over">
-        <VerdictBanner decision="wait" title="Release" instruction="Something was written that an interlock forbids." caution="Go no further. Open the release valve slowly." />
+        <VerdictBanner
+          decision="wait"
+          title="Release"
+          instruction="Something was written that an interlock forbids."
+          caution="Go no further. Open the release valve slowly."
+        />
       </Into>
       <BenchScroll>
         <ul className="border-t border-hairline">

@@ -45,7 +45,11 @@ export function ReleaseStep({ run, step }: StepProps<'release'>): ReactElement {
       <HeadBand step={step} title="Release the press">
         The climb is done.
       </HeadBand>
-      <ReleaseParts run={run} note="load is off, go to recovery" says="Until the gauge reads zero and the ram is seen clear of the stack, the press counts as loaded." />
+      <ReleaseParts
+        run={run}
+        note="load is off, go to recovery"
+        says="Until the gauge reads zero and the ram is seen clear of the stack, the press counts as loaded."
+      />
     </>
   )
 }

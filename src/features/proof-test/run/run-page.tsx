@@ -24,7 +24,8 @@ function NotYours({ run, opened }: { run: Run; opened: Opened }): ReactElement {
       }
     >
       <p>
-        {lead.name} leads it, {witness.name} is its witness. {attends ? 'The lead runs it on the tablet behind the shield.' : 'Only they and the pump hand write in it.'}
+        {lead.name} leads it, {witness.name} is its witness.{' '}
+        {attends ? 'The lead runs it on the tablet behind the shield.' : 'Only they and the pump hand write in it.'}
       </p>
     </PlainScreen>
   )
@@ -34,7 +35,13 @@ function NotYours({ run, opened }: { run: Run; opened: Opened }): ReactElement {
 export function RunPage({ testId }: { testId: string }): ReactElement {
   return (
     <WithRun testId={testId}>
-      {(run, opened) => (run.me.part === 'lead' || run.me.part === 'pump hand' ? <RunScreen run={run} opened={opened} /> : <NotYours run={run} opened={opened} />)}
+      {(run, opened) =>
+        run.me.part === 'lead' || run.me.part === 'pump hand' ? (
+          <RunScreen run={run} opened={opened} />
+        ) : (
+          <NotYours run={run} opened={opened} />
+        )
+      }
     </WithRun>
   )
 }

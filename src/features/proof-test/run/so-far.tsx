@@ -8,7 +8,10 @@ export function SoFar({ rows, percent }: { rows: readonly VerdictRow[]; percent:
   return (
     <ul aria-label={setPercent(`What was read at ${percent} % so far`)} className="border-t border-hairline">
       {rows.map((row) => (
-        <li key={row.id} className="grid min-h-[42px] grid-cols-[28px_minmax(0,1fr)_auto] items-center gap-x-2 border-b border-hairline text-16 leading-[20px]">
+        <li
+          key={row.id}
+          className="grid min-h-[42px] grid-cols-[28px_minmax(0,1fr)_auto] items-center gap-x-2 border-b border-hairline text-16 leading-[20px]"
+        >
           <Mark name={row.verdict} size={20} />
           <span>
             <span className="font-medium">{setPercent(row.what)}</span>

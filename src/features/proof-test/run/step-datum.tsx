@@ -20,7 +20,10 @@ function useDatumRow({ run, opened, step }: StepProps<'datum'> | StepProps<'datu
     sources,
     surprise: atRest(opened, before),
     onEnter: (entered, temperature) =>
-      run.record({ kind: 'datum-read', payload: { leg, climb, ...entered, temperature: typedTemperature(temperature, opened.lengthUnit) } }),
+      run.record({
+        kind: 'datum-read',
+        payload: { leg, climb, ...entered, temperature: typedTemperature(temperature, opened.lengthUnit) },
+      }),
   })
   return { sources, row }
 }
@@ -48,8 +51,7 @@ export function DatumStep(props: StepProps<'datum'>): ReactElement {
   )
 }
 
-const watched = (step: StepProps<'datum-watch'>['step']): string =>
-  step.first.readings.map((reading) => reading.text).join(', ')
+const watched = (step: StepProps<'datum-watch'>['step']): string => step.first.readings.map((reading) => reading.text).join(', ')
 
 /** The datum is watched for drift, then read once more: it has to stand where it stood. */
 export function DatumWatchStep(props: StepProps<'datum-watch'>): ReactElement {

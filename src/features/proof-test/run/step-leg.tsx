@@ -25,7 +25,11 @@ export function BeginLegStep({ run, opened, step }: StepProps<'begin-leg'>): Rea
         <p className="mt-4 text-18">Count the holes on both uprights. A press proven in one hole is not proven in another.</p>
       </BenchScroll>
       <Into slot="action">
-        <ActionPlate title={`The bed is pinned in hole ${hole}`} note={`ram ${leg?.ramPosition ?? ''}; next, the seating load`} onPress={begin} />
+        <ActionPlate
+          title={`The bed is pinned in hole ${hole}`}
+          note={`ram ${leg?.ramPosition ?? ''}; next, the seating load`}
+          onPress={begin}
+        />
       </Into>
     </>
   )

@@ -23,7 +23,10 @@ export function RecoveryStep({ run, opened, step }: StepProps<'recovery'>): Reac
     onEnter: (entered, temperature) =>
       run.record({ kind: 'set-read', payload: { leg, climb, ...entered, temperature: typedTemperature(temperature, opened.lengthUnit) } }),
   })
-  const datum = here?.datum.at(-1)?.readings.map((reading) => reading.text).join(', ')
+  const datum = here?.datum
+    .at(-1)
+    ?.readings.map((reading) => reading.text)
+    .join(', ')
   return (
     <>
       <TimerBand step={step} total={total} elapsed={elapsed} label="Recovery" sub="left, from the release" overText="Over: read the set" />
@@ -36,7 +39,10 @@ export function RecoveryStep({ run, opened, step }: StepProps<'recovery'>): Reac
         bare
         temperature
         shut={over ? undefined : `${clockFigure(left)} left. Keep the ram clear of the stack.`}
-        before={{ title: over ? 'Mark, then read what is left.' : 'Let the frame come back.', hint: `Read as the datum was read: ${datum ?? ''}.` }}
+        before={{
+          title: over ? 'Mark, then read what is left.' : 'Let the frame come back.',
+          hint: `Read as the datum was read: ${datum ?? ''}.`,
+        }}
       />
     </>
   )

@@ -46,7 +46,11 @@ export function SeatingReleaseStep({ run, step }: StepProps<'seating-release'>):
       <HeadBand step={step} title="Take the seating load off">
         The slack is taken up. What follows is measured from the datum.
       </HeadBand>
-      <ReleaseParts run={run} note="load is off, go to the datum" says="Open the release valve slowly until the gauge reads zero and the ram is clear of the stack." />
+      <ReleaseParts
+        run={run}
+        note="load is off, go to the datum"
+        says="Open the release valve slowly until the gauge reads zero and the ram is clear of the stack."
+      />
     </>
   )
 }

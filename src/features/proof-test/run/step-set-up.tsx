@@ -25,8 +25,17 @@ function faultsOf(draft: SetUpDraft) {
   const relief = draft.relief.trim() === '' ? null : parseDecimal(draft.relief)
   return {
     missing,
-    stroke: !stroke.ok ? stroke.message : stroke.value < 10 || stroke.value > 80 ? 'It must stand between 10 and 80 %. Change the stack.' : undefined,
-    relief: relief && !relief.ok ? relief.message : relief === null && draft.note.trim().length < 3 ? 'Write the setting down, or say in the note why there is none.' : undefined,
+    stroke: !stroke.ok
+      ? stroke.message
+      : stroke.value < 10 || stroke.value > 80
+        ? 'It must stand between 10 and 80 %. Change the stack.'
+        : undefined,
+    relief:
+      relief && !relief.ok
+        ? relief.message
+        : relief === null && draft.note.trim().length < 3
+          ? 'Write the setting down, or say in the note why there is none.'
+          : undefined,
   }
 }
 
@@ -82,11 +91,22 @@ export function SetUpStep({ run, opened, step }: StepProps<'set-up'>): ReactElem
             message={asked ? faults.stroke : undefined}
             onChange={(stroke) => change({ stroke })}
           />
-          <TextField className="tablet:col-span-2" label="Note" optional maxLength={500} value={draft.note} onChange={(event) => change({ note: event.target.value })} />
+          <TextField
+            className="tablet:col-span-2"
+            label="Note"
+            optional
+            maxLength={500}
+            value={draft.note}
+            onChange={(event) => change({ note: event.target.value })}
+          />
         </div>
       </BenchScroll>
       <Into slot="action">
-        <ActionPlate title="The set-up stands as written" note={left > 0 ? `${left} of ${SET_UP_ITEMS.length} points to tick` : 'all points are ticked'} onPress={confirm} />
+        <ActionPlate
+          title="The set-up stands as written"
+          note={left > 0 ? `${left} of ${SET_UP_ITEMS.length} points to tick` : 'all points are ticked'}
+          onPress={confirm}
+        />
       </Into>
     </>
   )

@@ -19,7 +19,10 @@ type Mode = StageOccasion | 'witness' | 'none'
 /** What is being done about a verdict: nothing yet, or a row being read once more. It ends when a row comes in. */
 function useMode(run: Run, stage: StageEvaluation): [Mode, (mode: Mode) => void] {
   const { attempt } = stage
-  const [draft, change] = useDraft<{ mode: Mode }>(`${run.testId}.mode.${attempt.rows.at(-1)?.entryId ?? ''}.${attempt.independent?.at ?? ''}`, { mode: 'none' })
+  const [draft, change] = useDraft<{ mode: Mode }>(
+    `${run.testId}.mode.${attempt.rows.at(-1)?.entryId ?? ''}.${attempt.independent?.at ?? ''}`,
+    { mode: 'none' },
+  )
   return [draft.mode, (mode) => change({ mode })]
 }
 
@@ -31,10 +34,19 @@ const decided = (stage: StageEvaluation, decision: 'go-on' | 'wait' | 'stop'): D
 function RowAgain(props: StepProps<'wait' | 'decide'> & { occasion: StageOccasion }): ReactElement {
   const { step, occasion } = props
   const row = useStageRow(props)
-  const title = { again: 'Mark, then read the row again.', 'hold end': 'Mark, then read the end of the hold.', 'hold start': 'Pumped on: mark, then read the row.', 'top-up': 'Topped up: mark, then read.' }[occasion]
+  const title = {
+    again: 'Mark, then read the row again.',
+    'hold end': 'Mark, then read the end of the hold.',
+    'hold start': 'Pumped on: mark, then read the row.',
+    'top-up': 'Topped up: mark, then read.',
+  }[occasion]
   return (
     <>
-      <HeadBand low step={step} title={`${step.percent} %: ${occasion === 'hold start' ? 'read after pumping on' : occasion === 'again' ? 'read again' : 'end of the hold'}`}>
+      <HeadBand
+        low
+        step={step}
+        title={`${step.percent} %: ${occasion === 'hold start' ? 'read after pumping on' : occasion === 'again' ? 'read again' : 'end of the hold'}`}
+      >
         Every value is read afresh.
       </HeadBand>
       <StageRowBench {...props} row={row} before={{ title, hint: 'Stop pumping, wait ten seconds, then mark.' }} />
@@ -66,7 +78,11 @@ function Verdict({ run, stage, decision, title, instruction, caution, children }
           {[title, instruction, ...evidence(stage)].join('. ')}
         </p>
       </Into>
-      <Evidence stage={stage} before={stageBefore(run.evaluation?.stages ?? [], stage)} more={independent ? verdictRows([independent]) : []}>
+      <Evidence
+        stage={stage}
+        before={stageBefore(run.evaluation?.stages ?? [], stage)}
+        more={independent ? verdictRows([independent]) : []}
+      >
         {children !== undefined && <div className="mt-3 flex flex-wrap gap-3">{children}</div>}
       </Evidence>
     </>
@@ -90,7 +106,14 @@ export function WaitStep(props: StepProps<'wait'>): ReactElement {
   }
   return (
     <>
-      <Verdict run={run} stage={stage} decision="wait" title="Wait" instruction={again ? 'Go on only with a reason, or stop.' : 'Read the row again.'} caution="Keep the pressure, stay behind the shield.">
+      <Verdict
+        run={run}
+        stage={stage}
+        decision="wait"
+        title="Wait"
+        instruction={again ? 'Go on only with a reason, or stop.' : 'Read the row again.'}
+        caution="Keep the pressure, stay behind the shield."
+      >
         {(mayGoOn || low) && (
           <Button className="min-h-14 desktop:min-h-14" onClick={readAgain}>
             Read the row again
@@ -99,7 +122,11 @@ export function WaitStep(props: StepProps<'wait'>): ReactElement {
       </Verdict>
       <Into slot="action">
         {mayGoOn ? (
-          <ActionPlate title={next === null ? 'Full load was held: go on with a reason' : `Go on to ${next} % with a reason`} note="the reason prints in the record" onPress={() => run.record(goOn)} />
+          <ActionPlate
+            title={next === null ? 'Full load was held: go on with a reason' : `Go on to ${next} % with a reason`}
+            note="the reason prints in the record"
+            onPress={() => run.record(goOn)}
+          />
         ) : low ? (
           <ActionPlate title="Pumped on: read a new row" note="the hold starts again from its mark" onPress={() => setMode('hold start')} />
         ) : (
@@ -148,7 +175,12 @@ export function DecideStep(props: StepProps<'decide'>): ReactElement {
         {differ ? (
           <ActionPlate title="The witness reads again" note="after the lead has read the row again" onPress={() => setMode('witness')} />
         ) : (
-          <ActionPlate title={next === null ? 'Full load was held' : `Go on to ${next} %`} note={next === null ? 'next, release the press' : 'every limit checked is kept'} onPress={goOn} focusHint />
+          <ActionPlate
+            title={next === null ? 'Full load was held' : `Go on to ${next} %`}
+            note={next === null ? 'next, release the press' : 'every limit checked is kept'}
+            onPress={goOn}
+            focusHint
+          />
         )}
       </Into>
     </>
@@ -165,5 +197,14 @@ export function StopNowStep({ run, step }: StepProps<'stop-now'>): ReactElement 
     written.current = true
     record(decided(stage, 'stop'))
   }, [record, stage])
-  return <Verdict run={run} stage={stage} decision="stop" title="Stop" instruction="Open the release valve slowly, now." caution="Stay behind the shield until the gauge reads zero." />
+  return (
+    <Verdict
+      run={run}
+      stage={stage}
+      decision="stop"
+      title="Stop"
+      instruction="Open the release valve slowly, now."
+      caution="Stay behind the shield until the gauge reads zero."
+    />
+  )
 }

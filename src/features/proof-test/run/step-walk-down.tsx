@@ -38,7 +38,11 @@ interface JointListProps {
 function JointList({ joints, occasion, chosen, onChoose }: JointListProps): ReactElement {
   const walked = new Map(orderWalked(joints, occasion).map((one) => [one.joint, walkedWords(one, joints.length)]))
   return (
-    <ul aria-label="Joints of the load path" className="mt-3 grid auto-rows-fr gap-x-6 tablet:grid-flow-col tablet:grid-cols-2" style={{ gridTemplateRows: `repeat(${Math.ceil(joints.length / 2)}, auto)` }}>
+    <ul
+      aria-label="Joints of the load path"
+      className="mt-3 grid auto-rows-fr gap-x-6 tablet:grid-flow-col tablet:grid-cols-2"
+      style={{ gridTemplateRows: `repeat(${Math.ceil(joints.length / 2)}, auto)` }}
+    >
       {joints.map((joint) => {
         const here = joint === chosen
         return (
@@ -55,7 +59,9 @@ function JointList({ joints, occasion, chosen, onChoose }: JointListProps): Reac
                   <span className="sr-only">Joint {joint.joint.number}, </span>
                   {joint.joint.name}
                 </span>
-                <span className={`block font-condensed text-16 leading-[20px] ${here ? 'font-semibold' : 'text-graphite'}`}>{[jointSays(joint, occasion), walked.get(joint)].filter(Boolean).join('. ')}</span>
+                <span className={`block font-condensed text-16 leading-[20px] ${here ? 'font-semibold' : 'text-graphite'}`}>
+                  {[jointSays(joint, occasion), walked.get(joint)].filter(Boolean).join('. ')}
+                </span>
               </span>
             </button>
           </li>
@@ -92,10 +98,21 @@ function Work({ run, joint, occasion, pressId }: { run: Run; joint: JointState; 
           )}
         </div>
       </div>
-      <EntryPhotos className="mt-3" run={run} label={`Photos of the work on joint ${number}`} chosen={photos} onChange={(chosen) => change({ photos: chosen })} />
+      <EntryPhotos
+        className="mt-3"
+        run={run}
+        label={`Photos of the work on joint ${number}`}
+        chosen={photos}
+        onChange={(chosen) => change({ photos: chosen })}
+      />
       <JointPhotos run={run} jointId={id} number={number} />
       <Into slot="action">
-        <ActionPlate title={`Joint ${joint.joint.number} is ${madeUpWord(joint)}`} note={`then examine ${toExamineAfter(run.state.joints, joint)}`} onPress={finish} focusHint />
+        <ActionPlate
+          title={`Joint ${joint.joint.number} is ${madeUpWord(joint)}`}
+          note={`then examine ${toExamineAfter(run.state.joints, joint)}`}
+          onPress={finish}
+          focusHint
+        />
       </Into>
     </>
   )
@@ -120,7 +137,9 @@ export function WalkDownStep({ run, opened, step }: StepProps<'walk-down'> | Ste
       </HeadBand>
       <BenchScroll>
         {occasion === 'before load' && <StoodStill days={opened.stoodStillDays} />}
-        {chosen && needsWork(chosen, occasion) && occasion === 'before load' && <Work run={run} joint={chosen} occasion={occasion} pressId={opened.pressId} />}
+        {chosen && needsWork(chosen, occasion) && occasion === 'before load' && (
+          <Work run={run} joint={chosen} occasion={occasion} pressId={opened.pressId} />
+        )}
         {chosen && !(needsWork(chosen, occasion) && occasion === 'before load') && (
           <JointPanel key={chosen.joint.id} run={run} joint={chosen} occasion={occasion} pressId={opened.pressId} onDone={done} />
         )}

@@ -21,7 +21,13 @@ export function TimerBand({ step, total, elapsed, label, sub, overText }: TimerB
   const over = elapsed >= total
   return (
     <Into slot="over">
-      <HoldTimer total={total} elapsed={Math.min(elapsed, total)} label={label} sub={over ? overText : sub} size={shape === 'phone' ? 'phone' : 'tablet'} />
+      <HoldTimer
+        total={total}
+        elapsed={Math.min(elapsed, total)}
+        label={label}
+        sub={over ? overText : sub}
+        size={shape === 'phone' ? 'phone' : 'tablet'}
+      />
       <StepTrail step={step} shown={false} />
       <p aria-live="assertive" className="sr-only">
         {over ? overText : ''}

@@ -10,10 +10,21 @@ import { BenchScroll } from './head-band'
 /** The softening of the step on a number line beside its limit, with the step before for comparison. */
 function SofteningScale({ stage, before }: { stage: StageEvaluation; before: StageEvaluation | null }): ReactElement | null {
   const criterion = stage.criteria.find((one) => one.id === 'softening')
-  if (!criterion || criterion.value === null || criterion.U === null || criterion.limit === null || criterion.verdict === 'not-read' || criterion.value < 0) return null
+  if (
+    !criterion ||
+    criterion.value === null ||
+    criterion.U === null ||
+    criterion.limit === null ||
+    criterion.verdict === 'not-read' ||
+    criterion.value < 0
+  )
+    return null
   const { value, U, limit, verdict, label } = criterion
   const earlier = before?.criteria.find((one) => one.id === 'softening')
-  const beforeAt = earlier && earlier.value !== null && earlier.value >= 0 ? { value: earlier.value * 100, label: `${earlier.label.replace(/^Softening, /, '').replace(' %', '')}: ${earlier.reading}` } : undefined
+  const beforeAt =
+    earlier && earlier.value !== null && earlier.value >= 0
+      ? { value: earlier.value * 100, label: `${earlier.label.replace(/^Softening, /, '').replace(' %', '')}: ${earlier.reading}` }
+      : undefined
   return (
     <Fit className="mt-2 h-[126px]" initial={{ width: 568, height: 126 }}>
       {({ width }) => (

@@ -18,6 +18,7 @@ import { LedgerList } from './ledger-list'
 import { RecordChart } from './record-chart'
 import { RecordFacts } from './record-facts'
 import { RecordCourse, RecordHead, RecordResult } from './record-head'
+import { RecordJoints } from './record-joints'
 import { RecordPhotos } from './record-photos'
 import { SignPanel } from './sign-panel'
 import { SignatureBlocks } from './signature-blocks'
@@ -99,6 +100,7 @@ export function RecordSheet(props: RecordSheetProps) {
             </div>
           </div>
           <StagesAsRead record={record} />
+          <RecordJoints record={record} />
           <ForceBudget record={record} />
           <EveryCriterion record={record} />
           <LedgerList record={record} />

@@ -25,10 +25,16 @@ function Notice({ children }: { children: ReactNode }) {
   )
 }
 
-type PrintTagProps = { pressId: string; made: TagResponse; tag: PublicTag }
+type PrintTagProps = {
+  pressId: string
+  made: TagResponse
+  tag: PublicTag
+  /** The server was not reached when it was last asked: what stands here may have ended. */
+  old: boolean
+}
 
 /** The tag in the size it is printed in, and what to know before it is hung up. */
-export function PrintTag({ pressId, made, tag }: PrintTagProps) {
+export function PrintTag({ pressId, made, tag, old }: PrintTagProps) {
   const [size, setSize] = useState<TagSize>('small')
   const [full, setFull] = useState(false)
   const cleared = tag.answer.is === 'cleared'
@@ -73,7 +79,10 @@ export function PrintTag({ pressId, made, tag }: PrintTagProps) {
               Not every word goes onto this size. {size === 'small' ? 'Print it at A6.' : 'The page behind the code has all of it.'}
             </Notice>
           )}
-          <Button kind="next" wide onClick={() => window.print()}>
+          {old && (
+            <Notice>Not connected to the server, so nobody knows whether this still holds. It can be printed when the link is back.</Notice>
+          )}
+          <Button kind="next" wide disabled={old} onClick={() => window.print()}>
             Print this tag
           </Button>
           <p className="text-graphite">In the print window choose no margins and a scale of 100 %, on paper or labels of that size.</p>

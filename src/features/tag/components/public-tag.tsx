@@ -13,7 +13,7 @@ type PlateProps = { mark: MarkName; name: string; said: ReactNode; tone: 'dye' |
 /** The answer, large enough to be read at arm's length, before anything else. */
 function AnswerPlate({ mark, name, said, tone, children }: PlateProps) {
   return (
-    <div className={classNames(tone === 'dye' ? 'ground-dye' : 'bg-stop text-on-stop', 'print:bg-white print:text-black')}>
+    <div className={classNames(tone === 'dye' ? 'ground-dye' : 'bg-stop text-on-stop', 'print:bg-white! print:text-black!')}>
       <div className={classNames(column, 'py-6 tablet:py-8')}>
         <p className="text-18 font-semibold tablet:text-20">{name}</p>
         <div className="mt-3 flex items-center gap-4 tablet:gap-6">
@@ -116,7 +116,7 @@ function Shut({ tag, answer }: { tag: PublicTag; answer: Exclude<PublicTag['answ
 export function CannotTell({ asking, onAgain }: { asking: boolean; onAgain: () => void }) {
   return (
     <>
-      <div role="alert" className="bg-stop text-on-stop print:bg-white print:text-black">
+      <div role="alert" className="bg-stop text-on-stop print:bg-white! print:text-black!">
         <div className={classNames(column, 'py-6 tablet:py-8')}>
           <div className="flex items-center gap-4 tablet:gap-6">
             <Mark name="not-connected" size={72} tone="plate" className="size-14 shrink-0 tablet:size-[72px]" />

@@ -37,7 +37,13 @@ function Scale({ width, height, today, events }: { width: number; height: number
       {Array.from({ length: WEEKS / fortnight + 1 }, (_, index) => index * fortnight)
         .filter((week) => week <= WEEKS)
         .map((week) => (
-          <text key={week} x={at(week * 7)} y={axis + 32} textAnchor={week === 0 ? 'start' : week === WEEKS ? 'end' : 'middle'} fill="var(--faint-scribe)">
+          <text
+            key={week}
+            x={at(week * 7)}
+            y={axis + 32}
+            textAnchor={week === 0 ? 'start' : week === WEEKS ? 'end' : 'middle'}
+            fill="var(--faint-scribe)"
+          >
             {dayAndMonth(addDays(today, week * 7))}
           </text>
         ))}
@@ -51,7 +57,13 @@ function Scale({ width, height, today, events }: { width: number; height: number
         const edge = flipped ? -12 : 12
         return (
           <g key={`${event.date}${event.label}`}>
-            <path d={`M${x} ${axis}V${ring + 5}${level > 0 ? `M${x} ${ring - 5}V${top}H${x + edge - Math.sign(edge) * 2}` : ''}`} stroke="var(--scribe)" strokeWidth="1.4" fill="none" opacity=".9" />
+            <path
+              d={`M${x} ${axis}V${ring + 5}${level > 0 ? `M${x} ${ring - 5}V${top}H${x + edge - Math.sign(edge) * 2}` : ''}`}
+              stroke="var(--scribe)"
+              strokeWidth="1.4"
+              fill="none"
+              opacity=".9"
+            />
             <circle cx={x} cy={ring} r="4.6" fill="var(--dye)" stroke="var(--scribe)" strokeWidth="2" />
             <text x={x + edge} y={top + 5} fill="var(--scribe)" fontWeight="500" textAnchor={flipped ? 'end' : 'start'}>
               {event.label}
@@ -83,7 +95,11 @@ export function Calendar({ calendar }: CalendarProps) {
         <div role="status" aria-label="Being fetched" className="h-[110px]" />
       ) : (
         <>
-          {coming.length === 0 && <p className="mt-1 text-faint-scribe">Nothing falls due: no calibration, examination or clearance ends before {longDate(addDays(calendar.today, days))}.</p>}
+          {coming.length === 0 && (
+            <p className="mt-1 text-faint-scribe">
+              Nothing falls due: no calibration, examination or clearance ends before {longDate(addDays(calendar.today, days))}.
+            </p>
+          )}
           <Fit className="-mx-2 hidden h-[112px] tablet:block" initial={{ width: 1232, height: 112 }}>
             {({ width, height }) => <Scale width={width} height={height} today={calendar.today} events={coming} />}
           </Fit>

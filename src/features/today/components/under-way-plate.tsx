@@ -40,7 +40,11 @@ function OneTest({ test, first }: { test: UnderWay; first: boolean }) {
           <LoadLadder scale="strip" words={!phone} stages={test.stages} levelPercent={test.levelPercent} width={width} height={height} />
         )}
       </Fit>
-      <ButtonLink to={test.action.to} kind={first ? 'next' : 'scribed'} className="mt-2 mb-1 tablet:mt-4 max-desktop:w-full desktop:mt-0 desktop:mb-0 desktop:min-h-[70px] desktop:px-8 desktop:text-20">
+      <ButtonLink
+        to={test.action.to}
+        kind={first ? 'next' : 'scribed'}
+        className="mt-2 mb-1 tablet:mt-4 max-desktop:w-full desktop:mt-0 desktop:mb-0 desktop:min-h-[70px] desktop:px-8 desktop:text-20"
+      >
         {test.action.label}
       </ButtonLink>
     </article>

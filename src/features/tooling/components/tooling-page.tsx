@@ -21,7 +21,7 @@ function Retirement({ id, code, retired }: { id: string; code: string; retired: 
         <p className="min-w-0 text-graphite">
           {retired
             ? `${code} can be taken into use again.`
-            : `${code} is cracked, worn, lost or sold: retire it. Records that name it stay, and its number stays taken.`}
+            : `When ${code} is cracked, worn, lost or sold, retire it. Records that name it stay, and its number stays taken.`}
         </p>
         <Button busy={retire.isPending && 'Changing it'} onClick={() => retire.mutate(!retired)}>
           {retired ? 'Back into use' : `Retire ${code}`}
@@ -73,7 +73,7 @@ export function ToolingPage({ tooling, mayWrite, planTo }: ToolingPageProps) {
             <p className="text-graphite">Carries no more than</p>
             <p className="text-34 font-semibold tablet:text-46">{typedWords(ratedLoad)}</p>
             <p className="text-graphite">
-              {ratedLoad.unit === 'kN' ? '' : `${formatForce(toSI(ratedLoad), 'kN')}. `}Rated by: {details.ratingFrom}.
+              {ratedLoad.unit === 'kN' ? '' : `${formatForce(toSI(ratedLoad), 'kN')}. `}Rating: {details.ratingFrom}.
             </p>
           </div>
           <Section title="How it is made">

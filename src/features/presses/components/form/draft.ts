@@ -248,6 +248,7 @@ function checkRating(description: PressDescription, context: z.RefinementCtx): v
 
 /** What the server's schema asks, and the two things that only a whole form can be asked. */
 export const pressFormSchema = PRESS_PAYLOADS.registered.superRefine((payload, context) => {
-  checkRating(payload.description, context)
+  // A measure that is no number yet is said at its field; nothing is worked out from it.
+  if (context.issues.length === 0) checkRating(payload.description, context)
   checkNumbers(payload.joints, context)
 })

@@ -14,6 +14,7 @@ import { useAppendToPress } from '../../api/append-to-press'
 import type { FormUnits } from './draft'
 import { draftOfPress, editsOf } from './edits'
 import { EditsEffectNote } from './edits-effect'
+import { FormPlacingProvider } from './form-placing'
 import { FrameStep } from './frame-step'
 import { JointsStep } from './joints-step'
 import { LivePlate } from './live-plate'
@@ -58,40 +59,42 @@ export function EditPressForm({ state, description, units, onDone }: EditPressFo
     })
   })
   return (
-    <PlateBesidePaper plate={<LivePlate form={form} />}>
-      <div className={classNames(inset, 'pt-5 pb-10 desktop:px-8')}>
-        <PageHeading className="mb-5">Change {description.name}</PageHeading>
-        <Form onSubmit={submit}>
-          <FormError message={errors.root?.message} attempt={submitCount} />
-          <FormSteps>
-            <FrameStep form={form} number={1} onKind={() => false} />
-            <RamsStep form={form} number={2} units={units} />
-            <TrainStep form={form} number={3} units={units} />
-            <RatedLoadStep form={form} number={4} />
-            <MembersStep form={form} number={5} units={units} />
-            <JointsStep form={form} number={6} units={units} />
-            <FormStep number={7} title="Why" note="What was written down before stays in the history of the press.">
-              <WholeRow>
-                <EditsEffectNote form={form} state={state} />
-              </WholeRow>
-              <WholeRow>
-                <TextArea label="Why it is changed" value={why} message={said} onChange={(event) => setWhy(event.target.value)} />
-              </WholeRow>
-            </FormStep>
-          </FormSteps>
-          <FormActions>
-            <Button type="submit" kind="next" busy={append.isPending && 'Writing it down'}>
-              Write this down
-            </Button>
-            <Button onClick={onDone}>Leave it as it was</Button>
-            {wrong && (
-              <p role="status" className="font-medium text-stop-ink">
-                {wrong}
-              </p>
-            )}
-          </FormActions>
-        </Form>
-      </div>
-    </PlateBesidePaper>
+    <FormPlacingProvider>
+      <PlateBesidePaper plate={<LivePlate form={form} />}>
+        <div className={classNames(inset, 'pt-5 pb-10 desktop:px-8')}>
+          <PageHeading className="mb-5">Change {description.name}</PageHeading>
+          <Form onSubmit={submit}>
+            <FormError message={errors.root?.message} attempt={submitCount} />
+            <FormSteps>
+              <FrameStep form={form} number={1} onKind={() => false} />
+              <RamsStep form={form} number={2} units={units} />
+              <TrainStep form={form} number={3} units={units} />
+              <RatedLoadStep form={form} number={4} />
+              <MembersStep form={form} number={5} units={units} />
+              <JointsStep form={form} number={6} units={units} />
+              <FormStep number={7} title="Why" note="What was written down before stays in the history of the press.">
+                <WholeRow>
+                  <EditsEffectNote form={form} state={state} />
+                </WholeRow>
+                <WholeRow>
+                  <TextArea label="Why it is changed" value={why} message={said} onChange={(event) => setWhy(event.target.value)} />
+                </WholeRow>
+              </FormStep>
+            </FormSteps>
+            <FormActions>
+              <Button type="submit" kind="next" busy={append.isPending && 'Writing it down'}>
+                Write this down
+              </Button>
+              <Button onClick={onDone}>Leave it as it was</Button>
+              {wrong && (
+                <p role="status" className="font-medium text-stop-ink">
+                  {wrong}
+                </p>
+              )}
+            </FormActions>
+          </Form>
+        </div>
+      </PlateBesidePaper>
+    </FormPlacingProvider>
   )
 }

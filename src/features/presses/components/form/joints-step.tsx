@@ -10,6 +10,7 @@ import { JointBalloon } from '../../../../components/marks'
 import { SelectField } from '../../../../components/select-field'
 import { jointChoices, makeUpChoices } from '../words'
 import { newJoint, type FormUnits, type JointDraft } from './draft'
+import { useFormPlacing } from './form-placing'
 import { JointStrengthFields } from './strength/joint-strength'
 import type { PressForm } from './use-press-form'
 
@@ -19,6 +20,8 @@ function Details({ form, index }: { form: PressForm; index: number }) {
   const members = useWatch({ control, name: 'description.members' })
   const kind = useWatch({ control, name: 'description.kind' })
   const jointKind = useWatch({ control, name: `joints.${index}.kind` })
+  const id = useWatch({ control, name: `joints.${index}.id` })
+  const placing = useFormPlacing()
   const errors = formState.errors.joints?.[index]
   const memberChoices = members.map((member) => ({ value: member.id, label: member.name || 'a member without a name' }))
   const frame = FRAME_KINDS.find((one) => one === kind)
@@ -50,16 +53,23 @@ function Details({ form, index }: { form: PressForm; index: number }) {
       />
       <TextField label="Made by" optional autoComplete="off" message={errors?.madeBy?.message} {...register(`joints.${index}.madeBy`)} />
       <DateField label="Made on" optional message={errors?.madeOn?.message} {...register(`joints.${index}.madeOn`)} />
-      {jointKind === 'weld' && (
-        <TextField
-          label="Filler"
-          optional
-          placeholder="E7018, 3.2 mm"
-          message={errors?.filler?.message}
-          {...register(`joints.${index}.filler`)}
-        />
-      )}
+      <TextField
+        label={jointKind === 'weld' ? 'Filler' : 'Fastener'}
+        optional
+        placeholder={jointKind === 'weld' ? 'E7018, 3.2 mm' : 'property class 10.9'}
+        message={errors?.filler?.message}
+        {...register(`joints.${index}.filler`)}
+      />
       <SelectField label="Drawn at" nothing="Beside the drawing" choices={places} {...register(`joints.${index}.place`)} />
+      {frame && (
+        <Button
+          className="self-end"
+          aria-pressed={placing.jointId === id}
+          onClick={() => (placing.jointId === id ? placing.end() : placing.begin(id))}
+        >
+          {placing.jointId === id ? 'Tap a cross on the drawing' : 'Show on the drawing where'}
+        </Button>
+      )}
     </div>
   )
 }

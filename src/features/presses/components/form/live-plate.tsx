@@ -1,11 +1,12 @@
 import { useDeferredValue } from 'react'
 import { useWatch } from 'react-hook-form'
 import { FRAME_KINDS } from '#shared/press/model'
-import { drawnPress } from '#shared/drawing/drawn-press'
+import { drawnPress, looseParts } from '#shared/drawing/drawn-press'
 import { PressPlate } from '../../../../components/instruments/press-plate'
 import { Mark } from '../../../../components/marks'
 import { loadPathSoFar } from './checks'
 import type { PressFormDraft } from './draft'
+import { useFormPlacing } from './form-placing'
 import type { PressForm } from './use-press-form'
 
 const MOST_HOLES = 40
@@ -33,20 +34,44 @@ function drawn(draft: PressFormDraft) {
       : null,
     joints: draft.joints.map(({ id, number, name, makeUp, place }) => ({ id, number, name, state: makeUp, place: place || null })),
     gap: path.closed ? null : path.gap,
+    loose: frame
+      ? [
+          ...looseParts(
+            { kind: frame, members: draft.description.members.map(({ id, kind: one, name }) => ({ id, kind: one, name })) },
+            draft.joints,
+          ),
+        ]
+      : [],
   }
 }
 
 /** The press as it is typed: every joint in its balloon, and whether the load path closes. */
 export function LivePlate({ form }: { form: PressForm }) {
   // The form asks first; the drawing follows when there is time.
-  const { press, joints, gap } = useDeferredValue(useWatch({ control: form.control, compute: drawn }))
+  const { press, joints, gap, loose } = useDeferredValue(useWatch({ control: form.control, compute: drawn }))
+  const { jointId, end } = useFormPlacing()
+  const index = joints.findIndex(({ id }) => id === jointId)
+  const joint = joints[index]
   return (
     <PressPlate
       press={press}
       joints={joints}
+      loose={new Set(loose)}
+      placing={
+        joint
+          ? {
+              place: joint.place,
+              onPlace: (place) => {
+                form.setValue(`joints.${index}.place`, place, { shouldDirty: true })
+                end()
+              },
+            }
+          : null
+      }
       states={['open', 'tacked', 'finished']}
       nothing="The press is drawn here, as soon as its kind of frame is chosen."
     >
+      {joint && <p role="status">Tap the cross where joint {joint.number} stands.</p>}
       {press !== null && <LoadPathLine gap={gap} />}
     </PressPlate>
   )

@@ -10,6 +10,7 @@ import { useProblemFields } from '../../../../lib/use-problem-fields'
 import { useTitle } from '../../../../lib/use-title'
 import { useRegisterPress } from '../../api/register-press'
 import { newPress, type FormUnits } from './draft'
+import { FormPlacingProvider } from './form-placing'
 import { FrameStep } from './frame-step'
 import { JointsStep } from './joints-step'
 import { LivePlate } from './live-plate'
@@ -51,39 +52,41 @@ export function NewPressForm({ shopId, units, onEntered }: NewPressFormProps) {
     )
   })
   return (
-    <PlateBesidePaper plate={<LivePlate form={form} />}>
-      <div className={classNames(inset, 'pt-5 pb-10 desktop:px-8')}>
-        <div className="mb-5 flex flex-wrap items-center justify-between gap-x-6 gap-y-3">
-          <PageHeading>Enter a press</PageHeading>
-          {restored && (
-            <p className="flex flex-wrap items-center gap-3 text-graphite">
-              As you left it on this device.
-              <Button size="line" onClick={beginAnew}>
-                Begin with an empty form
+    <FormPlacingProvider>
+      <PlateBesidePaper plate={<LivePlate form={form} />}>
+        <div className={classNames(inset, 'pt-5 pb-10 desktop:px-8')}>
+          <div className="mb-5 flex flex-wrap items-center justify-between gap-x-6 gap-y-3">
+            <PageHeading>Enter a press</PageHeading>
+            {restored && (
+              <p className="flex flex-wrap items-center gap-3 text-graphite">
+                As you left it on this device.
+                <Button size="line" onClick={beginAnew}>
+                  Begin with an empty form
+                </Button>
+              </p>
+            )}
+          </div>
+          <Form onSubmit={submit}>
+            <FormError message={errors.root?.message} attempt={submitCount} />
+            <FormSteps>
+              <FrameStep form={form} number={1} onKind={chooseKind} />
+              <RamsStep form={form} number={2} units={units} />
+              <TrainStep form={form} number={3} units={units} />
+              <RatedLoadStep form={form} number={4} />
+              <MembersStep form={form} number={5} units={units} />
+              <JointsStep form={form} number={6} units={units} />
+            </FormSteps>
+            <FormActions>
+              <Button type="submit" kind="next" busy={register.isPending && 'Entering it'}>
+                Enter this press
               </Button>
-            </p>
-          )}
+              <p role="status" className={wrong ? 'font-medium text-stop-ink' : 'text-graphite'}>
+                {wrong ?? 'What you type is kept on this device until it is entered.'}
+              </p>
+            </FormActions>
+          </Form>
         </div>
-        <Form onSubmit={submit}>
-          <FormError message={errors.root?.message} attempt={submitCount} />
-          <FormSteps>
-            <FrameStep form={form} number={1} onKind={chooseKind} />
-            <RamsStep form={form} number={2} units={units} />
-            <TrainStep form={form} number={3} units={units} />
-            <RatedLoadStep form={form} number={4} />
-            <MembersStep form={form} number={5} units={units} />
-            <JointsStep form={form} number={6} units={units} />
-          </FormSteps>
-          <FormActions>
-            <Button type="submit" kind="next" busy={register.isPending && 'Entering it'}>
-              Enter this press
-            </Button>
-            <p role="status" className={wrong ? 'font-medium text-stop-ink' : 'text-graphite'}>
-              {wrong ?? 'What you type is kept on this device until it is entered.'}
-            </p>
-          </FormActions>
-        </Form>
-      </div>
-    </PlateBesidePaper>
+      </PlateBesidePaper>
+    </FormPlacingProvider>
   )
 }

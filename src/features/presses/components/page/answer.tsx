@@ -65,6 +65,7 @@ function standing(clearance: ClearanceState, today: string): string | null {
     const before = clearance.last ? ` Before that it was cleared up to ${upTo(clearance.last)}.` : ''
     return `Withdrawn on ${longDate(clearance.at)}.${before}`
   }
+  if (clearance.is === 'cleared') return `It was cleared up to ${upTo(clearance.clearance)}.`
   if (clearance.is !== 'suspended' || !clearance.clearance) return null
   switch (clearance.until) {
     case 'the joints are accepted':

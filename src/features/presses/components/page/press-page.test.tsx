@@ -140,6 +140,7 @@ describe('a press’s page', { timeout: 20_000 }, () => {
     show(stateOf({ kind: 'clearance-given', payload: clearance('2026-09-30') }))
     expect(screen.getByText('Do not use')).toBeInTheDocument()
     expect(screen.queryByText('Cleared up to')).not.toBeInTheDocument()
+    expect(screen.getByText('It was cleared up to 11.7 short tons, until 30 September 2026.')).toBeInTheDocument()
   })
 
   it('leads to the test while one is under way, and lets nobody plan another', () => {

@@ -1,4 +1,4 @@
-import { useMemo, useState } from 'react'
+import { useEffect, useMemo, useState } from 'react'
 import type { PressState } from '#shared/press/state'
 import { loadPathOf } from '#shared/press/load-path'
 import { mayItBeUsed, tagToTakeOff } from '#shared/press/may-it-be-used'
@@ -70,6 +70,10 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
     setOpen(next)
   }
   const sending = { send: append.mutate, busy: append.isPending }
+  useEffect(() => {
+    // The part stands higher while its form is open: whoever opened it goes along.
+    if (open === 'repair') bringIntoView('repairs')
+  }, [open])
   const leave = () => choose(null)
   const done = () => {
     leave()

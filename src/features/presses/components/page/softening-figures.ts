@@ -65,7 +65,7 @@ export function stiffnessChange(climbs: readonly ClimbHistory[]): StiffnessChang
   return { from, to, softer, U, says: !outside ? 'cannot tell' : softer > 0 ? 'softer' : 'stiffer' }
 }
 
-const percent = (share: number): string => `${formatNumber(Math.abs(share) * 100, 1)} %`
+const percent = (share: number): string => `${formatNumber(Math.abs(share) * 100, 1)}\u202f%`
 
 /** The change in words; claims one only where the tests can tell it. */
 export function changeWords({ from, to, softer, U, says }: StiffnessChange): string {
@@ -114,7 +114,7 @@ export function rowOf(climb: ClimbHistory, length: LengthUnit) {
     stiffness:
       stiffness === null
         ? NONE
-        : `${formatNumber(of(stiffness), decimals)}${stiffnessU === null ? '' : ` ± ${formatNumber(of(stiffnessU), decimals)}`} ${label}`,
+        : `${formatNumber(of(stiffness), decimals)}${stiffnessU === null ? '' : `\u00a0± ${formatNumber(of(stiffnessU), decimals)}`}\u00a0${label}`,
     set:
       set === null
         ? NONE

@@ -57,7 +57,10 @@ function Table({ series, length }: { series: Series; length: LengthUnit }) {
           {series.climbs.map((climb) => {
             const row = rowOf(climb, length)
             return (
-              <tr key={`${climb.proofTestId} ${climb.climb}`} className="border-b border-hairline align-top max-tablet:block max-tablet:py-2">
+              <tr
+                key={`${climb.proofTestId} ${climb.climb}`}
+                className="border-b border-hairline align-top max-tablet:block max-tablet:py-2"
+              >
                 <th scope="row" className="font-medium max-tablet:block tablet:py-2 tablet:pr-3">
                   <TextLink to={paths.proofTest.href(climb.proofTestId)}>{climb.number}</TextLink>
                   {climb.climb > 0 && <span className="font-normal">, repeat climb</span>}
