@@ -125,7 +125,7 @@ function shareOut(wanted: readonly Wanted[], elevation: Elevation, lanes: readon
   return shared
 }
 
-/** A second joint at the ram points at it from the other side, so that no leader runs behind the first one's balloon. */
+/** Every second joint at the ram points at it from the other side, so that no leader runs behind the first one's balloon. */
 function acrossTheRam(anchor: Anchor, place: string, { lanes }: Elevation): Anchor {
   if (!place.startsWith('ram-') || !anchor.lane.startsWith('inner')) return anchor
   const lane = anchor.lane === 'inner-left' ? 'inner-right' : 'inner-left'
@@ -138,11 +138,12 @@ function acrossTheRam(anchor: Anchor, place: string, { lanes }: Elevation): Anch
  * what state a joint is in, so nothing moves while joints are examined.
  */
 export function placeBalloons(joints: readonly { id: string; place: string | null }[], elevation: Elevation): BalloonLayout {
-  const seen = new Set<string>()
+  const seen = new Map<string, number>()
   const wanted = joints.map(({ id, place }): Wanted => {
     const found = anchorFor(elevation, place)
-    const anchor = found !== null && place !== null && seen.has(place) ? acrossTheRam(found, place, elevation) : found
-    if (place !== null) seen.add(place)
+    const before = place === null ? 0 : (seen.get(place) ?? 0)
+    const anchor = found !== null && place !== null && before % 2 === 1 ? acrossTheRam(found, place, elevation) : found
+    if (place !== null) seen.set(place, before + 1)
     return { id, anchor, lane: anchor?.lane ?? 'outer-right', y: anchor?.y ?? elevation.to }
   })
   const lanes = lanesOf(elevation)

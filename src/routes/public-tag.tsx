@@ -10,7 +10,7 @@ export function Component() {
       key={code}
       code={code}
       head={(shopName) => (
-        <header className="ground-deep-dye print:bg-white! print:text-black!">
+        <header className="ground-deep-dye print:bg-[#fff]! print:text-[#000]!">
           <div className="mx-auto flex min-h-14 w-full max-w-[880px] items-center gap-3 px-4 tablet:px-6">
             <span className="print:hidden">
               <ProductMark size={34} />

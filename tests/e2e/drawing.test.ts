@@ -8,9 +8,10 @@ import { appendResponseSchema } from '#shared/api/ledger'
 import { sessionResponseSchema } from '#shared/api/session'
 import { FRAME_KINDS, type FrameKind, type Joint } from '#shared/press/model'
 import { startingFrame } from '#shared/press/starting-joints'
+import { shopWithOpenTest } from '../factories/e2e-shop'
 import { openedPayload } from '../factories/test-press'
 import { newDevice, serverAddress } from '../support/browser'
-import { signIn } from '../support/run-screen'
+import { RunScreen, signIn } from '../support/run-screen'
 
 const PICTURES = '.artefacts/e2e'
 const SIZES = [
@@ -157,7 +158,7 @@ describe('the drawing of a press', () => {
       await settle(page)
       const here = await faults(page)
       if (here.length > 0) found[size.width] = here
-      const plate = page.locator('[data-joint]').first().locator('xpath=ancestor::*[contains(@class,"ground-dye")][1]')
+      const plate = page.locator('[data-joint]').first().locator('xpath=ancestor::*[contains(@class,"desktop:sticky")][1]')
       await plate.screenshot({ path: path.join(PICTURES, `drawing-${kind}-${size.width}.png`) })
     }
     expect(found).toEqual({})
@@ -165,6 +166,12 @@ describe('the drawing of a press', () => {
     const printed = page.locator('svg[role="img"]:visible').first()
     expect(await printed.locator('path').count()).toBeGreaterThan(30)
     expect(await page.locator('[data-joint]:visible').count()).toBe(0)
+    const ground = await printed.evaluate((element) => {
+      const colours: string[] = []
+      for (let one = element.parentElement; one; one = one.parentElement) colours.push(getComputedStyle(one).backgroundColor)
+      return colours.find((colour) => colour !== 'rgba(0, 0, 0, 0)')
+    })
+    expect(ground).toBe('rgb(255, 255, 255)')
     await printed.screenshot({ path: path.join(PICTURES, `drawing-${kind}-print.png`) })
   })
 
@@ -253,5 +260,29 @@ describe('the drawing of a press', () => {
     expect(await page.getByRole('heading', { name: /^Joint \d+:/ }).textContent()).not.toBe(first)
     expect(await page.getByText(/^1st of 13, \d\d:\d\d/).isVisible()).toBe(true)
     await page.screenshot({ path: path.join(PICTURES, 'drawing-walk-down-1280.png') })
+  })
+
+  it('stands in the walk-down of a test, which says after a reload what was walked last', async () => {
+    const shop = await shopWithOpenTest()
+    const page = await (await newDevice()).newPage()
+    await signIn(page, shop.lead)
+    const run = new RunScreen(page, shop.testId)
+    await run.open()
+    await run.accept(2, { weld: true, before: true })
+    await page.getByText(/^Last: joint 2, 1st of 8, \d\d:\d\d$/).waitFor()
+    await page.reload()
+    await page.getByText(/^Last: joint 2, 1st of 8, \d\d:\d\d$/).waitFor()
+    const found: Record<string, string[]> = {}
+    for (const size of [...SIZES, { width: 1180, height: 820 }]) {
+      await page.setViewportSize(size)
+      await settle(page)
+      const here = await faults(page)
+      if (here.length > 0) found[size.width] = here
+      await page.locator('[data-joint="1"]').scrollIntoViewIfNeeded()
+      await page.screenshot({ path: path.join(PICTURES, `drawing-run-${size.width}.png`) })
+    }
+    expect(found).toEqual({})
+    await page.locator('[data-joint="8"]').click()
+    await run.heading(/^Joint 8:/).waitFor()
   })
 })

@@ -56,7 +56,7 @@ export function PressPlate(props: PressPlateProps) {
   const zoom = usePanZoom()
   const title = press?.kind === 'c-frame' ? 'Side elevation' : 'Front elevation'
   return (
-    <div className="flex flex-col gap-3 px-4 pt-3 pb-4 tablet:px-6 desktop:sticky desktop:top-0 desktop:h-[calc(100dvh-68px)] desktop:min-h-[560px] desktop:pt-3 desktop:pb-7 print:h-auto! print:min-h-0! print:bg-white print:text-[#0b1733]">
+    <div className="flex flex-col gap-3 px-4 pt-3 pb-4 tablet:px-6 desktop:sticky desktop:top-0 desktop:h-[calc(100dvh-68px)] desktop:min-h-[560px] desktop:pt-3 desktop:pb-7 print:h-auto! print:min-h-0! print:bg-[#fff] print:text-[#0b1733]">
       <div className="flex min-h-14 items-center justify-between gap-4">
         <div>
           <h2 className="text-18">{title}</h2>

@@ -54,22 +54,25 @@ export function kilonewtons({ load }: Pick<TagClearance, 'load'>): string {
 const where = ({ bedHoles, ramPositions }: TagClearance): string =>
   `Bed ${bedHoles.length === 1 ? 'hole' : 'holes'} ${all(bedHoles)}, ram ${all(ramPositions)}.`
 
-/** How many members without an indicator are named where room is short; the page behind the code names all. */
-const NAMED = 3
+/** How many members without an indicator are named on a small tag, on a large one, and on the page behind the code. */
+const NAMED = { short: 3, ample: 14, all: Number.POSITIVE_INFINITY } as const
+export type Room = keyof typeof NAMED
 
-function notMeasured(names: readonly string[], room: 'short' | 'ample'): string {
+function notMeasured(names: readonly string[], room: Room): string {
   if (names.length === 0) return 'no member without an indicator was named.'
-  if (room === 'ample' || names.length <= NAMED + 1) return `${all(names)}.`
-  return `${names.slice(0, NAMED).join(', ')} and ${names.length - NAMED} more: scan the code.`
+  const most = NAMED[room]
+  if (names.length <= most + 1) return `${all(names)}.`
+  return `${names.slice(0, most).join(', ')} and ${names.length - most} more: scan the code.`
 }
 
 /** What a clearance says on its tag, part by part. */
-export function tagWords(clearance: TagClearance, noChangeSince: string | null, room: 'short' | 'ample'): TagWords {
+export function tagWords(clearance: TagClearance, noChangeSince: string | null, room: Room): TagWords {
   const { load, gaugePressure, gaugeCode, tooling, until } = clearance
   const parsed = parseDecimal(load.text)
   return {
     load: parsed.ok ? groupDigits(parsed.canonical) : load.text,
-    unit: unitLabel(load.unit, { plural: !(parsed.ok && parsed.value === 1) }),
+    // "tons-force" is one word: on the tag it never breaks at its hyphen.
+    unit: unitLabel(load.unit, { plural: !(parsed.ok && parsed.value === 1) }).replace('-', '\u2011'),
     loadNote: [TON[load.unit], load.unit === 'kN' ? undefined : `${kilonewtons(clearance)} in all`].filter(Boolean).join(', '),
     gaugeLabel: `${gaugePressure ? 'Gauge' : 'Load cell'} ${gaugeCode} not past`,
     gaugeLimit: typedWords(gaugePressure ?? load),
@@ -92,7 +95,7 @@ export function tagWords(clearance: TagClearance, noChangeSince: string | null, 
     test: clearance.number,
     changes:
       noChangeSince === null
-        ? 'A change was reported since, and the clearance still stands: ask the shop what it was.'
+        ? 'A change was reported since, and it is still cleared: ask the shop.'
         : `No change reported since ${shortDate(noChangeSince)}.`,
   }
 }

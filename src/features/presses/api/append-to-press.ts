@@ -6,6 +6,7 @@ import { api } from '../../../lib/api-client'
 import { files } from '../../../lib/attachments'
 import { useUser } from '../../../lib/here'
 import { sendOnce } from '../../../lib/send-once'
+import { dropKeptChange } from '../kept-change'
 import { pressQuery } from './get-press'
 
 /** What somebody did to a press, the photos of it, and reasons where a rule asks for one. */
@@ -23,6 +24,8 @@ export function useAppendToPress(pressId: string, headSeq: number, form: string)
         (request) => api.send('POST', appendResponseSchema, `/api/presses/${encodeURIComponent(pressId)}/entries`, request),
       ),
     onSuccess: (_answer, drafts) => {
+      // Here, not in the form: somebody may have left the page before the answer came.
+      if (drafts.some(({ kind }) => kind === 'changed')) dropKeptChange(pressId, user.id)
       const hashes = drafts.flatMap(({ attachments = [] }) => attachments.map(({ sha256 }) => sha256))
       // What goes wrong here is tried again at the next start.
       files.named(`ledger:${pressId}`, hashes).catch(() => undefined)

@@ -63,7 +63,7 @@ export function RecordJoints({ record }: { record: RecordView }) {
         Joints as walked down
       </h2>
       <div className="grid gap-x-8 gap-y-4 desktop:grid-cols-[minmax(0,28rem)_minmax(0,1fr)] print:block">
-        <div className="ground-dye max-tablet:-mx-3 print:bg-white">
+        <div className="ground-dye max-tablet:-mx-3 print:bg-[#fff]">
           <div className="flex items-center justify-between pl-4 print:hidden">
             <p className="font-condensed text-faint-scribe">dimensions in mm</p>
             <ZoomKeys zoom={zoom} />

@@ -52,22 +52,21 @@ function Shown({ id, reader }: { id: string; reader: Reader }) {
   return <RecordSheet record={record} turn={turn} mayExport={reader.role !== 'crew'} part={part} today={new Date('2026-09-21T08:00:00Z')} />
 }
 
-/** Answers of the server in turn for the ledger; posts are kept and answered by `onPost`. */
+/** A server that has one ledger until something is posted, then another; posts are kept and answered by `onPost`. */
 function serve(
-  ledgers: EntriesResponse[],
+  before: EntriesResponse,
+  after: EntriesResponse = before,
   onPost: () => Response = () => new Response('{}', { status: 500 }),
   keys?: { kid: string; publicKey: string; since: string; retiredOn: string | null }[],
 ) {
   const posted: Record<string, unknown>[] = []
-  let reads = 0
   vi.stubGlobal('fetch', async (url: string, init: RequestInit) => {
     if (url.includes('/verification/')) return keys === undefined ? new Response('{}', { status: 503 }) : Response.json({ keys })
     if (init.method === 'POST') {
       posted.push(JSON.parse(String(init.body)) as Record<string, unknown>)
       return onPost()
     }
-    const answer = ledgers[Math.min(reads, ledgers.length - 1)]
-    reads += 1
+    const answer = posted.length === 0 ? before : after
     return new Response(JSON.stringify(answer), { status: 200, headers: { 'content-type': 'application/json' } })
   })
   return posted
@@ -76,7 +75,7 @@ function serve(
 const SERVED = { kid: kidOf(PUBLIC_KEY), publicKey: PUBLIC_KEY, since: '2026-09-01T00:00:00.000Z', retiredOn: null }
 
 async function show(recorded: RecordedTest, reader: Reader = lead, more: Partial<EntriesResponse> = {}) {
-  serve([{ ...answerOf(recorded), ...more }], undefined, more.sealed && [SERVED])
+  serve({ ...answerOf(recorded), ...more }, undefined, undefined, more.sealed && [SERVED])
   const client = createQueryClient(() => undefined)
   render(
     <QueryClientProvider client={client}>
@@ -264,7 +263,7 @@ describe('the record of a test under way', () => {
 
 describe('signing', () => {
   async function open(recorded: RecordedTest, reader: Reader, onPost: () => Response, later: RecordedTest = recorded) {
-    const posted = serve([answerOf(recorded), answerOf(later)], onPost)
+    const posted = serve(answerOf(recorded), answerOf(later), onPost)
     render(
       <QueryClientProvider client={createQueryClient(() => undefined)}>
         <MemoryRouter>

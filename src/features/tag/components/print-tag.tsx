@@ -75,14 +75,12 @@ export function PrintTag({ pressId, made, tag, old }: PrintTagProps) {
             </Notice>
           )}
           {full && (
-            <Notice>
-              Not every word goes onto this size. {size === 'small' ? 'Print it at A6.' : 'The page behind the code has all of it.'}
-            </Notice>
+            <Notice>Not every word goes onto this size. {size === 'small' ? 'Print it at A6.' : 'Give the press a shorter name.'}</Notice>
           )}
           {old && (
             <Notice>Not connected to the server, so nobody knows whether this still holds. It can be printed when the link is back.</Notice>
           )}
-          <Button kind="next" wide disabled={old} onClick={() => window.print()}>
+          <Button kind="next" wide disabled={old || full} onClick={() => window.print()}>
             Print this tag
           </Button>
           <p className="text-graphite">In the print window choose no margins and a scale of 100 %, on paper or labels of that size.</p>

@@ -40,7 +40,7 @@ export function PublicTagPage({ code, head }: { code: string; head: (shopName: s
   const dark = !unknown && (error !== null || tooOld)
   useTitle(data && !unknown ? pressWords(data) : 'Tag of a press')
   return (
-    <div className="ground-steel flex min-h-dvh flex-col print:bg-white">
+    <div className="ground-steel flex min-h-dvh flex-col print:bg-[#fff]!">
       {head(data && !unknown ? data.shopName : null)}
       <main className="grow">
         {unknown ? (

@@ -13,7 +13,7 @@ type PlateProps = { mark: MarkName; name: string; said: ReactNode; tone: 'dye' |
 /** The answer, large enough to be read at arm's length, before anything else. */
 function AnswerPlate({ mark, name, said, tone, children }: PlateProps) {
   return (
-    <div className={classNames(tone === 'dye' ? 'ground-dye' : 'bg-stop text-on-stop', 'print:bg-white! print:text-black!')}>
+    <div className={classNames(tone === 'dye' ? 'ground-dye' : 'bg-stop text-on-stop', 'print:bg-[#fff]! print:text-[#000]!')}>
       <div className={classNames(column, 'py-6 tablet:py-8')}>
         <p className="text-18 font-semibold tablet:text-20">{name}</p>
         <div className="mt-3 flex items-center gap-4 tablet:gap-6">
@@ -45,7 +45,7 @@ function Facts({ facts }: { facts: readonly (readonly [name: string, value: Reac
 }
 
 function Cleared({ tag, clearance }: { tag: PublicTag; clearance: TagClearance }) {
-  const words = tagWords(clearance, tag.noChangeSince, 'ample')
+  const words = tagWords(clearance, tag.noChangeSince, 'all')
   const [where, tooling, ...print] = words.smallPrint
   return (
     <>
@@ -56,7 +56,7 @@ function Cleared({ tag, clearance }: { tag: PublicTag; clearance: TagClearance }
         said={
           <PageHeading className="leading-none!">
             <span className="block text-22 font-semibold tablet:text-26">Cleared up to</span>
-            <span className="mt-1 flex items-center gap-x-4">
+            <span className="mt-1 flex flex-wrap items-center gap-x-4 gap-y-1">
               <span className="text-76 leading-[0.95] font-semibold tracking-tight tablet:text-104">{words.load}</span>{' '}
               <span className="w-min text-26/[30px] font-semibold tablet:text-34/[37px]">{words.unit}</span>
             </span>
@@ -116,7 +116,7 @@ function Shut({ tag, answer }: { tag: PublicTag; answer: Exclude<PublicTag['answ
 export function CannotTell({ asking, onAgain }: { asking: boolean; onAgain: () => void }) {
   return (
     <>
-      <div role="alert" className="bg-stop text-on-stop print:bg-white! print:text-black!">
+      <div role="alert" className="bg-stop text-on-stop print:bg-[#fff]! print:text-[#000]!">
         <div className={classNames(column, 'py-6 tablet:py-8')}>
           <div className="flex items-center gap-4 tablet:gap-6">
             <Mark name="not-connected" size={72} tone="plate" className="size-14 shrink-0 tablet:size-[72px]" />

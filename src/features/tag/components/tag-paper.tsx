@@ -52,14 +52,29 @@ function Octagon({ className }: { className: string }) {
   )
 }
 
+/** Two long names share the width of a small tag by taking two lines each. */
+const LONG_NAMES = 46
+
 function Head({ tag, size }: { tag: PublicTag; size: TagSize }) {
   const small = size === 'small'
+  const name = pressWords(tag)
+  const long = name.length + tag.shopName.length > LONG_NAMES
   return (
     <div className={classNames('flex shrink-0 justify-between gap-x-[3mm]', small ? 'items-baseline' : 'flex-col')}>
-      <p className={classNames('min-w-0 leading-[1.15] font-semibold', small ? 'line-clamp-1 text-[3.7mm]' : 'line-clamp-2 text-[5mm]')}>
-        {pressWords(tag)}
+      <p
+        className={classNames(
+          'line-clamp-2 min-w-0 leading-[1.15] font-semibold',
+          small ? (long ? 'text-[2.9mm]' : 'text-[3.7mm]') : 'text-[5mm]',
+        )}
+      >
+        {name}
       </p>
-      <p className={classNames('leading-[1.2]', small ? 'line-clamp-1 max-w-[40mm] shrink-0 text-right text-[2.9mm]' : 'text-[3.4mm]')}>
+      <p
+        className={classNames(
+          'line-clamp-2 leading-[1.2]',
+          small ? classNames('max-w-[38mm] shrink-0 text-right', long ? 'text-[2.4mm]' : 'text-[2.9mm]') : 'text-[3.4mm]',
+        )}
+      >
         {tag.shopName}
       </p>
     </div>
@@ -86,9 +101,19 @@ function Paragraphs({ paragraphs }: { paragraphs: readonly SmallPrint[] }) {
 
 type Given = { tag: PublicTag; address: string; code: string; size: TagSize; onFull: (full: boolean) => void }
 
-function Load({ words, small }: { words: ReturnType<typeof tagWords>; small: boolean }) {
-  // A long figure, such as 104,100 in lbf, takes the same room in a smaller size.
-  const long = words.load.length > 5
+type LoadSizes = readonly [short: string, medium: string, long: string]
+const NUMBER: Record<TagSize, LoadSizes> = {
+  small: ['text-[15mm]', 'text-[13.5mm]', 'text-[9mm]'],
+  a6: ['text-[21mm]', 'text-[19mm]', 'text-[13mm]'],
+}
+
+function Load({ words, size }: { words: ReturnType<typeof tagWords>; size: TagSize }) {
+  const small = size === 'small'
+  // A longer figure or unit, such as 104.2 metric tons-force, takes the same room in a smaller size.
+  const { length } = words.load
+  const number = NUMBER[size][length > 5 ? 2 : length > 4 ? 1 : 0]
+  const long = words.unit.split(' ').some((word) => word.length > 6)
+  const unit = small ? (long ? 'text-[4.4mm]' : 'text-[5.6mm]') : long ? 'text-[6.2mm]' : 'text-[8mm]'
   return (
     <div className="min-w-0">
       <p
@@ -101,15 +126,8 @@ function Load({ words, small }: { words: ReturnType<typeof tagWords>; small: boo
         Cleared up to
       </p>
       <p className={classNames('flex items-center font-bold', small ? 'gap-[2mm]' : 'gap-[3mm]')}>
-        <span
-          className={classNames(
-            'leading-[0.84] tracking-[-0.02em]',
-            small ? (long ? 'text-[9mm]' : 'text-[15mm]') : long ? 'text-[13mm]' : 'text-[21mm]',
-          )}
-        >
-          {words.load}
-        </span>
-        <span className={classNames('max-w-min leading-[1.02]', small ? 'text-[5.6mm]' : 'text-[8mm]')}>{words.unit}</span>
+        <span className={classNames('leading-[0.84] tracking-[-0.02em] whitespace-nowrap', number)}>{words.load}</span>{' '}
+        <span className={classNames('w-min leading-[1.02]', unit)}>{words.unit}</span>
       </p>
       {words.loadNote !== '' && (
         <p className={small ? 'text-[2.6mm] leading-[1.1]' : 'mt-[0.6mm] text-[3.5mm] leading-[1.2]'}>{words.loadNote}.</p>
@@ -182,7 +200,7 @@ function Cleared({ tag, clearance, address, code, size, onFull }: Given & { clea
           <Head tag={tag} size={size} />
           <Edge />
           <div className="flex justify-between gap-[2mm] pt-[0.8mm] pb-[0.4mm]">
-            <Load words={words} small />
+            <Load words={words} size={size} />
             <Code address={address} code={code} className="-mr-[1.2mm] size-[21.5mm]" />
           </div>
         </div>
@@ -204,7 +222,7 @@ function Cleared({ tag, clearance, address, code, size, onFull }: Given & { clea
           <Edge />
         </div>
         <div className="pt-[1.4mm] pb-[1.4mm]">
-          <Load words={words} small={false} />
+          <Load words={words} size={size} />
         </div>
       </div>
       <div className="flex shrink-0 border-t-[0.4mm] border-black">

@@ -1,5 +1,5 @@
 import { zodResolver } from '@hookform/resolvers/zod'
-import { useState } from 'react'
+import { useEffect, useState } from 'react'
 import { useForm, useWatch } from 'react-hook-form'
 import { changeRule, type Touches } from '#shared/press/changes'
 import type { Attachment } from '#shared/ledger/envelope'
@@ -10,10 +10,12 @@ import { Button } from '../../../../components/button'
 import { TextArea } from '../../../../components/field'
 import { Form, FormActions, FormError } from '../../../../components/form'
 import { RadioRow } from '../../../../components/radio-row'
+import { useUser } from '../../../../lib/here'
 import { useProblemFields } from '../../../../lib/use-problem-fields'
 import { changeChoices } from '../words'
 import { ChangeEffect } from './change-effect'
 import { JointChoice } from './joint-choice'
+import { dropKeptChange, keepChange, readKeptChange } from '../../kept-change'
 import type { Chosen, Sending } from './sending'
 
 const HINTS: Record<Touches, string> = {
@@ -29,21 +31,35 @@ const schema = PRESS_PAYLOADS.changed.omit({ jointIds: true })
 
 type ChangeFormProps = Sending & Chosen & { state: PressState; onDone: () => void; onLeave: () => void }
 
-/** What was done to the press, or befell it, and before it is entered what that does. */
+/** What was done to the press, or befell it, and before it is entered what that does. What was begun outlives a reload. */
 export function ChangeForm({ state, chosen, onToggle, send, busy, onDone, onLeave }: ChangeFormProps) {
-  const form = useForm({ resolver: zodResolver(schema), defaultValues: { change: undefined, why: '' } })
-  const [photos, setPhotos] = useState<Attachment[]>([])
+  const user = useUser()
+  const [kept] = useState(() => readKeptChange(state.id, user.id))
+  const form = useForm({ resolver: zodResolver(schema), defaultValues: { change: kept?.change, why: kept?.why ?? '' } })
+  const [photos, setPhotos] = useState<Attachment[]>(kept?.photos ?? [])
   const { errors, submitCount } = form.formState
   const onError = useProblemFields(form)
-  const change = useWatch({ control: form.control, name: 'change' }) ?? undefined
+  const [typed, why] = useWatch({ control: form.control, name: ['change', 'why'] })
+  const change = typed ?? undefined
+  useEffect(
+    () => keepChange(state.id, user.id, { change, why, jointIds: chosen, photos }),
+    [state.id, user.id, change, why, chosen, photos],
+  )
   const joints = state.joints.filter((joint) => !joint.retired).sort((a, b) => a.number - b.number)
   const ends = change !== undefined && state.clearance.is === 'cleared' && changeRule(change).clearance
   const note =
     ends === 'ends' ? 'the clearance ends with it' : ends === 'waits for the joints' ? 'the clearance waits from then on' : undefined
+  const leave = (then: () => void) => () => {
+    dropKeptChange(state.id, user.id)
+    then()
+  }
   return (
     <Form
       onSubmit={form.handleSubmit((payload) =>
-        send([{ kind: 'changed', payload: { ...payload, jointIds: [...chosen] }, attachments: photos }], { onSuccess: onDone, onError }),
+        send([{ kind: 'changed', payload: { ...payload, jointIds: [...chosen] }, attachments: photos }], {
+          onSuccess: leave(onDone),
+          onError,
+        }),
       )}
     >
       <FormError message={errors.root?.message} attempt={submitCount} />
@@ -72,7 +88,7 @@ export function ChangeForm({ state, chosen, onToggle, send, busy, onDone, onLeav
         <Button type="submit" kind="next" busy={busy && 'Reporting it'} note={note}>
           Report this change
         </Button>
-        <Button onClick={onLeave}>Leave it</Button>
+        <Button onClick={leave(onLeave)}>Leave it</Button>
       </FormActions>
     </Form>
   )

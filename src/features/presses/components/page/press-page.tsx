@@ -11,7 +11,7 @@ import { useFiles } from '../../../../lib/attachment-held'
 import type { Placed } from '../../../../lib/attachment-places'
 import { classNames } from '../../../../lib/class-names'
 import { calendarDate } from '../../../../lib/dates'
-import { useCan, useShop } from '../../../../lib/here'
+import { useCan, useShop, useUser } from '../../../../lib/here'
 import { bringIntoView, useAnchor } from '../../../../lib/use-anchor'
 import { useTitle } from '../../../../lib/use-title'
 import { paths } from '../../../../paths'
@@ -23,6 +23,7 @@ import { ChangeForm } from './change-form'
 import { ClearanceFacts } from './clearance-facts'
 import { gathered, History, toldUntil } from './history'
 import { JointsPart } from './joints-part'
+import { readKeptChange } from '../../kept-change'
 import { LedgerFile } from './ledger-file'
 import { LoadPathSection } from './load-path-section'
 import { ofJoint, shownOf } from './press-photos'
@@ -55,8 +56,10 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
   useAnchor()
   const can = useCan()
   const shop = useShop()
-  const [open, setOpen] = useState<OpenForm>(null)
-  const meant = useJointsMeant(open === 'change' || open === 'repair')
+  const user = useUser()
+  const [begun] = useState(() => (can('press:change-report') ? readKeptChange(state.id, user.id) : undefined))
+  const [open, setOpen] = useState<OpenForm>(begun ? 'change' : null)
+  const meant = useJointsMeant(open === 'change' || open === 'repair', begun?.jointIds)
   const append = useAppendToPress(state.id, state.headSeq, open ?? 'joint')
   const joints = state.joints.filter((joint) => !joint.retired).sort((a, b) => a.number - b.number)
   const today = calendarDate(new Date())
@@ -102,7 +105,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
   )
   return (
     <div className="grid grow grid-cols-[minmax(0,1fr)] content-start desktop:grid-cols-[minmax(22rem,37.5%)_minmax(0,1fr)] desktop:grid-rows-[auto_1fr]">
-      <div id="answer" tabIndex={-1} className={classNames(inset, 'pt-6 pb-4 desktop:col-start-2 desktop:px-8')}>
+      <div id="answer" tabIndex={-1} className={classNames(inset, 'pt-6 pb-4 outline-none desktop:col-start-2 desktop:px-8')}>
         {tagHangs && can('press:tag-off') && (
           <TagPlate why={answer.answer === 'do not use' ? answer.why : ''} send={append.mutate} busy={append.isPending} />
         )}
@@ -133,7 +136,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
           </Section>
         )}
       </div>
-      <div className="ground-dye desktop:col-start-1 desktop:row-span-2 desktop:row-start-1">
+      <div className="ground-dye desktop:col-start-1 desktop:row-span-2 desktop:row-start-1 print:bg-[#fff]">
         <PressPlate
           press={drawn}
           joints={joints.map((joint) => ({
@@ -166,7 +169,7 @@ export function PressPage({ state, people, photos = [] }: PressPageProps) {
       <div className={classNames(inset, 'pt-4 pb-8 desktop:col-start-2 desktop:px-8 desktop:pt-0')}>
         {repairsFirst && <div className="mb-6">{repairs}</div>}
         <div className="grid gap-x-6 gap-y-6 desktop:grid-cols-[minmax(0,500fr)_minmax(0,212fr)]">
-          <div id="joints" tabIndex={-1} className="scroll-mt-4">
+          <div id="joints" tabIndex={-1} className="scroll-mt-4 outline-none">
             <JointsPart {...{ state, joints, walk, spotting, ...sending }} selectedId={meant.selectedId} onSelect={meant.select}>
               <AttachmentStrip className="mt-2" files={files} shown={shownOf(ofJoint(photos, meant.selectedId), state, people)} />
             </JointsPart>

@@ -196,7 +196,7 @@ export function Repairs({ shown, pointedId, onPoint, onOpen, children, ...sendin
   const closed = repairs.filter((repair) => repair.closed).reverse()
   const again = [...new Set(closed.flatMap((repair) => toExamine(shown.state, repair) ?? []))]
   return (
-    <div id="repairs" tabIndex={-1} className="scroll-mt-4">
+    <div id="repairs" tabIndex={-1} className="scroll-mt-4 outline-none">
       <Section title="Repairs" note={open.length === 0 ? 'none open' : `${open.length} open`}>
         {open.length > 0 && (
           <ul className="border-t border-hairline">

@@ -20,7 +20,7 @@ export function TagPlate({ why, busy, send }: TagPlateProps) {
       id="tag"
       tabIndex={-1}
       aria-labelledby="tag-title"
-      className="mb-4 scroll-mt-4 border-2 border-stop-ink bg-sheet px-4 py-3 tablet:px-5"
+      className="mb-4 scroll-mt-4 border-2 border-stop-ink outline-none bg-sheet px-4 py-3 tablet:px-5"
     >
       <div className="grid items-center gap-x-6 gap-y-3 tablet:grid-cols-[minmax(0,1fr)_13rem]">
         <div className="flex items-start gap-3">
