@@ -162,6 +162,14 @@ describe('the record of a countersigned test', () => {
   test('gives the spreadsheet to those who may export it only', async () => {
     await show(recordedTest())
     expect(screen.getByRole('link', { name: 'Download spreadsheet' })).toHaveAttribute('href', `/api/proof-tests/${ids.test}/record.xlsx`)
+    expect(screen.getByRole('link', { name: 'Download PDF, A4' })).toHaveAttribute(
+      'href',
+      `/api/proof-tests/${ids.test}/record.pdf?paper=a4`,
+    )
+    expect(screen.getByRole('link', { name: 'Download PDF, Letter' })).toHaveAttribute(
+      'href',
+      `/api/proof-tests/${ids.test}/record.pdf?paper=letter`,
+    )
     document.body.replaceChildren()
     await show(recordedTest(), crew)
     expect(screen.queryByRole('link', { name: 'Download spreadsheet' })).toBeNull()

@@ -1,7 +1,7 @@
 import { useDeferredValue } from 'react'
 import { useWatch } from 'react-hook-form'
 import { FRAME_KINDS } from '#shared/press/model'
-import { drawnPress, looseParts } from '../../../../components/instruments/drawn-press'
+import { drawnPress, looseParts } from '#shared/drawing/drawn-press'
 import { PressPlate } from '../../../../components/instruments/press-plate'
 import { Mark } from '../../../../components/marks'
 import { loadPathSoFar } from './checks'

@@ -1,6 +1,6 @@
 import type { ReactNode } from 'react'
 import type { PressJoint } from '#shared/press/state'
-import { jointState } from '../../../../components/instruments/drawn-press'
+import { jointState } from '#shared/drawing/drawn-press'
 import { JointBalloon } from '../../../../components/marks'
 import { classNames } from '../../../../lib/class-names'
 import { shortDate } from '../../../../lib/dates'
