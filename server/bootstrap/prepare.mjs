@@ -77,6 +77,7 @@ function missingDebianPackages() {
     if (!findProgram('chromium')) missing.push('chromium')
     if (!hasFonts()) missing.push('fonts-liberation')
     if (!findProgram('soffice')) missing.push('libreoffice-calc-nogui')
+    if (!findProgram('pdftotext')) missing.push('poppler-utils')
   }
   return [...new Set(missing)]
 }

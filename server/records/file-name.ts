@@ -1,5 +1,5 @@
 /** Name of a file made of words that people chose, without what a file name can't hold. */
-export function fileName(words: readonly string[], extension: 'xlsx' | 'ledger.json'): string {
+export function fileName(words: readonly string[], extension: 'xlsx' | 'pdf' | 'ledger.json'): string {
   const clean = words.map((word) =>
     word
       .normalize('NFC')

@@ -19,5 +19,8 @@ export const NO_FILES: RecordFiles = { present: new Set(), altered: new Set(), p
 
 /** So many photos stand in a workbook as pictures, so that it still opens; the others are named in it. */
 export const MOST_PICTURES = 60
+/** On paper, where each takes a third of a page's width. */
+export const MOST_ON_PAPER = 24
+
 /** px of the longer side of a picture in a workbook. */
 export const PICTURE_LONGEST = 800

@@ -4,6 +4,7 @@ import type { Seal } from '#shared/ledger/seal'
 import { foldProofTest } from '#shared/proof-test/apply'
 import type { Opened } from '#shared/proof-test/entries'
 import { evaluateTest, type TestEvaluation } from '#shared/proof-test/evaluate'
+import { frozenDifferences, type FrozenDifference } from '#shared/proof-test/record'
 import type { ProofTestState } from '#shared/proof-test/state'
 import { fileName } from './file-name'
 
@@ -24,6 +25,7 @@ export interface RecordOfTest extends RecordSource {
   opened: Opened
   evaluation: TestEvaluation
   chain: ChainCheck
+  differences: FrozenDifference[]
   /** "PT-0043, Press 2": what every sheet bears. */
   title: string
   nameOf(personId: string): string
@@ -47,6 +49,7 @@ export function recordOf(source: RecordSource): RecordOfTest {
     opened,
     evaluation: evaluateTest(state),
     chain: checkChain(source.stored),
+    differences: frozenDifferences(source.id, entries),
     title: `${opened.number}, ${opened.press.name}`,
     nameOf: (personId) => named[personId] ?? 'a person unknown to this record',
   }
@@ -59,6 +62,6 @@ export function momentText(iso: string): string {
 }
 
 /** Name of the file that a record is saved as: number and press, without what a file name can't hold. */
-export function recordFileName(opened: Pick<Opened, 'number' | 'press'>): string {
-  return fileName([opened.number, opened.press.name], 'xlsx')
+export function recordFileName(opened: Pick<Opened, 'number' | 'press'>, extension: 'xlsx' | 'pdf' = 'xlsx'): string {
+  return fileName([opened.number, opened.press.name], extension)
 }

@@ -1,9 +1,14 @@
+import { pipeline } from 'node:stream/promises'
 import { Router } from 'express'
 import type { Response } from 'express'
 import type { Transaction } from 'sequelize'
 import type { AppContext } from '../context'
+import { recordPdfQuerySchema } from '#shared/api/records'
 import { authenticate } from '../middleware/authenticate'
-import { idParam } from '../middleware/validate'
+import { originOf } from '../middleware/origin'
+import { idParam, parseQuery } from '../middleware/validate'
+import { MOST_ON_PAPER } from '../records/files'
+import { recordPdf } from '../records/pdf/record-pdf'
 import { recordFileName, recordOf } from '../records/record'
 import { recordWorkbook } from '../records/record-workbook'
 import { ledgerFile, type LedgerFile } from '../services/ledger-files'
@@ -25,6 +30,18 @@ export function recordRoutes(context: AppContext): Router {
     const files = await recordFiles(context, opened.shop.id, state.attachments)
     const workbook = await recordWorkbook(source, files)
     response.attachment(recordFileName(opened)).type(WORKBOOK).send(workbook)
+  })
+
+  router.get('/proof-tests/:proofTestId/record.pdf', authenticate(context), async (request, response) => {
+    const id = idParam(request, 'proofTestId')
+    const { paper } = parseQuery(request, recordPdfQuerySchema)
+    const source = await workOnTest(context, request, id, (work) => readRecord(context, work, id))
+    const { opened, state } = recordOf(source)
+    const files = await recordFiles(context, opened.shop.id, state.attachments, MOST_ON_PAPER)
+    // Set whole before the first byte goes out: what can't be set is answered as a problem, not as half a file.
+    const document = recordPdf(source, { paper, files, checkAddress: `${originOf(context.config, request)}/check` })
+    response.attachment(recordFileName(opened, 'pdf')).type('application/pdf')
+    await pipeline(document, response)
   })
 
   const sendFile = (response: Response, { name, text }: LedgerFile) =>

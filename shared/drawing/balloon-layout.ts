@@ -113,11 +113,12 @@ function shareOut(wanted: readonly Wanted[], elevation: Elevation, lanes: readon
   for (const lane of lanes) {
     const here = shared.get(lane) ?? []
     while (here.length > room) {
-      const near = lanes
-        .filter((other) => (shared.get(other)?.length ?? room) < room)
-        .sort((a, b) => Math.abs(elevation.lanes[a] - elevation.lanes[lane]) - Math.abs(elevation.lanes[b] - elevation.lanes[lane]))[0]
-      if (near === undefined) return shared
       const free = here.findLastIndex(({ anchor }) => anchor === null)
+      // What points at nothing stands beside the frame rather than on it.
+      const far = (other: Lane): number =>
+        Math.abs(elevation.lanes[other] - elevation.lanes[lane]) + (free >= 0 && other.startsWith('inner') ? 1e4 : 0)
+      const near = lanes.filter((other) => (shared.get(other)?.length ?? room) < room).sort((x, y) => far(x) - far(y))[0]
+      if (near === undefined) return shared
       const [moved] = here.splice(free >= 0 ? free : here.length - 1, 1)
       if (moved !== undefined) shared.get(near)?.push(moved)
     }

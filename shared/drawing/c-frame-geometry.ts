@@ -67,9 +67,9 @@ export function cFrameElevation(frame: CFrame): Elevation {
     parts: {
       head: { x: (axis + column) / 2, y: (top + headBottom) / 2 },
       'upright-left': { x: (column + back) / 2, y: (headBottom + bedTop) / 2 },
-      seat: { x: axis, y: headBottom + 10 },
-      ram: { x: axis, y: (ram.seat + ram.cylinder) / 2 },
-      adaptor: { x: axis, y: (ram.rod + ram.adaptor) / 2 },
+      seat: { x: axis + span * 0.16, y: headBottom + 10 },
+      ram: { x: axis + span * 0.13, y: (ram.seat + ram.cylinder) / 2 },
+      adaptor: { x: axis + span * 0.12, y: (ram.rod + ram.adaptor) / 2 },
       bed: { x: (axis + column) / 2, y: (bedTop + bedBottom) / 2 },
       'stiffener-left': { x: nose + 18, y: (bedTop + bedBottom) / 2 },
       'stiffener-right': { x: column + 14, y: (headBottom + bedTop) / 2 },

@@ -1,3 +1,5 @@
+import type { PrintDates } from '#shared/proof-test/print-dates'
+
 /**
  * Dates as they are read on every screen: "21 Sep 2026", "21 September 2026", "14:27". A calendar date
  * ("2026-09-21") is a day, not a moment, and never shifts with the reader's time zone.
@@ -56,3 +58,6 @@ export function calendarDate(moment: Date): string {
 export function daysBetween(from: string, to: string): number {
   return Math.round((partsOf(to).date.getTime() - partsOf(from).date.getTime()) / 86_400_000)
 }
+
+/** The same for words that a record makes: days and moments where the reader is. */
+export const LOCAL_DATES: PrintDates = { shortDate, longDate, clockTime, dateAndTime }

@@ -72,7 +72,7 @@ describe('a witness from outside', () => {
   it('sees that one test, with everything that belongs to its record', async () => {
     const { witness, run } = await openWithOutsider()
     const { client } = witness
-    for (const path of ['', '/entries', '/ledger.json', '/record.xlsx', '/attachments']) {
+    for (const path of ['', '/entries', '/ledger.json', '/record.xlsx', '/record.pdf', '/attachments']) {
       await client.get(`/api/proof-tests/${run.id}${path}`).expect(200)
     }
     const session = sessionResponseSchema.parse((await client.get('/api/session').expect(200)).body)
@@ -98,7 +98,7 @@ describe('a witness from outside', () => {
       `/api/instruments/${instrument}`,
       `/api/protocols/${run.state.opened?.protocol.id}`,
       `/api/proof-tests/${other.id}`,
-      ...['entries', 'ledger.json', 'record.xlsx', 'attachments'].map((tail) => `/api/proof-tests/${other.id}/${tail}`),
+      ...['entries', 'ledger.json', 'record.xlsx', 'record.pdf', 'attachments'].map((tail) => `/api/proof-tests/${other.id}/${tail}`),
       `/api/mail/${letter}`,
       `/api/stream?ledgers=${other.id}`,
       `/api/stream?ledgers=${pressId}`,

@@ -112,6 +112,7 @@ describe('a signed record that was altered in the database', () => {
     const refused = problemSchema.parse((await client.get(`/api/proof-tests/${run.id}/record.xlsx`).expect(409)).body)
     expect(refused).toMatchObject({ code: 'altered' })
     expect(refused.detail).toContain('This record was altered at entry 1.')
+    expect(problemSchema.parse((await client.get(`/api/proof-tests/${run.id}/record.pdf`).expect(409)).body)).toEqual(refused)
     const response = await client.get(`/api/proof-tests/${run.id}/ledger.json`).buffer(true).expect(200)
     expect(verifyLedgerFile(new TextEncoder().encode(response.text))).toMatchObject({ verdict: 'altered', at: 1 })
     expect(testServer().loggedErrors.splice(0).join()).toContain('not whole')

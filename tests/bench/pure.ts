@@ -1,5 +1,6 @@
 import { foldProofTest } from '#shared/proof-test/apply'
 import type { LedgerEntry } from '#shared/ledger/envelope'
+import { recordPdf } from '#server/records/pdf/record-pdf'
 import { recordWorkbook } from '#server/records/record-workbook'
 import { recordedTest, storedEntries } from '../factories/recorded-test'
 import { inTurn, medianLine } from './measure'
@@ -34,5 +35,13 @@ export async function pureLines(): Promise<Line[]> {
     writtenAt: '2026-09-21T08:00:00.000Z',
   }
   const [written = []] = await inTurn([() => recordWorkbook(source)], 15)
-  return [medianLine('apply over 10,000 entries', folded, 20), medianLine('one record.xlsx', written, 300)]
+  const printed = async (): Promise<void> => {
+    for await (const _part of recordPdf(source, { paper: 'a4', checkAddress: 'https://press.example/check' })) continue
+  }
+  const [set = []] = await inTurn([printed], 15)
+  return [
+    medianLine('apply over 10,000 entries', folded, 20),
+    medianLine('one record.xlsx', written, 300),
+    medianLine('one record.pdf', set, 1000),
+  ]
 }

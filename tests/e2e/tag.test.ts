@@ -77,7 +77,7 @@ async function cutOff(page: Page): Promise<string[]> {
     return [...paper.querySelectorAll<HTMLElement>('p, div, svg')].flatMap((part) => {
       const box = part.getBoundingClientRect()
       const outside = box.bottom > edge.bottom || box.right > edge.right + 0.5
-      const clips = getComputedStyle(part).overflowY === 'hidden'
+      const clips = ['hidden', 'clip'].includes(getComputedStyle(part).overflowY)
       const clipped = clips && part.scrollHeight > part.clientHeight + 2
       return outside || clipped ? [part.textContent ?? part.tagName] : []
     })

@@ -38,7 +38,8 @@ const pointColumns: Column[] = [
   { header: 'Increment\nm', width: 10, align: 'right' },
 ]
 
-const STATES = {
+/** How a calibration stood on the day of the test, in words. */
+export const CALIBRATION_STATES = {
   'in-date': 'in date',
   'out-of-date': 'out of date',
   'out-of-tolerance': 'out of tolerance',
@@ -59,7 +60,8 @@ export function accuracyText(accuracy: GaugeAccuracy): string {
   return `ASME B40.100 grade ${accuracy.grade}, ${zones}`
 }
 
-function detailCells({ details }: FrozenInstrument): Content[] {
+/** Kind, description, range with its unit, increment with its unit, accuracy. */
+export function detailCells({ details }: FrozenInstrument): Content[] {
   switch (details.kind) {
     case 'gauge':
       return [
@@ -112,7 +114,7 @@ export function instrumentsSheet(workbook: Workbook, record: RecordOfTest): void
       ...detailCells(instrument),
       calibration?.calibratedOn ?? null,
       calibration?.dueOn ?? null,
-      STATES[calibrationState(calibration, day)],
+      CALIBRATION_STATES[calibrationState(calibration, day)],
       calibration?.certificate ?? null,
       calibration?.comparedWith ?? null,
       asTyped(uncertainty?.value ?? null),

@@ -33,7 +33,7 @@ function heightOf(contents: readonly Content[]): number {
 }
 
 /** What an entry is about, in a few words: what the photo should show. */
-function aboutEntry({ entries, state }: RecordOfTest, seq: number): string {
+export function aboutEntry({ entries, state }: RecordOfTest, seq: number): string {
   const entry = entries.find((one) => one.seq === seq)
   if (!entry) return ''
   const draft = { kind: entry.kind, payload: entry.payload } as ProofTestDraft
@@ -52,7 +52,8 @@ function aboutEntry({ entries, state }: RecordOfTest, seq: number): string {
   }
 }
 
-function whereItIs(record: RecordOfTest, files: RecordFiles, { sha256, lost }: NamedAttachment): Content {
+/** Whether the bytes of a file are here, altered, given up or not here. */
+export function whereItIs(record: RecordOfTest, files: RecordFiles, { sha256, lost }: NamedAttachment): Content {
   if (files.altered.has(sha256)) return { words: 'Altered after it was kept: not shown', bold: true, colour: colours.stop }
   if (files.present.has(sha256)) return 'On the server'
   if (lost) return { words: `Declared lost by ${record.nameOf(lost.by)}, ${momentText(lost.at)}: ${lost.why}`, colour: colours.stop }

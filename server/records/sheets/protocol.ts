@@ -1,6 +1,6 @@
 import type { Workbook } from 'exceljs'
 import { toSI, unitLabel } from '#shared/units'
-import type { RecordOfTest } from '../record'
+import { momentText, type RecordOfTest } from '../record'
 import { FIRST_ROW, addSheet, put, putRow, type Column, type Content } from '../sheet'
 
 export const PROTOCOL_SHEET = 'Protocol and limits'
@@ -12,16 +12,17 @@ const columns: Column[] = [
   { header: 'Name in formulas', width: 20 },
 ]
 
-type Line = [what: string, value: Content, of: string, name?: string]
+export type ProtocolLine = [what: string, value: Content, of: string, name?: string]
 
 const percent = (value: number): Content => ({ number: value / 100, format: '0.0%' })
 const plain = (value: number): Content => ({ number: value, format: 'General' })
 
-function linesOf(record: RecordOfTest): Line[] {
+/** The plan a line each: what, its value, of what. */
+export function protocolLines(record: RecordOfTest): ProtocolLine[] {
   const { opened } = record
   const { content } = opened.protocol
   const { limits } = content
-  const most: Line[] = limits.mostSet
+  const most: ProtocolLine[] = limits.mostSet
     ? [
         [
           'Most set, whatever the deflection',
@@ -34,8 +35,8 @@ function linesOf(record: RecordOfTest): Line[] {
   return [
     ['Protocol', { words: opened.protocol.name, bold: true }, `version ${opened.protocol.version}, frozen when the test was opened`],
     ['Purpose', content.purpose, ''],
-    ...opened.legs.map((leg, index): Line => [`Leg ${index + 1}`, leg.label, `ram ${leg.ramPosition}, bed hole ${leg.bedHole}`]),
-    ...content.stages.map((stage): Line => [
+    ...opened.legs.map((leg, index): ProtocolLine => [`Leg ${index + 1}`, leg.label, `ram ${leg.ramPosition}, bed hole ${leg.bedHole}`]),
+    ...content.stages.map((stage): ProtocolLine => [
       `Stage at ${stage.percent} %`,
       plain(stage.holdSeconds),
       stage.percent > 100 ? 's hold, in the second climb only' : 's hold in the first climb',
@@ -57,7 +58,7 @@ function linesOf(record: RecordOfTest): Line[] {
     ['Decision rule', content.decisionRule === 'simple' ? 'simple acceptance' : 'guard band of U', 'k = 2; JCGM 106, ILAC-G8'],
     ['Margin', plain(content.marginDivisor), 'the lowest force less U is divided by this'],
     ['Examination due after', plain(content.examinationMonths), 'months, and after any repair, change, abnormal load or shock'],
-    ...(content.aboveRatingRule === '' ? [] : [['Rule for a load above rating', content.aboveRatingRule, ''] satisfies Line]),
+    ...(content.aboveRatingRule === '' ? [] : [['Rule for a load above rating', content.aboveRatingRule, ''] satisfies ProtocolLine]),
     ['Walk-down holds for', plain(opened.walkDownHours), 'hours'],
   ]
 }
@@ -66,18 +67,19 @@ function linesOf(record: RecordOfTest): Line[] {
 export function protocolSheet(workbook: Workbook, record: RecordOfTest): void {
   const note = 'Limits without a named source are common practice, or the shop’s own.'
   const sheet = addSheet(workbook, PROTOCOL_SHEET, { title: 'Protocol and limits', note, record: record.title }, columns)
-  linesOf(record).forEach(([what, value, of, name], index) => {
+  protocolLines(record).forEach(([what, value, of, name], index) => {
     const row = FIRST_ROW + index
     putRow(sheet, row, columns, [what, value, of, name ?? null])
     if (name !== undefined) sheet.getCell(row, 2).names = [name]
   })
-  const next = FIRST_ROW + linesOf(record).length + 1
-  const { setUp } = record.state
-  if (setUp) {
-    const relief = setUp.reliefSet ? `relief set to ${setUp.reliefSet.text} ${setUp.reliefSet.unit}` : 'no relief setting noted'
-    put(
-      sheet.getCell(next, 1),
-      `Set-up confirmed ${setUp.at}: ${setUp.items.length} items; ${relief}; stroke at ${setUp.strokePercent} %.${setUp.note ? ` ${setUp.note}` : ''}`,
-    )
-  }
+  const confirmed = setUpText(record)
+  if (confirmed !== null) put(sheet.getCell(FIRST_ROW + protocolLines(record).length + 1, 1), confirmed)
+}
+
+/** What was confirmed before load, on one line; null while nothing was. */
+export function setUpText({ state }: RecordOfTest): string | null {
+  const { setUp } = state
+  if (!setUp) return null
+  const relief = setUp.reliefSet ? `relief set to ${setUp.reliefSet.text} ${setUp.reliefSet.unit}` : 'no relief setting noted'
+  return `Set-up confirmed ${momentText(setUp.at)}: ${setUp.items.length} items; ${relief}; stroke at ${setUp.strokePercent} %.${setUp.note ? ` ${setUp.note}` : ''}`
 }

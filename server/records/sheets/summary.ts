@@ -5,7 +5,6 @@ import {
   clearedLoad,
   criteriaHeading,
   energyText,
-  frozenDifferences,
   headlineOf,
   inPrint,
   placesTested,
@@ -118,12 +117,11 @@ export function summarySheet(workbook: Workbook, record: RecordOfTest): void {
   }
   row = criteria(sheet, row + 1, record)
   row = lines(sheet, row + 1, 'Against "accepted"', evaluation.against)
-  const differences = frozenDifferences(record.id, record.entries)
   row = lines(
     sheet,
     row,
     'Today’s arithmetic differs from the evaluation frozen at the conclusion',
-    differences.map(({ what, frozen, today }) => `${what}: frozen ${frozen}; today ${today}`),
+    record.differences.map(({ what, frozen, today }) => `${what}: frozen ${frozen}; today ${today}`),
   )
   row = lines(
     sheet,

@@ -77,14 +77,16 @@ function ramRow(sheet: Worksheet, row: number, ram: Ram, index: number): void {
   sheet.getCell(row, 13).names = [`ram_${index + 1}_weight`]
 }
 
-interface Rating {
+/** What one part of the train may carry: as given, and the force (N) it comes to. */
+export interface Rating {
   name: string
   typed: { text: string; unit: Unit }
   newton: number
   formula: (cell: string) => string
 }
 
-function ratingsOf(record: RecordOfTest): Rating[] {
+/** The rating of every part of the train in the order in which a record lists them. */
+export function ratingsOf(record: RecordOfTest): Rating[] {
   const { rams, train } = record.opened.press
   const area = totalArea(record.opened.press)
   const byPressure = (name: string, typed: Rating['typed']): Rating => ({

@@ -3,12 +3,10 @@ import type { LedgerEntry } from '#shared/ledger/envelope'
 import { checkChain, entryText, type ChainCheck } from '#shared/ledger/chain'
 import { checkLedger, type LedgerCheck, type PublicSealKey } from '#shared/ledger/check-ledger'
 import { foldProofTest } from '#shared/proof-test/apply'
-import { correctionLetter } from '#shared/proof-test/corrections'
-import type { Opened, Reading } from '#shared/proof-test/entries'
+import type { Opened } from '#shared/proof-test/entries'
 import { evaluateTest, type TestEvaluation } from '#shared/proof-test/evaluate'
 import { frozenDifferences, standingOf, type FrozenDifference, type RecordStanding } from '#shared/proof-test/record'
-import type { Correction, ProofTestState, Row } from '#shared/proof-test/state'
-import type { MarkName } from '../../components/marks'
+import type { ProofTestState } from '#shared/proof-test/state'
 import { placedIn, type Placed } from '../../lib/attachment-places'
 
 /** A record as the page shows it: everything follows from the ledger. */
@@ -71,38 +69,4 @@ export function readRecord(answer: EntriesResponse, keys?: readonly PublicSealKe
     photos: placedIn(answer.entries),
     nameOf: (personId) => named[personId] ?? 'somebody unknown here',
   }
-}
-
-export interface ShownReading {
-  text: string
-  /** What was typed before, oldest first, with the letter of the correction that replaced it. */
-  struck: { text: string; letter: string }[]
-}
-
-/** A reading of a row as it counts, and what was struck through on the way to it. */
-export function shownReading(row: Row, sourceId: string, corrections: readonly Correction[]): ShownReading | null {
-  const counts: Reading | undefined = row.readings.find((reading) => reading.sourceId === sourceId)
-  if (!counts) return null
-  const struck = corrections.flatMap((correction, index) =>
-    correction.correctsEntryId === row.entryId && correction.sourceId === sourceId
-      ? [{ text: correction.from.text, letter: correctionLetter(index) }]
-      : [],
-  )
-  return { text: counts.text, struck }
-}
-
-const STANDING_MARKS: Record<RecordStanding, MarkName> = {
-  'not opened': 'to-come',
-  'under way': 'under-way',
-  stopped: 'stop',
-  'to sign': 'to-countersign',
-  'to countersign': 'to-countersign',
-  accepted: 'within',
-  rejected: 'stop',
-  abandoned: 'abandoned',
-}
-
-/** The shape beside a record's headline. */
-export function standingMark(standing: RecordStanding): MarkName {
-  return STANDING_MARKS[standing]
 }

@@ -1,17 +1,10 @@
-import { criteriaHeading, joinWords, verdictWord } from '#shared/proof-test/record'
-import type { Criterion, CriterionVerdict } from '#shared/proof-test/evaluate-climb'
+import { criteriaHeading, verdictWord } from '#shared/proof-test/record'
+import { notMeasuredText, verdictMark } from '#shared/proof-test/record-words'
+import type { Criterion } from '#shared/proof-test/evaluate-climb'
 import { HowLinks } from '../../../components/how-link'
-import { Mark, type MarkName } from '../../../components/marks'
+import { Mark } from '../../../components/marks'
 import { setPercent } from '../../../components/typeset'
 import type { RecordView } from '../record-view'
-
-const MARKS: Record<CriterionVerdict, MarkName> = {
-  within: 'within',
-  beyond: 'beyond',
-  undecided: 'undecided',
-  wait: 'wait',
-  'not-read': 'not-read',
-}
 
 function CriterionRow({ criterion }: { criterion: Criterion }) {
   const { verdict, label, reading, limitText } = criterion
@@ -19,7 +12,7 @@ function CriterionRow({ criterion }: { criterion: Criterion }) {
   return (
     <tr className="border-b border-hairline max-tablet:grid max-tablet:grid-cols-[2rem_1fr_1fr] max-tablet:py-1.5">
       <td className="w-8 align-middle max-tablet:row-span-2 max-tablet:self-center tablet:py-1.5">
-        <Mark name={MARKS[verdict]} size={20} label={verdictWord(verdict)} />
+        <Mark name={verdictMark(verdict)} size={20} label={verdictWord(verdict)} />
       </td>
       <th scope="row" className="pr-3 text-left font-condensed font-normal max-tablet:col-span-2 tablet:py-1.5">
         {label}
@@ -34,7 +27,6 @@ function CriterionRow({ criterion }: { criterion: Criterion }) {
 /** Every criterion at its worst, with number, limit and verdict on one line, and what nobody measured. */
 export function CriteriaTable({ record }: { record: RecordView }) {
   const { evaluation, opened, broken } = record
-  const unmeasured = opened.notMeasured
   return (
     <section>
       <h2 className="pb-2 text-20">{broken === null ? criteriaHeading(evaluation) : 'Worked out from altered entries'}</h2>
@@ -57,13 +49,13 @@ export function CriteriaTable({ record }: { record: RecordView }) {
           {evaluation.criteria.map((criterion) => (
             <CriterionRow key={`${criterion.id} ${criterion.label}`} criterion={criterion} />
           ))}
-          {unmeasured.length > 0 && (
+          {opened.notMeasured.length > 0 && (
             <tr className="border-b border-hairline max-tablet:grid max-tablet:grid-cols-[2rem_1fr]">
               <td className="w-8 py-1.5 align-middle">
                 <Mark name="not-read" size={20} label="not measured" />
               </td>
               <td colSpan={3} className="py-1.5 font-semibold">
-                {joinWords(unmeasured.map((name, index) => (index === 0 ? name : name.toLowerCase())))} not measured
+                {notMeasuredText(opened)}
               </td>
             </tr>
           )}

@@ -1,5 +1,5 @@
 import { Fragment } from 'react'
-import type { ShownReading } from '../record-view'
+import type { ShownReading } from '#shared/proof-test/record-stages'
 
 /** A reading as it counts; what was typed before stays, struck through, with the letter of its correction. */
 export function Reading({ reading }: { reading: ShownReading | null }) {

@@ -1,8 +1,9 @@
-import { clearedLoad, headlineOf, inPrint, staticLoadsText } from '#shared/proof-test/record'
+import { headlineOf } from '#shared/proof-test/record'
+import { courseText, resultLines, standingMark } from '#shared/proof-test/record-words'
 import { Mark } from '../../../components/marks'
 import { PageHeading } from '../../../components/page'
-import { clockTime, longDate } from '../../../lib/dates'
-import { standingMark, type RecordView } from '../record-view'
+import { LOCAL_DATES, longDate } from '../../../lib/dates'
+import type { RecordView } from '../record-view'
 
 /** Whose record this is: the shop, the number, the press and the day. */
 export function RecordHead({ record }: { record: RecordView }) {
@@ -29,37 +30,6 @@ export function RecordHead({ record }: { record: RecordView }) {
   )
 }
 
-function lines(record: RecordView): string[] {
-  const { state, evaluation, opened, standing } = record
-  const cleared = clearedLoad(state, evaluation)
-  switch (standing) {
-    case 'accepted':
-      if (cleared === null) return ['The readings leave nothing to clear the press to.']
-      return [
-        `${cleared.newton}, rated ${cleared.rated}. ${cleared.gauge === null ? '' : `${cleared.gauge}. `}${cleared.where}. Until ${longDate(cleared.until)}.`,
-        `Cleared by ${cleared.by} on ${longDate(cleared.on)} after ${staticLoadsText(cleared.staticLoads)}. No other bed hole was tested.`,
-      ]
-    case 'rejected':
-    case 'abandoned':
-      return [state.conclusion?.why ?? '', state.stopped ? `Stopped: ${state.stopped.why}` : '', 'This test clears the press to no load.']
-    case 'stopped':
-      return [`${state.stopped?.why ?? ''}`, 'A stopped test can’t go back under load. The lead concludes it as rejected or abandoned.']
-    case 'to sign': {
-      const declined = state.declined.at(-1)
-      return [
-        ...(declined ? [`${declined.printedName} declined to countersign: ${declined.why}`] : []),
-        `Waits for ${opened.people.lead.name} to sign. Until it is countersigned it clears nothing.`,
-      ]
-    }
-    case 'to countersign':
-      return [
-        `Signed by ${state.signed?.printedName ?? ''}. Waits for ${opened.people.witness.name} to countersign; until then it clears nothing.`,
-      ]
-    default:
-      return [`Rated ${inPrint(opened.press.ratedLoad)}. What follows is as far as the ledger has come.`]
-  }
-}
-
 /** What it came to, in one line that can be read from across the room, and what it rests on. */
 export function RecordResult({ record }: { record: RecordView }) {
   const { state, evaluation, standing, broken } = record
@@ -76,7 +46,10 @@ export function RecordResult({ record }: { record: RecordView }) {
         <p className={`text-26 font-semibold tablet:text-34 desktop:text-46 ${isRed ? 'text-stop-ink' : 'text-ink'}`} data-part="headline">
           {broken === null ? headline : <del className="decoration-2">{headline}</del>}
         </p>
-        {(broken === null ? lines(record) : ['This is worked out from entries that were altered: don’t load the press by it.'])
+        {(broken === null
+          ? resultLines(record, LOCAL_DATES)
+          : ['This is worked out from entries that were altered: don’t load the press by it.']
+        )
           .filter((line) => line !== '')
           .map((line) => (
             <p key={line} className="mt-0.5 text-18">
@@ -90,27 +63,12 @@ export function RecordResult({ record }: { record: RecordView }) {
 
 /** Under which plan, in how many legs, and when. */
 export function RecordCourse({ record }: { record: RecordView }) {
-  const { opened, state } = record
-  const legs = opened.legs.length === 1 ? 'One leg' : `${opened.legs.length} legs`
-  const walked = state.joints
-    .map((joint) => joint.before?.at ?? '')
-    .sort()
-    .at(-1)
-  const released = state.legs
-    .flatMap((leg) => leg.climbs.flatMap((climb) => climb.released?.at ?? []))
-    .sort()
-    .at(-1)
-  const parts = [
-    state.openedAt && `Opened ${longDate(state.openedAt)}`,
-    walked && `walk-down closed ${clockTime(walked)}`,
-    released && `released ${clockTime(released)}`,
-    state.conclusion && `concluded ${clockTime(state.conclusion.at)}`,
-  ].filter(Boolean)
+  const { state } = record
   const zone = new Intl.DateTimeFormat('en-GB', { timeZoneName: 'short' }).formatToParts(new Date(state.openedAt ?? 0))
   const zoneName = zone.find((part) => part.type === 'timeZoneName')?.value ?? ''
   return (
     <p className="py-3">
-      {opened.protocol.name}, version {opened.protocol.version}. {legs}. {parts.join(', ')}. Times are {zoneName}.
+      {courseText(record, LOCAL_DATES)} Times are {zoneName}.
     </p>
   )
 }

@@ -1,7 +1,7 @@
 import { orderWalked, jointMark, type Occasion } from '#shared/proof-test/walked'
 import type { JointState } from '#shared/proof-test/state'
 import { Fit } from '../../../components/fit'
-import { drawnPress, holeInUse } from '../../../components/instruments/drawn-press'
+import { drawnPress, holeInUse } from '#shared/drawing/drawn-press'
 import { JointDrawing, PrintedElevation } from '../../../components/instruments/joint-drawing'
 import { usePanZoom } from '../../../components/instruments/use-pan-zoom'
 import { ZoomKeys, ZoomWindow } from '../../../components/instruments/zoom-window'

@@ -1,3 +1,4 @@
+import type { PaperSize } from '#shared/api/records'
 import { ButtonAnchor, ButtonLink, TextLink } from '../../../components/button'
 import { inset } from '../../../components/page'
 import { ZonedSheet } from '../../../components/zoned-sheet'
@@ -32,8 +33,13 @@ interface RecordSheetProps {
   today: Date
 }
 
+const PAPERS: readonly { paper: PaperSize; name: string }[] = [
+  { paper: 'a4', name: 'A4' },
+  { paper: 'letter', name: 'Letter' },
+]
+
 function Actions({ record, turn, mayExport, part }: RecordSheetProps) {
-  const file = `/api/proof-tests/${encodeURIComponent(record.id)}/record.xlsx`
+  const file = `/api/proof-tests/${encodeURIComponent(record.id)}/record`
   return (
     <nav aria-label="This record" className="flex flex-wrap items-center justify-between gap-3 py-3 print:hidden">
       <TextLink to={paths.proofTests.href()}>All proof tests</TextLink>
@@ -43,9 +49,14 @@ function Actions({ record, turn, mayExport, part }: RecordSheetProps) {
             <ButtonAnchor href={ledgerFileAddress(record.id)} download size="line">
               Download ledger file
             </ButtonAnchor>
-            <ButtonAnchor href={file} download size="line">
+            <ButtonAnchor href={`${file}.xlsx`} download size="line">
               Download spreadsheet
             </ButtonAnchor>
+            {PAPERS.map(({ paper, name }) => (
+              <ButtonAnchor key={paper} href={`${file}.pdf?paper=${paper}`} download size="line">
+                Download PDF, {name}
+              </ButtonAnchor>
+            ))}
           </>
         )}
         {(record.standing === 'under way' || record.standing === 'stopped') && part === 'lead' && (

@@ -1,12 +1,11 @@
 import type { ReactNode } from 'react'
 import type { Signature } from '#shared/proof-test/entries'
+import { hashLines, lateness } from '#shared/proof-test/record-words'
 import { Mark } from '../../../components/marks'
 import { TextLink } from '../../../components/button'
 import { dateAndTime, shortDate } from '../../../lib/dates'
 import { paths } from '../../../paths'
 import type { RecordView } from '../record-view'
-
-const DAY = 24 * 3600_000
 
 function Block({ title, children }: { title: string; children: ReactNode }) {
   return (
@@ -47,12 +46,6 @@ function Signed({ title, name, relation, signature, waiting, late = null }: Sign
       )}
     </Block>
   )
-}
-
-/** The first half of a hash, in groups of four, two lines: enough to compare by eye. */
-function hashLines(hash: string): string[] {
-  const groups = hash.slice(0, 32).match(/.{4}/g) ?? []
-  return [groups.slice(0, 4).join(' '), groups.slice(4).join(' ')]
 }
 
 /** What was checked here, over what was received: entries, their chain, and the seals over it. */
@@ -97,7 +90,6 @@ export function SignatureBlocks({ record, today }: { record: RecordView; today: 
   const { opened, state } = record
   const { lead, witness } = opened.people
   const { signed, countersigned } = state
-  const behind = signed && countersigned ? Date.parse(countersigned.signedAt) - Date.parse(signed.signedAt) : 0
   const notYet = state.conclusion === null ? 'Not concluded yet' : 'Not signed yet'
   return (
     <section aria-label="Signatures" className="grid border-t-2 border-ink tablet:grid-cols-3 print:break-inside-avoid">
@@ -108,7 +100,7 @@ export function SignatureBlocks({ record, today }: { record: RecordView; today: 
         relation={witness.relation}
         signature={countersigned}
         waiting={signed ? 'Not countersigned yet' : notYet}
-        late={behind > DAY ? `${Math.round(behind / 3600_000)} hours after the lead` : null}
+        late={lateness(state)}
       />
       <Seal record={record} today={today} />
     </section>

@@ -1,12 +1,12 @@
 import type { ReactNode } from 'react'
 import type { ClimbEvaluation } from '#shared/proof-test/evaluate-climb'
 import { leadInstrument } from '#shared/proof-test/force'
+import { repeatHeading, shownStages, type ShownStage } from '#shared/proof-test/record-stages'
 import { unitLabel } from '#shared/units'
 import { Mark } from '../../../components/marks'
 import { clockTime } from '../../../lib/dates'
 import { useMedia } from '../../../lib/use-media'
 import type { RecordView } from '../record-view'
-import { repeatHeading, shownStages, type ShownStage } from '../stage-rows'
 import { Reading } from './reading'
 
 interface Heads {

@@ -1,4 +1,4 @@
-import { useEffect, type ReactNode } from 'react'
+import { useEffect, useState, type ReactNode } from 'react'
 import type { PublicTag } from '#shared/api/tags'
 import { classNames } from '../../../lib/class-names'
 import { dateAndTime } from '../../../lib/dates'
@@ -169,9 +169,14 @@ function Foot({ children, size }: { children: ReactNode; size: TagSize }) {
 
 function Cleared({ tag, clearance, address, code, size, onFull }: Given & { clearance: TagClearance }) {
   const small = size === 'small'
-  const words = tagWords(clearance, tag.noChangeSince, small ? 'short' : 'ample')
+  // A long list of what was not measured gives way before the rest is set too small to read.
+  const [tight, setTight] = useState(false)
+  const words = tagWords(clearance, tag.noChangeSince, small || tight ? 'short' : 'ample')
   const { box, full } = useSmallPrint(`${size} ${JSON.stringify(words.smallPrint)}`)
-  useEffect(() => onFull(full), [full, onFull])
+  useEffect(() => {
+    if (full && !small && !tight) setTight(true)
+    else onFull(full)
+  }, [full, small, tight, onFull])
   const foot = (
     <Foot size={size}>
       <p>
@@ -186,7 +191,7 @@ function Cleared({ tag, clearance, address, code, size, onFull }: Given & { clea
     <div
       ref={box}
       className={classNames(
-        'tag-small-print min-h-0 min-w-0 grow overflow-hidden font-condensed',
+        'tag-small-print min-h-0 min-w-0 grow overflow-clip font-condensed',
         small ? '[--tag-print:2.5mm]' : 'space-y-[0.7mm] [--tag-print:3.3mm]',
       )}
     >
@@ -262,7 +267,7 @@ function Shut({ tag, answer, address, code, size, onFull }: Given & { answer: Ex
           <div
             ref={box}
             className={classNames(
-              'tag-small-print min-h-0 min-w-0 grow overflow-hidden',
+              'tag-small-print min-h-0 min-w-0 grow overflow-clip',
               small ? '[--tag-print:3.6mm]' : '[--tag-print:5.4mm]',
             )}
           >

@@ -1,5 +1,5 @@
 import type { PressJoint } from '#shared/press/state'
-import { jointState } from '../../../../components/instruments/drawn-press'
+import { jointState } from '#shared/drawing/drawn-press'
 import { JointBalloon } from '../../../../components/marks'
 import { CheckRow } from '../../../../components/check-row'
 

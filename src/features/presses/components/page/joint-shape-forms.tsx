@@ -1,5 +1,5 @@
 import { zodResolver } from '@hookform/resolvers/zod'
-import { useEffect } from 'react'
+import { useEffect, useMemo } from 'react'
 import { useFieldArray, useForm, useWatch, type UseFormReturn } from 'react-hook-form'
 import { v7 as newId } from 'uuid'
 import { z } from 'zod'
@@ -9,8 +9,12 @@ import { jointPlaces } from '#shared/press/places'
 import type { PressJoint, PressState } from '#shared/press/state'
 import { Button } from '../../../../components/button'
 import { DateField, TextArea, TextField } from '../../../../components/field'
+import { Fit } from '../../../../components/fit'
 import { Form, FormActions, FormError } from '../../../../components/form'
+import { drawnPress } from '#shared/drawing/drawn-press'
+import { JointDrawing, type DrawnJoint } from '../../../../components/instruments/joint-drawing'
 import { SelectField } from '../../../../components/select-field'
+import { usePhone } from '../../../../lib/use-media'
 import { useProblemFields } from '../../../../lib/use-problem-fields'
 import type { PressWriting } from '../../api/append-to-press'
 import { jointChoices, makeUpChoices } from '../words'
@@ -40,18 +44,32 @@ function useSpot({ begin, end }: Spotting, first: string | null, asked = true) {
   }, [])
 }
 
+const NO_JOINTS: DrawnJoint[] = []
+
 function PlaceField({ state, spotting }: Pick<ShapeProps, 'state' | 'spotting'>) {
-  const kind = state.description?.kind
-  const choices = kind ? jointPlaces[kind].map(({ place, label }) => ({ value: place, label })) : []
+  const { description } = state
+  const phone = usePhone()
+  const press = useMemo(() => description && drawnPress(description), [description])
+  const choices = description ? jointPlaces[description.kind].map(({ place, label }) => ({ value: place, label })) : []
   return (
-    <SelectField
-      label="Where it stands"
-      hint="Tap a cross on the drawing, or choose here."
-      nothing="Beside the drawing"
-      choices={choices}
-      value={spotting.at ?? ''}
-      onChange={(event) => spotting.choose(event.target.value || null)}
-    />
+    <div className="grid gap-3">
+      {/* On a phone the plate is far up the page: here it is again, where the form is. */}
+      {phone && press && (
+        <Fit className="ground-dye -mx-4 h-[380px]" initial={{ width: 358, height: 380 }}>
+          {(size) => (
+            <JointDrawing press={press} joints={NO_JOINTS} placing={{ place: spotting.at, onPlace: spotting.choose }} size={size} />
+          )}
+        </Fit>
+      )}
+      <SelectField
+        label="Where it stands"
+        hint="Tap a cross on the drawing, or choose here."
+        nothing="Beside the drawing"
+        choices={choices}
+        value={spotting.at ?? ''}
+        onChange={(event) => spotting.choose(event.target.value || null)}
+      />
+    </div>
   )
 }
 

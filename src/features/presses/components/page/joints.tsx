@@ -1,6 +1,6 @@
 import type { ReactNode } from 'react'
 import type { PressJoint } from '#shared/press/state'
-import { jointState } from '../../../../components/instruments/drawn-press'
+import { jointState } from '#shared/drawing/drawn-press'
 import { JointBalloon } from '../../../../components/marks'
 import { classNames } from '../../../../lib/class-names'
 import { shortDate } from '../../../../lib/dates'
@@ -49,7 +49,7 @@ export function Joints({ joints, selectedId, onSelect, notes, children }: Joints
               type="button"
               aria-expanded={selected}
               onClick={() => onSelect(selected ? null : joint.id)}
-              className="grid min-h-14 w-full grid-cols-[2.25rem_minmax(0,1fr)] items-center gap-x-3 px-1 text-left -outline-offset-3! hover:bg-sheet tablet:grid-cols-[2.25rem_minmax(0,1.7fr)_minmax(0,1fr)_minmax(0,1fr)] desktop:min-h-[34px] desktop:grid-cols-[1.75rem_minmax(0,1.08fr)_minmax(0,0.92fr)_6rem] desktop:gap-x-2"
+              className="grid min-h-14 w-full max-tablet:py-1.5 grid-cols-[2.25rem_minmax(0,1fr)] items-center gap-x-3 px-1 text-left -outline-offset-3! hover:bg-sheet tablet:grid-cols-[2.25rem_minmax(0,1.7fr)_minmax(0,1fr)_minmax(0,1fr)] desktop:min-h-[34px] desktop:grid-cols-[1.75rem_minmax(0,1.08fr)_minmax(0,0.92fr)_6rem] desktop:gap-x-2"
             >
               <span className="flex justify-center">
                 <JointBalloon number={joint.number} state={jointState(joint)} size={24} />

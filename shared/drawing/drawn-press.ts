@@ -1,10 +1,10 @@
-import type { Joint, PressDescription } from '#shared/press/model'
-import type { PressJoint } from '#shared/press/state'
-import { parseDecimal, toSI, type LengthUnit } from '#shared/units'
-import type { JointMarkState } from '#shared/drawing/balloon-items'
-import type { DrawnPress, FramePart } from '#shared/drawing/frame'
-import { partsOf } from '#shared/drawing/member-parts'
-import { looseMembers } from '#shared/press/load-path'
+import { looseMembers } from '../press/load-path'
+import type { Joint, PressDescription } from '../press/model'
+import type { PressJoint } from '../press/state'
+import { parseDecimal, toSI, type LengthUnit } from '../units'
+import type { JointMarkState } from './balloon-items'
+import type { DrawnPress, FramePart } from './frame'
+import { partsOf } from './member-parts'
 
 type Measure = { text: string; unit: LengthUnit | '' } | null
 

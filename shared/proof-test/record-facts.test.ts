@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
-import { openedPayload } from '../../../tests/factories/test-press'
-import { toolingText } from './fact-words'
+import { openedPayload } from '../../tests/factories/test-press'
+import { toolingText } from './record-facts'
 
 const opened = openedPayload()
 const others = opened.press.train.filter(({ kind }) => kind !== 'tooling')

@@ -1,9 +1,35 @@
-import { toUnit, formatNumber, groupDigits, unitLabel } from '#shared/units'
-import { forceTexts, lengthText, type ClimbEvaluation, type RowFigures, type StageEvaluation } from '#shared/proof-test/evaluate-climb'
-import type { StageRow } from '#shared/proof-test/state'
-import { leadInstrument } from '#shared/proof-test/force'
-import type { MarkName } from '../../components/marks'
-import { shownReading, type RecordView, type ShownReading } from './record-view'
+import { formatNumber, groupDigits, toUnit, unitLabel } from '../units'
+import { correctionLetter } from './corrections'
+import type { Reading } from './entries'
+import { forceTexts, lengthText, type ClimbEvaluation, type RowFigures, type StageEvaluation } from './evaluate-climb'
+import { leadInstrument } from './force'
+import type { RecordParts } from './record-words'
+import type { Correction, Row, StageRow } from './state'
+
+/** A climb as a table of a record shows it, stage by stage. */
+
+export type StageParts = Pick<RecordParts, 'state' | 'opened' | 'evaluation'>
+
+/** The shape of a decision. */
+export type DecisionMark = 'stop' | 'wait' | 'within' | 'go-on'
+
+export interface ShownReading {
+  text: string
+  /** What was typed before, oldest first, with the letter of the correction that replaced it. */
+  struck: { text: string; letter: string }[]
+}
+
+/** A reading of a row as it counts, and what was struck through on the way to it. */
+export function shownReading(row: Row, sourceId: string, corrections: readonly Correction[]): ShownReading | null {
+  const counts: Reading | undefined = row.readings.find((reading) => reading.sourceId === sourceId)
+  if (!counts) return null
+  const struck = corrections.flatMap((correction, index) =>
+    correction.correctsEntryId === row.entryId && correction.sourceId === sourceId
+      ? [{ text: correction.from.text, letter: correctionLetter(index) }]
+      : [],
+  )
+  return { text: counts.text, struck }
+}
 
 /** One line of the stages as the sheet shows it. */
 export interface ShownStage {
@@ -19,13 +45,13 @@ export interface ShownStage {
   step: string | null
   softening: string | null
   creep: string | null
-  decision: { mark: MarkName; words: string } | null
+  decision: { mark: DecisionMark; words: string } | null
 }
 
 const grouped = (reading: ShownReading | null): ShownReading | null =>
   reading && { text: groupDigits(reading.text), struck: reading.struck.map((one) => ({ ...one, text: groupDigits(one.text) })) }
 
-function base(record: RecordView, name: string, figures: RowFigures | null, key: string): ShownStage {
+function base(record: StageParts, name: string, figures: RowFigures | null, key: string): ShownStage {
   const { opened, state } = record
   const gauge = leadInstrument(opened)
   const force = figures?.force ? forceTexts(opened, figures.force) : null
@@ -60,7 +86,7 @@ function decisionOf(stage: StageEvaluation, last: boolean): ShownStage['decision
   return last ? { mark: 'within', words: `${heldFor(stage)}${again}` } : { mark: 'go-on', words: `Went on${again}` }
 }
 
-function stiffness(record: RecordView, stage: StageEvaluation): string | null {
+function stiffness(record: StageParts, stage: StageEvaluation): string | null {
   const { step } = stage
   if (!step) return null
   if (step.stuck) return 'stuck'
@@ -68,7 +94,7 @@ function stiffness(record: RecordView, stage: StageEvaluation): string | null {
   return record.opened.lengthUnit === 'in' ? formatNumber(toUnit(step.stiffness, 'lbf') * 0.0254, 0) : formatNumber(step.stiffness / 1e6, 1)
 }
 
-function shownStage(record: RecordView, stage: StageEvaluation, last: boolean): ShownStage {
+function shownStage(record: StageParts, stage: StageEvaluation, last: boolean): ShownStage {
   const { opened, state } = record
   const gauge = leadInstrument(opened)
   const { step, start, end, target } = stage
@@ -92,7 +118,7 @@ function shownStage(record: RecordView, stage: StageEvaluation, last: boolean): 
 }
 
 /** A climb's lines in the order they were read: datum, stages, set. */
-export function shownStages(record: RecordView, climb: ClimbEvaluation): ShownStage[] {
+export function shownStages(record: StageParts, climb: ClimbEvaluation): ShownStage[] {
   const last = record.opened.protocol.content.stages.length - 1
   return [
     ...(climb.datum ? [base(record, 'Datum', climb.datum, 'datum')] : []),
@@ -102,7 +128,7 @@ export function shownStages(record: RecordView, climb: ClimbEvaluation): ShownSt
 }
 
 /** "Repeat climb to 100 %: second set 0.00 mm", or what there is of it yet. */
-export function repeatHeading(record: RecordView, climb: ClimbEvaluation): string {
+export function repeatHeading(record: StageParts, climb: ClimbEvaluation): string {
   const reached = climb.stages.at(-1)?.percent
   const lead = climb.set?.row.lead
   const to = reached === undefined ? 'Repeat climb' : `Repeat climb to ${reached}\u202f%`
