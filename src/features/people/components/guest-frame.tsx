@@ -67,7 +67,7 @@ export function GuestFrame({ children }: { children: ReactNode }) {
             <ProductMark size={36} />
             <span className="min-w-0">
               <span className="block truncate font-semibold">{user.name}</span>
-              <span className="block truncate text-14/[17px] text-faint-scribe">witness from outside</span>
+              <span className="block truncate text-14/[17px] text-faint-scribe">outside witness</span>
             </span>
           </Link>
           <Link to={paths.account.href()} className="flex shrink-0 items-center border-l border-ghost px-4 -outline-offset-4! hover:bg-dye">
