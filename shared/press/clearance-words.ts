@@ -1,3 +1,5 @@
+import { formatNumber, roundDownTo, toSI, type TypedForce } from '../units'
+
 /** What a clearance holds under (DOMAIN 3.1, 3.12), as it stands on clearance, record and tag. */
 export function conditionsOf(proven: {
   bedHoles: readonly string[]
@@ -27,3 +29,9 @@ export const VOIDED_BY: readonly string[] = [
 
 /** What holds a clearance back until the joints were examined again. */
 export const HELD_BY: readonly string[] = ['a move', 'a long stop']
+
+/** The stated load of a clearance in kN, rounded down to a tenth: in no unit does a press carry more than it was cleared to. */
+export function clearedKilonewtons(load: TypedForce): string {
+  // A hair above, so that 100 kN typed as such does not come out as 99.9.
+  return `${formatNumber(roundDownTo(toSI(load) / 1000 + 1e-9, 0.1), 1)}\u00a0kN`
+}

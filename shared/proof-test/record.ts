@@ -1,7 +1,8 @@
 import { canonicalText } from '../ledger/canonical'
 import type { LedgerEntry } from '../ledger/envelope'
 import type { StoredEnergy } from '../structure/stored-energy'
-import { formatForce, formatNumber, formatQuantity, groupDigits, toUnit, unitLabel } from '../units'
+import { formatForce, formatNumber, groupDigits, toUnit, unitLabel } from '../units'
+import { clearedKilonewtons } from '../press/clearance-words'
 import { foldProofTest } from './apply'
 import type { Opened } from './entries'
 import { evaluateTest, freezeEvaluation, type TestEvaluation } from './evaluate'
@@ -34,7 +35,7 @@ export function monthsAfter(moment: string, months: number): string {
 export interface ClearedLoad {
   /** "11.7 short tons". */
   load: string
-  /** "104.1 kN". */
+  /** The stated load in kN, rounded down: "104.0 kN". */
   newton: string
   gauge: string | null
   rated: string
@@ -86,7 +87,7 @@ export function clearedLoad(state: ProofTestState, evaluation: TestEvaluation): 
   const gauge = opened.instruments.find((instrument) => instrument.id === opened.forceInstrumentIds[0])
   return {
     load: quantityText({ text: figures.text, unit: figures.unit }),
-    newton: formatQuantity(figures.load, 'kN', 1),
+    newton: clearedKilonewtons({ text: figures.text, unit: figures.unit }),
     gauge: figures.gaugePressure && gauge ? `Gauge ${gauge.details.code} not past ${quantityText(figures.gaugePressure)}` : null,
     rated: quantityText(opened.press.ratedLoad),
     where: placesTested(opened),

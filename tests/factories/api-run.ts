@@ -128,6 +128,14 @@ export class ApiRun {
     return run
   }
 
+  /** Goes on with a test that somebody opened elsewhere, as in a browser. */
+  static async follow(staff: Staff, id: string, pressId: string): Promise<ApiRun> {
+    const run = new ApiRun(staff, id, pressId)
+    await run.refresh()
+    run.number = run.state.opened?.number ?? ''
+    return run
+  }
+
   async request(name = 'First load by quarters'): Promise<OpenTestRequest> {
     const { lead } = this.staff
     const unique = newId().slice(-8)

@@ -83,7 +83,7 @@ describe('the record of a countersigned test on paper', () => {
       'Press 2, straightening press',
       'Hollin Bridge Fabricating',
       'Accepted. Cleared up to 11.7 short tons',
-      '104.1 kN, rated 12 short tons. Gauge G-02 not past 7 650 psi. Bed hole 4, ram central.',
+      '104.0 kN, rated 12 short tons. Gauge G-02 not past 7 650 psi. Bed hole 4, ram central.',
       'Cleared by Marit Sandoval on 15 September 2026 after two static loads.',
       'First load by quarters, version 3.',
       'Within every limit checked',

@@ -43,6 +43,8 @@ type PressPlateProps = {
   states?: readonly JointMarkState[]
   /** In place of the drawing while there is none. */
   nothing?: ReactNode
+  /** False beside a form that nobody prints: it is drawn anew with every letter that is typed. */
+  printed?: boolean
   /** Under the drawing, over the legend. */
   children?: ReactNode
 }
@@ -51,7 +53,20 @@ export const ALL_STATES: readonly JointMarkState[] = LEGEND.map(({ state }) => s
 
 /** The press on its dye plate, as high as the window beside a page that scrolls; inked on white when the page is printed. */
 export function PressPlate(props: PressPlateProps) {
-  const { press, joints, points, loose, selectedId, markedIds, onSelect, placing, states = ALL_STATES, nothing, children } = props
+  const {
+    press,
+    joints,
+    points,
+    loose,
+    selectedId,
+    markedIds,
+    onSelect,
+    placing,
+    states = ALL_STATES,
+    nothing,
+    printed = true,
+    children,
+  } = props
   const phone = usePhone()
   const zoom = usePanZoom()
   const title = press?.kind === 'c-frame' ? 'Side elevation' : 'Front elevation'
@@ -90,7 +105,7 @@ export function PressPlate(props: PressPlateProps) {
               </ZoomWindow>
             )}
           </Fit>
-          <PrintedElevation press={press} joints={joints} points={points} loose={loose} className="max-w-[15cm]" />
+          {printed && <PrintedElevation press={press} joints={joints} points={points} loose={loose} className="max-w-[15cm]" />}
         </>
       )}
       {children}

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
-import { kilonewtons, spelled, tagWords, type TagClearance } from './tag-words'
+import { clearedKilonewtons } from '#shared/press/clearance-words'
+import { spelled, tagWords, type TagClearance } from './tag-words'
 
 const clearance: TagClearance = {
   load: { text: '11.7', unit: 'short-ton' },
@@ -33,8 +34,8 @@ describe('the words of a tag', () => {
   })
 
   it('never rounds the load up, and leaves one that was given in kN as it is', () => {
-    expect(plain(kilonewtons({ load: { text: '99.98', unit: 'kN' } }))).toBe('99.9 kN')
-    expect(plain(kilonewtons({ load: { text: '104.1', unit: 'kN' } }))).toBe('104.1 kN')
+    expect(plain(clearedKilonewtons({ text: '99.98', unit: 'kN' }))).toBe('99.9 kN')
+    expect(plain(clearedKilonewtons({ text: '104.1', unit: 'kN' }))).toBe('104.1 kN')
     expect(tagWords({ ...clearance, load: { text: '100', unit: 'kN' } }, null, 'ample').loadNote).toBe('')
   })
 

@@ -1,8 +1,8 @@
 import type { PublicTag } from '#shared/api/tags'
 import { SHORT_CAUTIONS } from '#shared/cautions'
 import { typedWords } from '#shared/instruments/words'
-import { HELD_BY, VOIDED_BY } from '#shared/press/clearance-words'
-import { formatNumber, groupDigits, parseDecimal, roundDownTo, toSI, unitLabel, type ForceUnit } from '#shared/units'
+import { clearedKilonewtons, HELD_BY, VOIDED_BY } from '#shared/press/clearance-words'
+import { groupDigits, parseDecimal, unitLabel, type ForceUnit } from '#shared/units'
 import { dateAndTime, longDate, shortDate } from '../../lib/dates'
 import { asSentence } from '../../lib/words'
 
@@ -45,12 +45,6 @@ export const pressWords = ({ press }: PublicTag): string => [press.name, press.w
 
 const staticLoads = (count: number): string => (count === 1 ? 'one static load' : `${count} static loads`)
 
-/** The load of a clearance in kN, rounded down to a tenth. */
-export function kilonewtons({ load }: Pick<TagClearance, 'load'>): string {
-  // A hair above, so that 100 kN typed as such does not come out as 99.9.
-  return `${formatNumber(roundDownTo(toSI(load) / 1000 + 1e-9, 0.1), 1)}\u00a0kN`
-}
-
 const where = ({ bedHoles, ramPositions }: TagClearance): string =>
   `Bed ${bedHoles.length === 1 ? 'hole' : 'holes'} ${all(bedHoles)}, ram ${all(ramPositions)}.`
 
@@ -73,7 +67,7 @@ export function tagWords(clearance: TagClearance, noChangeSince: string | null, 
     load: parsed.ok ? groupDigits(parsed.canonical) : load.text,
     // "tons-force" is one word: on the tag it never breaks at its hyphen.
     unit: unitLabel(load.unit, { plural: !(parsed.ok && parsed.value === 1) }).replace('-', '\u2011'),
-    loadNote: [TON[load.unit], load.unit === 'kN' ? undefined : `${kilonewtons(clearance)} in all`].filter(Boolean).join(', '),
+    loadNote: [TON[load.unit], load.unit === 'kN' ? undefined : `${clearedKilonewtons(load)} in all`].filter(Boolean).join(', '),
     gaugeLabel: `${gaugePressure ? 'Gauge' : 'Load cell'} ${gaugeCode} not past`,
     gaugeLimit: typedWords(gaugePressure ?? load),
     until: longDate(until),

@@ -98,7 +98,7 @@ describe('the record of a countersigned test', () => {
     const result = screen.getByRole('region', { name: 'Result' })
     expect(result).toHaveTextContent('Accepted. Cleared up to 11.7 short tons')
     expect(result).toHaveTextContent(
-      '104.1 kN, rated 12 short tons. Gauge G-02 not past 7 650 psi. Bed hole 4, ram central. Until 15 March 2027.',
+      '104.0 kN, rated 12 short tons. Gauge G-02 not past 7 650 psi. Bed hole 4, ram central. Until 15 March 2027.',
     )
     expect(result).toHaveTextContent('Cleared by Marit Sandoval on 15 September 2026 after two static loads. No other bed hole was tested.')
   })

@@ -37,6 +37,8 @@ type PrintTagProps = {
 export function PrintTag({ pressId, made, tag, old }: PrintTagProps) {
   const [size, setSize] = useState<TagSize>('small')
   const [full, setFull] = useState(false)
+  // What would be printed one line over the other is not printed at all.
+  const runsOver = full && size === 'small'
   const cleared = tag.answer.is === 'cleared'
   const title = `${cleared ? 'Tag' : 'Do-not-use tag'} of ${pressWords(tag)}`
   useTitle(title)
@@ -51,7 +53,7 @@ export function PrintTag({ pressId, made, tag, old }: PrintTagProps) {
         </p>
       </div>
       <div className="grid gap-x-6 gap-y-6 desktop:gap-x-10 tablet:grid-cols-[auto_minmax(0,1fr)] print:block">
-        <div className="self-start justify-self-start border border-rule print:border-0">
+        <div className={classNames('self-start justify-self-start border border-rule print:border-0', runsOver && 'print:hidden')}>
           <TagPaper tag={tag} address={made.address} code={made.code} size={size} onFull={setFull} />
         </div>
         <div className="grid max-w-[34rem] content-start gap-4 print:hidden max-tablet:order-first">
@@ -82,7 +84,7 @@ export function PrintTag({ pressId, made, tag, old }: PrintTagProps) {
           {old && (
             <Notice>Not connected to the server, so nobody knows whether this still holds. It can be printed when the link is back.</Notice>
           )}
-          <Button kind="next" wide disabled={old || (full && size === 'small')} onClick={() => window.print()}>
+          <Button kind="next" wide disabled={old || runsOver} onClick={() => window.print()}>
             Print this tag
           </Button>
           <p className="text-graphite">In the print window choose no margins and a scale of 100 %, on paper or labels of that size.</p>

@@ -1,4 +1,4 @@
-import { useDeferredValue } from 'react'
+import { useDeferredValue, useMemo } from 'react'
 import { useWatch } from 'react-hook-form'
 import { FRAME_KINDS } from '#shared/press/model'
 import { drawnPress, looseParts } from '#shared/drawing/drawn-press'
@@ -49,6 +49,7 @@ function drawn(draft: PressFormDraft) {
 export function LivePlate({ form }: { form: PressForm }) {
   // The form asks first; the drawing follows when there is time.
   const { press, joints, gap, loose } = useDeferredValue(useWatch({ control: form.control, compute: drawn }))
+  const looseSet = useMemo(() => new Set(loose), [loose])
   const { jointId, end } = useFormPlacing()
   const index = joints.findIndex(({ id }) => id === jointId)
   const joint = joints[index]
@@ -56,7 +57,8 @@ export function LivePlate({ form }: { form: PressForm }) {
     <PressPlate
       press={press}
       joints={joints}
-      loose={new Set(loose)}
+      loose={looseSet}
+      printed={false}
       placing={
         joint
           ? {

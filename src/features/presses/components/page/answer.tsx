@@ -1,8 +1,9 @@
 import type { ReactNode } from 'react'
 import type { Clearance } from '#shared/press/entries'
+import { clearedKilonewtons } from '#shared/press/clearance-words'
 import type { ClearanceState, MayItBeUsed, PressState } from '#shared/press/state'
 import { typedWords } from '#shared/instruments/words'
-import { formatForce, groupDigits, unitLabel, type TypedForce } from '#shared/units'
+import { groupDigits, unitLabel, type TypedForce } from '#shared/units'
 import { HowLink } from '../../../../components/how-link'
 import { Mark } from '../../../../components/marks'
 import { setPercent } from '../../../../components/typeset'
@@ -33,7 +34,7 @@ function ClearedTo({ clearance, rated }: { clearance: Clearance; rated: TypedFor
         </div>
         <Aside>
           <p>
-            <strong className="font-semibold">{formatForce(clearance.loadNewton, 'kN')}</strong>
+            <strong className="font-semibold">{clearedKilonewtons(load)}</strong>
             {rated && `, rated ${typedWords(rated)}`}
           </p>
           {clearance.gaugePressure && (

@@ -1,15 +1,15 @@
-import { zodResolver } from '@hookform/resolvers/zod'
 import { useEffect, useState } from 'react'
 import { useForm, useWatch } from 'react-hook-form'
 import { changeRule, type Touches } from '#shared/press/changes'
 import type { Attachment } from '#shared/ledger/envelope'
-import { PRESS_PAYLOADS } from '#shared/press/entries'
+import { PRESS_PAYLOADS, type PressChange } from '#shared/press/entries'
 import type { PressState } from '#shared/press/state'
 import { PhotoField } from '../../../../components/attachments/photo-field'
 import { Button } from '../../../../components/button'
 import { TextArea } from '../../../../components/field'
 import { Form, FormActions, FormError } from '../../../../components/form'
 import { RadioRow } from '../../../../components/radio-row'
+import { draftResolver } from '../../../../lib/draft-resolver'
 import { useUser } from '../../../../lib/here'
 import { useProblemFields } from '../../../../lib/use-problem-fields'
 import { changeChoices } from '../words'
@@ -29,13 +29,19 @@ const HINTS: Record<Touches, string> = {
 
 const schema = PRESS_PAYLOADS.changed.omit({ jointIds: true })
 
+/** A row of radios of which none is chosen reads as null. */
+type ChangeFields = { change: PressChange['change'] | null | undefined; why: string }
+
 type ChangeFormProps = Sending & Chosen & { state: PressState; onDone: () => void; onLeave: () => void }
 
 /** What was done to the press, or befell it, and before it is entered what that does. What was begun outlives a reload. */
 export function ChangeForm({ state, chosen, onToggle, send, busy, onDone, onLeave }: ChangeFormProps) {
   const user = useUser()
   const [kept] = useState(() => readKeptChange(state.id, user.id))
-  const form = useForm({ resolver: zodResolver(schema), defaultValues: { change: kept?.change, why: kept?.why ?? '' } })
+  const form = useForm({
+    resolver: draftResolver(schema, (fields: ChangeFields) => fields),
+    defaultValues: { change: kept?.change, why: kept?.why ?? '' },
+  })
   const [photos, setPhotos] = useState<Attachment[]>(kept?.photos ?? [])
   const { errors, submitCount } = form.formState
   const onError = useProblemFields(form)

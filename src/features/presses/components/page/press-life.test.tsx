@@ -1,5 +1,5 @@
 import { QueryClientProvider } from '@tanstack/react-query'
-import { fireEvent, render, screen, waitFor, within } from '@testing-library/react'
+import { cleanup, fireEvent, render, screen, waitFor, within } from '@testing-library/react'
 import { MemoryRouter } from 'react-router-dom'
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
 import type { AppendRequest } from '#shared/api/ledger'
@@ -156,6 +156,25 @@ describe('a press’s life on its page', { timeout: 30_000 }, () => {
     expect(kept()).toMatchObject([
       { kind: 'changed', payload: { change: 'knock', jointIds: [jointId(8)], why: 'The forklift ran into it' } },
     ])
+  })
+
+  it('keeps a change that was begun over a reload, until it is left', () => {
+    const state = pressAfter(...ACCEPTED, CLEARED)
+    show(state)
+    expect(screen.queryByLabelText('What was done, in a few words')).not.toBeInTheDocument()
+    fireEvent.click(screen.getByText('Report a change'))
+    fireEvent.click(screen.getByLabelText(/^Knock/))
+    fireEvent.click(balloon(7))
+    fireEvent.change(screen.getByLabelText('What was done, in a few words'), { target: { value: 'The forklift' } })
+    cleanup()
+    show(state)
+    expect(screen.getByText('Joints 5, 7 and 8 fall back to unexamined.')).toBeInTheDocument()
+    expect(screen.getByLabelText('What was done, in a few words')).toHaveValue('The forklift')
+    fireEvent.click(screen.getByText('Leave it'))
+    cleanup()
+    show(state)
+    expect(screen.queryByLabelText('What was done, in a few words')).not.toBeInTheDocument()
+    expect(screen.getByText('Report a change')).toBeInTheDocument()
   })
 
   it('P21: names the repair that a failed test opened, with members and joints, and lets nobody plan before it is closed', () => {
