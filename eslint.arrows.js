@@ -10,15 +10,15 @@ const serverUses = {
   bootstrap: ['app'],
   routes: ['middleware', 'presenters', 'services', 'records'],
   middleware: ['services'],
-  presenters: ['services', 'models', 'ledger'],
+  presenters: ['services', 'models', 'ledger', 'mail'],
   jobs: ['services', 'ledger', 'models', 'mail', 'storage'],
   seeders: ['services', 'ledger', 'models'],
   services: ['ledger', 'models', 'records', 'mail', 'storage'],
   records: ['ledger', 'models'],
-  ledger: ['models', 'database'],
+  ledger: ['models', 'database', 'mail'],
   models: [],
   database: [],
-  mail: [],
+  mail: ['models'],
   storage: [],
 }
 

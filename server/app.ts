@@ -10,6 +10,8 @@ import { calendarRoutes } from './routes/calendar'
 import { healthRoutes } from './routes/health'
 import { ledgerRoutes } from './routes/ledgers'
 import { instrumentRoutes } from './routes/instruments'
+import { invitationRoutes } from './routes/invitations'
+import { mailRoutes } from './routes/mail'
 import { peopleRoutes } from './routes/people'
 import { pressReadRoutes } from './routes/presses-read'
 import { proofTestReadRoutes } from './routes/proof-tests-read'
@@ -69,6 +71,8 @@ function api(context: AppContext) {
   router.use(verificationRoutes(context))
   router.use(sessionRoutes(context))
   router.use(shopRoutes(context))
+  router.use(invitationRoutes(context))
+  router.use(mailRoutes(context))
   router.use(peopleRoutes(context))
   router.use(attachmentRoutes(context))
   router.use(instrumentRoutes(context))

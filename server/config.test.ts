@@ -15,6 +15,8 @@ describe('the settings', () => {
       tls: undefined,
       isHttps: false,
       s3: undefined,
+      mail: undefined,
+      mailLeaseMilliseconds: 120_000,
       bcryptCost: 11,
       trustProxy: 0,
       relaxedDurability: false,

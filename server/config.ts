@@ -24,6 +24,15 @@ const environment = z.object({
     .string()
     .regex(/^[\w.-]+(\/[\w.-]+)*\/?$/, 'S3_PREFIX is a path of plain names, such as quarterload/.')
     .optional(),
+  SMTP_URL: z
+    .string()
+    .regex(/^smtps?:\/\//, 'SMTP_URL must begin with smtp:// or smtps://.')
+    .optional(),
+  MAIL_FROM: z
+    .string()
+    .regex(/^[^\r\n]*[^\s@<]+@[^\s@>]+>?$/, 'MAIL_FROM is an address, such as Quarterload <press@shop.example>.')
+    .optional(),
+  MAIL_LEASE_SECONDS: z.coerce.number('MAIL_LEASE_SECONDS is a number of seconds.').int().min(1).max(3600).default(120),
   BCRYPT_COST: z.coerce.number().int().min(4).max(12, 'BCRYPT_COST must be between 4 and 12.').default(11),
   TRUST_PROXY: z.coerce.number('TRUST_PROXY is the number of proxies in front.').int().min(0).max(8).default(0),
   RELAXED_DURABILITY: z.enum(['0', '1']).default('0'),
@@ -47,6 +56,10 @@ export interface Config {
   isHttps: boolean
   /** Object storage for photos and documents; without it they are kept in a folder beside the data. */
   s3: { bucket: string; endpoint: string | undefined; region: string; prefix: string } | undefined
+  /** A mail server; without it letters lie in the tray that the owner reads. */
+  mail: { url: string; from: string } | undefined
+  /** For so long a letter belongs to the server that is sending it. */
+  mailLeaseMilliseconds: number
   bcryptCost: number
   trustProxy: number
   /** In tests only: a database that may lose its last second is taken as it is. */
@@ -58,6 +71,12 @@ function tlsOf({ TLS_CERT, TLS_KEY }: z.infer<typeof environment>): Config['tls'
   if (TLS_CERT === undefined && TLS_KEY === undefined) return undefined
   if (TLS_CERT === undefined || TLS_KEY === undefined) throw new Error('TLS_CERT and TLS_KEY go together: set both, or none.')
   return { certificateFile: path.resolve(projectRoot, TLS_CERT), keyFile: path.resolve(projectRoot, TLS_KEY) }
+}
+
+function mailOf({ SMTP_URL, MAIL_FROM }: z.infer<typeof environment>): Config['mail'] {
+  if (SMTP_URL === undefined) return undefined
+  if (MAIL_FROM === undefined) throw new Error('SMTP_URL needs MAIL_FROM: the address that letters come from.')
+  return { url: SMTP_URL, from: MAIL_FROM }
 }
 
 /** Empty variables count as unset: `DATABASE_URL= npm start` means the embedded database. */
@@ -90,6 +109,8 @@ export function readConfig(variables: NodeJS.ProcessEnv): Config {
             region: values.S3_REGION,
             prefix: values.S3_PREFIX?.replace(/\/?$/, '/') ?? '',
           },
+    mail: mailOf(values),
+    mailLeaseMilliseconds: values.MAIL_LEASE_SECONDS * 1000,
     bcryptCost: values.BCRYPT_COST,
     trustProxy: values.TRUST_PROXY,
     relaxedDurability: values.NODE_ENV === 'test' && values.RELAXED_DURABILITY === '1',

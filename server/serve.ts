@@ -11,6 +11,7 @@ import type { AppContext } from './context'
 import { migrateUp } from './database/migrator'
 import { openDatabase } from './database/open-database'
 import type { OpenDatabase } from './database/open-database'
+import { runWorkers } from './jobs/start-workers'
 import { initModels } from './models'
 import { loadOrCreateSecret } from './secrets'
 import { openStorage } from './storage/open-storage'
@@ -108,6 +109,8 @@ async function open(options: ServeOptions, closing: AbortSignal, closers: Closer
   )
   const address = await listen(server, config)
   closers.push(() => drain(server))
+  const workers = runWorkers(context, address)
+  closers.push(() => workers)
   return { context, database, address }
 }
 

@@ -13,6 +13,8 @@ export interface Actor {
   shopId: string
   /** null: no member of this shop, or no longer one. */
   role: Role | null
+  /** The tests that this person was invited to witness from outside: there, and nowhere else in the shop, they are somebody. */
+  guestOf?: readonly string[]
 }
 
 /** The people named when the test was opened. */
@@ -27,6 +29,8 @@ export interface Subject {
   shopId: string
   /** For what is done on or to a test. */
   assignment?: Assignment
+  /** The test that it is done on or to, or that is read. */
+  testId?: string
 }
 
 export const actions = [
@@ -37,6 +41,8 @@ export const actions = [
   'people:add',
   'people:change-role',
   'people:end',
+  'people:invite',
+  'mail:read',
   'press:read',
   'press:register',
   'press:describe',
@@ -55,6 +61,7 @@ export const actions = [
   'protocol:write',
   'proof-test:read',
   'proof-test:open',
+  'proof-test:invite-witness',
   'proof-test:be-lead',
   'proof-test:be-pump-hand',
   'proof-test:be-witness',
@@ -82,6 +89,8 @@ interface Permission {
   parts?: readonly Part[]
   /** Parts in the test that rule the person out. */
   never?: readonly Part[]
+  /** Whether an outside witness may too, on the test they were invited to. */
+  guests?: true
 }
 
 const anyPart: readonly Part[] = ['lead', 'pump hand', 'witness']
@@ -94,6 +103,9 @@ const permissions: Record<Action, Permission> = {
   'people:add': { ceiling: ownerOnly },
   'people:change-role': { ceiling: ownerOnly },
   'people:end': { ceiling: ownerOnly },
+  'people:invite': { ceiling: ownerOnly },
+  // The shop's letters, to whomever they went.
+  'mail:read': { ceiling: ownerOnly },
   'press:read': { ceiling: everyone },
   'press:register': { ceiling: leads },
   'press:describe': { ceiling: leads },
@@ -112,19 +124,20 @@ const permissions: Record<Action, Permission> = {
   'calibration:write': { ceiling: leads },
   'protocol:read': { ceiling: everyone },
   'protocol:write': { ceiling: leads },
-  'proof-test:read': { ceiling: everyone },
+  'proof-test:read': { ceiling: everyone, guests: true },
   'proof-test:open': { ceiling: leads },
+  'proof-test:invite-witness': { ceiling: leads },
   'proof-test:be-lead': { ceiling: leads },
   'proof-test:be-pump-hand': { ceiling: everyone },
-  'proof-test:be-witness': { ceiling: witnesses },
+  'proof-test:be-witness': { ceiling: witnesses, guests: true },
   // What has happened has happened: facts of people named in the test land even if their role has ended meanwhile.
   'proof-test:append-fact': { ceiling: 'former too', parts: anyPart },
   'proof-test:stop': { ceiling: 'former too', parts: anyPart },
   'proof-test:conclude': { ceiling: leads, parts: ['lead'] },
   'proof-test:sign-as-lead': { ceiling: leads, parts: ['lead'] },
-  'proof-test:countersign': { ceiling: witnesses, parts: ['witness'], never: ['lead', 'pump hand'] },
-  'proof-test:decline': { ceiling: witnesses, parts: ['witness'], never: ['lead', 'pump hand'] },
-  'record:export': { ceiling: witnesses },
+  'proof-test:countersign': { ceiling: witnesses, parts: ['witness'], never: ['lead', 'pump hand'], guests: true },
+  'proof-test:decline': { ceiling: witnesses, parts: ['witness'], never: ['lead', 'pump hand'], guests: true },
+  'record:export': { ceiling: witnesses, guests: true },
 }
 
 function partsOf(userId: string, assignment: Assignment | undefined): Part[] {
@@ -136,14 +149,20 @@ function partsOf(userId: string, assignment: Assignment | undefined): Part[] {
   return parts
 }
 
+/** Whether this person was invited from outside to witness this test. */
+export function isGuestOf({ guestOf }: Actor, testId: string | undefined): boolean {
+  return testId !== undefined && guestOf?.includes(testId) === true
+}
+
 /**
  * Whether the actor may do this to the subject. Never across shops. Says nothing about the state of a press or a test:
  * that is what `decide` is for.
  */
 export function can(actor: Actor, action: Action, subject: Subject): boolean {
   if (actor.shopId !== subject.shopId) return false
-  const { ceiling, parts, never } = permissions[action]
-  if (ceiling !== 'former too' && (actor.role === null || !ceiling.includes(actor.role))) return false
+  const { ceiling, parts, never, guests } = permissions[action]
+  const asGuest = guests === true && isGuestOf(actor, subject.testId)
+  if (ceiling !== 'former too' && !asGuest && (actor.role === null || !ceiling.includes(actor.role))) return false
   const held = partsOf(actor.userId, subject.assignment)
   if (parts !== undefined && !parts.some((part) => held.includes(part))) return false
   return never === undefined || !never.some((part) => held.includes(part))

@@ -54,6 +54,8 @@ export const paths = {
   calendar: list('/calendar'),
 
   people: list('/people'),
+  mail: list('/mail'),
+  letter: one('/mail', 'mailId'),
   settings: list('/settings'),
   account: list('/account'),
   more: list('/more'),
@@ -67,6 +69,9 @@ export const paths = {
     pattern: '/sign-in',
     href: (query: { next?: string } = {}) => withQuery('/sign-in', query),
   },
+  forgottenPassword: { pattern: '/forgotten-password', href: () => '/forgotten-password' },
+  newPassword: one('/new-password', 'token'),
+  invitation: one('/invitation', 'token'),
   openShop: { pattern: '/open-shop', href: () => '/open-shop' },
   checkRecord: { pattern: '/check', href: () => '/check' },
   /** What the QR code of a press's tag leads to, for whoever scans it. */

@@ -8,6 +8,9 @@ import { askWhoIsHere, requireSession } from './routes/session-guard'
 /** Screens for whoever comes. */
 const openScreens: RouteObject[] = [
   { path: paths.signIn.pattern, lazy: () => import('./routes/sign-in') },
+  { path: paths.forgottenPassword.pattern, lazy: () => import('./routes/forgotten-password') },
+  { path: paths.newPassword.pattern, lazy: () => import('./routes/new-password') },
+  { path: paths.invitation.pattern, lazy: () => import('./routes/invitation') },
   { path: paths.openShop.pattern, lazy: () => import('./routes/open-shop') },
   { path: paths.checkRecord.pattern, lazy: () => import('./routes/check') },
   { path: paths.publicTag.pattern, lazy: () => import('./routes/public-tag') },
@@ -38,6 +41,8 @@ const signedInScreens: RouteObject[] = [
   { path: paths.planProofTest.pattern, lazy: () => import('./routes/plan-proof-test') },
   { path: paths.proofTests.pattern, lazy: () => import('./routes/proof-tests') },
   { path: paths.people.pattern, lazy: () => import('./routes/people') },
+  { path: paths.mail.pattern, lazy: () => import('./routes/mail') },
+  { path: paths.letter.pattern, lazy: () => import('./routes/letter') },
   { path: paths.settings.pattern, lazy: () => import('./routes/settings') },
   { path: paths.account.pattern, lazy: () => import('./routes/account') },
   { path: paths.more.pattern, lazy: () => import('./routes/more') },

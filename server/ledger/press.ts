@@ -7,6 +7,7 @@ import type { PressState } from '#shared/press/state'
 import { findingsOf } from '#shared/ledger/rules'
 import type { EntryDraft, LedgerEntry } from '#shared/ledger/envelope'
 import { v7 as newId } from 'uuid'
+import { tellOfClearance } from '../mail/clearance-notice'
 import { conflict, notFound } from '../problem'
 import { pressState, rememberFold } from './folds'
 import { projectPress } from './projections'
@@ -23,6 +24,7 @@ async function keep(
   const entry = await writeEntry(writing, head, draft, irregular)
   const next = applyPress(state, entry)
   await projectPress(writing.database, writing.transaction, head.shopId, next)
+  await tellOfClearance(writing, head.shopId, state, next, entry.id)
   rememberFold(writing.database, next)
   return entry
 }

@@ -4,9 +4,12 @@ import { Attachment, initAttachment } from './attachment'
 import { Calibration, initCalibration } from './calibration'
 import { CalendarFeed, initCalendarFeed } from './calendar-feed'
 import { Instrument, initInstrument } from './instrument'
+import { Invitation, initInvitation } from './invitation'
 import { Ledger, initLedger } from './ledger'
 import { LedgerEntry, initLedgerEntry } from './ledger-entry'
+import { MailMessage, initMailMessage } from './mail-message'
 import { Membership, initMembership } from './membership'
+import { PasswordReset, initPasswordReset } from './password-reset'
 import { Press, initPress } from './press'
 import { ProofTest, initProofTest } from './proof-test'
 import { Protocol, initProtocol } from './protocol'
@@ -15,6 +18,7 @@ import { Seal, initSeal } from './seal'
 import { Session, initSession } from './session'
 import { Shop, initShop } from './shop'
 import { Tag, initTag } from './tag'
+import { TestGuest, initTestGuest } from './test-guest'
 import { Tooling, initTooling } from './tooling'
 import { User, initUser } from './user'
 
@@ -24,9 +28,12 @@ export {
   CalendarFeed,
   Calibration,
   Instrument,
+  Invitation,
   Ledger,
   LedgerEntry,
+  MailMessage,
   Membership,
+  PasswordReset,
   Press,
   ProofTest,
   Protocol,
@@ -35,6 +42,7 @@ export {
   Session,
   Shop,
   Tag,
+  TestGuest,
   Tooling,
   User,
 }
@@ -46,9 +54,12 @@ export function initModels(sequelize: Sequelize): void {
   initCalendarFeed(sequelize)
   initCalibration(sequelize)
   initInstrument(sequelize)
+  initInvitation(sequelize)
   initLedger(sequelize)
   initLedgerEntry(sequelize)
+  initMailMessage(sequelize)
   initMembership(sequelize)
+  initPasswordReset(sequelize)
   initPress(sequelize)
   initProofTest(sequelize)
   initProtocol(sequelize)
@@ -57,6 +68,7 @@ export function initModels(sequelize: Sequelize): void {
   initSession(sequelize)
   initShop(sequelize)
   initTag(sequelize)
+  initTestGuest(sequelize)
   initTooling(sequelize)
   initUser(sequelize)
 }

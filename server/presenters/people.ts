@@ -1,7 +1,7 @@
 import { can } from '#shared/policy'
 import type { Actor, Role } from '#shared/policy'
 import type { Person } from '#shared/api/people'
-import type { SessionResponse } from '#shared/api/session'
+import type { GuestTest, SessionResponse } from '#shared/api/session'
 import { shopSchema } from '#shared/api/shops'
 import type { Shop as ShopBody } from '#shared/api/shops'
 import type { Shop } from '../models'
@@ -14,10 +14,11 @@ export function presentShop(shop: Shop): ShopBody {
   return shopSchema.parse({ id, name, forceUnit, pressureUnit, lengthUnit, buildPauseDays, walkDownHours })
 }
 
-export function presentSession(session: SignedIn, shops: { shop: Shop; role: Role }[]): SessionResponse {
+export function presentSession(session: SignedIn, shops: { shop: Shop; role: Role }[], guestOf: GuestTest[]): SessionResponse {
   return {
     user: { id: session.userId, name: session.name, email: session.email },
     shops: shops.map(({ shop, role }) => ({ ...presentShop(shop), role })),
+    guestOf,
     expiresAt: session.expiresAt.toISOString(),
   }
 }

@@ -1,12 +1,11 @@
 import { Router } from 'express'
-import type { Transaction } from 'sequelize'
 import { testListQuerySchema } from '#shared/api/proof-tests'
 import type { AppContext } from '../context'
 import { authenticate } from '../middleware/authenticate'
 import { idParam, parseQuery, shopOf } from '../middleware/validate'
 import { presentProofTest, presentProofTestList } from '../presenters/proof-test-register'
-import { listProofTests, readProofTest, shopOfProofTest } from '../services/proof-test-register'
-import { workIn, workOn } from './work'
+import { listProofTests, readProofTest } from '../services/proof-test-register'
+import { workIn, workOnTest } from './work'
 
 export function proofTestReadRoutes(context: AppContext): Router {
   const router = Router()
@@ -20,8 +19,7 @@ export function proofTestReadRoutes(context: AppContext): Router {
 
   router.get('/proof-tests/:proofTestId', authenticate(context), async (request, response) => {
     const id = idParam(request, 'proofTestId')
-    const shopOfIt = (transaction: Transaction) => shopOfProofTest(id, transaction)
-    const test = await workOn(context, request, 'This proof test', shopOfIt, (work) => readProofTest(work, id))
+    const test = await workOnTest(context, request, id, (work) => readProofTest(work, id))
     response.json({ shopId: test.shopId, proofTest: presentProofTest(test) })
   })
 

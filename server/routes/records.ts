@@ -1,5 +1,6 @@
 import { pipeline } from 'node:stream/promises'
 import { Router } from 'express'
+import type { Response } from 'express'
 import type { Transaction } from 'sequelize'
 import type { AppContext } from '../context'
 import { recordPdfQuerySchema } from '#shared/api/records'
@@ -10,12 +11,11 @@ import { MOST_ON_PAPER } from '../records/files'
 import { recordPdf } from '../records/pdf/record-pdf'
 import { recordFileName, recordOf } from '../records/record'
 import { recordWorkbook } from '../records/record-workbook'
-import { ledgerFile } from '../services/ledger-files'
+import { ledgerFile, type LedgerFile } from '../services/ledger-files'
 import { shopOfPress } from '../services/press-register'
-import { shopOfProofTest } from '../services/proof-test-register'
 import { recordFiles } from '../services/record-files'
 import { readRecord } from '../services/records'
-import { workOn } from './work'
+import { workOn, workOnTest } from './work'
 
 const WORKBOOK = 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet'
 
@@ -24,8 +24,7 @@ export function recordRoutes(context: AppContext): Router {
 
   router.get('/proof-tests/:proofTestId/record.xlsx', authenticate(context), async (request, response) => {
     const id = idParam(request, 'proofTestId')
-    const shopOfIt = (transaction: Transaction) => shopOfProofTest(id, transaction)
-    const source = await workOn(context, request, 'This proof test', shopOfIt, (work) => readRecord(context, work, id))
+    const source = await workOnTest(context, request, id, (work) => readRecord(context, work, id))
     const { opened, state } = recordOf(source)
     // Written after the transaction: a spreadsheet takes longer than a connection should be held.
     const files = await recordFiles(context, opened.shop.id, state.attachments)
@@ -36,8 +35,7 @@ export function recordRoutes(context: AppContext): Router {
   router.get('/proof-tests/:proofTestId/record.pdf', authenticate(context), async (request, response) => {
     const id = idParam(request, 'proofTestId')
     const { paper } = parseQuery(request, recordPdfQuerySchema)
-    const shopOfIt = (transaction: Transaction) => shopOfProofTest(id, transaction)
-    const source = await workOn(context, request, 'This proof test', shopOfIt, (work) => readRecord(context, work, id))
+    const source = await workOnTest(context, request, id, (work) => readRecord(context, work, id))
     const { opened, state } = recordOf(source)
     const files = await recordFiles(context, opened.shop.id, state.attachments, MOST_ON_PAPER)
     // Set whole before the first byte goes out: what can't be set is answered as a problem, not as half a file.
@@ -46,18 +44,19 @@ export function recordRoutes(context: AppContext): Router {
     await pipeline(document, response)
   })
 
-  const ledgers = [
-    { subject: 'proof-test', what: 'This proof test', path: '/proof-tests/:id/ledger.json', shopOf: shopOfProofTest },
-    { subject: 'press', what: 'This press', path: '/presses/:id/ledger.json', shopOf: shopOfPress },
-  ] as const
-  for (const { subject, what, path, shopOf } of ledgers) {
-    router.get(path, authenticate(context), async (request, response) => {
-      const id = idParam(request, 'id')
-      const shopOfIt = (transaction: Transaction) => shopOf(id, transaction)
-      const { name, text } = await workOn(context, request, what, shopOfIt, (work) => ledgerFile(context, work, subject, id))
-      response.attachment(name).type('application/json').send(Buffer.from(text, 'utf8'))
-    })
-  }
+  const sendFile = (response: Response, { name, text }: LedgerFile) =>
+    response.attachment(name).type('application/json').send(Buffer.from(text, 'utf8'))
+
+  router.get('/proof-tests/:id/ledger.json', authenticate(context), async (request, response) => {
+    const id = idParam(request, 'id')
+    sendFile(response, await workOnTest(context, request, id, (work) => ledgerFile(context, work, 'proof-test', id)))
+  })
+
+  router.get('/presses/:id/ledger.json', authenticate(context), async (request, response) => {
+    const id = idParam(request, 'id')
+    const shopOfIt = (transaction: Transaction) => shopOfPress(id, transaction)
+    sendFile(response, await workOn(context, request, 'This press', shopOfIt, (work) => ledgerFile(context, work, 'press', id)))
+  })
 
   return router
 }

@@ -6,6 +6,7 @@ import type { AppContext } from '../context'
 import { authenticate, personOf, sessionCookie, sessionTokenOf } from '../middleware/authenticate'
 import { parseBody } from '../middleware/validate'
 import { presentSession } from '../presenters/people'
+import { guestTestsOf } from '../services/guests'
 import { changePassword, endSession, resumeSession, shopsOf, signIn, tokenFor } from '../services/sessions'
 import type { Client, SignedIn } from '../services/sessions'
 
@@ -23,7 +24,7 @@ export async function sendSignedIn(context: AppContext, response: Response, sess
     'Set-Cookie',
     stringifySetCookie({ ...cookieOptions(context), value: tokenFor(context, session), expires: session.expiresAt }),
   )
-  response.status(status).json(presentSession(session, await shopsOf(session.userId)))
+  response.status(status).json(presentSession(session, await shopsOf(session.userId), await guestTestsOf(session.userId)))
 }
 
 export function sessionRoutes(context: AppContext): Router {
@@ -36,7 +37,7 @@ export function sessionRoutes(context: AppContext): Router {
 
   router.get('/session', authenticate(context), async (request, response) => {
     const session = personOf(request)
-    response.json(presentSession(session, await shopsOf(session.userId)))
+    response.json(presentSession(session, await shopsOf(session.userId), await guestTestsOf(session.userId)))
   })
 
   // Signing out works without a session too: the cookie goes in any case.

@@ -94,8 +94,12 @@ export async function readableHeads({ database }: Pick<AppContext, 'database'>, 
   const rows = await database.query<{ id: string; headSeq: number }>(
     `SELECT l.id AS id, l.head_seq AS headSeq
        FROM ledgers l JOIN memberships m ON m.shop_id = l.shop_id AND m.user_id = ? AND m.ended_at IS NULL
+      WHERE l.id IN (?)
+      UNION
+     SELECT l.id AS id, l.head_seq AS headSeq
+       FROM ledgers l JOIN test_guests g ON g.shop_id = l.shop_id AND g.proof_test_id = l.id AND g.user_id = ? AND g.ended_at IS NULL
       WHERE l.id IN (?)`,
-    { replacements: [userId, ids], type: QueryTypes.SELECT },
+    { replacements: [userId, ids, userId, ids], type: QueryTypes.SELECT },
   )
   return Object.fromEntries(rows.map((row) => [row.id, row.headSeq]))
 }

@@ -40,18 +40,18 @@ function authorsOf(texts: readonly string[]): string[] {
   })
 }
 
+export interface LedgerFile {
+  name: string
+  text: string
+}
+
 /** A ledger as a file, exactly as stored, signed with today's key. 404 for another shop's, 403 where the role may not export. */
-export async function ledgerFile(
-  { config, database }: AppContext,
-  work: Work,
-  subject: LedgerSubject,
-  id: string,
-): Promise<{ name: string; text: string }> {
+export async function ledgerFile({ config, database }: AppContext, work: Work, subject: LedgerSubject, id: string): Promise<LedgerFile> {
   const { transaction, actor, now } = work
   const named = await nameOf(subject, work, id)
   const head = await readHead(database, transaction, id)
   if (named === null || head === null) throw notFound(subject === 'press' ? 'This press' : 'This proof test')
-  authorize(actor, 'record:export', { shopId: actor.shopId })
+  authorize(actor, 'record:export', { shopId: actor.shopId, testId: id })
   const { seals, entries } = await readTogether(
     () => readSeals(database, transaction, id),
     () => readStored(database, transaction, id),

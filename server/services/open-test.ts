@@ -10,6 +10,7 @@ import { withAboveRating } from '#shared/proof-test/protocol'
 import type { Work } from '../context'
 import { Membership, ProofTest, Shop, User } from '../models'
 import { conflict, invalid, notFound } from '../problem'
+import { bindGuest } from './guests'
 import { authorize } from './membership'
 import { instrumentsForTest } from './instruments'
 import { protocolForTest } from './protocols'
@@ -20,6 +21,12 @@ import { lockHead } from '../ledger/read'
 import { createLedger, type Writing } from '../ledger/write'
 
 const DAY = 86_400_000
+
+/** The witness of this test: a member of the shop, or somebody from outside who accepted for this press's next test. */
+async function witnessNamed(work: Work, { id: testId, pressId, witness }: OpenTestRequest): Promise<string> {
+  const guestName = await bindGuest(work, { userId: witness.id, pressId, testId })
+  return guestName ?? memberNamed(work, witness.id, 'proof-test:be-witness', 'witness.id')
+}
 
 async function memberNamed(
   { transaction, actor }: Work,
@@ -74,7 +81,7 @@ async function composeOpened(work: Work, request: OpenTestRequest, press: PressS
   if (!shop || !lead) throw notFound('This shop')
   const ids = [...new Set([...request.forceInstrumentIds, ...request.points.map((point) => point.instrumentId)])]
   const measured = new Set(request.points.map((point) => point.memberId))
-  const witnessName = await memberNamed(work, request.witness.id, 'proof-test:be-witness', 'witness.id')
+  const witnessName = await witnessNamed(work, request)
   const pumpHandName = request.pumpHand.id
     ? await memberNamed(work, request.pumpHand.id, 'proof-test:be-pump-hand', 'pumpHand.id')
     : request.pumpHand.name

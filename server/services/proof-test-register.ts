@@ -74,7 +74,7 @@ export async function shopOfProofTest(id: string, transaction: Transaction): Pro
 
 export async function readProofTest({ transaction, actor }: Work, id: string): Promise<TestRecord> {
   const { shopId } = actor
-  authorize(actor, 'proof-test:read', { shopId })
+  authorize(actor, 'proof-test:read', { shopId, testId: id })
   const test = await ProofTest.findOne({ where: { id, shopId }, raw: true, transaction })
   if (test === null) throw notFound('This proof test')
   return test

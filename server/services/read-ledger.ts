@@ -7,7 +7,7 @@ import { entryOf, readHead, readSeals, readStored, readTogether } from '../ledge
 import { inRetriedTransaction } from '../ledger/retry'
 import { notFound } from '../problem'
 import type { Asking } from './ledgers'
-import { membershipOf } from './membership'
+import { membershipOf, readerOfTest } from './membership'
 import { namesOf } from './names'
 
 /** Entries that a client can read; null when an altered one is no entry any more. */
@@ -34,15 +34,16 @@ export async function readLedger(
   return inRetriedTransaction(database, async (transaction) => {
     const head = await readHead(database, transaction, ledgerId)
     if (!head || head.subject !== subject) throw notFound(subject === 'press' ? 'This press' : 'This proof test')
-    await membershipOf({ transaction, userId, shopId: head.shopId })
+    const asked = { transaction, userId, shopId: head.shopId }
+    await (subject === 'press' ? membershipOf(asked) : readerOfTest(asked, ledgerId))
     const isSealed = after === 0 || (await readSeals(database, transaction, ledgerId)).length > 0
     const { seals, entries: stored } = await readTogether(
       () => readSeals(database, transaction, ledgerId),
       () => readStored(database, transaction, ledgerId, isSealed ? 0 : after),
     )
     const broken = isSealed ? findBroken(context, ledgerId, stored, seals) : null
-    const asked = stored.filter(({ seq }) => seq > after)
-    const entries = broken === null ? asked.map(entryOf) : readable(asked)
+    const wanted = stored.filter(({ seq }) => seq > after)
+    const entries = broken === null ? wanted.map(entryOf) : readable(wanted)
     if (broken !== null && entries === null) throw alteredProblem(broken)
     const told = entries ?? []
     const last = told.at(-1)

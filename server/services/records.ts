@@ -15,7 +15,7 @@ import { namesOf } from './names'
 export async function readRecord(context: AppContext, { transaction, actor, now }: Work, id: string): Promise<RecordSource> {
   const test = await ProofTest.findOne({ where: { id, shopId: actor.shopId }, attributes: ['id'], raw: true, transaction })
   if (test === null) throw notFound('This proof test')
-  authorize(actor, 'record:export', { shopId: actor.shopId })
+  authorize(actor, 'record:export', { shopId: actor.shopId, testId: id })
   const source = await recordSource(transaction, id, now)
   const broken = findBroken(context, id, source.stored, source.seals)
   if (broken !== null) throw alteredProblem(broken)

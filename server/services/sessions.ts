@@ -8,6 +8,7 @@ import { inTransaction } from '../context'
 import { Membership, Session, Shop, User } from '../models'
 import { Problem, invalid, notSignedIn } from '../problem'
 import { retried } from '../transaction'
+import { tellOfPassword } from './password-notice'
 import { comparePassword, hashPassword } from './passwords'
 import { withinLimits } from './sign-in-limits'
 
@@ -128,6 +129,7 @@ export async function changePassword(
     throw invalid({ currentPassword: 'This is not your present password.' })
   }
   const passwordHash = await hashPassword(request.newPassword, context.config.bcryptCost)
+  const changeId = newId()
   const change = async (transaction: Transaction) => {
     const [changed] = await User.update({ passwordHash }, { where: { id: signedIn.userId }, transaction })
     if (changed === 0) throw notSignedIn()
@@ -135,6 +137,8 @@ export async function changePassword(
       { endedAt: context.now() },
       { where: { userId: signedIn.userId, id: { [Op.ne]: signedIn.sessionId }, endedAt: null }, transaction },
     )
+    const queueing = { database: context.database, transaction, now: context.now() }
+    await tellOfPassword(queueing, { id: signedIn.userId, name: signedIn.name, email: signedIn.email }, changeId, 'changed')
   }
   await inTransaction(context, change, { idempotent: true })
 }

@@ -7,6 +7,7 @@ import { PROOF_TEST_VERSION, type Opened } from '#shared/proof-test/entries'
 import type { AppContext } from '../context'
 import { conflict, notFound } from '../problem'
 import { absentHashes } from './held-files'
+import { tellOfSignature } from './record-notices'
 import { appendToTest, lockTest } from './test-entries'
 import { alteredProblem, findBroken } from '../ledger/check-stored'
 import { SERVER_DEVICE } from '../ledger/press'
@@ -99,5 +100,6 @@ export async function signTest(
       transaction,
     },
   )
+  await tellOfSignature(writing, head.shopId, locked.state, entry, seal)
   return entry
 }

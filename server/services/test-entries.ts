@@ -48,7 +48,7 @@ export async function appendToTest(
 ): Promise<LedgerEntry> {
   const { head, state, actor } = locked
   const assignment = draft.kind === 'opened' ? undefined : assignmentOf(state)
-  authorize(actor, ACTIONS[draft.kind] ?? 'proof-test:append-fact', { shopId: head.shopId, assignment })
+  authorize(actor, ACTIONS[draft.kind] ?? 'proof-test:append-fact', { shopId: head.shopId, assignment, testId: head.id })
   if (draft.authorId !== actor.userId) throw forbidden()
   return appendToProofTest(writing, locked, draft, circumstances)
 }

@@ -29,11 +29,22 @@ export type SignInRequest = z.infer<typeof signInRequestSchema>
 
 export const signedInUserSchema = z.object({ id: idSchema, name: z.string(), email: z.string() })
 
+/** A test that somebody witnesses from outside its shop; `test` is null until it is opened. */
+export const guestTestSchema = z.object({
+  shopId: idSchema,
+  shopName: z.string(),
+  pressName: z.string(),
+  test: z.object({ proofTestId: idSchema, number: z.string(), status: z.string() }).nullable(),
+})
+export type GuestTest = z.infer<typeof guestTestSchema>
+
 /** GET and POST /api/session, POST /api/shops. Without a session GET answers 401 `not-signed-in`. */
 export const sessionResponseSchema = z.object({
   user: signedInUserSchema,
   /** The shops this person belongs to now, by name. */
   shops: z.array(shopSchema.extend({ role: roleSchema })),
+  /** What this person was invited to from outside; not in what older versions kept on a device. */
+  guestOf: z.array(guestTestSchema).optional(),
   expiresAt: timeSchema,
 })
 export type SessionResponse = z.infer<typeof sessionResponseSchema>

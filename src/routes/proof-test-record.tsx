@@ -22,7 +22,7 @@ export function Component() {
     <RecordSheet
       record={record}
       turn={signTurn(record, can)}
-      mayExport={can('record:export', { shopId })}
+      mayExport={can('record:export', { shopId, testId: proofTestId })}
       part={partOf(record, user.id)}
       today={new Date()}
     />

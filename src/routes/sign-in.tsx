@@ -30,6 +30,7 @@ export function Component() {
       }
       foot={
         <>
+          <FootLink to={paths.forgottenPassword.href()}>Forgotten password</FootLink>
           <FootLink to={paths.openShop.href()}>Open a shop</FootLink>
           <FootLink to={paths.checkRecord.href()}>Check a record</FootLink>
         </>

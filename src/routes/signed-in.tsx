@@ -1,5 +1,6 @@
 import { Outlet } from 'react-router-dom'
 import { VersionPlate } from '../components/version-plate'
+import { GuestFrame } from '../features/people/components/guest-frame'
 import { HereProvider } from '../features/people/components/here-provider'
 import { SignedInFrame } from '../features/people/components/signed-in-frame'
 import { weekday } from '../lib/dates'
@@ -7,7 +8,13 @@ import { weekday } from '../lib/dates'
 /** Screens with navigation round them. */
 export function SignedIn() {
   return (
-    <HereProvider>
+    <HereProvider
+      guestScreens={
+        <GuestFrame>
+          <Outlet />
+        </GuestFrame>
+      }
+    >
       <SignedInFrame day={weekday(new Date())}>
         <VersionPlate />
         <Outlet />

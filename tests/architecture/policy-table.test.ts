@@ -42,6 +42,8 @@ const table: Record<Action, Row> = {
   'people:add': 'O----',
   'people:change-role': 'O----',
   'people:end': 'O----',
+  'people:invite': 'O----',
+  'mail:read': 'O----',
   'press:read': 'OLWC-',
   'press:register': 'OL---',
   'press:describe': 'OL---',
@@ -60,6 +62,7 @@ const table: Record<Action, Row> = {
   'protocol:write': 'OL---',
   'proof-test:read': 'OLWC-',
   'proof-test:open': 'OL---',
+  'proof-test:invite-witness': 'OL---',
   'proof-test:be-lead': 'OL---',
   'proof-test:be-pump-hand': 'OLWC-',
   'proof-test:be-witness': 'OLW--',
@@ -116,6 +119,27 @@ describe('every role and every action', () => {
         }
       }
     }
+  })
+
+  it('lets an outside witness read, attend and sign the one test of theirs, and nothing else of the shop', () => {
+    const always: Action[] = ['proof-test:read', 'proof-test:be-witness', 'record:export']
+    const asWitness: Action[] = [...always, 'proof-test:append-fact', 'proof-test:stop', 'proof-test:countersign', 'proof-test:decline']
+    const guest: Actor = { userId: me, shopId, role: null, guestOf: ['my test'] }
+    const may = (testId: string | undefined, assignment?: Assignment) =>
+      actions.filter((action) => can(guest, action, { shopId, testId, assignment }))
+    const sorted = (some: readonly Action[]) => actions.filter((action) => some.includes(action))
+    expect(may('my test', parts.witness)).toEqual(sorted(asWitness))
+    expect(may('my test', parts.none)).toEqual(sorted(always))
+    expect(may('my test')).toEqual(sorted(always))
+    // Named there, as anybody whose role has ended: what has happened still lands, and nothing more.
+    expect(may('another test', parts.witness)).toEqual(sorted(['proof-test:append-fact', 'proof-test:stop']))
+    expect(may('another test', parts.none)).toEqual([])
+    expect(may(undefined)).toEqual([])
+    // The pump hand or lead who was also invited from outside is no independent witness.
+    for (const assignment of [parts.witnessAndPumpHand, { leadId: me, pumpHandId: null, witnessId: me }]) {
+      expect(can(guest, 'proof-test:countersign', { shopId, testId: 'my test', assignment })).toBe(false)
+    }
+    expect(actions.some((action) => can({ ...guest, shopId: 'elsewhere' }, action, { shopId, testId: 'my test' }))).toBe(false)
   })
 
   it('never lets the lead or the pump hand countersign, also not one who is named as witness too', () => {

@@ -71,15 +71,22 @@ async function enterInstruments(request: APIRequestContext, shopId: string): Pro
   return ids
 }
 
+export interface ShopToTest extends Omit<E2eShop, 'testId' | 'number'> {
+  owner: Person
+  /** Opens a proof test of the press, as the lead. */
+  openTest(witness: { id: string; relation: string }): Promise<{ testId: string; number: string }>
+}
+
 /**
- * A shop with an owner, a lead and a witness, instruments in date, a protocol of short holds, the press of
- * the record's example with joint 7 only tacked, and a proof test of it that the lead has opened.
+ * A shop with an owner, a lead and a witness, instruments in date, a protocol of short holds, and the press of
+ * the record's example with joint 7 only tacked.
  */
-export async function shopWithOpenTest(): Promise<E2eShop> {
+export async function shopToTest(): Promise<ShopToTest> {
   const owner = (await newDevice()).request
   const name = 'Kiln Lane Fabrication'
   const opening = { shopName: name, ownerName: 'Ida Marsh', email: `${randomUUID()}@people.example`, password }
-  const shopId = sessionResponseSchema.parse(await send(owner, 'POST', '/api/shops', opening)).shops[0]?.id ?? ''
+  const session = sessionResponseSchema.parse(await send(owner, 'POST', '/api/shops', opening))
+  const shopId = session.shops[0]?.id ?? ''
   const lead = await addPerson(owner, shopId, 'lead', 'Lena Vogt')
   const witness = await addPerson(owner, shopId, 'witness', 'Wim Faber')
 
@@ -111,23 +118,33 @@ export async function shopWithOpenTest(): Promise<E2eShop> {
   }
   appendResponseSchema.parse(await send(request, 'POST', `/api/presses?shop=${shopId}`, { sentAt: device.observedAt, entries: [entry] }))
 
-  const testId = newId()
-  const opened = openTestResponseSchema.parse(
-    await send(request, 'POST', `/api/proof-tests?shop=${shopId}`, {
-      ...device,
-      id: testId,
-      entryId: newId(),
-      pressId,
-      protocolId: protocol.id,
-      forceInstrumentIds: [force],
-      points: example.points.map((point, index) => ({ ...point, instrumentId: indicators[index] ?? '' })),
-      net: example.net,
-      legs: [{ label: 'Ram central', ramPosition: 'central', bedHole: '4' }],
-      pumpHand: { id: null, name: 'Pim Noor' },
-      witness: { id: witness.id, relation: 'works next door' },
-      repeatsId: null,
-      instrumentOverride: null,
-    }),
-  )
-  return { id: shopId, name, lead, witness, pressId, testId, number: opened.number }
+  const openTest = async (witness: { id: string; relation: string }) => {
+    const testId = newId()
+    const opened = openTestResponseSchema.parse(
+      await send(request, 'POST', `/api/proof-tests?shop=${shopId}`, {
+        ...device,
+        id: testId,
+        entryId: newId(),
+        pressId,
+        protocolId: protocol.id,
+        forceInstrumentIds: [force],
+        points: example.points.map((point, index) => ({ ...point, instrumentId: indicators[index] ?? '' })),
+        net: example.net,
+        legs: [{ label: 'Ram central', ramPosition: 'central', bedHole: '4' }],
+        pumpHand: { id: null, name: 'Pim Noor' },
+        witness,
+        repeatsId: null,
+        instrumentOverride: null,
+      }),
+    )
+    return { testId, number: opened.number }
+  }
+  const ownerPerson = { id: session.user.id, name: session.user.name, email: opening.email, password }
+  return { id: shopId, name, owner: ownerPerson, lead, witness, pressId, openTest }
+}
+
+/** The same with a proof test that the lead has opened, and that the shop's own witness attends. */
+export async function shopWithOpenTest(): Promise<E2eShop> {
+  const shop = await shopToTest()
+  return { ...shop, ...(await shop.openTest({ id: shop.witness.id, relation: 'works next door' })) }
 }

@@ -117,7 +117,7 @@ export class RunScreen {
 export const ZERO: Row = ['0', '0.00', '0.00', '0.00']
 
 /** The lead, signed in on a tablet held sideways, at the run of the shop's test. */
-export async function leadAtTheRun(shop: E2eShop): Promise<{ page: Page; run: RunScreen }> {
+export async function leadAtTheRun(shop: Pick<E2eShop, 'lead' | 'testId'>): Promise<{ page: Page; run: RunScreen }> {
   const page = await newPage({ viewport: { width: 1180, height: 820 } })
   await signIn(page, shop.lead)
   const run = new RunScreen(page, shop.testId)

@@ -1,7 +1,8 @@
 import { pino } from 'pino'
+import { literal } from 'sequelize'
 import type { AppContext } from '../../context'
 import { inRetriedTransaction } from '../../ledger/retry'
-import { Shop } from '../../models'
+import { MailMessage, Shop } from '../../models'
 import { hashPassword } from '../../services/passwords'
 import { tagOf } from '../../services/tags'
 import { keepDemoPhoto } from './demo-files'
@@ -90,9 +91,11 @@ async function isEmpty(): Promise<boolean> {
 function load({ config, database, now, storage }: DemoContext, passwordHash: string): Promise<void> {
   const logger = pino({ level: config.logLevel }, pino.destination({ dest: 2, sync: true }))
   const loadedAt = now()
-  return inRetriedTransaction(database, (transaction) =>
-    tell({ database, transaction, storage, now: loadedAt, sealing: { config, logger } }, passwordHash),
-  )
+  return inRetriedTransaction(database, async (transaction) => {
+    await tell({ database, transaction, storage, now: loadedAt, sealing: { config, logger } }, passwordHash)
+    // Nobody is written to about what is said to have happened long ago: those letters lie among the sent ones.
+    await MailMessage.update({ state: 'sent', attempts: 1, sentAt: literal('created_at') }, { where: { state: 'queued' }, transaction })
+  })
 }
 
 /**

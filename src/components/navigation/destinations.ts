@@ -32,6 +32,7 @@ const elsewhere = [
   paths.tooling,
   paths.protocols,
   paths.people,
+  paths.mail,
   paths.settings,
   paths.account,
   paths.thisDevice,

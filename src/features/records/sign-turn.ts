@@ -4,7 +4,7 @@ import type { RecordView } from './record-view'
 /** Whose turn it is to sign, as far as the person who reads is concerned. */
 export type SignTurn = { is: 'lead' } | { is: 'witness' } | { is: 'waits'; says: string } | { is: 'nobody' }
 
-type Ask = (action: Action, subject: { shopId: string; assignment: Assignment }) => boolean
+type Ask = (action: Action, subject: { shopId: string; assignment: Assignment; testId: string }) => boolean
 
 /** The people named when the test was opened, as the policy asks for them. */
 export function assignmentOf({ opened }: RecordView): Assignment {
@@ -15,7 +15,7 @@ export function assignmentOf({ opened }: RecordView): Assignment {
 /** Asks the shared policy; what the ledger's own rules say is the server's to enforce. */
 export function signTurn(record: RecordView, can: Ask): SignTurn {
   const { opened, standing } = record
-  const subject = { shopId: opened.shop.id, assignment: assignmentOf(record) }
+  const subject = { shopId: opened.shop.id, assignment: assignmentOf(record), testId: record.id }
   if (standing === 'to sign') {
     if (can('proof-test:sign-as-lead', subject)) return { is: 'lead' }
     return { is: 'waits', says: `Waits for ${opened.people.lead.name}, who ran the test, to sign.` }

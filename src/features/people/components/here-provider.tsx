@@ -1,6 +1,6 @@
 import { useCallback, useEffect, useMemo, useState, type ReactNode } from 'react'
 import { Navigate, useLocation, useSearchParams } from 'react-router-dom'
-import { HereContext, type Here } from '../../../lib/here'
+import { HereContext, type GuestHere, type Here } from '../../../lib/here'
 import { isSignedOut } from '../../../lib/problem'
 import { chooseShop, rememberShop, rememberedShop } from '../../../lib/shop-memory'
 import { ButtonLink } from '../../../components/button'
@@ -13,10 +13,12 @@ type HereProviderProps = {
   children: ReactNode
   /** A test under load goes on when the session ends: only sending waits. Elsewhere one signs in again. */
   staysWhenSignedOut?: boolean
+  /** What somebody from outside gets instead, who sees one test and nothing else; without it the same. */
+  guestScreens?: ReactNode
 }
 
 /** Says to every screen below who is signed in and which shop the tab shows. */
-export function HereProvider({ children, staysWhenSignedOut = false }: HereProviderProps) {
+export function HereProvider({ children, staysWhenSignedOut = false, guestScreens }: HereProviderProps) {
   const session = useSession()
   const location = useLocation()
   const [search] = useSearchParams()
@@ -41,7 +43,12 @@ export function HereProvider({ children, staysWhenSignedOut = false }: HereProvi
     void import('../../../lib/outbox').then(({ outbox }) => outbox.sendAs(userId))
     void import('../../../lib/attachments').then(({ files }) => files.sendNow({ everything: true }))
   }, [userId])
-  const here = useMemo<Here | null>(() => (user && shops && shop ? { user, shops, shop, adopt } : null), [user, shops, shop, adopt])
+  const guestOf = session.data?.guestOf
+  const here = useMemo<Here | GuestHere | null>(() => {
+    if (!user || !shops) return null
+    if (shop) return { user, shops, shop, adopt, guestOf }
+    return guestOf && guestOf.length > 0 ? { user, shops, shop: null, adopt, guestOf } : null
+  }, [user, shops, shop, adopt, guestOf])
 
   if (isSignedOut(session.error) && !(staysWhenSignedOut && here)) {
     return <Navigate replace to={paths.signIn.href({ next: location.pathname + location.search })} />
@@ -57,5 +64,5 @@ export function HereProvider({ children, staysWhenSignedOut = false }: HereProvi
       </PlainScreen>
     )
   }
-  return <HereContext value={here}>{children}</HereContext>
+  return <HereContext value={here}>{here.shop === null && guestScreens ? guestScreens : children}</HereContext>
 }

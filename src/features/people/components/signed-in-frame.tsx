@@ -3,13 +3,14 @@ import { useLocation, useNavigate } from 'react-router-dom'
 import { PhoneNavigation, PhoneTitleBar } from '../../../components/navigation/phone-navigation'
 import { ShopMenu, type MenuEntry } from '../../../components/navigation/shop-menu'
 import { TopNavigation } from '../../../components/navigation/top-navigation'
-import { useHere } from '../../../lib/here'
+import { useCan, useHere } from '../../../lib/here'
 import { paths } from '../../../paths'
 import { entriesWait, useLeave } from '../api/sign-out'
 
 /** What belongs to the person and the shop: the menu on wide screens, part of "More" on the phone. */
 export function usePersonEntries(): readonly MenuEntry[] {
-  const { user, shop, shops } = useHere()
+  const { user, shop, shops, guestOf = [] } = useHere()
+  const can = useCan()
   const { leave, failed } = useLeave()
   const navigate = useNavigate()
   const leaveOrSay = async (): Promise<void> => {
@@ -20,9 +21,13 @@ export function usePersonEntries(): readonly MenuEntry[] {
   return [
     { label: 'Your account', to: paths.account.href() },
     { label: 'Shop settings', to: paths.settings.href() },
+    ...(can('mail:read') ? [{ label: 'Mail', note: 'letters of this shop', to: paths.mail.href() }] : []),
     { label: 'On this device', note: 'what is kept here, sent and sealed', to: paths.thisDevice.href() },
     { label: 'Help', note: 'how each figure is worked out', to: paths.help.href() },
     ...otherShops.map((one) => ({ label: `Go to ${one.name}`, note: `there you are ${one.role}`, to: paths.today.href({ shop: one.id }) })),
+    ...guestOf.flatMap(({ test, shopName }) =>
+      test === null ? [] : [{ label: `Witness ${test.number}`, note: `at ${shopName}`, to: paths.attendProofTest.href(test.proofTestId) }],
+    ),
     {
       label: failed ? 'Still signed in: try again' : 'Sign out',
       note: failed ? 'The server was not reached.' : undefined,

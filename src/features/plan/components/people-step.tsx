@@ -3,9 +3,11 @@ import { can } from '#shared/policy'
 import { TextField } from '../../../components/field'
 import { FormStep } from '../../../components/form-steps'
 import { SelectField } from '../../../components/select-field'
+import { useOutside } from '../api/outside-witness'
 import type { PlanRegisters } from '../api/get-plan-registers'
 import { SOMEBODY_ELSE } from '../draft'
 import type { PlanForm } from '../use-plan-form'
+import { OutsideWitness } from './outside-witness'
 
 type PeopleStepProps = { form: PlanForm; number: number; registers: PlanRegisters; shopId: string; lead: { id: string; name: string } }
 
@@ -13,6 +15,8 @@ type PeopleStepProps = { form: PlanForm; number: number; registers: PlanRegister
 export function PeopleStep({ form, number, registers, shopId, lead }: PeopleStepProps) {
   const { control, register, formState } = form
   const pumpHand = useWatch({ control, name: 'pumpHand.id' })
+  const pressId = useWatch({ control, name: 'pressId' })
+  const { waiting, accepted } = useOutside(shopId, pressId)
   const { errors } = formState
   const others = registers.people.filter((person) => person.userId !== lead.id && person.userId !== pumpHand)
   const witnesses = others.filter((person) =>
@@ -48,7 +52,10 @@ export function PeopleStep({ form, number, registers, shopId, lead }: PeopleStep
         label="Witness"
         nothing="Choose a witness"
         hint="Never the lead or the pump hand. Attends, reads the gauge independently and countersigns."
-        choices={witnesses.map((person) => ({ value: person.userId, label: person.name }))}
+        choices={[
+          ...witnesses.map((person) => ({ value: person.userId, label: person.name })),
+          ...accepted.map((guest) => ({ value: guest.userId, label: `${guest.name}, from outside` })),
+        ]}
         message={errors.witness?.id && 'Choose a witness.'}
         {...register('witness.id')}
       />
@@ -60,6 +67,9 @@ export function PeopleStep({ form, number, registers, shopId, lead }: PeopleStep
         message={errors.witness?.relation?.message}
         {...register('witness.relation')}
       />
+      <div className="tablet:col-span-full">
+        <OutsideWitness shopId={shopId} pressId={pressId} waiting={waiting} />
+      </div>
     </FormStep>
   )
 }
