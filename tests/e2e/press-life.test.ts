@@ -237,6 +237,13 @@ describe('the life of a press', () => {
     await oldLine.waitFor()
     await lead.page.goto(`/presses/${pressId}`)
     await lead.answer.getByText('Cleared up to', { exact: true }).waitFor()
+    // The load keeps clear of what stands beside it.
+    const [load, beside] = await Promise.all(
+      [lead.answer.getByText('short tons', { exact: true }), lead.answer.getByText('No other bed hole was tested.')].map((text) =>
+        text.first().boundingBox(),
+      ),
+    )
+    expect((load?.x ?? Infinity) + (load?.width ?? 0)).toBeLessThan(beside?.x ?? 0)
     await lead.sees(new RegExp(`stiffer at ${retest.number} than at ${run.number}`))
   })
 })
