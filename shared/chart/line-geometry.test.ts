@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { hatch } from './drawing'
+import { estimateTextWidth, hatch } from './drawing'
 import type { DrawingItem, PathItem, TextItem } from './drawing'
 import { lineFrame } from './line-frame'
 import { lineDrawing, loadScale } from './line-geometry'
@@ -80,6 +80,20 @@ describe('the line', () => {
 
   it('names its axis with the unit', () => {
     expect(words(lineDrawing(spec).items).map((item) => item.text)).toContain('Bed middle less mean of pins, mm')
+  })
+
+  it.each([
+    'Bed middle less mean of left pin and right pin',
+    'Bed middle at its stiffener less mean of left pin in upright and right pin in upright',
+  ])('keeps the name of its axis inside the picture: %s', (xLabel) => {
+    const drawn = words(lineDrawing({ ...spec, width: 340, height: 620, xLabel }).items).filter(
+      ({ text }) => `${xLabel}, mm`.includes(text) && text.length > 6,
+    )
+    expect(drawn.map(({ text }) => text).join(' ')).toBe(`${xLabel}, mm`)
+    for (const { x, y, text, size } of drawn) {
+      expect(x + estimateTextWidth(text, size, 400, true)).toBeLessThanOrEqual(340)
+      expect(y).toBeLessThan(620)
+    }
   })
 
   it('takes stages above the rating, and any number of them', () => {

@@ -52,15 +52,22 @@ function axes(spec: LineChartSpec, frame: LineFrame): DrawingItem[] {
   if (spec.footnote !== undefined && alone)
     items.push(textItem(24, frame.zero + 46, spec.footnote, 'scribe', { size: 14, condensed: true }))
   const words = `${spec.xLabel}, ${spec.xUnit}`
-  items.push(
-    alone
-      ? textItem(frame.right, frame.zero + 46, words, 'faint-scribe', { size: 14, condensed: true, anchor: 'end' })
-      : textItem(spec.width < 300 ? 12 : frame.left, frame.zero + 54, words, 'faint-scribe', {
-          condensed: true,
-          size: spec.width < 300 ? 14 : 16,
-        }),
-  )
+  if (alone) items.push(textItem(frame.right, frame.zero + 46, words, 'faint-scribe', { size: 14, condensed: true, anchor: 'end' }))
+  else items.push(...figureBelow(words, spec.width, frame))
   return items
+}
+
+/** What deflects, under the axis: from the axis on where it fits, else smaller from the edge, else in two lines. */
+function figureBelow(words: string, width: number, frame: LineFrame): DrawingItem[] {
+  const fits = (text: string, size: number, from: number) => from + estimateTextWidth(text, size, 400, true) <= width - 8
+  if (width >= 300 && fits(words, 16, frame.left))
+    return [textItem(frame.left, frame.zero + 54, words, 'faint-scribe', { condensed: true, size: 16 })]
+  const style = { condensed: true, size: 14 }
+  const half = words.lastIndexOf(' ', Math.ceil(words.length / 2))
+  if (half < 0 || fits(words, 14, 12)) return [textItem(12, frame.zero + 54, words, 'faint-scribe', style)]
+  return [words.slice(0, half), words.slice(half + 1)].map((line, index) =>
+    textItem(12, frame.zero + 44 + index * 16, line, 'faint-scribe', style),
+  )
 }
 
 /** A load beside its stage, in one line where it has room before the axis, else with its unit below it. */

@@ -2,9 +2,11 @@ import sharp from 'sharp'
 import { beforeAll, describe, expect, it } from 'vitest'
 import { entriesResponseSchema } from '#shared/api/ledger'
 import { foldPress } from '#shared/press/apply'
+import type { PressDraft } from '#shared/press/entries'
+import type { PressState } from '#shared/press/state'
 import { ApiRun, Device, enterPress, post, type Staff } from '../factories/api-run'
 import { aimClientsAt } from '../factories/client'
-import { openStaffedShop } from '../factories/people'
+import { openStaffedShop, type SignedInPerson } from '../factories/people'
 import { serverAddress } from '../support/browser'
 import { howMany, pageOf, PATIENT, PHONE, planAgain, PressScreen } from '../support/press-screen'
 
@@ -25,16 +27,33 @@ const halfBuilt = (staff: Staff): Promise<string> =>
     joints: joints.map((joint) => (joint.number === 7 ? { ...joint, kind: 'weld', makeUp: 'tacked' } : joint)),
   }))
 
+async function pressOf({ lead }: Staff, pressId: string): Promise<PressState> {
+  const { body } = await lead.client.get(`/api/presses/${pressId}/entries`).expect(200)
+  return foldPress(pressId, entriesResponseSchema.parse(body).entries)
+}
+
+async function say(person: SignedInPerson, pressId: string, ...drafts: PressDraft[]) {
+  const device = new Device(person, pressId)
+  const { results } = await post(
+    person,
+    `/api/presses/${pressId}/entries`,
+    drafts.map((draft) => device.draft(draft)),
+  )
+  return results.map((result) => (result.outcome === 'refused' ? result.problem.detail : result.outcome))
+}
+
 /** Accepts over HTTP every joint of a press that is not accepted. */
-async function examineRest({ lead }: Staff, pressId: string): Promise<void> {
-  const { entries } = entriesResponseSchema.parse((await lead.client.get(`/api/presses/${pressId}/entries`).expect(200)).body)
-  const device = new Device(lead, pressId)
-  const drafts = foldPress(pressId, entries).joints.flatMap(({ id, examination }) => {
-    const payload = { jointId: id, method: 'visual', result: 'accepted', remark: '', test: null }
-    return examination === null ? [device.draft({ kind: 'joint-examined', payload })] : []
-  })
-  const { results } = await post(lead, `/api/presses/${pressId}/entries`, drafts)
-  expect(results.map(({ outcome }) => outcome)).toEqual(drafts.map(() => 'kept'))
+async function examineRest(staff: Staff, pressId: string): Promise<void> {
+  const left = (await pressOf(staff, pressId)).joints.filter(({ examination }) => examination === null)
+  const answers = await say(
+    staff.lead,
+    pressId,
+    ...left.map(({ id }): PressDraft => ({
+      kind: 'joint-examined',
+      payload: { jointId: id, method: 'visual', result: 'accepted', remark: '', test: null },
+    })),
+  )
+  expect(answers).toEqual(left.map(() => 'kept'))
 }
 
 beforeAll(() => aimClientsAt(serverAddress()))
@@ -175,7 +194,12 @@ describe('the life of a press', () => {
     const lead = await PressScreen.open(staff.lead, pressId)
     await lead.sees(`${run.number} is not concluded yet. Conclude it, then close the repair.`)
     expect(await lead.page.getByRole('button', { name: 'Close this repair' }).count()).toBe(0)
+    // What a page of before would still send.
+    const repairId = (await pressOf(staff, pressId)).repairs[0]?.id ?? ''
+    const closing: PressDraft = { kind: 'repair-closed', payload: { repairId, done: 'Welded.', doneBy: 'Cora Lind' } }
+    expect(await say(staff.lead, pressId, closing)).toEqual([`${run.number} is not concluded yet. Conclude it, then close the repair.`])
     await bringHome(run)
+    expect(await say(staff.crew, pressId, closing)).toEqual(['Your role in this shop does not allow this. Ask the owner or the lead.'])
     await lead.button('Close this repair').waitFor()
     await crew.page.getByText('is not concluded yet').waitFor({ state: 'detached' })
     expect(await crew.page.getByRole('button', { name: 'Close this repair' }).count()).toBe(0)
@@ -206,11 +230,20 @@ describe('the life of a press', () => {
     const retest = await planAgain(lead.page, staff, run)
     expect(retest.state.opened?.repeats).toEqual({ id: run.id, number: run.number })
     const oldLine = lead.page.getByText(new RegExp(`^${run.number}, \\d`)).first()
+    await retest.driveTo('begin-stage')
+    await oldLine.waitFor()
     await bringHome(retest)
     await lead.page.goto(`/proof-tests/${retest.id}`)
     await oldLine.waitFor()
     await lead.page.goto(`/presses/${pressId}`)
     await lead.answer.getByText('Cleared up to', { exact: true }).waitFor()
-    await lead.sees(new RegExp(`(softer|stiffer) at ${retest.number} than at ${run.number}`))
+    // The load keeps clear of what stands beside it.
+    const [load, beside] = await Promise.all(
+      [lead.answer.getByText('short tons', { exact: true }), lead.answer.getByText('No other bed hole was tested.')].map((text) =>
+        text.first().boundingBox(),
+      ),
+    )
+    expect((load?.x ?? Infinity) + (load?.width ?? 0)).toBeLessThan(beside?.x ?? 0)
+    await lead.sees(new RegExp(`stiffer at ${retest.number} than at ${run.number}`))
   })
 })

@@ -42,6 +42,8 @@ export class Paper {
   y: number
   /** Whether anything stands on the page below its head. */
   #fresh = true
+  /** Set together with what follows them, so that none ends a page. */
+  #headings: { height: number; set: () => void }[] = []
   #parent: Element
   readonly #root: Element
 
@@ -92,9 +94,13 @@ export class Paper {
     this.#fresh = true
   }
 
-  /** Goes on to a new page unless so much is left of this one. */
+  /** Goes on to a new page unless so much is left of this one, and sets the headings that waited for what they head. */
   need(height: number): void {
-    if (this.y + height > this.bottom && !this.#fresh) this.newPage()
+    const waiting = this.#headings.reduce((sum, one) => sum + one.height, 0)
+    if (this.y + waiting + height > this.bottom && !this.#fresh) this.newPage()
+    const headings = this.#headings
+    this.#headings = []
+    for (const { set } of headings) set()
   }
 
   /** Moves the pen down; what was set counts as standing on this page. */
@@ -185,31 +191,36 @@ export class Paper {
     this.y += after
   }
 
-  /** A heading in the outline, kept together with `keep` pt of what follows. */
-  heading(words: string, options: { note?: string; keep?: number } = {}): void {
-    const { note = '', keep = 60 } = options
-    const noteLines = note === '' ? [] : this.type.wrap(plain(note, { ...SMALL, ink: GRAPHITE }), this.width)
-    if (!this.#fresh) this.y += 14
-    this.need(20 + noteLines.length * leading(SMALL.size) + keep)
-    this.doc.outline.addItem(words, { top: this.y - 6, left: this.doc.page.width } as Parameters<PDFKit.PDFOutline['addItem']>[1])
-    this.tag('H2', () => this.type.set(words, this.left, this.y + 10, { size: 12, weight: 600 }))
-    this.down(16)
-    if (noteLines.length > 0) {
-      this.tag('P', () => this.lines(noteLines, this.left, this.y, SMALL.size))
-      this.down(noteLines.length * leading(SMALL.size) + 3)
+  /** A heading in the outline; it stands on the page on which what follows begins. */
+  heading(words: string, { note = '' }: { note?: string } = {}): void {
+    const lines = note === '' ? [] : this.type.wrap(plain(note, { ...SMALL, ink: GRAPHITE }), this.width)
+    const noted = lines.length === 0 ? 0 : lines.length * leading(SMALL.size) + 3
+    const set = (): void => {
+      if (!this.#fresh) this.y += 14
+      // Measured from the right edge: without it a reader would scroll sideways.
+      this.doc.outline.addItem(words, { top: this.y - 6, left: this.doc.page.width } as Parameters<PDFKit.PDFOutline['addItem']>[1])
+      this.tag('H2', () => this.type.set(words, this.left, this.y + 10, { size: 12, weight: 600 }))
+      this.down(16)
+      if (lines.length === 0) return
+      this.tag('P', () => this.lines(lines, this.left, this.y, SMALL.size))
+      this.down(noted)
     }
+    this.#headings.push({ height: 14 + 16 + noted, set })
   }
 
-  /** A smaller heading, a mark before it where it has one, kept together with `keep` pt of what follows. */
-  subheading(words: string, keep = 40, mark: PaperMark | null = null): void {
+  /** A smaller heading, a mark before it where it has one. */
+  subheading(words: string, mark: PaperMark | null = null): void {
     const style: Style = { size: 9.5, weight: 600 }
     const indent = mark === null ? 0 : 15
     const lines = this.type.wrap(plain(words, style), this.width - indent)
-    if (!this.#fresh) this.y += 7
-    this.need(lines.length * leading(9.5) + keep)
-    if (mark !== null) this.artifact(() => drawMark(this.doc, mark, this.left, this.y + 1.4, 9.5))
-    this.tag('H3', () => this.lines(lines, this.left + indent, this.y, style.size))
-    this.down(lines.length * leading(9.5) + 2)
+    const height = lines.length * leading(style.size) + 2
+    const set = (): void => {
+      if (!this.#fresh) this.y += 7
+      if (mark !== null) this.artifact(() => drawMark(this.doc, mark, this.left, this.y + 1.4, 9.5))
+      this.tag('H3', () => this.lines(lines, this.left + indent, this.y, style.size))
+      this.down(height)
+    }
+    this.#headings.push({ height: 7 + height, set })
   }
 
   #zones(): void {

@@ -14,7 +14,7 @@ import { GRAPHITE, plain, type Line } from './typesetter'
 export function conclusion(paper: Paper, record: RecordOfTest): void {
   const { state } = record
   const { conclusion: end } = state
-  paper.heading('Conclusion', { keep: 30 })
+  paper.heading('Conclusion')
   if (end) {
     paper.paragraph([
       { text: `Concluded ${end.conclusion}`, style: { ...BODY, weight: 600 } },
@@ -22,7 +22,7 @@ export function conclusion(paper: Paper, record: RecordOfTest): void {
     ])
   } else paper.paragraph('Not concluded.')
   for (const { title, mark, lines } of noticesOf(record, UTC_DATES)) {
-    paper.subheading(title, 14, mark)
+    paper.subheading(title, mark)
     for (const line of lines) paper.paragraph(line, BODY, 1)
   }
 }
@@ -78,7 +78,7 @@ export function signatures(paper: Paper, record: RecordOfTest): void {
 /** Every seal in full, and how somebody who trusts nobody checks it. */
 export function seals(paper: Paper, record: RecordOfTest, checkAddress: string): void {
   const { state, seals: sealed } = record
-  paper.heading('Seal, and how to check it', { keep: 70 })
+  paper.heading('Seal, and how to check it')
   if (sealed.length === 0) {
     paper.paragraph(`No seal yet: it is set over a signature. The last of ${state.headSeq} entries has the hash`)
     paper.paragraph([{ text: state.headHash, style: { size: 7.5, family: 'mono' } }])
@@ -110,7 +110,7 @@ export function seals(paper: Paper, record: RecordOfTest, checkAddress: string):
 
 /** What these figures are not. */
 export function cautions(paper: Paper, record: RecordOfTest): void {
-  paper.heading('Cautions', { keep: 50 })
+  paper.heading('Cautions')
   for (const caution of cautionsOf(record.state, record.evaluation)) paper.paragraph(caution, BODY, 1)
 }
 
@@ -137,7 +137,6 @@ export function photos(paper: Paper, record: RecordOfTest, files: RecordFiles): 
   })
   paper.heading('Photos and documents', {
     note: 'An entry names a file by its SHA-256, and is sealed with it. Pictures are made smaller here; the files themselves are kept with the record.',
-    keep: shown.length > 0 ? HIGHEST + 30 : 60,
   })
   const width = (paper.width - GAP * (COLUMNS - 1)) / COLUMNS
   for (let from = 0; from < shown.length; from += COLUMNS) {

@@ -34,8 +34,8 @@ export function drawing(paper: Paper, record: RecordOfTest): void {
   const height = elevationHeight(width)
   paper.heading('Drawing', {
     note: 'Dimensions in mm; what nobody measured is drawn in proportion. A joint bears its number and its last examination in this test; a letter is a measuring point.',
-    keep: height + 4,
   })
+  paper.need(height + 4)
   paintElevation(paper, record, { x: paper.left + (paper.width - width) / 2, y: paper.y, width })
   paper.down(height + 4)
 }

@@ -241,6 +241,12 @@ describe('the record of a test that came to something else', () => {
     expect(said(pdf.pages[0] ?? '')).toContain(said(headlineOf(state, evaluation)))
   })
 
+  it('no heading ends a page: it stands where its table begins', async () => {
+    const { pages } = await printed(twoLegTest())
+    const page = pages.find((one) => one.includes('Four corrections, all kept')) ?? ''
+    expect(said(page)).toContain(said('Entry 23 corrects 22'))
+  })
+
   it('above rating: names the load and the rule it comes from', async () => {
     const { protocol } = openedPayload()
     const stages = [...protocol.content.stages, { percent: 110, holdSeconds: 600 }]

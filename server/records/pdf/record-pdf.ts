@@ -54,8 +54,9 @@ function furtherCharts(paper: Paper, record: RecordOfTest, legs: readonly number
     const chart = legDrawing(record, leg, { width: 560, height: 420 })
     if (chart === null) return
     const height = (chart.height * width) / chart.width
-    if (index === 0) paper.heading('Deflection against load', { keep: height + 24 })
-    paper.subheading(record.opened.legs[leg]?.label ?? `Leg ${leg + 1}`, height)
+    if (index === 0) paper.heading('Deflection against load')
+    paper.subheading(record.opened.legs[leg]?.label ?? `Leg ${leg + 1}`)
+    paper.need(height + 4)
     paper.down(paintLeg(paper, record, leg, chart, { x: paper.left, y: paper.y, width }) + 4)
   })
 }

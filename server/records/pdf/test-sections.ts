@@ -81,7 +81,7 @@ export function stages(paper: Paper, record: RecordOfTest): void {
 export function corrections(paper: Paper, record: RecordOfTest): void {
   const { state } = record
   if (state.corrections.length === 0) {
-    paper.heading('Corrections', { keep: 12 })
+    paper.heading('Corrections')
     paper.paragraph('No reading was corrected.')
     return
   }

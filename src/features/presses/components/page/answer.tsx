@@ -21,14 +21,18 @@ function ClearedTo({ clearance, rated }: { clearance: Clearance; rated: TypedFor
   const { load } = clearance
   return (
     <>
-      <div className="grid gap-x-8 gap-y-4 tablet:grid-cols-[minmax(0,1fr)_19rem]">
+      <div className="grid gap-x-8 gap-y-4 tablet:grid-cols-[minmax(0,1fr)_19rem] desktop:grid-cols-[minmax(0,1fr)_15rem] wide:grid-cols-[minmax(0,1fr)_19rem]">
         <div className="flex items-center gap-5">
           <Mark name="within" size={70} className="shrink-0 max-tablet:size-14" />
           <p>
             <span className="block text-26 font-semibold">Cleared up to</span>
-            <span className="flex items-center gap-x-4">
-              <span className="text-76 font-semibold tracking-tight tablet:text-104">{groupDigits(load.text)}</span>{' '}
-              <span className="w-min text-26/[30px] font-semibold tablet:text-34/[37px]">{unitLabel(load.unit, { plural: true })}</span>
+            <span className="flex flex-wrap items-center gap-x-4">
+              <span className="text-76 font-semibold tracking-tight tablet:text-104 desktop:text-76 wide:text-104">
+                {groupDigits(load.text)}
+              </span>{' '}
+              <span className="w-min text-26/[30px] font-semibold tablet:text-34/[37px] desktop:text-26/[30px] wide:text-34/[37px]">
+                {unitLabel(load.unit, { plural: true })}
+              </span>
             </span>
           </p>
         </div>
