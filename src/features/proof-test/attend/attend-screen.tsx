@@ -19,9 +19,9 @@ function PausePart({ run }: { run: Run }): ReactElement {
   const { connected } = run.connection
   if (!connected) {
     return (
-      <div className="flex min-h-[76px] flex-col items-center justify-center rounded-key border-2 border-dashed border-faint-scribe text-center text-scribe">
+      <div className="flex min-h-[76px] flex-col items-center justify-center rounded-key border-2 border-dashed border-faint-scribe px-2 text-center text-scribe">
         <span className="text-20 font-medium">Pause</span>
-        <span className="text-16 text-faint-scribe">not connected</span>
+        <span className="text-16/5 text-balance text-faint-scribe">not connected</span>
       </div>
     )
   }
@@ -35,9 +35,9 @@ function PausePart({ run }: { run: Run }): ReactElement {
       />
     )
   return (
-    <div className="flex min-h-[76px] flex-col items-center justify-center rounded-key border-2 border-dashed border-faint-scribe text-center text-scribe">
+    <div className="flex min-h-[76px] flex-col items-center justify-center rounded-key border-2 border-dashed border-faint-scribe px-2 text-center text-scribe">
       <span className="text-20 font-medium">{run.state.paused ? 'Paused' : 'Pause'}</span>
-      <span className="text-16 text-faint-scribe">
+      <span className="text-16/5 text-balance text-faint-scribe">
         {run.state.paused ? 'until the lead goes on' : run.state.loaded ? 'the load comes off' : 'once under load'}
       </span>
     </div>
