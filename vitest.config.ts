@@ -16,6 +16,7 @@ export default defineConfig({
           environment: 'node',
           include: ['shared/**/*.test.ts', 'server/**/*.test.ts', 'src/**/*.test.ts'],
           setupFiles: [quiet],
+          testTimeout: minutes / 2,
         },
       },
       {
@@ -34,6 +35,7 @@ export default defineConfig({
           environment: 'node',
           include: ['tests/reference/**/*.test.ts'],
           setupFiles: [quiet],
+          testTimeout: minutes,
         },
       },
       {
