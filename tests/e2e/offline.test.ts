@@ -57,6 +57,11 @@ it('a test goes from walk-down to the eve of its conclusion without a network, t
   await run.row(['350'])
   await run.release()
   await run.row(ZERO)
+  // What the screen shows as entered is on the disk; what it doesn't show yet may be lost with the battery.
+  await page
+    .getByText(/^(First row: 0|Mark, then read the same row again)/)
+    .first()
+    .waitFor()
 
   // The battery dies while the datum is watched. Today leads back to where it was.
   await tablet.die()
@@ -71,6 +76,7 @@ it('a test goes from walk-down to the eve of its conclusion without a network, t
   await stage(run, second, false)
   await run.press(/^All behind the shield: pumping to/)
   await run.row(third)
+  await page.getByRole('timer').or(page.getByText('The hold is over')).first().waitFor()
 
   // And again under load, in the middle of a hold.
   await tablet.die()
