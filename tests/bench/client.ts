@@ -27,7 +27,9 @@ function withImports(names: readonly string[]): Set<string> {
 export function clientLines(): Line[] {
   const page = readFileSync(path.join(dist, 'index.html'), 'utf8')
   const own = [...page.matchAll(/(?:src|href)="\/assets\/([\w.-]+\.js)"/g)].map((found) => found[1] ?? '')
-  const screen = readdirSync(path.join(dist, 'assets')).filter((name) => /^sign-in-[\w-]+\.js$/.test(name))
+  // Files of former builds lie beside this one's; the service worker's list holds this one's only.
+  const ofThisBuild = readFileSync(path.join(dist, 'sw.js'), 'utf8')
+  const screen = readdirSync(path.join(dist, 'assets')).filter((name) => /^sign-in-[\w-]+\.js$/.test(name) && ofThisBuild.includes(name))
   if (own.length === 0 || screen.length !== 1) throw new Error('The built client has a page with scripts, and one chunk for signing in.')
   const chunks = withImports([...own, ...screen])
   const bytes = [...chunks].reduce((sum, name) => sum + gzipSync(readFileSync(path.join(dist, 'assets', name))).length, 0)
