@@ -2,10 +2,11 @@ import type { LedgerEntry } from '../ledger/envelope'
 import { withAttachmentsOf, withLost } from '../ledger/attachments'
 import { FIRST_PREV_HASH } from '../ledger/chain'
 import { neighboursOf } from '../press/joints'
+import { currentAttempt } from './current-attempt'
 import { countDevice } from './device-count'
 import type { Opened, Position, ProofTestDraft, ProofTestKind, ProofTestPayload, Reading } from './entries'
 import { replaceAt, withLeg, withClimb, withAttempt, rowOf, withJoint } from './fold-parts'
-import type { AttemptState, Place, ProofTestState, Row, StageState, StageRow } from './state'
+import type { AttemptState, ProofTestState, Row, StageRow } from './state'
 import { upcast } from './upcast'
 
 /** The state before the first entry. */
@@ -391,13 +392,4 @@ export function applyProofTest(before: ProofTestState, stored: LedgerEntry): Pro
 /** Folds a list of entries, oldest first. */
 export function foldProofTest(id: string, entries: readonly LedgerEntry[]): ProofTestState {
   return entries.reduce(applyProofTest, emptyProofTest(id))
-}
-
-/** The attempt that is under way, or was last. */
-export function currentAttempt(state: ProofTestState): { place: Position; stage: StageState; attempt: AttemptState } | null {
-  const place: Place | null = state.position
-  if (!place || place.stage === null || place.attempt === null) return null
-  const stage = state.legs[place.leg]?.climbs[place.climb]?.stages[place.stage]
-  const attempt = stage?.attempts[place.attempt]
-  return stage && attempt ? { place: place as Position, stage, attempt } : null
 }

@@ -1,5 +1,5 @@
 import { toSI } from '../units'
-import { currentAttempt } from './apply'
+import { currentAttempt } from './current-attempt'
 import { elapsedBetween, LONGEST_PAUSE_SECONDS } from './clock'
 import { deflectionsOf, NET } from './deflection'
 import type { Opened, Position, Reading } from './entries'

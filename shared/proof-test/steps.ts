@@ -4,7 +4,7 @@ import type { Opened, Position } from './entries'
 import { evaluateClimb, type StageEvaluation } from './evaluate-climb'
 import { evaluateLeg, repeatClimbWanted } from './evaluate'
 import { instrumentOf } from './force'
-import { currentAttempt } from './apply'
+import { currentAttempt } from './current-attempt'
 import { witnessReads } from './protocol'
 import type { ClimbState, JointState, ProofTestState, Row } from './state'
 

@@ -1,4 +1,4 @@
-import { currentAttempt } from '#shared/proof-test/apply'
+import { currentAttempt } from '#shared/proof-test/current-attempt'
 import type { Opened } from '#shared/proof-test/entries'
 import { witnessReads } from '#shared/proof-test/protocol'
 import type { Run } from '../use-run'

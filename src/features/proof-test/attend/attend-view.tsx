@@ -1,7 +1,7 @@
 import { useEffect, useRef, type ReactElement } from 'react'
 import type { Opened } from '#shared/proof-test/entries'
 import type { StageRow } from '#shared/proof-test/state'
-import { currentAttempt } from '#shared/proof-test/apply'
+import { currentAttempt } from '#shared/proof-test/current-attempt'
 import { unitLabel } from '#shared/units'
 import { Fit } from '../../../components/fit'
 import { JointBalloon, Mark } from '../../../components/marks'

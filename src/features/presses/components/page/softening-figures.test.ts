@@ -1,26 +1,9 @@
 import { describe, expect, it } from 'vitest'
 import type { ClimbHistory } from '#shared/api/press-history'
-import { ids } from '../../../../../tests/factories/test-press'
+import { climbHistory } from '../../../../../tests/factories/climb-history'
 import { changeWords, firstClimbs, limitWords, rowOf, seriesOf, stiffnessChange } from './softening-figures'
 
-const climb = (number: string, change: Partial<ClimbHistory> = {}): ClimbHistory => ({
-  proofTestId: ids.test,
-  number,
-  on: '2026-09-15T10:00:00.000Z',
-  result: 'accepted',
-  repeats: null,
-  leg: 'Ram central',
-  climb: 0,
-  of: 'bed middle less mean of pins',
-  stiffness: 60e6,
-  stiffnessU: 0.5e6,
-  set: 0.02e-3,
-  setLimit: 0.045e-3,
-  pressureLoss: 0.012,
-  pressureLossLimit: 0.05,
-  line: [],
-  ...change,
-})
+const climb = climbHistory
 
 /** Numbers keep to their units by spaces that do not break. */
 const plain = (text: string): string => text.replaceAll(/[\u00a0\u202f]/g, ' ')

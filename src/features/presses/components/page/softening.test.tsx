@@ -3,30 +3,15 @@ import { render, screen, within } from '@testing-library/react'
 import { MemoryRouter } from 'react-router-dom'
 import { afterEach, describe, expect, it, vi } from 'vitest'
 import type { ClimbHistory } from '#shared/api/press-history'
+import { climbHistory } from '../../../../../tests/factories/climb-history'
 import { testId } from '../../../../../tests/factories/ledger-builder'
 import { ids } from '../../../../../tests/factories/test-press'
 import { HereContext, type Here } from '../../../../lib/here'
 import { createQueryClient } from '../../../../lib/query-client'
 import { Softening } from './softening'
 
-const climb = (number: string, on: string, change: Partial<ClimbHistory> = {}): ClimbHistory => ({
-  proofTestId: testId(0x7, Number(number.slice(-4))),
-  number,
-  on: `${on}T10:00:00.000Z`,
-  result: 'accepted',
-  repeats: null,
-  leg: 'Ram central',
-  climb: 0,
-  of: 'bed middle less mean of pins',
-  stiffness: 60e6,
-  stiffnessU: 0.5e6,
-  set: 0.02e-3,
-  setLimit: 0.045e-3,
-  pressureLoss: 0.012,
-  pressureLossLimit: 0.05,
-  line: [],
-  ...change,
-})
+const climb = (number: string, on: string, change: Partial<ClimbHistory> = {}): ClimbHistory =>
+  climbHistory(number, { proofTestId: testId(0x7, Number(number.slice(-4))), on: `${on}T10:00:00.000Z`, ...change })
 
 function show(climbs: readonly ClimbHistory[]) {
   vi.stubGlobal('fetch', () => Promise.resolve(new Response(JSON.stringify({ climbs }))))
